@@ -1,0 +1,71 @@
+import { z } from "zod";
+
+const metres = z.number().finite();
+const BallastPiece = z.object({ massKg: z.number().min(0), behindHitchM: metres });
+
+export const Frame = z.object({
+  massKg: z.number().positive(),
+  behindHitchM: metres,
+  wheelsBehindHitchM: z.number().positive(),
+  rowsBehindHitchM: z.number().positive(),
+  ballast: z.array(BallastPiece).default([]),
+  minWheelLoadN: z.number().min(0),
+});
+export type Frame = z.infer<typeof Frame>;
+
+const name = z.string().trim().min(1).max(120);
+
+/** A drill or planter. Offsets: `antennaToRowsM` behind the antenna; right of centre positive; row 1 leftmost looking forward. */
+export const SeederInput = z.object({
+  kind: z.literal("seeder"),
+  name,
+  rowCount: z.number().int().min(1).max(256),
+  rowSpacingM: z.number().positive().max(5),
+  rowOffsetsM: z.array(metres).optional(),
+  rowForwardM: z.array(metres).optional(),
+  antennaToRowsM: metres,
+  antennaRightM: metres.default(0),
+  hitch: z.enum(["rigid", "trailed"]),
+  antennaToHitchM: metres.optional(),
+  hitchToRowsM: z.number().positive().optional(),
+  rowUnitMassKg: z.number().min(0),
+  maxDownforceN: z.number().positive().optional(),
+  targetMarginN: z.number().positive().optional(),
+  marginDeadbandN: z.number().min(0).optional(),
+  frame: Frame.optional(),
+});
+export type Seeder = z.infer<typeof SeederInput>;
+
+export const CombineInput = z.object({
+  kind: z.literal("combine"),
+  name,
+  headerWidthM: z.number().positive().max(30),
+  headerRows: z.number().int().positive().max(64).optional(),
+  spreadWidthM: z.number().positive().max(60).optional(),
+});
+export type Combine = z.infer<typeof CombineInput>;
+
+/** Body of `POST /machines`; lists of row offsets must have one entry a row. */
+export const MachineInput = z
+  .discriminatedUnion("kind", [SeederInput, CombineInput])
+  .superRefine((machine, context) => {
+    if (machine.kind !== "seeder") return;
+    for (const key of ["rowOffsetsM", "rowForwardM"] as const) {
+      const list = machine[key];
+      if (list && list.length !== machine.rowCount) {
+        context.addIssue({
+          code: "custom",
+          path: [key],
+          message: `needs one entry a row: ${machine.rowCount}, got ${list.length}`,
+        });
+      }
+    }
+    if (machine.hitch === "trailed" && machine.hitchToRowsM === undefined) {
+      context.addIssue({
+        code: "custom",
+        path: ["hitchToRowsM"],
+        message: "a trailed machine needs the distance from hitch pin to rows",
+      });
+    }
+  });
+export type Machine = z.infer<typeof MachineInput>;

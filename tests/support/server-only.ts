@@ -1,0 +1,2 @@
+// The real package throws outside a React server; tests and scripts run server code on purpose.
+export {};
