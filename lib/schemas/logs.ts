@@ -1,0 +1,223 @@
+import { z } from "zod";
+import { Id, Instant, listOf, NullableNumber } from "@/lib/schemas/listing";
+import { PlaceGeometry } from "@/lib/schemas/geometry";
+
+export const LOG_STATUSES = ["queued", "reading", "needs-mapping", "building", "ready", "failed"] as const;
+export const LogStatus = z.enum(LOG_STATUSES);
+export type LogStatus = z.infer<typeof LogStatus>;
+
+export const LogErrorBody = z.object({
+  code: z.string(),
+  message: z.string(),
+  line: z.number().int().optional(),
+  column: z.string().optional(),
+});
+export const LogNoteBody = z.object({
+  code: z.string(),
+  count: z.number().int(),
+  firstLine: z.number().int().optional(),
+  message: z.string(),
+});
+export const LogCounts = z.object({
+  records: z.number().int(),
+  rows: z.number().int(),
+  readings: z.number().int(),
+  flagged: z.number().int(),
+  rejected: z.number().int(),
+  passes: z.number().int(),
+});
+export const LogChannelBody = z.object({
+  id: z.string(),
+  unit: z.string(),
+  min: NullableNumber,
+  max: NullableNumber,
+  perRow: z.boolean(),
+});
+
+export const Log = z.object({
+  id: Id,
+  fieldId: Id,
+  name: z.string(),
+  kind: z.enum(["seeding", "harvest", "other"]),
+  status: LogStatus,
+  progress: z.number().min(0).max(1),
+  /** The stage in plain words, e.g. "Placing rows on the ground". */
+  stage: z.string(),
+  error: LogErrorBody.nullable(),
+  notes: z.array(LogNoteBody),
+  counts: LogCounts,
+  channels: z.array(LogChannelBody),
+  startedAt: Instant.nullable(),
+  endedAt: Instant.nullable(),
+  /** west, south, east, north; west > east across the antimeridian (RFC 7946 5.2). */
+  bbox: z.tuple([z.number(), z.number(), z.number(), z.number()]).nullable(),
+  machineId: Id.nullable(),
+  mappingId: Id.nullable(),
+  fileName: z.string(),
+  fileBytes: z.number().int(),
+  sha256: z.string(),
+  /** Grows with every new mapping or machine; part of tile addresses. */
+  version: z.number().int(),
+  createdAt: Instant,
+});
+export type Log = z.infer<typeof Log>;
+export const LogList = listOf(Log);
+
+export const LogAccepted = z.object({ id: Id, status: LogStatus });
+export const LogPatch = z.object({
+  name: z.string().trim().min(1).max(200).optional(),
+  machineId: Id.nullable().optional(),
+});
+
+export const ColumnProposal = z.object({
+  channel: z.string(),
+  row: z.number().int().optional(),
+  unit: z.string().nullable(),
+  format: z.string().optional(),
+  confidence: z.number().min(0).max(1),
+  reason: z.string(),
+});
+export const FoundColumnBody = z.object({
+  name: z.string(),
+  sample: z.array(z.string()),
+  min: NullableNumber,
+  max: NullableNumber,
+  proposal: ColumnProposal.nullable(),
+  /** The proposal as a sentence a person can check. */
+  words: z.string(),
+});
+export const LogColumns = z.object({
+  format: z.string(),
+  shape: z.enum(["wide", "long", "single"]),
+  columns: z.array(FoundColumnBody),
+  notes: z.array(LogNoteBody),
+  /** The mapping in force, once a person or a recipe gave one. */
+  mapping: z.unknown().nullable(),
+  recipe: z.object({ id: Id, name: z.string() }).nullable(),
+});
+export type LogColumns = z.infer<typeof LogColumns>;
+
+export const PassBody = z.object({
+  pass: z.number().int(),
+  startedAt: Instant.nullable(),
+  endedAt: Instant.nullable(),
+  headingDeg: z.number(),
+  lengthM: z.number(),
+  records: z.number().int(),
+  headland: z.boolean(),
+});
+export type PassBody = z.infer<typeof PassBody>;
+export const PassList = listOf(PassBody);
+
+export const PassReadings = z.object({
+  channel: z.string(),
+  unit: z.string(),
+  rows: z.number().int(),
+  records: z.number().int(),
+  timesS: z.array(NullableNumber),
+  distancesM: z.array(z.number()),
+  positions: z.array(z.tuple([z.number(), z.number()])),
+  values: z.array(z.array(NullableNumber)),
+});
+export type PassReadings = z.infer<typeof PassReadings>;
+
+export const RowStatisticsItem = z.object({
+  row: z.number().int(),
+  n: z.number().int(),
+  distanceM: z.number(),
+  mean: NullableNumber,
+  sd: NullableNumber,
+  min: NullableNumber,
+  p05: NullableNumber,
+  p25: NullableNumber,
+  p50: NullableNumber,
+  p75: NullableNumber,
+  p95: NullableNumber,
+  max: NullableNumber,
+  shareUnderTarget: NullableNumber,
+  shareAtLimit: NullableNumber,
+  shareContactLost: NullableNumber,
+  longestUnderTargetM: NullableNumber,
+  deviationZ: NullableNumber,
+  flagged: z.boolean(),
+  reason: z.string().nullable(),
+});
+export type RowStatisticsItem = z.infer<typeof RowStatisticsItem>;
+export const RowStatisticsBody = z.object({ channel: z.string(), unit: z.string(), items: z.array(RowStatisticsItem) });
+export type RowStatisticsBody = z.infer<typeof RowStatisticsBody>;
+
+export const CoverageBody = z.object({
+  sweptM2: z.number(),
+  coveredM2: z.number(),
+  overlapM2: z.number(),
+  skippedM2: z.number(),
+  resolutionM: z.number(),
+});
+export type CoverageBody = z.infer<typeof CoverageBody>;
+
+export const Finding = z.object({
+  id: z.string(),
+  kind: z.string(),
+  severity: z.enum(["ok", "look", "act"]),
+  sentence: z.string(),
+  value: NullableNumber,
+  unit: z.string(),
+  interval: z.tuple([z.number(), z.number()]).nullable(),
+  confidence: z.string(),
+  method: z.string(),
+  place: PlaceGeometry.nullable(),
+  check: z.string(),
+  caution: z.string().nullable(),
+  row: z.number().int().nullable().optional(),
+});
+export type Finding = z.infer<typeof Finding>;
+
+export const VerdictBody = z
+  .object({
+    rowsUnderTarget: z.array(z.number().int()),
+    rowsAtLimit: z.array(z.number().int()),
+    weight: z.object({
+      headroomN: z.object({ p05: z.number(), p50: z.number() }).nullable(),
+      shareLiftedM2: NullableNumber,
+      state: z.enum(["enough", "short", "unknown"]),
+      missing: z.array(z.string()).optional(),
+    }),
+    findings: z.array(Finding),
+  })
+  .loose();
+export type VerdictBody = z.infer<typeof VerdictBody>;
+
+export const ReadingAt = z.object({
+  pass: z.number().int(),
+  record: z.number().int(),
+  time: Instant.nullable(),
+  row: z.number().int(),
+  headingDeg: NullableNumber,
+  speedMps: NullableNumber,
+  values: z.record(z.string(), NullableNumber),
+  flags: z.array(z.string()),
+});
+export type ReadingAt = z.infer<typeof ReadingAt>;
+
+export const TileJson = z.object({
+  tilejson: z.literal("3.0.0"),
+  name: z.string(),
+  tiles: z.array(z.string()),
+  minzoom: z.number().int(),
+  maxzoom: z.number().int(),
+  bounds: z.array(z.number()),
+  tileSize: z.literal(512),
+  /** value = baseShiftedBy + red * redFactor + green * greenFactor + blue * blueFactor; 0,0,0 where nothing was logged. */
+  encoding: z.object({
+    channel: z.string(),
+    unit: z.string(),
+    redFactor: z.number(),
+    greenFactor: z.number(),
+    blueFactor: z.number(),
+    offset: z.number(),
+    minimum: z.number(),
+    maximum: z.number(),
+    step: z.number(),
+  }),
+});
+export type TileJson = z.infer<typeof TileJson>;
