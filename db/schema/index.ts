@@ -1,0 +1,5 @@
+export * from "@/db/schema/fields";
+export * from "@/db/schema/jobs";
+export * from "@/db/schema/logs";
+export * from "@/db/schema/organisations";
+export * from "@/db/schema/shares";
