@@ -118,6 +118,17 @@ export const PassReadings = z.object({
   distancesM: z.array(z.number()),
   positions: z.array(z.tuple([z.number(), z.number()])),
   values: z.array(z.array(NullableNumber)),
+  pass: z.number().int().optional(),
+  /** Number of the pass's first record in the log. */
+  firstRecord: z.number().int().optional(),
+  /** One entry a record: heading and speed of the implement, bits of `FLAGS`. `positions` are where its centre line meets the line of rows. */
+  headingsDeg: z.array(NullableNumber).optional(),
+  speedsMps: z.array(NullableNumber).optional(),
+  flags: z.array(z.number().int()).optional(),
+  /** One entry a row: right of the centre line, ahead of the line of rows, and width answered for. */
+  rowOffsetsM: z.array(z.number()).optional(),
+  rowForwardM: z.array(z.number()).optional(),
+  rowWidthsM: z.array(z.number()).optional(),
 });
 export type PassReadings = z.infer<typeof PassReadings>;
 
