@@ -2,6 +2,7 @@ import {
   bigint,
   customType,
   doublePrecision,
+  foreignKey,
   index,
   integer,
   jsonb,
@@ -11,6 +12,7 @@ import {
   text,
   timestamp,
 } from "drizzle-orm/pg-core";
+import { fields } from "@/db/schema/fields";
 import { organisations } from "@/db/schema/organisations";
 import type { LogMapping } from "@/lib/ingest/mapping";
 import type { Machine } from "@/lib/machines/machine";
@@ -57,6 +59,7 @@ export const logs = pgTable(
   },
   (table) => [
     primaryKey({ columns: [table.organisationId, table.id] }),
+    foreignKey({ columns: [table.organisationId, table.fieldId], foreignColumns: [fields.organisationId, fields.id] }),
     index("logs_field_index").on(table.organisationId, table.fieldId, table.createdAt),
     index("logs_same_bytes_index").on(table.organisationId, table.fieldId, table.sha256),
   ],

@@ -1,4 +1,5 @@
-import { boolean, index, integer, jsonb, pgTable, primaryKey, text, timestamp } from "drizzle-orm/pg-core";
+import { boolean, foreignKey, index, integer, jsonb, pgTable, primaryKey, text, timestamp } from "drizzle-orm/pg-core";
+import { fields } from "@/db/schema/fields";
 import { organisations } from "@/db/schema/organisations";
 
 const instant = () => timestamp({ withTimezone: true, mode: "date" });
@@ -28,6 +29,10 @@ export const shares = pgTable(
   },
   (table) => [
     primaryKey({ columns: [table.organisationId, table.id] }),
+    foreignKey({
+      columns: [table.organisationId, table.fieldId],
+      foreignColumns: [fields.organisationId, fields.id],
+    }).onDelete("cascade"),
     index("shares_token_index").on(table.tokenHash),
     index("shares_field_index").on(table.organisationId, table.fieldId),
   ],
