@@ -35,6 +35,7 @@ export default defineConfig({
         test: {
           name: "integration",
           environment: "node",
+          globalSetup: ["tests/support/start-test-cluster.ts"],
           include: ["tests/{db,routes}/**/*.test.ts", "tests/lib/server/**/*.test.ts"],
           testTimeout: 60_000,
           hookTimeout: 120_000,
@@ -45,6 +46,7 @@ export default defineConfig({
         test: {
           name: "e2e",
           environment: "node",
+          globalSetup: ["tests/support/start-test-cluster.ts"],
           include: ["tests/e2e/**/*.test.ts"],
           testTimeout: 240_000,
           hookTimeout: 240_000,

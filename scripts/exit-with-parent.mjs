@@ -1,0 +1,2 @@
+// Preloaded into child processes: when the process that started them dies, even by kill -9, they end too.
+if (process.channel) process.on("disconnect", () => process.exit(1));
