@@ -1,0 +1,3 @@
+import { buildIfStale } from "@/scripts/build-if-stale";
+
+await buildIfStale();

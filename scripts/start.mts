@@ -1,0 +1,3 @@
+import { serve } from "@/scripts/serve";
+
+await serve("start");
