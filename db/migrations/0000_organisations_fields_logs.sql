@@ -146,6 +146,7 @@ CREATE TABLE "idempotency_keys" (
 	"user_id" text NOT NULL,
 	"key" text NOT NULL,
 	"route" text NOT NULL,
+	"fingerprint" text NOT NULL,
 	"status" jsonb,
 	"created_at" timestamp with time zone DEFAULT now() NOT NULL,
 	CONSTRAINT "idempotency_keys_organisation_id_user_id_route_key_pk" PRIMARY KEY("organisation_id","user_id","route","key")

@@ -116,7 +116,10 @@ export const idempotencyKeys = pgTable(
     userId: text().notNull(),
     key: text().notNull(),
     route: text().notNull(),
-    status: jsonb().$type<{ status: number; location: string | null; body: unknown } | null>(),
+    /** SHA-256 of the request's body; the same key with another body is a mistake of the caller's. */
+    fingerprint: text().notNull(),
+    /** The reply, its body sealed with the key itself; null while the first request is at work. */
+    status: jsonb().$type<{ status: number; location: string | null; body: string } | null>(),
     createdAt: createdAt(),
   },
   (table) => [primaryKey({ columns: [table.organisationId, table.userId, table.route, table.key] })],

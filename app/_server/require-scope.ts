@@ -1,0 +1,62 @@
+import "server-only";
+import { cookies } from "next/headers";
+import { notFound, redirect } from "next/navigation";
+import { cache } from "react";
+import { container } from "@/app/_server/container";
+import { readSessionClaims, sessionCookieName } from "@/app/_server/session-cookie";
+import type { PersonRow } from "@/db/queries/system/people";
+import { AppError } from "@/lib/errors";
+import type { Scope } from "@/lib/scope";
+import { authenticateSession, type Identity } from "@/lib/server/access/authenticate";
+import { chooseOrganisation } from "@/lib/server/access/choose-organisation";
+
+export interface PageScope {
+  scope: Scope;
+  organisation: { id: string; slug: string; name: string; isDemo: boolean };
+  user: Pick<PersonRow, "id" | "name" | "email" | "unitSystem">;
+}
+
+/** Who looks at this page; null when nobody is signed in. One look-up a request. */
+export const currentIdentity = cache(async (): Promise<Identity | null> => {
+  const { env } = container();
+  const cookie = (await cookies()).get(sessionCookieName(env.baseUrl))?.value;
+  const claims = await readSessionClaims(cookie, env.AUTH_SECRET);
+  return claims ? authenticateSession(claims) : null;
+});
+
+async function pageScope(identity: Identity, organisationSlug: string | null): Promise<PageScope> {
+  const { scope, membership } = await chooseOrganisation(identity, { demanded: organisationSlug });
+  const { id, name, email, unitSystem } = identity.person;
+  return {
+    scope,
+    organisation: {
+      id: membership.organisationId,
+      slug: membership.slug,
+      name: membership.organisationName,
+      isDemo: membership.isDemo,
+    },
+    user: { id, name, email, unitSystem },
+  };
+}
+
+/** For pages under `/[org]`: the person's scope there. Sends strangers to sign-in; other organisations do not exist. */
+export async function requireScope(organisationSlug: string): Promise<PageScope> {
+  const identity = await currentIdentity();
+  if (!identity) redirect("/sign-in");
+  try {
+    return await pageScope(identity, organisationSlug);
+  } catch (error) {
+    if (error instanceof AppError) notFound();
+    throw error;
+  }
+}
+
+/** For the front page: the signed-in person's first organisation, or null. */
+export async function currentScope(): Promise<PageScope | null> {
+  const identity = await currentIdentity();
+  if (!identity) return null;
+  return pageScope(identity, null).catch((error: unknown) => {
+    if (error instanceof AppError) return null;
+    throw error;
+  });
+}

@@ -1,0 +1,90 @@
+import "server-only";
+import { container } from "@/app/_server/container";
+import { identifyRequest, ORGANISATION_COOKIE } from "@/app/_server/identify-request";
+import { refuseForeignOrigin } from "@/app/_server/refuse-foreign-origin";
+import { readCookie } from "@/app/_server/session-cookie";
+import { toResponse } from "@/app/_server/to-response";
+import { onlyOnce } from "@/app/_server/only-once";
+import { can, type Permission } from "@/lib/access/permissions";
+import { AppError } from "@/lib/errors";
+import type { Scope } from "@/lib/scope";
+import { chooseOrganisation } from "@/lib/server/access/choose-organisation";
+import type { Identity } from "@/lib/server/access/authenticate";
+import type { Container } from "@/lib/server/container";
+
+export interface RouteContext<Name extends string> {
+  params: Promise<Record<Name, string>>;
+}
+
+export interface PublicInput<Name extends string> {
+  params: Record<Name, string>;
+  request: Request;
+  url: URL;
+  container: Container;
+}
+
+export interface ScopedInput<Name extends string> extends PublicInput<Name> {
+  scope: Scope;
+  identity: Identity;
+}
+
+type RouteHandler<Name extends string> = (request: Request, context: RouteContext<Name>) => Promise<Response>;
+
+async function readParams<Name extends string>(context: RouteContext<Name>): Promise<Record<Name, string>> {
+  const params = await context.params;
+  // PostgreSQL takes no NUL in text; an address with one names nothing.
+  if (JSON.stringify(params ?? {}).includes("\\u0000")) throw new AppError("not_found", "There is nothing here.");
+  return params;
+}
+
+async function scopeOf(request: Request, identity: Identity): Promise<Scope> {
+  const { scope } = await chooseOrganisation(identity, {
+    demanded: request.headers.get("x-organisation"),
+    preferred: readCookie(request.headers.get("cookie"), ORGANISATION_COOKIE),
+  });
+  return scope;
+}
+
+function refuseLowRole(scope: Scope, permission: Permission): void {
+  if (can(scope.role, permission)) return;
+  throw new AppError("forbidden", `Your role, ${scope.role}, does not allow this (${permission}).`);
+}
+
+/**
+ * Wraps a route that needs an account: who asks, in which organisation, whether the role allows it, same origin,
+ * Idempotency-Key, and every error as problem+json. Name the address's parameters: `withScope<"fieldId">(...)`.
+ */
+export function withScope<Name extends string = never>(
+  permission: Permission,
+  handler: (input: ScopedInput<Name>) => Promise<Response>,
+): RouteHandler<Name> {
+  return async (request, context) => {
+    try {
+      const outside = container();
+      const identity = await identifyRequest(request);
+      if (!identity.token) refuseForeignOrigin(request, outside.env.baseUrl);
+      const scope = await scopeOf(request, identity);
+      refuseLowRole(scope, permission);
+      const params = await readParams(context);
+      const handle = (received: Request) =>
+        handler({ scope, identity, params, request: received, url: new URL(request.url), container: outside });
+      return await onlyOnce({ request, scope, container: outside, handle });
+    } catch (error) {
+      return toResponse(error);
+    }
+  };
+}
+
+/** Wraps a route that anybody may call: health, the description of the API, share links. */
+export function withPublic<Name extends string = never>(
+  handler: (input: PublicInput<Name>) => Promise<Response>,
+): RouteHandler<Name> {
+  return async (request, context) => {
+    try {
+      const params = await readParams(context);
+      return await handler({ params, request, url: new URL(request.url), container: container() });
+    } catch (error) {
+      return toResponse(error);
+    }
+  };
+}
