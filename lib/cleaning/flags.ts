@@ -9,6 +9,7 @@ export const FLAGS = {
   "standing-still": 1 << 6,
   "hitch-unsettled": 1 << 7,
   "time-backwards": 1 << 8,
+  "jack-knife": 1 << 9,
 } as const;
 export type FlagCode = keyof typeof FLAGS;
 

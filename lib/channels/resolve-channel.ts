@@ -1,0 +1,38 @@
+import { openerResistance } from "@/lib/channels/opener-resistance";
+import type { ResolvedChannel } from "@/lib/channels/resolved-channel";
+import { rowSpeed } from "@/lib/channels/row-speed";
+import { isChannelId, type AnyChannelId } from "@/lib/logs/channel";
+import type { PlacedLog } from "@/lib/logs/placed-log";
+import { fail, succeed, type Result } from "@/lib/result";
+import { deviationFromOthers } from "@/lib/statistics/row-deviation";
+
+export type { ResolvedChannel } from "@/lib/channels/resolved-channel";
+
+/**
+ * A channel of a log by name, logged or derived (`resistance`, `rowSpeed`, `deviation:<channel>`), or the reason in plain
+ * words why this log cannot give it.
+ */
+export function resolveChannelOrReason(placed: PlacedLog, channelId: string): Result<ResolvedChannel, string> {
+  if (!isChannelId(channelId)) return fail(`"${channelId}" is not the name of a channel.`);
+  if (channelId === "resistance") return openerResistance(placed);
+  if (channelId === "rowSpeed") return succeed(rowSpeed(placed));
+  if (channelId.startsWith("deviation:")) return deviationChannel(placed, channelId);
+  const logged = placed.log.channels.find((channel) => channel.id === channelId);
+  return logged ? succeed({ ...logged, censoredShare: null }) : fail(`This log has no channel "${channelId}".`);
+}
+
+/** The same, null where the log cannot give it. */
+export function resolveChannel(placed: PlacedLog, channelId: string): ResolvedChannel | null {
+  const resolved = resolveChannelOrReason(placed, channelId);
+  return resolved.ok ? resolved.value : null;
+}
+
+/** Each reading less the median of the other rows at the same record. */
+function deviationChannel(placed: PlacedLog, channelId: AnyChannelId): Result<ResolvedChannel, string> {
+  const base = resolveChannelOrReason(placed, channelId.slice("deviation:".length));
+  if (!base.ok) return base;
+  if (!base.value.perRow || base.value.rows < 2) {
+    return fail(`"${base.value.id}" is logged once for the whole machine, so rows cannot be compared.`);
+  }
+  return succeed({ ...base.value, id: channelId, values: deviationFromOthers(base.value.values, base.value.rows) });
+}

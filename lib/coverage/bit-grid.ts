@@ -1,0 +1,85 @@
+/** A grid of yes/no cells, 32 to a word, rows of cells padded to whole words. Cell (0, 0) has its corner at the origin. */
+export interface BitGrid {
+  originX: number;
+  originY: number;
+  cellM: number;
+  columns: number;
+  rows: number;
+  wordsPerRow: number;
+  words: Uint32Array;
+}
+
+export interface Bounds {
+  minX: number;
+  minY: number;
+  maxX: number;
+  maxY: number;
+}
+
+/** An empty grid over `bounds`; its cells grow from `cellM` where there would be more than `maxCells` of them. */
+export function createBitGrid(bounds: Bounds, cellM: number, maxCells: number): BitGrid {
+  const width = bounds.maxX - bounds.minX;
+  const height = bounds.maxY - bounds.minY;
+  const side = Math.max(cellM, Math.sqrt((width * height) / maxCells));
+  const columns = Math.ceil(width / side) + 2;
+  const rows = Math.ceil(height / side) + 2;
+  const wordsPerRow = (columns + 31) >>> 5;
+  return {
+    originX: bounds.minX - side,
+    originY: bounds.minY - side,
+    cellM: side,
+    columns,
+    rows,
+    wordsPerRow,
+    words: new Uint32Array(wordsPerRow * rows),
+  };
+}
+
+/** An empty grid with the same cells. */
+export function emptyCopy(grid: BitGrid): BitGrid {
+  return { ...grid, words: new Uint32Array(grid.words.length) };
+}
+
+/** Sets cells `from .. end - 1` of a row of the grid. */
+export function setSpan(grid: BitGrid, row: number, from: number, end: number): void {
+  if (end <= from) return;
+  const base = row * grid.wordsPerRow;
+  const first = from >>> 5;
+  const last = (end - 1) >>> 5;
+  const head = 0xffffffff << (from & 31);
+  const tail = 0xffffffff >>> (31 - ((end - 1) & 31));
+  if (first === last) {
+    grid.words[base + first]! |= head & tail;
+    return;
+  }
+  grid.words[base + first]! |= head;
+  grid.words.fill(0xffffffff, base + first + 1, base + last);
+  grid.words[base + last]! |= tail;
+}
+
+export function isSet(grid: BitGrid, row: number, column: number): boolean {
+  return ((grid.words[row * grid.wordsPerRow + (column >>> 5)]! >>> (column & 31)) & 1) === 1;
+}
+
+/** Number of cells set. */
+export function countBits(grid: BitGrid): number {
+  let count = 0;
+  for (let word of grid.words) {
+    word -= (word >>> 1) & 0x55555555;
+    word = (word & 0x33333333) + ((word >>> 2) & 0x33333333);
+    count += Math.imul((word + (word >>> 4)) & 0x0f0f0f0f, 0x01010101) >>> 24;
+  }
+  return count;
+}
+
+/** First column at or after `from` whose cell is set (or, with `wanted` false, clear); `columns` where there is none. */
+export function nextColumn(grid: BitGrid, row: number, from: number, wanted: boolean): number {
+  const base = row * grid.wordsPerRow;
+  let mask = 0xffffffff << (from & 31);
+  for (let word = from >>> 5; word < grid.wordsPerRow; word++) {
+    const bits = (wanted ? grid.words[base + word]! : ~grid.words[base + word]!) & mask;
+    if (bits !== 0) return Math.min(grid.columns, (word << 5) + 31 - Math.clz32(bits & -bits));
+    mask = 0xffffffff;
+  }
+  return grid.columns;
+}

@@ -1,0 +1,131 @@
+import { median } from "@/lib/statistics/median";
+import { robustSpread } from "@/lib/statistics/median-absolute-deviation";
+
+/** Fewer rows than this have no "other rows" worth comparing with. */
+export const MIN_ROWS_TO_RANK = 5;
+
+/**
+ * Each reading less the median of the other rows' readings of the same record: what is left belongs to the row, whatever
+ * ground the machine stood on. Row-major by record like the input; NaN where the row or all others are missing.
+ */
+export function deviationFromOthers(values: Float32Array, rows: number): Float32Array {
+  const deviations = new Float32Array(values.length).fill(NaN);
+  const sorted = new Float32Array(rows);
+  const owner = new Uint16Array(rows);
+  for (let base = 0; base < values.length; base += rows) {
+    const n = sortRecord(values, base, sorted, owner);
+    for (let rank = 0; rank < n && n > 1; rank++) {
+      deviations[base + owner[rank]!] = sorted[rank]! - medianWithout(sorted, n, rank);
+    }
+  }
+  return deviations;
+}
+
+/** Insertion sort of one record's finite readings: fastest for the few dozen rows of a machine. */
+function sortRecord(values: Float32Array, base: number, sorted: Float32Array, owner: Uint16Array): number {
+  let n = 0;
+  for (let row = 0; row < sorted.length; row++) {
+    const value = values[base + row]!;
+    if (Number.isNaN(value)) continue;
+    let at = n++;
+    while (at > 0 && sorted[at - 1]! > value) {
+      sorted[at] = sorted[at - 1]!;
+      owner[at] = owner[at - 1]!;
+      at--;
+    }
+    sorted[at] = value;
+    owner[at] = row;
+  }
+  return n;
+}
+
+/** Median of `n` sorted values with the one at `rank` left out. */
+function medianWithout(sorted: Float32Array, n: number, rank: number): number {
+  const left = n - 1;
+  const middle = left >> 1;
+  const high = sorted[middle < rank ? middle : middle + 1]!;
+  if (left % 2 === 1) return high;
+  return (high + sorted[middle - 1 < rank ? middle - 1 : middle]!) / 2;
+}
+
+export interface RowScores {
+  /** Typical deviation of each row from its neighbours, less the median over rows; NaN where the row has no reading. */
+  deviation: Float64Array;
+  /** Robust z of each row; null where it cannot be given. */
+  z: (number | null)[];
+  /** Rows (from 1) compared among themselves because both sides of the machine show the same step. */
+  wheelTrackRows: number[];
+  /** Why there is no z at all, or null. */
+  reason: string | null;
+}
+
+export const Z_LIMIT = 3.5;
+
+/**
+ * Robust z of each row (Iglewicz & Hoaglin 1993): its median deviation from the other rows, less the median over rows,
+ * over 1.4826 MAD over rows; MAD 0 falls back to 1.2533 times the mean absolute deviation, and that 0 to "no spread".
+ *
+ * Rows that stand out together and evenly about the centre line are where tractor or carrying wheels ran; they are
+ * compared within their own group: their z counts from the group's median (of two rows: from the one nearer the rest),
+ * with the same spread. All other rows keep the plain z.
+ */
+export function scoreRows(medianDeviations: ArrayLike<number>): RowScores {
+  const rows = medianDeviations.length;
+  const centre = median(medianDeviations);
+  const deviation = Float64Array.from(medianDeviations, (value) => value - centre);
+  const none = (reason: string) => ({ deviation, z: Array.from(deviation, () => null), wheelTrackRows: [], reason });
+  const known = deviation.filter((value) => Number.isFinite(value)).length;
+  if (known < MIN_ROWS_TO_RANK) return none(`only ${known} rows have readings; ranking needs ${MIN_ROWS_TO_RANK}`);
+  const spread = robustSpread(deviation);
+  if (spread === null) return none("no spread: every row reads the same");
+  const plain = Array.from(deviation, (value) => (Number.isFinite(value) ? value / spread : null));
+  const groups = findWheelTracks(deviation, spread);
+  const z = [...plain];
+  for (const group of groups) {
+    const reference = groupReference(group.map((row) => deviation[row]!));
+    for (const row of group) z[row] = (deviation[row]! - reference) / spread;
+  }
+  const wheelTrackRows = groups.flat().map((row) => row + 1);
+  return {
+    deviation,
+    z,
+    wheelTrackRows: wheelTrackRows.filter((row) => row <= rows).sort((a, b) => a - b),
+    reason: null,
+  };
+}
+
+/** The median of three or more; of two, the one nearer zero, so that one of a pair going bad still stands out. */
+function groupReference(deviations: number[]): number {
+  const [first = NaN, second = NaN] = deviations;
+  if (deviations.length > 2) return median(deviations);
+  return Math.abs(first) < Math.abs(second) ? first : second;
+}
+
+/**
+ * Groups (row indices from 0) of rows that stand out the same way as their mirror row. A mirror pair must agree in sign,
+ * both beyond the limit, the smaller at least half the larger; one group for high rows, one for low.
+ */
+function findWheelTracks(deviation: Float64Array, spread: number): number[][] {
+  const groups: Record<"high" | "low", number[]> = { high: [], low: [] };
+  const last = deviation.length - 1;
+  for (let row = 0; row < last - row; row++) {
+    const left = deviation[row]!;
+    const right = deviation[last - row]!;
+    const smaller = Math.min(Math.abs(left), Math.abs(right));
+    if (!(left * right > 0) || smaller <= Z_LIMIT * spread) continue;
+    if (smaller < 0.5 * Math.max(Math.abs(left), Math.abs(right)) && !hasPair(deviation, row, spread)) continue;
+    groups[left > 0 ? "high" : "low"].push(row, last - row);
+  }
+  return Object.values(groups).filter((group) => group.length > 0);
+}
+
+/** True where the row beside this pair forms a like pair itself: a wheel is often two rows wide. */
+function hasPair(deviation: Float64Array, row: number, spread: number): boolean {
+  const last = deviation.length - 1;
+  return [row - 1, row + 1].some((beside) => {
+    const left = deviation[beside] ?? NaN;
+    const right = deviation[last - beside] ?? NaN;
+    const smaller = Math.min(Math.abs(left), Math.abs(right));
+    return left * right > 0 && smaller > Z_LIMIT * spread && smaller >= 0.5 * Math.max(Math.abs(left), Math.abs(right));
+  });
+}

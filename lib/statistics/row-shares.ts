@@ -1,0 +1,79 @@
+import type { ResolvedChannel } from "@/lib/channels/resolved-channel";
+import type { PlacedLog } from "@/lib/logs/placed-log";
+import type { RowSeries } from "@/lib/statistics/row-series";
+
+/** Share of a series' distance for which `holds`; null without distance. */
+export function distanceShare(series: RowSeries, holds: (value: number) => boolean): number | null {
+  let held = 0;
+  let total = 0;
+  for (let i = 0; i < series.values.length; i++) {
+    const weight = series.weightsM[i]!;
+    total += weight;
+    if (holds(series.values[i]!)) held += weight;
+  }
+  return total > 0 ? held / total : null;
+}
+
+/** The margin below which a row is under target: target less deadband; null where the channel or machine has none. */
+export function underTargetBelowN(placed: PlacedLog, channel: Pick<ResolvedChannel, "id" | "unit">): number | null {
+  const target = placed.machine?.targetMarginN;
+  if (channel.id !== "margin" || channel.unit !== "N" || target === undefined) return null;
+  return target - (placed.machine?.marginDeadbandN ?? 0);
+}
+
+/** The force from which a row is at its limit: limit less the larger of 1 % of it and the log's own rounding; or null. */
+export function atLimitFromN(
+  placed: PlacedLog,
+  channel: Pick<ResolvedChannel, "id" | "unit" | "resolution">,
+): number | null {
+  const limit = placed.machine?.maxDownforceN;
+  if (channel.id !== "downforce" || channel.unit !== "N" || limit === undefined) return null;
+  return limit - Math.max(0.01 * limit, channel.resolution ?? 0);
+}
+
+/**
+ * Share of distance without ground contact: margin <= 0, or what a contact channel (0..1, or yes/no) leaves to 1, averaged
+ * over distance. Null for any other channel.
+ */
+export function contactLostShare(series: RowSeries, channel: Pick<ResolvedChannel, "id" | "unit">): number | null {
+  if (channel.id === "margin" && channel.unit === "N") return distanceShare(series, (value) => value <= 0);
+  if (channel.id !== "contact" || (channel.unit !== "fraction" && channel.unit !== "boolean")) return null;
+  let lost = 0;
+  let total = 0;
+  for (let i = 0; i < series.values.length; i++) {
+    lost += series.weightsM[i]! * (1 - series.values[i]!);
+    total += series.weightsM[i]!;
+  }
+  return total > 0 ? lost / total : null;
+}
+
+/** A stretch of consecutive readings of one row in one pass. */
+export interface Stretch {
+  lengthM: number;
+  firstRecord: number;
+  lastRecord: number;
+}
+
+/** The longest stretch of consecutive readings for which `holds`; a missing reading or the end of a pass ends a stretch. Null without any. */
+export function longestStretch(
+  placed: PlacedLog,
+  series: RowSeries,
+  holds: (value: number) => boolean,
+): Stretch | null {
+  let longest: Stretch | null = null;
+  let open: Stretch | null = null;
+  for (let i = 0; i < series.values.length; i++) {
+    const record = series.records[i]!;
+    if (!holds(series.values[i]!)) {
+      open = null;
+      continue;
+    }
+    const follows =
+      open !== null && record === open.lastRecord + 1 && placed.passOf[record] === placed.passOf[record - 1];
+    if (open === null || !follows) open = { lengthM: 0, firstRecord: record, lastRecord: record };
+    open.lengthM += series.weightsM[i]!;
+    open.lastRecord = record;
+    if (longest === null || open.lengthM > longest.lengthM) longest = open;
+  }
+  return longest;
+}

@@ -1,0 +1,137 @@
+import { resolveChannelOrReason, type ResolvedChannel } from "@/lib/channels/resolve-channel";
+import { AppError } from "@/lib/errors";
+import type { PlacedLog } from "@/lib/logs/placed-log";
+import { rowDistances } from "@/lib/rows/row-distances";
+import { median } from "@/lib/statistics/median";
+import { deviationFromOthers, scoreRows, Z_LIMIT, type RowScores } from "@/lib/statistics/row-deviation";
+import { rowReason } from "@/lib/statistics/row-reason";
+import { rowSeries, type RowSeries } from "@/lib/statistics/row-series";
+import {
+  atLimitFromN,
+  contactLostShare,
+  distanceShare,
+  longestStretch,
+  underTargetBelowN,
+} from "@/lib/statistics/row-shares";
+import { sortWeighted } from "@/lib/statistics/sort-weighted";
+import { weightedMean } from "@/lib/statistics/weighted-mean";
+import { weightedQuantile, weightedQuantileSorted } from "@/lib/statistics/weighted-quantile";
+import { weightedSd } from "@/lib/statistics/weighted-sd";
+
+/** What one row did over a log. Every mean, sd, quantile and share is weighted by the distance the row travelled. */
+export interface RowStatisticsItem {
+  row: number;
+  n: number;
+  /** Distance for which the row has readings. */
+  distanceM: number;
+  mean: number | null;
+  sd: number | null;
+  min: number | null;
+  p05: number | null;
+  p25: number | null;
+  p50: number | null;
+  p75: number | null;
+  p95: number | null;
+  max: number | null;
+  shareUnderTarget: number | null;
+  shareAtLimit: number | null;
+  shareContactLost: number | null;
+  longestUnderTargetM: number | null;
+  deviationZ: number | null;
+  flagged: boolean;
+  reason: string | null;
+}
+
+export interface RowStatistics {
+  channel: string;
+  unit: string;
+  items: RowStatisticsItem[];
+  /** Typical deviation of each row from the others less the median over rows, in the unit; NaN where unknown. */
+  deviations: Float64Array;
+  /** Median over rows of the rows' medians: what 5 % is taken of. */
+  medianOfRows: number;
+  wheelTrackRows: number[];
+  censoredShare: number | null;
+}
+
+/** A row is flagged only where it is also this much of the median of all rows away from them. */
+export const FLAG_DEVIATION_SHARE = 0.05;
+
+/**
+ * Statistics of every row in one channel, row 1 first; one item for a channel logged once for the whole machine.
+ * `deviationZ` is the robust score of `scoreRows`; a row is flagged where it exceeds 3.5 either way and the deviation is
+ * more than 5 % of the median of all rows.
+ * @throws AppError unprocessable where the log cannot give the channel.
+ */
+export function rowStatistics(
+  placed: PlacedLog,
+  channelId: string,
+  options: { distances?: Float32Array } = {},
+): RowStatistics {
+  const resolved = resolveChannelOrReason(placed, channelId);
+  if (!resolved.ok) throw new AppError("unprocessable", resolved.error, { detailCode: "channel_not_available" });
+  const channel = resolved.value;
+  const distances = options.distances ?? rowDistances(placed);
+  const series = Array.from({ length: channel.rows }, (_, row) => rowSeries(placed, channel, distances, row));
+  const described = series.map((one, row) => describeRow(placed, channel, one, row + 1));
+  const scores = scoreChannel(placed, channel, distances);
+  const medianOfRows = median(described.map((item) => item.p50 ?? NaN));
+  const flagged = described.map((_, row) => isFlagged(scores, row, medianOfRows));
+  const items = described.map((item, row) => ({
+    ...item,
+    deviationZ: scores.z[row] ?? null,
+    flagged: flagged[row]!,
+    reason: rowReason({ scores, row, flagged, medianOfRows, unit: channel.unit }),
+  }));
+  const { wheelTrackRows, deviation: deviations } = scores;
+  const censoredShare = channel.censoredShare;
+  return { channel: channelId, unit: channel.unit, items, deviations, medianOfRows, wheelTrackRows, censoredShare };
+}
+
+function isFlagged(scores: RowScores, row: number, medianOfRows: number): boolean {
+  const z = scores.z[row] ?? null;
+  const large = Math.abs(scores.deviation[row]!) > FLAG_DEVIATION_SHARE * Math.abs(medianOfRows);
+  return z !== null && Math.abs(z) > Z_LIMIT && large;
+}
+
+function scoreChannel(placed: PlacedLog, channel: ResolvedChannel, distances: Float32Array): RowScores {
+  if (!channel.perRow) return scoreRows([NaN]);
+  const values = deviationFromOthers(channel.values, channel.rows);
+  const typical = Float64Array.from({ length: channel.rows }, (_, row) => {
+    const series = rowSeries(placed, { values, rows: channel.rows }, distances, row);
+    return weightedQuantile(series.values, series.weightsM, 0.5);
+  });
+  return scoreRows(typical);
+}
+
+type Described = Omit<RowStatisticsItem, "deviationZ" | "flagged" | "reason">;
+
+function describeRow(placed: PlacedLog, channel: ResolvedChannel, series: RowSeries, row: number): Described {
+  const sorted = sortWeighted(series.values, series.weightsM);
+  const at = (p: number) => finiteOrNull(weightedQuantileSorted(sorted, p));
+  const under = underTargetBelowN(placed, channel);
+  const limit = atLimitFromN(placed, channel);
+  const isUnder = (value: number) => under !== null && value < under;
+  return {
+    row,
+    n: series.values.length,
+    distanceM: series.weightsM.reduce((sum, weight) => sum + weight, 0),
+    mean: finiteOrNull(weightedMean(series.values, series.weightsM)),
+    sd: finiteOrNull(weightedSd(series.values, series.weightsM)),
+    min: finiteOrNull(series.values.reduce((least, value) => Math.min(least, value), Infinity)),
+    p05: at(0.05),
+    p25: at(0.25),
+    p50: at(0.5),
+    p75: at(0.75),
+    p95: at(0.95),
+    max: finiteOrNull(series.values.reduce((most, value) => Math.max(most, value), -Infinity)),
+    shareUnderTarget: under === null ? null : distanceShare(series, isUnder),
+    shareAtLimit: limit === null ? null : distanceShare(series, (value) => value >= limit),
+    shareContactLost: contactLostShare(series, channel),
+    longestUnderTargetM: under === null ? null : (longestStretch(placed, series, isUnder)?.lengthM ?? 0),
+  };
+}
+
+function finiteOrNull(value: number): number | null {
+  return Number.isFinite(value) ? value : null;
+}
