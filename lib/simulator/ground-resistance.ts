@@ -10,7 +10,7 @@ export interface Ground {
 }
 
 export function createGround(options: SimulationOptions, plane: LocalPlane): Ground {
-  const surface = createSmoothSurface(options.soil, options.seed);
+  const surface = createSmoothSurface(options.soil, options.soil.seed ?? options.seed);
   const { gradientEastNPerM, gradientNorthNPerM } = options.soil;
   return {
     soilN: (eastM, northM) =>

@@ -52,8 +52,11 @@ function linesOf(options: SimulationOptions, plane: LocalPlane, axes: FieldAxes)
     headlandM: options.headlandM,
     minimumLengthM: SHORTEST_PASS_M,
   });
-  if (passes.length === 0) throw new RangeError("planTrack: the field is too small for one pass");
-  return passes;
+  const { first, last } = options.shape.lines ?? { first: 1, last: passes.length };
+  const driven = passes.slice(first - 1, last);
+  if (driven.length === 0)
+    throw new RangeError("planTrack: the field is too small for one pass, or none of its lines is driven");
+  return driven;
 }
 
 function wander(passes: PlannedPass[], options: SimulationOptions): PlannedPass[] {

@@ -31,13 +31,19 @@ export interface SoilTrend {
   /** Standard deviation of a smooth random surface, and the distance over which it stays alike (Gaussian correlation). */
   noiseN: number;
   noiseRangeM: number;
+  /** Seed of that surface, so that two logs can share one piece of ground; without it the log's own. */
+  seed?: number;
 }
 
 export type Controller = { mode: "active"; lagS: number; targetMarginN: number } | { mode: "fixed"; forceN: number };
 
-/** `block`: a rectangle laid along the drilling, known exactly. `polygon`: a convex ring of [longitude, latitude]. */
+/**
+ * `block`: a rectangle laid along the drilling, known exactly. `polygon`: a convex ring of [longitude, latitude]; `lines`
+ * drives only some of the lines that fill it, first and last counted from 1 at the left.
+ */
 export type FieldShape =
-  { kind: "block"; passes: number; passLengthM: number } | { kind: "polygon"; ring: [number, number][] };
+  | { kind: "block"; passes: number; passLengthM: number }
+  | { kind: "polygon"; ring: [number, number][]; lines?: { first: number; last: number } };
 
 export interface SpeedOptions {
   meanMps: number;

@@ -1,0 +1,86 @@
+import { simulateHarvestLog } from "@/lib/simulator/simulate-harvest-log";
+import { LARKSPUR_COMBINE } from "@/lib/simulator/scenario/larkspur-machines";
+import { createLocalPlane } from "@/lib/geo/local-plane";
+import { rectangleRing } from "@/lib/simulator/field-ring";
+import { writeLongCsv, writeWideCsv } from "@/lib/simulator/writers/write-csv";
+import { writeGeoJson } from "@/lib/simulator/writers/write-geojson";
+import { writeShapefileZip } from "@/lib/simulator/writers/write-shapefile";
+import { buildBadFixtures } from "@/tests/support/build-bad-fixtures";
+import { createFixtureLog, describeFixtureTruth } from "@/tests/support/fixture-logs";
+
+export interface Fixture {
+  /** Folder under `fixtures/logs`. */
+  folder: string;
+  fileName: string;
+  content: string | Uint8Array;
+  /** One line for `fixtures/README.md`. */
+  story: string;
+  /** `truth.json` beside it; null where the file is only there to be refused or noted. */
+  truth: string | null;
+}
+
+/** Every file under `fixtures/logs`, made from the simulator alone. */
+export function buildFixtures(): Fixture[] {
+  const simulated = createFixtureLog();
+  const truth = describeFixtureTruth(simulated);
+  const { log } = simulated;
+  const good = (folder: string, fileName: string, content: string | Uint8Array, story: string): Fixture => ({
+    folder,
+    fileName,
+    content,
+    story,
+    truth,
+  });
+  return [
+    good("csv/wide-newtons", "input.csv", writeWideCsv(log), "one line a record, plain words, newtons, millimetres"),
+    good(
+      "csv/wide-pounds",
+      "input.csv",
+      writeWideCsv(log, { ...POUNDS, unexplainedColumn: "AUX_3" }),
+      "short names, pounds-force, inches, miles an hour, and a column of unknown meaning",
+    ),
+    good(
+      "csv/wide-decimal-comma",
+      "input.csv",
+      writeWideCsv(log, DECIMAL_COMMA),
+      "semicolons, decimal commas, byte-order mark, CRLF, unix seconds, decanewtons, centimetres, km/h",
+    ),
+    good("csv/long-newtons", "input.csv", writeLongCsv(log, { naming: "short" }), "one line a record and row"),
+    good("geojson/points", "input.geojson", writeGeoJson(log, POUNDS), "one point feature a record"),
+    good(
+      "shapefile/points",
+      "input.zip",
+      writeShapefileZip(log, "seeding", { force: "N", depth: "mm" }),
+      "zipped point shapefile with .shp, .shx, .dbf, .prj and .cpg",
+    ),
+    harvestFixture(),
+    ...buildBadFixtures(log),
+  ];
+}
+
+const POUNDS = { naming: "short", force: "lbf", depth: "in", speed: "mph", forceDecimals: 1 } as const;
+const DECIMAL_COMMA = {
+  delimiter: ";",
+  decimalComma: true,
+  byteOrderMark: true,
+  newline: "\r\n",
+  time: "unix-s",
+  force: "daN",
+  forceDecimals: 1,
+  depth: "cm",
+  speed: "km/h",
+} as const;
+
+function harvestFixture(): Fixture {
+  const origin: [number, number] = [-98.6124, 38.4171];
+  const ring = rectangleRing(createLocalPlane(...origin), 0, 120, 5 * LARKSPUR_COMBINE.headerWidthM);
+  const { log, truth } = simulateHarvestLog({ seed: 7101, combine: LARKSPUR_COMBINE, origin, ring, headlandM: 10 });
+  const facts = { kind: log.kind, records: log.records, combine: truth.options.combine, passes: truth.passes };
+  return {
+    folder: "csv/harvest",
+    fileName: "input.csv",
+    content: writeWideCsv(log),
+    story: "harvest log: grain flow, moisture and cut width, one value a record",
+    truth: JSON.stringify({ ...facts, lines: truth.lines }, null, 2) + "\n",
+  };
+}
