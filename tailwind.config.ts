@@ -9,6 +9,8 @@ export default {
         paper: "#FBFAF6",
         sheet: "#FFFFFF",
         rule: "#E4E0D5",
+        /** Outline of something to fill in or press: 3:1 on paper. */
+        edge: "#8C8778",
         ink: { DEFAULT: "#1E2430", soft: "#4A5261", faint: "#6B7280" },
         straw: { DEFAULT: "#C29A45", deep: "#7D5A14" },
         clay: "#9A4A2C",

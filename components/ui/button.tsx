@@ -5,7 +5,7 @@ export type ButtonKind = "primary" | "plain" | "quiet" | "careful";
 
 const LOOK: Record<ButtonKind, string> = {
   primary: "border border-ink bg-ink text-paper hover:bg-ink-soft hover:border-ink-soft",
-  plain: "border border-[#BDB7A7] bg-sheet text-ink hover:border-ink",
+  plain: "border border-edge bg-sheet text-ink hover:border-ink",
   quiet: "border border-transparent text-slate hover:border-rule hover:bg-sheet",
   careful: "border border-clay bg-sheet text-clay hover:bg-clay hover:text-paper",
 };

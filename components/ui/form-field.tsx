@@ -9,7 +9,7 @@ import { StateMark } from "@/components/ui/state-mark";
 import { classNames } from "@/components/ui/class-names";
 
 const BOX =
-  "w-full min-h-11 rounded border border-[#BDB7A7] bg-sheet px-3 py-2 text-text text-ink hover:border-ink-soft md:min-h-9 md:py-1.5 aria-[invalid=true]:border-clay disabled:bg-paper disabled:text-ink-faint";
+  "w-full min-h-11 rounded border border-edge bg-sheet px-3 py-2 text-text text-ink hover:border-ink-soft md:min-h-9 md:py-1.5 aria-[invalid=true]:border-clay disabled:bg-paper disabled:text-ink-faint";
 
 interface Surround {
   label: string;

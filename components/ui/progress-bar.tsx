@@ -10,7 +10,7 @@ export function ProgressBar({ share, label }: { share: number; label: string }) 
       value={percent}
       max={100}
       aria-label={label}
-      className="h-2 w-full overflow-hidden rounded-[2px] border border-[#BDB7A7] bg-sheet"
+      className="h-2 w-full overflow-hidden rounded-[2px] border border-edge bg-sheet"
     >
       <Progress.Indicator className="block h-full bg-straw transition-[width]" style={{ width: `${percent}%` }} />
     </Progress.Root>

@@ -1,0 +1,21 @@
+import type { Metadata } from "next";
+import { notFound } from "next/navigation";
+import { requireScope } from "@/app/_server/require-scope";
+import { NewField } from "@/components/fields/new-field";
+import { PageBody } from "@/components/ui/page-body";
+import { PageHeading } from "@/components/ui/page-heading";
+import { can } from "@/lib/access/permissions";
+
+export const metadata: Metadata = { title: "New field" };
+
+export default async function NewFieldRoute({ params }: { params: Promise<{ org: string }> }) {
+  const { org } = await params;
+  const { scope, organisation } = await requireScope(org);
+  if (!can(scope.role, "fields.write")) notFound();
+  return (
+    <PageBody>
+      <PageHeading title="New field" />
+      <NewField slug={organisation.slug} />
+    </PageBody>
+  );
+}

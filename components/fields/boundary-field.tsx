@@ -1,0 +1,93 @@
+"use client";
+
+import { useState } from "react";
+import { BoundarySketch } from "@/components/fields/boundary-sketch";
+import { readBoundaryText, type ReadBoundary } from "@/components/fields/read-boundary-text";
+import type { BoundaryChange } from "@/components/hooks/use-fields";
+import { Button } from "@/components/ui/button";
+import { TextArea } from "@/components/ui/form-field";
+import { Notice } from "@/components/ui/notice";
+import { Quantity } from "@/components/units/quantity";
+import { DropZone } from "@/components/upload/drop-zone";
+
+const KINDS = ".geojson,.json,.kml,.zip";
+
+interface Chosen {
+  change: BoundaryChange;
+  /** Known at once for GeoJSON; other kinds are read by the server when saved. */
+  read: ReadBoundary | null;
+  fileName: string | null;
+}
+
+const NOTHING: Chosen = { change: { kind: "none" }, read: null, fileName: null };
+
+export interface BoundaryFieldProps {
+  onChange: (change: BoundaryChange) => void;
+  error?: string;
+}
+
+/** A boundary from a file or from pasted GeoJSON, with its outline and area before anything is saved. */
+export function BoundaryField({ onChange, error }: BoundaryFieldProps) {
+  const [chosen, setChosen] = useState<Chosen>(NOTHING);
+  const [problem, setProblem] = useState<string | null>(null);
+  const [pasting, setPasting] = useState(false);
+
+  const choose = (next: Chosen, trouble: string | null) => {
+    setChosen(next);
+    setProblem(trouble);
+    onChange(next.change);
+  };
+  const takeText = (text: string, fileName: string | null) => {
+    if (text.trim() === "") return choose(NOTHING, null);
+    const result = readBoundaryText(text);
+    if (!result.ok) return choose(NOTHING, result.error);
+    choose({ change: { kind: "geometry", geometry: result.value.geometry }, read: result.value, fileName }, null);
+  };
+  const takeFile = async (file: File) => {
+    if (/\.(geo)?json$/i.test(file.name)) takeText(await file.text(), file.name);
+    else choose({ change: { kind: "file", file }, read: null, fileName: file.name }, null);
+  };
+
+  return (
+    <fieldset className="space-y-3">
+      <legend className="font-semibold">Boundary</legend>
+      <p className="text-table text-ink-soft">
+        Optional, and can be added later. It gives the field its area and shows logs that were dropped on the wrong
+        field.
+      </p>
+      <DropZone
+        words={chosen.fileName ?? "Choose a boundary file"}
+        hint="GeoJSON, KML or a zipped shapefile"
+        accept={KINDS}
+        onFile={(file) => void takeFile(file)}
+      />
+      {pasting ? (
+        <TextArea
+          label="GeoJSON"
+          rows={6}
+          spellCheck={false}
+          hint="A Polygon or MultiPolygon, positions as [longitude, latitude] in degrees."
+          onChange={(event) => takeText(event.target.value, null)}
+        />
+      ) : (
+        <Button kind="quiet" className="-ml-3" onClick={() => setPasting(true)}>
+          Paste GeoJSON instead
+        </Button>
+      )}
+      <div aria-live="polite">
+        {(problem ?? error) ? <Notice state="act">{problem ?? error}</Notice> : null}
+        {chosen.read ? (
+          <div className="sheet flex items-center gap-4 p-3">
+            <BoundarySketch boundary={chosen.read.geometry} className="h-24 w-24" label="Outline of the boundary" />
+            <p>
+              Area <Quantity value={chosen.read.areaM2} unit="m2" />
+            </p>
+          </div>
+        ) : null}
+        {chosen.change.kind === "file" ? (
+          <p className="text-table text-ink-soft">The outline and the area are worked out when you save.</p>
+        ) : null}
+      </div>
+    </fieldset>
+  );
+}

@@ -1,0 +1,61 @@
+import type { MultiPolygon, Polygon, Position } from "geojson";
+
+const SIZE = 100;
+const MARGIN = 4;
+
+function ringsOf(boundary: Polygon | MultiPolygon): Position[][] {
+  return boundary.type === "Polygon" ? boundary.coordinates : boundary.coordinates.flat();
+}
+
+/** Rings as one SVG path in a 100 by 100 box, north up, true to shape (longitude shrunk by the cosine of latitude). */
+export function boundaryPath(boundary: Polygon | MultiPolygon): string {
+  const rings = ringsOf(boundary);
+  const points = rings.flat();
+  const longitudes = points.map((point) => point[0] ?? NaN);
+  const latitudes = points.map((point) => point[1] ?? NaN);
+  const [west, east] = [Math.min(...longitudes), Math.max(...longitudes)];
+  const [south, north] = [Math.min(...latitudes), Math.max(...latitudes)];
+  const shrink = Math.cos((((south + north) / 2) * Math.PI) / 180);
+  const [width, height] = [(east - west) * shrink, north - south];
+  const scale = (SIZE - 2 * MARGIN) / Math.max(width, height, 1e-9);
+  const [left, top] = [(SIZE - width * scale) / 2, (SIZE - height * scale) / 2];
+  const place = (point: Position) => {
+    const x = left + ((point[0] ?? NaN) - west) * shrink * scale;
+    const y = top + (north - (point[1] ?? NaN)) * scale;
+    return `${x.toFixed(2)} ${y.toFixed(2)}`;
+  };
+  return rings.map((ring) => `M${ring.map(place).join("L")}Z`).join("");
+}
+
+export interface BoundarySketchProps {
+  boundary: Polygon | MultiPolygon | null;
+  /** Said by screen readers; leave out where the text beside it says enough. */
+  label?: string;
+  className?: string;
+}
+
+/** The outline of a field as one would draw it in a notebook; hatched square where there is none. */
+export function BoundarySketch({ boundary, label, className }: BoundarySketchProps) {
+  return (
+    <svg
+      viewBox={`0 0 ${SIZE} ${SIZE}`}
+      className={className}
+      role={label ? "img" : undefined}
+      aria-label={label}
+      aria-hidden={label ? undefined : true}
+    >
+      {boundary ? (
+        <path
+          d={boundaryPath(boundary)}
+          fill="#C29A4526"
+          fillRule="evenodd"
+          stroke="#1E2430"
+          strokeWidth="1.5"
+          strokeLinejoin="round"
+        />
+      ) : (
+        <rect x="14" y="14" width="72" height="72" fill="none" stroke="#6B7280" strokeDasharray="4 4" />
+      )}
+    </svg>
+  );
+}

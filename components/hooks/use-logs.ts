@@ -1,0 +1,52 @@
+"use client";
+
+import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
+import { queryKeys } from "@/components/hooks/query-keys";
+import { cancelLog, deleteLog, getColumns, getLog, getVerdict, listLogs, putMapping, retryLog } from "@/lib/api/client";
+import type { LogMapping } from "@/lib/ingest/mapping";
+import { isWorking } from "@/components/upload/log-state";
+
+/** The logs of one field; asked again every two seconds while any is being worked on. */
+export function useLogs(fieldId: string, limit = 500) {
+  return useQuery({
+    queryKey: [...queryKeys.logs(fieldId), limit],
+    queryFn: () => listLogs(fieldId, limit),
+    refetchInterval: (query) => (query.state.data?.items.some((log) => isWorking(log.status)) ? 2_000 : false),
+  });
+}
+
+export function useLog(logId: string) {
+  return useQuery({ queryKey: queryKeys.log(logId), queryFn: () => getLog(logId) });
+}
+
+export function useColumns(logId: string) {
+  return useQuery({ queryKey: queryKeys.columns(logId), queryFn: () => getColumns(logId), staleTime: Infinity });
+}
+
+export function useVerdict(logId: string | undefined, version: number, enabled = true) {
+  return useQuery({
+    queryKey: queryKeys.verdict(logId ?? "", version),
+    queryFn: () => getVerdict(logId ?? ""),
+    enabled: enabled && logId !== undefined,
+    staleTime: Infinity,
+  });
+}
+
+/** What can be done to a log of a field; each asks for the list again. */
+export function useLogActions(fieldId: string) {
+  const client = useQueryClient();
+  const onSettled = () => client.invalidateQueries({ queryKey: queryKeys.logs(fieldId) });
+  return {
+    cancel: useMutation({ mutationFn: cancelLog, onSettled }),
+    retry: useMutation({ mutationFn: retryLog, onSettled }),
+    remove: useMutation({ mutationFn: deleteLog, onSettled }),
+  };
+}
+
+export function usePutMapping(logId: string) {
+  const client = useQueryClient();
+  return useMutation({
+    mutationFn: (mapping: LogMapping) => putMapping(logId, mapping),
+    onSuccess: () => client.invalidateQueries({ queryKey: ["logs", logId] }),
+  });
+}

@@ -1,0 +1,59 @@
+import type { Role } from "@/lib/access/permissions";
+
+/** One password for every demo account. Shown on screens in demo mode only; the seed uses the same. */
+export const DEMO_PASSWORD = "larkspur-flats-demo";
+
+export interface DemoAccount {
+  email: string;
+  name: string;
+  role: Role;
+  organisation: "larkspur" | "otherfarm";
+  /** What one would sign in as this person to do. */
+  does: string;
+}
+
+/** Everyone in the invented demo organisations. */
+export const DEMO_ACCOUNTS: readonly DemoAccount[] = [
+  {
+    email: "operator@larkspur.example",
+    name: "Owen Reyes",
+    role: "operator",
+    organisation: "larkspur",
+    does: "takes in a log after a pass and reads its verdict",
+  },
+  {
+    email: "agronomist@larkspur.example",
+    name: "Ada Lindqvist",
+    role: "agronomist",
+    organisation: "larkspur",
+    does: "sets up fields, machines and shares",
+  },
+  {
+    email: "researcher@larkspur.example",
+    name: "Rui Tanaka",
+    role: "researcher",
+    organisation: "larkspur",
+    does: "reads every log, changes nothing",
+  },
+  {
+    email: "viewer@larkspur.example",
+    name: "Vera Holt",
+    role: "viewer",
+    organisation: "larkspur",
+    does: "reads the fields given to her",
+  },
+  {
+    email: "owner@larkspur.example",
+    name: "Otto Larkin",
+    role: "owner",
+    organisation: "larkspur",
+    does: "runs the organisation: people, shares, audit",
+  },
+  {
+    email: "owner@otherfarm.example",
+    name: "Nell Brandt",
+    role: "owner",
+    organisation: "otherfarm",
+    does: "owns another farm and sees none of this one",
+  },
+];
