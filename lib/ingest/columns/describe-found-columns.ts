@@ -1,0 +1,36 @@
+import { checkPositions } from "@/lib/ingest/columns/check-positions";
+import { describeProposal } from "@/lib/ingest/columns/describe-column";
+import { guessColumns } from "@/lib/ingest/columns/guess-columns";
+import { summariseCells } from "@/lib/ingest/columns/summarise-cells";
+import type { FoundColumn, InspectOptions } from "@/lib/ingest/log-format";
+import type { LogShape } from "@/lib/ingest/mapping";
+import type { NoteBook } from "@/lib/ingest/records/note-book";
+
+export interface SampledColumns {
+  names: readonly string[];
+  units: readonly string[] | null;
+  /** Sampled cells of a column, as texts. */
+  cells(field: number): string[];
+  decimalComma: boolean;
+  near: InspectOptions["near"];
+  notes: NoteBook;
+}
+
+/** The columns of a file with what they hold and seem to mean. Same for every format. */
+export function describeFoundColumns(sampled: SampledColumns): { columns: FoundColumn[]; shape: LogShape } {
+  const { names, units, decimalComma } = sampled;
+  const summaries = names.map((_, field) => summariseCells(sampled.cells(field), decimalComma));
+  const evidence = names.flatMap((name, field) => {
+    const summary = summaries[field];
+    return summary ? [{ name, unitCell: units?.[field] ?? null, summary }] : [];
+  });
+  const { proposals, shape } = guessColumns(evidence);
+  checkPositions(proposals, summaries, sampled.near, sampled.notes);
+  const columns = evidence.map(({ name, summary }, index) => {
+    const proposal = proposals[index] ?? null;
+    const { sample, min, max } = summary;
+    const words = describeProposal({ name, sample }, proposal, { decimalComma });
+    return { name, index, sample, min, max, proposal, words };
+  });
+  return { columns, shape };
+}

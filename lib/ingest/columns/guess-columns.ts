@@ -1,0 +1,106 @@
+import { isRowable } from "@/lib/ingest/channel-quantities";
+import { guessUnit } from "@/lib/ingest/columns/guess-unit";
+import { nameChannel } from "@/lib/ingest/columns/name-channel";
+import { readHeaderUnit, readUnitWord } from "@/lib/ingest/columns/read-unit-words";
+import type { CellSummary } from "@/lib/ingest/columns/summarise-cells";
+import { readRowNumber, tokeniseHeader } from "@/lib/ingest/columns/tokenise-header";
+import type { ColumnProposal } from "@/lib/ingest/log-format";
+import type { LogShape } from "@/lib/ingest/mapping";
+import type { ChannelId } from "@/lib/logs/channel";
+
+export interface ColumnEvidence {
+  name: string;
+  /** Cell of the units line, where there is one. */
+  unitCell: string | null;
+  summary: CellSummary;
+}
+
+/** What each column seems to mean, and the shape these meanings make. Nothing here is final: a person confirms. */
+export function guessColumns(columns: readonly ColumnEvidence[]): {
+  proposals: (ColumnProposal | null)[];
+  shape: LogShape;
+} {
+  const proposals = columns.map(guessColumn);
+  keepBestOfEach(proposals);
+  settleRows(proposals);
+  return { proposals, shape: guessShape(proposals) };
+}
+
+function guessColumn(column: ColumnEvidence): ColumnProposal | null {
+  const headerUnit = readHeaderUnit(column.name);
+  const unitWord = (column.unitCell === null ? null : readUnitWord(column.unitCell)) ?? headerUnit?.unit ?? null;
+  // "t_s" names time only without its unit, "depth in" needs the unit kept apart; "on/off" is both.
+  const tokens = tokeniseHeader(headerUnit?.rest ?? column.name);
+  const inRow = readRowNumber(tokens);
+  const named = nameChannel(inRow?.rest ?? tokens) ?? nameChannel(tokeniseHeader(column.name));
+  if (!named || column.summary.filled === 0) return null;
+  const { unit, format, trust, reason } = guessUnit(named.channel, unitWord, column.summary, column.name);
+  const row = inRow && isRowable(named.channel) ? inRow.row : undefined;
+  const rowTrust = row !== undefined && !inRow?.isNamed ? 0.97 : 1;
+  return {
+    channel: named.channel,
+    ...(row === undefined ? {} : { row }),
+    unit,
+    ...(format === undefined ? {} : { format }),
+    confidence: round(named.weight * trust * rowTrust),
+    reason: `the header says "${named.words}"; ${reason}`,
+  };
+}
+
+function round(confidence: number): number {
+  return Math.round(Math.min(1, confidence) * 100) / 100;
+}
+
+/** Of several columns that seem to be the same thing, the surest keeps it; a local date and a local time may share `time`. */
+function keepBestOfEach(proposals: (ColumnProposal | null)[]): void {
+  const best = new Map<string, number>();
+  proposals.forEach((proposal, index) => {
+    if (!proposal) return;
+    const key = `${proposal.channel} ${proposal.row ?? ""} ${proposal.unit === "local" ? (proposal.format ?? "") : ""}`;
+    const other = best.get(key);
+    if (other === undefined) {
+      best.set(key, index);
+      return;
+    }
+    const rival = proposals[other];
+    const loser = rival && rival.confidence >= proposal.confidence ? index : other;
+    if (loser === other) best.set(key, index);
+    const lost = proposals[loser];
+    proposals[loser] = lost ? toOther(lost, index) : null;
+  });
+}
+
+/** A second column of the same meaning is left for the person, as nothing. */
+function toOther(_lost: ColumnProposal, _index: number): null {
+  return null;
+}
+
+/** Rows of a channel should run 1..n. From 0: one is added, and said. With gaps, or alone: less sure. */
+function settleRows(proposals: (ColumnProposal | null)[]): void {
+  const channels = new Map<ChannelId, ColumnProposal[]>();
+  for (const proposal of proposals) {
+    if (proposal?.row === undefined) continue;
+    channels.set(proposal.channel, [...(channels.get(proposal.channel) ?? []), proposal]);
+  }
+  for (const group of channels.values()) {
+    const rows = group.map((proposal) => proposal.row ?? 0);
+    const first = Math.min(...rows);
+    const isRun = Math.max(...rows) - first + 1 === rows.length;
+    for (const proposal of group) {
+      if (first === 0) {
+        proposal.row = (proposal.row ?? 0) + 1;
+        proposal.reason += "; the header counts rows from 0, here they count from 1";
+      }
+      if (!isRun || first > 1 || group.length === 1) {
+        proposal.confidence = round(proposal.confidence * 0.6);
+        proposal.reason += "; the row numbers of this channel do not run on from 1";
+      }
+    }
+  }
+}
+
+function guessShape(proposals: readonly (ColumnProposal | null)[]): LogShape {
+  const rowed = proposals.filter((proposal) => proposal?.row !== undefined);
+  if (rowed.length > 1) return "wide";
+  return proposals.some((proposal) => proposal?.channel === "row") ? "long" : "single";
+}

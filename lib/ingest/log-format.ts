@@ -1,0 +1,88 @@
+import type { ByteSource } from "@/lib/ingest/byte-source";
+import type { LogMapping, LogShape } from "@/lib/ingest/mapping";
+import type { ChannelId } from "@/lib/logs/channel";
+import type { LogNote, MachineLog } from "@/lib/logs/machine-log";
+import type { UnitId } from "@/lib/units/unit-table";
+
+export type LogFormatId = "csv" | "geojson" | "shapefile";
+
+/** What a column seems to mean. `unit` is null where nothing in the file says: a person must choose. */
+export interface ColumnProposal {
+  channel: ChannelId;
+  row?: number;
+  unit: UnitId | null;
+  format?: string;
+  /** 0..1. From 0.7 on, the header and the values agree. */
+  confidence: number;
+  /** One plain sentence: what the proposal rests on. */
+  reason: string;
+}
+
+export interface FoundColumn {
+  name: string;
+  /** Place in the file, from 0. */
+  index: number;
+  /** Up to five raw texts from the file. */
+  sample: string[];
+  /** Over the sampled records, in the file's own unit; null where no cell is a number. */
+  min: number | null;
+  max: number | null;
+  proposal: ColumnProposal | null;
+  /** The proposal as a sentence for a person. */
+  words: string;
+}
+
+export interface Inspection {
+  format: LogFormatId;
+  shape: LogShape;
+  /** Text files only. */
+  delimiter?: string;
+  decimalComma?: boolean;
+  encoding?: string;
+  /** Where the file itself says in which system its easting and northing are. */
+  crs?: string;
+  columns: FoundColumn[];
+  recordsSampled: number;
+  notes: LogNote[];
+}
+
+export interface InspectOptions {
+  /** Where the field lies, to notice swapped or foreign positions. */
+  near?: { longitude: number; latitude: number };
+  signal?: AbortSignal;
+}
+
+export interface ReadOptions {
+  /** Called with 0..1 as bytes are taken. */
+  onProgress?: (fraction: number) => void;
+  signal?: AbortSignal;
+}
+
+export interface ReadLog {
+  log: MachineLog;
+  notes: LogNote[];
+}
+
+/** One kind of file. `inspect` and `read` may throw IngestFailure; `lib/ingest/index.ts` turns that into a Result. */
+export interface LogFormat {
+  id: LogFormatId;
+  label: string;
+  extensions: readonly string[];
+  looksLike(head: Uint8Array, name: string): boolean;
+  inspect(source: ByteSource, options: InspectOptions): Promise<Inspection>;
+  read(source: ByteSource, mapping: LogMapping, options: ReadOptions): Promise<ReadLog>;
+}
+
+/** Sizes beyond which reading stops with a clear error instead of exhausting the machine. */
+export const READ_LIMITS = {
+  columns: 20_000,
+  records: 5_000_000,
+  /** Readings over all channels: 1.2 GB of Float32. */
+  readings: 300_000_000,
+  rows: 1024,
+  /** Bytes of one line or feature. */
+  lineBytes: 16 * 1024 * 1024,
+  /** Packed bytes of an archive, which is held in memory. */
+  archiveBytes: 512 * 1024 * 1024,
+  unpackedBytes: 2 * 1024 * 1024 * 1024,
+} as const;

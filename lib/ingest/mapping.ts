@@ -1,0 +1,81 @@
+import { z } from "zod";
+import { fail, succeed, type Result } from "@/lib/result";
+import { ingestError, type IngestError } from "@/lib/ingest/ingest-error";
+import type { Inspection } from "@/lib/ingest/log-format";
+import { KNOWN_CHANNELS, type ChannelId } from "@/lib/logs/channel";
+import { UNIT_IDS } from "@/lib/units/unit-table";
+
+/** A channel a column may be mapped to: a known one or `other:<name>`. Derived channels are not logged. */
+export const LoggedChannel = z.custom<ChannelId>(
+  (value) =>
+    typeof value === "string" &&
+    ((KNOWN_CHANNELS as readonly string[]).includes(value) || /^other:[^/\\]{1,80}$/.test(value)),
+  { message: "unknown channel" },
+);
+
+export const MappedColumn = z.object({
+  name: z.string().min(1).max(500),
+  channel: LoggedChannel,
+  /** Row the column belongs to, 1 = leftmost looking forward. Wide files only. */
+  row: z.number().int().min(1).max(1024).optional(),
+  unit: z.enum(UNIT_IDS),
+  /** `local`: the pattern of the time, such as `dd/MM/yyyy HH:mm:ss`; `bu/ac`: the bushel weight, `56 lb`; `row`: `from 0`. */
+  format: z.string().trim().min(1).max(80).optional(),
+});
+export type MappedColumn = z.infer<typeof MappedColumn>;
+
+export const LOG_SHAPES = ["wide", "long", "single"] as const;
+export type LogShape = (typeof LOG_SHAPES)[number];
+
+/** What the columns of a log mean. Columns not listed are not read. */
+export const LogMapping = z.object({
+  columns: z.array(MappedColumn).min(1).max(20_000),
+  shape: z.enum(LOG_SHAPES),
+  /** For easting and northing: `EPSG:32614`, `4326`, `3857`, or a proj4 string. */
+  crs: z.string().trim().min(1).max(500).optional(),
+  /** IANA name for `local` times, such as `America/Chicago`. */
+  timeZone: z.string().trim().min(1).max(80).optional(),
+  /** Name under which to keep this mapping as a recipe. */
+  save: z.string().trim().min(1).max(120).optional(),
+});
+export type LogMapping = z.infer<typeof LogMapping>;
+
+/** A mapping from outside. The error names the column and the rule: `unknown-unit` for a unit, else `mapping-invalid`. */
+export function parseMapping(input: unknown): Result<LogMapping, IngestError> {
+  const parsed = LogMapping.safeParse(input);
+  if (parsed.success) return succeed(parsed.data);
+  const issue = parsed.error.issues[0];
+  const path = issue?.path ?? [];
+  const entry = readEntry(input, path[1]);
+  const name = typeof entry?.name === "string" ? entry.name : undefined;
+  const where = name !== undefined ? `column '${name}'` : `"${path.join(".") || "mapping"}"`;
+  if (path[0] === "columns" && path[2] === "unit") {
+    const message = `Unknown unit "${String(entry?.unit ?? "")}" in ${where}. Use one of: ${UNIT_IDS.join(", ")}.`;
+    return fail(ingestError("unknown-unit", message, { column: name }));
+  }
+  const rule = issue?.message ?? "not a mapping";
+  return fail(
+    ingestError("mapping-invalid", `The mapping cannot be used: ${where}: ${rule}. Correct it and send it again.`, {
+      column: name,
+    }),
+  );
+}
+
+function readEntry(input: unknown, index: PropertyKey | undefined): { name?: unknown; unit?: unknown } | null {
+  if (typeof input !== "object" || input === null || !("columns" in input) || !Array.isArray(input.columns))
+    return null;
+  const entry: unknown = typeof index === "number" ? input.columns[index] : null;
+  return typeof entry === "object" && entry !== null ? entry : null;
+}
+
+/** The header names and shape of a file as one text: equal for files that one recipe fits. */
+export function headerSignature(inspection: Pick<Inspection, "format" | "shape" | "columns">): string {
+  return JSON.stringify([inspection.format, inspection.shape, ...inspection.columns.map((column) => column.name)]);
+}
+
+/** Whether a saved mapping can read this file: same shape, and every column it names is there. */
+export function mappingFits(mapping: LogMapping, inspection: Pick<Inspection, "shape" | "columns">): boolean {
+  if (mapping.shape !== inspection.shape) return false;
+  const names = new Set(inspection.columns.map((column) => column.name));
+  return mapping.columns.every((column) => names.has(column.name));
+}

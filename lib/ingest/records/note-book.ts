@@ -1,0 +1,77 @@
+import type { LogNote } from "@/lib/logs/machine-log";
+
+/** Gathers notes while a file is read: one entry a code (and column), with a count and the first place. */
+export class NoteBook {
+  private readonly entries = new Map<string, { code: string; count: number; firstLine?: number; column?: string }>();
+
+  add(code: string, line?: number, column?: string): void {
+    const key = column === undefined ? code : `${code} ${column}`;
+    const entry = this.entries.get(key);
+    if (entry) entry.count++;
+    else this.entries.set(key, { code, count: 1, firstLine: line, column });
+  }
+
+  /** Sets a note whose count was kept elsewhere; nothing is noted for a count of 0. */
+  set(code: string, count: number, firstLine?: number): void {
+    if (count > 0) this.entries.set(code, { code, count, firstLine });
+  }
+
+  countOf(code: string): number {
+    return this.entries.get(code)?.count ?? 0;
+  }
+
+  firstLineOf(code: string): number | undefined {
+    return this.entries.get(code)?.firstLine;
+  }
+
+  /** The notes, each said by `sayNote`. */
+  list(place: string): LogNote[] {
+    return [...this.entries.values()].map(({ code, count, firstLine, column }) => ({
+      code,
+      count,
+      ...(firstLine === undefined ? {} : { firstLine }),
+      message: sayNote(code, count, { place, firstLine, column }),
+    }));
+  }
+}
+
+interface NotePlace {
+  /** What the file counts in: "line", "feature" or "record". */
+  place: string;
+  firstLine?: number;
+  column?: string;
+}
+
+/** One sentence for each note code. */
+function sayNote(code: string, count: number, { place, firstLine, column }: NotePlace): string {
+  const n = (one: string, many: string) => `${count.toLocaleString("en-US")} ${count === 1 ? one : many}`;
+  const first = firstLine === undefined ? "" : ` The first is ${place} ${firstLine}.`;
+  const records = n("record", "records");
+  const sentences: Record<string, string> = {
+    "ragged-rows": `${n("line", "lines")} did not have as many fields as the header and ${count === 1 ? "was" : "were"} left out.${first}`,
+    "unreadable-value": `${n("cell", "cells")} of column '${column ?? ""}' could not be read as its unit says and ${count === 1 ? "counts" : "count"} as missing.${first}`,
+    "zero-position": `${records} stood at longitude 0, latitude 0, which a receiver writes when it has no fix; ${count === 1 ? "its position counts" : "their positions count"} as missing.${first}`,
+    "no-position": `${records} had no position and cannot be placed on the map.${first}`,
+    "duplicate-times": `${records} carried the same time as the record before.${first}`,
+    "out-of-order": `${records} went back in time; the order of the file was kept.${first}`,
+    "bad-row-number": `${n("line", "lines")} had no usable row number and ${count === 1 ? "was" : "were"} left out; rows are numbered from 1 at the left.${first}`,
+    "time-without-zone": `${n("time", "times")} named no offset from UTC and ${count === 1 ? "was" : "were"} read as UTC; give the mapping a time zone if they are local.${first}`,
+    "working-by-row": "The working state is logged row by row; a record counts as working when any of its rows works.",
+    "pressure-not-force": `Column '${column ?? ""}' is a pressure. It is kept in pascals and never shown as a force, because that needs the cylinder area and the linkage.`,
+    "deleted-records": `${n("record was", "records were")} marked as deleted in the .dbf and left out.${first}`,
+    "null-geometry": `${n("feature", "features")} had no geometry and cannot be placed on the map.${first}`,
+    "part-count-mismatch": `The .shp and .dbf parts disagree by ${records}; only the records found in both were read.`,
+    "no-projection": "The archive has no .prj part; the coordinates look like WGS 84 degrees and were read so.",
+    "decimal-comma": "Numbers in this file are written with a decimal comma.",
+    "no-header":
+      "The first line holds numbers, so the columns have no names; they are called column 1, column 2 and so on.",
+    "units-row": "The line under the header names units and was read so.",
+    "lines-before-header": `${n("line", "lines")} before the header ${count === 1 ? "was" : "were"} passed over.`,
+    "missing-position":
+      "No column was recognised as longitude and latitude, or easting and northing; choose them before the log can be read.",
+    "swapped-positions": "Longitude and latitude look swapped; check which is which.",
+    "far-from-field":
+      "The positions lie far from the field; check which column is longitude, which latitude, and the projection.",
+  };
+  return sentences[code] ?? `${code}: ${count}.${first}`;
+}
