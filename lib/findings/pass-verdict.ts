@@ -1,0 +1,165 @@
+import { measureFrameBalance, type FrameBalance } from "@/lib/ballast/frame-balance";
+import type { Finding } from "@/lib/findings/finding";
+import { findOddRows } from "@/lib/findings/find-odd-rows";
+import { findAtLimit, findContactLost, findOverTarget, findUnderTarget } from "@/lib/findings/find-target-shares";
+import { findWeight } from "@/lib/findings/find-weight";
+import { makeFinding } from "@/lib/findings/make-finding";
+import { channelEvidence } from "@/lib/findings/row-evidence";
+import { rowsFrom, VERDICT_THRESHOLDS, type VerdictInput } from "@/lib/findings/verdict-input";
+import type { PlacedLog } from "@/lib/logs/placed-log";
+import { rowDistances } from "@/lib/rows/row-distances";
+import { MIN_ROWS_TO_RANK } from "@/lib/statistics/row-deviation";
+
+export interface PassVerdict {
+  /** Rows under target (margin < target - deadband) on at least 5 % of their distance. */
+  rowsUnderTarget: number[];
+  /** Rows at their force limit on at least 5 % of their distance. */
+  rowsAtLimit: number[];
+  weight: Pick<FrameBalance, "headroomN" | "shareLiftedM2" | "state" | "missing" | "liftOffForcePerRowN">;
+  /** The most important first. */
+  findings: Finding[];
+  /** Ids of the at most three findings to say first. */
+  headline: string[];
+  /** Rows that stand out from the others in margin, force or opener resistance. */
+  rowsStandingOut: number[];
+  /** What this log or machine would have to tell for a fuller verdict, in plain words. */
+  missing: string[];
+  /** Share of readings where opener resistance is only a lower bound; null where it is unknown. */
+  resistanceCensoredShare: number | null;
+  thresholds: typeof VERDICT_THRESHOLDS;
+}
+
+const ORDER: Record<Finding["severity"], number> = { act: 0, look: 1, ok: 2 };
+/** Within a severity: what is wrong with named rows, then with the machine, then what cannot be said. */
+const KIND_ORDER: Finding["kind"][] = [
+  "row-stands-out",
+  "rows-under-target",
+  "weight-short",
+  "contact-lost",
+  "rows-side-by-side",
+  "rows-at-limit",
+  "target-held",
+  "rows-alike",
+  "weight-enough",
+  "over-target",
+  "wheel-tracks",
+  "cannot-judge",
+  "weight-unknown",
+];
+
+/** What can be said about a log at once: which rows, which weight, what to look at, and what the log cannot tell. */
+export function passVerdict(placed: PlacedLog, options: { distances?: Float32Array } = {}): PassVerdict {
+  const distances = options.distances ?? rowDistances(placed);
+  const input: VerdictInput = {
+    placed,
+    distances,
+    margin: channelEvidence(placed, "margin", distances),
+    downforce: channelEvidence(placed, "downforce", distances),
+    resistance: channelEvidence(placed, "resistance", distances),
+    contact: channelEvidence(placed, "contact", distances),
+    balance: measureFrameBalance(placed, distances),
+  };
+  const odd = findOddRows(input);
+  const missing = missingInputs(input);
+  const findings = [
+    ...odd,
+    ...sayAlike(input, odd),
+    ...findUnderTarget(input),
+    ...findAtLimit(input),
+    ...findContactLost(input),
+    ...findOverTarget(input),
+    ...findWeight(input),
+    ...sayMissing(missing),
+  ].sort((a, b) => ORDER[a.severity] - ORDER[b.severity] || kindRank(a) - kindRank(b) || size(b) - size(a));
+  const { headroomN, shareLiftedM2, state, liftOffForcePerRowN } = input.balance;
+  return {
+    rowsUnderTarget: rowsFrom(input.margin, "shareUnderTarget", VERDICT_THRESHOLDS.underTargetShare).rows,
+    rowsAtLimit: rowsFrom(input.downforce, "shareAtLimit", VERDICT_THRESHOLDS.atLimitShare).rows,
+    weight: { headroomN, shareLiftedM2, state, missing: input.balance.missing, liftOffForcePerRowN },
+    findings,
+    headline: chooseHeadline(findings),
+    rowsStandingOut: [...new Set(odd.filter((one) => one.kind !== "wheel-tracks").flatMap((one) => one.rows))].sort(
+      (a, b) => a - b,
+    ),
+    missing,
+    resistanceCensoredShare: input.resistance?.channel.censoredShare ?? null,
+    thresholds: VERDICT_THRESHOLDS,
+  };
+}
+
+function kindRank(finding: Finding): number {
+  return KIND_ORDER.indexOf(finding.kind);
+}
+
+function size(finding: Finding): number {
+  return Math.abs(finding.value ?? 0);
+}
+
+/** At most three, each of another kind. */
+function chooseHeadline(findings: Finding[]): string[] {
+  const firstOfKind = findings.filter((one, k) => findings.findIndex((other) => other.kind === one.kind) === k);
+  return firstOfKind.slice(0, 3).map((one) => one.id);
+}
+
+/** What the minimum inputs of each statement lack, in plain words. */
+function missingInputs({ placed, margin, downforce, contact }: VerdictInput): string[] {
+  const { machine, log, passes } = placed;
+  const perRow = margin ?? downforce ?? contact;
+  const averaged = log.channels.some((channel) => ["margin", "downforce", "contact"].includes(channel.id));
+  return [
+    ...(perRow
+      ? []
+      : [
+          averaged
+            ? "The file is row-averaged: rows cannot be ranked."
+            : "The log has no force, margin or contact of each row: rows cannot be judged.",
+        ]),
+    ...(perRow && log.rows < MIN_ROWS_TO_RANK
+      ? [`With ${log.rows} rows none can be ranked; it needs ${MIN_ROWS_TO_RANK}.`]
+      : []),
+    ...(perRow && passes.length < VERDICT_THRESHOLDS.minPassesToRank
+      ? [
+          `With ${passes.length} ${passes.length === 1 ? "pass" : "passes"} a row cannot be told from the ground it ran on; it needs ${VERDICT_THRESHOLDS.minPassesToRank}.`,
+        ]
+      : []),
+    ...(machine ? [] : ["Nobody has said which machine made the log: its target, limits and weights are unknown."]),
+    ...(machine && margin && machine.targetMarginN === undefined
+      ? ["The machine has no target margin: rows under target cannot be named."]
+      : []),
+    ...(machine && downforce && machine.maxDownforceN === undefined
+      ? ["The machine has no force limit: rows at their limit cannot be named."]
+      : []),
+  ];
+}
+
+function sayMissing(missing: string[]): Finding[] {
+  if (missing.length === 0) return [];
+  return [
+    makeFinding({
+      kind: "cannot-judge",
+      severity: "look",
+      sentenceTemplate: missing.join(" "),
+      confidence: "low",
+      method: "Compared with the least that each statement needs.",
+      check: "Complete the machine's description, or log force and margin for each row.",
+    }),
+  ];
+}
+
+/** Says that no row stands out, where rows could be ranked at all. */
+function sayAlike({ margin, downforce, resistance, placed }: VerdictInput, odd: Finding[]): Finding[] {
+  const ranked = [margin, downforce, resistance].filter((one) =>
+    one?.statistics.items.some((item) => item.deviationZ !== null),
+  );
+  const blamed = odd.some((one) => one.kind !== "wheel-tracks");
+  if (ranked.length === 0 || blamed || placed.passes.length < VERDICT_THRESHOLDS.minPassesToRank) return [];
+  return [
+    makeFinding({
+      kind: "rows-alike",
+      severity: "ok",
+      sentenceTemplate: "No row stands out from the others.",
+      method: "Robust z of each row against the others at each record; limit 3.5 and 5 % of the median of all rows.",
+      check: "Nothing to look at on single rows.",
+    }),
+  ];
+}

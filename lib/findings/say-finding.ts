@@ -1,0 +1,29 @@
+import type { Finding } from "@/lib/findings/finding";
+import { formatQuantity } from "@/lib/units/format-quantity";
+
+export type UnitSystem = "metric" | "imperial";
+
+/** A share in words: whole percent, one decimal under 10 %. */
+export function sayShare(share: number): string {
+  const percent = 100 * share;
+  return `${percent < 9.95 && percent > 0 ? percent.toFixed(1) : percent.toFixed(0)} %`;
+}
+
+function sayValue({ value, unit }: { value: number; unit: string }, system: UnitSystem): string {
+  if (unit === "fraction") return sayShare(value);
+  if (unit === "1") return String(Math.round(value));
+  return formatQuantity(value, unit, system).text;
+}
+
+/** Puts the numbers into a template, in the reader's units. A name without a value is left standing, so that it is seen. */
+export function sayTemplate(template: string, values: Finding["values"], system: UnitSystem): string {
+  return template.replace(/\{(\w+)\}/g, (whole, name: string) => {
+    const value = values[name];
+    return value ? sayValue(value, system) : whole;
+  });
+}
+
+/** The sentence of a finding in the reader's units. */
+export function sayFinding(finding: Pick<Finding, "sentenceTemplate" | "values">, system: UnitSystem): string {
+  return sayTemplate(finding.sentenceTemplate, finding.values, system);
+}
