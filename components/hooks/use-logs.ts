@@ -2,7 +2,17 @@
 
 import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import { queryKeys } from "@/components/hooks/query-keys";
-import { cancelLog, deleteLog, getColumns, getLog, getVerdict, listLogs, putMapping, retryLog } from "@/lib/api/client";
+import {
+  cancelLog,
+  changeLog,
+  deleteLog,
+  getColumns,
+  getLog,
+  getVerdict,
+  listLogs,
+  putMapping,
+  retryLog,
+} from "@/lib/api/client";
 import type { LogMapping } from "@/lib/ingest/mapping";
 import { isWorking } from "@/components/upload/log-state";
 
@@ -43,10 +53,19 @@ export function useLogActions(fieldId: string) {
   };
 }
 
-export function usePutMapping(logId: string) {
+export interface ConfirmedMapping {
+  mapping: LogMapping;
+  machineId: string | null;
+}
+
+/** Sets the machine first, so that the reading the mapping starts already knows it. */
+export function usePutMapping(logId: string, knownMachineId: string | null | undefined) {
   const client = useQueryClient();
   return useMutation({
-    mutationFn: (mapping: LogMapping) => putMapping(logId, mapping),
+    mutationFn: async ({ mapping, machineId }: ConfirmedMapping) => {
+      if (machineId !== knownMachineId) await changeLog(logId, { machineId });
+      await putMapping(logId, mapping);
+    },
     onSuccess: () => client.invalidateQueries({ queryKey: ["logs", logId] }),
   });
 }

@@ -2,7 +2,7 @@ import { z } from "zod";
 import type { LogMapping } from "@/lib/ingest/mapping";
 import { requestJson, requestNothing } from "@/lib/api/request-json";
 import { Field, FieldList, type FieldInput, type FieldPatch } from "@/lib/schemas/fields";
-import { CoverageBody, Log, LogColumns, LogList, PassList, VerdictBody } from "@/lib/schemas/logs";
+import { CoverageBody, Log, LogColumns, LogList, LogPatch, PassList, VerdictBody } from "@/lib/schemas/logs";
 import { MachineList, MachineReply } from "@/lib/schemas/machines";
 import type { Machine } from "@/lib/machines/machine";
 import {
@@ -57,6 +57,8 @@ export const deleteMachine = (machineId: string) =>
 export const listLogs = (fieldId: string, limit = 500) =>
   requestJson(LogList, `${ROOT}/fields/${fieldId}/logs?limit=${limit}`);
 export const getLog = (logId: string) => requestJson(Log, `${ROOT}/logs/${logId}`);
+export const changeLog = (logId: string, body: z.input<typeof LogPatch>) =>
+  requestJson(Log, `${ROOT}/logs/${logId}`, { method: "PATCH", body });
 export const deleteLog = (logId: string) => requestNothing(`${ROOT}/logs/${logId}`, { method: "DELETE" });
 export const cancelLog = (logId: string) => requestNothing(`${ROOT}/logs/${logId}/cancel`, { method: "POST" });
 export const retryLog = (logId: string) => requestNothing(`${ROOT}/logs/${logId}/retry`, { method: "POST" });

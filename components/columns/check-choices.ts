@@ -1,0 +1,86 @@
+import type { Choices, ColumnChoice } from "@/components/columns/column-choice";
+import { channelWords, isRowable } from "@/lib/ingest/channel-quantities";
+import type { LogShape } from "@/lib/ingest/mapping";
+
+export interface ChoiceCheck {
+  /** Columns nobody has decided or looked at yet. */
+  waiting: string[];
+  /** What is wrong with a column, by its name. */
+  problems: Record<string, string>;
+  /** What is wrong with the whole. */
+  general: string[];
+  needsCrs: boolean;
+  needsTimeZone: boolean;
+}
+
+export interface ChoiceExtras {
+  crs: string;
+  timeZone: string;
+}
+
+function readsAs(choices: Choices, channel: string): boolean {
+  return Object.values(choices).some((choice) => choice.use === "channel" && choice.channel === channel);
+}
+
+function problemOf(choice: ColumnChoice, shape: LogShape): string | null {
+  if (choice.use !== "channel" || choice.channel === null) return null;
+  if (choice.unit === null) return "Choose the unit.";
+  if (choice.unit === "local" && choice.format.trim() === "")
+    return "Write how the time is written, such as dd/MM/yyyy HH:mm:ss.";
+  if (choice.unit === "bu/ac" && !(Number.parseFloat(choice.format) > 0))
+    return "Write what a bushel weighs, such as 56 lb.";
+  if (choice.row !== null && !isRowable(choice.channel)) return `The ${channelWords(choice.channel)} has no rows.`;
+  return choice.row !== null && shape !== "wide" ? "Only a file with one column a row has row numbers here." : null;
+}
+
+/** Two columns may not both be the same thing of the same row. */
+function findDoubles(choices: Choices): Record<string, string> {
+  const seen = new Map<string, string>();
+  const problems: Record<string, string> = {};
+  for (const [name, choice] of Object.entries(choices)) {
+    if (choice.use !== "channel" || choice.channel === null) continue;
+    const key = `${choice.channel}|${choice.row ?? ""}`;
+    const other = seen.get(key);
+    const what = `the ${channelWords(choice.channel)}${choice.row === null ? "" : ` of row ${choice.row}`}`;
+    if (other !== undefined) problems[name] = `Column ${other} is ${what} already. Change one of them.`;
+    else seen.set(key, name);
+  }
+  return problems;
+}
+
+function findGeneral(choices: Choices, shape: LogShape, extras: ChoiceExtras): string[] {
+  const general: string[] = [];
+  const degrees = readsAs(choices, "longitude") && readsAs(choices, "latitude");
+  const metres = readsAs(choices, "easting") && readsAs(choices, "northing");
+  if (!degrees && !metres) {
+    general.push("No columns say where the machine was. Choose longitude and latitude, or easting and northing.");
+  }
+  if (metres && !degrees && extras.crs.trim() === "") {
+    general.push("Easting and northing need their coordinate system, such as EPSG:32614.");
+  }
+  if (shape === "long" && !readsAs(choices, "row")) {
+    general.push("This file has one line a row: say which column is the row number.");
+  }
+  return general;
+}
+
+/** Everything between the choices and a mapping that can be read. */
+export function checkChoices(choices: Choices, shape: LogShape, extras: ChoiceExtras): ChoiceCheck {
+  const entries = Object.entries(choices);
+  const problems = findDoubles(choices);
+  for (const [name, choice] of entries) {
+    const problem = choice.seen ? problemOf(choice, shape) : null;
+    if (problem) problems[name] = problem;
+  }
+  const needsTimeZone = entries.some(([, choice]) => choice.use === "channel" && choice.unit === "local");
+  const general = findGeneral(choices, shape, extras);
+  if (needsTimeZone && extras.timeZone.trim() === "")
+    general.push("Local times need their time zone, such as America/Chicago.");
+  return {
+    waiting: entries.filter(([, choice]) => !choice.seen || choice.use === "undecided").map(([name]) => name),
+    problems,
+    general,
+    needsCrs: readsAs(choices, "easting") || readsAs(choices, "northing"),
+    needsTimeZone,
+  };
+}

@@ -1,0 +1,43 @@
+"use client";
+
+import { useRouter } from "next/navigation";
+import { ColumnsForm } from "@/components/columns/columns-form";
+import { useColumns, useLog, usePutMapping } from "@/components/hooks/use-logs";
+import { useMachines } from "@/components/hooks/use-machines";
+import { Loading } from "@/components/ui/loading";
+import { Notice } from "@/components/ui/notice";
+import { describeFailure } from "@/lib/api/api-problem";
+
+export interface ColumnsScreenProps {
+  /** `/org/fields/fld_…/logs/log_…`. */
+  logPath: string;
+  logId: string;
+}
+
+/** Asks for what was found in the file, and sends back what a person says it means. */
+export function ColumnsScreen({ logPath, logId }: ColumnsScreenProps) {
+  const router = useRouter();
+  const log = useLog(logId);
+  const columns = useColumns(logId);
+  const machines = useMachines();
+  const save = usePutMapping(logId, log.data?.machineId);
+  const failed = [log, columns, machines].find((query) => query.isError);
+  if (failed) {
+    return (
+      <Notice state="act" urgent>
+        {describeFailure(failed.error)}
+      </Notice>
+    );
+  }
+  if (!log.data || !columns.data || !machines.data) return <Loading what="the columns of the file" />;
+  return (
+    <ColumnsForm
+      log={log.data}
+      found={columns.data}
+      machines={machines.data.items}
+      pending={save.isPending || save.isSuccess}
+      failure={save.error}
+      onSave={(mapping, machineId) => save.mutate({ mapping, machineId }, { onSuccess: () => router.push(logPath) })}
+    />
+  );
+}

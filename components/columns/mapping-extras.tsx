@@ -1,0 +1,74 @@
+"use client";
+
+import { useId, useMemo } from "react";
+import { SelectField, TextField } from "@/components/ui/form-field";
+import type { MachineReply } from "@/lib/schemas/machines";
+
+export interface Extras {
+  crs: string;
+  timeZone: string;
+  save: string;
+  machineId: string;
+}
+
+export interface MappingExtrasProps {
+  extras: Extras;
+  onChange: (patch: Partial<Extras>) => void;
+  needsCrs: boolean;
+  needsTimeZone: boolean;
+  machines: MachineReply[];
+}
+
+/** What the columns alone do not say: machine, time zone, coordinate system; and a name to keep it all under. */
+export function MappingExtras({ extras, onChange, needsCrs, needsTimeZone, machines }: MappingExtrasProps) {
+  const zonesId = useId();
+  const zones = useMemo(() => (needsTimeZone ? Intl.supportedValuesOf("timeZone") : []), [needsTimeZone]);
+  return (
+    <div className="grid gap-5 md:grid-cols-2">
+      <SelectField
+        label="Machine that made the log"
+        hint="Its row spacing and antenna place the rows on the ground."
+        value={extras.machineId}
+        onChange={(event) => onChange({ machineId: event.target.value })}
+      >
+        <option value="">Not chosen: rows cannot be placed sideways</option>
+        {machines.map((machine) => (
+          <option key={machine.id} value={machine.id}>
+            {machine.name}
+          </option>
+        ))}
+      </SelectField>
+      {needsTimeZone ? (
+        <div>
+          <TextField
+            label="Time zone of the local times"
+            hint="Such as America/Chicago. Daylight saving is taken into account."
+            list={zonesId}
+            value={extras.timeZone}
+            onChange={(event) => onChange({ timeZone: event.target.value })}
+          />
+          <datalist id={zonesId}>
+            {zones.map((zone) => (
+              <option key={zone} value={zone} />
+            ))}
+          </datalist>
+        </div>
+      ) : null}
+      {needsCrs ? (
+        <TextField
+          label="Coordinate system of easting and northing"
+          hint="Such as EPSG:32614 (UTM zone 14 north), or a proj4 text."
+          value={extras.crs}
+          onChange={(event) => onChange({ crs: event.target.value })}
+        />
+      ) : null}
+      <TextField
+        label="Keep these meanings as a recipe"
+        hint="Give it a name, and the next file with the same columns is read without asking. Leave empty to keep nothing."
+        value={extras.save}
+        maxLength={120}
+        onChange={(event) => onChange({ save: event.target.value })}
+      />
+    </div>
+  );
+}
