@@ -1,0 +1,9 @@
+/** Where the ground picture comes from; both null for the offline default. Passed from the server, so one build fits all. */
+export interface BasemapConfig {
+  /** A MapLibre style. */
+  styleUrl: string | null;
+  /** Raster tiles, with {z}, {x} and {y}. */
+  tilesUrl: string | null;
+}
+
+export const OFFLINE_BASEMAP: BasemapConfig = { styleUrl: null, tilesUrl: null };

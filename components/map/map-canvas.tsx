@@ -1,0 +1,103 @@
+"use client";
+
+import "maplibre-gl/dist/maplibre-gl.css";
+import type { Map as MapLibreMap } from "maplibre-gl";
+import { useEffect, useRef, useState, type ReactNode } from "react";
+import { baseStyle } from "@/components/map/base-style";
+import type { BasemapConfig } from "@/components/map/basemap-config";
+import { loadMapLibre } from "@/components/map/load-maplibre";
+import { MapButtons } from "@/components/map/map-buttons";
+import { addOverlays } from "@/components/map/overlay-layers";
+import type { Bounds, MapView } from "@/lib/map-state/field-book-store";
+
+export interface MapCanvasProps {
+  basemap: BasemapConfig;
+  /** Where the map opens; it never moves by itself afterwards. */
+  bounds: Bounds;
+  view?: MapView | null;
+  /** Read to those who cannot see the map: what it shows and where the same is written in words. */
+  description: string;
+  /** Called with the map once it can be drawn on, and with null when it is gone. */
+  onMap: (map: MapLibreMap | null) => void;
+  children?: ReactNode;
+}
+
+const FIT_PADDING_PX = 28;
+
+/** A map with our ground, buttons and keys. What lies on it is drawn by whoever gets it through `onMap`. */
+export function MapCanvas({ basemap, bounds, view, description, onMap, children }: MapCanvasProps) {
+  const container = useRef<HTMLDivElement>(null);
+  const [map, setMap] = useState<MapLibreMap | null>(null);
+  const [trouble, setTrouble] = useState(false);
+  // Only the first values count: the map never moves because a parent was drawn again.
+  const opening = useRef({ basemap, bounds, view, onMap });
+  useEffect(() => {
+    const start = opening.current;
+    let gone = false;
+    let made: MapLibreMap | null = null;
+    openMap(container.current!, start).then(
+      (ready) => {
+        if (gone) return ready.remove();
+        made = ready;
+        setMap(ready);
+        start.onMap(ready);
+      },
+      () => setTrouble(true),
+    );
+    return () => {
+      gone = true;
+      start.onMap(null);
+      made?.remove();
+    };
+  }, []);
+  return (
+    <div className="relative h-full min-h-0 overflow-hidden bg-sheet">
+      <div className="absolute inset-0">
+        <div ref={container} role="region" aria-label="Map" aria-describedby="map-words" className="size-full" />
+      </div>
+      <p id="map-words" className="sr-only">
+        {description}
+      </p>
+      {trouble ? (
+        <p className="absolute inset-x-6 top-6 text-ink-soft" role="alert">
+          This browser cannot draw the map (it has no WebGL 2). The unrolled pass and the line-up show the same
+          readings.
+        </p>
+      ) : null}
+      {map ? <MapButtons map={map} onWhole={() => fitBounds(map, bounds)} /> : null}
+      {children}
+    </div>
+  );
+}
+
+/** Shows bounds at once, without flying. */
+export function fitBounds(map: MapLibreMap, bounds: Bounds): void {
+  map.fitBounds(bounds, { padding: FIT_PADDING_PX, maxZoom: 20, animate: false });
+}
+
+async function openMap(
+  container: HTMLElement,
+  { basemap, bounds, view }: Pick<MapCanvasProps, "basemap" | "bounds" | "view">,
+): Promise<MapLibreMap> {
+  const maplibre = await loadMapLibre();
+  const opening = view
+    ? { center: [view.longitude, view.latitude] as [number, number], zoom: view.zoom }
+    : { bounds, fitBoundsOptions: { padding: FIT_PADDING_PX } };
+  const map = new maplibre.Map({
+    container,
+    style: basemap.styleUrl ?? baseStyle(basemap),
+    ...opening,
+    maxZoom: 22,
+    attributionControl: basemap.styleUrl || basemap.tilesUrl ? { compact: true } : false,
+    dragRotate: false,
+    pitchWithRotate: false,
+    touchPitch: false,
+    fadeDuration: 0,
+  });
+  map.touchZoomRotate.disableRotation();
+  map.keyboard.disableRotation();
+  map.getCanvas().setAttribute("aria-label", "Map. Arrow keys move it, plus and minus zoom.");
+  await new Promise<void>((resolve) => map.once("load", () => resolve()));
+  addOverlays(map);
+  return map;
+}

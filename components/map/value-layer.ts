@@ -1,0 +1,67 @@
+import type { ExpressionSpecification, Map as MapLibreMap } from "maplibre-gl";
+import { colourStops } from "@/lib/legend/colour-stops";
+import type { TileJson } from "@/lib/schemas/logs";
+
+const SOURCE = "values";
+const LAYER = "values";
+
+/**
+ * Class colours of value tiles. The source is told to decode to the bare code (red x 256 + green), so every stop is a whole
+ * number the shader holds exactly; edges are turned into codes here.
+ */
+export function colourExpression(
+  edges: readonly number[],
+  colours: readonly string[],
+  encoding: TileJson["encoding"],
+): ExpressionSpecification {
+  const stops = colourStops(edges, colours, encoding).flat();
+  return ["interpolate", ["linear"], ["elevation"], ...stops] as ExpressionSpecification;
+}
+
+export interface ShownValues {
+  tileJson: TileJson;
+  colour: ExpressionSpecification;
+  /** The layer the values go under. */
+  beforeLayer: string;
+}
+
+/** Shows a channel's tiles in class colours, in place of the ones shown before. */
+export function showValues(map: MapLibreMap, { tileJson, colour, beforeLayer }: ShownValues): void {
+  hideValues(map);
+  map.addSource(SOURCE, {
+    type: "raster-dem",
+    encoding: "custom",
+    redFactor: 256,
+    greenFactor: 1,
+    blueFactor: 0,
+    baseShift: 0,
+    tiles: tileJson.tiles.map(absoluteAddress),
+    tileSize: 512,
+    minzoom: tileJson.minzoom,
+    maxzoom: tileJson.maxzoom,
+  });
+  map.addLayer(
+    {
+      id: LAYER,
+      type: "color-relief",
+      source: SOURCE,
+      paint: { "color-relief-color": colour, resampling: "nearest" },
+    },
+    beforeLayer,
+  );
+}
+
+export function hideValues(map: MapLibreMap): void {
+  if (map.getLayer(LAYER)) map.removeLayer(LAYER);
+  if (map.getSource(SOURCE)) map.removeSource(SOURCE);
+}
+
+/** New colours for the tiles already here: no request. */
+export function recolourValues(map: MapLibreMap, colour: ExpressionSpecification): void {
+  if (map.getLayer(LAYER)) map.setPaintProperty(LAYER, "color-relief-color", colour);
+}
+
+/** The worker that fetches tiles has no page to be relative to. */
+function absoluteAddress(address: string): string {
+  return address.startsWith("/") ? `${window.location.origin}${address}` : address;
+}

@@ -1,0 +1,79 @@
+import type { PassReadings } from "@/lib/schemas/logs";
+
+/** The readings of one pass laid out for drawing and hit tests. Per record unless named per row; NaN is missing. */
+export interface PassTrack {
+  pass: number;
+  firstRecord: number;
+  channel: string;
+  unit: string;
+  rows: number;
+  records: number;
+  /** `values[record * rows + (row - 1)]`. */
+  values: Float32Array;
+  timesS: Float64Array;
+  /** End of each record's cell along the pass, metres from where the first cell begins. */
+  endsM: Float64Array;
+  lengthM: number;
+  longitude: Float64Array;
+  latitude: Float64Array;
+  headingDeg: Float64Array;
+  speedMps: Float64Array;
+  flags: Uint32Array;
+  rowOffsetM: number[];
+  rowForwardM: number[];
+  rowWidthM: number[];
+}
+
+const NUMBER_OR_NAN = (value: number | null | undefined) => value ?? NaN;
+
+/**
+ * Lays out what the readings endpoint answers. The first record's cell reaches back as far as the next one reaches on
+ * (the weight rule of the statistics), so the unrolled pass begins there.
+ */
+export function createPassTrack(readings: PassReadings): PassTrack {
+  const { records, rows } = readings;
+  const values = new Float32Array(records * rows);
+  readings.values.forEach((row, index) => {
+    for (let record = 0; record < records; record += 1) values[record * rows + index] = NUMBER_OR_NAN(row[record]);
+  });
+  const leadM = (readings.distancesM[1] ?? 0) - (readings.distancesM[0] ?? 0);
+  const startM = (readings.distancesM[0] ?? 0) - leadM;
+  const endsM = Float64Array.from(readings.distancesM, (distance) => distance - startM);
+  return {
+    pass: readings.pass ?? 0,
+    firstRecord: readings.firstRecord ?? 0,
+    channel: readings.channel,
+    unit: readings.unit,
+    rows,
+    records,
+    values,
+    timesS: Float64Array.from(readings.timesS, NUMBER_OR_NAN),
+    endsM,
+    lengthM: endsM[records - 1] ?? 0,
+    longitude: Float64Array.from(readings.positions, ([longitude]) => longitude),
+    latitude: Float64Array.from(readings.positions, ([, latitude]) => latitude),
+    headingDeg: Float64Array.from({ length: records }, (_, i) => NUMBER_OR_NAN(readings.headingsDeg?.[i])),
+    speedMps: Float64Array.from({ length: records }, (_, i) => NUMBER_OR_NAN(readings.speedsMps?.[i])),
+    flags: Uint32Array.from({ length: records }, (_, i) => readings.flags?.[i] ?? 0),
+    rowOffsetM: readings.rowOffsetsM ?? [],
+    rowForwardM: readings.rowForwardM ?? [],
+    rowWidthM: readings.rowWidthsM ?? [],
+  };
+}
+
+/** The record whose cell holds a distance along the pass, within the pass's ends. */
+export function recordAtDistance(track: PassTrack, distanceM: number): number {
+  let low = 0;
+  let high = track.records - 1;
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if (track.endsM[middle]! > distanceM) high = middle;
+    else low = middle + 1;
+  }
+  return Math.max(0, low);
+}
+
+/** Where a record's cell begins and ends along the pass. */
+export function recordSpanM(track: PassTrack, record: number): [fromM: number, toM: number] {
+  return [record > 0 ? track.endsM[record - 1]! : 0, track.endsM[record] ?? 0];
+}
