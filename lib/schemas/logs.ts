@@ -198,6 +198,25 @@ export const VerdictBody = z
   .loose();
 export type VerdictBody = z.infer<typeof VerdictBody>;
 
+/** A whole log at a glance: passes end to end in time order, squeezed into `columns` columns. */
+export const LogOverview = z.object({
+  channel: z.string(),
+  unit: z.string(),
+  rows: z.number().int(),
+  columns: z.number().int(),
+  /** Columns `from` up to and without `to` belong to the pass. */
+  passes: z.array(z.object({ pass: z.number().int(), from: z.number().int(), to: z.number().int() })),
+  /** `[[row 1 ...], ...]`: distance-weighted means of what each column covers. */
+  values: z.array(z.array(NullableNumber)),
+  /** Equal bins of all readings. */
+  histogram: z.object({ minimum: z.number(), maximum: z.number(), counts: z.array(z.number().int()) }),
+  /** What the machine was set to; null where nobody said. */
+  targetMarginN: NullableNumber,
+  marginDeadbandN: NullableNumber,
+  maxDownforceN: NullableNumber,
+});
+export type LogOverview = z.infer<typeof LogOverview>;
+
 export const ReadingAt = z.object({
   pass: z.number().int(),
   record: z.number().int(),
