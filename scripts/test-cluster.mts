@@ -7,5 +7,5 @@ if (process.argv[2] === "stop") {
   stopCluster(TEST_CLUSTER);
 } else {
   const cluster = await startCluster({ dataDir: TEST_CLUSTER, purpose: "test" });
-  console.log(`TEST_ADMIN_URL=${cluster.adminUrl("postgres")}`);
+  console.log(`TEST_DATABASE_ADMIN_URL=${cluster.adminUrl("postgres")}`);
 }

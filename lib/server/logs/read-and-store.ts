@@ -1,0 +1,122 @@
+import { withOrganisation } from "@/db/client";
+import { endJobs } from "@/db/queries/jobs";
+import { saveLogResult } from "@/db/queries/log-results";
+import { changeLog, findFieldOfLogs, findMachineOfLog, type LogRow } from "@/db/queries/logs";
+import { writeLogVersion } from "@/db/queries/system/log-versions";
+import type { Inspection } from "@/lib/ingest/log-format";
+import type { Seeder } from "@/lib/machines/machine";
+import type { Boundary } from "@/lib/schemas/geometry";
+import type { BuiltPackage } from "@/lib/server/logs/built-package";
+import { chooseMapping, type ChosenMapping } from "@/lib/server/logs/choose-mapping";
+import { LogFailure, LogInterrupted } from "@/lib/server/logs/log-failure";
+import type { LogProgress } from "@/lib/server/logs/log-progress";
+import { toPlacedBody } from "@/lib/server/logs/placed-body";
+import type { ThreadPool } from "@/lib/server/logs/thread-pool";
+import { workerScope } from "@/lib/server/logs/worker-scope";
+
+/**
+ * From the stored file to a stored version, or to the question what the columns mean.
+ * @throws LogFailure for a file that cannot be read, LogInterrupted when told to stop
+ */
+export async function readAndStore(log: LogRow, threads: ThreadPool, progress: LogProgress): Promise<void> {
+  const context = await readContext(log);
+  await threads.use(async (thread) => {
+    const ask = {
+      signal: progress.signal,
+      onProgress: (stage: string, share: number) => progress.tell(stage, share, share < 0.5 ? "reading" : "building"),
+    };
+    progress.tell("Looking at the columns", 0.01);
+    const file = fileOf(log);
+    const inspected = await thread.inspect({ file, near: context.near }, ask);
+    if (!inspected.ok) throw new LogFailure(inspected.error);
+    const chosen = await chooseMapping(log, inspected.value);
+    await keepInspection(log, inspected.value, chosen);
+    if (!chosen) return waitForMapping(log, inspected.value, progress);
+    progress.tell("Reading the records", 0.05);
+    const { machine, boundary } = context;
+    const built = await thread.read({ file, mapping: chosen.mapping, machine, boundary }, ask);
+    if (!built.ok) throw new LogFailure(built.error);
+    await store(log, built.value, { machine, progress });
+  });
+}
+
+function fileOf({ organisationId, sha256, fileName, fileBytes }: LogRow) {
+  return { organisationId, sha256, fileName, fileBytes };
+}
+
+interface LogContext {
+  machine: Seeder | null;
+  boundary: Boundary | null;
+  near: { longitude: number; latitude: number } | null;
+}
+
+async function readContext(log: LogRow): Promise<LogContext> {
+  const scope = workerScope(log.organisationId);
+  return withOrganisation(scope, async (tx) => {
+    const field = await findFieldOfLogs(tx, scope, log.fieldId);
+    const machine = log.machineId ? await findMachineOfLog(tx, scope, log.machineId) : null;
+    const ring =
+      field?.boundary?.type === "Polygon" ? field.boundary.coordinates[0] : field?.boundary?.coordinates[0]?.[0];
+    const corner = ring?.[0];
+    return {
+      machine: machine?.kind === "seeder" ? machine : null,
+      boundary: field?.boundary ?? null,
+      near: corner ? { longitude: corner[0] ?? 0, latitude: corner[1] ?? 0 } : null,
+    };
+  });
+}
+
+/** What was found in the file, kept under version 0: it belongs to the file, not to one reading of it. */
+async function keepInspection(log: LogRow, inspection: Inspection, chosen: ChosenMapping | null): Promise<void> {
+  const scope = workerScope(log.organisationId);
+  await withOrganisation(scope, async (tx) => {
+    await saveLogResult(tx, scope, { logId: log.id, version: 0, kind: "columns", body: inspection });
+    if (chosen) await changeLog(tx, scope, log.id, { mapping: chosen.mapping, recipeId: chosen.recipeId });
+  });
+}
+
+async function waitForMapping(log: LogRow, inspection: Inspection, progress: LogProgress): Promise<void> {
+  await progress.end();
+  const scope = workerScope(log.organisationId);
+  await withOrganisation(scope, async (tx) => {
+    const stage = "Waiting for you to confirm what the columns mean";
+    await changeLog(tx, scope, log.id, { status: "needs-mapping", stage, progress: 0, notes: inspection.notes });
+    await endJobs(tx, scope, { subject: log.id, state: "done" });
+  });
+}
+
+async function store(
+  log: LogRow,
+  built: BuiltPackage,
+  context: { machine: Seeder | null; progress: LogProgress },
+): Promise<void> {
+  const { progress } = context;
+  progress.tell("Storing the readings", 0.85, "building");
+  const isStored = await writeLogVersion({
+    organisationId: log.organisationId,
+    logId: log.id,
+    version: log.version + 1,
+    placed: built.placed,
+    results: [...built.results, { kind: "placed", body: toPlacedBody(built.placed) }],
+    change: {
+      ...built.summary,
+      notes: built.notes,
+      machineBody: context.machine,
+      status: "ready",
+      stage: "Ready",
+      progress: 1,
+      error: null,
+    },
+    onProgress: (share) => {
+      progress.signal.throwIfAborted();
+      progress.tell("Storing the readings", 0.85 + 0.14 * share, "building");
+    },
+    beforeSwitch: () => progress.end(),
+  });
+  if (!isStored) {
+    progress.signal.throwIfAborted();
+    throw new LogInterrupted("cancelled");
+  }
+  const scope = workerScope(log.organisationId);
+  await withOrganisation(scope, (tx) => endJobs(tx, scope, { subject: log.id, state: "done" }));
+}

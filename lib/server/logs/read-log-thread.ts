@@ -1,0 +1,51 @@
+// The reading thread: all work on a log that takes time happens here, so that it can be watched and killed.
+import { parentPort, workerData } from "node:worker_threads";
+import { inspectLog, readLog } from "@/lib/ingest";
+import { fail, succeed } from "@/lib/result";
+import { S3Storage } from "@/lib/server/adapters/storage/s3-storage";
+import type { Environment } from "@/lib/server/env";
+import { buildPackage } from "@/lib/server/logs/build-package";
+import { buffersOf } from "@/lib/server/logs/built-package";
+import { storedSource } from "@/lib/server/logs/log-file";
+import { LogFailure } from "@/lib/server/logs/log-failure";
+import type { ThreadMessage, ThreadTask } from "@/lib/server/logs/thread-messages";
+
+const storage = new S3Storage((workerData as { env: Environment }).env);
+
+function say(message: ThreadMessage, handOver: ArrayBuffer[] = []): void {
+  parentPort?.postMessage(message, handOver);
+}
+
+function tell(stage: string, progress: number): void {
+  say({ kind: "progress", stage, progress });
+}
+
+async function inspect(task: Extract<ThreadTask, { task: "inspect" }>): Promise<void> {
+  const outcome = await inspectLog(storedSource(storage, task.file), { near: task.near ?? undefined });
+  say({ kind: "inspected", outcome });
+}
+
+async function read(task: Extract<ThreadTask, { task: "read" }>): Promise<void> {
+  let told = 0;
+  const onProgress = (fraction: number) => {
+    if (Date.now() - told < 100) return;
+    told = Date.now();
+    tell("Reading the records", 0.05 + 0.45 * fraction);
+  };
+  const outcome = await readLog(storedSource(storage, task.file), task.mapping, { onProgress });
+  if (!outcome.ok) return say({ kind: "built", outcome });
+  try {
+    const built = buildPackage(outcome.value, { machine: task.machine, boundary: task.boundary, tell });
+    say({ kind: "built", outcome: succeed(built) }, buffersOf(built));
+  } catch (error) {
+    if (!(error instanceof LogFailure)) throw error;
+    say({ kind: "built", outcome: fail(error.place) });
+  }
+}
+
+parentPort?.on("message", (task: ThreadTask) => {
+  const work = task.task === "inspect" ? inspect(task) : read(task);
+  work.catch((error: unknown) => {
+    say({ kind: "broken", message: error instanceof Error ? (error.stack ?? error.message) : String(error) });
+  });
+});

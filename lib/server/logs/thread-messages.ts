@@ -1,0 +1,21 @@
+import type { IngestError } from "@/lib/ingest/ingest-error";
+import type { Inspection } from "@/lib/ingest/log-format";
+import type { LogMapping } from "@/lib/ingest/mapping";
+import type { Seeder } from "@/lib/machines/machine";
+import type { Result } from "@/lib/result";
+import type { Boundary } from "@/lib/schemas/geometry";
+import type { BuiltPackage } from "@/lib/server/logs/built-package";
+import type { LogFile } from "@/lib/server/logs/log-file";
+import type { LogErrorPlace } from "@/lib/server/logs/log-failure";
+
+/** What the worker asks of a reading thread. */
+export type ThreadTask =
+  | { task: "inspect"; file: LogFile; near: { longitude: number; latitude: number } | null }
+  | { task: "read"; file: LogFile; mapping: LogMapping; machine: Seeder | null; boundary: Boundary | null };
+
+/** What the thread says: progress any number of times, then one of the others. */
+export type ThreadMessage =
+  | { kind: "progress"; stage: string; progress: number }
+  | { kind: "inspected"; outcome: Result<Inspection, IngestError> }
+  | { kind: "built"; outcome: Result<BuiltPackage, LogErrorPlace> }
+  | { kind: "broken"; message: string };
