@@ -39,6 +39,8 @@ function findDoubles(choices: Choices): Record<string, string> {
   const problems: Record<string, string> = {};
   for (const [name, choice] of Object.entries(choices)) {
     if (choice.use !== "channel" || choice.channel === null) continue;
+    // A local date and a local time are read together.
+    if (choice.channel === "time" && choice.unit === "local") continue;
     const key = `${choice.channel}|${choice.row ?? ""}`;
     const other = seen.get(key);
     const what = `the ${channelWords(choice.channel)}${choice.row === null ? "" : ` of row ${choice.row}`}`;

@@ -24,7 +24,7 @@ export function ColumnLine({ column, choice, problem, onChange }: ColumnLineProp
     <div className="space-y-3">
       <div className="flex flex-wrap items-start justify-between gap-x-4 gap-y-2">
         <div className="min-w-0 flex-1 basis-72 space-y-1">
-          <Sentence saying={sayColumn(column, choice)} />
+          <Sentence>{sayColumn(column, choice)}</Sentence>
           <p className="break-words text-table text-ink-soft">
             <span className="tabular">{column.sample.join(" · ") || "empty in the lines looked at"}</span>
             {column.proposal ? (

@@ -39,7 +39,7 @@ export function GroupCard({ group, choices, problems, onChange }: GroupCardProps
       <div className="flex flex-wrap items-start justify-between gap-x-4 gap-y-2">
         <div className="min-w-0 flex-1 basis-72 space-y-1">
           {saying ? (
-            <Sentence saying={saying} />
+            <Sentence>{saying}</Sentence>
           ) : (
             <p>
               Columns {names[0]} … {names.at(-1)} are no longer one thing: see them one by one.

@@ -1,43 +1,7 @@
 import type { ColumnChoice, FoundColumn } from "@/components/columns/column-choice";
-import { writeNumber } from "@/components/units/show-quantity";
 import { channelWords } from "@/lib/ingest/channel-quantities";
-import { toSi } from "@/lib/units/convert-unit";
-import { getUnit, type UnitId } from "@/lib/units/unit-table";
-
-export interface Saying {
-  /** "Column DF_07_lbf", "Columns DF_01_lbf … DF_24_lbf". */
-  subject: string;
-  /** "is the downforce of row 7 in pounds-force". */
-  meaning: string;
-  /** "212 lbf here is 943 N"; null where there is nothing to convert. */
-  example: string | null;
-}
-
-const SAME_IN_SI = new Set(["1", "boolean", "fraction", "deg"]);
-
-/** The first sample that is a plain number. */
-function sampleNumber(column: FoundColumn): number | null {
-  for (const text of column.sample) {
-    const value = Number(text.trim().replace(",", "."));
-    if (text.trim() !== "" && Number.isFinite(value) && value !== 0) return value;
-  }
-  return null;
-}
-
-function bushelPounds(format: string): number | undefined {
-  const pounds = Number.parseFloat(format);
-  return Number.isFinite(pounds) ? pounds : undefined;
-}
-
-function example(column: FoundColumn, unit: UnitId, format: string): string | null {
-  const { si, quantity } = getUnit(unit);
-  const value = sampleNumber(column);
-  if (value === null || quantity === "clock" || SAME_IN_SI.has(unit) || unit === si) return null;
-  const poundsPerBushel = bushelPounds(format);
-  if (unit === "bu/ac" && !poundsPerBushel) return null;
-  const converted = si === "fraction" ? toSi(value, unit) : toSi(value, unit, { poundsPerBushel });
-  return `${writeNumber(value)}\u2009${unitSign(unit)} here is ${writeNumber(converted)}${si === "fraction" ? "" : `\u2009${si}`}`;
-}
+import { describeColumn, type ColumnMeaning } from "@/lib/ingest/columns/describe-column";
+import type { UnitId } from "@/lib/units/unit-table";
 
 /** The unit as written after a number. */
 export function unitSign(unit: UnitId): string {
@@ -46,30 +10,22 @@ export function unitSign(unit: UnitId): string {
   return unit === "1" ? "" : unit;
 }
 
-function inUnit(unit: UnitId | null): string {
-  if (unit === null) return ", in a unit the file does not name";
-  if (unit === "1") return "";
-  if (unit === "boolean") return " (on or off)";
-  if (unit === "1/m2" || unit === "1/ac" || unit === "1/ha") return ` ${getUnit(unit).words}`;
-  return unit === "fraction" ? " as a fraction of one" : ` in ${getUnit(unit).words}`;
-}
-
-function meaningOf(choice: ColumnChoice, plural: boolean, rowWords: string): string {
-  const verb = plural ? "are" : "is";
-  if (choice.use === "out") return `${verb} left out`;
-  if (choice.use === "undecided" || choice.channel === null)
-    return `${verb} not understood: say what ${plural ? "they mean" : "it means"}, or leave ${plural ? "them" : "it"} out`;
-  return `${verb} the ${channelWords(choice.channel)}${rowWords}${inUnit(choice.unit)}`;
-}
-
-/** One column in words. */
-export function sayColumn(column: FoundColumn, choice: ColumnChoice): Saying {
-  const rowWords = choice.row === null ? "" : ` of row ${choice.row}`;
+/** What the choice comes to as an entry of a mapping; null for "left out". */
+function meaningOf(choice: ColumnChoice): ColumnMeaning | null {
+  if (choice.use !== "channel" || choice.channel === null) return null;
+  const format = choice.format.trim();
   return {
-    subject: `Column ${column.name}`,
-    meaning: meaningOf(choice, false, rowWords),
-    example: choice.use === "channel" && choice.unit ? example(column, choice.unit, choice.format) : null,
+    channel: choice.channel,
+    unit: choice.unit,
+    ...(choice.row === null ? {} : { row: choice.row }),
+    ...(format === "" ? {} : { format }),
   };
+}
+
+/** One column in words; said anew at every change. */
+export function sayColumn(column: FoundColumn, choice: ColumnChoice): string {
+  if (choice.use === "undecided") return `Column '${column.name}' was not recognised: leave it out, or say what it is.`;
+  return describeColumn(column, meaningOf(choice));
 }
 
 function rowRange(rows: (number | null)[]): string {
@@ -79,19 +35,31 @@ function rowRange(rows: (number | null)[]): string {
   return isRun ? ` of rows ${known[0]} to ${known.at(-1)}` : ` of rows ${known.join(", ")}`;
 }
 
-/** Several columns that mean the same row by row; null when they no longer do and must be read one by one. */
-export function sayGroup(columns: FoundColumn[], choices: ColumnChoice[]): Saying | null {
+function sameMeaning(choices: ColumnChoice[]): ColumnChoice | null {
   const [first] = choices;
-  const [firstColumn] = columns;
-  if (!first || !firstColumn) return null;
   const alike = choices.every(
-    (choice) => choice.use === first.use && choice.channel === first.channel && choice.unit === first.unit,
+    (choice) => choice.use === first?.use && choice.channel === first.channel && choice.unit === first.unit,
   );
-  if (!alike) return null;
-  const withNumber = columns.find((column) => sampleNumber(column) !== null) ?? firstColumn;
-  return {
-    subject: `Columns ${firstColumn.name} … ${columns.at(-1)?.name ?? ""}`,
-    meaning: meaningOf(first, true, rowRange(choices.map((choice) => choice.row))),
-    example: first.use === "channel" && first.unit ? example(withNumber, first.unit, first.format) : null,
-  };
+  return first && alike ? first : null;
+}
+
+/**
+ * Several columns that mean the same row by row, as one sentence: "Columns 'DF_01_lbf' … 'DF_24_lbf' are the downforce
+ * of rows 1 to 24 in pounds-force; 212 lbf here is 943 N." Null when they no longer do and must be read one by one.
+ */
+export function sayGroup(columns: FoundColumn[], choices: ColumnChoice[]): string | null {
+  const first = sameMeaning(choices);
+  const spoken = columns.find((column) => column.sample.some((text) => Number(text) !== 0)) ?? columns[0];
+  if (!first || !spoken) return null;
+  const names = `Columns '${columns[0]?.name ?? ""}' … '${columns.at(-1)?.name ?? ""}'`;
+  if (first.use === "undecided") return `${names} were not recognised: leave them out, or say what they are.`;
+  const meaning = meaningOf({ ...first, row: null });
+  if (!meaning) return `${names} are not used.`;
+  const rows = rowRange(choices.map((choice) => choice.row));
+  const thing = `the ${channelWords(meaning.channel)}`;
+  const rest = describeColumn(spoken, meaning).slice(`Column '${spoken.name}' `.length);
+  return `${names} ${rest
+    .replace(/^is /, "are ")
+    .replace(/^looks /, "look ")
+    .replace(thing, () => thing + rows)}`;
 }

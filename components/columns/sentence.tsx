@@ -1,13 +1,21 @@
 import { confidenceWord } from "@/components/columns/column-choice";
-import type { Saying } from "@/components/columns/say-meaning";
 import { StateMark } from "@/components/ui/state-mark";
 
-/** "Column DF_07_lbf is the downforce of row 7 in pounds-force; 212 lbf here is 943 N." Said anew when it changes. */
-export function Sentence({ saying }: { saying: Saying }) {
+/** "Column 'DF_07_lbf' is the downforce of row 7 in pounds-force; 212 lbf here is 943 N." Read out when it changes. */
+export function Sentence({ children }: { children: string }) {
+  // The file's own names stand out from our words.
+  const parts = children.split(/('[^']*')/);
   return (
     <p aria-live="polite" className="break-words">
-      <span className="font-semibold">{saying.subject}</span> {saying.meaning}
-      {saying.example ? <span className="text-ink-soft">; {saying.example}</span> : null}.
+      {parts.map((part, index) =>
+        part.startsWith("'") ? (
+          <span key={index} className="font-semibold">
+            {part}
+          </span>
+        ) : (
+          part
+        ),
+      )}
     </p>
   );
 }

@@ -40,7 +40,10 @@ export function Dialog({ title, description, open, onOpenChange, children }: Dia
 }
 
 export interface ConfirmDialogProps {
-  trigger: ReactNode;
+  /** Left out where something else opens it (then `open` and `onOpenChange` are given). */
+  trigger?: ReactNode;
+  open?: boolean;
+  onOpenChange?: (open: boolean) => void;
   title: string;
   /** What will happen, what stays, whether it can be undone. */
   children: ReactNode;
@@ -50,10 +53,11 @@ export interface ConfirmDialogProps {
 }
 
 /** Asks before something that cannot be taken back. The safe answer has the focus. */
-export function ConfirmDialog({ trigger, title, children, confirmWords, confirmKind, onConfirm }: ConfirmDialogProps) {
+export function ConfirmDialog(props: ConfirmDialogProps) {
+  const { trigger, title, children, confirmWords, confirmKind, onConfirm } = props;
   return (
-    <AlertDialog.Root>
-      <AlertDialog.Trigger asChild>{trigger}</AlertDialog.Trigger>
+    <AlertDialog.Root open={props.open} onOpenChange={props.onOpenChange}>
+      {trigger ? <AlertDialog.Trigger asChild>{trigger}</AlertDialog.Trigger> : null}
       <AlertDialog.Portal>
         <AlertDialog.Overlay className={VEIL} />
         <AlertDialog.Content className={SHEET}>

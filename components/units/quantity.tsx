@@ -19,7 +19,7 @@ export function Quantity({ value, unit, channel, className }: QuantityProps) {
   return (
     <span className={className ?? "tabular whitespace-nowrap"}>
       {shown.number}
-      {shown.unit ? <span className="text-ink-soft">{`\u2009${shown.unit}`}</span> : null}
+      {shown.unit ? <span className="text-ink-soft">{shown.unit === "°" ? "°" : `\u202f${shown.unit}`}</span> : null}
     </span>
   );
 }

@@ -1,10 +1,17 @@
 "use client";
 
 import { createContext, useCallback, useContext, useMemo, useState, type ReactNode } from "react";
-import { areaUnitOf, showQuantity, type ShownQuantity, type UnitSystemName } from "@/components/units/show-quantity";
 import { changeMe } from "@/lib/api/client";
+import type { UnitSystem } from "@/lib/units/display-unit";
+import { formatQuantity } from "@/lib/units/format-quantity";
 
-export type { UnitSystemName };
+export type UnitSystemName = UnitSystem;
+
+export interface ShownQuantity {
+  number: string;
+  /** Empty for a bare number. */
+  unit: string;
+}
 
 export interface Units {
   system: UnitSystemName;
@@ -18,18 +25,18 @@ export interface Units {
 }
 
 function unitsFor(system: UnitSystemName, setSystem: (system: UnitSystemName) => void): Units {
-  const area = areaUnitOf(system);
-  const parts = (valueSi: number, unit: string, channel?: string) => showQuantity(valueSi, unit, system, channel);
+  const shown = (valueSi: number, unit: string, channel?: string) =>
+    formatQuantity(valueSi, unit, system, channel === undefined ? {} : { channel });
   return {
     system,
     setSystem,
-    parts,
-    format: (valueSi, unit, channel) => {
-      const shown = parts(valueSi, unit, channel);
-      return shown.unit ? `${shown.number}\u2009${shown.unit}` : shown.number;
+    format: (valueSi, unit, channel) => shown(valueSi, unit, channel).text,
+    parts: (valueSi, unit, channel) => {
+      const { text, unit: symbol } = shown(valueSi, unit, channel);
+      return { number: symbol ? text.slice(0, -symbol.length).trimEnd() : text, unit: symbol };
     },
-    areaUnit: area.label,
-    fromSquareMetres: (areaM2) => areaM2 / area.perUnitM2,
+    areaUnit: shown(1, "m2").unit,
+    fromSquareMetres: (areaM2) => shown(areaM2, "m2").value ?? NaN,
   };
 }
 

@@ -1,0 +1,28 @@
+import type { Metadata } from "next";
+import { notFound } from "next/navigation";
+import { requireScope } from "@/app/_server/require-scope";
+import { ColumnsScreen } from "@/components/columns/columns-screen";
+import { PageBody } from "@/components/ui/page-body";
+import { PageHeading } from "@/components/ui/page-heading";
+import { can } from "@/lib/access/permissions";
+
+export const metadata: Metadata = { title: "What the columns mean" };
+
+interface ColumnsRouteProps {
+  params: Promise<{ org: string; fieldId: string; logId: string }>;
+}
+
+export default async function ColumnsRoute({ params }: ColumnsRouteProps) {
+  const { org, fieldId, logId } = await params;
+  const { scope, organisation } = await requireScope(org);
+  if (!can(scope.role, "logs.map")) notFound();
+  return (
+    <PageBody>
+      <PageHeading
+        title="What the columns mean"
+        lead="This is how the file was understood. Read it, change what is wrong, then let the log be read."
+      />
+      <ColumnsScreen logPath={`/${organisation.slug}/fields/${fieldId}/logs/${logId}`} logId={logId} />
+    </PageBody>
+  );
+}

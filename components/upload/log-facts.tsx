@@ -1,0 +1,45 @@
+import { formatBytes, formatMoment } from "@/components/ui/format-date";
+import { Notice } from "@/components/ui/notice";
+import type { Log } from "@/lib/schemas/logs";
+
+const COUNT = new Intl.NumberFormat("en-US", { useGrouping: true });
+
+function count(value: number): string {
+  return COUNT.format(value).replaceAll(",", "\u202f");
+}
+
+/** What was found in the file, and what was noticed while reading it. */
+export function LogFacts({ log }: { log: Log }) {
+  const facts: [string, string][] = [
+    ["Taken in", formatMoment(log.createdAt)],
+    ["Size", formatBytes(log.fileBytes)],
+  ];
+  if (log.counts.records > 0) {
+    facts.push(
+      ["Records", count(log.counts.records)],
+      ["Rows", count(log.counts.rows)],
+      ["Readings", count(log.counts.readings)],
+      ["Passes", count(log.counts.passes)],
+      ["Records with a flag", count(log.counts.flagged)],
+      ["Lines not used", count(log.counts.rejected)],
+    );
+  }
+  return (
+    <div className="space-y-4">
+      <dl className="tabular grid grid-cols-[auto_1fr] gap-x-6 gap-y-1 border-t border-rule pt-4 text-table">
+        {facts.map(([name, value]) => (
+          <div key={name} className="contents">
+            <dt className="text-ink-soft">{name}</dt>
+            <dd>{value}</dd>
+          </div>
+        ))}
+      </dl>
+      {log.notes.map((note) => (
+        <Notice key={note.code} state="look">
+          {note.message}
+          {note.firstLine === undefined ? null : <span className="tabular"> First at line {note.firstLine}.</span>}
+        </Notice>
+      ))}
+    </div>
+  );
+}

@@ -1,0 +1,128 @@
+"use client";
+
+import Link from "next/link";
+import { useRouter } from "next/navigation";
+import { useEffect } from "react";
+import { useLogEvents } from "@/components/hooks/use-log-events";
+import { useLog, useLogActions } from "@/components/hooks/use-logs";
+import { Button, buttonClass } from "@/components/ui/button";
+import { Loading } from "@/components/ui/loading";
+import { Notice } from "@/components/ui/notice";
+import { PageHeading } from "@/components/ui/page-heading";
+import { ProgressBar } from "@/components/ui/progress-bar";
+import { LogFacts } from "@/components/upload/log-facts";
+import { LogSteps } from "@/components/upload/log-steps";
+import { isWorking } from "@/components/upload/log-state";
+import { can, type Role } from "@/lib/access/permissions";
+import { describeFailure } from "@/lib/api/api-problem";
+import { logOriginalPath } from "@/lib/api/client";
+import type { Log } from "@/lib/schemas/logs";
+
+export interface LogProgressProps {
+  logId: string;
+  fieldId: string;
+  fieldPath: string;
+  role: Role;
+}
+
+/** From the last byte sent to the verdict: what is being done, how far it is, and what to do when it stops. */
+export function LogProgress({ logId, fieldId, fieldPath, role }: LogProgressProps) {
+  const router = useRouter();
+  const query = useLog(logId);
+  const log = query.data;
+  useLogEvents(log);
+  const asksForMeaning = log?.status === "needs-mapping" && can(role, "logs.map");
+  useEffect(() => {
+    if (asksForMeaning) router.replace(`${fieldPath}/logs/${logId}/columns`);
+  }, [asksForMeaning, fieldPath, logId, router]);
+  if (query.isPending) return <Loading what="the log" />;
+  if (query.isError || !log) {
+    return (
+      <Notice state="act" urgent>
+        {describeFailure(query.error)}
+      </Notice>
+    );
+  }
+  return (
+    <div className="space-y-6">
+      <PageHeading title={log.name} lead={log.fileName === log.name ? undefined : log.fileName} />
+      <div className="max-w-2xl space-y-6">
+        <LogSteps status={log.status} />
+        <Outcome log={log} fieldId={fieldId} fieldPath={fieldPath} role={role} />
+        <LogFacts log={log} />
+      </div>
+    </div>
+  );
+}
+
+interface OutcomeProps {
+  log: Log;
+  fieldId: string;
+  fieldPath: string;
+  role: Role;
+}
+
+function Outcome({ log, fieldId, fieldPath, role }: OutcomeProps) {
+  const actions = useLogActions(fieldId);
+  const mayUpload = can(role, "logs.upload");
+  if (isWorking(log.status)) {
+    return (
+      <div className="sheet space-y-3 p-4">
+        <p role="status" className="text-section">
+          {log.stage || "Waiting its turn"}
+        </p>
+        <ProgressBar share={log.progress} label={log.stage || "Waiting its turn"} />
+        <p className="tabular text-table text-ink-soft">
+          {Math.round(log.progress * 100)} %. You may leave this page; the work goes on.
+        </p>
+        {mayUpload ? <Button onClick={() => actions.cancel.mutate(log.id)}>Stop reading</Button> : null}
+      </div>
+    );
+  }
+  if (log.status === "ready") {
+    return (
+      <p className="flex flex-wrap gap-2">
+        <Link href={`${fieldPath}/rows?log=${log.id}`} className={buttonClass("primary")}>
+          See the verdict
+        </Link>
+        {can(role, "logs.map") ? (
+          <Link href={`${fieldPath}/logs/${log.id}/columns`} className={buttonClass("quiet")}>
+            What the columns mean
+          </Link>
+        ) : null}
+      </p>
+    );
+  }
+  if (log.status === "failed") return <Failure log={log} fieldPath={fieldPath} role={role} actions={actions} />;
+  return <Notice state="look">The file is here. Somebody who may must say what its columns mean.</Notice>;
+}
+
+interface FailureProps extends Omit<OutcomeProps, "fieldId"> {
+  actions: ReturnType<typeof useLogActions>;
+}
+
+function Failure({ log, fieldPath, role, actions }: FailureProps) {
+  const place = [
+    log.error?.line === undefined ? null : `line ${log.error.line}`,
+    log.error?.column === undefined ? null : `column ${log.error.column}`,
+  ].filter((part) => part !== null);
+  return (
+    <div className="space-y-3">
+      <Notice state="act" urgent title="The log could not be read">
+        <p>{log.error?.message ?? "No reason was kept."}</p>
+        {place.length > 0 ? <p className="tabular">At {place.join(", ")}.</p> : null}
+      </Notice>
+      <div className="flex flex-wrap gap-2">
+        {can(role, "logs.map") ? (
+          <Link href={`${fieldPath}/logs/${log.id}/columns`} className={buttonClass("primary")}>
+            Look at the columns
+          </Link>
+        ) : null}
+        {can(role, "logs.upload") ? <Button onClick={() => actions.retry.mutate(log.id)}>Read it again</Button> : null}
+        <a href={logOriginalPath(log.id)} download className={buttonClass("quiet")}>
+          Download the original
+        </a>
+      </div>
+    </div>
+  );
+}

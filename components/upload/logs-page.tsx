@@ -1,0 +1,45 @@
+"use client";
+
+import { useLogs } from "@/components/hooks/use-logs";
+import { EmptyState } from "@/components/ui/empty-state";
+import { Loading } from "@/components/ui/loading";
+import { Notice } from "@/components/ui/notice";
+import { LogTable } from "@/components/upload/log-table";
+import { LogUpload } from "@/components/upload/log-upload";
+import { can, type Role } from "@/lib/access/permissions";
+import { describeFailure } from "@/lib/api/api-problem";
+
+export interface LogsPageProps {
+  fieldId: string;
+  fieldPath: string;
+  role: Role;
+  exampleHref: string | null;
+}
+
+export function LogsPage({ fieldId, fieldPath, role, exampleHref }: LogsPageProps) {
+  const logs = useLogs(fieldId);
+  return (
+    <div className="space-y-8">
+      {can(role, "logs.upload") ? (
+        <LogUpload fieldId={fieldId} logsPath={`${fieldPath}/logs`} exampleHref={exampleHref} />
+      ) : null}
+      {logs.isPending ? <Loading what="the logs" /> : null}
+      {logs.isError ? (
+        <Notice state="act" urgent>
+          {describeFailure(logs.error)}
+        </Notice>
+      ) : null}
+      {logs.data && logs.data.items.length === 0 ? (
+        <EmptyState title="No log in this field yet">
+          <p>
+            A log is the file the drill or the combine wrote while it worked: where it was, several times a second, and
+            what each row did there. The original is kept as it is.
+          </p>
+        </EmptyState>
+      ) : null}
+      {logs.data && logs.data.items.length > 0 ? (
+        <LogTable logs={logs.data.items} fieldId={fieldId} fieldPath={fieldPath} role={role} />
+      ) : null}
+    </div>
+  );
+}
