@@ -1,5 +1,7 @@
 import { readHead, type ByteSource } from "@/lib/ingest/byte-source";
 // The kinds of file a log may come in, in the order they are tried.
+import { shapefileFormat } from "@/lib/ingest/formats/shapefile/format";
+import { geojsonFormat } from "@/lib/ingest/formats/geojson/format";
 import { csvFormat } from "@/lib/ingest/formats/csv/format";
 import { IngestFailure, ingestError, stopReading, type IngestError } from "@/lib/ingest/ingest-error";
 import type { InspectOptions, Inspection, LogFormat, ReadLog, ReadOptions } from "@/lib/ingest/log-format";
@@ -7,7 +9,7 @@ import type { LogMapping } from "@/lib/ingest/mapping";
 import { isGzip, openText } from "@/lib/ingest/open-text";
 import { fail, succeed, type Result } from "@/lib/result";
 
-export const LOG_FORMATS: readonly LogFormat[] = [csvFormat];
+export const LOG_FORMATS: readonly LogFormat[] = [shapefileFormat, geojsonFormat, csvFormat];
 
 /** Bytes of the head that `detectFormat` wants. */
 export const DETECT_BYTES = 65_536;

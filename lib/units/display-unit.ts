@@ -56,8 +56,16 @@ const RULER: Record<UnitSystem, DisplayUnit> = {
 };
 const RULER_CHANNELS = /^(?:deviation:)?(?:depth|rowSpacing)$/;
 
-/** The unit a value kept in `siUnit` is shown in. `channel` tells a seeding depth (mm, in) from a distance (m, ft). */
-export function displayUnit(siUnit: KeptUnit, system: UnitSystem, channel?: string): DisplayUnit {
+function isKeptUnit(text: string): text is KeptUnit {
+  return Object.hasOwn(METRIC, text);
+}
+
+/**
+ * The unit a value kept in `siUnit` is shown in; one it does not know is shown as it is.
+ * `channel` tells a seeding depth (mm, in) from a distance (m, ft).
+ */
+export function displayUnit(siUnit: string, system: UnitSystem, channel?: string): DisplayUnit {
+  if (!isKeptUnit(siUnit)) return { symbol: siUnit, factor: 1, decimals: 2, words: siUnit };
   if (siUnit === "m" && channel !== undefined && RULER_CHANNELS.test(channel)) return RULER[system];
   return (system === "metric" ? METRIC : IMPERIAL)[siUnit];
 }

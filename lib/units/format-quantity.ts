@@ -1,4 +1,4 @@
-import { displayUnit, type KeptUnit, type UnitSystem } from "@/lib/units/display-unit";
+import { displayUnit, type UnitSystem } from "@/lib/units/display-unit";
 
 /** Narrow no-break space: between number and unit, and between thousands from 10,000 on. */
 const THIN_SPACE = "\u202f";
@@ -22,7 +22,7 @@ export interface FormatOptions {
 /** An SI value in a person's units, as text with its unit. Rounds to the unit's usual decimals, and keeps two figures of small values. */
 export function formatQuantity(
   valueSi: number | null,
-  siUnit: KeptUnit,
+  siUnit: string,
   system: UnitSystem,
   options: FormatOptions = {},
 ): FormattedQuantity {

@@ -26,6 +26,7 @@ export function describeFoundColumns(sampled: SampledColumns): { columns: FoundC
   });
   const { proposals, shape } = guessColumns(evidence);
   checkPositions(proposals, summaries, sampled.near, sampled.notes);
+  sampled.notes.set("unknown-unit", proposals.filter((proposal) => proposal?.unit === null).length);
   const columns = evidence.map(({ name, summary }, index) => {
     const proposal = proposals[index] ?? null;
     const { sample, min, max } = summary;

@@ -30,7 +30,7 @@ function guessColumn(column: ColumnEvidence): ColumnProposal | null {
   const headerUnit = readHeaderUnit(column.name);
   const unitWord = (column.unitCell === null ? null : readUnitWord(column.unitCell)) ?? headerUnit?.unit ?? null;
   // "t_s" names time only without its unit, "depth in" needs the unit kept apart; "on/off" is both.
-  const tokens = tokeniseHeader(headerUnit?.rest ?? column.name);
+  const tokens = tokeniseHeader(withoutAsides(headerUnit?.rest ?? column.name));
   const inRow = readRowNumber(tokens);
   const named = nameChannel(inRow?.rest ?? tokens) ?? nameChannel(tokeniseHeader(column.name));
   if (!named || column.summary.filled === 0) return null;
@@ -45,6 +45,11 @@ function guessColumn(column: ColumnEvidence): ColumnProposal | null {
     confidence: round(named.weight * trust * rowTrust),
     reason: `the header says "${named.words}"; ${reason}`,
   };
+}
+
+/** "Working (0 or 1)" is no row 1: brackets count only when they name a row. */
+function withoutAsides(header: string): string {
+  return header.replace(/\((?![^)]*\b(?:row|unit|r)\s*\d)[^)]*\)/gi, " ");
 }
 
 function round(confidence: number): number {
@@ -65,14 +70,9 @@ function keepBestOfEach(proposals: (ColumnProposal | null)[]): void {
     const rival = proposals[other];
     const loser = rival && rival.confidence >= proposal.confidence ? index : other;
     if (loser === other) best.set(key, index);
-    const lost = proposals[loser];
-    proposals[loser] = lost ? toOther(lost, index) : null;
+    // The other is left for the person to say.
+    proposals[loser] = null;
   });
-}
-
-/** A second column of the same meaning is left for the person, as nothing. */
-function toOther(_lost: ColumnProposal, _index: number): null {
-  return null;
 }
 
 /** Rows of a channel should run 1..n. From 0: one is added, and said. With gaps, or alone: less sure. */
@@ -87,6 +87,10 @@ function settleRows(proposals: (ColumnProposal | null)[]): void {
     const first = Math.min(...rows);
     const isRun = Math.max(...rows) - first + 1 === rows.length;
     for (const proposal of group) {
+      if (proposal.channel === "working" && group.length === 1) {
+        delete proposal.row;
+        continue;
+      }
       if (first === 0) {
         proposal.row = (proposal.row ?? 0) + 1;
         proposal.reason += "; the header counts rows from 0, here they count from 1";

@@ -32,7 +32,7 @@ export function guessUnit(
   if (channel === "pass" || channel === "row") return guessCount(channel, summary);
   const named = word === null ? null : resolveWord(channel, word);
   if (named) return checkRange(channel, named, summary);
-  return guessFromValues(channel, word, summary);
+  return guessFromValues(channel, word, { summary, header });
 }
 
 /** "lb" on a force means pounds-force; on anything else a mass. Null when the unit does not measure the channel. */
@@ -94,7 +94,11 @@ function guessCount(channel: ChannelId, summary: CellSummary): GuessedUnit {
   };
 }
 
-function guessFromValues(channel: ChannelId, word: UnitWord | null, summary: CellSummary): GuessedUnit {
+function guessFromValues(
+  channel: ChannelId,
+  word: UnitWord | null,
+  { summary, header }: { summary: CellSummary; header: string },
+): GuessedUnit {
   const { min, max } = summary;
   if (word !== null) {
     return { unit: null, trust: 0.3, reason: `the header names a unit (${word}) that does not measure this` };
@@ -109,7 +113,15 @@ function guessFromValues(channel: ChannelId, word: UnitWord | null, summary: Cel
     return { unit: null, trust: 0.3, reason: "its values could be degrees or radians" };
   }
   if (channel === "contact" || channel === "moisture") return guessShare(min, max, summary);
-  return { unit: null, trust: 0.3, reason: "neither the header nor the values name its unit" };
+  const aside = /[([]([^()[\]]+)[)\]]\s*$/.exec(header)?.[1]?.trim();
+  return {
+    unit: null,
+    trust: 0.3,
+    reason:
+      aside === undefined || /\d/.test(aside)
+        ? "neither the header nor the values name its unit"
+        : `the header says "${aside}", which is no unit this program knows`,
+  };
 }
 
 function guessShare(min: number, max: number, summary: CellSummary): GuessedUnit {

@@ -18,7 +18,18 @@ const RULES: readonly NameRule[] = [
   { channel: "speed", words: ["speed", "velocity", "sog", "spd", "vel"], weight: 0.9 },
   {
     channel: "margin",
-    words: ["margin", "gauge wheel", "gaugewheel", "wheel load", "wheelload", "gwload", "gw load", "gw", "gauge load"],
+    words: [
+      "margin",
+      "gauge wheel",
+      "gaugewheel",
+      "wheel load",
+      "wheelload",
+      "gwload",
+      "gw load",
+      "gw",
+      "gauge load",
+      "mg",
+    ],
     weight: 0.9,
   },
   { channel: "contact", words: ["ground contact", "contact", "groundcontact", "gc"], weight: 0.9 },
@@ -27,7 +38,7 @@ const RULES: readonly NameRule[] = [
     words: ["downforce", "down force", "df", "applied force", "down pressure", "downpressure", "force"],
     weight: 0.9,
   },
-  { channel: "depth", words: ["depth", "dpth"], weight: 0.9 },
+  { channel: "depth", words: ["depth", "dpth", "dp"], weight: 0.9 },
   {
     channel: "population",
     words: ["population", "pop", "seed rate", "seeding rate", "seedrate", "seed count", "seeds", "stand", "plants"],
@@ -40,7 +51,11 @@ const RULES: readonly NameRule[] = [
     weight: 0.85,
   },
   { channel: "yieldMass", words: ["yield", "yld", "grain mass", "yield mass", "harvested mass"], weight: 0.8 },
-  { channel: "swathWidth", words: ["swath width", "swathwidth", "working width", "width", "swath"], weight: 0.8 },
+  {
+    channel: "swathWidth",
+    words: ["swath width", "swathwidth", "working width", "cut width", "width", "swath"],
+    weight: 0.8,
+  },
   { channel: "interval", words: ["interval", "duration", "time step", "dt"], weight: 0.8 },
   {
     channel: "time",

@@ -61,6 +61,7 @@ function sayNote(code: string, count: number, { place, firstLine, column }: Note
     "deleted-records": `${n("record was", "records were")} marked as deleted in the .dbf and left out.${first}`,
     "null-geometry": `${n("feature", "features")} had no geometry and cannot be placed on the map.${first}`,
     "part-count-mismatch": `The .shp and .dbf parts disagree by ${records}; only the records found in both were read.`,
+    "cut-short": "The .shp ends before the length it states: it was cut short on the way.",
     "no-projection": "The archive has no .prj part; the coordinates look like WGS 84 degrees and were read so.",
     "decimal-comma": "Numbers in this file are written with a decimal comma.",
     "no-header":
@@ -69,6 +70,7 @@ function sayNote(code: string, count: number, { place, firstLine, column }: Note
     "lines-before-header": `${n("line", "lines")} before the header ${count === 1 ? "was" : "were"} passed over.`,
     "missing-position":
       "No column was recognised as longitude and latitude, or easting and northing; choose them before the log can be read.",
+    "unknown-unit": `${n("column names", "columns name")} no unit this program knows; choose ${count === 1 ? "it" : "one for each"} before the log is read.`,
     "swapped-positions": "Longitude and latitude look swapped; check which is which.",
     "far-from-field":
       "The positions lie far from the field; check which column is longitude, which latitude, and the projection.",

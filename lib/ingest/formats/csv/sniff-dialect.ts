@@ -75,6 +75,9 @@ function judge(text: string, delimiter: string, newline: "\n" | "\r", isLast: bo
   }
   if (fields === 0) return { delimiter, rows, fields, score: 0 };
   const cells = filled.filter((row) => row.length === fields).flat();
+  // Lines of prose fall into equal parts by chance, but hold no numbers; a header alone may.
+  const hasNumber = cells.some((cell) => isNumeric(cell, delimiter));
+  if (!hasNumber && filled.length > 1) return { delimiter, rows, fields, score: 0 };
   const numeric = cells.filter((cell) => isMissing(cell) || isNumeric(cell, delimiter)).length;
   // Same-length lines first, then how many cells are numbers; more columns break a tie.
   const score = (most / filled.length) * (0.2 + numeric / cells.length) + Math.min(fields, 100) * 1e-4;

@@ -1,0 +1,121 @@
+import { readHead, type ByteSource } from "@/lib/ingest/byte-source";
+import { describeFoundColumns } from "@/lib/ingest/columns/describe-found-columns";
+import { nameColumns } from "@/lib/ingest/columns/name-columns";
+import { collectPaths, readProperty, type PropertyPath } from "@/lib/ingest/formats/geojson/flatten-properties";
+import { readFeatures, type PointFeature } from "@/lib/ingest/formats/geojson/read-features";
+import { POINT_DEGREES, POINT_PLANE } from "@/lib/ingest/formats/point-columns";
+import { stopReading } from "@/lib/ingest/ingest-error";
+import {
+  READ_LIMITS,
+  type InspectOptions,
+  type Inspection,
+  type LogFormat,
+  type ReadLog,
+  type ReadOptions,
+} from "@/lib/ingest/log-format";
+import type { LogMapping } from "@/lib/ingest/mapping";
+import { openText } from "@/lib/ingest/open-text";
+import { NoteBook } from "@/lib/ingest/records/note-book";
+import { CELL, buildReadPlan } from "@/lib/ingest/records/read-plan";
+import { RecordCollector } from "@/lib/ingest/records/record-collector";
+
+const SAMPLE_FEATURES = 1000;
+const HEAD_BYTES = 65_536;
+
+/** GeoJSON point features, one a record; read feature by feature as the bytes arrive. */
+export const geojsonFormat: LogFormat = {
+  id: "geojson",
+  label: "GeoJSON points",
+  extensions: [".geojson", ".json", ".geojson.gz", ".geojsonl"],
+  looksLike: (head) => /^\uFEFF?\s*[{[]/.test(new TextDecoder().decode(head.subarray(0, 256))),
+  inspect: inspectGeojson,
+  read: readGeojson,
+};
+
+interface FeatureLayout {
+  features: PointFeature[];
+  names: string[];
+  /** Paths of the columns after the two of the geometry. */
+  paths: PropertyPath[];
+  crs: string | undefined;
+}
+
+/** Columns of the file by its first features: longitude and latitude of the point, then the properties. */
+async function learnLayout(source: ByteSource): Promise<FeatureLayout> {
+  const features: PointFeature[] = [];
+  const crs = readNamedCrs(new TextDecoder().decode(await readHead(source, HEAD_BYTES)));
+  for await (const feature of readFeatures(source)) {
+    features.push(feature);
+    if (features.length >= SAMPLE_FEATURES) break;
+  }
+  if (features.length === 0) {
+    stopReading("no-readings", `"${source.name}" is a FeatureCollection without features. Export the log again.`);
+  }
+  const paths = collectPaths(features.map((feature) => feature.properties));
+  if (paths.length + 2 > READ_LIMITS.columns) {
+    stopReading(
+      "too-many-columns",
+      `The features have ${paths.length} properties; a log may have 20,000. Export fewer channels.`,
+    );
+  }
+  const point = crs === undefined ? POINT_DEGREES : POINT_PLANE;
+  return { features, names: nameColumns([point.x, point.y, ...paths.map((path) => path.name)]), paths, crs };
+}
+
+/** The system named by a `crs` member of the 2008 GeoJSON draft (RFC 7946 dropped it) where it is not WGS 84. */
+function readNamedCrs(head: string): string | undefined {
+  const code = /"crs"\s*:\s*\{[^}]*"name"\s*:\s*"(?:urn:ogc:def:crs:)?EPSG:[\d.]*:?(\d{4,6})"/i.exec(head)?.[1];
+  return code === undefined || code === "4326" ? undefined : `EPSG:${code}`;
+}
+
+async function inspectGeojson(source: ByteSource, options: InspectOptions): Promise<Inspection> {
+  const { features, names, paths, crs } = await learnLayout(openText(source, options));
+  const notes = new NoteBook();
+  for (const feature of features) if (!feature.hasGeometry) notes.add("null-geometry", feature.number);
+  const cells = (field: number): string[] => {
+    if (field < 2) return features.map((feature) => coordinateText(field === 0 ? feature.x : feature.y));
+    const path = paths[field - 2];
+    return path ? features.map((feature) => readProperty(feature.properties, path)) : [];
+  };
+  const found = describeFoundColumns({ names, units: null, cells, decimalComma: false, near: options.near, notes });
+  return {
+    format: "geojson",
+    shape: found.shape,
+    encoding: "utf-8",
+    ...(crs === undefined ? {} : { crs }),
+    columns: found.columns,
+    recordsSampled: features.length,
+    notes: notes.list("feature"),
+  };
+}
+
+function coordinateText(value: number): string {
+  return Number.isNaN(value) ? "" : String(value);
+}
+
+async function readGeojson(source: ByteSource, mapping: LogMapping, options: ReadOptions): Promise<ReadLog> {
+  const layout = await learnLayout(openText(source, { signal: options.signal }));
+  const plan = buildReadPlan(mapping, layout.names);
+  const opened = openText(source, options);
+  const perRecord = Math.max(100, opened.sizeBytes / 60_000);
+  const collector = new RecordCollector(plan, {
+    expectedRecords: Math.ceil(opened.sizeBytes / perRecord) + 16,
+    place: "feature",
+  });
+  const used = layout.paths.flatMap((path, index) =>
+    plan.kinds[index + 2] === CELL.skip ? [] : [{ path, field: index + 2, kind: plan.kinds[index + 2] }],
+  );
+  for await (const feature of readFeatures(opened)) {
+    collector.line[0] = feature.x;
+    collector.line[1] = feature.y;
+    if (!feature.hasGeometry) collector.notes.add("null-geometry", feature.number);
+    for (const { path, field, kind } of used) {
+      const value = path.place === null ? feature.properties[path.key] : undefined;
+      // JSON numbers are taken as they are: turning them to text and back would cost a third of the time.
+      if (kind === CELL.number && typeof value === "number" && Math.abs(value) < 1e30) collector.line[field] = value;
+      else collector.takeText(field, readProperty(feature.properties, path), feature.number);
+    }
+    collector.commit(feature.number);
+  }
+  return collector.finish();
+}

@@ -1,0 +1,3 @@
+/** Names of the columns that a point's own geometry gives, beside those of its attributes. */
+export const POINT_DEGREES = { x: "point longitude", y: "point latitude" } as const;
+export const POINT_PLANE = { x: "point x", y: "point y" } as const;
