@@ -2,6 +2,7 @@ import type { LogChannel, MachineLog } from "@/lib/logs/machine-log";
 import { simulateSeedingLog } from "@/lib/simulator/simulate-seeding-log";
 import { SIMULATION_DEFAULTS, type SimulationInput } from "@/lib/simulator/simulation-options";
 import type { FileStyle } from "@/lib/simulator/writers/file-style";
+import { writeWideCsvChunks } from "@/lib/simulator/writers/write-csv";
 
 export type BenchmarkSize = "small" | "large";
 
@@ -38,6 +39,11 @@ export function createBenchmarkLog(size: BenchmarkSize): MachineLog {
 
 /** How the benchmark files are written: about 49 MB for the large one. */
 export const BENCHMARK_STYLE: Partial<FileStyle> = { force: "N", depth: "mm", forceDecimals: 1, positionDecimals: 7 };
+
+/** The benchmark file piece by piece, for a script to pour into a file: `for (const piece of writeBenchmarkCsv("large"))`. */
+export function* writeBenchmarkCsv(size: BenchmarkSize): Generator<string> {
+  yield* writeWideCsvChunks(createBenchmarkLog(size), BENCHMARK_STYLE);
+}
 
 /** The log's first records. */
 export function keepFirstRecords(log: MachineLog, records: number): MachineLog {

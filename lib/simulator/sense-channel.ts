@@ -9,6 +9,8 @@ export interface Sensor {
   /** Readings outside these are held at them (a load pin shows 0, not a pull; a force is never above its limit). */
   lowest: number;
   highest: number;
+  /** Where each row's sensor has its zero, in the channel's unit. */
+  zero: number[];
   /** Zero drift in the channel's unit per hour, one entry a row. */
   driftPerHour: number[];
   resolution: number;
@@ -24,8 +26,9 @@ export function senseChannel(truth: Float32Array, timeS: Float64Array, sensor: S
     const row = index % sensor.rows;
     const noisy = (late[index] ?? NaN) + sensor.noise * sensor.random.normal();
     const hours = (timeS[(index - row) / sensor.rows] ?? 0) / 3600;
-    const drifted = Math.min(sensor.highest, Math.max(sensor.lowest, noisy)) + (sensor.driftPerHour[row] ?? 0) * hours;
-    stored[index] = roundTo(drifted, sensor.resolution);
+    const held = Math.min(sensor.highest, Math.max(sensor.lowest, noisy));
+    const shift = (sensor.zero[row] ?? 0) + (sensor.driftPerHour[row] ?? 0) * hours;
+    stored[index] = roundTo(held + shift, sensor.resolution);
     if (sensor.missingShare > 0 && sensor.random.uniform() < sensor.missingShare) stored[index] = NaN;
   }
   return stored;

@@ -2,6 +2,7 @@ import type { Track } from "@/lib/simulator/drive-path-records";
 import { frameCapacityN, STANDARD_GRAVITY_MPS2 } from "@/lib/simulator/frame-capacity";
 import type { Ground } from "@/lib/simulator/ground-resistance";
 import type { RowLayout } from "@/lib/simulator/row-layout";
+import { createSeededRandom } from "@/lib/simulator/seeded-random";
 import type { SimulationOptions } from "@/lib/simulator/simulation-options";
 
 /** True state of every row unit at every record, row-major by record like a log's channels; no sensor has touched it yet. */
@@ -15,6 +16,8 @@ export interface RowForces {
   /** One entry a record. */
   sumOfForcesN: Float64Array;
   frameLifted: Uint8Array;
+  /** One entry a row: lasting extra resistance, whatever the place. */
+  rowEffectN: Float64Array;
 }
 
 interface Inputs {
@@ -30,18 +33,17 @@ interface Inputs {
  * push up harder than the frame weighs, the frame lifts and every row's force is cut by the same share.
  */
 export function simulateRowForces({ options, track, ground, layout }: Inputs): RowForces {
-  const result = emptyForces(track.records, layout.rows);
+  const result = emptyForces(track.records, fixedRowEffects(options, layout.rows));
   const resistanceN = new Float64Array(layout.rows);
   const commandedN = new Float64Array(layout.rows);
   const step = { resistanceN, commandedN, pushedN: new Float64Array(layout.rows) };
-  const rowEffectN = fixedRowEffects(options, layout.rows);
   const capacityN = options.frameLifts && options.machine.frame ? frameCapacityN(options.machine.frame) : Infinity;
   let startedAt = -1;
   for (let record = 0; record < track.records; record += 1) {
     if (track.pass[record] === 0) continue;
     const starts = record === 0 || track.pass[record] !== track.pass[record - 1];
     if (starts) startedAt = record;
-    askGround({ options, track, ground, layout }, record, result.inBand, resistanceN, rowEffectN);
+    askGround({ options, track, ground, layout }, record, result, resistanceN);
     const rampShare = startRampShare(options, distanceBetween(track, startedAt, record));
     const sumN = command(options, step, starts, rampShare);
     const keptShare = sumN > capacityN ? capacityN / sumN : 1;
@@ -52,8 +54,8 @@ export function simulateRowForces({ options, track, ground, layout }: Inputs): R
   return result;
 }
 
-function emptyForces(records: number, rows: number): RowForces {
-  const size = records * rows;
+function emptyForces(records: number, rowEffectN: Float64Array): RowForces {
+  const size = records * rowEffectN.length;
   return {
     downforceN: new Float32Array(size),
     marginN: new Float32Array(size),
@@ -62,12 +64,14 @@ function emptyForces(records: number, rows: number): RowForces {
     inBand: new Uint8Array(size),
     sumOfForcesN: new Float64Array(records),
     frameLifted: new Uint8Array(records),
+    rowEffectN,
   };
 }
 
 /** Resistance that belongs to the row and not to the place, one entry a row. */
 function fixedRowEffects(options: SimulationOptions, rows: number): Float64Array {
-  const effect = new Float64Array(rows);
+  const random = createSeededRandom(options.seed, "row spread");
+  const effect = Float64Array.from({ length: rows }, () => options.rowSpread.resistanceN * random.normal());
   for (const row of options.wheelTracks?.rows ?? []) {
     effect[row - 1] = (effect[row - 1] ?? 0) + (options.wheelTracks?.effectN ?? 0);
   }
@@ -80,9 +84,8 @@ function fixedRowEffects(options: SimulationOptions, rows: number): Float64Array
 function askGround(
   { options, track, ground, layout }: Inputs,
   record: number,
-  inBand: Uint8Array,
+  { inBand, rowEffectN }: RowForces,
   resistanceN: Float64Array,
-  rowEffectN: Float64Array,
 ): void {
   const heading = track.headingRad[record] ?? 0;
   const sin = Math.sin(heading);

@@ -105,6 +105,7 @@ function senseRows(
     noise,
     lowest: 0,
     highest: id === "downforce" ? (options.machine.maxDownforceN ?? Infinity) : Infinity,
+    zero: id === "margin" ? marginZeros(options) : [],
     driftPerHour: id === "margin" ? options.driftNPerHour : [],
     resolution,
     missingShare: options.missingShare,
@@ -118,6 +119,11 @@ function senseRows(
     values,
     resolution: resolution > 0 ? resolution : null,
   };
+}
+
+function marginZeros(options: SimulationOptions): number[] {
+  const random = createSeededRandom(options.seed, "margin zeros");
+  return Array.from({ length: options.machine.rowCount }, () => options.rowSpread.marginZeroN * random.normal());
 }
 
 interface TruthInputs {
@@ -140,6 +146,7 @@ function describeTruth({ options, planned: { track, axes }, layout, forces, log 
     passes,
     bands: options.bands,
     inBandShare: shareInBand(forces.inBand, weights, layout.rows),
+    rowEffectN: [...forces.rowEffectN],
     wornRow: options.wornRow,
     wheelTracks: options.wheelTracks,
     coverage: options.headland?.downInCorners ? null : describeCoverage({ track, layout, passes, axes }),

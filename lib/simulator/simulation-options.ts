@@ -85,6 +85,8 @@ export interface SimulationOptions {
   bands: ResidueBands | null;
   wornRow: WornRow | null;
   wheelTracks: WheelTrackRows | null;
+  /** Lasting differences between healthy rows (standard deviations): what each asks of the ground, and its sensor's zero. */
+  rowSpread: { resistanceN: number; marginZeroN: number };
   soil: SoilTrend;
   /** Extra resistance for each m/s a row runs faster than the mean speed. */
   speedEffectNPerMps: number;
@@ -141,6 +143,7 @@ export const SIMULATION_DEFAULTS: SimulationOptions = {
   bands: null,
   wornRow: null,
   wheelTracks: null,
+  rowSpread: { resistanceN: 0, marginZeroN: 0 },
   soil: { gradientEastNPerM: 0, gradientNorthNPerM: 0, noiseN: 0, noiseRangeM: 25 },
   speedEffectNPerMps: 0,
   startRamp: { lengthM: 0, fromShare: 1 },

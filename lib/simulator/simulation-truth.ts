@@ -44,6 +44,8 @@ export interface SimulationTruth {
   bands: ResidueBands | null;
   /** Share of each row's distance that lay in a band, row 1 first. */
   inBandShare: number[];
+  /** Lasting extra resistance of each row: spread, wheel track and wear the controller feels. */
+  rowEffectN: number[];
   wornRow: WornRow | null;
   wheelTracks: WheelTrackRows | null;
   /** Null where the implement worked through curves. */

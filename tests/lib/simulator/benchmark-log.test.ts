@@ -1,6 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { BENCHMARK_STYLE, createBenchmarkLog } from "@/lib/simulator/benchmark-log";
-import { writeWideCsvChunks } from "@/lib/simulator/writers/write-csv";
+import { createBenchmarkLog, writeBenchmarkCsv } from "@/lib/simulator/benchmark-log";
 
 describe("createBenchmarkLog", () => {
   it.each([
@@ -16,7 +15,7 @@ describe("createBenchmarkLog", () => {
     let pieces = 0;
     let lines = 0;
     let longest = 0;
-    for (const piece of writeWideCsvChunks(createBenchmarkLog("small"), BENCHMARK_STYLE)) {
+    for (const piece of writeBenchmarkCsv("small")) {
       pieces += 1;
       lines += piece.split("\n").length - 1;
       longest = Math.max(longest, piece.length);
