@@ -10,7 +10,7 @@ export interface FrameBalance {
   missing: string[];
   /** Load on the frame's wheels less the least they must keep; over the distance worked. */
   headroomN: { p05: number; p50: number } | null;
-  /** Share (0..1) of the area worked with the wheels carrying under 1 % of what they carry with the openers up. */
+  /** Share (0..1) of the area worked with the wheels carrying under 0.5 % of what they carry with the openers up. */
   shareLiftedM2: number | null;
   /** Equal force on every row at which the wheels come off the ground. */
   liftOffForcePerRowN: number | null;
@@ -19,7 +19,7 @@ export interface FrameBalance {
 }
 
 /** The frame counts as lifted when its wheels carry less than this share of what they carry with the openers up. */
-const LIFTED_BELOW_SHARE = 0.01;
+const LIFTED_BELOW_SHARE = 0.005;
 /** Lifted on more of the area than this is short of weight, even if the 5th percentile of the headroom is above 0. */
 const SHORT_FROM_SHARE = 0.01;
 
@@ -42,6 +42,11 @@ export function liftOffForceN(frame: Frame, rows: number): number {
   return frameMomentNm(frame) / (rows * frame.rowsBehindHitchM);
 }
 
+/** Wheel load under which the frame counts as lifted. */
+export function liftedBelowN(frame: Frame): number {
+  return LIFTED_BELOW_SHARE * wheelLoadN(frame, 0);
+}
+
 /** Strikes the frame's balance at every working record: how much weight was left, and where there was none. */
 export function measureFrameBalance(placed: PlacedLog, distances: Float32Array): FrameBalance {
   const frame = placed.machine?.frame;
@@ -61,8 +66,8 @@ export function measureFrameBalance(placed: PlacedLog, distances: Float32Array):
   );
   if (sorted.values.length === 0) return { state: "unknown", missing: ["readings of force while working"], ...unknown };
   const headroomN = { p05: weightedQuantileSorted(sorted, 0.05), p50: weightedQuantileSorted(sorted, 0.5) };
-  const liftedBelowN = LIFTED_BELOW_SHARE * wheelLoadN(frame, 0);
-  const lift = measureLift(placed, loads, areas, liftedBelowN);
+  const lifted = loads.map((load) => (Number.isNaN(load) ? NaN : load <= liftedBelowN(frame) ? 1 : 0));
+  const lift = measureLift(placed, lifted, areas);
   const short = headroomN.p05 < 0 || lift.share >= SHORT_FROM_SHARE;
   return {
     state: short ? "short" : "enough",
@@ -75,7 +80,7 @@ export function measureFrameBalance(placed: PlacedLog, distances: Float32Array):
 }
 
 /** Wheel load of every record; NaN outside passes and where fewer than half the rows have a force (the rest take the mean). */
-function wheelLoads(placed: PlacedLog, frame: Frame, forces: Float32Array): Float32Array {
+export function wheelLoads(placed: PlacedLog, frame: Frame, forces: Float32Array): Float32Array {
   const { rows, forwardM } = placed.geometry;
   const loads = new Float32Array(placed.log.records).fill(NaN);
   for (let record = 0; record < loads.length; record++) {
@@ -102,31 +107,29 @@ function workedAreas(placed: PlacedLog, distances: Float32Array): Float32Array {
   });
 }
 
-// kernel: one pass over the records
 function measureLift(
   placed: PlacedLog,
-  loads: Float32Array,
+  lifted: Float32Array,
   areas: Float32Array,
-  liftedBelowN: number,
 ): { share: number; longest: FrameBalance["longestLift"] } {
-  let lifted = 0;
+  let liftedM2 = 0;
   let total = 0;
   let open: FrameBalance["longestLift"] = null;
   let longest: FrameBalance["longestLift"] = null;
   const widthM = placed.geometry.widthM.reduce((sum, width) => sum + width, 0);
-  for (let record = 0; record < loads.length; record++) {
-    if (Number.isNaN(loads[record]!)) continue;
+  for (let record = 0; record < lifted.length; record++) {
+    if (Number.isNaN(lifted[record]!)) continue;
     total += areas[record]!;
-    if (loads[record]! > liftedBelowN) {
+    if (lifted[record] === 0) {
       open = null;
       continue;
     }
-    lifted += areas[record]!;
+    liftedM2 += areas[record]!;
     const follows = open?.lastRecord === record - 1 && placed.passOf[record] === placed.passOf[record - 1];
     if (!open || !follows) open = { firstRecord: record, lastRecord: record, lengthM: 0 };
     open.lastRecord = record;
     open.lengthM += areas[record]! / widthM;
     if (!longest || open.lengthM > longest.lengthM) longest = open;
   }
-  return { share: total > 0 ? lifted / total : 0, longest };
+  return { share: total > 0 ? liftedM2 / total : 0, longest };
 }

@@ -15,18 +15,22 @@ const METHOD =
 /** Rows that stand out from the rest: one finding a row, or one for rows side by side, which need not be the rows' fault. */
 export function findOddRows(input: VerdictInput): Finding[] {
   const evidence = [input.margin, input.downforce, input.resistance].filter((one) => one !== null);
-  const blamed = new Map<number, ChannelEvidence>();
-  for (const one of evidence) {
-    for (const item of one.statistics.items) if (item.flagged && !blamed.has(item.row)) blamed.set(item.row, one);
-  }
-  const runs = sideBySide([...blamed.keys()]);
-  const findings = runs.flatMap((run) =>
-    run.length >= 3
-      ? [sayRun(input, run, blamed.get(run[0]!)!)]
-      : run.map((row) => sayRow(input, row, blamed.get(row)!)),
-  );
+  const said = new Set<number>();
+  const findings = evidence.flatMap((one) => {
+    const flagged = one.statistics.items.filter((item) => item.flagged).map((item) => item.row);
+    const made = sideBySide(flagged).flatMap((run) => {
+      const left = run.filter((row) => !said.has(row));
+      if (run.length >= SIDE_BY_SIDE) return left.length > 0 ? [sayRun(input, run, one)] : [];
+      return left.map((row) => sayRow(input, row, one));
+    });
+    for (const row of flagged) said.add(row);
+    return made;
+  });
   return [...findings, ...sayWheelTracks(evidence)];
 }
+
+/** As many rows differing side by side need not be the rows' own fault. */
+const SIDE_BY_SIDE = 3;
 
 /** Splits row numbers into runs of neighbours. */
 function sideBySide(rows: number[]): number[][] {
@@ -77,7 +81,7 @@ function sayRow(input: VerdictInput, row: number, evidence: ChannelEvidence): Fi
     },
     value: step.deviation,
     unit: evidence.channel.unit,
-    interval: passInterval(step.byPass),
+    interval: intervalAbout(step.deviation, step.byPass),
     confidence: fewPasses ? "low" : input.placed.passes.length < 8 ? "medium" : "high",
     method: METHOD,
     place: worstPlace(input, row),
@@ -85,6 +89,14 @@ function sayRow(input: VerdictInput, row: number, evidence: ChannelEvidence): Fi
     caution: pushed ? `${CAUTIONS.underMachine} ${CAUTIONS.hydraulics}` : CAUTIONS.underMachine,
     row,
   });
+}
+
+/** The spread of the passes, laid about the value itself. */
+function intervalAbout(value: number, byPass: number[]): [number, number] | null {
+  const interval = passInterval(byPass);
+  if (!interval) return null;
+  const mean = byPass.reduce((sum, each) => sum + each, 0) / byPass.length;
+  return [value + interval[0] - mean, value + interval[1] - mean];
 }
 
 /** The first thing to look at, for the sentence: everything up to the first comma. */

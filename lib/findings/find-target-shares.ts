@@ -1,3 +1,4 @@
+import { liftedBelowN, wheelLoads } from "@/lib/ballast/frame-balance";
 import { CAUTIONS } from "@/lib/findings/cautions";
 import type { Finding } from "@/lib/findings/finding";
 import { makeFinding, sayRows, startSentence } from "@/lib/findings/make-finding";
@@ -21,20 +22,12 @@ export function findUnderTarget(input: VerdictInput): Finding[] {
     rowSeries(placed, margin.channel, input.distances, worst - 1),
     (x) => x < below,
   );
-  const limited = shareAtLimitWhileUnder(input, below);
-  const reason =
-    limited === null
-      ? ""
-      : limited >= 0.5
-        ? " On {limited} of that the force stood at its limit: consistent with too little weight or too high a resistance."
-        : " The force was below its limit on most of that: consistent with the target setting or a slow system.";
+  const reason = sayReason(input, rows, below);
   return [
     makeFinding({
       kind: "rows-under-target",
       severity: "act",
-      sentenceTemplate:
-        `{count} of {all} rows ran under the target margin on at least {from} of their distance; row {worst} most, on ` +
-        `{share}, for {longest} at a stretch.${reason}`,
+      sentenceTemplate: `${rows.length === 1 ? ONE_UNDER : SEVERAL_UNDER}${reason.text}`,
       values: {
         count: { value: rows.length, unit: "1" },
         all: { value: placed.geometry.rows, unit: "1" },
@@ -42,7 +35,7 @@ export function findUnderTarget(input: VerdictInput): Finding[] {
         worst: { value: worst, unit: "1" },
         share: { value: worstShare, unit: "fraction" },
         longest: { value: stretch?.lengthM ?? 0, unit: "m" },
-        ...(limited === null ? {} : { limited: { value: limited, unit: "fraction" } }),
+        ...reason.values,
       },
       value: worstShare,
       unit: "fraction",
@@ -54,6 +47,13 @@ export function findUnderTarget(input: VerdictInput): Finding[] {
     }),
   ];
 }
+
+const ONE_UNDER = "Row {worst} ran under the target margin on {share} of its distance, for {longest} at a stretch.";
+const SEVERAL_UNDER =
+  "{count} of {all} rows ran under the target margin on at least {from} of their distance; row {worst} most, on {share}, for {longest} at a stretch.";
+const ONE_AT_LIMIT = "Row {worst} had no more force to give on {share} of its distance.";
+const SEVERAL_AT_LIMIT =
+  "{count} of {all} rows had no more force to give on at least {from} of their distance; row {worst} most, on {share}.";
 
 function sayHeld(rows: number, method: string): Finding {
   return makeFinding({
@@ -69,16 +69,69 @@ function sayHeld(rows: number, method: string): Finding {
   });
 }
 
-/** Of the readings under target, the share (by distance) with the same row's force at its limit; null without forces or a limit. */
-function shareAtLimitWhileUnder({ placed, margin, downforce, distances }: VerdictInput, below: number): number | null {
+interface Reason {
+  text: string;
+  values: Finding["values"];
+}
+
+/**
+ * What force and frame were doing while rows were under target. Rows that stand out from the rest are left out, since
+ * their lack has its own finding; silent where fewer than half the rows remain.
+ */
+function sayReason(input: VerdictInput, rows: number[], below: number): Reason {
+  const items = input.margin?.statistics.items ?? [];
+  const common = rows.filter((row) => items[row - 1]?.flagged !== true);
+  const silent = { text: "", values: {} };
+  if (common.length * 2 < items.length) return silent;
+  const lifted = shareWhileUnder(input, { rows: common, below, holds: liftedReadings(input) });
+  if (lifted !== null && lifted >= 0.4) {
+    const text = " On {lifted} of that the frame was lifted: consistent with too little weight on it.";
+    return { text, values: { lifted: { value: lifted, unit: "fraction" } } };
+  }
+  const limited = shareWhileUnder(input, { rows: common, below, holds: limitedReadings(input) });
+  if (limited === null) return silent;
+  if (limited < 0.5) {
+    return {
+      ...silent,
+      text: " The force was below its limit on most of that: consistent with the setting or a slow system.",
+    };
+  }
+  const text =
+    " On {limited} of that the force stood at its limit: consistent with too little force or weight for this ground.";
+  return { text, values: { limited: { value: limited, unit: "fraction" } } };
+}
+
+type ReadingTest = ((record: number, at: number) => boolean) | null;
+
+function liftedReadings({ placed, downforce }: VerdictInput): ReadingTest {
+  const frame = placed.machine?.frame;
+  if (!frame || !downforce || downforce.channel.unit !== "N") return null;
+  const loads = wheelLoads(placed, frame, downforce.channel.values);
+  const limit = liftedBelowN(frame);
+  return (record) => loads[record]! <= limit;
+}
+
+function limitedReadings({ placed, downforce }: VerdictInput): ReadingTest {
   const from = downforce && atLimitFromN(placed, downforce.channel);
-  if (!margin || !downforce || from === null) return null;
+  return downforce && from !== null ? (_, at) => downforce.channel.values[at]! >= from : null;
+}
+
+/** Of the distance that `rows` ran under target, the share for which `holds`; null where that cannot be known. */
+function shareWhileUnder(
+  input: VerdictInput,
+  { rows, below, holds }: { rows: number[]; below: number; holds: ReadingTest },
+): number | null {
+  if (!input.margin || !holds) return null;
+  const { values, rows: width } = input.margin.channel;
   let under = 0;
   let both = 0;
-  for (let at = 0; at < margin.channel.values.length; at++) {
-    if (!(margin.channel.values[at]! < below) || Number.isNaN(downforce.channel.values[at]!)) continue;
-    under += distances[at]!;
-    if (downforce.channel.values[at]! >= from) both += distances[at]!;
+  for (let record = 0; record < input.placed.log.records; record++) {
+    for (const row of rows) {
+      const at = record * width + row - 1;
+      if (!(values[at]! < below)) continue;
+      under += input.distances[at]!;
+      if (holds(record, at)) both += input.distances[at]!;
+    }
   }
   return under > 0 ? both / under : null;
 }
@@ -98,8 +151,7 @@ export function findAtLimit(input: VerdictInput): Finding[] {
     makeFinding({
       kind: "rows-at-limit",
       severity: "look",
-      sentenceTemplate:
-        "{count} of {all} rows had no more force to give on at least {from} of their distance; row {worst} most, on {share}.",
+      sentenceTemplate: rows.length === 1 ? ONE_AT_LIMIT : SEVERAL_AT_LIMIT,
       values: {
         count: { value: rows.length, unit: "1" },
         all: { value: placed.geometry.rows, unit: "1" },

@@ -19,7 +19,7 @@ export function makeFinding(given: Spoken & Optional): Finding {
     caution: null,
     row: null,
     ...given,
-    id: given.row ? `${given.kind}-row-${given.row}` : given.kind,
+    id: findingId(given.kind, given.row ?? null, rows),
     rows,
     values,
     sentence: sayTemplate(given.sentenceTemplate, values, "metric"),
@@ -43,4 +43,11 @@ export function sayRows(rows: readonly number[]): string {
 
 export function startSentence(text: string): string {
   return text.charAt(0).toUpperCase() + text.slice(1);
+}
+
+/** Stable for the same log: kind, and the row or rows it speaks of where there may be several of a kind. */
+function findingId(kind: Finding["kind"], row: number | null, rows: readonly number[]): string {
+  if (row !== null) return `${kind}-row-${row}`;
+  const several = kind === "rows-side-by-side";
+  return several ? `${kind}-${rows[0]}-${rows[rows.length - 1]}` : kind;
 }

@@ -78,9 +78,7 @@ export function passVerdict(placed: PlacedLog, options: { distances?: Float32Arr
     weight: { headroomN, shareLiftedM2, state, missing: input.balance.missing, liftOffForcePerRowN },
     findings,
     headline: chooseHeadline(findings),
-    rowsStandingOut: [...new Set(odd.filter((one) => one.kind !== "wheel-tracks").flatMap((one) => one.rows))].sort(
-      (a, b) => a - b,
-    ),
+    rowsStandingOut: odd.flatMap((one) => (one.kind === "row-stands-out" ? one.rows : [])).sort((a, b) => a - b),
     missing,
     resistanceCensoredShare: input.resistance?.channel.censoredShare ?? null,
     thresholds: VERDICT_THRESHOLDS,

@@ -3,10 +3,11 @@ import { formatQuantity } from "@/lib/units/format-quantity";
 
 export type UnitSystem = "metric" | "imperial";
 
-/** A share in words: whole percent, one decimal under 10 %. */
+/** A share in words: whole percent, one decimal (unless it is 0) under 10 and over 99 %. */
 export function sayShare(share: number): string {
   const percent = 100 * share;
-  return `${percent < 9.95 && percent > 0 ? percent.toFixed(1) : percent.toFixed(0)} %`;
+  const fine = percent < 9.95 || percent > 99;
+  return `${percent.toFixed(fine ? 1 : 0).replace(/\.0$/, "")}\u202f%`;
 }
 
 function sayValue({ value, unit }: { value: number; unit: string }, system: UnitSystem): string {

@@ -67,10 +67,10 @@ export const Z_LIMIT = 3.5;
  *
  * Rows that stand out together and evenly about the centre line are where tractor or carrying wheels ran; they are
  * compared within their own group: their z counts from the group's median (of two rows: from the one nearer the rest),
- * with the same spread. All other rows keep the plain z.
+ * with the same spread. All other rows keep the plain z. More rows side by side than a wheel is wide (`maxTrackRows`), or
+ * a block across the centre line, are no wheel track: a band of residue driven along would look the same.
  */
-export function scoreRows(medianDeviations: ArrayLike<number>): RowScores {
-  const rows = medianDeviations.length;
+export function scoreRows(medianDeviations: ArrayLike<number>, options: { maxTrackRows?: number } = {}): RowScores {
   const centre = median(medianDeviations);
   const deviation = Float64Array.from(medianDeviations, (value) => value - centre);
   const none = (reason: string) => ({ deviation, z: Array.from(deviation, () => null), wheelTrackRows: [], reason });
@@ -79,19 +79,14 @@ export function scoreRows(medianDeviations: ArrayLike<number>): RowScores {
   const spread = robustSpread(deviation);
   if (spread === null) return none("no spread: every row reads the same");
   const plain = Array.from(deviation, (value) => (Number.isFinite(value) ? value / spread : null));
-  const groups = findWheelTracks(deviation, spread);
+  const groups = findWheelTracks(deviation, spread, options.maxTrackRows ?? 3);
   const z = [...plain];
   for (const group of groups) {
     const reference = groupReference(group.map((row) => deviation[row]!));
     for (const row of group) z[row] = (deviation[row]! - reference) / spread;
   }
   const wheelTrackRows = groups.flat().map((row) => row + 1);
-  return {
-    deviation,
-    z,
-    wheelTrackRows: wheelTrackRows.filter((row) => row <= rows).sort((a, b) => a - b),
-    reason: null,
-  };
+  return { deviation, z, wheelTrackRows: wheelTrackRows.sort((a, b) => a - b), reason: null };
 }
 
 /** The median of three or more; of two, the one nearer zero, so that one of a pair going bad still stands out. */
@@ -102,30 +97,38 @@ function groupReference(deviations: number[]): number {
 }
 
 /**
- * Groups (row indices from 0) of rows that stand out the same way as their mirror row. A mirror pair must agree in sign,
- * both beyond the limit, the smaller at least half the larger; one group for high rows, one for low.
+ * Groups (row indices from 0) of rows that stand out the same way as their mirror row: one group for high rows, one for low.
+ * A pair must agree in sign, both beyond the limit, the smaller at least half the larger (or lie beside such a pair: a wheel
+ * is often two rows wide).
  */
-function findWheelTracks(deviation: Float64Array, spread: number): number[][] {
-  const groups: Record<"high" | "low", number[]> = { high: [], low: [] };
+function findWheelTracks(deviation: Float64Array, spread: number, maxTrackRows: number): number[][] {
   const last = deviation.length - 1;
-  for (let row = 0; row < last - row; row++) {
-    const left = deviation[row]!;
-    const right = deviation[last - row]!;
-    const smaller = Math.min(Math.abs(left), Math.abs(right));
-    if (!(left * right > 0) || smaller <= Z_LIMIT * spread) continue;
-    if (smaller < 0.5 * Math.max(Math.abs(left), Math.abs(right)) && !hasPair(deviation, row, spread)) continue;
-    groups[left > 0 ? "high" : "low"].push(row, last - row);
+  const half = Math.floor(deviation.length / 2);
+  const pairs = Array.from({ length: half }, (_, row) => pairKind(deviation[row]!, deviation[last - row]!, spread));
+  const member = pairs.map((kind, row) => {
+    if (kind === null) return false;
+    const beside = [pairs[row - 1], pairs[row + 1]].some((other) => other?.even === true && other.high === kind.high);
+    return kind.even || beside;
+  });
+  const groups: Record<"high" | "low", number[]> = { high: [], low: [] };
+  for (let first = 0; first < half; first++) {
+    let end = first;
+    while (end < half && member[end]) end++;
+    if (end === first) continue;
+    if (end - first <= maxTrackRows && end < half) {
+      for (let row = first; row < end; row++) groups[pairs[row]!.high ? "high" : "low"].push(row, last - row);
+    }
+    first = end;
   }
   return Object.values(groups).filter((group) => group.length > 0);
 }
 
-/** True where the row beside this pair forms a like pair itself: a wheel is often two rows wide. */
-function hasPair(deviation: Float64Array, row: number, spread: number): boolean {
-  const last = deviation.length - 1;
-  return [row - 1, row + 1].some((beside) => {
-    const left = deviation[beside] ?? NaN;
-    const right = deviation[last - beside] ?? NaN;
-    const smaller = Math.min(Math.abs(left), Math.abs(right));
-    return left * right > 0 && smaller > Z_LIMIT * spread && smaller >= 0.5 * Math.max(Math.abs(left), Math.abs(right));
-  });
+function standsOut(deviation: number, spread: number): boolean {
+  return Math.abs(deviation) > Z_LIMIT * spread;
+}
+
+function pairKind(left: number, right: number, spread: number): { high: boolean; even: boolean } | null {
+  if (!(left * right > 0) || !standsOut(left, spread) || !standsOut(right, spread)) return null;
+  const smaller = Math.min(Math.abs(left), Math.abs(right));
+  return { high: left > 0, even: smaller >= 0.5 * Math.max(Math.abs(left), Math.abs(right)) };
 }

@@ -101,8 +101,11 @@ function scoreChannel(placed: PlacedLog, channel: ResolvedChannel, distances: Fl
     const series = rowSeries(placed, { values, rows: channel.rows }, distances, row);
     return weightedQuantile(series.values, series.weightsM, 0.5);
   });
-  return scoreRows(typical);
+  return scoreRows(typical, { maxTrackRows: Math.max(2, Math.floor(WHEEL_WIDTH_M / placed.geometry.widthM[0]!)) });
 }
+
+/** A tractor's wheel or belt is at most about this wide. Common practice, no source. */
+const WHEEL_WIDTH_M = 1;
 
 type Described = Omit<RowStatisticsItem, "deviationZ" | "flagged" | "reason">;
 

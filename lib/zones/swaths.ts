@@ -1,0 +1,51 @@
+import { kinks, unkinkPolygon } from "@turf/turf";
+import type { Feature, FeatureCollection, MultiPolygon, Polygon } from "geojson";
+import { geodesicAreaM2 } from "@/lib/geo/geodesic-area";
+import type { Pass, PlacedLog } from "@/lib/logs/placed-log";
+import { passSteps } from "@/lib/rows/pass-members";
+import { ringMeets, type Bbox } from "@/lib/zones/plane-window";
+import { stripRing, type Strip } from "@/lib/zones/strip-polygon";
+
+export interface SwathProperties {
+  pass: number;
+  /** Area of the polygon on the ellipsoid. */
+  areaM2: number;
+  headingDeg: number | null;
+  lengthM: number;
+}
+
+export type SwathCollection = FeatureCollection<Polygon | MultiPolygon, SwathProperties>;
+
+/** One polygon a pass: the ground between its outer row edges. Where a tight turn makes it cross itself, its parts. */
+export function buildSwaths(placed: PlacedLog, options: { bbox?: Bbox } = {}): SwathCollection {
+  const strip = outerStrip(placed);
+  const features = placed.passes.flatMap((pass) => {
+    const steps = passSteps(placed, pass).filter((step) => step.before >= 0 || step.after >= 0);
+    const ring = stripRing(placed, strip, steps);
+    if (ring.length < 4 || (options.bbox && !ringMeets(ring, options.bbox))) return [];
+    return [swathFeature(pass, { type: "Polygon", coordinates: [ring] })];
+  });
+  return { type: "FeatureCollection", features };
+}
+
+function outerStrip({ geometry }: PlacedLog): Strip {
+  const lefts = Array.from(geometry.offsetM, (offset, row) => offset - geometry.widthM[row]! / 2);
+  const rights = Array.from(geometry.offsetM, (offset, row) => offset + geometry.widthM[row]! / 2);
+  const forwardM = geometry.forwardM.reduce((sum, forward) => sum + forward, 0) / geometry.rows;
+  return { leftM: Math.min(...lefts), rightM: Math.max(...rights), forwardM };
+}
+
+function swathFeature(pass: Pass, polygon: Polygon): Feature<Polygon | MultiPolygon, SwathProperties> {
+  const geometry = untangle(polygon);
+  const headingDeg = Number.isFinite(pass.headingDeg) ? pass.headingDeg : null;
+  const areaM2 = geodesicAreaM2(geometry);
+  return { type: "Feature", geometry, properties: { pass: pass.pass, areaM2, headingDeg, lengthM: pass.lengthM } };
+}
+
+function untangle(polygon: Polygon): Polygon | MultiPolygon {
+  if (kinks(polygon).features.length === 0) return polygon;
+  const parts = unkinkPolygon(polygon).features.map((part) => part.geometry.coordinates);
+  return parts.length === 1
+    ? { type: "Polygon", coordinates: parts[0]! }
+    : { type: "MultiPolygon", coordinates: parts };
+}
