@@ -5,6 +5,7 @@ import { describeChannel, listPasses, weighReadings } from "@/lib/simulator/desc
 import type { Track } from "@/lib/simulator/drive-path-records";
 import { frameCapacityN } from "@/lib/simulator/frame-capacity";
 import { createGround } from "@/lib/simulator/ground-resistance";
+import { describeWeight } from "@/lib/simulator/describe-weight";
 import { type PlannedTrack, planTrack } from "@/lib/simulator/plan-track";
 import { layOutRows, type RowLayout } from "@/lib/simulator/row-layout";
 import { createSeededRandom } from "@/lib/simulator/seeded-random";
@@ -137,8 +138,9 @@ interface TruthInputs {
 function describeTruth({ options, planned: { track, axes }, layout, forces, log }: TruthInputs): SimulationTruth {
   const passes = listPasses(track);
   const weights = weighReadings(track, layout, passes);
-  const lifted = weighRecords(weights, layout.rows, (record) => forces.frameLifted[record] === 1);
-  const all = weighRecords(weights, layout.rows, () => true);
+  const distanceM = sumByRecord(weights, layout.rows);
+  const all = distanceM.reduce((sum, one) => sum + one, 0);
+  const lifted = distanceM.reduce((sum, one, record) => (forces.frameLifted[record] === 1 ? sum + one : sum), 0);
   const { frame } = options.machine;
   return {
     options,
@@ -152,6 +154,9 @@ function describeTruth({ options, planned: { track, axes }, layout, forces, log 
     coverage: options.headland?.downInCorners ? null : describeCoverage({ track, layout, passes, axes }),
     shareLifted: lifted / all,
     liftedM2: lifted * layout.spacingM,
+    weight: frame
+      ? describeWeight({ frame, sumOfForcesN: forces.sumOfForcesN, distanceM, rowWidthM: layout.spacingM })
+      : null,
     maxDownforceN: options.machine.maxDownforceN ?? null,
     frameCapacityN: options.frameLifts && frame ? frameCapacityN(frame) : null,
     passOfRecord: track.pass,
@@ -160,9 +165,14 @@ function describeTruth({ options, planned: { track, axes }, layout, forces, log 
   };
 }
 
-/** Summed weights of the records that `counts` picks. */
-function weighRecords(weights: Float64Array, rows: number, counts: (record: number) => boolean): number {
-  return weights.reduce((sum, weight, at) => (weight > 0 && counts(Math.floor(at / rows)) ? sum + weight : sum), 0);
+/** Distance of all rows of a record together. */
+function sumByRecord(weights: Float64Array, rows: number): Float64Array {
+  const sums = new Float64Array(weights.length / rows);
+  weights.forEach((weight, at) => {
+    const record = Math.floor(at / rows);
+    sums[record] = (sums[record] ?? 0) + weight;
+  });
+  return sums;
 }
 
 function shareInBand(inBand: Uint8Array, weights: Float64Array, rows: number): number[] {

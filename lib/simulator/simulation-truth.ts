@@ -36,6 +36,15 @@ export interface CoverageTruth {
   skippedM2: number;
 }
 
+/** Headroom = load on the frame's wheels less the least they need; lifted stretches count as minus that least load. */
+export interface WeightTruth {
+  headroomP05N: number;
+  headroomP50N: number;
+  /** Share of the working distance, and its area, with less than the least wheel load. */
+  shareBelowMinimum: number;
+  belowMinimumM2: number;
+}
+
 /** What really was, for holding the engine to it. */
 export interface SimulationTruth {
   options: SimulationOptions;
@@ -53,6 +62,8 @@ export interface SimulationTruth {
   /** Share of the working distance (and its area) with the frame's wheels off the ground. */
   shareLifted: number;
   liftedM2: number;
+  /** Null where the machine has no frame. */
+  weight: WeightTruth | null;
   maxDownforceN: number | null;
   frameCapacityN: number | null;
   /** Pass of each record of the log, 0 while lifted. */

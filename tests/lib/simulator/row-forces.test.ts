@@ -136,6 +136,19 @@ describe("frame", () => {
     expect(wheelLoadN(FRAME, 24 * 900)).toBeCloseTo(7467.3, 1);
   });
 
+  it("keeps the headroom of the weakest stretches, lifted ones at minus the least load", () => {
+    const frame = { ...FRAME, massKg: 2550, ballast: [], minWheelLoadN: 1000 };
+    const machine = { ...SIMULATION_DEFAULTS.machine, frame };
+    const even = simulateQuiet({ machine, frameLifts: true }).truth.weight;
+    // Hand-worked: (2550 x 9.80665 x 4 - 24 x 795.855 x 5.2) / 4.5 - 1000 = -843.3 N all over the field.
+    expect(even?.headroomP05N).toBeCloseTo(-843.3, 0);
+    expect(even?.headroomP50N).toBeCloseTo(-843.3, 0);
+    expect(even?.shareBelowMinimum).toBe(1);
+    const uneven = simulateQuiet({ machine, frameLifts: true, soil: { ...FLAT, gradientEastNPerM: 4 } });
+    expect(uneven.truth.weight?.headroomP05N).toBeCloseTo(-1000, 0);
+    expect(uneven.truth.weight?.headroomP50N).toBeGreaterThan(-1000);
+  });
+
   it("cuts every row's force and margin together, so that the sum never passes its weight", () => {
     const light = { ...FRAME, massKg: 2550, ballast: [] };
     const machine = { ...SIMULATION_DEFAULTS.machine, frame: light };
