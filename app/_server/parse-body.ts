@@ -6,11 +6,15 @@ import { AppError } from "@/lib/errors";
 // PostgreSQL keeps neither NUL nor half a surrogate pair in text and jsonb.
 const UNSTORABLE = /\u0000|\p{Surrogate}/u;
 
-function findUnstorable(value: unknown, path: string): string | null {
+/** Deeper than anything this API takes; without an end, a hostile body would exhaust the stack. */
+const DEEPEST = 32;
+
+function findUnstorable(value: unknown, path: string, depth = 0): string | null {
   if (typeof value === "string") return UNSTORABLE.test(value) ? path : null;
   if (typeof value !== "object" || value === null) return null;
+  if (depth > DEEPEST) throw new AppError("unprocessable", `The body is nested deeper than ${DEEPEST} levels.`);
   for (const [key, inner] of Object.entries(value)) {
-    const found = UNSTORABLE.test(key) ? path : findUnstorable(inner, path ? `${path}.${key}` : key);
+    const found = UNSTORABLE.test(key) ? path : findUnstorable(inner, path ? `${path}.${key}` : key, depth + 1);
     if (found !== null) return found;
   }
   return null;

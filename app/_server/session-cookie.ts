@@ -41,11 +41,19 @@ export async function newSessionCookie(claims: SessionClaims, settings: { secret
   return `${sessionCookieName(settings.baseUrl)}=${value}; Path=/; HttpOnly; SameSite=Lax; Max-Age=${SESSION_SECONDS}${secure}`;
 }
 
+function decodeValue(value: string): string {
+  try {
+    return decodeURIComponent(value);
+  } catch {
+    return value;
+  }
+}
+
 /** One cookie of a request. */
 export function readCookie(header: string | null, name: string): string | undefined {
   for (const part of (header ?? "").split(";")) {
     const separator = part.indexOf("=");
-    if (separator > 0 && part.slice(0, separator).trim() === name) return part.slice(separator + 1).trim();
+    if (separator > 0 && part.slice(0, separator).trim() === name) return decodeValue(part.slice(separator + 1).trim());
   }
   return undefined;
 }

@@ -88,3 +88,12 @@ export async function countFields(tx: Transaction, scope: Scope, fieldIds: strin
   }
   return found;
 }
+
+/** Ids of every log in the field, seen or not: deleting a field must not overlook one. */
+export async function listLogIdsOfField(tx: Transaction, scope: Scope, fieldId: string): Promise<string[]> {
+  const rows = await tx
+    .select({ id: logs.id })
+    .from(logs)
+    .where(and(eq(logs.organisationId, scope.organisationId), eq(logs.fieldId, fieldId)));
+  return rows.map((row) => row.id);
+}

@@ -18,6 +18,7 @@ export const PERMISSIONS = {
   "members.read": ["owner", "agronomist", "researcher"],
   "members.write": ["owner"],
   "tokens.own": ["owner", "agronomist", "researcher", "operator", "viewer"],
+  "me.own": ["owner", "agronomist", "researcher", "operator", "viewer"],
   "audit.read": ["owner"],
 } as const satisfies Record<string, readonly Role[]>;
 

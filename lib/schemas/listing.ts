@@ -7,6 +7,14 @@ export const ListQuery = z.object({
 });
 export type ListQuery = z.infer<typeof ListQuery>;
 
+/** `?force=1` on a deletion: also what hangs on it. */
+export const ForceQuery = z.object({
+  force: z
+    .enum(["0", "1"])
+    .default("0")
+    .transform((text) => text === "1"),
+});
+
 /** `{items, nextCursor}`. */
 export function listOf<Item extends z.ZodType>(item: Item) {
   return z.object({ items: z.array(item), nextCursor: z.string().nullable() });

@@ -35,4 +35,9 @@ export const Share = z.object({
 export type Share = z.infer<typeof Share>;
 export const ShareList = listOf(Share);
 /** The address holds the token and appears only in this reply. */
-export const ShareCreated = Share.extend({ url: z.string() });
+export const ShareCreated = Share.extend({
+  url: z.string(),
+  /** Whether the link was mailed; null when no address was given. */
+  emailed: z.boolean().nullable(),
+});
+export type ShareCreated = z.infer<typeof ShareCreated>;

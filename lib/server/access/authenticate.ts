@@ -2,7 +2,7 @@ import "server-only";
 import { findPersonById, type PersonRow } from "@/db/queries/system/people";
 import { findTokenByHash, recordTokenUse, type TokenRow } from "@/db/queries/system/tokens";
 import { AppError } from "@/lib/errors";
-import { countAttempt, refuseWhenLimited } from "@/lib/server/access/limit-attempts";
+import { countAttempt } from "@/lib/server/access/limit-attempts";
 import { hashSecret, passwordStamp } from "@/lib/server/access/secrets";
 
 /** Last use is written at most this often, so that reading does not write every time. */
@@ -23,7 +23,6 @@ export async function authenticateSession(claims: { userId: string; stamp: strin
 
 /** The person of a personal token. @throws AppError 401 for an unknown or expired one, 429 after too many guesses */
 export async function authenticateToken(secret: string, from: string, now: Date): Promise<Identity> {
-  await refuseWhenLimited("token", from);
   const token = await findTokenByHash(hashSecret(secret));
   const person = token ? await findPersonById(token.userId) : null;
   if (!token || !person) {

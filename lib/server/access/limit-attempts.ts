@@ -16,6 +16,8 @@ export const ATTEMPT_LIMITS = {
   share: { points: 30, duration: 300 },
   /** Wrong passcodes for one share, from everywhere. */
   passcode: { points: 20, duration: 900 },
+  /** Share links mailed by one organisation. */
+  mail: { points: 50, duration: 3600 },
   /** Wrong old passwords when changing one's password. */
   password: { points: 10, duration: 900 },
 } as const;

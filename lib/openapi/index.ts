@@ -1,0 +1,17 @@
+import { documentOperations } from "@/lib/openapi/operations/document";
+import { fieldOperations } from "@/lib/openapi/operations/fields";
+import { logOperations } from "@/lib/openapi/operations/logs";
+import { machineOperations } from "@/lib/openapi/operations/machines";
+import { peopleOperations } from "@/lib/openapi/operations/people";
+import { shareOperations } from "@/lib/openapi/operations/shares";
+import type { Operation } from "@/lib/openapi/operation";
+
+/** Every operation of the API, in the order of the reference page. Routes without an entry fail a test. */
+export const OPERATIONS: readonly Operation[] = [
+  ...fieldOperations,
+  ...machineOperations,
+  ...logOperations,
+  ...shareOperations,
+  ...peopleOperations,
+  ...documentOperations,
+];

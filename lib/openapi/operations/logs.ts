@@ -1,0 +1,3 @@
+import type { Operation } from "@/lib/openapi/operation";
+
+export const logOperations: Operation[] = [];

@@ -1,0 +1,44 @@
+import "server-only";
+import { withOrganisation } from "@/db/client";
+import { recordAudit } from "@/db/queries/audit";
+import { findPersonById, updatePerson } from "@/db/queries/system/people";
+import { AppError } from "@/lib/errors";
+import type { MePatch } from "@/lib/schemas/me";
+import type { Scope } from "@/lib/scope";
+import { countAttempt, forgetAttempts } from "@/lib/server/access/limit-attempts";
+import { hashPassword, isPasswordRight } from "@/lib/server/access/passwords";
+import { passwordStamp } from "@/lib/server/access/secrets";
+import type { Container } from "@/lib/server/container";
+
+async function newHash(userId: string, patch: MePatch): Promise<string | undefined> {
+  if (patch.newPassword === undefined) return undefined;
+  await countAttempt("password", userId);
+  const person = await findPersonById(userId);
+  if (!(await isPasswordRight(patch.currentPassword ?? "", person?.passwordHash ?? null))) {
+    throw new AppError("unprocessable", "The current password is not right.", {
+      detailCode: "wrong_password",
+      places: [{ path: "currentPassword", message: "is not right" }],
+    });
+  }
+  await forgetAttempts("password", userId);
+  return hashPassword(patch.newPassword);
+}
+
+/**
+ * Changes the person's own name, units or password. Returns the stamp that a session needs after a new password, which
+ * ends all the others; null when the password stays.
+ */
+export async function updateMe(_container: Container, scope: Scope, patch: MePatch): Promise<{ stamp: string | null }> {
+  const { name, unitSystem } = patch;
+  const passwordHash = await newHash(scope.userId, patch);
+  const changes = Object.fromEntries(
+    Object.entries({ name, unitSystem, passwordHash }).filter(([, value]) => value !== undefined),
+  );
+  if (Object.keys(changes).length === 0) return { stamp: null };
+  await updatePerson(scope.userId, changes);
+  const changed = Object.keys(changes).map((key) => (key === "passwordHash" ? "password" : key));
+  await withOrganisation(scope, (tx) =>
+    recordAudit(tx, scope, { action: "person.update", subject: scope.userId, detail: { changed } }),
+  );
+  return { stamp: passwordHash ? passwordStamp(passwordHash) : null };
+}

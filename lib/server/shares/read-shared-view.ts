@@ -1,0 +1,73 @@
+import "server-only";
+import { withOrganisation, type Transaction } from "@/db/client";
+import { findLogResult } from "@/db/queries/log-results";
+import { findLog, type LogRow } from "@/db/queries/logs";
+import { findOrganisationName } from "@/db/queries/organisations";
+import { CoverageBody, VerdictBody } from "@/lib/schemas/logs";
+import type { SharedView } from "@/lib/schemas/shared";
+import { ShareLayer } from "@/lib/schemas/shares";
+import type { Scope } from "@/lib/scope";
+import { moveToOrigin, type MoveGeometry } from "@/lib/sharing/move-to-origin";
+import { isChannelShared } from "@/lib/sharing/shared-channels";
+import { getFieldOrThrow } from "@/lib/server/fields/get-field-or-throw";
+import type { OpenedShare } from "@/lib/server/shares/open-share";
+
+interface Shown {
+  layers: string[];
+  isBlurred: boolean;
+}
+
+function describeSharedLog(log: LogRow, { layers, isBlurred }: Shown): SharedView["log"] {
+  return {
+    name: log.name,
+    kind: log.kind,
+    status: log.status,
+    startedAt: log.startedAt?.toISOString() ?? null,
+    endedAt: log.endedAt?.toISOString() ?? null,
+    rows: log.counts.rows,
+    passes: log.counts.passes,
+    version: log.version,
+    bbox: isBlurred ? null : (log.bbox ?? null),
+    channels: log.channels.filter((channel) => isChannelShared(layers, channel.id)),
+  };
+}
+
+async function readResult(tx: Transaction, scope: Scope, log: LogRow | null, kind: string): Promise<unknown> {
+  if (!log || log.version === 0) return null;
+  return findLogResult(tx, scope, { logId: log.id, version: log.version, kind });
+}
+
+function moveFindings(body: unknown, move: MoveGeometry): VerdictBody | null {
+  const verdict = VerdictBody.nullable().parse(body);
+  if (!verdict) return null;
+  return {
+    rowsUnderTarget: verdict.rowsUnderTarget,
+    rowsAtLimit: verdict.rowsAtLimit,
+    weight: verdict.weight,
+    findings: verdict.findings.map((finding) => ({ ...finding, place: move(finding.place) })),
+  };
+}
+
+/** Everything the link shows, cut down to its layers, in one transaction of its organisation. */
+export async function readSharedView({ share, scope }: OpenedShare): Promise<SharedView> {
+  const { layers, blurLocation: isBlurred } = share;
+  const has = (layer: string) => layers.includes(layer);
+  return withOrganisation(scope, async (tx) => {
+    const field = await getFieldOrThrow(tx, scope, share.fieldId);
+    const log = share.logId ? await findLog(tx, scope, share.logId) : null;
+    const move: MoveGeometry = isBlurred ? moveToOrigin(field.boundary) : (geometry) => geometry;
+    return {
+      audience: share.audience,
+      layers: ShareLayer.array().parse(layers),
+      expiresAt: share.expiresAt.toISOString(),
+      organisationName: await findOrganisationName(tx, scope),
+      fieldName: field.name,
+      blurLocation: isBlurred,
+      boundary: has("boundary") ? move(field.boundary) : null,
+      areaM2: has("boundary") ? field.areaM2 : null,
+      log: log ? describeSharedLog(log, { layers, isBlurred }) : null,
+      verdict: has("verdict") ? moveFindings(await readResult(tx, scope, log, "verdict"), move) : null,
+      coverage: has("coverage") ? CoverageBody.nullable().parse(await readResult(tx, scope, log, "coverage")) : null,
+    };
+  });
+}
