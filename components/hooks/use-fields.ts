@@ -67,7 +67,7 @@ export function useChangeField(fieldId: string) {
 export function useDeleteField() {
   const client = useQueryClient();
   return useMutation({
-    mutationFn: deleteField,
+    mutationFn: (fieldId: string) => deleteField(fieldId, true),
     onSuccess: () => client.invalidateQueries({ queryKey: queryKeys.fields, exact: true }),
   });
 }

@@ -9,11 +9,29 @@ export function useMachines(enabled = true) {
   return useQuery({ queryKey: queryKeys.machines, queryFn: listMachines, enabled });
 }
 
+/** The optional values a form has emptied must be taken away, not left as they were. */
+function asPatch(machine: Machine): Record<string, unknown> {
+  const optional = machine.kind === "seeder" ? OPTIONAL_SEEDER : OPTIONAL_COMBINE;
+  return { ...Object.fromEntries(optional.map((key) => [key, null])), ...machine };
+}
+
+const OPTIONAL_SEEDER = [
+  "rowOffsetsM",
+  "rowForwardM",
+  "antennaToHitchM",
+  "hitchToRowsM",
+  "maxDownforceN",
+  "targetMarginN",
+  "marginDeadbandN",
+  "frame",
+];
+const OPTIONAL_COMBINE = ["headerRows", "spreadWidthM"];
+
 /** Makes a machine, or changes the one named. */
 export function useSaveMachine(machineId: string | null) {
   const client = useQueryClient();
   return useMutation({
-    mutationFn: (machine: Machine) => (machineId ? changeMachine(machineId, machine) : createMachine(machine)),
+    mutationFn: (machine: Machine) => (machineId ? changeMachine(machineId, asPatch(machine)) : createMachine(machine)),
     onSuccess: () => client.invalidateQueries({ queryKey: queryKeys.machines }),
   });
 }

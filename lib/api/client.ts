@@ -33,7 +33,9 @@ export const createField = (body: FieldInput) =>
   requestJson(Field, `${ROOT}/fields`, { method: "POST", body, idempotencyKey: newKey() });
 export const changeField = (fieldId: string, body: FieldPatch) =>
   requestJson(Field, `${ROOT}/fields/${fieldId}`, { method: "PATCH", body });
-export const deleteField = (fieldId: string) => requestNothing(`${ROOT}/fields/${fieldId}`, { method: "DELETE" });
+/** `withLogs`: also what hangs on it; without, a field that holds logs is refused. */
+export const deleteField = (fieldId: string, withLogs = false) =>
+  requestNothing(`${ROOT}/fields/${fieldId}${withLogs ? "?force=1" : ""}`, { method: "DELETE" });
 
 /** Takes a boundary file (GeoJSON, KML, zipped shapefile) as it is; the server reads it. */
 export function putBoundaryFile(fieldId: string, file: File) {
@@ -48,10 +50,11 @@ export const putBoundary = (fieldId: string, geometry: unknown) =>
 export const listMachines = () => requestJson(MachineList, `${ROOT}/machines?${PAGE}`);
 export const createMachine = (body: Machine) =>
   requestJson(MachineReply, `${ROOT}/machines`, { method: "POST", body, idempotencyKey: newKey() });
-export const changeMachine = (machineId: string, body: Partial<Machine>) =>
+export const changeMachine = (machineId: string, body: Record<string, unknown>) =>
   requestJson(MachineReply, `${ROOT}/machines/${machineId}`, { method: "PATCH", body });
+/** Logs placed with it keep their own copy of the machine. */
 export const deleteMachine = (machineId: string) =>
-  requestNothing(`${ROOT}/machines/${machineId}`, { method: "DELETE" });
+  requestNothing(`${ROOT}/machines/${machineId}?force=1`, { method: "DELETE" });
 
 /** Logs. */
 export const listLogs = (fieldId: string, limit = 500) =>

@@ -1,0 +1,33 @@
+import type { Metadata } from "next";
+import { notFound } from "next/navigation";
+import { requireScope } from "@/app/_server/require-scope";
+import { MachineForm } from "@/components/machines/machine-form";
+import { PageBody } from "@/components/ui/page-body";
+import { PageHeading } from "@/components/ui/page-heading";
+import { can } from "@/lib/access/permissions";
+
+export const metadata: Metadata = { title: "New machine" };
+
+interface NewMachineProps {
+  params: Promise<{ org: string }>;
+  searchParams: Promise<{ kind?: string }>;
+}
+
+export default async function NewMachineRoute({ params, searchParams }: NewMachineProps) {
+  const [{ org }, { kind }] = await Promise.all([params, searchParams]);
+  const { scope, organisation } = await requireScope(org);
+  if (!can(scope.role, "machines.write")) notFound();
+  const isCombine = kind === "combine";
+  return (
+    <PageBody>
+      <PageHeading title={isCombine ? "New combine" : "New drill or planter"} />
+      <MachineForm
+        slug={organisation.slug}
+        machineId={null}
+        start={
+          isCombine ? { kind: "combine", name: "" } : { kind: "seeder", name: "", hitch: "rigid", antennaRightM: 0 }
+        }
+      />
+    </PageBody>
+  );
+}

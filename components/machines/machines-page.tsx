@@ -1,0 +1,135 @@
+"use client";
+
+import Link from "next/link";
+import { useMemo } from "react";
+import { useDeleteMachine, useMachines } from "@/components/hooks/use-machines";
+import { Button, buttonClass } from "@/components/ui/button";
+import { DataTable, type DataColumn } from "@/components/ui/data-table";
+import { ConfirmDialog } from "@/components/ui/dialog";
+import { EmptyState } from "@/components/ui/empty-state";
+import { Loading } from "@/components/ui/loading";
+import { Notice } from "@/components/ui/notice";
+import { Quantity } from "@/components/units/quantity";
+import { useUnits } from "@/components/units/use-units";
+import { describeFailure } from "@/lib/api/api-problem";
+import type { MachineReply } from "@/lib/schemas/machines";
+
+const KIND_WORDS: Record<MachineReply["kind"], string> = { seeder: "Drill or planter", combine: "Combine" };
+
+/** Width over ground: rows times spacing, or the header. */
+function widthM(machine: MachineReply): number {
+  return machine.kind === "seeder" ? machine.rowCount * machine.rowSpacingM : machine.headerWidthM;
+}
+
+export function MachinesPage({ slug, mayWrite }: { slug: string; mayWrite: boolean }) {
+  const machines = useMachines();
+  const remove = useDeleteMachine();
+  const { parts } = useUnits();
+  const columns = useMemo<DataColumn<MachineReply>[]>(() => {
+    const lengthUnit = parts(1, "m").unit;
+    const rulerUnit = parts(1, "m", "rowSpacing").unit;
+    return [
+      {
+        id: "name",
+        header: "Machine",
+        value: (machine) => machine.name,
+        cell: (machine) =>
+          mayWrite ? (
+            <Link
+              href={`/${slug}/machines/${machine.id}`}
+              className="inline-flex min-h-11 items-center font-semibold md:min-h-8"
+            >
+              {machine.name}
+            </Link>
+          ) : (
+            <span className="font-semibold">{machine.name}</span>
+          ),
+      },
+      { id: "kind", header: "Kind", value: (machine) => KIND_WORDS[machine.kind] },
+      {
+        id: "rows",
+        header: "Rows",
+        numeric: true,
+        value: (machine) => (machine.kind === "seeder" ? machine.rowCount : machine.headerRows),
+      },
+      {
+        id: "spacing",
+        header: `Row spacing (${rulerUnit})`,
+        numeric: true,
+        value: (machine) =>
+          machine.kind === "seeder" ? Number(parts(machine.rowSpacingM, "m", "rowSpacing").number) : undefined,
+        cell: (machine) =>
+          machine.kind === "seeder" ? <Quantity value={machine.rowSpacingM} unit="m" channel="rowSpacing" /> : "–",
+      },
+      {
+        id: "width",
+        header: `Width (${lengthUnit})`,
+        numeric: true,
+        value: (machine) => Number(parts(widthM(machine), "m").number),
+        cell: (machine) => <Quantity value={widthM(machine)} unit="m" />,
+      },
+      { id: "hitch", header: "Hitch", value: (machine) => (machine.kind === "seeder" ? machine.hitch : undefined) },
+    ];
+  }, [mayWrite, parts, slug]);
+  if (machines.isPending) return <Loading what="the machines" />;
+  if (machines.isError)
+    return (
+      <Notice state="act" urgent>
+        {describeFailure(machines.error)}
+      </Notice>
+    );
+  if (machines.data.items.length === 0) return <NoMachines slug={slug} mayWrite={mayWrite} />;
+  return (
+    <div className="space-y-3">
+      {remove.error ? (
+        <Notice state="act" urgent>
+          {describeFailure(remove.error)}
+        </Notice>
+      ) : null}
+      <DataTable
+        caption="Machines of this organisation"
+        rows={machines.data.items}
+        columns={columns}
+        rowId={(machine) => machine.id}
+        fileName="machines"
+        initialSort={{ id: "name", desc: false }}
+        actions={
+          mayWrite
+            ? (machine) => (
+                <ConfirmDialog
+                  trigger={<Button kind="quiet">Delete</Button>}
+                  title={`Delete ${machine.name}?`}
+                  confirmWords="Delete the machine"
+                  onConfirm={() => remove.mutate(machine.id)}
+                >
+                  <p>
+                    Logs already placed with it keep their own copy of it and do not change. This cannot be taken back.
+                  </p>
+                </ConfirmDialog>
+              )
+            : undefined
+        }
+      />
+    </div>
+  );
+}
+
+function NoMachines({ slug, mayWrite }: { slug: string; mayWrite: boolean }) {
+  return (
+    <EmptyState
+      title="No machine yet"
+      action={
+        mayWrite ? (
+          <Link href={`/${slug}/machines/new?kind=seeder`} className={buttonClass("primary")}>
+            Describe a drill or planter
+          </Link>
+        ) : null
+      }
+    >
+      <p>
+        A log says where the antenna was. To put every row on the ground, Coulterbook must know where on the machine the
+        rows are: how many, how far apart, how far behind the antenna.
+      </p>
+    </EmptyState>
+  );
+}

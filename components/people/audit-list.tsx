@@ -1,0 +1,53 @@
+"use client";
+
+import { useMemo } from "react";
+import { useAudit } from "@/components/hooks/use-people";
+import { DataTable, type DataColumn } from "@/components/ui/data-table";
+import { formatMoment } from "@/components/ui/format-date";
+import { Loading } from "@/components/ui/loading";
+import { Notice } from "@/components/ui/notice";
+import { describeFailure } from "@/lib/api/api-problem";
+import type { AuditList as AuditListBody } from "@/lib/schemas/people";
+import type { z } from "zod";
+
+type Entry = z.infer<typeof AuditListBody>["items"][number];
+
+/** `name: East quarter, logs: 2`. */
+function detailWords(detail: Record<string, unknown>): string {
+  return Object.entries(detail)
+    .map(([key, value]) => `${key}: ${typeof value === "string" ? value : JSON.stringify(value)}`)
+    .join(", ");
+}
+
+/** Who changed what, and when. For owners. */
+export function AuditList() {
+  const audit = useAudit();
+  const columns = useMemo<DataColumn<Entry>[]>(
+    () => [
+      { id: "at", header: "When", value: (entry) => entry.at, cell: (entry) => formatMoment(entry.at) },
+      { id: "who", header: "Who", value: (entry) => entry.userName ?? "the program" },
+      { id: "action", header: "Did", value: (entry) => entry.action },
+      { id: "subject", header: "To", value: (entry) => entry.subject },
+      { id: "detail", header: "Detail", value: (entry) => detailWords(entry.detail) },
+    ],
+    [],
+  );
+  if (audit.isPending) return <Loading what="the record of changes" />;
+  if (audit.isError)
+    return (
+      <Notice state="act" urgent>
+        {describeFailure(audit.error)}
+      </Notice>
+    );
+  return (
+    <DataTable
+      caption="Changes, newest first"
+      rows={audit.data.items}
+      columns={columns}
+      rowId={(entry) => entry.id}
+      fileName="audit"
+      initialSort={{ id: "at", desc: true }}
+      nothingWords="No change has been recorded yet."
+    />
+  );
+}
