@@ -6,6 +6,7 @@ export const ERROR_CODES = {
   not_found: { status: 404, title: "Not found" },
   method_not_allowed: { status: 405, title: "This address does not take that method" },
   conflict: { status: 409, title: "Conflicts with what is already there" },
+  not_acceptable: { status: 406, title: "Not available in that form" },
   gone: { status: 410, title: "No longer available" },
   too_large: { status: 413, title: "Too large" },
   unsupported_file: { status: 415, title: "Unknown kind of file" },

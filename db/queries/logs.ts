@@ -1,9 +1,12 @@
-import { and, desc, eq, isNull, lt, ne, or, sql, type SQL } from "drizzle-orm";
+import { and, desc, eq, isNull, ne, sql, type SQL } from "drizzle-orm";
 import type { Transaction } from "@/db/client";
-import { fieldGrants, fields, logs, machines } from "@/db/schema";
+import { visibleLog } from "@/db/queries/visibility";
+import { fields, logs, machines } from "@/db/schema";
 import { AppError } from "@/lib/errors";
 import type { Machine } from "@/lib/machines/machine";
+import { cursorInstant, decodeCursor, pageOf } from "@/lib/paging/cursor";
 import type { Boundary } from "@/lib/schemas/geometry";
+import type { ListQuery } from "@/lib/schemas/listing";
 import type { Scope } from "@/lib/scope";
 
 export type LogRow = typeof logs.$inferSelect;
@@ -15,17 +18,8 @@ export type LogChange = Partial<Omit<typeof logs.$inferInsert, "organisationId" 
 
 export const NO_COUNTS = { records: 0, rows: 0, readings: 0, flagged: 0, rejected: 0, passes: 0 };
 
-function isGranted(scope: Scope): SQL {
-  return sql`exists (select 1 from ${fieldGrants} where ${fieldGrants.organisationId} = ${scope.organisationId}
-    and ${fieldGrants.userId} = ${scope.userId} and ${fieldGrants.fieldId} = ${logs.fieldId})`;
-}
-
-/** A viewer sees logs of fields given to them; an operator sees harvest logs only of such fields; others see all. */
 function isVisible(scope: Scope): SQL | undefined {
-  const own = eq(logs.organisationId, scope.organisationId);
-  if (scope.role === "viewer") return and(own, isGranted(scope));
-  if (scope.role === "operator") return and(own, or(ne(logs.kind, "harvest"), isGranted(scope)));
-  return own;
+  return and(eq(logs.organisationId, scope.organisationId), visibleLog(scope, logs.fieldId, logs.kind));
 }
 
 export async function findLog(tx: Transaction, scope: Scope, logId: string): Promise<LogRow | null> {
@@ -43,22 +37,28 @@ export async function getLogOrThrow(tx: Transaction, scope: Scope, logId: string
   return row;
 }
 
-/** Newest first. The cursor is the last row's moment and id. */
+/** Newest first, a page at a time. */
 export async function listLogsOfField(
   tx: Transaction,
   scope: Scope,
-  input: { fieldId: string; limit: number; before: { createdAt: Date; id: string } | null },
-): Promise<LogRow[]> {
-  const { before } = input;
-  const older = before
-    ? or(lt(logs.createdAt, before.createdAt), and(eq(logs.createdAt, before.createdAt), lt(logs.id, before.id)))
+  input: { fieldId: string; query: ListQuery },
+): Promise<{ rows: LogRow[]; nextCursor: string | null }> {
+  const after = decodeCursor(input.query.cursor);
+  const older = after
+    ? sql`(date_trunc('milliseconds', ${logs.createdAt}), ${logs.id}) < (${cursorInstant(after).toISOString()}::timestamptz, ${after[1]})`
     : undefined;
-  return tx
+  const rows = await tx
     .select()
     .from(logs)
     .where(and(isVisible(scope), eq(logs.fieldId, input.fieldId), older))
-    .orderBy(desc(logs.createdAt), desc(logs.id))
-    .limit(input.limit);
+    .orderBy(desc(sql`date_trunc('milliseconds', ${logs.createdAt})`), desc(logs.id))
+    .limit(input.query.limit + 1);
+  return pageOf(rows, input.query.limit, (row) => [row.createdAt.toISOString(), row.id]);
+}
+
+/** Held until the transaction ends: no two requests handle the same bytes of an organisation at once. */
+export async function lockBytes(tx: Transaction, scope: Scope, sha256: string): Promise<void> {
+  await tx.execute(sql`select pg_advisory_xact_lock(hashtextextended(${`${scope.organisationId} ${sha256}`}, 0))`);
 }
 
 /** The oldest log of the field with these bytes. */
@@ -146,25 +146,17 @@ export async function deleteLogRows(tx: Transaction, scope: Scope, logId: string
   await tx.delete(logs).where(and(eq(logs.organisationId, scope.organisationId), eq(logs.id, logId)));
 }
 
-/** The field a log may be put in; null for an absent or foreign one, and for a viewer without a grant. */
-export async function findFieldOfLogs(
+/** Where the log's field lies; null for a field without a boundary. */
+export async function findBoundaryOfLog(
   tx: Transaction,
-  scope: Scope,
+  scope: Pick<Scope, "organisationId">,
   fieldId: string,
-): Promise<{ id: string; name: string; boundary: Boundary | null } | null> {
-  const granted = sql`exists (select 1 from ${fieldGrants} where ${fieldGrants.organisationId} = ${scope.organisationId}
-    and ${fieldGrants.userId} = ${scope.userId} and ${fieldGrants.fieldId} = ${fields.id})`;
+): Promise<Boundary | null> {
   const [row] = await tx
-    .select({ id: fields.id, name: fields.name, boundary: fields.boundary })
+    .select({ boundary: fields.boundary })
     .from(fields)
-    .where(
-      and(
-        eq(fields.organisationId, scope.organisationId),
-        eq(fields.id, fieldId),
-        scope.role === "viewer" ? granted : undefined,
-      ),
-    );
-  return row ?? null;
+    .where(and(eq(fields.organisationId, scope.organisationId), eq(fields.id, fieldId)));
+  return row?.boundary ?? null;
 }
 
 export async function findMachineOfLog(

@@ -1,6 +1,7 @@
 import { buildLog } from "@/lib/build/build-log";
 import { resolveChannel } from "@/lib/channels/resolve-channel";
 import { measureCoverage } from "@/lib/coverage/measure-coverage";
+import { passVerdict } from "@/lib/findings/pass-verdict";
 import type { ReadLog } from "@/lib/ingest/log-format";
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import type { Seeder } from "@/lib/machines/machine";
@@ -48,5 +49,8 @@ function buildResults(placed: PlacedLog, boundary: Boundary | null, tell: TellPr
   });
   tell("Measuring the ground covered", 0.76);
   results.push({ kind: "coverage", body: measureCoverage(placed, { distances, boundary }) });
+  tell("Saying what stands out", 0.8);
+  // The verdict crosses into JSON: its numbers are finite or null by its own schema.
+  results.push({ kind: "verdict", body: passVerdict(placed, { distances }) });
   return results;
 }

@@ -1,7 +1,7 @@
 import { withOrganisation } from "@/db/client";
 import { endJobs } from "@/db/queries/jobs";
 import { saveLogResult } from "@/db/queries/log-results";
-import { changeLog, findFieldOfLogs, findMachineOfLog, type LogRow } from "@/db/queries/logs";
+import { changeLog, findBoundaryOfLog, findMachineOfLog, type LogRow } from "@/db/queries/logs";
 import { writeLogVersion } from "@/db/queries/system/log-versions";
 import type { Inspection } from "@/lib/ingest/log-format";
 import type { Seeder } from "@/lib/machines/machine";
@@ -53,14 +53,13 @@ interface LogContext {
 async function readContext(log: LogRow): Promise<LogContext> {
   const scope = workerScope(log.organisationId);
   return withOrganisation(scope, async (tx) => {
-    const field = await findFieldOfLogs(tx, scope, log.fieldId);
+    const boundary = await findBoundaryOfLog(tx, scope, log.fieldId);
     const machine = log.machineId ? await findMachineOfLog(tx, scope, log.machineId) : null;
-    const ring =
-      field?.boundary?.type === "Polygon" ? field.boundary.coordinates[0] : field?.boundary?.coordinates[0]?.[0];
+    const ring = boundary?.type === "Polygon" ? boundary.coordinates[0] : boundary?.coordinates[0]?.[0];
     const corner = ring?.[0];
     return {
       machine: machine?.kind === "seeder" ? machine : null,
-      boundary: field?.boundary ?? null,
+      boundary,
       near: corner ? { longitude: corner[0] ?? 0, latitude: corner[1] ?? 0 } : null,
     };
   });

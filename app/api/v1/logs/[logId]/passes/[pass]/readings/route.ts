@@ -1,0 +1,33 @@
+import { parseQuery } from "@/app/_server/parse-body";
+import { reply } from "@/app/_server/reply";
+import { withScope } from "@/app/_server/with-scope";
+import { ChannelQuery } from "@/lib/schemas/log-queries";
+import { PassReadings } from "@/lib/schemas/logs";
+import { readPass, readPassPacked } from "@/lib/server/logs/read-pass";
+import { chooseReadingsFormat, parsePassNumber } from "@/lib/server/logs/readings-format";
+
+export const GET = withScope<"logId" | "pass">("logs.read", async ({ container, scope, params, request, url }) => {
+  const { channel } = parseQuery(ChannelQuery, url);
+  const input = { logId: params.logId, pass: parsePassNumber(params.pass), channel };
+  if (chooseReadingsFormat(request.headers.get("accept")) === "json") {
+    return reply(PassReadings, await readPass(container, scope, input), { headers: { vary: "accept" } });
+  }
+  const packed = await readPassPacked(container, scope, input);
+  return new Response(packed.bytes, {
+    headers: {
+      "content-type": "application/octet-stream",
+      "cache-control": "private, no-store",
+      vary: "accept",
+      "x-records": String(packed.records),
+      "x-rows": String(packed.rows),
+      "x-unit": packed.unit,
+    },
+  });
+});
+
+export {
+  refuseMethod as POST,
+  refuseMethod as PUT,
+  refuseMethod as PATCH,
+  refuseMethod as DELETE,
+} from "@/app/_server/refuse-method";

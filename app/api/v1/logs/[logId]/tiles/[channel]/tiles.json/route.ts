@@ -1,0 +1,15 @@
+import { reply } from "@/app/_server/reply";
+import { withScope } from "@/app/_server/with-scope";
+import { TileJson } from "@/lib/schemas/logs";
+import { describeTiles } from "@/lib/server/tiles/describe-tiles";
+
+export const GET = withScope<"logId" | "channel">("logs.read", async ({ container, scope, params }) =>
+  reply(TileJson, await describeTiles(container, scope, { ...params })),
+);
+
+export {
+  refuseMethod as POST,
+  refuseMethod as PUT,
+  refuseMethod as PATCH,
+  refuseMethod as DELETE,
+} from "@/app/_server/refuse-method";

@@ -1,0 +1,91 @@
+import "server-only";
+import { withOrganisation } from "@/db/client";
+import { recordAudit } from "@/db/queries/audit";
+import { findLogResult } from "@/db/queries/log-results";
+import { changeLog, getLogOrThrow } from "@/db/queries/logs";
+import { findRecipe, saveRecipe } from "@/db/queries/recipes";
+import { AppError } from "@/lib/errors";
+import { newId } from "@/lib/ids";
+import { IngestFailure, type IngestError } from "@/lib/ingest/ingest-error";
+import type { Inspection } from "@/lib/ingest/log-format";
+import { headerSignature, parseMapping, type LogMapping } from "@/lib/ingest/mapping";
+import { buildReadPlan } from "@/lib/ingest/records/read-plan";
+import type { Log, LogColumns } from "@/lib/schemas/logs";
+import type { Scope } from "@/lib/scope";
+import type { Container } from "@/lib/server/create-container";
+import { QUEUED, refuseBusy } from "@/lib/server/logs/change-log";
+import { describeLog } from "@/lib/server/logs/describe-log";
+import { noteReadLog, sendReadLog } from "@/lib/server/logs/queue-log";
+
+/** An error of the reader as an answer to a request: 422 naming column and rule. */
+export function mappingError(error: IngestError): AppError {
+  const { code, message, column, line } = error;
+  return new AppError("unprocessable", message, { detailCode: code, places: [{ message, column, line }] });
+}
+
+/** A mapping from outside. @throws AppError `unprocessable` naming the column and the rule */
+export function readMapping(input: unknown): LogMapping {
+  const parsed = parseMapping(input);
+  if (!parsed.ok) throw mappingError(parsed.error);
+  return parsed.value;
+}
+
+function refuseMisfit(mapping: LogMapping, inspection: Inspection): void {
+  try {
+    buildReadPlan(
+      mapping,
+      inspection.columns.map((column) => column.name),
+    );
+  } catch (error) {
+    if (error instanceof IngestFailure) throw mappingError(error.error);
+    throw error;
+  }
+}
+
+/** What was found in the file. @throws AppError `conflict` before anybody has looked, or where nothing could be found */
+export async function getColumns(_container: Container, scope: Scope, logId: string): Promise<LogColumns> {
+  return withOrganisation(scope, async (tx) => {
+    const log = await getLogOrThrow(tx, scope, logId);
+    const found = (await findLogResult(tx, scope, { logId, version: 0, kind: "columns" })) as Inspection | null;
+    if (!found) throw noColumns(log.error?.message);
+    const recipe = log.recipeId ? await findRecipe(tx, scope, log.recipeId) : null;
+    return {
+      format: found.format,
+      shape: found.shape,
+      columns: found.columns,
+      notes: found.notes,
+      mapping: log.mapping,
+      recipe: recipe && { id: recipe.id, name: recipe.name },
+    };
+  });
+}
+
+function noColumns(reason: string | undefined): AppError {
+  const message = reason ?? "The columns of this log have not been looked at yet. Ask again in a moment.";
+  return new AppError("conflict", message, { detailCode: "columns_not_known" });
+}
+
+/** Takes the meaning of the columns and reads the file again with it, as a new version. */
+export async function putMapping(
+  container: Container,
+  scope: Scope,
+  input: { logId: string; body: unknown },
+): Promise<Log> {
+  const { save, ...mapping } = readMapping(input.body);
+  const { logId } = input;
+  const log = await withOrganisation(scope, async (tx) => {
+    const before = await getLogOrThrow(tx, scope, logId);
+    refuseBusy(before);
+    const found = (await findLogResult(tx, scope, { logId, version: 0, kind: "columns" })) as Inspection | null;
+    if (!found) throw noColumns(before.error?.message);
+    refuseMisfit(mapping, found);
+    const recipe = { id: newId("recipe"), name: save ?? "", headerSignature: headerSignature(found), mapping };
+    const recipeId = save ? await saveRecipe(tx, scope, recipe) : null;
+    await changeLog(tx, scope, logId, { ...QUEUED, mapping, recipeId });
+    await noteReadLog(tx, scope, logId);
+    await recordAudit(tx, scope, { action: "log.map", subject: logId, detail: { recipe: save ?? null } });
+    return describeLog(await getLogOrThrow(tx, scope, logId));
+  });
+  await sendReadLog(container, scope, logId);
+  return log;
+}

@@ -1,0 +1,27 @@
+import "server-only";
+import { withOrganisation } from "@/db/client";
+import { getLogOrThrow, listLogsOfField } from "@/db/queries/logs";
+import type { ListQuery } from "@/lib/schemas/listing";
+import type { Log } from "@/lib/schemas/logs";
+import type { Scope } from "@/lib/scope";
+import type { Container } from "@/lib/server/create-container";
+import { getFieldOrThrow } from "@/lib/server/fields/get-field-or-throw";
+import { describeLog } from "@/lib/server/logs/describe-log";
+
+/** @throws AppError `not_found` */
+export async function getLog(_container: Container, scope: Scope, logId: string): Promise<Log> {
+  return withOrganisation(scope, async (tx) => describeLog(await getLogOrThrow(tx, scope, logId)));
+}
+
+/** Logs of a field, the newest first. @throws AppError `not_found` for a field that the caller may not see */
+export async function listLogs(
+  _container: Container,
+  scope: Scope,
+  input: { fieldId: string; query: ListQuery },
+): Promise<{ items: Log[]; nextCursor: string | null }> {
+  return withOrganisation(scope, async (tx) => {
+    await getFieldOrThrow(tx, scope, input.fieldId);
+    const { rows, nextCursor } = await listLogsOfField(tx, scope, input);
+    return { items: rows.map(describeLog), nextCursor };
+  });
+}

@@ -1,0 +1,68 @@
+import "server-only";
+import type { ResolvedChannel } from "@/lib/channels/resolve-channel";
+import { flagCodes } from "@/lib/cleaning/flags";
+import { AppError } from "@/lib/errors";
+import type { ReadingAt } from "@/lib/schemas/logs";
+import type { Scope } from "@/lib/scope";
+import type { Container } from "@/lib/server/create-container";
+import { findPlacedLog, loadChannel } from "@/lib/server/logs/find-placed-log";
+import { loadTileIndex } from "@/lib/server/tiles/load-tile-index";
+import { locateReading } from "@/lib/tiles/locate-reading";
+import { buildSwaths, type SwathCollection } from "@/lib/zones/swaths";
+import { buildZones, type ZoneCollection } from "@/lib/zones/zones";
+
+const orNull = (value: number | undefined) => (value !== undefined && Number.isFinite(value) ? value : null);
+
+/** What every channel read at one record and row. */
+function valuesAt(channels: readonly ResolvedChannel[], record: number, row: number): Record<string, number | null> {
+  const entries = channels.map((channel) => {
+    const place = channel.perRow ? record * channel.rows + row - 1 : record * channel.rows;
+    return [channel.id, orNull(channel.values[place])] as const;
+  });
+  return Object.fromEntries(entries);
+}
+
+/** The reading under a place. @throws AppError `not_found` where no row went */
+export async function readAt(
+  _container: Container,
+  scope: Scope,
+  input: { logId: string; lon: number; lat: number },
+): Promise<ReadingAt> {
+  const { log, placed } = await findPlacedLog(scope, input.logId, null);
+  const found = locateReading(await loadTileIndex(log), input.lon, input.lat);
+  if (!found) throw new AppError("not_found", "No row of this log went over that place.", { detailCode: "no_reading" });
+  const { record, row } = found;
+  const channels = await Promise.all(log.channels.map(({ id }) => loadChannel(log, id)));
+  const timeMs = placed.log.timeMs[record]!;
+  return {
+    pass: placed.passOf[record]!,
+    record,
+    row,
+    time: placed.log.timeIsRelative || !Number.isFinite(timeMs) ? null : new Date(timeMs).toISOString(),
+    headingDeg: orNull(placed.headingDeg[record]),
+    speedMps: orNull(placed.speedMps[record]),
+    values: valuesAt(channels, record, row),
+    flags: flagCodes(placed.flags[record]!),
+  };
+}
+
+export type Bbox = [number, number, number, number];
+
+export async function readZones(
+  _container: Container,
+  scope: Scope,
+  input: { logId: string; channel: string; breaks: number[]; bbox?: Bbox; minLengthM?: number },
+): Promise<ZoneCollection> {
+  const { placed } = await findPlacedLog(scope, input.logId, input.channel);
+  const { breaks, bbox, minLengthM } = input;
+  return buildZones(placed, input.channel, { breaks, bbox, minLengthM });
+}
+
+export async function readSwaths(
+  _container: Container,
+  scope: Scope,
+  input: { logId: string; bbox?: Bbox },
+): Promise<SwathCollection> {
+  const { placed } = await findPlacedLog(scope, input.logId, null);
+  return buildSwaths(placed, { bbox: input.bbox });
+}

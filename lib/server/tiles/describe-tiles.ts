@@ -1,0 +1,42 @@
+import "server-only";
+import type { TileJson } from "@/lib/schemas/logs";
+import type { Scope } from "@/lib/scope";
+import type { Container } from "@/lib/server/create-container";
+import { getReadLog, loadChannel } from "@/lib/server/logs/find-placed-log";
+import { loadTileIndex } from "@/lib/server/tiles/load-tile-index";
+import { TILE_SIZE } from "@/lib/server/tiles/read-tile";
+import { tileIndexBounds } from "@/lib/tiles/build-tile-index";
+import { valueScale } from "@/lib/tiles/value-scale";
+
+/** TileJSON 3 of a channel's value tiles, with the numbers that turn colours into values. */
+export async function describeTiles(
+  container: Container,
+  scope: Scope,
+  input: { logId: string; channel: string },
+): Promise<TileJson> {
+  const log = await getReadLog(scope, input.logId);
+  const channel = await loadChannel(log, input.channel);
+  const scale = valueScale(channel);
+  const bounds = tileIndexBounds(await loadTileIndex(log)) ?? [-180, -85, 180, 85];
+  const path = `/api/v1/logs/${log.id}/tiles/${encodeURIComponent(input.channel)}`;
+  return {
+    tilejson: "3.0.0",
+    name: `${log.name}: ${input.channel}`,
+    tiles: [`${container.env.baseUrl}${path}/{z}/{x}/{y}.png?v=${log.version}`],
+    minzoom: 8,
+    maxzoom: 22,
+    bounds: [...bounds],
+    tileSize: TILE_SIZE,
+    encoding: {
+      channel: input.channel,
+      unit: channel.unit,
+      redFactor: scale.redFactor,
+      greenFactor: scale.greenFactor,
+      blueFactor: 0,
+      offset: scale.offset,
+      minimum: scale.minimum,
+      maximum: scale.maximum,
+      step: scale.step,
+    },
+  };
+}

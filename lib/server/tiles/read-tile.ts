@@ -1,0 +1,78 @@
+import "server-only";
+import sharp from "sharp";
+import { AppError } from "@/lib/errors";
+import { areClassEdges } from "@/lib/legend/class-edges";
+import { isRampName, RAMP_NAMES, rampOf } from "@/lib/legend/ramps";
+import type { Scope } from "@/lib/scope";
+import type { Container } from "@/lib/server/create-container";
+import { getReadLog, loadChannel } from "@/lib/server/logs/find-placed-log";
+import { cachedForLog } from "@/lib/server/logs/log-cache";
+import { loadTileIndex } from "@/lib/server/tiles/load-tile-index";
+import { encodePaletteTile } from "@/lib/tiles/encode-palette-tile";
+import { encodeValueTile } from "@/lib/tiles/encode-value-tile";
+import { rasteriseTile } from "@/lib/tiles/rasterise-tile";
+import { isTileAddress, type TileAddress } from "@/lib/tiles/tile-address";
+import { valueScale } from "@/lib/tiles/value-scale";
+
+export const TILE_SIZE = 512;
+type Breaks = { breaks: number[]; ramp: string | null } | null;
+
+export interface TileInput extends TileAddress {
+  logId: string;
+  channel: string;
+  /** Null for a value tile, else class edges of a picture. */
+  classes: Breaks;
+}
+
+/** `a,b,c` as rising class edges. @throws AppError `unprocessable` */
+export function parseBreaks(text: string | null): number[] | null {
+  if (text === null) return null;
+  const breaks = text.split(",").map(Number);
+  if (text.trim() !== "" && areClassEdges(breaks) && breaks.length <= 32) return breaks;
+  const message = "needs up to 32 rising numbers, such as 300,600,900";
+  throw new AppError("unprocessable", `breaks: ${message}.`, { places: [{ path: "breaks", message }] });
+}
+
+function checkTile(input: TileInput): void {
+  if (!isTileAddress(input)) throw new AppError("not_found", "There is no such tile: zoom, column and row do not fit.");
+  const ramp = input.classes?.ramp;
+  if (ramp && !isRampName(ramp)) {
+    const message = `is one of ${RAMP_NAMES.join(", ")}`;
+    throw new AppError("unprocessable", `ramp: ${message}.`, { places: [{ path: "ramp", message }] });
+  }
+}
+
+/** One tile as PNG, cached by the log's version. `version` names the tile's content for good. */
+export async function readTile(
+  _container: Container,
+  scope: Scope,
+  input: TileInput,
+): Promise<{ png: Uint8Array<ArrayBuffer>; version: number }> {
+  checkTile(input);
+  const log = await getReadLog(scope, input.logId);
+  const { z, x, y, classes } = input;
+  const look = classes ? `${classes.breaks.join(",")}/${classes.ramp ?? ""}` : "values";
+  const key = `${log.id}:${log.version}:tile:${input.channel}/${z}/${x}/${y}/${look}`;
+  const png = await cachedForLog(key, async () => {
+    const channel = await loadChannel(log, input.channel);
+    const index = await loadTileIndex(log);
+    const pixels = rasteriseTile(index, channel, { z, x, y, size: TILE_SIZE });
+    const value = await drawPng(pixels, input, channel);
+    return { value, bytes: value.byteLength };
+  });
+  return { png, version: log.version };
+}
+
+async function drawPng(
+  pixels: Float32Array,
+  { classes, channel: channelId }: TileInput,
+  channel: Parameters<typeof valueScale>[0],
+): Promise<Uint8Array<ArrayBuffer>> {
+  const ramp = classes?.ramp && isRampName(classes.ramp) ? classes.ramp : rampOf(channelId);
+  const bytes = classes
+    ? encodePaletteTile(pixels, classes.breaks, ramp)
+    : encodeValueTile(pixels, valueScale(channel));
+  const channels = classes ? 4 : 3;
+  const image = sharp(bytes, { raw: { width: TILE_SIZE, height: TILE_SIZE, channels } });
+  return Uint8Array.from(await image.png({ compressionLevel: 6, palette: classes !== null, effort: 1 }).toBuffer());
+}
