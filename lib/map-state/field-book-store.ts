@@ -34,6 +34,8 @@ export interface FieldBookState {
   view: MapView | null;
   /** Class edges that the person set, by channel, in the channel's SI unit. */
   edges: Record<string, number[]>;
+  /** GeoJSON of the finding last asked for, drawn on the map until another is. */
+  place: unknown;
   /** A wish to see a place on the map; `wish` grows so that the same place can be asked for twice. */
   frame: { bounds: Bounds; wish: number } | null;
 }
@@ -49,6 +51,7 @@ export interface FieldBookActions {
   brush(stretch: Stretch | null): void;
   setView(view: MapView): void;
   setEdges(channel: string, edges: number[] | null): void;
+  showPlace(place: unknown): void;
   askToFrame(bounds: Bounds): void;
 }
 
@@ -63,6 +66,7 @@ const EMPTY: FieldBookState = {
   stretch: null,
   view: null,
   edges: {},
+  place: null,
   frame: null,
 };
 
@@ -91,6 +95,7 @@ export function createFieldBookStore(initial: Partial<FieldBookState> = {}) {
         const { [channel]: _dropped, ...rest } = state.edges;
         return { edges: edges ? { ...rest, [channel]: edges } : rest };
       }),
+    showPlace: (place) => set({ place }),
     askToFrame: (bounds) => set((state) => ({ frame: { bounds, wish: (state.frame?.wish ?? 0) + 1 } })),
   }));
 }

@@ -1,0 +1,98 @@
+"use client";
+
+import { useState } from "react";
+import type { ChannelUnits } from "@/components/field-book/use-channel-units";
+import { areClassEdges } from "@/lib/legend/class-edges";
+
+export interface EdgeFieldsProps {
+  edges: readonly number[];
+  colours: readonly string[];
+  /** Share of all readings in each class. */
+  shares: readonly number[];
+  units: ChannelUnits;
+  onChange: (edges: number[]) => void;
+}
+
+/** The classes side by side, each edge a number that can be typed. */
+export function EdgeFields({ edges, colours, shares, units, onChange }: EdgeFieldsProps) {
+  const change = (index: number, value: number) => {
+    const next = edges.map((edge, i) => (i === index ? value : edge));
+    if (!areClassEdges(next)) return false;
+    onChange(next);
+    return true;
+  };
+  return (
+    <div className="tabular min-w-0">
+      <div className="flex">
+        {colours.map((colour, index) => (
+          <div key={index} className="min-w-0 flex-1">
+            <div
+              data-testid="class-swatch"
+              data-colour={colour}
+              className="h-4 border-y border-ink/30 first:border-l last:border-r"
+              style={{ background: colour }}
+            />
+          </div>
+        ))}
+      </div>
+      <div className="relative h-8 md:h-7">
+        {edges.map((edge, index) => (
+          <div
+            key={index}
+            className="absolute top-0 -translate-x-1/2"
+            style={{ left: `${((index + 1) / colours.length) * 100}%` }}
+          >
+            <EdgeField
+              label={`Class edge ${index + 1}, ${units.symbol}`}
+              value={edge}
+              units={units}
+              onEdge={(value) => change(index, value)}
+            />
+          </div>
+        ))}
+      </div>
+      <div className="flex text-[11px] leading-4 text-ink-soft">
+        {shares.map((share, index) => (
+          <span key={index} className="min-w-0 flex-1 text-center">
+            {share > 0 && share < 0.005 ? "<1" : Math.round(share * 100)}
+            {"\u202f"}%
+          </span>
+        ))}
+      </div>
+    </div>
+  );
+}
+
+interface EdgeFieldProps {
+  label: string;
+  value: number;
+  units: ChannelUnits;
+  /** Answers whether the edge could be taken. */
+  onEdge: (value: number) => boolean;
+}
+
+function EdgeField({ label, value, units, onEdge }: EdgeFieldProps) {
+  const [draft, setDraft] = useState<string | null>(null);
+  const shown = Number((value / units.factor).toPrecision(4)).toString();
+  const keep = () => {
+    const typed = Number((draft ?? "").replace(",", ".").replace("\u2212", "-"));
+    if (draft !== null && draft.trim() !== "" && Number.isFinite(typed)) onEdge(typed * units.factor);
+    // An edge out of order goes back to what it was: the number in the field is always the one in force.
+    setDraft(null);
+  };
+  return (
+    <input
+      aria-label={label}
+      inputMode="decimal"
+      value={draft ?? shown}
+      onChange={(event) => setDraft(event.target.value)}
+      onFocus={(event) => event.target.select()}
+      onBlur={keep}
+      onKeyDown={(event) => {
+        if (event.key === "Enter") keep();
+        if (event.key === "Escape") setDraft(null);
+      }}
+      className="h-8 w-14 rounded border border-transparent bg-transparent text-center text-table hover:border-edge focus:border-edge focus:bg-sheet md:h-7"
+    />
+  );
+}

@@ -1,0 +1,85 @@
+"use client";
+
+import { useSearchParams } from "next/navigation";
+import { useState } from "react";
+import { FieldBookProvider } from "@/components/field-book/field-book-context";
+import { LogPicker } from "@/components/field-book/log-picker";
+import { NoLogYet } from "@/components/field-book/no-log-yet";
+import { RowsLayout, RowsSkeleton } from "@/components/field-book/rows-layout";
+import { channelsOf } from "@/components/field-book/channel-switch";
+import { useAddress } from "@/components/field-book/use-address";
+import { useField } from "@/components/hooks/use-fields";
+import { useLogs } from "@/components/hooks/use-logs";
+import type { BasemapConfig } from "@/components/map/basemap-config";
+import { readAddress } from "@/lib/map-state/address-state";
+import { createFieldBookStore } from "@/lib/map-state/field-book-store";
+import type { Field } from "@/lib/schemas/fields";
+import type { Log } from "@/lib/schemas/logs";
+
+export interface FieldBookProps {
+  fieldId: string;
+  /** Address of the field's list of logs. */
+  logsHref: string;
+  basemap: BasemapConfig;
+}
+
+/** The chapter "Rows" of one field's book: picks the log, then shows it. */
+export function FieldBook({ fieldId, logsHref, basemap }: FieldBookProps) {
+  const field = useField(fieldId);
+  const logs = useLogs(fieldId);
+  const search = useSearchParams();
+  const [chosenId, setChosenId] = useState(search.get("log"));
+  if (logs.isError || field.isError) return <FieldTrouble />;
+  if (!logs.data || !field.data) return <RowsSkeleton />;
+  const ready = logs.data.items.filter((log) => log.status === "ready" && log.bbox !== null);
+  const log =
+    ready.find((candidate) => candidate.id === chosenId) ?? ready.find(({ kind }) => kind === "seeding") ?? ready[0];
+  if (!log) return <NoLogYet logs={logs.data.items} logsHref={logsHref} />;
+  return (
+    <OpenLog
+      key={`${log.id} ${log.version}`}
+      field={field.data}
+      log={log}
+      basemap={basemap}
+      picker={<LogPicker logs={ready} chosen={log} onChoose={setChosenId} />}
+    />
+  );
+}
+
+interface OpenLogProps {
+  field: Field;
+  log: Log;
+  basemap: BasemapConfig;
+  picker: React.ReactNode;
+}
+
+function OpenLog({ field, log, basemap, picker }: OpenLogProps) {
+  const search = useSearchParams();
+  const [book] = useState(() => {
+    const { log: addressLog, ...address } = readAddress(new URLSearchParams(search.toString()));
+    // Pass, row and view in an address belong to the log it names, not to another one.
+    const start = addressLog === log.id ? address : {};
+    const channels = channelsOf(log);
+    const channel = start.channel && channels.includes(start.channel) ? start.channel : (channels[0] ?? "rowSpeed");
+    return {
+      store: createFieldBookStore({ ...start, channel }),
+      log,
+      logVersion: { logId: log.id, version: log.version },
+    };
+  });
+  useAddress(book.store, log.id);
+  return (
+    <FieldBookProvider book={book}>
+      <RowsLayout field={field} basemap={basemap} picker={picker} />
+    </FieldBookProvider>
+  );
+}
+
+function FieldTrouble() {
+  return (
+    <p role="alert" className="max-w-xl px-5 py-8 text-ink-soft">
+      This field could not be fetched. Check the connection and reload the page; if it says the same again, go back to
+      the list of fields.
+    </p>
+  );
+}

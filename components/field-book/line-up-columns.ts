@@ -1,0 +1,97 @@
+import type { DataColumn } from "@/components/ui/data-table";
+import type { RowStatisticsBody, RowStatisticsItem } from "@/lib/schemas/logs";
+import { displayUnit, type UnitSystem } from "@/lib/units/display-unit";
+import { formatQuantity } from "@/lib/units/format-quantity";
+
+type NumberField = {
+  [Key in keyof RowStatisticsItem]: RowStatisticsItem[Key] extends number | null ? Key : never;
+}[keyof RowStatisticsItem];
+
+interface FieldColumn {
+  field: NumberField;
+  header: string;
+  /** Unit of the field where it is not the channel's own. */
+  unit?: string;
+}
+
+const FIELDS: FieldColumn[] = [
+  { field: "n", header: "Readings", unit: "1" },
+  { field: "distanceM", header: "Distance", unit: "m" },
+  { field: "mean", header: "Mean" },
+  { field: "sd", header: "Standard deviation" },
+  { field: "min", header: "Least" },
+  { field: "p05", header: "5th percentile" },
+  { field: "p25", header: "25th percentile" },
+  { field: "p50", header: "Median" },
+  { field: "p75", header: "75th percentile" },
+  { field: "p95", header: "95th percentile" },
+  { field: "max", header: "Greatest" },
+  { field: "shareUnderTarget", header: "Under target, of distance", unit: "fraction" },
+  { field: "shareAtLimit", header: "At the limit, of distance", unit: "fraction" },
+  { field: "shareContactLost", header: "Contact lost, of distance", unit: "fraction" },
+  { field: "longestUnderTargetM", header: "Longest run under target", unit: "m" },
+  { field: "deviationZ", header: "Difference from other rows, z", unit: "1" },
+];
+
+const DISTANCES: NumberField[] = ["distanceM", "longestUnderTargetM"];
+const ON_PHONE: NumberField[] = ["p50", "shareUnderTarget", "shareAtLimit", "deviationZ"];
+
+/** Columns of the line-up's table in a person's units. Numbers go into the file rounded to four figures beyond the shown ones. */
+export function lineUpColumns(
+  { channel, unit }: RowStatisticsBody,
+  system: UnitSystem,
+): DataColumn<RowStatisticsItem>[] {
+  const numbers = FIELDS.map(({ field, header, unit: own }) =>
+    numberColumn({ field, header, unit: own ?? unit, channel, system }),
+  );
+  return [
+    { id: "row", header: "Row", value: (item) => item.row, numeric: true },
+    ...numbers,
+    { id: "flagged", header: "Stands out", value: (item) => (item.flagged ? "yes" : "no") },
+    { id: "reason", header: "Why", value: (item) => item.reason ?? undefined },
+  ];
+}
+
+interface NumberColumnOptions {
+  field: NumberField;
+  header: string;
+  unit: string;
+  channel: string;
+  system: UnitSystem;
+}
+
+function numberColumn({ field, header, unit, channel, system }: NumberColumnOptions): DataColumn<RowStatisticsItem> {
+  // "m" of a depth is shown in millimetres, "m" of a distance is not.
+  const shownAs = DISTANCES.includes(field) ? "distance" : channel;
+  const { symbol, factor } = displayUnit(unit, system, shownAs);
+  const options = field === "n" ? { decimals: 0 } : { channel: shownAs };
+  return {
+    id: field,
+    header: symbol ? `${header}, ${symbol}` : header,
+    numeric: true,
+    wideOnly: !ON_PHONE.includes(field),
+    value: (item) => {
+      const value = item[field];
+      return value === null ? undefined : Number((value / factor).toPrecision(7));
+    },
+    cell: (item) => formatQuantity(item[field], unit, system, options).text,
+  };
+}
+
+/** The rows as tab-separated text, for pasting into a sheet. */
+export function lineUpText(
+  columns: readonly DataColumn<RowStatisticsItem>[],
+  items: readonly RowStatisticsItem[],
+): string {
+  const head = columns.map((column) => column.header).join("\t");
+  const lines = items.map((item) => columns.map((column) => guarded(column.value(item))).join("\t"));
+  return [head, ...lines].join("\n");
+}
+
+/** Text that a sheet would run as a formula gets an apostrophe before it. */
+function guarded(value: string | number | undefined): string {
+  if (value === undefined) return "";
+  if (typeof value === "number") return String(value);
+  const plain = value.replaceAll(/[\t\r\n]/g, " ");
+  return /^[=+\-@]/.test(plain) ? `'${plain}` : plain;
+}

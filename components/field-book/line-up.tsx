@@ -1,0 +1,42 @@
+"use client";
+
+import { LineUpChart, shareOf } from "@/components/field-book/line-up-chart";
+import type { Classes } from "@/components/field-book/use-classes";
+import { channelWords } from "@/lib/legend/channel-words";
+import type { RowStatisticsBody } from "@/lib/schemas/logs";
+
+export interface LineUpProps {
+  statistics: RowStatisticsBody | undefined;
+  classes: Classes | null;
+  onTable: () => void;
+}
+
+/** The rows compared: chart, what its marks mean, and the way to the table. */
+export function LineUp({ statistics, classes, onTable }: LineUpProps) {
+  const share = statistics?.items.map(shareOf).find((found) => found !== null);
+  return (
+    <section aria-labelledby="line-up-title" className="flex h-full min-h-0 flex-col gap-1 px-4 pb-2 pt-3">
+      <div className="flex items-baseline justify-between gap-2">
+        <h2 id="line-up-title" className="text-section">
+          Line-up
+        </h2>
+        <button type="button" onClick={onTable} className="min-h-11 px-1 text-slate underline md:min-h-0">
+          As a table
+        </button>
+      </div>
+      <p className="text-table text-ink-soft">
+        {statistics ? `${channelWords(statistics.channel).name}: ` : ""}line 5th to 95th percentile, box the middle
+        half, bar the median, by distance
+        {share ? `; below, share of distance ${share.words}` : ""}
+        {statistics?.items.some((item) => item.flagged) ? "; a clay square marks a row unlike the others" : ""}.
+      </p>
+      <div className="min-h-60 flex-1 md:min-h-0">
+        {statistics ? (
+          <LineUpChart statistics={statistics} classes={classes} />
+        ) : (
+          <div className="hatch h-full opacity-60" role="status" aria-label="Comparing the rows" />
+        )}
+      </div>
+    </section>
+  );
+}

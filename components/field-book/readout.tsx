@@ -1,0 +1,84 @@
+"use client";
+
+import { useChannelUnits } from "@/components/field-book/use-channel-units";
+import { useBook, useBookState } from "@/components/field-book/field-book-context";
+import { trackQuery } from "@/components/field-book/use-log-data";
+import { useQuery } from "@tanstack/react-query";
+import { flagCodes, type FlagCode } from "@/lib/cleaning/flags";
+import { channelWords } from "@/lib/legend/channel-words";
+import type { Cursor } from "@/lib/map-state/field-book-store";
+import type { PassTrack } from "@/lib/map-state/pass-track";
+
+const FLAG_WORDS: Record<FlagCode, string> = {
+  "no-position": "no position",
+  "duplicate-time": "time repeated",
+  "impossible-step": "impossible jump",
+  "not-working": "not working",
+  "short-pass": "short pass",
+  turning: "turning",
+  "standing-still": "standing still",
+  "hitch-unsettled": "hitch not yet settled",
+  "time-backwards": "time runs backwards",
+  "jack-knife": "hitch bent too far",
+};
+
+/** One line that always stands in the same place and names the reading pointed at. */
+export function Readout({ spoken }: { spoken: boolean }) {
+  const cursor = useBookState((state) => state.cursor);
+  return (
+    <p
+      aria-live={spoken ? "polite" : "off"}
+      className="flex min-h-9 flex-wrap items-center gap-x-4 overflow-hidden text-table text-ink-soft md:h-7 md:min-h-0 md:flex-nowrap md:whitespace-nowrap"
+    >
+      {cursor ? (
+        <ReadingWords cursor={cursor} />
+      ) : (
+        <span>
+          Point at the map or the pass to read a value. Keys: ← → along, ↑ ↓ rows, [ ] passes, Enter keeps a row.
+        </span>
+      )}
+    </p>
+  );
+}
+
+function ReadingWords({ cursor }: { cursor: Cursor }) {
+  const { logVersion } = useBook();
+  const channel = useBookState((state) => state.channel);
+  const { data: track } = useQuery(trackQuery(logVersion, channel, cursor.pass));
+  if (!track || track.channel !== channel) return <span>Reading…</span>;
+  return <TrackWords cursor={cursor} track={track} />;
+}
+
+function TrackWords({ cursor, track }: { cursor: Cursor; track: PassTrack }) {
+  const value = useChannelUnits(track.unit, track.channel);
+  const speed = useChannelUnits("m/s", "speed");
+  const distance = useChannelUnits("m", "distance");
+  const flags = flagCodes(track.flags[cursor.record] ?? 0);
+  const row = Math.min(cursor.row, track.rows);
+  const reading = track.values[cursor.record * track.rows + row - 1] ?? NaN;
+  return (
+    <>
+      <span className="font-semibold text-ink">Row {cursor.row}</span>
+      <span>
+        {channelWords(track.channel).name}{" "}
+        <b className="tabular font-semibold text-ink">{Number.isNaN(reading) ? "not logged" : value.format(reading)}</b>
+      </span>
+      <span className="tabular">{speed.format(track.speedMps[cursor.record])}</span>
+      <span className="tabular">{clockOf(track, cursor.record)}</span>
+      <span className="tabular">
+        pass {cursor.pass}, {distance.format(track.endsM[cursor.record])} along
+      </span>
+      {flags.length > 0 ? (
+        <span className="text-straw-deep">{flags.map((flag) => FLAG_WORDS[flag]).join(", ")}</span>
+      ) : null}
+    </>
+  );
+}
+
+/** Clock time where the log has one (seconds since 1970), else seconds since the log began. */
+function clockOf(track: PassTrack, record: number): string {
+  const seconds = track.timesS[record] ?? NaN;
+  if (Number.isNaN(seconds)) return "no time";
+  if (seconds < 1e8) return `${seconds.toFixed(1)}\u202fs`;
+  return new Date(seconds * 1000).toLocaleTimeString("en-GB");
+}

@@ -1,0 +1,44 @@
+"use client";
+
+import type { Map as MapLibreMap } from "maplibre-gl";
+import { useState } from "react";
+import { useBook, useBookState } from "@/components/field-book/field-book-context";
+import type { Classes } from "@/components/field-book/use-classes";
+import { useMapGround } from "@/components/field-book/use-map-ground";
+import { useMapMarks } from "@/components/field-book/use-map-marks";
+import { useMapPointer } from "@/components/field-book/use-map-pointer";
+import { useMapValues } from "@/components/field-book/use-map-values";
+import type { BasemapConfig } from "@/components/map/basemap-config";
+import { MapCanvas } from "@/components/map/map-canvas";
+import { channelWords } from "@/lib/legend/channel-words";
+import type { Bounds } from "@/lib/map-state/field-book-store";
+import type { PassTrack } from "@/lib/map-state/pass-track";
+import type { Boundary } from "@/lib/schemas/geometry";
+
+export interface RowMapProps {
+  basemap: BasemapConfig;
+  bounds: Bounds;
+  boundary: Boundary | null;
+  classes: Classes | null;
+  track: PassTrack | undefined;
+}
+
+/** The field from above: every row's readings in class colours, linked with the unrolled pass. */
+export function RowMap({ basemap, bounds, boundary, classes, track }: RowMapProps) {
+  const { store, log } = useBook();
+  const [map, setMap] = useState<MapLibreMap | null>(null);
+  const channel = useBookState((state) => state.channel);
+  useMapGround(map, { bounds, boundary });
+  useMapValues(map, classes);
+  useMapMarks(map, track);
+  useMapPointer(map);
+  return (
+    <MapCanvas
+      basemap={basemap}
+      bounds={bounds}
+      view={store.getState().view}
+      description={`${channelWords(channel).name} of ${log.counts.rows} rows in ${log.counts.passes} passes, north up. The unrolled pass, the line-up and its table give the same readings in numbers.`}
+      onMap={setMap}
+    />
+  );
+}

@@ -1,0 +1,159 @@
+"use client";
+
+import { useEffect, useState, type ReactNode } from "react";
+import { ChannelSwitch } from "@/components/field-book/channel-switch";
+import { useBook, useBookState } from "@/components/field-book/field-book-context";
+import { FieldStrip } from "@/components/field-book/field-strip";
+import { Legend } from "@/components/field-book/legend";
+import { LineUp } from "@/components/field-book/line-up";
+import { LineUpTable } from "@/components/field-book/line-up-table";
+import { PassHeading } from "@/components/field-book/pass-heading";
+import { RowMap } from "@/components/field-book/row-map";
+import { UnrolledPass } from "@/components/field-book/unrolled-pass";
+import { useClasses } from "@/components/field-book/use-classes";
+import { useOverview, usePasses, useRowStatistics, useTrack } from "@/components/field-book/use-log-data";
+import { useWideScreen } from "@/components/field-book/use-wide-screen";
+import { VerdictPanel } from "@/components/field-book/verdict-panel";
+import { useVerdict } from "@/components/hooks/use-logs";
+import type { BasemapConfig } from "@/components/map/basemap-config";
+import type { Bounds } from "@/lib/map-state/field-book-store";
+import { boundsOfGeometry } from "@/lib/map-state/geometry-bounds";
+import type { Field } from "@/lib/schemas/fields";
+import type { Log } from "@/lib/schemas/logs";
+
+export interface RowsLayoutProps {
+  field: Field;
+  basemap: BasemapConfig;
+  picker: ReactNode;
+}
+
+/** Fills the window under the header on a wide screen; flows down on a phone. */
+const WIDE_FRAME = "grid h-[calc(100dvh-3.5rem)] min-h-[38rem] grid-cols-[minmax(0,1fr)_24rem] md:-mb-10";
+
+/** Map above, unrolled pass beneath, verdict and line-up at the right; on a phone the verdict first and the pass upright at the end. */
+export function RowsLayout({ field, basemap, picker }: RowsLayoutProps) {
+  const wide = useWideScreen();
+  const parts = useParts({ field, basemap });
+  if (wide === null) return <RowsSkeleton />;
+  if (!wide) return <NarrowRows parts={parts} picker={picker} />;
+  return (
+    <div className={WIDE_FRAME}>
+      <div className="relative grid min-h-0 min-w-0 grid-rows-[auto_minmax(0,1fr)_auto_minmax(13rem,34%)]">
+        <div className="flex items-center justify-between gap-4 border-b border-rule px-4 py-2">
+          <ChannelSwitch />
+          {picker}
+        </div>
+        <div className="min-h-0 border-b border-rule">{parts.map}</div>
+        <div className="border-b border-rule px-4 py-2">{parts.legend}</div>
+        <div className="grid min-h-0 grid-rows-[auto_minmax(0,1fr)_auto] gap-1 px-4 pb-2 pt-1">
+          {parts.passHeading}
+          {parts.pass("across")}
+          <div className="grid grid-cols-[2.25rem_1fr] items-center">
+            <span className="text-[11px] leading-3 text-ink-soft">Field</span>
+            {parts.strip}
+          </div>
+        </div>
+        {parts.table ? <div className="absolute inset-0 z-20">{parts.table}</div> : null}
+      </div>
+      <div className="grid min-h-0 grid-rows-[minmax(0,auto)_minmax(19rem,1fr)] divide-y divide-rule border-l border-rule bg-sheet">
+        <div className="overflow-y-auto">{parts.verdict}</div>
+        {parts.lineUp}
+      </div>
+    </div>
+  );
+}
+
+function NarrowRows({ parts, picker }: { parts: Parts; picker: ReactNode }) {
+  return (
+    <div className="divide-y divide-rule">
+      <div className="bg-sheet">{parts.verdict}</div>
+      <div className="space-y-2 px-4 py-3">
+        {picker}
+        <ChannelSwitch />
+      </div>
+      <div className="h-[26rem]">{parts.map}</div>
+      <div className="px-4 py-3">{parts.legend}</div>
+      <div className="bg-sheet">{parts.table ?? parts.lineUp}</div>
+      <div className="px-4 py-3">
+        {parts.passHeading}
+        <div className="py-2">{parts.strip}</div>
+        {parts.pass("upright")}
+      </div>
+    </div>
+  );
+}
+
+type Parts = ReturnType<typeof useParts>;
+
+/** Everything the page shows, fed with the open log; where it goes depends on the screen. */
+function useParts({ field, basemap }: { field: Field; basemap: BasemapConfig }) {
+  const { log, logVersion } = useBook();
+  const channel = useBookState((state) => state.channel);
+  const [asTable, setAsTable] = useState(false);
+  const { data: passes = [] } = usePasses(logVersion);
+  const { data: overview } = useOverview(logVersion, channel);
+  const { data: statistics } = useRowStatistics(logVersion, channel);
+  const verdict = useVerdict(log.id, log.version);
+  const track = useChosenTrack(passes.map(({ pass }) => pass));
+  const classes = useClasses(channel, overview);
+  const current = statistics?.channel === channel ? statistics : undefined;
+  const flagged = (current?.items ?? []).filter((item) => item.flagged).map((item) => item.row);
+  const [bounds] = useState<Bounds>(() => openingBounds(field, log));
+  return {
+    map: <RowMap basemap={basemap} bounds={bounds} boundary={field.boundary} classes={classes} track={track} />,
+    legend: <Legend classes={classes} unit={overview?.unit ?? ""} />,
+    verdict: <VerdictPanel verdict={verdict.data} rows={log.counts.rows} trouble={verdict.isError} />,
+    lineUp: <LineUp statistics={statistics} classes={classes} onTable={() => setAsTable(true)} />,
+    table: asTable && statistics ? <LineUpTable statistics={statistics} onClose={() => setAsTable(false)} /> : null,
+    passHeading: <PassHeading passes={passes} />,
+    strip: <FieldStrip overview={overview} classes={classes} />,
+    pass: (orientation: "across" | "upright") => (
+      <UnrolledPass
+        track={track}
+        classes={classes}
+        passes={passes.map(({ pass }) => pass)}
+        flagged={flagged}
+        orientation={orientation}
+      />
+    ),
+  };
+}
+
+/** The readings of the chosen pass; until somebody chooses one, the first. */
+function useChosenTrack(passes: number[]) {
+  const { store, logVersion } = useBook();
+  const channel = useBookState((state) => state.channel);
+  const pass = useBookState((state) => state.pass);
+  const first = passes[0];
+  const known = pass !== null && (passes.length === 0 || passes.includes(pass));
+  useEffect(() => {
+    if (!known && first !== undefined) store.getState().choosePass(first);
+  }, [store, known, first]);
+  return useTrack(logVersion, channel, pass).data;
+}
+
+/** The boundary, or what the log covers. */
+function openingBounds(field: Field, log: Log): Bounds {
+  const [west, south, east, north] = log.bbox ?? [-180, -60, 180, 75];
+  // Across the antimeridian east runs on past 180.
+  return boundsOfGeometry(field.boundary) ?? [west, south, east < west ? east + 360 : east, north];
+}
+
+/** The page's frame while nothing is known yet: same places, nothing jumps. */
+export function RowsSkeleton() {
+  return (
+    <div
+      role="status"
+      aria-label="Opening the field's book"
+      className="lg:grid lg:h-[calc(100dvh-3.5rem)] lg:grid-cols-[minmax(0,1fr)_24rem] md:-mb-10"
+    >
+      <div className="grid max-lg:h-[40rem] lg:grid-rows-[3.1rem_minmax(0,1fr)_6rem_minmax(13rem,34%)]">
+        <span className="border-b border-rule max-lg:hidden" />
+        <span className="hatch border-b border-rule opacity-60" />
+        <span className="border-b border-rule" />
+        <span className="hatch m-4 opacity-60" />
+      </div>
+      <div className="border-l border-rule bg-sheet max-lg:hidden" />
+    </div>
+  );
+}

@@ -1,0 +1,140 @@
+"use client";
+
+import { useBook, useBookState } from "@/components/field-book/field-book-context";
+import { StateMark, type MarkState } from "@/components/ui/state-mark";
+import { boundsOfGeometry } from "@/lib/map-state/geometry-bounds";
+import type { Finding, VerdictBody } from "@/lib/schemas/logs";
+
+export const SEVERITY: Record<Finding["severity"], { mark: MarkState; word: string }> = {
+  act: { mark: "act", word: "Act" },
+  look: { mark: "look", word: "Look" },
+  ok: { mark: "fine", word: "Fine" },
+};
+const ORDER: Finding["severity"][] = ["act", "look", "ok"];
+
+export interface VerdictPanelProps {
+  verdict: VerdictBody | undefined;
+  rows: number;
+  trouble: boolean;
+}
+
+/** What the log says, in plain words: one large number, then the findings, the pressing ones first. */
+export function VerdictPanel({ verdict, rows, trouble }: VerdictPanelProps) {
+  if (!verdict) return <VerdictWaiting trouble={trouble} />;
+  const findings = ORDER.flatMap((severity) => verdict.findings.filter((finding) => finding.severity === severity));
+  const worst = findings[0]?.severity ?? "ok";
+  return (
+    <section aria-labelledby="verdict-title" className="px-4 pb-3 pt-3" data-testid="verdict">
+      <h2 id="verdict-title" className="flex items-center gap-2 text-section">
+        Verdict
+        <span className="inline-flex items-center gap-1.5 text-text font-normal text-ink-soft">
+          <StateMark state={SEVERITY[worst].mark} />
+          {SEVERITY[worst].word}
+        </span>
+      </h2>
+      <Headline verdict={verdict} rows={rows} />
+      {findings.length === 0 ? <p className="text-ink-soft">Nothing in this log needs your attention.</p> : null}
+      <ul className="mt-2 divide-y divide-rule">
+        {findings.map((finding) => (
+          <FindingItem key={finding.id} finding={finding} />
+        ))}
+      </ul>
+    </section>
+  );
+}
+
+function VerdictWaiting({ trouble }: { trouble: boolean }) {
+  return (
+    <section aria-labelledby="verdict-title" className="px-4 py-3">
+      <h2 id="verdict-title" className="text-section">
+        Verdict
+      </h2>
+      {trouble ? (
+        <p className="mt-2 text-ink-soft" role="alert">
+          The verdict could not be fetched. Reload the page; if it stays away, read the log again from the list of logs.
+        </p>
+      ) : (
+        <div className="hatch mt-2 h-32 opacity-60" role="status" aria-label="Fetching the verdict" />
+      )}
+    </section>
+  );
+}
+
+/** The one number that matters, in words. */
+function Headline({ verdict, rows }: { verdict: VerdictBody; rows: number }) {
+  const under = verdict.rowsUnderTarget.length;
+  const atLimit = verdict.rowsAtLimit.length;
+  return (
+    <div className="mt-1">
+      <p className="flex items-baseline gap-2">
+        <span className="tabular text-number font-semibold">
+          {under}
+          <span className="text-section font-normal text-ink-soft"> of {rows}</span>
+        </span>
+        <span>{under === 1 ? "row ran" : "rows ran"} under target.</span>
+      </p>
+      <p className="text-table text-ink-soft">
+        {under > 0 ? `${rowWords(verdict.rowsUnderTarget)} under target. ` : ""}
+        {atLimit > 0 ? `${rowWords(verdict.rowsAtLimit)} at the force limit. ` : "No row at its force limit. "}
+        {WEIGHT_WORDS[verdict.weight.state]}
+      </p>
+    </div>
+  );
+}
+
+const WEIGHT_WORDS: Record<VerdictBody["weight"]["state"], string> = {
+  enough: "Enough weight on the frame.",
+  short: "Too little weight on the frame in places.",
+  unknown: "Weight on the frame: not known without the machine's masses.",
+};
+
+/** "Row 17", "Rows 3, 4 and 17", "Rows 3 to 9". */
+export function rowWords(rows: readonly number[]): string {
+  const runs: [number, number][] = [];
+  for (const row of [...rows].sort((a, b) => a - b)) {
+    const last = runs.at(-1);
+    if (last && row === last[1] + 1) last[1] = row;
+    else runs.push([row, row]);
+  }
+  const words = runs.flatMap(([from, to]) =>
+    to - from >= 2 ? [`${from} to ${to}`] : from === to ? [`${from}`] : [`${from}`, `${to}`],
+  );
+  const list = words.length > 1 ? `${words.slice(0, -1).join(", ")} and ${words.at(-1)}` : (words[0] ?? "");
+  return `${rows.length === 1 ? "Row" : "Rows"} ${list}`;
+}
+
+function FindingItem({ finding }: { finding: Finding }) {
+  const { store } = useBook();
+  const selected = useBookState((state) => state.row);
+  const { mark, word } = SEVERITY[finding.severity];
+  const row = finding.row ?? null;
+  const bounds = finding.place ? boundsOfGeometry(finding.place) : null;
+  const seeIt = () => {
+    const state = store.getState();
+    if (row !== null && row !== selected) state.chooseRow(row);
+    state.showPlace(finding.place);
+    if (bounds) state.askToFrame(bounds);
+  };
+  return (
+    <li className="flex gap-2 py-2" data-severity={finding.severity}>
+      <StateMark state={mark} className="mt-1" />
+      <div className="min-w-0 flex-1 space-y-0.5">
+        <p>
+          <span className="sr-only">{word}: </span>
+          {finding.sentence}
+        </p>
+        {finding.check ? <p className="text-table text-ink-soft">{finding.check}</p> : null}
+        {finding.caution ? (
+          <p className="border-l-2 border-straw pl-2 text-table text-ink-soft">
+            <b className="font-semibold text-straw-deep">Caution.</b> {finding.caution}
+          </p>
+        ) : null}
+        {bounds || row !== null ? (
+          <button type="button" onClick={seeIt} className="min-h-11 text-table text-slate underline md:min-h-6">
+            See it{row !== null ? `: row ${row}` : " on the map"}
+          </button>
+        ) : null}
+      </div>
+    </li>
+  );
+}

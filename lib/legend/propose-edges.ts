@@ -1,0 +1,76 @@
+import { ticks } from "d3-array";
+import {
+  areClassEdges,
+  CONTACT_LOAD_EDGES_N,
+  edgesAroundTarget,
+  equalEdges,
+  type Histogram,
+  quantileEdges,
+} from "@/lib/legend/class-edges";
+
+export const EDGE_PRESETS = ["target", "contact-load", "round", "equal", "quantile"] as const;
+export type EdgePreset = (typeof EDGE_PRESETS)[number];
+
+export interface EdgeContext {
+  channel: string;
+  histogram: Histogram;
+  /** What the machine was set to hold, and how far off is still on target; null where nobody said. */
+  targetMarginN: number | null;
+  marginDeadbandN: number | null;
+  /** SI units in one shown unit, so that round edges are round to the reader. */
+  shownFactor: number;
+}
+
+/** Classes of equal width and of equal count. */
+const CLASSES = 6;
+/** Half-width of the middle class where the machine's own tolerance is not known. Common practice, no source. */
+const GUESSED_DEADBAND_N = 100;
+
+/** Presets that make sense for a channel, the default first. */
+export function presetsFor({ channel, targetMarginN }: EdgeContext): EdgePreset[] {
+  if (channel !== "margin") return ["round", "equal", "quantile"];
+  return targetMarginN === null ? ["contact-load", "round", "equal", "quantile"] : [...EDGE_PRESETS];
+}
+
+/** The edges of a preset in SI, always rising and at least one. */
+export function proposeEdges(preset: EdgePreset, context: EdgeContext): number[] {
+  const { histogram } = context;
+  const edges = edgesOf(preset, context);
+  return areClassEdges(edges) ? edges : [(histogram.minimum + histogram.maximum) / 2];
+}
+
+function edgesOf(preset: EdgePreset, context: EdgeContext): number[] {
+  const { histogram, targetMarginN, marginDeadbandN } = context;
+  switch (preset) {
+    case "target":
+      return targetMarginN === null
+        ? []
+        : edgesAroundTarget(targetMarginN, 2 * (marginDeadbandN || GUESSED_DEADBAND_N));
+    case "contact-load":
+      return [...CONTACT_LOAD_EDGES_N];
+    case "equal":
+      return equalEdges(histogram.minimum, histogram.maximum, CLASSES);
+    case "quantile":
+      return quantileEdges(histogram, CLASSES);
+    case "round":
+      return context.channel.startsWith("deviation:") ? roundAroundZero(context) : roundEdges(context);
+  }
+}
+
+/** Round numbers of the reader's unit within the middle 96 % of the readings, so that a few strays do not use up the classes. */
+function roundEdges({ histogram, shownFactor }: EdgeContext): number[] {
+  const [low, high] = middleRange(histogram);
+  return ticks(low / shownFactor, high / shownFactor, CLASSES - 1).map((tick) => tick * shownFactor);
+}
+
+/** The same, alike on both sides of 0 with 0 inside the middle class. */
+function roundAroundZero({ histogram, shownFactor }: EdgeContext): number[] {
+  const reach = Math.max(...middleRange(histogram).map(Math.abs)) / shownFactor;
+  const [step = 1] = ticks(0, reach, 3).filter((tick) => tick > 0);
+  return [-2, -1, 1, 2].map((side) => side * step * shownFactor);
+}
+
+function middleRange(histogram: Histogram): [number, number] {
+  const fiftieths = quantileEdges(histogram, 50);
+  return [fiftieths[0] ?? histogram.minimum, fiftieths.at(-1) ?? histogram.maximum];
+}
