@@ -74,7 +74,8 @@ export async function proxy(request: NextRequest): Promise<NextResponse> {
 export const config = {
   matcher: [
     {
-      source: "/((?!api/|_next/static|_next/image|.*\\.(?:png|svg|ico|woff2?|mjs|js|json|webmanifest)$).*)",
+      // Not the API, and not files: those of the build, and those in `public/`.
+      source: "/((?!api/|_next/static|_next/image|basemap/|demo/|icons/|fonts/|[^/]*\\.[a-z0-9]+$).*)",
       missing: [
         { type: "header", key: "next-router-prefetch" },
         { type: "header", key: "purpose", value: "prefetch" },

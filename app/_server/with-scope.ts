@@ -50,6 +50,15 @@ function refuseLowRole(scope: Scope, permission: Permission): void {
   throw new AppError("forbidden", `Your role, ${scope.role}, does not allow this (${permission}).`);
 }
 
+/** What holds for every reply of the API, unless the route said otherwise. Pages get theirs in proxy.ts. */
+function withApiHeaders(response: Response): Response {
+  const { headers } = response;
+  headers.set("x-content-type-options", "nosniff");
+  if (!headers.has("cache-control")) headers.set("cache-control", "private, no-store");
+  if (!headers.has("referrer-policy")) headers.set("referrer-policy", "no-referrer");
+  return response;
+}
+
 /**
  * Wraps a route that needs an account: who asks, in which organisation, whether the role allows it, same origin,
  * Idempotency-Key, and every error as problem+json. Name the address's parameters: `withScope<"fieldId">(...)`.
@@ -68,9 +77,9 @@ export function withScope<Name extends string = never>(
       const params = await readParams(context);
       const handle = (received: Request) =>
         handler({ scope, identity, params, request: received, url: new URL(request.url), container: outside });
-      return await onlyOnce({ request, scope, container: outside, handle });
+      return withApiHeaders(await onlyOnce({ request, scope, container: outside, handle }));
     } catch (error) {
-      return toResponse(error);
+      return withApiHeaders(toResponse(error));
     }
   };
 }
@@ -82,9 +91,9 @@ export function withPublic<Name extends string = never>(
   return async (request, context) => {
     try {
       const params = await readParams(context);
-      return await handler({ params, request, url: new URL(request.url), container: container() });
+      return withApiHeaders(await handler({ params, request, url: new URL(request.url), container: container() }));
     } catch (error) {
-      return toResponse(error);
+      return withApiHeaders(toResponse(error));
     }
   };
 }
