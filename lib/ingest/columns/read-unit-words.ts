@@ -79,7 +79,9 @@ export interface HeaderUnit {
 }
 
 /** The unit a header names: in brackets anywhere, or as its last words. Null when it names none. */
-export function readHeaderUnit(header: string): HeaderUnit | null {
+export function readHeaderUnit(title: string): HeaderUnit | null {
+  // "depth_mm[7]": a number in brackets is a row, not a unit.
+  const header = title.replace(/\[(\d+)\]/g, " $1");
   for (const match of header.matchAll(/[[(]([^[\]()]+)[\])]/g)) {
     const unit = readUnitWord(match[1] ?? "");
     if (unit && !/^\d+$/.test((match[1] ?? "").trim())) return { unit, rest: header.replace(match[0], " ") };

@@ -9,11 +9,13 @@ import { CELL, type ChannelPlan, type ReadPlan } from "@/lib/ingest/records/read
 import { assembleLog } from "@/lib/ingest/records/assemble-log";
 
 export interface CollectorOptions {
-  /** About how many records the file holds, to size the arrays; a wrong guess costs only time. */
-  expectedRecords: number;
+  /** About how many lines of data the file holds, to size the arrays; a wrong guess costs only time. */
+  expectedLines: number;
   /** What the file counts in, for messages. */
   place: "line" | "feature" | "record";
 }
+
+const LONG_START_RECORDS = 512;
 
 /** Values of one channel while the file is read; `values[record * stride + row - 1]`. */
 export interface ChannelStore {
@@ -44,6 +46,7 @@ export class RecordCollector {
   pass: Int32Array | null;
   sourceLine: Uint32Array;
   private capacity: number;
+  private readonly expectedLines: number;
   private linesTaken = 0;
   private linesRejected = 0;
   private lastTimeMs = NaN;
@@ -58,7 +61,10 @@ export class RecordCollector {
     this.place = options.place;
     this.line = new Float64Array(plan.columnCount + 1).fill(NaN);
     this.texts = new Array<string>(plan.columnCount).fill("");
-    this.capacity = Math.max(16, Math.min(options.expectedRecords, READ_LIMITS.records));
+    // A long file shows its row count only as it is read: start small, and take the room when the rows are known.
+    const expected = plan.row ? LONG_START_RECORDS : options.expectedLines;
+    this.expectedLines = options.expectedLines;
+    this.capacity = Math.max(16, Math.min(expected, READ_LIMITS.records));
     this.rows = plan.rows;
     const size = this.capacity;
     this.timeMs = new Float64Array(size);
@@ -270,7 +276,8 @@ export class RecordCollector {
         `The file holds more than ${READ_LIMITS.records.toLocaleString("en-US")} records, the most one log may have. Split it, for example by field or by day.`,
       );
     }
-    const size = Math.min(nextCapacity(this.capacity), READ_LIMITS.records);
+    const expected = this.plan.row ? Math.ceil((this.expectedLines / this.rows) * 1.02) : 0;
+    const size = Math.min(Math.max(nextCapacity(this.capacity), expected), READ_LIMITS.records);
     const readings = this.stores.reduce((sum, { plan }) => sum + size * this.widthOf(plan), 0);
     this.checkReadings(readings);
     this.timeMs = withRoom(this.timeMs, size);

@@ -21,8 +21,6 @@ export function createTimePlan(
   columns: readonly (MappedColumn & { field: number })[],
   timeZone: string | undefined,
 ): TimePlan | null {
-  const [first, second] = columns;
-  if (!first) return null;
   const zone = timeZone === undefined ? null : createZoneClock(timeZone);
   if (timeZone !== undefined && !zone) {
     stopReading(
@@ -30,6 +28,8 @@ export function createTimePlan(
       `"${timeZone}" is not a time zone. Use an IANA name such as America/Chicago or UTC.`,
     );
   }
+  const [first, second] = columns;
+  if (!first) return null;
   if (columns.some((column) => column.unit === "local")) return planLocal(columns, zone);
   if (second) {
     stopReading(

@@ -14,9 +14,9 @@ import { buildReadPlan } from "@/lib/ingest/records/read-plan";
 import { RecordCollector } from "@/lib/ingest/records/record-collector";
 
 /** Bytes looked at to learn how the file is written and to sample its columns. */
-const HEAD_BYTES = 1 << 20;
+const HEAD_BYTES = 1 << 19;
 const WIDE_HEAD_BYTES = 8 << 20;
-const SAMPLE_ROWS = 2000;
+const SAMPLE_ROWS = 600;
 
 /** Delimited text: one line a record (wide, single) or one a row unit (long); may be gzipped. */
 export const csvFormat: LogFormat = {
@@ -97,13 +97,13 @@ async function readCsv(source: ByteSource, mapping: LogMapping, options: ReadOpt
   const { dialect, encoding } = layout;
   const plan = buildReadPlan(mapping, dialect.names);
   const opened = openText(source, options);
-  const expectedRecords = expectRecords(layout, opened.sizeBytes, mapping);
+  const expectedLines = expectLines(layout, opened.sizeBytes);
   const isPlain =
     dialect.newline === "\n" &&
     !dialect.decimalComma &&
     (encoding.encoding === "utf-8" || encoding.encoding === "windows-1252");
   if (isPlain) {
-    const collector = new RecordCollector(plan, { expectedRecords, place: "line" });
+    const collector = new RecordCollector(plan, { expectedLines, place: "line" });
     const scan = {
       collector,
       delimiter: dialect.delimiter.charCodeAt(0),
@@ -113,16 +113,15 @@ async function readCsv(source: ByteSource, mapping: LogMapping, options: ReadOpt
     };
     if (await readPlain(opened, scan, encoding.markBytes)) return collector.finish();
   }
-  const collector = new RecordCollector(plan, { expectedRecords, place: "line" });
+  const collector = new RecordCollector(plan, { expectedLines, place: "line" });
   await readGeneral(opened, collector, layout);
   return collector.finish();
 }
 
-/** Records by the length of the lines in the head, a little over; long files have many lines a record, so they start small. */
-function expectRecords(layout: CsvLayout, sizeBytes: number, mapping: LogMapping): number {
+/** Lines of the file by the length of the lines in the head, a little over. */
+function expectLines(layout: CsvLayout, sizeBytes: number): number {
   const lines = Math.max(1, countLineFeeds(layout.head));
-  const expected = Math.ceil((sizeBytes / layout.head.length) * lines * 1.02) + 16;
-  return mapping.shape === "long" ? Math.ceil(expected / 16) : expected;
+  return Math.ceil((sizeBytes / layout.head.length) * lines * 1.02) + 16;
 }
 
 function countLineFeeds(bytes: Uint8Array): number {

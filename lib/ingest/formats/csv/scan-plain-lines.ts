@@ -1,5 +1,5 @@
 // One long function on purpose: it is the hot loop of reading logs, and a call a cell would double its time.
-import { isMissing } from "@/lib/ingest/records/parse-number";
+import { isMissing, TEN_TO } from "@/lib/ingest/records/parse-number";
 import { CELL } from "@/lib/ingest/records/read-plan";
 import type { RecordCollector } from "@/lib/ingest/records/record-collector";
 
@@ -10,9 +10,6 @@ const MINUS = 45;
 const POINT = 46;
 const ZERO = 48;
 const NINE = 57;
-
-/** Powers of ten that a double holds exactly, so that one division of a 15-digit integer rounds as Number() does. */
-const TEN_TO = Float64Array.from({ length: 16 }, (_, power) => 10 ** power);
 
 export interface PlainScan {
   collector: RecordCollector;

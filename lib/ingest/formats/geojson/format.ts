@@ -99,7 +99,7 @@ async function readGeojson(source: ByteSource, mapping: LogMapping, options: Rea
   const opened = openText(source, options);
   const perRecord = Math.max(100, opened.sizeBytes / 60_000);
   const collector = new RecordCollector(plan, {
-    expectedRecords: Math.ceil(opened.sizeBytes / perRecord) + 16,
+    expectedLines: Math.ceil(opened.sizeBytes / perRecord) + 16,
     place: "feature",
   });
   const used = layout.paths.flatMap((path, index) =>

@@ -120,7 +120,7 @@ async function readShapefile(source: ByteSource, mapping: LogMapping, options: R
   const layer = await openLayer(source, options);
   const { table, names, records } = layer;
   const plan = buildReadPlan(mapping, names);
-  const collector = new RecordCollector(plan, { expectedRecords: records, place: "record" });
+  const collector = new RecordCollector(plan, { expectedLines: records, place: "record" });
   const used = table.fields.flatMap((column, index) => {
     const kind = plan.kinds[index + 2] ?? CELL.skip;
     return kind === CELL.skip ? [] : [{ column, field: index + 2, kind }];

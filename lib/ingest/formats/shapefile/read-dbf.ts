@@ -1,4 +1,5 @@
 import { stopReading } from "@/lib/ingest/ingest-error";
+import { TEN_TO } from "@/lib/ingest/records/parse-number";
 
 export interface DbfField {
   name: string;
@@ -87,8 +88,6 @@ export function readCellText(table: DbfTable, record: number, field: DbfField): 
   if (field.type === "D" && /^\d{8}$/.test(text)) return `${text.slice(0, 4)}-${text.slice(4, 6)}-${text.slice(6)}`;
   return field.type === "L" && text === "?" ? "" : text;
 }
-
-const TEN_TO = Float64Array.from({ length: 16 }, (_, power) => 10 ** power);
 
 /**
  * kernel: the number in a cell read straight from its bytes, exactly for up to 15 digits; NaN when the cell is not a plain
