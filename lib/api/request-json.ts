@@ -11,6 +11,15 @@ export interface JsonRequest {
   signal?: AbortSignal;
 }
 
+// Which of a person's organisations the open page belongs to; a session alone does not say.
+let organisationSlug: string | null = null;
+
+/** Names the organisation of every request from here on, and by a cookie also of those the browser makes itself. */
+export function actIn(slug: string): void {
+  organisationSlug = slug;
+  document.cookie = `coulterbook-organisation=${encodeURIComponent(slug)}; path=/; samesite=lax`;
+}
+
 /** The problem in a refusing reply; replies without a readable body (a proxy's page) get words of their own. */
 export function readProblem(status: number, text: string): ApiProblem {
   const parsed = Problem.safeParse(parseOrNull(text));
@@ -34,6 +43,7 @@ function parseOrNull(text: string): unknown {
 
 function buildInit(request: JsonRequest): RequestInit {
   const headers: Record<string, string> = { accept: "application/json" };
+  if (organisationSlug) headers["x-organisation"] = organisationSlug;
   if (request.idempotencyKey) headers["idempotency-key"] = request.idempotencyKey;
   const isForm = request.body instanceof FormData;
   if (request.body !== undefined && !isForm) headers["content-type"] = "application/json";

@@ -170,7 +170,11 @@ export const Finding = z.object({
   id: z.string(),
   kind: z.string(),
   severity: z.enum(["ok", "look", "act"]),
+  /** In SI units. */
   sentence: z.string(),
+  /** The same with `{name}` where a number of `values` stands, so that a screen can say it in the reader's units. */
+  sentenceTemplate: z.string().optional(),
+  values: z.record(z.string(), z.object({ value: z.number(), unit: z.string() })).optional(),
   value: NullableNumber,
   unit: z.string(),
   interval: z.tuple([z.number(), z.number()]).nullable(),

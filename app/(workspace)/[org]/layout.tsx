@@ -1,5 +1,6 @@
 import type { ReactNode } from "react";
 import { requireScope } from "@/app/_server/require-scope";
+import { ActInOrganisation } from "@/components/hooks/act-in-organisation";
 import { WorkspaceChapters } from "@/components/ui/workspace-chapters";
 import { WorkspaceHeader } from "@/components/ui/workspace-header";
 import { UnitsProvider } from "@/components/units/use-units";
@@ -16,6 +17,7 @@ export default async function WorkspaceLayout({ children, params }: WorkspaceLay
   const person = { name: user.name, email: user.email, role: scope.role };
   return (
     <UnitsProvider start={user.unitSystem}>
+      <ActInOrganisation slug={organisation.slug} />
       <a
         href="#content"
         className="sr-only focus:not-sr-only focus:fixed focus:left-2 focus:top-2 focus:z-50 focus:bg-sheet focus:p-2"

@@ -1,0 +1,19 @@
+import { sayFinding } from "@/lib/findings/say-finding";
+import type { Finding, VerdictBody } from "@/lib/schemas/logs";
+import type { UnitSystem } from "@/lib/units/display-unit";
+
+const GRAVITY: Record<Finding["severity"], number> = { act: 2, look: 1, ok: 0 };
+
+/** The gravest findings first; equals keep the engine's order. */
+export function rankFindings(verdict: VerdictBody): Finding[] {
+  return verdict.findings
+    .map((finding, index) => ({ finding, index }))
+    .sort((a, b) => GRAVITY[b.finding.severity] - GRAVITY[a.finding.severity] || a.index - b.index)
+    .map(({ finding }) => finding);
+}
+
+/** A finding's sentence in the reader's units, where it comes with its numbers. */
+export function sentenceOf(finding: Finding, system: UnitSystem): string {
+  const { sentenceTemplate, values } = finding;
+  return sentenceTemplate && values ? sayFinding({ sentenceTemplate, values }, system) : finding.sentence;
+}
