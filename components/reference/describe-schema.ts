@@ -13,7 +13,8 @@ function asSchema(value: unknown): JsonSchema | null {
 }
 
 function asList(value: unknown): JsonSchema[] {
-  return Array.isArray(value) ? value.flatMap((entry) => asSchema(entry) ?? []) : [];
+  const entries: unknown[] = Array.isArray(value) ? value : [];
+  return entries.map(asSchema).filter((entry) => entry !== null);
 }
 
 /** "number or null", "list of text", "one of: a, b". */
