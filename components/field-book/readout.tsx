@@ -50,6 +50,7 @@ function ReadingWords({ cursor }: { cursor: Cursor }) {
 }
 
 function TrackWords({ cursor, track }: { cursor: Cursor; track: PassTrack }) {
+  const { log } = useBook();
   const value = useChannelUnits(track.unit, track.channel);
   const speed = useChannelUnits("m/s", "speed");
   const distance = useChannelUnits("m", "distance");
@@ -64,7 +65,7 @@ function TrackWords({ cursor, track }: { cursor: Cursor; track: PassTrack }) {
         <b className="tabular font-semibold text-ink">{Number.isNaN(reading) ? "not logged" : value.format(reading)}</b>
       </span>
       <span className="tabular">{speed.format(track.speedMps[cursor.record])}</span>
-      <span className="tabular">{clockOf(track, cursor.record)}</span>
+      <span className="tabular">{clockOf(track.timesS[cursor.record] ?? NaN, log.startedAt)}</span>
       <span className="tabular">
         pass {cursor.pass}, {distance.format(track.endsM[cursor.record])} along
       </span>
@@ -75,10 +76,9 @@ function TrackWords({ cursor, track }: { cursor: Cursor; track: PassTrack }) {
   );
 }
 
-/** Clock time where the log has one (seconds since 1970), else seconds since the log began. */
-function clockOf(track: PassTrack, record: number): string {
-  const seconds = track.timesS[record] ?? NaN;
-  if (Number.isNaN(seconds)) return "no time";
-  if (seconds < 1e8) return `${seconds.toFixed(1)}\u202fs`;
-  return new Date(seconds * 1000).toLocaleTimeString("en-GB");
+/** Clock time of the reader's own zone; where the log has no date, seconds since it began. */
+function clockOf(secondsIntoLog: number, startedAt: string | null): string {
+  if (Number.isNaN(secondsIntoLog)) return "no time";
+  if (startedAt === null) return `${secondsIntoLog.toFixed(1)}\u202fs`;
+  return new Date(Date.parse(startedAt) + secondsIntoLog * 1000).toLocaleTimeString("en-GB");
 }

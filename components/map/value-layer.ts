@@ -61,7 +61,7 @@ export function recolourValues(map: MapLibreMap, colour: ExpressionSpecification
   if (map.getLayer(LAYER)) map.setPaintProperty(LAYER, "color-relief-color", colour);
 }
 
-/** The worker that fetches tiles has no page to be relative to. */
+/** The worker that fetches tiles has no page to be relative to, and a page may be open under another name of the same server. */
 function absoluteAddress(address: string): string {
-  return address.startsWith("/") ? `${window.location.origin}${address}` : address;
+  return address.replace(/^(?:https?:\/\/[^/]+)?(?=\/)/, window.location.origin);
 }

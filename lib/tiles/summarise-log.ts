@@ -32,8 +32,20 @@ export function summariseLog(
   const rows = channel.perRow ? channel.rows : 1;
   const values = Array.from({ length: rows }, () => new Float32Array(total).fill(NaN));
   passes.forEach((strip, i) => fillPass({ placed, channel, pass: placed.passes[i]!, strip, values }));
-  const { minimum, maximum } = valueScale(channel);
-  return { rows, columns: total, passes, values, histogram: histogramOf(channel.values, minimum, maximum, 120) };
+  const worked = readingsInPasses(placed.passes, channel);
+  const { minimum, maximum } = valueScale({ values: worked, resolution: channel.resolution });
+  return { rows, columns: total, passes, values, histogram: histogramOf(worked, minimum, maximum, 120) };
+}
+
+/** Without what was logged while lifted and turning, which would fill a class of its own. */
+function readingsInPasses(passes: readonly Pass[], channel: DrawnChannel): Float32Array {
+  const worked = new Float32Array(passes.reduce((sum, pass) => sum + pass.records, 0) * channel.rows);
+  let at = 0;
+  for (const { first, records } of passes) {
+    worked.set(channel.values.subarray(first * channel.rows, (first + records) * channel.rows), at);
+    at += records * channel.rows;
+  }
+  return worked;
 }
 
 function shareColumns(passes: readonly Pass[], columns: number): StripPass[] {
