@@ -9,6 +9,7 @@ import { rowsFrom, VERDICT_THRESHOLDS, type VerdictInput } from "@/lib/findings/
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import { rowDistances } from "@/lib/rows/row-distances";
 import { MIN_ROWS_TO_RANK } from "@/lib/statistics/row-deviation";
+import type { RowStatistics } from "@/lib/statistics/row-statistics";
 
 export interface PassVerdict {
   /** Rows under target (margin < target - deadband) on at least 5 % of their distance. */
@@ -27,6 +28,12 @@ export interface PassVerdict {
   /** Share of readings where opener resistance is only a lower bound; null where it is unknown. */
   resistanceCensoredShare: number | null;
   thresholds: typeof VERDICT_THRESHOLDS;
+}
+
+export interface VerdictOptions {
+  distances?: Float32Array;
+  /** Row statistics already worked out, by channel, to save doing them twice. */
+  statistics?: ReadonlyMap<string, RowStatistics>;
 }
 
 const ORDER: Record<Finding["severity"], number> = { act: 0, look: 1, ok: 2 };
@@ -48,15 +55,16 @@ const KIND_ORDER: Finding["kind"][] = [
 ];
 
 /** What can be said about a log at once: which rows, which weight, what to look at, and what the log cannot tell. */
-export function passVerdict(placed: PlacedLog, options: { distances?: Float32Array } = {}): PassVerdict {
+export function passVerdict(placed: PlacedLog, options: VerdictOptions = {}): PassVerdict {
   const distances = options.distances ?? rowDistances(placed);
+  const given = { ...options, distances };
   const input: VerdictInput = {
     placed,
     distances,
-    margin: channelEvidence(placed, "margin", distances),
-    downforce: channelEvidence(placed, "downforce", distances),
-    resistance: channelEvidence(placed, "resistance", distances),
-    contact: channelEvidence(placed, "contact", distances),
+    margin: channelEvidence(placed, "margin", given),
+    downforce: channelEvidence(placed, "downforce", given),
+    resistance: channelEvidence(placed, "resistance", given),
+    contact: channelEvidence(placed, "contact", given),
     balance: measureFrameBalance(placed, distances),
   };
   const odd = findOddRows(input);

@@ -13,10 +13,14 @@ export interface ChannelEvidence {
 }
 
 /** Statistics of a per-row channel in newtons (or of contact); null where the log has it only for the whole machine or not at all. */
-export function channelEvidence(placed: PlacedLog, id: string, distances: Float32Array): ChannelEvidence | null {
+export function channelEvidence(
+  placed: PlacedLog,
+  id: string,
+  given: { distances: Float32Array; statistics?: ReadonlyMap<string, RowStatistics> },
+): ChannelEvidence | null {
   const channel = resolveChannel(placed, id);
   if (!channel || !channel.perRow) return null;
-  return { channel, statistics: rowStatistics(placed, id, { distances }) };
+  return { channel, statistics: given.statistics?.get(id) ?? rowStatistics(placed, id, given) };
 }
 
 export interface RowStep {

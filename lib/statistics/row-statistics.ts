@@ -5,7 +5,7 @@ import { rowDistances } from "@/lib/rows/row-distances";
 import { median } from "@/lib/statistics/median";
 import { deviationFromOthers, scoreRows, Z_LIMIT, type RowScores } from "@/lib/statistics/row-deviation";
 import { rowReason } from "@/lib/statistics/row-reason";
-import { rowSeries, type RowSeries } from "@/lib/statistics/row-series";
+import { allRowSeries, type RowSeries } from "@/lib/statistics/row-series";
 import {
   atLimitFromN,
   contactLostShare,
@@ -13,9 +13,8 @@ import {
   longestStretch,
   underTargetBelowN,
 } from "@/lib/statistics/row-shares";
-import { sortWeighted } from "@/lib/statistics/sort-weighted";
+import { selectQuantiles } from "@/lib/statistics/select-quantiles";
 import { weightedMean } from "@/lib/statistics/weighted-mean";
-import { weightedQuantile, weightedQuantileSorted } from "@/lib/statistics/weighted-quantile";
 import { weightedSd } from "@/lib/statistics/weighted-sd";
 
 /** What one row did over a log. Every mean, sd, quantile and share is weighted by the distance the row travelled. */
@@ -72,8 +71,9 @@ export function rowStatistics(
   if (!resolved.ok) throw new AppError("unprocessable", resolved.error, { detailCode: "channel_not_available" });
   const channel = resolved.value;
   const distances = options.distances ?? rowDistances(placed);
-  const series = Array.from({ length: channel.rows }, (_, row) => rowSeries(placed, channel, distances, row));
-  const described = series.map((one, row) => describeRow(placed, channel, one, row + 1));
+  const described = allRowSeries(placed, channel, distances).map((one, row) =>
+    describeRow(placed, channel, one, row + 1),
+  );
   const scores = scoreChannel(placed, channel, distances);
   const medianOfRows = median(described.map((item) => item.p50 ?? NaN));
   const flagged = described.map((_, row) => isFlagged(scores, row, medianOfRows));
@@ -97,10 +97,9 @@ function isFlagged(scores: RowScores, row: number, medianOfRows: number): boolea
 function scoreChannel(placed: PlacedLog, channel: ResolvedChannel, distances: Float32Array): RowScores {
   if (!channel.perRow) return scoreRows([NaN]);
   const values = deviationFromOthers(channel.values, channel.rows);
-  const typical = Float64Array.from({ length: channel.rows }, (_, row) => {
-    const series = rowSeries(placed, { values, rows: channel.rows }, distances, row);
-    return weightedQuantile(series.values, series.weightsM, 0.5);
-  });
+  const typical = allRowSeries(placed, { values, rows: channel.rows }, distances).map(
+    (series) => selectQuantiles(series.values, series.weightsM, [0.5]).quantiles[0] ?? NaN,
+  );
   return scoreRows(typical, { maxTrackRows: Math.max(2, Math.floor(WHEEL_WIDTH_M / placed.geometry.widthM[0]!)) });
 }
 
@@ -110,24 +109,28 @@ const WHEEL_WIDTH_M = 1;
 type Described = Omit<RowStatisticsItem, "deviationZ" | "flagged" | "reason">;
 
 function describeRow(placed: PlacedLog, channel: ResolvedChannel, series: RowSeries, row: number): Described {
-  const sorted = sortWeighted(series.values, series.weightsM);
-  const at = (p: number) => finiteOrNull(weightedQuantileSorted(sorted, p));
+  const { min, max, weight, quantiles } = selectQuantiles(
+    series.values,
+    series.weightsM,
+    [0.05, 0.25, 0.5, 0.75, 0.95],
+  );
+  const at = (k: number) => finiteOrNull(quantiles[k] ?? NaN);
   const under = underTargetBelowN(placed, channel);
   const limit = atLimitFromN(placed, channel);
   const isUnder = (value: number) => under !== null && value < under;
   return {
     row,
     n: series.values.length,
-    distanceM: series.weightsM.reduce((sum, weight) => sum + weight, 0),
+    distanceM: weight,
     mean: finiteOrNull(weightedMean(series.values, series.weightsM)),
     sd: finiteOrNull(weightedSd(series.values, series.weightsM)),
-    min: finiteOrNull(series.values.reduce((least, value) => Math.min(least, value), Infinity)),
-    p05: at(0.05),
-    p25: at(0.25),
-    p50: at(0.5),
-    p75: at(0.75),
-    p95: at(0.95),
-    max: finiteOrNull(series.values.reduce((most, value) => Math.max(most, value), -Infinity)),
+    min: finiteOrNull(min),
+    p05: at(0),
+    p25: at(1),
+    p50: at(2),
+    p75: at(3),
+    p95: at(4),
+    max: finiteOrNull(max),
     shareUnderTarget: under === null ? null : distanceShare(series, isUnder),
     shareAtLimit: limit === null ? null : distanceShare(series, (value) => value >= limit),
     shareContactLost: contactLostShare(series, channel),

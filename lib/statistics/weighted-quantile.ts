@@ -18,10 +18,14 @@ function firstAtLeast(cumulative: Float64Array, target: number): number {
  * is Hyndman & Fan's type 5. NaN for an empty list.
  */
 export function weightedQuantileSorted(sorted: SortedWeighted, p: number): number {
-  const { values, weights, cumulative } = sorted;
+  const total = sorted.cumulative[sorted.cumulative.length - 1];
+  return total === undefined ? NaN : weightedValueAt(sorted, p * total);
+}
+
+/** The value where the running weight, counted to the middle of each reading's own, reaches `target`. */
+export function weightedValueAt({ values, weights, cumulative }: SortedWeighted, target: number): number {
   const n = values.length;
   if (n === 0) return NaN;
-  const target = p * cumulative[n - 1]!;
   const midpoint = (i: number) => cumulative[i]! - weights[i]! / 2;
   let upper = firstAtLeast(cumulative, target);
   if (midpoint(upper) < target) upper++;

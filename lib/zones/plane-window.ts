@@ -1,4 +1,5 @@
-import type { Pass, PlacedLog } from "@/lib/logs/placed-log";
+import type { PlacedLog } from "@/lib/logs/placed-log";
+import type { PassStep } from "@/lib/rows/pass-members";
 
 /** West, south, east, north in degrees. */
 export type Bbox = readonly [number, number, number, number];
@@ -7,26 +8,30 @@ export type Bbox = readonly [number, number, number, number];
 export function ringMeets(ring: readonly (readonly number[])[], [west, south, east, north]: Bbox): boolean {
   const lons = ring.map((corner) => corner[0]!);
   const lats = ring.map((corner) => corner[1]!);
-  const apart =
-    Math.max(...lons) < west || Math.min(...lons) > east || Math.max(...lats) < south || Math.min(...lats) > north;
-  return !apart;
+  const apartEast = Math.max(...lons) < west || Math.min(...lons) > east;
+  const apartNorth = Math.max(...lats) < south || Math.min(...lats) > north;
+  return !(apartEast || apartNorth);
 }
 
-/** False where a pass surely lies outside the window: its centre line's box, widened by `marginM`, does not meet it. */
-export function passMayMeet(placed: PlacedLog, pass: Pass, bbox: Bbox, marginM: number): boolean {
+/** The first and last step whose centre lies within `marginM` of the window; null where none does. */
+export function stepsNear(
+  placed: PlacedLog,
+  steps: readonly PassStep[],
+  bbox: Bbox,
+  marginM: number,
+): { first: number; last: number } | null {
   const corners = [0, 2].flatMap((lon) => [1, 3].map((lat) => placed.plane.toPlane(bbox[lon]!, bbox[lat]!)));
   const east = corners.map((corner) => corner[0]);
   const north = corners.map((corner) => corner[1]);
-  const box = { minE: Infinity, maxE: -Infinity, minN: Infinity, maxN: -Infinity };
-  for (let i = pass.first; i < pass.first + pass.records; i++) {
-    const [e, n] = [placed.originEastM[i]!, placed.originNorthM[i]!];
-    if (Number.isNaN(e)) continue;
-    box.minE = Math.min(box.minE, e);
-    box.maxE = Math.max(box.maxE, e);
-    box.minN = Math.min(box.minN, n);
-    box.maxN = Math.max(box.maxN, n);
-  }
-  const apartEast = box.maxE + marginM < Math.min(...east) || box.minE - marginM > Math.max(...east);
-  const apartNorth = box.maxN + marginM < Math.min(...north) || box.minN - marginM > Math.max(...north);
-  return !(apartEast || apartNorth);
+  const [minE, maxE] = [Math.min(...east) - marginM, Math.max(...east) + marginM];
+  const [minN, maxN] = [Math.min(...north) - marginM, Math.max(...north) + marginM];
+  let first = -1;
+  let last = -1;
+  steps.forEach(({ record }, k) => {
+    const [e, n] = [placed.originEastM[record]!, placed.originNorthM[record]!];
+    if (e < minE || e > maxE || n < minN || n > maxN) return;
+    if (first < 0) first = k;
+    last = k;
+  });
+  return first < 0 ? null : { first, last };
 }

@@ -4,7 +4,7 @@ import { geodesicAreaM2 } from "@/lib/geo/geodesic-area";
 import type { Pass, PlacedLog } from "@/lib/logs/placed-log";
 import { passSteps } from "@/lib/rows/pass-members";
 import { ringMeets, type Bbox } from "@/lib/zones/plane-window";
-import { stripRing, type Strip } from "@/lib/zones/strip-polygon";
+import { outerStrip, outlinePass, stripRing } from "@/lib/zones/strip-polygon";
 
 export interface SwathProperties {
   pass: number;
@@ -16,23 +16,20 @@ export interface SwathProperties {
 
 export type SwathCollection = FeatureCollection<Polygon | MultiPolygon, SwathProperties>;
 
+/** Swaths are looked at, not measured by the centimetre. */
+const OUTLINE_TOLERANCE_M = 0.1;
+
 /** One polygon a pass: the ground between its outer row edges. Where a tight turn makes it cross itself, its parts. */
 export function buildSwaths(placed: PlacedLog, options: { bbox?: Bbox } = {}): SwathCollection {
   const strip = outerStrip(placed);
   const features = placed.passes.flatMap((pass) => {
     const steps = passSteps(placed, pass).filter((step) => step.before >= 0 || step.after >= 0);
-    const ring = stripRing(placed, strip, steps);
+    const outline = outlinePass(placed, steps, strip, OUTLINE_TOLERANCE_M);
+    const ring = stripRing(placed, strip, outline, { first: 0, last: steps.length - 1 });
     if (ring.length < 4 || (options.bbox && !ringMeets(ring, options.bbox))) return [];
     return [swathFeature(pass, { type: "Polygon", coordinates: [ring] })];
   });
   return { type: "FeatureCollection", features };
-}
-
-function outerStrip({ geometry }: PlacedLog): Strip {
-  const lefts = Array.from(geometry.offsetM, (offset, row) => offset - geometry.widthM[row]! / 2);
-  const rights = Array.from(geometry.offsetM, (offset, row) => offset + geometry.widthM[row]! / 2);
-  const forwardM = geometry.forwardM.reduce((sum, forward) => sum + forward, 0) / geometry.rows;
-  return { leftM: Math.min(...lefts), rightM: Math.max(...rights), forwardM };
 }
 
 function swathFeature(pass: Pass, polygon: Polygon): Feature<Polygon | MultiPolygon, SwathProperties> {

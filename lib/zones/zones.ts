@@ -1,13 +1,14 @@
 import type { Feature, FeatureCollection, Polygon } from "geojson";
 import { resolveChannelOrReason } from "@/lib/channels/resolve-channel";
 import { AppError } from "@/lib/errors";
-import type { PlacedLog } from "@/lib/logs/placed-log";
+import type { Pass, PlacedLog } from "@/lib/logs/placed-log";
+import { passSteps } from "@/lib/rows/pass-members";
 import { rowDistances } from "@/lib/rows/row-distances";
 import { implementWidthM } from "@/lib/rows/row-geometry";
-import { passMayMeet, ringMeets, type Bbox } from "@/lib/zones/plane-window";
-import { rowTracks, type RowTrack } from "@/lib/zones/row-track";
-import { classRuns, type ClassRun } from "@/lib/zones/runs";
-import { stripRing } from "@/lib/zones/strip-polygon";
+import { ringMeets, stepsNear, type Bbox } from "@/lib/zones/plane-window";
+import { rowTracks, type RowTrack, type TrackSource } from "@/lib/zones/row-track";
+import { classRuns, type ClassRun, type RunOptions } from "@/lib/zones/runs";
+import { outerStrip, outlinePass, stripRing, type PassOutline } from "@/lib/zones/strip-polygon";
 
 export interface ZoneProperties {
   row: number;
@@ -51,39 +52,55 @@ export function buildZones(placed: PlacedLog, channelId: string, options: ZoneOp
     const message = `"${channelId}" is logged once for the whole machine, so there are no zones of rows.`;
     throw new AppError("unprocessable", message, { detailCode: "channel_not_per_row" });
   }
-  const distances = options.distances ?? rowDistances(placed);
+  const source = { placed, channel, distances: options.distances ?? rowDistances(placed) };
   const runOptions = {
     breaks: [...options.breaks].sort((a, b) => a - b),
     minLengthM: options.minLengthM ?? DEFAULT_ZONE_LENGTH_M,
   };
-  const margin = implementWidthM(placed.geometry);
-  const { bbox } = options;
-  const features = placed.passes
-    .filter((pass) => !bbox || passMayMeet(placed, pass, bbox, margin))
-    .flatMap((pass) => rowTracks(placed, channel, distances, pass))
-    .flatMap((track) => classRuns(track, runOptions).map((run) => zoneFeature(placed, track, run)))
-    .filter((zone) => !bbox || ringMeets(zone.geometry.coordinates[0]!, bbox));
+  const features = placed.passes.flatMap((pass) => passZones(source, pass, runOptions, options.bbox));
   return { type: "FeatureCollection", features };
 }
 
-function zoneFeature(placed: PlacedLog, track: RowTrack, run: ClassRun): Feature<Polygon, ZoneProperties> {
+/** Corners closer than this to the line between their neighbours are left out: below what a receiver can tell. */
+const OUTLINE_TOLERANCE_M = 0.03;
+
+function passZones(source: TrackSource, pass: Pass, runOptions: RunOptions, bbox: Bbox | undefined): Zone[] {
+  const { placed } = source;
+  const steps = passSteps(placed, pass).filter((step) => step.before >= 0 || step.after >= 0);
+  const near = bbox
+    ? stepsNear(placed, steps, bbox, implementWidthM(placed.geometry) + LONGEST_STEP_M)
+    : { first: 0, last: steps.length - 1 };
+  if (!near || steps.length === 0) return [];
+  const outline = outlinePass(placed, steps, outerStrip(placed), OUTLINE_TOLERANCE_M);
+  return rowTracks(source, pass, steps).flatMap((track) =>
+    classRuns(track, runOptions)
+      .filter((run) => run.last >= near.first && run.first <= near.last)
+      .map((run) => zoneFeature(placed, track, run, outline))
+      .filter((zone) => !bbox || ringMeets(zone.geometry.coordinates[0]!, bbox)),
+  );
+}
+
+/** A cell reaches back to the record before; no pass has a longer step than this. */
+const LONGEST_STEP_M = 20;
+
+type Zone = Feature<Polygon, ZoneProperties>;
+
+function zoneFeature(placed: PlacedLog, track: RowTrack, run: ClassRun, outline: PassOutline): Zone {
   const { offsetM, forwardM, widthM } = placed.geometry;
   const row = track.row - 1;
   const half = widthM[row]! / 2;
   const strip = { leftM: offsetM[row]! - half, rightM: offsetM[row]! + half, forwardM: forwardM[row]! };
-  const steps = track.steps.slice(run.first, run.last + 1);
-  const numbers = readNumbers(track, run);
   return {
     type: "Feature",
-    geometry: { type: "Polygon", coordinates: [stripRing(placed, strip, steps)] },
+    geometry: { type: "Polygon", coordinates: [stripRing(placed, strip, outline, run)] },
     properties: {
       row: track.row,
       pass: track.pass.pass,
       class: run.class,
-      ...numbers,
+      ...readNumbers(track, run),
       areaM2: run.lengthM * widthM[row]!,
-      startS: secondsAt(placed, steps[0]!.record),
-      endS: secondsAt(placed, steps[steps.length - 1]!.record),
+      startS: secondsAt(placed, outline.steps[run.first]!.record),
+      endS: secondsAt(placed, outline.steps[run.last]!.record),
     },
   };
 }
