@@ -1,8 +1,6 @@
 import { insertDemoOrganisations, type DemoOrganisation } from "@/db/queries/system/demo-organisations";
+import { DEMO_PASSWORD } from "@/lib/access/demo-accounts";
 import { hashPassword } from "@/lib/server/access/passwords";
-
-/** Password of every demo account; shown on the sign-in page in demo mode only. */
-export const DEMO_PASSWORD = "barley-into-stubble";
 
 /** Fixed ids, so that seeding again finds what is there. */
 export const DEMO_ORGANISATIONS: readonly DemoOrganisation[] = [

@@ -1,7 +1,7 @@
 import type { Role } from "@/lib/access/permissions";
 
 /** One password for every demo account. Shown on screens in demo mode only; the seed uses the same. */
-export const DEMO_PASSWORD = "larkspur-flats-demo";
+export const DEMO_PASSWORD = "barley-into-stubble";
 
 export interface DemoAccount {
   email: string;
@@ -16,42 +16,42 @@ export interface DemoAccount {
 export const DEMO_ACCOUNTS: readonly DemoAccount[] = [
   {
     email: "operator@larkspur.example",
-    name: "Owen Reyes",
+    name: "Odell Marsh",
     role: "operator",
     organisation: "larkspur",
     does: "takes in a log after a pass and reads its verdict",
   },
   {
     email: "agronomist@larkspur.example",
-    name: "Ada Lindqvist",
+    name: "Ada Reyes",
     role: "agronomist",
     organisation: "larkspur",
     does: "sets up fields, machines and shares",
   },
   {
     email: "researcher@larkspur.example",
-    name: "Rui Tanaka",
+    name: "Rune Holm",
     role: "researcher",
     organisation: "larkspur",
     does: "reads every log, changes nothing",
   },
   {
     email: "viewer@larkspur.example",
-    name: "Vera Holt",
+    name: "Vera Lindqvist",
     role: "viewer",
     organisation: "larkspur",
     does: "reads the fields given to her",
   },
   {
     email: "owner@larkspur.example",
-    name: "Otto Larkin",
+    name: "Ottilie Brandt",
     role: "owner",
     organisation: "larkspur",
     does: "runs the organisation: people, shares, audit",
   },
   {
     email: "owner@otherfarm.example",
-    name: "Nell Brandt",
+    name: "Omar Fenn",
     role: "owner",
     organisation: "otherfarm",
     does: "owns another farm and sees none of this one",
