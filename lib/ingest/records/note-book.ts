@@ -56,6 +56,7 @@ function sayNote(code: string, count: number, { place, firstLine, column }: Note
     "out-of-order": `${records} went back in time; the order of the file was kept.${first}`,
     "bad-row-number": `${n("line", "lines")} had no usable row number and ${count === 1 ? "was" : "were"} left out; rows are numbered from 1 at the left.${first}`,
     "time-without-zone": `${n("time", "times")} named no offset from UTC and ${count === 1 ? "was" : "were"} read as UTC; give the mapping a time zone if they are local.${first}`,
+    "row-averaged": `Every row has the same ${column ?? ""} in every record: the file holds one value for the whole machine, and rows cannot be compared.`,
     "working-by-row": "The working state is logged row by row; a record counts as working when any of its rows works.",
     "pressure-not-force": `Column '${column ?? ""}' is a pressure. It is kept in pascals and never shown as a force, because that needs the cylinder area and the linkage.`,
     "deleted-records": `${n("record was", "records were")} marked as deleted in the .dbf and left out.${first}`,

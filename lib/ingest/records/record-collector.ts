@@ -7,6 +7,7 @@ import { parseBoolean } from "@/lib/ingest/records/parse-boolean";
 import { parseIsoTime } from "@/lib/ingest/records/parse-time";
 import { CELL, type ChannelPlan, type ReadPlan } from "@/lib/ingest/records/read-plan";
 import { assembleLog } from "@/lib/ingest/records/assemble-log";
+import { isRowAveraged } from "@/lib/ingest/records/is-row-averaged";
 
 export interface CollectorOptions {
   /** About how many lines of data the file holds, to size the arrays; a wrong guess costs only time. */
@@ -330,7 +331,10 @@ export class RecordCollector {
         "In this long file no two neighbouring lines belong to the same record. Sort it by time, then by row, and upload it again.",
       );
     }
-    return { log: assembleLog(this), notes: this.notes.list(this.place) };
+    const log = assembleLog(this);
+    for (const channel of log.channels)
+      if (isRowAveraged(channel)) this.notes.add("row-averaged", undefined, channel.id);
+    return { log, notes: this.notes.list(this.place) };
   }
 
   private rejectedError() {

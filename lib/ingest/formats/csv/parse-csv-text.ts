@@ -1,4 +1,5 @@
 import Papa from "papaparse";
+import { stopReading } from "@/lib/ingest/ingest-error";
 
 export interface ParsedText {
   rows: string[][];
@@ -45,4 +46,12 @@ export function countLines(row: readonly string[]): number {
     for (let at = cell.indexOf("\n"); at >= 0; at = cell.indexOf("\n", at + 1)) lines++;
   }
   return lines;
+}
+
+export function stopUnclosedQuote(line: number): never {
+  stopReading(
+    "unclosed-quote",
+    `A quote that opens on or after line ${line} is never closed, so the rest of the file cannot be split into cells. Export the log again, or close the quote.`,
+    { line },
+  );
 }

@@ -1,8 +1,7 @@
 import type { ByteSource } from "@/lib/ingest/byte-source";
-import { countLines, parseCsvText } from "@/lib/ingest/formats/csv/parse-csv-text";
+import { countLines, parseCsvText, stopUnclosedQuote } from "@/lib/ingest/formats/csv/parse-csv-text";
 import type { FoundEncoding } from "@/lib/ingest/formats/csv/decode-text";
 import type { CsvDialect } from "@/lib/ingest/formats/csv/sniff-dialect";
-import { stopReading } from "@/lib/ingest/ingest-error";
 import type { RecordCollector } from "@/lib/ingest/records/record-collector";
 
 /** A row not finished after so many characters has a quote that is never closed. */
@@ -35,20 +34,12 @@ export async function readGeneral(
     takeRows(rows, collector, state, dialect);
     rest = rest.slice(taken);
     tried = rest.length;
-    if (rest.length > LONGEST_ROW) stopUnclosed(state.lineNumber + 1);
+    if (rest.length > LONGEST_ROW) stopUnclosedQuote(state.lineNumber + 1);
   }
   rest += decoder.decode();
   const { rows, isOpen } = parseCsvText(rest, { ...dialect, isLast: true });
-  if (isOpen) stopUnclosed(state.lineNumber + 1);
+  if (isOpen) stopUnclosedQuote(state.lineNumber + 1);
   takeRows(rows, collector, state, dialect);
-}
-
-function stopUnclosed(line: number): never {
-  stopReading(
-    "unclosed-quote",
-    `A quote that opens on or after line ${line} is never closed, so the rest of the file cannot be split into cells. Export the log again, or close the quote.`,
-    { line },
-  );
 }
 
 function takeRows(

@@ -1,7 +1,7 @@
 import { stopReading } from "@/lib/ingest/ingest-error";
 import { READ_LIMITS } from "@/lib/ingest/log-format";
 import { readUnitWord } from "@/lib/ingest/columns/read-unit-words";
-import { countLines, parseCsvText } from "@/lib/ingest/formats/csv/parse-csv-text";
+import { countLines, parseCsvText, stopUnclosedQuote } from "@/lib/ingest/formats/csv/parse-csv-text";
 import { nameColumns } from "@/lib/ingest/columns/name-columns";
 import { isMissing, parseNumber } from "@/lib/ingest/records/parse-number";
 
@@ -29,6 +29,7 @@ const SNIFF_CHARACTERS = 65_536;
 interface Candidate {
   delimiter: string;
   rows: string[][];
+  isOpen: boolean;
   fields: number;
   score: number;
 }
@@ -40,6 +41,8 @@ export function sniffDialect(head: string, isWhole: boolean, name: string): CsvD
   const candidates = DELIMITERS.map((delimiter) => judge(text.text, delimiter, newline, text.isWhole));
   const best = candidates.reduce((a, b) => (b.score > a.score ? b : a));
   if (best.score <= 0) {
+    const open = candidates.find((candidate) => candidate.isOpen && candidate.fields > 0);
+    if (open) stopUnclosedQuote(countAllLines(open.rows.slice(0, -1)) + 1);
     stopReading(
       "not-a-log",
       `"${name}" is text, but not a table: no comma, semicolon, tab or bar splits its lines into the same number of fields. Export the log as CSV and upload that.`,
@@ -64,7 +67,7 @@ function isNumeric(cell: string, delimiter: string): boolean {
 }
 
 function judge(text: string, delimiter: string, newline: "\n" | "\r", isLast: boolean): Candidate {
-  const { rows } = parseCsvText(text, { delimiter, newline, isLast, maxRows: SNIFF_ROWS });
+  const { rows, isOpen } = parseCsvText(text, { delimiter, newline, isLast, maxRows: SNIFF_ROWS });
   const filled = rows.filter((row) => row.length > 1 || (row[0] ?? "").trim() !== "");
   const counts = new Map<number, number>();
   for (const row of filled) counts.set(row.length, (counts.get(row.length) ?? 0) + 1);
@@ -73,15 +76,15 @@ function judge(text: string, delimiter: string, newline: "\n" | "\r", isLast: bo
   for (const [count, times] of counts) {
     if (count >= 2 && (times > most || (times === most && count > fields))) [fields, most] = [count, times];
   }
-  if (fields === 0) return { delimiter, rows, fields, score: 0 };
+  if (fields === 0) return { delimiter, rows, isOpen, fields, score: 0 };
   const cells = filled.filter((row) => row.length === fields).flat();
   // Lines of prose fall into equal parts by chance, but hold no numbers; a header alone may.
   const hasNumber = cells.some((cell) => isNumeric(cell, delimiter));
-  if (!hasNumber && filled.length > 1) return { delimiter, rows, fields, score: 0 };
+  if (!hasNumber && filled.length > 1) return { delimiter, rows, isOpen, fields, score: 0 };
   const numeric = cells.filter((cell) => isMissing(cell) || isNumeric(cell, delimiter)).length;
   // Same-length lines first, then how many cells are numbers; more columns break a tie.
   const score = (most / filled.length) * (0.2 + numeric / cells.length) + Math.min(fields, 100) * 1e-4;
-  return { delimiter, rows, fields, score };
+  return { delimiter, rows, isOpen, fields, score };
 }
 
 function describeDialect({ delimiter, rows, fields }: Candidate, newline: "\n" | "\r"): CsvDialect {
@@ -96,7 +99,6 @@ function describeDialect({ delimiter, rows, fields }: Candidate, newline: "\n" |
       `The header has ${titles.length.toLocaleString("en-US")} columns; a log may have ${READ_LIMITS.columns.toLocaleString("en-US")}. Export fewer channels.`,
     );
   }
-  const lines = (count: number) => rows.slice(0, count).reduce((sum, row) => sum + countLines(row), 0);
   return {
     delimiter,
     newline,
@@ -105,12 +107,16 @@ function describeDialect({ delimiter, rows, fields }: Candidate, newline: "\n" |
     names: nameColumns(titles),
     units,
     rowsBefore,
-    linesBefore: lines(rowsBefore),
-    preamble: lines(header.index),
+    linesBefore: countAllLines(rows.slice(0, rowsBefore)),
+    preamble: countAllLines(rows.slice(0, header.index)),
   };
 }
 
-/** The header: the first full row of words, or the row of words right before the first full row. Null row: there is none. */
+function countAllLines(rows: readonly string[][]): number {
+  return rows.reduce((sum, row) => sum + countLines(row), 0);
+}
+
+/** The header: the first full row if it is words, or the last row of words before it. Null row: there is none. */
 function findHeader(
   rows: readonly string[][],
   fields: number,
@@ -119,16 +125,16 @@ function findHeader(
   const firstFull = rows.findIndex((row) => row.length === fields);
   const full = rows[firstFull] ?? [];
   if (isWords(full, delimiter)) return { index: firstFull, row: full };
-  const before = rows[firstFull - 1];
-  if (!before || before.length < 2 || !isWords(before, delimiter)) return { index: firstFull, row: null };
+  const index = rows.slice(0, firstFull).findLastIndex((row) => row.length >= 2 && isWords(row, delimiter));
+  const before = rows[index];
+  if (!before) return { index: firstFull, row: null };
   const body = rows.slice(firstFull).filter((row) => row.length === fields);
   // Every line ends in one more delimiter than the header has, or the header in one more than the lines.
   if (before.length === fields - 1 && body.every((row) => row[fields - 1] === "")) {
-    return { index: firstFull - 1, row: [...before, ""] };
+    return { index, row: [...before, ""] };
   }
-  if (before.length === fields + 1 && before[fields] === "")
-    return { index: firstFull - 1, row: before.slice(0, fields) };
-  return { index: firstFull - 1, row: before };
+  if (before.length === fields + 1 && before[fields] === "") return { index, row: before.slice(0, fields) };
+  return { index, row: before };
 }
 
 /** More words than numbers, and no comment mark. */

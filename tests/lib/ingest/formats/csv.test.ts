@@ -150,6 +150,18 @@ describe("notes on what was left out or looks odd", () => {
   });
 });
 
+describe("a file that holds one value for all rows", () => {
+  const lines = (second: (i: number) => number) =>
+    `${SIMPLE_HEADER}\n${Array.from({ length: 40 }, (_, i) => `${i},-98.6,38.4,${200 + i},${second(i)}`).join("\n")}\n`;
+  const codes = async (text: string) =>
+    (await mustRead(textSource(text), SIMPLE_MAPPING)).notes.map((note) => note.code);
+
+  it("is told apart from one where rows differ once", async () => {
+    expect(await codes(lines((i) => 200 + i))).toEqual(["row-averaged"]);
+    expect(await codes(lines((i) => (i === 17 ? 3 : 200 + i)))).toEqual([]);
+  });
+});
+
 describe("times, places and states", () => {
   const place: LogMapping["columns"] = [
     { name: "lon", channel: "longitude", unit: "deg" },

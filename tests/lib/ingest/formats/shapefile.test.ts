@@ -1,0 +1,116 @@
+import { describe, expect, it } from "vitest";
+import { bytesSource } from "@/lib/ingest/byte-source";
+import { errorOf, mustInspect, readAsProposed } from "../support/make-source";
+import { makeDbf, makeShp, UTM14_PRJ, WGS84_PRJ, zipOf, type DbfColumn } from "../support/make-shapefile";
+
+const POINTS: [number, number][] = [
+  [-98.61, 38.41],
+  [-98.62, 38.42],
+  [-98.63, 38.43],
+];
+const COLUMNS: DbfColumn[] = [
+  { name: "TIME_utc", type: "C", length: 20, cells: ["2031-09-24T14:05:00Z", "2031-09-24T14:05:01Z", ""] },
+  { name: "DF_1_lbf", type: "N", length: 8, cells: ["200.5", "-3", "********"] },
+  { name: "DF_2_lbf", type: "F", length: 12, cells: ["2.1000e+002", "210", ""] },
+  { name: "WORKING", type: "L", length: 1, cells: ["T", "F", "?"] },
+];
+const LBF = 4.4482216152605;
+
+const layer = (extra: Record<string, Uint8Array | string> = {}) => ({
+  "drill/log.shp": makeShp(POINTS),
+  "drill/log.dbf": makeDbf(COLUMNS),
+  "drill/log.prj": WGS84_PRJ,
+  ...extra,
+});
+const source = (files: Record<string, Uint8Array | string>) => bytesSource("log.zip", zipOf(files));
+
+describe("zipped point shapefile", () => {
+  it("reads positions and every kind of field", async () => {
+    const { log, notes } = await readAsProposed(source(layer()));
+    expect([...log.longitude]).toEqual([-98.61, -98.62, -98.63]);
+    expect([...(log.channels[0]?.values ?? [])]).toEqual(
+      [200.5, 210, -3, 210, NaN, NaN].map((value) => Math.fround(value * LBF)),
+    );
+    expect([...(log.working ?? [])]).toEqual([1, 0, 0]);
+    expect(new Date(log.timeMs[1] ?? NaN).toISOString()).toBe("2031-09-24T14:05:01.000Z");
+    expect(notes).toEqual([]);
+  });
+
+  it("reads points with height, and null shapes as missing positions", async () => {
+    const shp = makeShp([[-98.61, 38.41], null, [-98.63, 38.43]], 11);
+    const { log, notes } = await readAsProposed(source(layer({ "drill/log.shp": shp })));
+    expect([...log.latitude]).toEqual([38.41, NaN, 38.43]);
+    expect(notes.map((note) => [note.code, note.firstLine])).toEqual([["no-position", 2]]);
+  });
+
+  it("turns a projected layer into degrees by its .prj", async () => {
+    // PROJ 9: `printf '40 -100\n40 -99\n' | cs2cs EPSG:4326 EPSG:32614`.
+    const shp = makeShp([
+      [414639.538157, 4428236.064633],
+      [500000, 4427757.218738],
+      [500000, 4427757.218738],
+    ]);
+    const { log } = await readAsProposed(source(layer({ "drill/log.shp": shp, "drill/log.prj": UTM14_PRJ })));
+    expect(log.longitude[0]).toBeCloseTo(-100, 8);
+    expect(log.latitude[1]).toBeCloseTo(40, 8);
+  });
+
+  it("says when there is no .prj, and offers easting and northing where the numbers are metres", async () => {
+    const files = layer();
+    const { "drill/log.prj": _prj, ...bare } = files;
+    expect((await mustInspect(source(bare))).notes.map((note) => note.code)).toEqual(["no-projection"]);
+    const metres = { ...bare, "drill/log.shp": makeShp(POINTS.map(([x, y]) => [x * 1e4, y * 1e5])) };
+    const inspection = await mustInspect(source(metres));
+    expect(inspection.columns.slice(0, 2).map((column) => column.proposal?.channel)).toEqual(["easting", "northing"]);
+  });
+
+  it("reads what both parts hold when they disagree, with a note", async () => {
+    const { log, notes } = await readAsProposed(source(layer({ "drill/log.shp": makeShp(POINTS.slice(0, 2)) })));
+    expect(log.records).toBe(2);
+    expect(notes).toMatchObject([{ code: "part-count-mismatch", count: 1 }]);
+    const cut = await readAsProposed(source(layer({ "drill/log.shp": makeShp(POINTS).subarray(0, 150) })));
+    expect(cut.log.records).toBe(1);
+    expect(cut.notes.map((note) => note.code)).toEqual(["part-count-mismatch", "cut-short"]);
+  });
+
+  it("leaves deleted records out, with a note", async () => {
+    const { log, notes } = await readAsProposed(source(layer({ "drill/log.dbf": makeDbf(COLUMNS, { deleted: [1] }) })));
+    expect([...log.sourceLine]).toEqual([1, 3]);
+    expect(notes).toMatchObject([{ code: "deleted-records", count: 1, firstLine: 2 }]);
+  });
+
+  it("reads names in the encoding of the .cpg", async () => {
+    const named = [{ ...(COLUMNS[1] as DbfColumn), name: "D\u00e9bit_N" }];
+    const files = layer({ "drill/log.dbf": makeDbf(named), "drill/log.cpg": "1252" });
+    expect((await mustInspect(source(files))).columns[2]?.name).toBe("Débit_N");
+  });
+
+  it.each([
+    ["several-layers", layer({ "other/two.shp": makeShp(POINTS) })],
+    ["missing-part", { "log.shp": makeShp(POINTS) }],
+    ["unknown-file-kind", { "readme.txt": "nothing here" }],
+    ["unknown-file-kind", { "TASKDATA/TASKDATA.XML": "<ISO11783_TaskData/>" }],
+    ["not-points", layer({ "drill/log.shp": makeShp(POINTS, 5) })],
+    ["shapefile-damaged", layer({ "drill/log.shp": new Uint8Array(200) })],
+    ["shapefile-damaged", layer({ "drill/log.dbf": new Uint8Array(200) })],
+    ["unknown-projection", layer({ "drill/log.prj": 'PROJCS["Somewhere",PROJECTION["Unheard_Of"]]' })],
+    ["no-readings", layer({ "drill/log.shp": makeShp([]) })],
+    ["archive-unsafe-name", layer({ "../outside.txt": "x" })],
+    ["archive-unsafe-name", layer({ "a\\..\\b.txt": "x" })],
+    ["archive-unsafe-name", layer({ "/etc/x": "x" })],
+    ["archive-bomb", layer({ "zeros.bin": new Uint8Array(40 * 1024 * 1024) })],
+    ["archive-bomb", Object.fromEntries(Array.from({ length: 1100 }, (_, i) => [`f${i}.txt`, "x"]))],
+  ])("stops with %s", async (code, files) => {
+    const error = await errorOf(source(files));
+    expect(error?.code).toBe(code);
+    expect(error?.message.length).toBeGreaterThan(40);
+  });
+
+  it("stops with archive-truncated at any cut", async () => {
+    const zip = zipOf(layer());
+    for (const share of [0.1, 0.5, 0.9, 0.99]) {
+      const error = await errorOf(bytesSource("log.zip", zip.subarray(0, Math.floor(zip.length * share))));
+      expect(error?.code).toBe("archive-truncated");
+    }
+  });
+});
