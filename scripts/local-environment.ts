@@ -100,6 +100,8 @@ export async function prepareLocalEnvironment(input: {
       ...secret,
       NODE_ENV: input.mode ?? "production",
       NEXT_TELEMETRY_DISABLED: "1",
+      // The version that is pinned works on this Node; the notice would only worry people.
+      AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: "true",
       NEXTAUTH_SECRET: secret.AUTH_SECRET,
       NEXTAUTH_URL: baseUrl,
       PORT: String(port),

@@ -46,3 +46,13 @@ export async function listAudit(tx: Transaction, scope: Scope, query: ListQuery)
     .limit(query.limit + 1);
   return pageOf(rows, query.limit, (row) => [row.at.toISOString(), row.id]);
 }
+
+/** Whether the organisation has an entry of this action. */
+export async function hasAuditAction(tx: Transaction, scope: Scope, action: string): Promise<boolean> {
+  const [row] = await tx
+    .select({ id: auditEntries.id })
+    .from(auditEntries)
+    .where(and(eq(auditEntries.organisationId, scope.organisationId), eq(auditEntries.action, action)))
+    .limit(1);
+  return row !== undefined;
+}

@@ -27,14 +27,15 @@ export class LogProgress {
     private readonly organisationId: string,
     private readonly logId: string,
     first: State,
-    outer: AbortSignal,
+    private readonly outer: AbortSignal,
   ) {
     this.state = first;
-    const stop = () => this.controller.abort(outer.reason);
-    if (outer.aborted) stop();
-    else outer.addEventListener("abort", stop, { once: true, signal: this.controller.signal });
+    if (outer.aborted) this.stop();
+    else outer.addEventListener("abort", this.stop, { once: true });
     this.timer = setInterval(() => (this.writing = this.writing.then(() => this.write())), WRITE_MS);
   }
+
+  private readonly stop = () => this.controller.abort(this.outer.reason);
 
   get signal(): AbortSignal {
     return this.controller.signal;
@@ -48,6 +49,7 @@ export class LogProgress {
   /** Stops the writing; no progress lands after this resolves. */
   async end(): Promise<void> {
     clearInterval(this.timer);
+    this.outer.removeEventListener("abort", this.stop);
     await this.writing;
   }
 
