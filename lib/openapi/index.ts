@@ -3,6 +3,7 @@ import { fieldOperations } from "@/lib/openapi/operations/fields";
 import { logOperations } from "@/lib/openapi/operations/logs";
 import { machineOperations } from "@/lib/openapi/operations/machines";
 import { peopleOperations } from "@/lib/openapi/operations/people";
+import { readingOperations } from "@/lib/openapi/operations/readings";
 import { shareOperations } from "@/lib/openapi/operations/shares";
 import type { Operation } from "@/lib/openapi/operation";
 
@@ -11,6 +12,7 @@ export const OPERATIONS: readonly Operation[] = [
   ...fieldOperations,
   ...machineOperations,
   ...logOperations,
+  ...readingOperations,
   ...shareOperations,
   ...peopleOperations,
   ...documentOperations,

@@ -1,5 +1,7 @@
 import type { Operation } from "@/lib/openapi/operation";
+import { TileQuery, tileReplies } from "@/lib/openapi/operations/readings";
 import { ListQuery } from "@/lib/schemas/listing";
+import { TileJson } from "@/lib/schemas/logs";
 import { SharedView, SharePasscode } from "@/lib/schemas/shared";
 import { Share, ShareCreated, ShareInput, ShareList } from "@/lib/schemas/shares";
 
@@ -68,6 +70,25 @@ export const shareOperations: Operation[] = [
     description: "Sets a cookie that opens the link for 12 hours.",
     body: SharePasscode,
     replies: [{ status: 204, description: "Right; the cookie is set" }],
+    errors: ["unauthorized", "gone", "too_many_requests"],
+  },
+  {
+    method: "GET",
+    path: "/api/v1/shared/{token}/tiles/{channel}/tiles.json",
+    tag,
+    permission: "public",
+    summary: "TileJSON 3 of a shared channel",
+    replies: [{ status: 200, description: "TileJSON", schema: TileJson }],
+    errors: ["unauthorized", "gone", "too_many_requests"],
+  },
+  {
+    method: "GET",
+    path: "/api/v1/shared/{token}/tiles/{channel}/{z}/{x}/{y}.png",
+    tag,
+    permission: "public",
+    summary: "A tile of a shared channel",
+    query: TileQuery,
+    replies: tileReplies,
     errors: ["unauthorized", "gone", "too_many_requests"],
   },
 ];

@@ -1,0 +1,149 @@
+import { z } from "zod";
+import type { Method, Operation, OperationReply } from "@/lib/openapi/operation";
+import { ListQuery } from "@/lib/schemas/listing";
+import { ChannelQuery, PlaceQuery, SwathsQuery, ZonesQuery } from "@/lib/schemas/log-queries";
+import { SwathCollectionBody, ZoneCollectionBody } from "@/lib/schemas/log-shapes";
+import {
+  CoverageBody,
+  PassList,
+  PassReadings,
+  ReadingAt,
+  RowStatisticsBody,
+  TileJson,
+  VerdictBody,
+} from "@/lib/schemas/logs";
+
+const tag = "Readings";
+
+export const TileQuery = z.object({
+  v: z.string().optional().describe("The log's version: such an address may be cached for good"),
+  breaks: z.string().optional().describe("Rising class edges, for a coloured picture instead of values"),
+  ramp: z.string().optional().describe("The colours of the classes"),
+});
+
+export const tileReplies: OperationReply[] = [
+  { status: 200, description: "512 px PNG; 0,0,0 or transparent where nothing was logged", contentType: "image/png" },
+  { status: 304, description: "The caller has this tile" },
+];
+
+function notBuilt(method: Method, name: string, summary: string): Operation {
+  return {
+    method,
+    path: `/api/v1/logs/{logId}/${name}`,
+    tag,
+    permission: "logs.read",
+    summary,
+    description: "Not built yet: answers 501.",
+    replies: [],
+    errors: ["not_implemented"],
+  };
+}
+
+/** What came of a log. While it has no version yet these answer 409. */
+export const readingOperations: Operation[] = [
+  {
+    method: "GET",
+    path: "/api/v1/logs/{logId}/passes",
+    tag,
+    permission: "logs.read",
+    summary: "Passes in order",
+    query: ListQuery,
+    replies: [{ status: 200, description: "A page of passes", schema: PassList }],
+    errors: ["conflict"],
+  },
+  {
+    method: "GET",
+    path: "/api/v1/logs/{logId}/passes/{pass}/readings",
+    tag,
+    permission: "logs.read",
+    summary: "Readings of one pass",
+    description:
+      "JSON, or packed little-endian Float32, row after row of each record, by `Accept: application/octet-stream`.",
+    query: ChannelQuery,
+    replies: [{ status: 200, description: "Readings", schema: PassReadings }],
+    errors: ["conflict", "not_acceptable"],
+  },
+  {
+    method: "GET",
+    path: "/api/v1/logs/{logId}/rows",
+    tag,
+    permission: "logs.read",
+    summary: "Statistics of every row, weighted by distance",
+    query: ChannelQuery,
+    replies: [{ status: 200, description: "One item a row", schema: RowStatisticsBody }],
+    errors: ["conflict"],
+  },
+  {
+    method: "GET",
+    path: "/api/v1/logs/{logId}/coverage",
+    tag,
+    permission: "logs.read",
+    summary: "Area swept, covered, overlapped and skipped",
+    replies: [{ status: 200, description: "Areas", schema: CoverageBody }],
+    errors: ["conflict"],
+  },
+  {
+    method: "GET",
+    path: "/api/v1/logs/{logId}/verdict",
+    tag,
+    permission: "logs.read",
+    summary: "What the pass amounts to, in plain words with numbers",
+    replies: [{ status: 200, description: "The verdict and its findings", schema: VerdictBody }],
+    errors: ["conflict"],
+  },
+  {
+    method: "GET",
+    path: "/api/v1/logs/{logId}/zones",
+    tag,
+    permission: "logs.read",
+    summary: "Stretches of rows in one class, as polygons",
+    query: ZonesQuery,
+    replies: [{ status: 200, description: "GeoJSON", schema: ZoneCollectionBody, contentType: "application/geo+json" }],
+    errors: ["conflict"],
+  },
+  {
+    method: "GET",
+    path: "/api/v1/logs/{logId}/swaths",
+    tag,
+    permission: "logs.read",
+    summary: "What each pass swept, as polygons",
+    query: SwathsQuery,
+    replies: [
+      { status: 200, description: "GeoJSON", schema: SwathCollectionBody, contentType: "application/geo+json" },
+    ],
+    errors: ["conflict"],
+  },
+  {
+    method: "GET",
+    path: "/api/v1/logs/{logId}/at",
+    tag,
+    permission: "logs.read",
+    summary: "The reading under a point",
+    query: PlaceQuery,
+    replies: [{ status: 200, description: "The reading", schema: ReadingAt }],
+    errors: ["conflict"],
+  },
+  {
+    method: "GET",
+    path: "/api/v1/logs/{logId}/tiles/{channel}/tiles.json",
+    tag,
+    permission: "logs.read",
+    summary: "TileJSON 3 with the numbers that turn colours into values",
+    replies: [{ status: 200, description: "TileJSON", schema: TileJson }],
+    errors: ["conflict"],
+  },
+  {
+    method: "GET",
+    path: "/api/v1/logs/{logId}/tiles/{channel}/{z}/{x}/{y}.png",
+    tag,
+    permission: "logs.read",
+    summary: "A value tile, or a picture of classes",
+    query: TileQuery,
+    replies: tileReplies,
+    errors: ["conflict"],
+  },
+  notBuilt("GET", "frames", "Shares of the machine, the field, the travel and the clock"),
+  notBuilt("GET", "export", "Readings, zones or swaths as a file"),
+  notBuilt("GET", "cleaning", "Cleaning rules with their counts"),
+  notBuilt("POST", "cleaning", "Change the cleaning rules"),
+];
