@@ -32,9 +32,8 @@ describe("files that are no log", () => {
   });
 
   it("refuses a gzip that unpacks without measure", async () => {
-    const lines = new Uint8Array(80 * 1024 * 1024).fill(48);
-    for (let at = 0; at < lines.length; at++)
-      if (at % 10 !== 0) lines[at] = at % 10 === 9 ? 10 : at % 2 === 1 ? 44 : 48;
+    // Blank lines after a header: no record that another limit would count.
+    const lines = new Uint8Array(80 * 1024 * 1024).fill(10);
     lines.set(bytesOf(`${SIMPLE_HEADER}\n`));
     const bomb = gzipSync(lines, { level: 6 });
     expect((await errorOf(bytesSource("log.csv.gz", bomb), SIMPLE_MAPPING))?.code).toBe("archive-bomb");

@@ -56,8 +56,7 @@ describe("zipped point shapefile", () => {
   });
 
   it("says when there is no .prj, and offers easting and northing where the numbers are metres", async () => {
-    const files = layer();
-    const { "drill/log.prj": _prj, ...bare } = files;
+    const bare = { "drill/log.shp": makeShp(POINTS), "drill/log.dbf": makeDbf(COLUMNS) };
     expect((await mustInspect(source(bare))).notes.map((note) => note.code)).toEqual(["no-projection"]);
     const metres = { ...bare, "drill/log.shp": makeShp(POINTS.map(([x, y]) => [x * 1e4, y * 1e5])) };
     const inspection = await mustInspect(source(metres));
