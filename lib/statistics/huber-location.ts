@@ -2,6 +2,9 @@ import { MAD_TO_SD, medianAbsoluteDeviation } from "@/lib/statistics/median-abso
 import { median } from "@/lib/statistics/median";
 import { sortFinite } from "@/lib/statistics/quantile";
 
+/** The rule of R's MASS::huber, which returns the last centre before a step smaller than this many scales. */
+const STOP_BELOW_SCALES = 1e-6;
+
 /**
  * Huber's M-estimate of location with the scale fixed at 1.4826 MAD: values further than `k` scales out are pulled in and
  * the mean taken again until it stands still (Huber 1981, Robust Statistics). The median where the MAD is 0.
@@ -15,9 +18,8 @@ export function huberLocation(values: ArrayLike<number>, k = 1.5): number {
     let sum = 0;
     for (const value of finite) sum += Math.min(Math.max(value, centre - limit), centre + limit);
     const next = sum / finite.length;
-    const moved = Math.abs(next - centre);
+    if (Math.abs(next - centre) < STOP_BELOW_SCALES * (limit / k)) break;
     centre = next;
-    if (moved < 1e-12 * limit) break;
   }
   return centre;
 }
