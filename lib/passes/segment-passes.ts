@@ -62,10 +62,6 @@ function stepM(input: PassInput, from: number, to: number): number {
   return Math.hypot(input.eastM[to]! - input.eastM[from]!, input.northM[to]! - input.northM[from]!);
 }
 
-function stepS(input: PassInput, from: number, to: number): number {
-  return (input.timeMs[to]! - input.timeMs[from]!) / 1000;
-}
-
 function measureLimits(input: PassInput): Limits {
   const steps: number[] = [];
   for (let i = 1; i < input.works.length; i++) {
@@ -83,28 +79,40 @@ function measureLimits(input: PassInput): Limits {
 function workingRuns(input: PassInput, limits: Limits): PassRange[] {
   const runs: PassRange[] = [];
   let open: PassRange | null = null;
+  // The latest time of the open pass, so that one record with a wrong clock does not cut it.
+  let latestMs = NaN;
   for (let i = 0; i < input.works.length; i++) {
     if (input.works[i] !== 1) continue;
-    if (open && continues(input, limits, open.end - 1, i)) open.end = i + 1;
-    else {
+    const seconds = (input.timeMs[i]! - latestMs) / 1000;
+    if (open && continues(input, limits, { from: open.end - 1, to: i, seconds })) {
+      open.end = i + 1;
+      if (!(input.timeMs[i]! <= latestMs)) latestMs = Number.isNaN(input.timeMs[i]!) ? latestMs : input.timeMs[i]!;
+    } else {
       open = { first: i, end: i + 1 };
+      latestMs = input.timeMs[i]!;
       runs.push(open);
     }
   }
   return runs;
 }
 
-/** True where working record `to` carries on the pass whose last working record is `from`. */
-function continues(input: PassInput, limits: Limits, from: number, to: number): boolean {
+interface Step {
+  /** The last working record of the pass so far, and the one that may carry it on. */
+  from: number;
+  to: number;
+  /** Since the latest time of the pass; NaN without times, below 0 where the clock ran back: distance decides then. */
+  seconds: number;
+}
+
+/** True where working record `to` carries on the pass. */
+function continues(input: PassInput, limits: Limits, { from, to, seconds }: Step): boolean {
   if (input.loggedPass && input.loggedPass[from] !== input.loggedPass[to]) return false;
-  const seconds = stepS(input, from, to);
-  if (seconds < 0) return false;
   const metres = stepM(input, from, to);
   const offRecords = to - from - 1;
   if (offRecords === 0) return !(seconds > limits.gapS) && metres <= limits.gapM;
   const sameLine = axialDifferenceDeg(input.headingDeg[from]!, input.headingDeg[to]!) <= PASS_RULES.sameLineDeg;
   const offSeconds = seconds * (offRecords / (offRecords + 1));
-  const short = Number.isNaN(seconds) ? metres <= PASS_RULES.maxOffM : offSeconds < PASS_RULES.maxOffS;
+  const short = !(seconds >= 0) ? metres <= PASS_RULES.maxOffM : offSeconds < PASS_RULES.maxOffS;
   const reachM = Math.max(limits.gapM, (limits.gapM / PASS_RULES.maxDistanceSteps) * (offRecords + 2));
   return short && sameLine && metres <= reachM;
 }
