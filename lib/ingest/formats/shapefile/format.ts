@@ -3,6 +3,7 @@ import { describeFoundColumns } from "@/lib/ingest/columns/describe-found-column
 import { nameColumns } from "@/lib/ingest/columns/name-columns";
 import { POINT_DEGREES, POINT_PLANE } from "@/lib/ingest/formats/point-columns";
 import { groupParts } from "@/lib/ingest/formats/shapefile/group-parts";
+import type { ZipEntry } from "@/lib/ingest/formats/shapefile/list-entries";
 import { isZip, openZip, unpackEntry } from "@/lib/ingest/formats/shapefile/open-zip";
 import {
   isDeleted,
@@ -22,7 +23,11 @@ import { createToDegrees, type ToDegrees } from "@/lib/ingest/records/project-po
 import { CELL, buildReadPlan } from "@/lib/ingest/records/read-plan";
 import { RecordCollector } from "@/lib/ingest/records/record-collector";
 
-const SAMPLE_RECORDS = 1000;
+const SAMPLE_RECORDS = 600;
+/** Of each part, for a look: the header of 20,000 fields and some records. */
+const LOOK_BYTES = 2 * 1024 * 1024;
+/** Of a .prj or .cpg. */
+const TEXT_BYTES = 65_536;
 
 /** A zipped point shapefile: one point a record. */
 export const shapefileFormat: LogFormat = {
@@ -44,21 +49,25 @@ interface Layer {
   notes: NoteBook;
 }
 
-async function openLayer(source: ByteSource, options: ReadOptions): Promise<Layer> {
+/** The layer of an archive; with `maxBytes` only the beginnings of its parts, to look at. */
+async function openLayer(source: ByteSource, options: ReadOptions, maxBytes = Infinity): Promise<Layer> {
   const archive = await openZip(openText(source, options));
-  const parts = groupParts(archive);
-  const readText = (entry: typeof parts.prj) => (entry ? new TextDecoder().decode(unpackEntry(archive, entry)) : null);
-  const points = readShp(unpackEntry(archive, parts.shp), parts.shp.name);
-  const table = openDbf(unpackEntry(archive, parts.dbf), parts.dbf.name, readCodePage(readText(parts.cpg) ?? ""));
+  const { shp, dbf, prj, cpg } = groupParts(archive);
+  const readText = async (entry: ZipEntry | null) =>
+    entry ? new TextDecoder().decode(await unpackEntry(archive, entry, TEXT_BYTES)) : null;
+  const points = readShp(await unpackEntry(archive, shp, maxBytes), shp.name);
+  const encoding = readCodePage((await readText(cpg)) ?? "");
+  const table = openDbf(await unpackEntry(archive, dbf, maxBytes), dbf.name, encoding);
   const records = Math.min(points.x.length, table.records);
   const notes = new NoteBook();
-  notes.set("part-count-mismatch", Math.max(points.x.length, table.stated, table.records) - records);
-  if (points.isCutShort) notes.add("cut-short", points.x.length);
+  if (maxBytes === Infinity) {
+    notes.set("part-count-mismatch", Math.max(points.x.length, table.stated, table.records) - records);
+    if (points.isCutShort) notes.add("cut-short", points.x.length);
+  }
   if (records === 0) {
     stopReading("no-readings", `The shapefile in "${source.name}" holds no records. Export the log again.`);
   }
-  const prj = readText(parts.prj);
-  const { toDegrees, isDegrees } = judgeProjection(prj, points, source.name, notes);
+  const { toDegrees, isDegrees } = judgeProjection(await readText(prj), points, source.name, notes);
   const point = isDegrees ? POINT_DEGREES : POINT_PLANE;
   const names = nameColumns([point.x, point.y, ...table.fields.map((field) => field.name)]);
   return { points, table, records, names, toDegrees, notes };
@@ -92,7 +101,7 @@ function pointOf({ points, toDegrees }: Layer, record: number): [x: number, y: n
 }
 
 async function inspectShapefile(source: ByteSource, options: InspectOptions): Promise<Inspection> {
-  const layer = await openLayer(source, options);
+  const layer = await openLayer(source, options, LOOK_BYTES);
   const { table, names, notes } = layer;
   const count = Math.min(layer.records, SAMPLE_RECORDS);
   const sampled = Array.from({ length: count }, (_, record) => record).filter((record) => !isDeleted(table, record));

@@ -1,12 +1,12 @@
-import type { UnzipFileInfo } from "fflate";
+import type { ZipEntry } from "@/lib/ingest/formats/shapefile/list-entries";
 import type { ZipArchive } from "@/lib/ingest/formats/shapefile/open-zip";
 import { stopReading } from "@/lib/ingest/ingest-error";
 
 export interface ShapefileParts {
-  shp: UnzipFileInfo;
-  dbf: UnzipFileInfo;
-  prj: UnzipFileInfo | null;
-  cpg: UnzipFileInfo | null;
+  shp: ZipEntry;
+  dbf: ZipEntry;
+  prj: ZipEntry | null;
+  cpg: ZipEntry | null;
 }
 
 /** The files of the one layer in an archive: each .shp claims the files of its own name. */
@@ -34,7 +34,7 @@ export function groupParts({ entries, name }: ZipArchive): ShapefileParts {
   return { shp, dbf, prj: part("prj"), cpg: part("cpg") };
 }
 
-function stopWithoutShape(files: readonly UnzipFileInfo[], name: string): never {
+function stopWithoutShape(files: readonly ZipEntry[], name: string): never {
   if (files.some((entry) => /(?:^|\/)taskdata\.xml$/i.test(entry.name))) {
     stopReading(
       "unknown-file-kind",
