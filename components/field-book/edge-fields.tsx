@@ -73,10 +73,11 @@ interface EdgeFieldProps {
 
 function EdgeField({ label, value, units, onEdge }: EdgeFieldProps) {
   const [draft, setDraft] = useState<string | null>(null);
-  const shown = Number((value / units.factor).toPrecision(4)).toString();
+  const shown = edgeText(value / units.factor, units.decimals);
   const keep = () => {
     const typed = Number((draft ?? "").replace(",", ".").replace("\u2212", "-"));
-    if (draft !== null && draft.trim() !== "" && Number.isFinite(typed)) onEdge(typed * units.factor);
+    if (draft !== null && draft !== shown && draft.trim() !== "" && Number.isFinite(typed))
+      onEdge(typed * units.factor);
     // An edge out of order goes back to what it was: the number in the field is always the one in force.
     setDraft(null);
   };
@@ -95,4 +96,10 @@ function EdgeField({ label, value, units, onEdge }: EdgeFieldProps) {
       className="h-8 w-14 rounded border border-transparent bg-transparent text-center text-table hover:border-edge focus:border-edge focus:bg-sheet md:h-7"
     />
   );
+}
+
+/** The unit's own decimals, more where the edge is small; never more than four figures. */
+function edgeText(value: number, decimals: number): string {
+  if (Math.abs(value) >= 10 ** (1 - decimals) || value === 0) return String(Number(value.toFixed(decimals)));
+  return String(Number(value.toPrecision(2)));
 }

@@ -44,7 +44,7 @@ export function HistogramEdges({ histogram, edges, colours, units, onChange }: H
         {counts.map((count, bin) => {
           const value = minimum + ((bin + 0.5) / counts.length) * range;
           // A square root keeps rare values visible beside the common ones.
-          const tall = Math.sqrt(count / most) * (height - 6);
+          const tall = Math.sqrt(count / most) * Math.max(0, height - 6);
           return (
             <rect
               key={bin}

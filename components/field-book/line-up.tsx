@@ -25,10 +25,8 @@ export function LineUp({ statistics, classes, onTable }: LineUpProps) {
         </button>
       </div>
       <p className="text-table text-ink-soft">
-        {statistics ? `${channelWords(statistics.channel).name}: ` : ""}line 5th to 95th percentile, box the middle
-        half, bar the median, by distance
-        {share ? `; below, share of distance ${share.words}` : ""}
-        {statistics?.items.some((item) => item.flagged) ? "; a clay square marks a row unlike the others" : ""}.
+        {statistics ? `${channelWords(statistics.channel).name}, ` : ""}left to right looking forward: median, middle
+        half, 5th to 95th percentile{share ? `; below, share of distance ${share.words}` : ""}.
       </p>
       <div className="min-h-60 flex-1 md:min-h-0">
         {statistics ? (

@@ -19,7 +19,7 @@ import type { BasemapConfig } from "@/components/map/basemap-config";
 import type { Bounds } from "@/lib/map-state/field-book-store";
 import { boundsOfGeometry } from "@/lib/map-state/geometry-bounds";
 import type { Field } from "@/lib/schemas/fields";
-import type { Log } from "@/lib/schemas/logs";
+import type { Log, PassBody } from "@/lib/schemas/logs";
 
 export interface RowsLayoutProps {
   field: Field;
@@ -55,7 +55,7 @@ export function RowsLayout({ field, basemap, picker }: RowsLayoutProps) {
         </div>
         {parts.table ? <div className="absolute inset-0 z-20">{parts.table}</div> : null}
       </div>
-      <div className="grid min-h-0 grid-rows-[minmax(0,auto)_minmax(19rem,1fr)] divide-y divide-rule border-l border-rule bg-sheet">
+      <div className="grid min-h-0 grid-rows-[minmax(0,1fr)_22rem] divide-y divide-rule border-l border-rule bg-sheet">
         <div className="overflow-y-auto">{parts.verdict}</div>
         {parts.lineUp}
       </div>
@@ -94,7 +94,7 @@ function useParts({ field, basemap }: { field: Field; basemap: BasemapConfig }) 
   const { data: overview } = useOverview(logVersion, channel);
   const { data: statistics } = useRowStatistics(logVersion, channel);
   const verdict = useVerdict(log.id, log.version);
-  const track = useChosenTrack(passes.map(({ pass }) => pass));
+  const track = useChosenTrack(passes);
   const classes = useClasses(channel, overview);
   const current = statistics?.channel === channel ? statistics : undefined;
   const flagged = (current?.items ?? []).filter((item) => item.flagged).map((item) => item.row);
@@ -119,17 +119,23 @@ function useParts({ field, basemap }: { field: Field; basemap: BasemapConfig }) 
   };
 }
 
-/** The readings of the chosen pass; until somebody chooses one, the first. */
-function useChosenTrack(passes: number[]) {
+/** The readings of the chosen pass; until somebody chooses one, the longest inside the field. */
+function useChosenTrack(passes: readonly PassBody[]) {
   const { store, logVersion } = useBook();
   const channel = useBookState((state) => state.channel);
   const pass = useBookState((state) => state.pass);
-  const first = passes[0];
-  const known = pass !== null && (passes.length === 0 || passes.includes(pass));
+  const opening = openingPass(passes);
+  const known = pass !== null && (passes.length === 0 || passes.some((candidate) => candidate.pass === pass));
   useEffect(() => {
-    if (!known && first !== undefined) store.getState().choosePass(first);
-  }, [store, known, first]);
+    if (!known && opening !== undefined) store.getState().choosePass(opening);
+  }, [store, known, opening]);
   return useTrack(logVersion, channel, pass).data;
+}
+
+function openingPass(passes: readonly PassBody[]): number | undefined {
+  const inside = passes.filter((pass) => !pass.headland);
+  const byLength = (inside.length > 0 ? inside : [...passes]).toSorted((a, b) => b.lengthM - a.lengthM);
+  return byLength[0]?.pass;
 }
 
 /** The boundary, or what the log covers. */

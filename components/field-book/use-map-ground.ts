@@ -1,8 +1,7 @@
 "use client";
 
-import type { Map as MapLibreMap, ScaleControl } from "maplibre-gl";
+import type { Map as MapLibreMap } from "maplibre-gl";
 import { useEffect } from "react";
-import { loadMapLibre } from "@/components/map/load-maplibre";
 import { addAtlasWhenWide, drawGrid } from "@/components/map/map-grid";
 import { setOverlay } from "@/components/map/overlay-layers";
 import { useUnits } from "@/components/units/use-units";
@@ -15,7 +14,7 @@ export interface MapGround {
   boundary: Boundary | null;
 }
 
-/** Boundary, grid, atlas and scale bar, in the person's units. */
+/** Boundary, grid and atlas, in the person's units. */
 export function useMapGround(map: MapLibreMap | null, { bounds, boundary }: MapGround): void {
   const { system } = useUnits();
   const [west, south] = bounds;
@@ -37,18 +36,4 @@ export function useMapGround(map: MapLibreMap | null, { bounds, boundary }: MapG
       map.off("resize", draw);
     };
   }, [map, system, west, south]);
-  useEffect(() => {
-    if (!map) return;
-    let gone = false;
-    let scale: ScaleControl | null = null;
-    void loadMapLibre().then((maplibre) => {
-      if (gone) return;
-      scale = new maplibre.ScaleControl({ unit: system, maxWidth: 110 });
-      map.addControl(scale, "bottom-right");
-    });
-    return () => {
-      gone = true;
-      if (scale && map.hasControl(scale)) map.removeControl(scale);
-    };
-  }, [map, system]);
 }

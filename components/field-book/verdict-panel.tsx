@@ -1,7 +1,9 @@
 "use client";
 
 import { useBook, useBookState } from "@/components/field-book/field-book-context";
+import { rankFindings, sentenceOf } from "@/components/sharing/shared-finding";
 import { StateMark, type MarkState } from "@/components/ui/state-mark";
+import { useUnits } from "@/components/units/use-units";
 import { boundsOfGeometry } from "@/lib/map-state/geometry-bounds";
 import type { Finding, VerdictBody } from "@/lib/schemas/logs";
 
@@ -10,7 +12,6 @@ export const SEVERITY: Record<Finding["severity"], { mark: MarkState; word: stri
   look: { mark: "look", word: "Look" },
   ok: { mark: "fine", word: "Fine" },
 };
-const ORDER: Finding["severity"][] = ["act", "look", "ok"];
 
 export interface VerdictPanelProps {
   verdict: VerdictBody | undefined;
@@ -21,7 +22,7 @@ export interface VerdictPanelProps {
 /** What the log says, in plain words: one large number, then the findings, the pressing ones first. */
 export function VerdictPanel({ verdict, rows, trouble }: VerdictPanelProps) {
   if (!verdict) return <VerdictWaiting trouble={trouble} />;
-  const findings = ORDER.flatMap((severity) => verdict.findings.filter((finding) => finding.severity === severity));
+  const findings = rankFindings(verdict);
   const worst = findings[0]?.severity ?? "ok";
   return (
     <section aria-labelledby="verdict-title" className="px-4 pb-3 pt-3" data-testid="verdict">
@@ -71,7 +72,7 @@ function Headline({ verdict, rows }: { verdict: VerdictBody; rows: number }) {
           {under}
           <span className="text-section font-normal text-ink-soft"> of {rows}</span>
         </span>
-        <span>{under === 1 ? "row ran" : "rows ran"} under target.</span>
+        <span>{under === 1 ? "row ran" : "rows ran"} under target</span>
       </p>
       <p className="text-table text-ink-soft">
         {under > 0 ? `${rowWords(verdict.rowsUnderTarget)} under target. ` : ""}
@@ -106,6 +107,7 @@ export function rowWords(rows: readonly number[]): string {
 function FindingItem({ finding }: { finding: Finding }) {
   const { store } = useBook();
   const selected = useBookState((state) => state.row);
+  const { system } = useUnits();
   const { mark, word } = SEVERITY[finding.severity];
   const row = finding.row ?? null;
   const bounds = finding.place ? boundsOfGeometry(finding.place) : null;
@@ -121,7 +123,7 @@ function FindingItem({ finding }: { finding: Finding }) {
       <div className="min-w-0 flex-1 space-y-0.5">
         <p>
           <span className="sr-only">{word}: </span>
-          {finding.sentence}
+          {sentenceOf(finding, system)}
         </p>
         {finding.check ? <p className="text-table text-ink-soft">{finding.check}</p> : null}
         {finding.caution ? (

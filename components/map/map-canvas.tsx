@@ -7,6 +7,7 @@ import { baseStyle } from "@/components/map/base-style";
 import type { BasemapConfig } from "@/components/map/basemap-config";
 import { loadMapLibre } from "@/components/map/load-maplibre";
 import { MapButtons } from "@/components/map/map-buttons";
+import { ScaleBar } from "@/components/map/scale-bar";
 import { addOverlays } from "@/components/map/overlay-layers";
 import type { Bounds, MapView } from "@/lib/map-state/field-book-store";
 
@@ -64,7 +65,12 @@ export function MapCanvas({ basemap, bounds, view, description, onMap, children 
           readings.
         </p>
       ) : null}
-      {map ? <MapButtons map={map} onWhole={() => fitBounds(map, bounds)} /> : null}
+      {map ? (
+        <>
+          <ScaleBar map={map} />
+          <MapButtons map={map} onWhole={() => fitBounds(map, bounds)} />
+        </>
+      ) : null}
       {children}
     </div>
   );

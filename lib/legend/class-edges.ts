@@ -51,9 +51,12 @@ export function quantileEdges(histogram: Histogram, count: number): number[] {
   return edges.filter((edge, i) => i === 0 || edge > edges[i - 1]!);
 }
 
-/** Edges at 1.5, 0.5 and 0.5, 1.5 class widths beside a target, so that it lies in the middle of the middle class. */
-export function edgesAroundTarget(target: number, classWidth: number, count = 5): number[] {
-  return Array.from({ length: count - 1 }, (_, index) => target + (index - (count - 2) / 2) * classWidth);
+/**
+ * Seven classes about a target: within half its tolerance, within the tolerance, within twice it, and beyond. The edge one
+ * tolerance below is where a reading counts as under target.
+ */
+export function edgesAroundTarget(target: number, tolerance: number): number[] {
+  return [-2, -1, -0.5, 0.5, 1, 2].map((times) => target + times * tolerance);
 }
 
 /**

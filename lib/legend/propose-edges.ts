@@ -23,7 +23,7 @@ export interface EdgeContext {
 
 /** Classes of equal width and of equal count. */
 const CLASSES = 6;
-/** Half-width of the middle class where the machine's own tolerance is not known. Common practice, no source. */
+/** Tolerance where the machine's own is not known. Common practice, no source. */
 const GUESSED_DEADBAND_N = 100;
 
 /** Presets that make sense for a channel, the default first. */
@@ -43,9 +43,7 @@ function edgesOf(preset: EdgePreset, context: EdgeContext): number[] {
   const { histogram, targetMarginN, marginDeadbandN } = context;
   switch (preset) {
     case "target":
-      return targetMarginN === null
-        ? []
-        : edgesAroundTarget(targetMarginN, 2 * (marginDeadbandN || GUESSED_DEADBAND_N));
+      return targetMarginN === null ? [] : edgesAroundTarget(targetMarginN, marginDeadbandN || GUESSED_DEADBAND_N);
     case "contact-load":
       return [...CONTACT_LOAD_EDGES_N];
     case "equal":

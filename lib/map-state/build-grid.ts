@@ -1,5 +1,6 @@
 import type { Feature, FeatureCollection, LineString, Point } from "geojson";
 import { worldPerMetre } from "@/lib/tiles/tile-address";
+import { formatNumber } from "@/lib/units/format-quantity";
 
 export interface GridRequest {
   /** West, south, east, north of the view. */
@@ -71,7 +72,8 @@ function chooseAxes({ bounds, widthPx, anchor, unitM, unitSign }: GridRequest): 
     };
   }
   const units = roundUp((viewM * LEAST_SPACING_PX) / widthPx / unitM);
-  const labelOf = (i: number) => `${Number((i * units).toPrecision(12)).toLocaleString("en-US")}\u2009${unitSign}`;
+  // A plain space: the map's font file has no thin one.
+  const labelOf = (i: number) => `${formatNumber(i * units, 0).replaceAll("\u202f", " ")} ${unitSign}`;
   const stepM = units * unitM;
   const latitudeScale = worldPerMetre(anchor[1]);
   const degreesNorth = latitudeScale.north * 360 * Math.cos((anchor[1] * Math.PI) / 180);
@@ -90,7 +92,7 @@ function roundUp(least: number): number {
 
 function degreeWords(degrees: number, digits: number, positive: string, negative: string): string {
   const wrapped = positive === "E" ? ((((degrees + 180) % 360) + 360) % 360) - 180 : degrees;
-  const sign = Math.abs(wrapped) < 1e-9 ? "" : `\u2009${wrapped > 0 ? positive : negative}`;
+  const sign = Math.abs(wrapped) < 1e-9 ? "" : ` ${wrapped > 0 ? positive : negative}`;
   return `${Math.abs(wrapped).toFixed(digits)}°${sign}`;
 }
 

@@ -34,7 +34,27 @@ export function summariseLog(
   passes.forEach((strip, i) => fillPass({ placed, channel, pass: placed.passes[i]!, strip, values }));
   const worked = readingsInPasses(placed.passes, channel);
   const { minimum, maximum } = valueScale({ values: worked, resolution: channel.resolution });
-  return { rows, columns: total, passes, values, histogram: histogramOf(worked, minimum, maximum, 120) };
+  const histogram = histogramInSteps(worked, { minimum, maximum, resolution: channel.resolution });
+  return { rows, columns: total, passes, values, histogram };
+}
+
+interface Steps {
+  minimum: number;
+  maximum: number;
+  resolution: number | null;
+}
+
+const MOST_BINS = 120;
+
+/** Bins as wide as a whole number of the log's own steps, each step in the middle of its part: others would look like a comb. */
+function histogramInSteps(values: Float32Array, { minimum, maximum, resolution }: Steps): Histogram {
+  const range = maximum - minimum;
+  if (!resolution || !(range > 0)) return histogramOf(values, minimum, maximum, MOST_BINS);
+  const stepsPerBin = Math.max(1, Math.ceil((range / resolution + 1) / MOST_BINS));
+  const binWidth = stepsPerBin * resolution;
+  const low = minimum - resolution / 2;
+  const bins = Math.max(1, Math.ceil((maximum + resolution / 2 - low) / binWidth - 1e-6));
+  return histogramOf(values, low, low + bins * binWidth, bins);
 }
 
 /** Without what was logged while lifted and turning, which would fill a class of its own. */

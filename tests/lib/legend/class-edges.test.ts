@@ -47,7 +47,7 @@ describe("class edges", () => {
     expect(counts).toEqual([1, 1, 0, 0, 0, 0, 0, 0, 0, 2]);
   });
 
-  it("hold a target in the middle of the middle class", () => {
-    expect(edgesAroundTarget(450, 100)).toEqual([300, 400, 500, 600]);
+  it("hold a target in the middle of the middle class, with an edge where readings count as under target", () => {
+    expect(edgesAroundTarget(450, 100)).toEqual([250, 350, 400, 500, 550, 650]);
   });
 });
