@@ -156,7 +156,7 @@ function sayWheelTracks(evidence: ChannelEvidence[]): Finding[] {
       unit: tracked.channel.unit,
       confidence: "medium",
       method:
-        "Rows beyond a robust z of 3.5 together with their mirror row about the centre line, the same way and at least half as far.",
+        "Rows beyond a robust z of 3.5 whose mirror row about the centre line differs the same way, by at least half as much.",
       check: "Compare the ground behind those rows with the ground between: firmness and depth.",
       caution: CAUTIONS.digging,
       rows,

@@ -60,6 +60,8 @@ export interface RowScores {
 }
 
 export const Z_LIMIT = 3.5;
+/** What both of two mirror rows must reach to count as a pair: soil seldom favours both sides alike. */
+const PAIR_LIMIT = 2;
 
 /**
  * Robust z of each row (Iglewicz & Hoaglin 1993): its median deviation from the other rows, less the median over rows,
@@ -98,8 +100,8 @@ function groupReference(deviations: number[]): number {
 
 /**
  * Groups (row indices from 0) of rows that stand out the same way as their mirror row: one group for high rows, one for low.
- * A pair must agree in sign, both beyond the limit, the smaller at least half the larger (or lie beside such a pair: a wheel
- * is often two rows wide).
+ * A pair must agree in sign, both beyond a score of 2, the smaller at least half the larger (or lie beside such a pair: a
+ * wheel is often two rows wide); a group counts where one of its rows is beyond the limit.
  */
 function findWheelTracks(deviation: Float64Array, spread: number, maxTrackRows: number): number[][] {
   const last = deviation.length - 1;
@@ -120,15 +122,12 @@ function findWheelTracks(deviation: Float64Array, spread: number, maxTrackRows: 
     }
     first = end;
   }
-  return Object.values(groups).filter((group) => group.length > 0);
-}
-
-function standsOut(deviation: number, spread: number): boolean {
-  return Math.abs(deviation) > Z_LIMIT * spread;
+  return Object.values(groups).filter((group) => group.some((row) => Math.abs(deviation[row]!) > Z_LIMIT * spread));
 }
 
 function pairKind(left: number, right: number, spread: number): { high: boolean; even: boolean } | null {
-  if (!(left * right > 0) || !standsOut(left, spread) || !standsOut(right, spread)) return null;
   const smaller = Math.min(Math.abs(left), Math.abs(right));
-  return { high: left > 0, even: smaller >= 0.5 * Math.max(Math.abs(left), Math.abs(right)) };
+  const larger = Math.max(Math.abs(left), Math.abs(right));
+  if (!(left * right > 0) || smaller <= PAIR_LIMIT * spread) return null;
+  return { high: left > 0, even: smaller >= 0.5 * larger };
 }
