@@ -5,6 +5,7 @@ import { ChannelQuery, PlaceQuery, SwathsQuery, ZonesQuery } from "@/lib/schemas
 import { SwathCollectionBody, ZoneCollectionBody } from "@/lib/schemas/log-shapes";
 import {
   CoverageBody,
+  LogOverview,
   PassList,
   PassReadings,
   ReadingAt,
@@ -62,6 +63,16 @@ export const readingOperations: Operation[] = [
     query: ChannelQuery,
     replies: [{ status: 200, description: "Readings", schema: PassReadings }],
     errors: ["conflict", "not_acceptable"],
+  },
+  {
+    method: "GET",
+    path: "/api/v1/logs/{logId}/overview",
+    tag,
+    permission: "logs.read",
+    summary: "A channel over the whole log, thinned for a first look",
+    query: ChannelQuery,
+    replies: [{ status: 200, description: "The overview", schema: LogOverview }],
+    errors: ["conflict"],
   },
   {
     method: "GET",
