@@ -8,8 +8,11 @@ import { env } from "@/lib/server/env";
 if (env().isDemo) {
   const container = createContainer(env());
   await seedOrganisations();
-  await seedDemo(container);
-  writeDemoFile();
+  // Tests that bring their own logs want the people only.
+  if (process.env.SEED_LOGS !== "0") {
+    await seedDemo(container);
+    writeDemoFile();
+  }
   await container.queue.close();
 }
 await closeDatabases();

@@ -26,6 +26,7 @@ async function compilePrograms(): Promise<() => void> {
  * and the programs are compiled. A cluster that ran before (`npm run db:test:start`, `npm test`) is left running.
  */
 export default async function startTestCluster(): Promise<() => void> {
+  process.env.AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED = "true";
   const stopDatabase = await startDatabase();
   const removePrograms = await compilePrograms();
   return () => {

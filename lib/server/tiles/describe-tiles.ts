@@ -12,7 +12,7 @@ import { valueScale } from "@/lib/tiles/value-scale";
 export async function describeTiles(
   container: Container,
   scope: Scope,
-  input: { logId: string; channel: string },
+  input: { logId: string; channel: string; origin?: string },
 ): Promise<TileJson> {
   const log = await getReadLog(scope, input.logId);
   const channel = await loadChannel(log, input.channel);
@@ -22,7 +22,7 @@ export async function describeTiles(
   return {
     tilejson: "3.0.0",
     name: `${log.name}: ${input.channel}`,
-    tiles: [`${container.env.baseUrl}${path}/{z}/{x}/{y}.png?v=${log.version}`],
+    tiles: [`${input.origin ?? container.env.baseUrl}${path}/{z}/{x}/{y}.png?v=${log.version}`],
     minzoom: 8,
     maxzoom: 22,
     bounds: [...bounds],

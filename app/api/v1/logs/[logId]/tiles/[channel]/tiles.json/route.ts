@@ -3,9 +3,12 @@ import { withScope } from "@/app/_server/with-scope";
 import { TileJson } from "@/lib/schemas/logs";
 import { describeTiles } from "@/lib/server/tiles/describe-tiles";
 
-export const GET = withScope<"logId" | "channel">("logs.read", async ({ container, scope, params }) =>
-  reply(TileJson, await describeTiles(container, scope, { ...params })),
-);
+export const GET = withScope<"logId" | "channel">("logs.read", async ({ container, scope, params, request }) => {
+  // Tiles are asked for under the name by which the caller reached this server.
+  const host = request.headers.get("host");
+  const origin = host ? `${new URL(container.env.baseUrl).protocol}//${host}` : undefined;
+  return reply(TileJson, await describeTiles(container, scope, { ...params, origin }));
+});
 
 export {
   refuseMethod as POST,

@@ -1,0 +1,92 @@
+// `npm test`: its own cluster and ports, then types, lint, unit, component, integration and browser tests.
+import { spawnSync } from "node:child_process";
+import { mkdirSync, readFileSync, rmSync, existsSync } from "node:fs";
+import { buildCodeIfStale, buildIfStale } from "@/scripts/build-if-stale";
+import { startCluster, type Cluster } from "@/scripts/cluster";
+
+const REPORTS = ".data/test-reports";
+const NEXT = "node_modules/next/dist/bin/next";
+
+interface Tally {
+  passed: number;
+  failed: number;
+  skipped: number;
+}
+
+const tally: Tally = { passed: 0, failed: 0, skipped: 0 };
+const failedSteps: string[] = [];
+
+/** Runs a tool to its end; a failed one is counted and the rest still runs. */
+function runStep(name: string, script: string, parameters: string[]): boolean {
+  console.log(`\n== ${name}`);
+  const started = Date.now();
+  const done = spawnSync(process.execPath, [script, ...parameters], { stdio: ["ignore", "inherit", "inherit"] });
+  console.log(`== ${name}: ${done.status === 0 ? "ok" : "FAILED"} in ${Math.round((Date.now() - started) / 1000)} s`);
+  if (done.status !== 0) failedSteps.push(name);
+  return done.status === 0;
+}
+
+/** Counts a report of vitest; a run without a report has failed as a whole. */
+function countReport(name: string, path: string): void {
+  if (!existsSync(path)) {
+    tally.failed += 1;
+    console.error(`${name} left no report`);
+    return;
+  }
+  const report = JSON.parse(readFileSync(path, "utf8")) as Record<string, unknown>;
+  const number = (key: string) => (typeof report[key] === "number" ? report[key] : 0);
+  tally.passed += number("numPassedTests");
+  tally.failed += number("numFailedTests");
+  tally.skipped += number("numPendingTests") + number("numTodoTests");
+  // A file that could not be loaded has no tests to fail.
+  if (report.success === false && number("numFailedTests") === 0) tally.failed += 1;
+}
+
+function runProject(project: string): void {
+  const path = `${REPORTS}/${project}.json`;
+  const flags = ["run", "--project", project, "--passWithNoTests", "--reporter=default", "--reporter=json"];
+  runStep(`${project} tests`, "node_modules/vitest/vitest.mjs", [...flags, `--outputFile.json=${path}`]);
+  countReport(`${project} tests`, path);
+}
+
+async function buildForBrowser(): Promise<boolean> {
+  console.log("\n== build");
+  try {
+    await buildIfStale();
+    return true;
+  } catch (error) {
+    console.error(error);
+    failedSteps.push("build");
+    return false;
+  }
+}
+
+let cluster: Cluster | undefined;
+function finish(code: number): never {
+  if (cluster?.started) cluster.stop();
+  process.exit(code);
+}
+for (const signal of ["SIGINT", "SIGTERM", "SIGHUP"] as const) process.on(signal, () => finish(1));
+
+try {
+  rmSync(REPORTS, { recursive: true, force: true });
+  mkdirSync(REPORTS, { recursive: true });
+  cluster = await startCluster({ dataDir: ".data/test-postgres", purpose: "test" });
+  process.env.TEST_DATABASE_ADMIN_URL = cluster.adminUrl("postgres");
+  process.env.NEXT_TELEMETRY_DISABLED = "1";
+  await buildCodeIfStale();
+  process.env.BUILD_DIR = "build";
+  runStep("route types", NEXT, ["typegen"]);
+  runStep("types", "node_modules/typescript/bin/tsc", ["--noEmit"]);
+  runStep("lint", "node_modules/eslint/bin/eslint.js", ["."]);
+  for (const project of ["unit", "components", "integration"]) runProject(project);
+  if (await buildForBrowser()) runProject("e2e");
+} catch (error) {
+  console.error(error);
+  failedSteps.push("preparation");
+}
+if (failedSteps.length > 0) console.log(`\nFailed: ${failedSteps.join(", ")}`);
+// Types, lint and build count as one failed test each, so that the last line never hides them.
+const stepFailures = failedSteps.filter((step) => !step.endsWith("tests")).length;
+console.log(`\n${tally.passed} passed, ${tally.failed + stepFailures} failed, ${tally.skipped} skipped`);
+finish(failedSteps.length > 0 || tally.failed > 0 ? 1 : 0);
