@@ -2,7 +2,8 @@ import { readHead, type ByteSource } from "@/lib/ingest/byte-source";
 import { describeFoundColumns } from "@/lib/ingest/columns/describe-found-columns";
 import { nameColumns } from "@/lib/ingest/columns/name-columns";
 import { collectPaths, readProperty, type PropertyPath } from "@/lib/ingest/formats/geojson/flatten-properties";
-import { readFeatures, type PointFeature } from "@/lib/ingest/formats/geojson/read-features";
+import { FlatFeatureReader } from "@/lib/ingest/formats/geojson/scan-flat-feature";
+import { parsePoint, readFeatureBytes, type PointFeature } from "@/lib/ingest/formats/geojson/read-features";
 import { POINT_DEGREES, POINT_PLANE } from "@/lib/ingest/formats/point-columns";
 import { stopReading } from "@/lib/ingest/ingest-error";
 import {
@@ -19,7 +20,7 @@ import { NoteBook } from "@/lib/ingest/records/note-book";
 import { CELL, buildReadPlan } from "@/lib/ingest/records/read-plan";
 import { RecordCollector } from "@/lib/ingest/records/record-collector";
 
-const SAMPLE_FEATURES = 1000;
+const SAMPLE_FEATURES = 500;
 const HEAD_BYTES = 65_536;
 
 /** GeoJSON point features, one a record; read feature by feature as the bytes arrive. */
@@ -44,8 +45,8 @@ interface FeatureLayout {
 async function learnLayout(source: ByteSource): Promise<FeatureLayout> {
   const features: PointFeature[] = [];
   const crs = readNamedCrs(new TextDecoder().decode(await readHead(source, HEAD_BYTES)));
-  for await (const feature of readFeatures(source)) {
-    features.push(feature);
+  for await (const block of readFeatureBytes(source)) {
+    for (const feature of block.slice(0, SAMPLE_FEATURES - features.length)) features.push(parsePoint(feature));
     if (features.length >= SAMPLE_FEATURES) break;
   }
   if (features.length === 0) {
@@ -102,20 +103,27 @@ async function readGeojson(source: ByteSource, mapping: LogMapping, options: Rea
     expectedLines: Math.ceil(opened.sizeBytes / perRecord) + 16,
     place: "feature",
   });
-  const used = layout.paths.flatMap((path, index) =>
-    plan.kinds[index + 2] === CELL.skip ? [] : [{ path, field: index + 2, kind: plan.kinds[index + 2] }],
-  );
-  for await (const feature of readFeatures(opened)) {
-    collector.line[0] = feature.x;
-    collector.line[1] = feature.y;
-    if (!feature.hasGeometry) collector.notes.add("null-geometry", feature.number);
-    for (const { path, field, kind } of used) {
-      const value = path.place === null ? feature.properties[path.key] : undefined;
-      // JSON numbers are taken as they are: turning them to text and back would cost a third of the time.
-      if (kind === CELL.number && typeof value === "number" && Math.abs(value) < 1e30) collector.line[field] = value;
-      else collector.takeText(field, readProperty(feature.properties, path), feature.number);
+  const hasLists = layout.paths.some((path) => path.place !== null);
+  const flat = hasLists ? null : new FlatFeatureReader(collector, layout.paths);
+  const takeFeature = prepareTaking(collector, layout.paths);
+  for await (const block of readFeatureBytes(opened)) {
+    for (const feature of block) {
+      // A feature of the common kind fills the line by itself; any other goes through JSON.parse.
+      if (!flat?.read(feature.bytes, feature.number)) takeFeature(parsePoint(feature));
+      collector.commit(feature.number);
     }
-    collector.commit(feature.number);
   }
   return collector.finish();
+}
+
+/** Fills the collector's line from a parsed feature. */
+function prepareTaking(collector: RecordCollector, paths: readonly PropertyPath[]): (feature: PointFeature) => void {
+  const { kinds } = collector.plan;
+  const used = paths.flatMap((path, index) => (kinds[index + 2] === CELL.skip ? [] : [{ path, field: index + 2 }]));
+  return ({ x, y, hasGeometry, number, properties }) => {
+    collector.line[0] = x;
+    collector.line[1] = y;
+    if (!hasGeometry) collector.notes.add("null-geometry", number);
+    for (const { path, field } of used) collector.takeText(field, readProperty(properties, path), number);
+  };
 }

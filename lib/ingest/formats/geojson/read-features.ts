@@ -12,16 +12,20 @@ export interface PointFeature {
   properties: Record<string, unknown>;
 }
 
-/** Point features of a GeoJSON text, one at a time. Stops with `json-damaged`, `not-points` or `archive-truncated`-like errors. */
-export async function* readFeatures(source: ByteSource): AsyncGenerator<PointFeature> {
+/** Bytes of one feature and its number, from 1. */
+export interface FeatureBytes {
+  number: number;
+  bytes: Uint8Array;
+}
+
+/** Features of a GeoJSON text as bytes, one at a time. Stops with `json-damaged` or `not-a-log`. */
+export async function* readFeatureBytes(source: ByteSource): AsyncGenerator<FeatureBytes[]> {
   const splitter = new FeatureSplitter();
-  const decoder = new TextDecoder("utf-8");
   let number = 0;
   for await (const chunk of source.stream()) {
-    for (const bytes of splitter.push(chunk)) {
-      number++;
-      yield toPoint(parseFeature(decoder.decode(bytes), number), number);
-    }
+    const features: FeatureBytes[] = [];
+    for (const bytes of splitter.push(chunk)) features.push({ number: ++number, bytes });
+    yield features;
   }
   if (!splitter.isComplete) {
     stopReading(
@@ -36,6 +40,13 @@ export async function* readFeatures(source: ByteSource): AsyncGenerator<PointFea
       `"${source.name}" is JSON, but no GeoJSON FeatureCollection. Export the log as GeoJSON points and upload that.`,
     );
   }
+}
+
+const decoder = new TextDecoder("utf-8");
+
+/** A feature read by JSON.parse. Stops with `json-damaged` or `not-points`. */
+export function parsePoint({ number, bytes }: FeatureBytes): PointFeature {
+  return toPoint(parseFeature(decoder.decode(bytes), number), number);
 }
 
 function parseFeature(text: string, number: number): unknown {

@@ -10,17 +10,21 @@ const OPEN_BRACKET = 91;
 const CLOSE_BRACKET = 93;
 const COLON = 58;
 
+/** Bytes that change where a reader of JSON stands. */
+const IS_MARK = new Uint8Array(256);
+for (const mark of [QUOTE, OPEN_BRACE, CLOSE_BRACE, OPEN_BRACKET, CLOSE_BRACKET]) IS_MARK[mark] = 1;
+
 /**
  * Cuts a GeoJSON FeatureCollection into the bytes of its features as chunks arrive, whatever the order of its members.
  * Only the current feature is held.
  */
 export class FeatureSplitter {
-  /** Depth outside the features; features begin at `featureDepth`. */
   private depth = 0;
+  /** Depth at which features begin; -1 outside the list of features. */
   private featureDepth = -1;
   private inString = false;
   private isEscaped = false;
-  /** Text of the last string at depth 1, to find the member "features". */
+  /** Bytes of the last string at depth 1, to find the member "features". */
   private key: number[] = [];
   private isFeaturesNext = false;
   private held: Uint8Array[] = [];
@@ -29,40 +33,84 @@ export class FeatureSplitter {
   /** A member "features" was seen. */
   sawCollection = false;
 
-  /** kernel: takes a chunk and gives the bytes of each feature that ends in it. */
+  /** Takes a chunk and gives the bytes of each feature that ends in it. */
   *push(chunk: Uint8Array): Generator<Uint8Array> {
-    let start = 0;
-    for (let i = 0; i < chunk.length; i++) {
-      const byte = chunk[i]!;
+    let at = 0;
+    while (at < chunk.length) {
+      if (!this.isInFeature) {
+        at = this.scanOutside(chunk, at);
+        continue;
+      }
+      const end = this.scanFeature(chunk, at);
+      const part = chunk.subarray(at, end);
+      at = end;
+      if (this.isInFeature) this.hold(part);
+      else yield this.release(part);
+    }
+  }
+
+  /** kernel: from inside a feature to the byte after its end, or to the end of the chunk. */
+  private scanFeature(chunk: Uint8Array, start: number): number {
+    const { length } = chunk;
+    let { depth, inString, isEscaped } = this;
+    let at = start;
+    while (at < length) {
+      let byte = chunk[at]!;
+      if (inString) {
+        if (isEscaped) {
+          isEscaped = false;
+          at++;
+          continue;
+        }
+        while (byte !== QUOTE && byte !== BACKSLASH && ++at < length) byte = chunk[at]!;
+        if (at === length) break;
+        if (byte === BACKSLASH) isEscaped = true;
+        else inString = false;
+        at++;
+        continue;
+      }
+      while (IS_MARK[byte] === 0 && ++at < length) byte = chunk[at]!;
+      if (at === length) break;
+      at++;
+      if (byte === QUOTE) inString = true;
+      else if (byte === OPEN_BRACE || byte === OPEN_BRACKET) depth++;
+      else if (--depth === this.featureDepth) {
+        this.isInFeature = false;
+        break;
+      }
+    }
+    this.depth = depth;
+    this.inString = inString;
+    this.isEscaped = isEscaped;
+    return at;
+  }
+
+  /** kernel: from outside any feature to the brace that opens the next, or to the end of the chunk. */
+  private scanOutside(chunk: Uint8Array, start: number): number {
+    for (let at = start; at < chunk.length; at++) {
+      const byte = chunk[at]!;
       if (this.inString) {
         if (this.isEscaped) this.isEscaped = false;
         else if (byte === BACKSLASH) this.isEscaped = true;
         else if (byte === QUOTE) this.inString = false;
-        else if (this.depth === 1 && !this.isInFeature && this.key.length < 16) this.key.push(byte);
-        continue;
-      }
-      if (byte === QUOTE) {
+        else if (this.depth === 1 && this.key.length < 16) this.key.push(byte);
+      } else if (byte === QUOTE) {
         this.inString = true;
-        if (this.depth === 1 && !this.isInFeature) this.key = [];
+        if (this.depth === 1) this.key = [];
+      } else if (byte === OPEN_BRACE && this.depth === this.featureDepth) {
+        this.isInFeature = true;
+        return at;
       } else if (byte === OPEN_BRACE || byte === OPEN_BRACKET) {
         if (byte === OPEN_BRACKET && this.depth === 1 && this.isFeaturesNext) this.openFeatures();
-        else if (byte === OPEN_BRACE && this.depth === this.featureDepth && !this.isInFeature) {
-          this.isInFeature = true;
-          start = i;
-        }
         this.depth++;
         this.isFeaturesNext = false;
       } else if (byte === CLOSE_BRACE || byte === CLOSE_BRACKET) {
-        this.depth--;
-        if (this.isInFeature && this.depth === this.featureDepth) {
-          this.isInFeature = false;
-          yield this.release(chunk.subarray(start, i + 1));
-        } else if (this.featureDepth > this.depth) this.featureDepth = -1;
-      } else if (byte === COLON && this.depth === 1 && !this.isInFeature) {
+        if (--this.depth < this.featureDepth) this.featureDepth = -1;
+      } else if (byte === COLON && this.depth === 1) {
         this.isFeaturesNext = String.fromCharCode(...this.key) === "features";
       }
     }
-    if (this.isInFeature) this.hold(chunk.subarray(start));
+    return chunk.length;
   }
 
   private openFeatures(): void {

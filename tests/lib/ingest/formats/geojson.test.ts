@@ -2,6 +2,7 @@ import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { readLog } from "@/lib/ingest";
 import { bytesSource } from "@/lib/ingest/byte-source";
+import type { LogMapping } from "@/lib/ingest/mapping";
 import { errorOf, mustInspect, mustRead, readAsProposed, textSource } from "../support/make-source";
 
 interface Point {
@@ -93,6 +94,44 @@ describe("GeoJSON points", () => {
       ],
     });
     expect(log.latitude[0]).toBeCloseTo(40, 8);
+  });
+
+  it("reads the common feature from its bytes and any other by JSON.parse to the same log", async () => {
+    const value = fc.oneof(
+      fc.integer({ min: -1e6, max: 1e6 }),
+      fc.double({ noNaN: true, noDefaultInfinity: true, min: -1e4, max: 1e4 }),
+      fc.constantFrom(null, true, "12.5", "x", "", "µ", -0.5, 0, 1e21, 1e-7, "1948025100"),
+    );
+    const features = fc.array(
+      fc.record({ "DF_1 (N)": value, "DF_2 (N)": value, t: value, other: value }, { requiredKeys: [] }),
+      {
+        minLength: 1,
+        maxLength: 12,
+      },
+    );
+    const columns: LogMapping["columns"] = [
+      { name: "point longitude", channel: "longitude", unit: "deg" },
+      { name: "point latitude", channel: "latitude", unit: "deg" },
+      { name: "t", channel: "time", unit: "unix-s" },
+      { name: "DF_1 (N)", channel: "downforce", row: 1, unit: "N" },
+      { name: "DF_2 (N)", channel: "downforce", row: 2, unit: "N" },
+    ];
+    const first = { "DF_1 (N)": 1, "DF_2 (N)": 2, t: 3, other: 4 };
+    await fc.assert(
+      fc.asyncProperty(features, fc.boolean(), async (list, isReversed) => {
+        const build = (extra: Record<string, unknown>) =>
+          [first, ...list].map((properties, i) => {
+            const entries = Object.entries(properties);
+            if (isReversed) entries.reverse();
+            return point(-98.6, 38 + i / 100, { ...Object.fromEntries(entries), ...extra });
+          });
+        const flat = await readLog(source({ features: build({}) }), { shape: "wide", columns });
+        // A nested member sends every feature to JSON.parse.
+        const nested = await readLog(source({ features: build({ nested: { a: 1 } }) }), { shape: "wide", columns });
+        expect(flat).toEqual(nested);
+      }),
+      { numRuns: 200 },
+    );
   });
 
   it("gives the same log however the bytes are cut into chunks", async () => {

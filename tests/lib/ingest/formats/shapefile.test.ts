@@ -105,6 +105,29 @@ describe("zipped point shapefile", () => {
     expect(error?.message.length).toBeGreaterThan(40);
   });
 
+  it("stops at a password and at the 64-bit form, before unpacking", async () => {
+    const zip = zipOf(layer());
+    // Entry of the list at the end: signature 0x02014b50, flags at 8, unpacked size at 24 (.ZIP File Format Specification, 4.3.12).
+    const entryAt = zip.findIndex(
+      (_, at) => zip[at] === 0x50 && zip[at + 1] === 0x4b && zip[at + 2] === 1 && zip[at + 3] === 2,
+    );
+    const locked = zip.slice();
+    locked[entryAt + 8] = (locked[entryAt + 8] ?? 0) | 1;
+    expect((await errorOf(bytesSource("log.zip", locked)))?.code).toBe("archive-encrypted");
+    const large = zip.slice().fill(0xff, entryAt + 24, entryAt + 28);
+    expect((await errorOf(bytesSource("log.zip", large)))?.code).toBe("file-too-large");
+  });
+
+  it("does not trust the sizes the list states", async () => {
+    const zip = zipOf(layer());
+    const entryAt = zip.findIndex(
+      (_, at) => zip[at] === 0x50 && zip[at + 1] === 0x4b && zip[at + 2] === 1 && zip[at + 3] === 2,
+    );
+    const grown = zip.slice();
+    new DataView(grown.buffer).setUint32(entryAt + 24, 5000, true);
+    expect((await errorOf(bytesSource("log.zip", grown)))?.code).toBe("archive-damaged");
+  });
+
   it("stops with archive-truncated at any cut", async () => {
     const zip = zipOf(layer());
     for (const share of [0.1, 0.5, 0.9, 0.99]) {
