@@ -2,6 +2,8 @@ import { insertDemoOrganisations, type DemoOrganisation } from "@/db/queries/sys
 import { DEMO_PASSWORD } from "@/lib/access/demo-accounts";
 import { hashPassword } from "@/lib/server/access/passwords";
 
+export { DEMO_PASSWORD };
+
 /** Fixed ids, so that seeding again finds what is there. */
 export const DEMO_ORGANISATIONS: readonly DemoOrganisation[] = [
   {

@@ -1,6 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { adminDb } from "@/db/client";
-import { DEMO_PASSWORD } from "@/db/seed/organisations";
+import { DEMO_PASSWORD } from "@/lib/access/demo-accounts";
 import type { Role } from "@/lib/access/permissions";
 import { callApi } from "@/tests/support/call-api";
 import { makeWorld, sessionCookieOf, type World } from "@/tests/support/make-world";
