@@ -19,8 +19,12 @@ export function FieldVerdictState({ fieldId, logCount }: { fieldId: string; logC
   return <NewestLogState fieldId={fieldId} />;
 }
 
+const LOOK_BACK = 20;
+
 function NewestLogState({ fieldId }: { fieldId: string }) {
-  const newest = useLogs(fieldId, 1).data?.items[0];
+  const logs = useLogs(fieldId, LOOK_BACK).data?.items;
+  // A harvest log has no pass verdict; the seeding log before it has.
+  const newest = logs?.find((log) => log.kind === "seeding") ?? logs?.[0];
   const verdict = useVerdict(newest?.id, newest?.version ?? 0, newest?.status === "ready" && newest.kind === "seeding");
   if (!newest) return null;
   if (verdict.data) {

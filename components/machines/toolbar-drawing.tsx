@@ -100,6 +100,11 @@ export function ToolbarDrawing({ machine, label }: { machine: DraftMachine; labe
       <text x="26" y="26">
         travel
       </text>
+      {layout.rows.length === 0 && layout.bars.length === 0 ? (
+        <text x={WIDTH / 2} y={HEIGHT / 2} textAnchor="middle" fontSize="13">
+          It is drawn here as you describe it.
+        </text>
+      ) : null}
       {first && last ? <RowMarks rows={layout.rows} place={place} /> : null}
       {layout.hitch ? <Drawbar from={place(layout.hitch)} to={centre} /> : null}
       {layout.antenna ? <Antenna at={place(layout.antenna)} /> : null}

@@ -1,3 +1,4 @@
+import { CodeText } from "@/components/reference/code-text";
 import { schemaLines, typeWords, type SchemaLine } from "@/components/reference/describe-schema";
 import type { ReferenceOperation } from "@/components/reference/read-document";
 
@@ -53,7 +54,11 @@ export function OperationCard({ operation }: { operation: ReferenceOperation }) 
         <span className="text-ink-soft">{operation.summary}</span>
       </summary>
       <div className="space-y-4 pb-6 md:pl-4">
-        {operation.description ? <p className="max-w-2xl">{operation.description}</p> : null}
+        {operation.description ? (
+          <p className="max-w-2xl">
+            <CodeText>{operation.description}</CodeText>
+          </p>
+        ) : null}
         <p className="text-table text-ink-soft">
           {operation["x-permission"] === "public"
             ? "No account needed."

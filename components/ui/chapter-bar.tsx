@@ -25,7 +25,7 @@ export function ChapterBar({ label, chapters, beyond = [] }: ChapterBarProps) {
   return (
     <nav
       aria-label={label}
-      className="no-print fixed inset-x-0 bottom-0 z-30 border-t border-rule bg-paper pb-[env(safe-area-inset-bottom)] md:inset-y-0 md:left-0 md:right-auto md:w-[5.5rem] md:border-r md:border-t-0 md:pt-14"
+      className="no-print fixed inset-x-0 bottom-0 z-30 border-t border-rule bg-paper pb-[env(safe-area-inset-bottom)] md:bottom-0 md:left-0 md:right-auto md:top-14 md:w-[5.5rem] md:border-r md:border-t-0 md:pt-2"
     >
       <ul className="flex justify-around md:flex-col md:items-stretch md:justify-start">
         {chapters.map((chapter) => (

@@ -182,7 +182,10 @@ function HeadCell({ header, numeric, sort, onSort }: HeadCellProps) {
     >
       <button
         type="button"
-        className="inline-flex min-h-9 items-center gap-1 px-2 hover:underline"
+        className={classNames(
+          "inline-flex min-h-9 items-center gap-1 px-2 hover:underline",
+          numeric && "flex-row-reverse",
+        )}
         onClick={() => onSort(sort ? !sort.desc : false)}
       >
         {header}
@@ -208,11 +211,11 @@ function BodyRow<Row>({ row, columns, actions }: BodyRowProps<Row>) {
             "px-2 py-2 align-middle max-md:flex max-md:justify-between max-md:gap-4 max-md:px-0 max-md:py-1",
             column.numeric && "md:text-right",
             column.wideOnly && "max-md:hidden",
-            index === 0 && "max-md:text-text",
+            index === 0 && "max-md:pb-2 max-md:text-text",
           )}
         >
-          <span className="text-ink-soft md:hidden">{column.header}</span>
-          <span className="min-w-0 break-words max-md:text-right">
+          {index === 0 ? null : <span className="text-ink-soft md:hidden">{column.header}</span>}
+          <span className={classNames("min-w-0 break-words", index > 0 && "max-md:text-right")}>
             {column.cell ? column.cell(row) : column.value(row)}
           </span>
         </td>

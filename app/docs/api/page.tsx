@@ -1,6 +1,7 @@
 import type { Metadata } from "next";
 import { container } from "@/app/_server/container";
 import { OperationCard } from "@/components/reference/operation-card";
+import { CodeText } from "@/components/reference/code-text";
 import { readDocument } from "@/components/reference/read-document";
 import { Wordmark } from "@/components/ui/wordmark";
 import { buildOpenApiDocument } from "@/lib/openapi/build-document";
@@ -14,7 +15,9 @@ export default function ApiReference() {
     <main className="mx-auto max-w-4xl px-5 py-8">
       <Wordmark href="/" />
       <h1 className="mt-6 text-page">API reference</h1>
-      <p className="mt-3 max-w-2xl text-ink-soft">{description}</p>
+      <p className="mt-3 max-w-2xl text-ink-soft">
+        <CodeText>{description}</CodeText>
+      </p>
       <p className="mt-3">
         The same as a file: <a href="/api/v1/openapi.json">OpenAPI 3.1</a>. Make a personal token under Settings and
         send it like this:

@@ -4,10 +4,11 @@ import { requireScope } from "@/app/_server/require-scope";
 import { PageBody } from "@/components/ui/page-body";
 import { PageHeading } from "@/components/ui/page-heading";
 import { LogsPage } from "@/components/upload/logs-page";
+import { LARKSPUR_NEXT_DAY } from "@/lib/simulator/scenario/larkspur";
 
 export const metadata: Metadata = { title: "Logs" };
 
-const EXAMPLE_LOG = "/demo/example-seeding-log.csv";
+const EXAMPLE_LOG = `/demo/${LARKSPUR_NEXT_DAY.fileName}`;
 
 export default async function LogsRoute({ params }: { params: Promise<{ org: string; fieldId: string }> }) {
   const { org, fieldId } = await params;
