@@ -1,6 +1,6 @@
 import type { MultiPolygon, Polygon } from "geojson";
 import { describePasses } from "@/lib/build/describe-passes";
-import { placeAntenna } from "@/lib/build/log-plane";
+import { placeAntenna, type AntennaPositions } from "@/lib/build/log-plane";
 import { measureMotion, type Motion } from "@/lib/build/log-motion";
 import { flagNotes, flagRecords, workingRecords } from "@/lib/cleaning/flag-records";
 import { FLAGS } from "@/lib/cleaning/flags";
@@ -10,7 +10,7 @@ import type { LogNote, MachineLog } from "@/lib/logs/machine-log";
 import type { Pass, PlacedLog } from "@/lib/logs/placed-log";
 import type { Seeder } from "@/lib/machines/machine";
 import { labelHeadlands } from "@/lib/passes/label-headlands";
-import { segmentPasses } from "@/lib/passes/segment-passes";
+import { segmentPasses, type PassRange } from "@/lib/passes/segment-passes";
 import { fail, succeed, type Result } from "@/lib/result";
 import { guessRowGeometry } from "@/lib/rows/guess-row-geometry";
 import { placeRows, type RowLine } from "@/lib/rows/place-rows";
@@ -50,42 +50,17 @@ export function buildLog(
   if (!antenna) return fail({ code: "no-positions", message: noPositions(log) });
   options.onProgress?.(0.3);
 
-  const jumps = markImpossibleSteps({ ...antenna, timeMs: log.timeMs, speedMps: log.speedMps });
-  jumps.forEach((jump, i) => {
-    if (jump === 1) antenna.eastM[i] = antenna.northM[i] = NaN;
-  });
-  const motion = measureMotion(log, antenna);
-  const working = workingRecords(log);
-  const flags = flagRecords(log, motion.speedMps, working);
-  jumps.forEach((jump, i) => {
-    if (jump === 1) flags[i]! |= FLAGS["impossible-step"];
-  });
-  options.onProgress?.(0.5);
-
-  const line = placeRows({ ...antenna, headingDeg: motion.headingDeg, breaks: motion.breaks }, machine);
-  const works = working.map((value, i) => (value === 1 && Number.isFinite(line.originEastM[i]!) ? 1 : 0));
-  const cut = segmentPasses({
-    ...antenna,
-    headingDeg: motion.headingDeg,
-    timeMs: log.timeMs,
-    works,
-    loggedPass: log.loggedPass,
-  });
+  const ground = trackOnGround(log, antenna, machine);
+  options.onProgress?.(0.6);
+  const { works, line, turning, ranges } = ground;
   const along = { eastM: line.originEastM, northM: line.originNorthM };
-  const passes = describePasses({
-    ranges: cut.ranges,
-    works,
-    timeMs: log.timeMs,
-    headingDeg: line.headingDeg,
-    ...along,
-  });
-  options.onProgress?.(0.8);
-
+  const passes = describePasses({ ranges, works, timeMs: log.timeMs, headingDeg: line.headingDeg, ...along });
   const guessed = machine ? null : guessRowGeometry({ log, passes, ...along });
   const geometry = guessed?.geometry ?? machineRowGeometry(machine as Seeder);
   const boundaryRings = options.boundary ? ringsInPlane(options.boundary, antenna.plane) : null;
   labelHeadlands({ passes, ...along, implementWidthM: implementWidthM(geometry), boundaryRings });
-  addFlags(flags, { turning: cut.turning, line, passes });
+  addFlags(ground.flags, { turning, line, passes });
+  options.onProgress?.(0.9);
   const placed: PlacedLog = {
     log,
     machine,
@@ -94,16 +69,42 @@ export function buildLog(
     originEastM: line.originEastM,
     originNorthM: line.originNorthM,
     headingDeg: line.headingDeg,
-    speedMps: implementSpeed(motion, line, log),
-    flags,
+    speedMps: implementSpeed(ground.motion, line, log),
+    flags: ground.flags,
     passOf: passNumbers(works, passes),
     passes,
   };
+  const notes = [...ground.motion.notes, ...machineNotes(machine, guessed?.note), ...flagNotes(log, ground.flags)];
   options.onProgress?.(1);
-  return succeed({
-    placed,
-    notes: [...motion.notes, ...machineNotes(machine, guessed?.note), ...flagNotes(log, flags)],
+  return succeed({ placed, notes });
+}
+
+interface GroundTrack {
+  motion: Motion;
+  flags: Uint32Array;
+  line: RowLine;
+  /** 1 where a record works and stands somewhere. */
+  works: Uint8Array;
+  ranges: PassRange[];
+  turning: Uint8Array;
+}
+
+/** Everything that needs no row: jumps taken out, motion, flags, the line of rows, and where passes begin and end. */
+function trackOnGround(log: MachineLog, antenna: AntennaPositions, machine: Seeder | null): GroundTrack {
+  const jumps = markImpossibleSteps({ ...antenna, timeMs: log.timeMs, speedMps: log.speedMps });
+  jumps.forEach((jump, i) => {
+    if (jump === 1) antenna.eastM[i] = antenna.northM[i] = NaN;
   });
+  const motion = measureMotion(log, antenna);
+  const working = workingRecords(log);
+  const flags = flagRecords(log, motion.speedMps, working).map((bits, i) =>
+    jumps[i] === 1 ? bits | FLAGS["impossible-step"] : bits,
+  );
+  const line = placeRows({ ...antenna, headingDeg: motion.headingDeg, breaks: motion.breaks }, machine);
+  const works = working.map((value, i) => (value === 1 && Number.isFinite(line.originEastM[i]!) ? 1 : 0));
+  const { headingDeg } = motion;
+  const cut = segmentPasses({ ...antenna, headingDeg, timeMs: log.timeMs, works, loggedPass: log.loggedPass });
+  return { motion, flags, line, works, ...cut };
 }
 
 function checkRows(log: MachineLog, machine: Seeder | null): BuildError | null {

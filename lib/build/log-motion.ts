@@ -28,7 +28,7 @@ export function measureMotion(log: MachineLog, positions: Positions): Motion {
   const speedMps = fillSpeed(log, positions, breaks);
   const course = headingFromTrack({ ...positions, speedMps, breaks });
   const notes: LogNote[] = [];
-  const logged = log.headingDeg && checkHeading(log, course, speedMps, notes) ? log.headingDeg : null;
+  const logged = log.headingDeg && checkHeading(log, { course, speedMps, notes }) ? log.headingDeg : null;
   if (!logged) return { headingDeg: fillStart(course), speedMps, breaks, notes };
   const headingDeg = Float32Array.from(logged, (heading, i) => {
     if (speedMps[i]! < HOLD_HEADING_BELOW_MPS) return NaN;
@@ -81,8 +81,14 @@ function fillSpeed(log: MachineLog, { eastM, northM }: Positions, breaks: Uint8A
   });
 }
 
+interface HeadingCheck {
+  course: Float32Array;
+  speedMps: Float32Array;
+  notes: LogNote[];
+}
+
 /** False (with a note) where the logged heading is not the direction of travel. */
-function checkHeading(log: MachineLog, course: Float32Array, speedMps: Float32Array, notes: LogNote[]): boolean {
+function checkHeading(log: MachineLog, { course, speedMps, notes }: HeadingCheck): boolean {
   const differences = Float64Array.from(course, (track, i) => {
     const moving = speedMps[i]! > 2 * HOLD_HEADING_BELOW_MPS || Number.isNaN(speedMps[i]!);
     return moving ? turnDegrees(track, log.headingDeg?.[i] ?? NaN) : NaN;

@@ -41,6 +41,7 @@ export function emptyCopy(grid: BitGrid): BitGrid {
 }
 
 /** Sets cells `from .. end - 1` of a row of the grid. */
+// kernel: hot, so positional
 export function setSpan(grid: BitGrid, row: number, from: number, end: number): void {
   if (end <= from) return;
   const base = row * grid.wordsPerRow;
@@ -73,6 +74,7 @@ export function countBits(grid: BitGrid): number {
 }
 
 /** First column at or after `from` whose cell is set (or, with `wanted` false, clear); `columns` where there is none. */
+// kernel: hot, so positional
 export function nextColumn(grid: BitGrid, row: number, from: number, wanted: boolean): number {
   const base = row * grid.wordsPerRow;
   let mask = 0xffffffff << (from & 31);

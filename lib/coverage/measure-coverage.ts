@@ -44,14 +44,14 @@ const MAX_CELLS = 2 ** 29;
 /** Area swept, covered, overlapped and skipped, by a grid finer than half a row spacing. */
 export function measureCoverage(placed: PlacedLog, options: CoverageOptions = {}): Coverage {
   const sweptM2 = sweptAreaM2(placed, options.distances ?? rowDistances(placed));
-  const groups = groupRows(placed.geometry);
   const xAxisDeg = (mainAxisDeg(placed.passes) ?? 0) + GRID_TURN_DEG;
-  const bounds = cellBounds(placed, groups, xAxisDeg);
+  const frame = { groups: groupRows(placed.geometry), xAxisDeg };
+  const bounds = cellBounds(placed, frame);
   if (!bounds) return { sweptM2, coveredM2: 0, overlapM2: sweptM2, skippedM2: 0, resolutionM: 0 };
   const spacingM = Math.min(...placed.geometry.widthM);
   const grid = createBitGrid(bounds, spacingM / CELLS_PER_SPACING, options.maxCells ?? MAX_CELLS);
   const ring: [Float64Array] = [new Float64Array(8)];
-  visitCells(placed, groups, xAxisDeg, (quad) => {
+  visitCells(placed, frame, (quad) => {
     ring[0] = quad;
     fillPolygon(grid, ring);
   });

@@ -7,12 +7,18 @@ import { passSteps } from "@/lib/rows/pass-members";
 /** Corners of one cell as x, y four times round; overwritten by the next. */
 export type Quad = Float64Array;
 
+/** The strips to draw, and where the x axis of the drawing points. */
+export interface CellFrame {
+  groups: RowGroup[];
+  xAxisDeg: number;
+}
+
 /**
  * Calls `visit` with the ground of every working record and strip: from its edges at the record before to its edges at the
  * record, in a frame whose x axis points along `xAxisDeg`. The first record of a pass reaches back as far as the next one
  * goes on.
  */
-export function visitCells(placed: PlacedLog, groups: RowGroup[], xAxisDeg: number, visit: (quad: Quad) => void): void {
+export function visitCells(placed: PlacedLog, { groups, xAxisDeg }: CellFrame, visit: (quad: Quad) => void): void {
   const quad = new Float64Array(8);
   const turn = { sin: Math.sin(xAxisDeg * RADIANS_PER_DEGREE), cos: Math.cos(xAxisDeg * RADIANS_PER_DEGREE) };
   for (const pass of placed.passes) {
@@ -42,6 +48,7 @@ interface EdgeTarget {
   turn: { sin: number; cos: number };
 }
 
+// kernel: hot, so positional
 function writeEdge(placed: PlacedLog, group: RowGroup, record: number, { quad, at, turn }: EdgeTarget): void {
   const heading = placed.headingDeg[record]! * RADIANS_PER_DEGREE;
   const sin = Math.sin(heading);
@@ -66,9 +73,9 @@ function writePoint(
 }
 
 /** The box around all cells; null where there are none. */
-export function cellBounds(placed: PlacedLog, groups: RowGroup[], xAxisDeg: number): Bounds | null {
+export function cellBounds(placed: PlacedLog, frame: CellFrame): Bounds | null {
   const bounds = { minX: Infinity, minY: Infinity, maxX: -Infinity, maxY: -Infinity };
-  visitCells(placed, groups, xAxisDeg, (quad) => {
+  visitCells(placed, frame, (quad) => {
     for (let k = 0; k < 8; k += 2) {
       bounds.minX = Math.min(bounds.minX, quad[k]!);
       bounds.maxX = Math.max(bounds.maxX, quad[k]!);

@@ -63,7 +63,7 @@ const WORDING: Record<string, { below: string; above: string; check: string }> =
 };
 
 function sayRow(input: VerdictInput, row: number, evidence: ChannelEvidence): Finding {
-  const step = rowStep(input.placed, evidence, row, input.distances);
+  const step = rowStep(input, evidence, row);
   const words = WORDING[evidence.statistics.channel] ?? WORDING.resistance!;
   const fewPasses = input.placed.passes.length < VERDICT_THRESHOLDS.minPassesToRank;
   const large =

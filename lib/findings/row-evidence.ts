@@ -32,7 +32,11 @@ export interface RowStep {
 }
 
 /** How far a row (from 1) stands from the others, how constantly, and pass by pass. */
-export function rowStep(placed: PlacedLog, evidence: ChannelEvidence, row: number, distances: Float32Array): RowStep {
+export function rowStep(
+  { placed, distances }: { placed: PlacedLog; distances: Float32Array },
+  evidence: ChannelEvidence,
+  row: number,
+): RowStep {
   const deviation = evidence.statistics.deviations[row - 1]!;
   const values = deviationFromOthers(evidence.channel.values, evidence.channel.rows);
   const series = rowSeries(placed, { values, rows: evidence.channel.rows }, distances, row - 1);

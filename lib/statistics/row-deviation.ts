@@ -22,6 +22,7 @@ export function deviationFromOthers(values: Float32Array, rows: number): Float32
 }
 
 /** Insertion sort of one record's finite readings: fastest for the few dozen rows of a machine. */
+// kernel: hot, so positional
 function sortRecord(values: Float32Array, base: number, sorted: Float32Array, owner: Uint16Array): number {
   let n = 0;
   for (let row = 0; row < sorted.length; row++) {

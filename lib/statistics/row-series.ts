@@ -17,6 +17,7 @@ export function allRowSeries(placed: PlacedLog, channel: Readings, distances: Fl
 }
 
 /** The series of row index `row` (from 0) alone. */
+// kernel: a thin front of the hot loop below
 export function rowSeries(placed: PlacedLog, channel: Readings, distances: Float32Array, row: number): RowSeries {
   return gather(placed, channel, distances, { first: row, count: 1 })[0]!;
 }

@@ -72,7 +72,7 @@ export function rowStatistics(
   const channel = resolved.value;
   const distances = options.distances ?? rowDistances(placed);
   const described = allRowSeries(placed, channel, distances).map((one, row) =>
-    describeRow(placed, channel, one, row + 1),
+    describeRow(placed, channel, { series: one, row: row + 1 }),
   );
   const scores = scoreChannel(placed, channel, distances);
   const medianOfRows = median(described.map((item) => item.p50 ?? NaN));
@@ -108,7 +108,11 @@ const WHEEL_WIDTH_M = 1;
 
 type Described = Omit<RowStatisticsItem, "deviationZ" | "flagged" | "reason">;
 
-function describeRow(placed: PlacedLog, channel: ResolvedChannel, series: RowSeries, row: number): Described {
+function describeRow(
+  placed: PlacedLog,
+  channel: ResolvedChannel,
+  { series, row }: { series: RowSeries; row: number },
+): Described {
   const { min, max, weight, quantiles } = selectQuantiles(
     series.values,
     series.weightsM,

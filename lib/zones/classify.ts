@@ -13,6 +13,7 @@ export function hysteresisOf(breaks: readonly number[]): number {
 }
 
 /** The class after `current`, given a new value: it changes only where the edge is passed by `hysteresis`. */
+// kernel: once a reading, so positional
 export function nextClass(
   current: number | null,
   value: number,

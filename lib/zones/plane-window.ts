@@ -17,8 +17,7 @@ export function ringMeets(ring: readonly (readonly number[])[], [west, south, ea
 export function stepsNear(
   placed: PlacedLog,
   steps: readonly PassStep[],
-  bbox: Bbox,
-  marginM: number,
+  { bbox, marginM }: { bbox: Bbox; marginM: number },
 ): { first: number; last: number } | null {
   const corners = [0, 2].flatMap((lon) => [1, 3].map((lat) => placed.plane.toPlane(bbox[lon]!, bbox[lat]!)));
   const east = corners.map((corner) => corner[0]);

@@ -30,8 +30,7 @@ interface EdgePair {
 export function outlinePass(
   placed: PlacedLog,
   steps: readonly PassStep[],
-  outer: Strip,
-  toleranceM: number,
+  { outer, toleranceM }: { outer: Strip; toleranceM: number },
 ): PassOutline {
   const edges = steps.map((step) => edgeAt(placed, outer, step.record));
   const corners: number[] = [];
@@ -65,15 +64,14 @@ function furthestFromLine(edges: EdgePair[], from: number, to: number, tolerance
  */
 export function stripRing(
   placed: PlacedLog,
-  strip: Strip,
   outline: PassOutline,
-  span: { first: number; last: number },
+  { strip, first, last }: { strip: Strip; first: number; last: number },
 ): Position[] {
   const { steps, corners } = outline;
-  const begin = steps[span.first];
-  const end = steps[span.last];
+  const begin = steps[first];
+  const end = steps[last];
   if (!begin || !end) return [];
-  const between = corners.filter((corner) => corner >= span.first && corner < span.last);
+  const between = corners.filter((corner) => corner >= first && corner < last);
   const edges = [
     startEdge(placed, strip, begin),
     ...between.map((corner) => edgeAt(placed, strip, steps[corner]!.record)),

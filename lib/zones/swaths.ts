@@ -24,8 +24,8 @@ export function buildSwaths(placed: PlacedLog, options: { bbox?: Bbox } = {}): S
   const strip = outerStrip(placed);
   const features = placed.passes.flatMap((pass) => {
     const steps = passSteps(placed, pass).filter((step) => step.before >= 0 || step.after >= 0);
-    const outline = outlinePass(placed, steps, strip, OUTLINE_TOLERANCE_M);
-    const ring = stripRing(placed, strip, outline, { first: 0, last: steps.length - 1 });
+    const outline = outlinePass(placed, steps, { outer: strip, toleranceM: OUTLINE_TOLERANCE_M });
+    const ring = stripRing(placed, outline, { strip, first: 0, last: steps.length - 1 });
     if (ring.length < 4 || (options.bbox && !ringMeets(ring, options.bbox))) return [];
     return [swathFeature(pass, { type: "Polygon", coordinates: [ring] })];
   });

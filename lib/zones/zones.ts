@@ -56,26 +56,27 @@ export function buildZones(placed: PlacedLog, channelId: string, options: ZoneOp
   const runOptions = {
     breaks: [...options.breaks].sort((a, b) => a - b),
     minLengthM: options.minLengthM ?? DEFAULT_ZONE_LENGTH_M,
+    bbox: options.bbox,
   };
-  const features = placed.passes.flatMap((pass) => passZones(source, pass, runOptions, options.bbox));
+  const features = placed.passes.flatMap((pass) => passZones(source, pass, runOptions));
   return { type: "FeatureCollection", features };
 }
 
 /** Corners closer than this to the line between their neighbours are left out: below what a receiver can tell. */
 const OUTLINE_TOLERANCE_M = 0.03;
 
-function passZones(source: TrackSource, pass: Pass, runOptions: RunOptions, bbox: Bbox | undefined): Zone[] {
+function passZones(source: TrackSource, pass: Pass, { bbox, ...runOptions }: RunOptions & { bbox?: Bbox }): Zone[] {
   const { placed } = source;
   const steps = passSteps(placed, pass).filter((step) => step.before >= 0 || step.after >= 0);
   const near = bbox
-    ? stepsNear(placed, steps, bbox, implementWidthM(placed.geometry) + LONGEST_STEP_M)
+    ? stepsNear(placed, steps, { bbox, marginM: implementWidthM(placed.geometry) + LONGEST_STEP_M })
     : { first: 0, last: steps.length - 1 };
   if (!near || steps.length === 0) return [];
-  const outline = outlinePass(placed, steps, outerStrip(placed), OUTLINE_TOLERANCE_M);
+  const outline = outlinePass(placed, steps, { outer: outerStrip(placed), toleranceM: OUTLINE_TOLERANCE_M });
   return rowTracks(source, pass, steps).flatMap((track) =>
     classRuns(track, runOptions)
       .filter((run) => run.last >= near.first && run.first <= near.last)
-      .map((run) => zoneFeature(placed, track, run, outline))
+      .map((run) => zoneFeature({ placed, outline }, track, run))
       .filter((zone) => !bbox || ringMeets(zone.geometry.coordinates[0]!, bbox)),
   );
 }
@@ -85,14 +86,21 @@ const LONGEST_STEP_M = 20;
 
 type Zone = Feature<Polygon, ZoneProperties>;
 
-function zoneFeature(placed: PlacedLog, track: RowTrack, run: ClassRun, outline: PassOutline): Zone {
+function zoneFeature(
+  { placed, outline }: { placed: PlacedLog; outline: PassOutline },
+  track: RowTrack,
+  run: ClassRun,
+): Zone {
   const { offsetM, forwardM, widthM } = placed.geometry;
   const row = track.row - 1;
   const half = widthM[row]! / 2;
   const strip = { leftM: offsetM[row]! - half, rightM: offsetM[row]! + half, forwardM: forwardM[row]! };
   return {
     type: "Feature",
-    geometry: { type: "Polygon", coordinates: [stripRing(placed, strip, outline, run)] },
+    geometry: {
+      type: "Polygon",
+      coordinates: [stripRing(placed, outline, { strip, first: run.first, last: run.last })],
+    },
     properties: {
       row: track.row,
       pass: track.pass.pass,
