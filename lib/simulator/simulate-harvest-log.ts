@@ -38,7 +38,7 @@ export const HARVEST_DEFAULTS = {
   headingDeg: 0,
   headlandM: 12,
   turnRadiusM: 7,
-  startedAt: "2031-09-12T15:20:00.000Z",
+  startedAt: "2026-09-12T15:20:00.000Z",
   recordIntervalS: 1,
   speed: { meanMps: 1.9, variationMps: 0.15, variationPeriodS: 90, turnShare: 0.8, noiseMps: 0.02 },
   yieldKgPerM2: 0.52,

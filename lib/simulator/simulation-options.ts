@@ -132,7 +132,7 @@ export const SIMULATION_DEFAULTS: SimulationOptions = {
   headlandM: 18,
   headland: null,
   turnRadiusM: 7,
-  startedAt: "2031-09-24T14:05:00.000Z",
+  startedAt: "2026-09-24T14:05:00.000Z",
   recordIntervalS: 0.5,
   speed: { meanMps: 2.4, variationMps: 0.15, variationPeriodS: 70, turnShare: 0.75, noiseMps: 0.02 },
   logTurns: true,

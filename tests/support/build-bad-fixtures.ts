@@ -9,7 +9,7 @@ import type { Fixture } from "@/tests/support/build-fixtures";
 const RECORDS = 60;
 /** Uncompressed bytes of the inflating archive: a thousand times what lies on the disk. */
 const BOMB_BYTES = 64 * 1024 * 1024;
-const ZIP_OPTIONS = { mtime: new Date("2031-09-24T12:00:00"), level: 9 } as const;
+const ZIP_OPTIONS = { mtime: new Date("2026-09-24T12:00:00"), level: 9 } as const;
 
 /** Files that a reader must refuse, or read with a note, each named after its fault. */
 export function buildBadFixtures(log: MachineLog): Fixture[] {

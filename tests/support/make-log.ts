@@ -31,7 +31,7 @@ export function makeLog({ records, rows = 4, channels = [] }: MadeLog): MachineL
   const plane = createLocalPlane(TEST_ORIGIN.longitude, TEST_ORIGIN.latitude);
   const degrees = records.map(({ eastM, northM }) => plane.toDegrees(eastM, northM));
   const has = (key: keyof MadeRecord) => records.some((record) => record[key] !== undefined);
-  const start = Date.parse("2031-09-24T14:05:00.000Z");
+  const start = Date.parse("2026-09-24T14:05:00.000Z");
   return {
     kind: "seeding",
     records: records.length,

@@ -65,7 +65,7 @@ const EAST_HARVEST: HarvestInput = {
   origin: EAST_ORIGIN,
   ring: EAST_RING,
   headingDeg: 0,
-  startedAt: "2031-09-12T15:20:00.000Z",
+  startedAt: "2026-09-12T15:20:00.000Z",
 };
 const EAST_SEEDING: SimulationInput = {
   ...DRILLING,
@@ -74,7 +74,7 @@ const EAST_SEEDING: SimulationInput = {
   // The last lines were left for the next day, see `LARKSPUR_NEXT_DAY`.
   shape: { kind: "polygon", ring: EAST_RING, lines: { first: 1, last: 38 } },
   headingDeg: 20,
-  startedAt: "2031-09-24T14:05:00.000Z",
+  startedAt: "2026-09-24T14:05:00.000Z",
   bands: bandsFromHarvest(EAST_HARVEST, { widthM: 2.5, sideShiftM: 0.4, contrastN: 240 }),
 };
 
@@ -88,7 +88,7 @@ const MILL_HARVEST: HarvestInput = {
   origin: MILL_ORIGIN,
   ring: MILL_RING,
   headingDeg: 68,
-  startedAt: "2031-09-13T14:40:00.000Z",
+  startedAt: "2026-09-13T14:40:00.000Z",
 };
 const MILL_SEEDING: SimulationInput = {
   ...DRILLING,
@@ -98,7 +98,7 @@ const MILL_SEEDING: SimulationInput = {
   headingDeg: 68,
   // Steered by last season's harvest lines: 6 m of drill every 6.096 m.
   passSpacingM: LARKSPUR_COMBINE.headerWidthM,
-  startedAt: "2031-09-26T13:50:00.000Z",
+  startedAt: "2026-09-26T13:50:00.000Z",
   bands: bandsFromHarvest(MILL_HARVEST, { widthM: 2.5, sideShiftM: 0, contrastN: 240 }),
 };
 
@@ -138,7 +138,7 @@ export const LARKSPUR_NEXT_DAY: LarkspurLog<SimulationInput> & { fieldKey: Larks
     ...EAST_SEEDING,
     seed: 3103,
     shape: { kind: "polygon", ring: EAST_RING, lines: { first: 39, last: 60 } },
-    startedAt: "2031-09-25T14:10:00.000Z",
+    startedAt: "2026-09-25T14:10:00.000Z",
     wornRow: null,
     machine: LARKSPUR_DRILL_BALLASTED,
   },

@@ -11,8 +11,8 @@ export function writeDbf(records: number, columns: readonly LogColumn[]): Uint8A
   const recordBytes = 1 + widths.reduce((sum, width) => sum + width, 0);
   const bytes = new Uint8Array(headerBytes + recordBytes * records + 1).fill(0x20, headerBytes);
   const view = new DataView(bytes.buffer);
-  // Version 3, last changed 2031-09-24 (years since 1900).
-  bytes.set([3, 131, 9, 24]);
+  // Version 3, last changed 2026-09-24 (years since 1900).
+  bytes.set([3, 126, 9, 24]);
   view.setUint32(4, records, true);
   view.setUint16(8, headerBytes, true);
   view.setUint16(10, recordBytes, true);

@@ -8,7 +8,7 @@ const HEADER_BYTES = 100;
 const POINT_SHAPE = 1;
 const POINT_CONTENT_BYTES = 20;
 /** Fixed, so the same log gives the same bytes. */
-const ZIP_TIME = new Date("2031-09-24T12:00:00");
+const ZIP_TIME = new Date("2026-09-24T12:00:00");
 
 const WGS84_WKT =
   'GEOGCS["GCS_WGS_1984",DATUM["D_WGS_1984",SPHEROID["WGS_1984",6378137.0,298.257223563]],' +

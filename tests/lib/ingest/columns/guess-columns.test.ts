@@ -29,7 +29,7 @@ describe("proposals from header words and values", () => {
     ["Speed (mph)", ["5", "5.4"], "speed", "mph"],
     ["gps speed m/s", ["2.4", "2.2"], "speed", "m/s"],
     ["course", ["181.2", "182"], "heading", "deg"],
-    ["time", ["2031-09-24T14:05:00Z", "2031-09-24T14:05:01Z"], "time", "iso8601"],
+    ["time", ["2026-09-24T14:05:00Z", "2026-09-24T14:05:01Z"], "time", "iso8601"],
     ["timestamp", ["1948025100", "1948025101"], "time", "unix-s"],
     ["timestamp", ["1948025100000", "1948025101000"], "time", "unix-ms"],
     ["gps time", ["1442000000", "1442000001"], "time", "gps-s"],

@@ -9,7 +9,7 @@ const POINTS: [number, number][] = [
   [-98.63, 38.43],
 ];
 const COLUMNS: DbfColumn[] = [
-  { name: "TIME_utc", type: "C", length: 20, cells: ["2031-09-24T14:05:00Z", "2031-09-24T14:05:01Z", ""] },
+  { name: "TIME_utc", type: "C", length: 20, cells: ["2026-09-24T14:05:00Z", "2026-09-24T14:05:01Z", ""] },
   { name: "DF_1_lbf", type: "N", length: 8, cells: ["200.5", "-3", "********"] },
   { name: "DF_2_lbf", type: "F", length: 12, cells: ["2.1000e+002", "210", ""] },
   { name: "WORKING", type: "L", length: 1, cells: ["T", "F", "?"] },
@@ -32,7 +32,7 @@ describe("zipped point shapefile", () => {
       [200.5, 210, -3, 210, NaN, NaN].map((value) => Math.fround(value * LBF)),
     );
     expect([...(log.working ?? [])]).toEqual([1, 0, 0]);
-    expect(new Date(log.timeMs[1] ?? NaN).toISOString()).toBe("2031-09-24T14:05:01.000Z");
+    expect(new Date(log.timeMs[1] ?? NaN).toISOString()).toBe("2026-09-24T14:05:01.000Z");
     expect(notes).toEqual([]);
   });
 
