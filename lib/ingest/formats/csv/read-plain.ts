@@ -6,8 +6,8 @@ import { READ_LIMITS } from "@/lib/ingest/log-format";
 const LINE_FEED = 10;
 
 /**
- * Reads a plain text of numbers chunk by chunk: no quotes, a decimal point, one byte a letter where it matters.
- * Returns false when a quote turns up: the general reader must start over.
+ * Reads a plain text of numbers chunk by chunk: a decimal point, quotes only around whole cells of one line.
+ * Returns false when there is more to the quotes: the general reader must start over.
  */
 export async function readPlain(source: ByteSource, scan: PlainScan, markBytes: number): Promise<boolean> {
   let buffer = new Uint8Array(1 << 19);

@@ -1,5 +1,6 @@
 // One long function on purpose: it is the hot loop of reading logs, and a call a cell would double its time.
 import { isMissing, TEN_TO } from "@/lib/ingest/records/parse-number";
+import { readNumberBytes } from "@/lib/ingest/records/read-number-bytes";
 import { CELL } from "@/lib/ingest/records/read-plan";
 import type { RecordCollector } from "@/lib/ingest/records/record-collector";
 
@@ -24,7 +25,8 @@ export interface PlainScan {
 /**
  * kernel: reads whole lines `bytes[0 .. end)`, the last byte being a line feed, and commits each to the collector.
  * Numbers of up to 15 digits are read straight from the bytes (exactly); any other cell goes through the text parsers, so
- * both ways agree. Returns false at the first quote, which only the general reader understands.
+ * both ways agree. Takes quoted cells of one line; returns false at a quote inside a cell, a line break inside quotes and
+ * whatever else only the general reader understands.
  */
 export function scanPlainLines(scan: PlainScan, bytes: Uint8Array, end: number): boolean {
   const { collector, delimiter, decoder } = scan;
@@ -33,7 +35,6 @@ export function scanPlainLines(scan: PlainScan, bytes: Uint8Array, end: number):
   let at = 0;
   while (at < end) {
     scan.lineNumber++;
-    const lineStart = at;
     let byte = bytes[at]!;
     if (byte === LINE_FEED || (byte === CARRIAGE_RETURN && bytes[at + 1] === LINE_FEED)) {
       at += byte === LINE_FEED ? 1 : 2;
@@ -81,7 +82,14 @@ export function scanPlainLines(scan: PlainScan, bytes: Uint8Array, end: number):
           isRead = true;
         }
       }
-      if (!isRead) {
+      if (!isRead && bytes[start] === QUOTE) {
+        at = bytes.indexOf(QUOTE, start + 1);
+        if (at < 0 || at >= end || !isCellEnd(bytes, at + 1, delimiter)) return false;
+        if (!isOneLine(bytes, start, at)) return false;
+        if (kind !== CELL.skip) takeCell(scan, { field, kind, bytes, start: start + 1, end: at }, decoder);
+        byte = bytes[++at]!;
+        if (byte === CARRIAGE_RETURN) byte = bytes[++at]!;
+      } else if (!isRead) {
         while (byte !== delimiter && byte !== LINE_FEED) {
           if (byte === QUOTE) return false;
           byte = bytes[++at]!;
@@ -95,10 +103,8 @@ export function scanPlainLines(scan: PlainScan, bytes: Uint8Array, end: number):
       field++;
       if (byte === LINE_FEED) break;
     }
-    if (field !== columnCount) {
-      if (hasQuote(bytes, lineStart, at)) return false;
-      collector.rejectLine("ragged-rows", scan.lineNumber);
-    } else collector.commit(scan.lineNumber);
+    if (field === columnCount) collector.commit(scan.lineNumber);
+    else collector.rejectLine("ragged-rows", scan.lineNumber);
   }
   return true;
 }
@@ -113,6 +119,13 @@ interface Cell {
 
 function takeCell(scan: PlainScan, cell: Cell, decoder: TextDecoder): void {
   const { field, kind, bytes, start, end } = cell;
+  if (kind === CELL.number) {
+    const value = readNumberBytes(bytes, start, end);
+    if (value === value) {
+      scan.collector.line[field] = value;
+      return;
+    }
+  }
   if (kind === CELL.isoTime) {
     const ms = readIsoBytes(bytes, start, end);
     if (ms === ms) {
@@ -125,9 +138,14 @@ function takeCell(scan: PlainScan, cell: Cell, decoder: TextDecoder): void {
   else scan.collector.takeText(field, text, scan.lineNumber);
 }
 
-function hasQuote(bytes: Uint8Array, start: number, end: number): boolean {
-  for (let i = start; i < end; i++) if (bytes[i] === QUOTE) return true;
-  return false;
+function isCellEnd(bytes: Uint8Array, at: number, delimiter: number): boolean {
+  const byte = bytes[at];
+  return byte === delimiter || byte === LINE_FEED || (byte === CARRIAGE_RETURN && bytes[at + 1] === LINE_FEED);
+}
+
+function isOneLine(bytes: Uint8Array, start: number, end: number): boolean {
+  for (let i = start; i < end; i++) if (bytes[i] === LINE_FEED) return false;
+  return true;
 }
 
 let lastDayKey = -1;

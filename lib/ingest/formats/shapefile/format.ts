@@ -5,14 +5,7 @@ import { POINT_DEGREES, POINT_PLANE } from "@/lib/ingest/formats/point-columns";
 import { groupParts } from "@/lib/ingest/formats/shapefile/group-parts";
 import type { ZipEntry } from "@/lib/ingest/formats/shapefile/list-entries";
 import { isZip, openZip, unpackEntry } from "@/lib/ingest/formats/shapefile/open-zip";
-import {
-  isDeleted,
-  openDbf,
-  readCellNumber,
-  readCellText,
-  readCodePage,
-  type DbfTable,
-} from "@/lib/ingest/formats/shapefile/read-dbf";
+import { isDeleted, openDbf, readCellText, readCodePage, type DbfTable } from "@/lib/ingest/formats/shapefile/read-dbf";
 import { readShp, type ShapePoints } from "@/lib/ingest/formats/shapefile/read-shp";
 import { stopReading } from "@/lib/ingest/ingest-error";
 import type { InspectOptions, Inspection, LogFormat, ReadLog, ReadOptions } from "@/lib/ingest/log-format";
@@ -20,6 +13,7 @@ import type { LogMapping } from "@/lib/ingest/mapping";
 import { openText } from "@/lib/ingest/open-text";
 import { NoteBook } from "@/lib/ingest/records/note-book";
 import { createToDegrees, type ToDegrees } from "@/lib/ingest/records/project-position";
+import { readNumberBytes } from "@/lib/ingest/records/read-number-bytes";
 import { CELL, buildReadPlan } from "@/lib/ingest/records/read-plan";
 import { RecordCollector } from "@/lib/ingest/records/record-collector";
 
@@ -145,7 +139,7 @@ async function readShapefile(source: ByteSource, mapping: LogMapping, options: R
     const recordStart = table.firstByte + record * table.recordBytes;
     for (const { column, field, kind } of used) {
       const start = recordStart + column.offset;
-      const value = kind === CELL.number ? readCellNumber(table.bytes, start, start + column.length) : NaN;
+      const value = kind === CELL.number ? readNumberBytes(table.bytes, start, start + column.length) : NaN;
       if (value === value) collector.line[field] = value;
       else collector.takeText(field, readCellText(table, record, column), record + 1);
     }

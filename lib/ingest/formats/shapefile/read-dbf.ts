@@ -1,5 +1,4 @@
 import { stopReading } from "@/lib/ingest/ingest-error";
-import { TEN_TO } from "@/lib/ingest/records/parse-number";
 
 export interface DbfField {
   name: string;
@@ -87,29 +86,4 @@ export function readCellText(table: DbfTable, record: number, field: DbfField): 
   if (/^\*+$/.test(text)) return "";
   if (field.type === "D" && /^\d{8}$/.test(text)) return `${text.slice(0, 4)}-${text.slice(4, 6)}-${text.slice(6)}`;
   return field.type === "L" && text === "?" ? "" : text;
-}
-
-/**
- * kernel: the number in a cell read straight from its bytes, exactly for up to 15 digits; NaN when the cell is not a plain
- * number, and the caller then reads it as text.
- */
-export function readCellNumber(bytes: Uint8Array, start: number, end: number): number {
-  let at = start;
-  while (at < end && bytes[at] === 32) at++;
-  while (end > at && (bytes[end - 1] === 32 || bytes[end - 1] === 0)) end--;
-  const isNegative = bytes[at] === 45;
-  if (isNegative) at++;
-  const first = at;
-  let mantissa = 0;
-  let point = -1;
-  for (; at < end; at++) {
-    const byte = bytes[at]!;
-    if (byte >= 48 && byte <= 57) mantissa = mantissa * 10 + (byte - 48);
-    else if (byte === 46 && point < 0) point = at;
-    else return NaN;
-  }
-  const digits = end - first - (point < 0 ? 0 : 1);
-  if (digits < 1 || digits > 15) return NaN;
-  const value = point < 0 ? mantissa : mantissa / TEN_TO[end - point - 1]!;
-  return isNegative ? -value : value;
 }
