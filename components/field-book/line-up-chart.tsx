@@ -39,6 +39,7 @@ export function LineUpChart({ statistics, classes }: LineUpChartProps) {
   const pointed = useBookState((state) => state.cursor?.row ?? null);
   const { items } = statistics;
   const hasStrip = items.some((item) => shareOf(item) !== null);
+  const target = statistics.channel === "margin" ? (classes?.context.targetMarginN ?? null) : null;
   const plot = plotOf(items, { width, height, hasStrip });
   const onKeyDown = (event: KeyboardEvent) => {
     const by = { ArrowLeft: -1, ArrowRight: 1 }[event.key];
@@ -60,6 +61,7 @@ export function LineUpChart({ statistics, classes }: LineUpChartProps) {
       {width > 0 && plot ? (
         <svg width={width} height={height} className="absolute inset-0 block" role="presentation">
           <ValueAxis plot={plot} statistics={statistics} />
+          {target !== null ? <TargetLine plot={plot} value={target} /> : null}
           {items.map((item) => (
             <RowMark
               key={item.row}
@@ -150,6 +152,20 @@ function ValueAxis({ plot, statistics }: { plot: Plot; statistics: RowStatistics
           <line x1={LEFT_PX} x2={plot.width} y1={plot.stripTop + 22} y2={plot.stripTop + 22} stroke="#8C8778" />
         </g>
       ) : null}
+    </g>
+  );
+}
+
+/** What the machine was set to hold; left out where the rows never came near it. */
+function TargetLine({ plot, value }: { plot: Plot; value: number }) {
+  if (value < plot.low || value > plot.high) return null;
+  const y = plot.yOf(value);
+  return (
+    <g>
+      <line x1={LEFT_PX} x2={plot.width} y1={y} y2={y} stroke="#7D5A14" strokeDasharray="4 3" />
+      <text x={plot.width} y={TOP_PX - 5} textAnchor="end" fontSize={11} fill="#7D5A14">
+        dashed: target
+      </text>
     </g>
   );
 }

@@ -28,7 +28,7 @@ export function LineUp({ statistics, classes, onTable }: LineUpProps) {
         {statistics ? `${channelWords(statistics.channel).name}, ` : ""}left to right looking forward: median, middle
         half, 5th to 95th percentile{share ? `; below, share of distance ${share.words}` : ""}.
       </p>
-      <div className="min-h-60 flex-1 md:min-h-0">
+      <div className="h-72 lg:h-auto lg:min-h-0 lg:flex-1">
         {statistics ? (
           <LineUpChart statistics={statistics} classes={classes} />
         ) : (

@@ -33,9 +33,12 @@ export function Readout({ spoken }: { spoken: boolean }) {
       {cursor ? (
         <ReadingWords cursor={cursor} />
       ) : (
-        <span>
-          Point at the map or the pass to read a value. Keys: ← → along, ↑ ↓ rows, [ ] passes, Enter keeps a row.
-        </span>
+        <>
+          <span className="lg:hidden">Touch the map or the pass to read a value.</span>
+          <span className="max-lg:hidden">
+            Point at the map or the pass to read a value. Keys: ← → along, ↑ ↓ rows, [ ] passes, Enter keeps a row.
+          </span>
+        </>
       )}
     </p>
   );

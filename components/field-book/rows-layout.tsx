@@ -33,7 +33,7 @@ const WIDE_FRAME = "grid h-[calc(100dvh-3.5rem)] min-h-[38rem] grid-cols-[minmax
 /** Map above, unrolled pass beneath, verdict and line-up at the right; on a phone the verdict first and the pass upright at the end. */
 export function RowsLayout({ field, basemap, picker }: RowsLayoutProps) {
   const wide = useWideScreen();
-  const parts = useParts({ field, basemap });
+  const parts = useParts({ field, basemap, wide: wide === true });
   if (wide === null) return <RowsSkeleton />;
   if (!wide) return <NarrowRows parts={parts} picker={picker} />;
   return (
@@ -86,7 +86,7 @@ function NarrowRows({ parts, picker }: { parts: Parts; picker: ReactNode }) {
 type Parts = ReturnType<typeof useParts>;
 
 /** Everything the page shows, fed with the open log; where it goes depends on the screen. */
-function useParts({ field, basemap }: { field: Field; basemap: BasemapConfig }) {
+function useParts({ field, basemap, wide }: { field: Field; basemap: BasemapConfig; wide: boolean }) {
   const { log, logVersion } = useBook();
   const channel = useBookState((state) => state.channel);
   const [asTable, setAsTable] = useState(false);
@@ -102,7 +102,7 @@ function useParts({ field, basemap }: { field: Field; basemap: BasemapConfig }) 
   return {
     map: <RowMap basemap={basemap} bounds={bounds} boundary={field.boundary} classes={classes} track={track} />,
     legend: <Legend classes={classes} unit={overview?.unit ?? ""} />,
-    verdict: <VerdictPanel verdict={verdict.data} rows={log.counts.rows} trouble={verdict.isError} />,
+    verdict: <VerdictPanel verdict={verdict.data} rows={log.counts.rows} trouble={verdict.isError} roomy={wide} />,
     lineUp: <LineUp statistics={statistics} classes={classes} onTable={() => setAsTable(true)} />,
     table: asTable && statistics ? <LineUpTable statistics={statistics} onClose={() => setAsTable(false)} /> : null,
     passHeading: <PassHeading passes={passes} />,

@@ -55,40 +55,47 @@ export function useMapPointer(map: MapLibreMap | null): void {
     const finder = { client, log: logVersion, store };
     let resting: ReturnType<typeof setTimeout> | undefined;
     let latest = 0;
-    const look = (place: LngLat, delayMs: number, use: (cursor: Cursor | null) => void) => {
+    const look = (place: LngLat, onFound: (cursor: Cursor | null) => void) => {
       clearTimeout(resting);
       const turn = (latest += 1);
       const atHand = findAtHand(finder, place);
-      if (atHand) return use(atHand);
+      if (atHand) return onFound(atHand);
       resting = setTimeout(() => {
         findFarAway(finder, place)
           // Bare ground answers 404: there is simply nothing to name.
           .catch(() => null)
-          .then((cursor) => turn === latest && use(cursor));
-      }, delayMs);
+          .then((cursor) => turn === latest && onFound(cursor));
+      }, REST_MS);
     };
     const onMove = ({ lngLat }: MapMouseEvent) => {
       const { pointAt } = store.getState();
       if (!findAtHand(finder, lngLat)) pointAt(null);
-      look(lngLat, REST_MS, pointAt);
+      look(lngLat, pointAt);
     };
     const onOut = () => {
       clearTimeout(resting);
       latest += 1;
       store.getState().pointAt(null);
     };
-    const onClick = ({ lngLat }: MapMouseEvent) =>
-      look(lngLat, 0, (cursor) => {
-        if (!cursor) return;
+    // A click is a choice: moving on before the answer is here must not undo it. Only a later click does.
+    let latestClick = 0;
+    const onClick = ({ lngLat }: MapMouseEvent) => {
+      const turn = (latestClick += 1);
+      const atHand = findAtHand(finder, lngLat);
+      const found = atHand ? Promise.resolve(atHand) : findFarAway(finder, lngLat).catch(() => null);
+      void found.then((cursor) => {
+        if (!cursor || turn !== latestClick) return;
         store.getState().choosePass(cursor.pass);
         store.getState().pointAt(cursor);
       });
+    };
     map.getCanvas().style.cursor = "crosshair";
     map.on("mousemove", onMove);
     map.on("mouseout", onOut);
     map.on("click", onClick);
     return () => {
       clearTimeout(resting);
+      latestClick += 1;
       map.off("mousemove", onMove);
       map.off("mouseout", onOut);
       map.off("click", onClick);

@@ -1,5 +1,6 @@
 "use client";
 
+import { ChevronRight } from "lucide-react";
 import { useBook, useBookState } from "@/components/field-book/field-book-context";
 import { rankFindings, sentenceOf } from "@/components/sharing/shared-finding";
 import { StateMark, type MarkState } from "@/components/ui/state-mark";
@@ -17,10 +18,12 @@ export interface VerdictPanelProps {
   verdict: VerdictBody | undefined;
   rows: number;
   trouble: boolean;
+  /** Room enough to unfold the first finding's check at once. */
+  roomy: boolean;
 }
 
 /** What the log says, in plain words: one large number, then the findings, the pressing ones first. */
-export function VerdictPanel({ verdict, rows, trouble }: VerdictPanelProps) {
+export function VerdictPanel({ verdict, rows, trouble, roomy }: VerdictPanelProps) {
   if (!verdict) return <VerdictWaiting trouble={trouble} />;
   const findings = rankFindings(verdict);
   const worst = findings[0]?.severity ?? "ok";
@@ -36,8 +39,8 @@ export function VerdictPanel({ verdict, rows, trouble }: VerdictPanelProps) {
       <Headline verdict={verdict} rows={rows} />
       {findings.length === 0 ? <p className="text-ink-soft">Nothing in this log needs your attention.</p> : null}
       <ul className="mt-2 divide-y divide-rule">
-        {findings.map((finding) => (
-          <FindingItem key={finding.id} finding={finding} />
+        {findings.map((finding, index) => (
+          <FindingItem key={finding.id} finding={finding} open={index === 0 && roomy} />
         ))}
       </ul>
     </section>
@@ -104,7 +107,25 @@ export function rowWords(rows: readonly number[]): string {
   return `${rows.length === 1 ? "Row" : "Rows"} ${list}`;
 }
 
-function FindingItem({ finding }: { finding: Finding }) {
+/** What to check, and what to mind while doing it: folded, so that all findings can be seen at once. */
+function CheckWords({ finding, open }: { finding: Finding; open: boolean }) {
+  return (
+    <details open={open} className="text-table text-ink-soft">
+      <summary className="flex min-h-11 items-center gap-1 text-slate md:min-h-6">
+        <ChevronRight size={14} aria-hidden className="[details[open]_&]:rotate-90" />
+        What to check{finding.caution ? ", and a caution" : ""}
+      </summary>
+      <p>{finding.check}</p>
+      {finding.caution ? (
+        <p className="mt-1 border-l-2 border-straw pl-2">
+          <b className="font-semibold text-straw-deep">Caution.</b> {finding.caution}
+        </p>
+      ) : null}
+    </details>
+  );
+}
+
+function FindingItem({ finding, open }: { finding: Finding; open: boolean }) {
   const { store } = useBook();
   const selected = useBookState((state) => state.row);
   const { system } = useUnits();
@@ -125,12 +146,7 @@ function FindingItem({ finding }: { finding: Finding }) {
           <span className="sr-only">{word}: </span>
           {sentenceOf(finding, system)}
         </p>
-        {finding.check ? <p className="text-table text-ink-soft">{finding.check}</p> : null}
-        {finding.caution ? (
-          <p className="border-l-2 border-straw pl-2 text-table text-ink-soft">
-            <b className="font-semibold text-straw-deep">Caution.</b> {finding.caution}
-          </p>
-        ) : null}
+        {finding.check || finding.caution ? <CheckWords finding={finding} open={open} /> : null}
         {bounds || row !== null ? (
           <button type="button" onClick={seeIt} className="min-h-11 text-table text-slate underline md:min-h-6">
             See it{row !== null ? `: row ${row}` : " on the map"}

@@ -92,8 +92,8 @@ export function createFieldBookStore(initial: Partial<FieldBookState> = {}) {
     setView: (view) => set({ view }),
     setEdges: (channel, edges) =>
       set((state) => {
-        const { [channel]: _dropped, ...rest } = state.edges;
-        return { edges: edges ? { ...rest, [channel]: edges } : rest };
+        const others = Object.entries(state.edges).filter(([name]) => name !== channel);
+        return { edges: Object.fromEntries(edges ? [...others, [channel, edges]] : others) };
       }),
     showPlace: (place) => set({ place }),
     askToFrame: (bounds) => set((state) => ({ frame: { bounds, wish: (state.frame?.wish ?? 0) + 1 } })),

@@ -1,0 +1,78 @@
+import { describe, expect, it } from "vitest";
+import { readAddress, writeAddress } from "@/lib/map-state/address-state";
+import { createFieldBookStore } from "@/lib/map-state/field-book-store";
+
+describe("the state of a field's book", () => {
+  it("steps through the passes that exist and stops at the ends", () => {
+    const store = createFieldBookStore({ pass: 4 });
+    const passes = [2, 4, 9];
+    store.getState().stepPass(1, passes);
+    expect(store.getState().pass).toBe(9);
+    store.getState().stepPass(1, passes);
+    expect(store.getState().pass).toBe(9);
+    store.getState().stepPass(-1, passes);
+    store.getState().stepPass(-1, passes);
+    store.getState().stepPass(-1, passes);
+    expect(store.getState().pass).toBe(2);
+  });
+
+  it("forgets cursor and stretch of the pass before when another is chosen, not when the same is", () => {
+    const store = createFieldBookStore({ pass: 1 });
+    store.getState().pointAt({ pass: 1, record: 3, row: 2 });
+    store.getState().choosePass(1);
+    expect(store.getState().cursor).not.toBeNull();
+    store.getState().choosePass(2);
+    expect(store.getState().cursor).toBeNull();
+  });
+
+  it("lets a row go when it is chosen again", () => {
+    const store = createFieldBookStore();
+    store.getState().chooseRow(17);
+    expect(store.getState().row).toBe(17);
+    store.getState().chooseRow(17);
+    expect(store.getState().row).toBeNull();
+  });
+
+  it("keeps a person's edges by channel and gives them up on request", () => {
+    const store = createFieldBookStore();
+    store.getState().setEdges("margin", [1, 2]);
+    store.getState().setEdges("depth", [3]);
+    store.getState().setEdges("margin", null);
+    expect(store.getState().edges).toEqual({ depth: [3] });
+  });
+
+  it("counts wishes to frame, so that the same place can be asked for twice", () => {
+    const store = createFieldBookStore();
+    store.getState().askToFrame([0, 0, 1, 1]);
+    const first = store.getState().frame;
+    store.getState().askToFrame([0, 0, 1, 1]);
+    expect(store.getState().frame?.wish).toBe((first?.wish ?? 0) + 1);
+  });
+
+  it("tells nobody when the pointer stays on the same reading", () => {
+    const store = createFieldBookStore();
+    let told = 0;
+    store.subscribe(() => (told += 1));
+    store.getState().pointAt({ pass: 1, record: 3, row: 2 });
+    store.getState().pointAt({ pass: 1, record: 3, row: 2 });
+    expect(told).toBe(1);
+  });
+});
+
+describe("the address", () => {
+  it("comes back as it was written", () => {
+    const state = {
+      log: "log_abc",
+      channel: "deviation:margin",
+      pass: 12,
+      row: 17,
+      view: { longitude: -98.612, latitude: 38.417, zoom: 17.25 },
+    };
+    expect(readAddress(writeAddress(state))).toEqual(state);
+  });
+
+  it("leaves out what makes no sense", () => {
+    const read = readAddress(new URLSearchParams("channel=../x&pass=-3&row=0&view=1,2"));
+    expect(read).toEqual({ log: null, pass: null, row: null, view: null });
+  });
+});
