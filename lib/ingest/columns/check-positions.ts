@@ -10,8 +10,7 @@ const OTHER_PLACE_DEG = 3;
 export function checkPositions(
   proposals: (ColumnProposal | null)[],
   summaries: readonly CellSummary[],
-  near: InspectOptions["near"],
-  notes: NoteBook,
+  { near, notes }: { near: InspectOptions["near"]; notes: NoteBook },
 ): void {
   const x = proposals.findIndex((proposal) => proposal?.channel === "longitude");
   const y = proposals.findIndex((proposal) => proposal?.channel === "latitude");
@@ -24,7 +23,7 @@ export function checkPositions(
   const latitude = summaries[y];
   if (!longitude || !latitude || longitude.median === null || latitude.median === null) return;
   if (beyond(latitude, 90) && !beyond(longitude, 90)) {
-    swap(proposals, x, y, "latitude cannot be beyond 90 degrees, so the two columns look swapped");
+    swap(proposals, [x, y], "latitude cannot be beyond 90 degrees, so the two columns look swapped");
     notes.add("swapped-positions");
     return;
   }
@@ -32,7 +31,7 @@ export function checkPositions(
   const apart = distanceDeg(longitude.median, latitude.median, near);
   if (apart <= OTHER_PLACE_DEG) return;
   if (distanceDeg(latitude.median, longitude.median, near) <= SAME_PLACE_DEG) {
-    swap(proposals, x, y, "the positions lie in the field only when the two columns are swapped");
+    swap(proposals, [x, y], "the positions lie in the field only when the two columns are swapped");
     notes.add("swapped-positions");
     return;
   }
@@ -53,7 +52,7 @@ function distanceDeg(longitude: number, latitude: number, near: { longitude: num
   return Math.max(Math.min(east, 360 - east), Math.abs(latitude - near.latitude));
 }
 
-function swap(proposals: (ColumnProposal | null)[], x: number, y: number, reason: string): void {
+function swap(proposals: (ColumnProposal | null)[], [x, y]: [number, number], reason: string): void {
   const [longitude, latitude] = [proposals[x], proposals[y]];
   if (!longitude || !latitude) return;
   proposals[x] = { ...latitude, unit: "deg", confidence: 0.4, reason };

@@ -31,7 +31,7 @@ export function describeColumn(
     return `${name} is ${what} as ${unit.words}${patternWords(meaning)}${quote(column.sample[0])}.`;
   const isFromStart = meaning.channel === "time" ? " from the start of the log" : "";
   const aside = unit.quantity === "pressure" && isForceChannel(meaning) ? " (a pressure, never shown as a force)" : "";
-  return `${name} is ${what} in ${unit.words}${isFromStart}${aside}${exampleWords(column, meaning, meaning.unit, options)}.`;
+  return `${name} is ${what} in ${unit.words}${isFromStart}${aside}${exampleWords(column, { ...meaning, unit: meaning.unit }, options)}.`;
 }
 
 function isForceChannel({ channel }: ColumnMeaning): boolean {
@@ -52,11 +52,10 @@ function patternWords(meaning: ColumnMeaning): string {
 
 function exampleWords(
   column: Pick<FoundColumn, "sample">,
-  meaning: ColumnMeaning,
-  unit: UnitId,
+  { unit, format }: ColumnMeaning & { unit: UnitId },
   options: { decimalComma?: boolean },
 ): string {
-  const poundsPerBushel = unit === "bu/ac" ? readBushelWeight(meaning.format) : undefined;
+  const poundsPerBushel = unit === "bu/ac" ? readBushelWeight(format) : undefined;
   if (poundsPerBushel === null) return "; give the weight of a bushel, such as 56 lb";
   const value = column.sample
     .map((text) => parseNumber(text, options.decimalComma))

@@ -25,7 +25,7 @@ export function describeFoundColumns(sampled: SampledColumns): { columns: FoundC
     return summary ? [{ name, unitCell: units?.[field] ?? null, summary }] : [];
   });
   const { proposals, shape } = guessColumns(evidence);
-  checkPositions(proposals, summaries, sampled.near, sampled.notes);
+  checkPositions(proposals, summaries, sampled);
   sampled.notes.set("unknown-unit", proposals.filter((proposal) => proposal?.unit === null).length);
   const columns = evidence.map(({ name, summary }, index) => {
     const proposal = proposals[index] ?? null;

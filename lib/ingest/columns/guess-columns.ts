@@ -34,7 +34,10 @@ function guessColumn(column: ColumnEvidence): ColumnProposal | null {
   const inRow = readRowNumber(tokens);
   const named = nameChannel(inRow?.rest ?? tokens) ?? nameChannel(tokeniseHeader(column.name));
   if (!named || column.summary.filled === 0) return null;
-  const { unit, format, trust, reason } = guessUnit(named.channel, unitWord, column.summary, column.name);
+  const { unit, format, trust, reason } = guessUnit(named.channel, unitWord, {
+    summary: column.summary,
+    header: column.name,
+  });
   const row = inRow && isRowable(named.channel) ? inRow.row : undefined;
   const rowTrust = row !== undefined && !inRow?.isNamed ? 0.97 : 1;
   return {

@@ -17,8 +17,7 @@ export interface GuessedUnit {
 export function guessUnit(
   channel: ChannelId,
   word: UnitWord | null,
-  summary: CellSummary,
-  header: string,
+  { summary, header }: { summary: CellSummary; header: string },
 ): GuessedUnit {
   if (channel === "time") return guessTimeUnit(word, summary, header);
   if (channel === "working") {

@@ -1,5 +1,4 @@
-import { isRowable } from "@/lib/ingest/channel-quantities";
-import { unitsForChannel } from "@/lib/ingest/channel-quantities";
+import { isRowable, unitsForChannel } from "@/lib/ingest/channel-quantities";
 import { stopReading } from "@/lib/ingest/ingest-error";
 import type { LogMapping, LogShape, MappedColumn } from "@/lib/ingest/mapping";
 import { readBushelWeight } from "@/lib/ingest/records/bushel-weight";
@@ -85,7 +84,7 @@ export function buildReadPlan(mapping: LogMapping, names: readonly string[]): Re
     pass: toNumberField(of("pass")[0]),
     row: rowColumn ? { field: rowColumn.field, firstRow: /^from 0$/i.test(rowColumn.format ?? "") ? 0 : 1 } : null,
     working: of("working").map((column) => column.field),
-    channels: planChannels(measured, mapping.shape, rows, names.length),
+    channels: planChannels(measured, mapping.shape, { rows, missingField: names.length }),
     rows,
     pressures: measured.filter(isPressureForForce).map((column) => column.name),
   };
@@ -212,15 +211,14 @@ function planPosition(columns: readonly PlacedColumn[], crs: string | undefined)
 function planChannels(
   measured: readonly PlacedColumn[],
   shape: LogShape,
-  rows: number,
-  missingField: number,
+  { rows, missingField }: { rows: number; missingField: number },
 ): ChannelPlan[] {
   const groups = new Map<ChannelId, PlacedColumn[]>();
   for (const column of measured) groups.set(column.channel, [...(groups.get(column.channel) ?? []), column]);
   return [...groups].map(([id, columns]) => {
     const perRow =
       shape === "long" ? isRowable(id) : shape === "wide" && columns.some((column) => column.row !== undefined);
-    checkRows(id, columns, shape, perRow);
+    checkRows(columns, shape, perRow);
     const unit = checkOneUnit(id, columns);
     const slots = perRow && shape === "wide" ? rows : 1;
     const fields = new Int32Array(slots).fill(missingField);
@@ -234,13 +232,13 @@ function planChannels(
   });
 }
 
-function checkRows(id: ChannelId, columns: readonly PlacedColumn[], shape: LogShape, perRow: boolean): void {
+function checkRows(columns: readonly PlacedColumn[], shape: LogShape, perRow: boolean): void {
   if (shape === "wide") {
     const bare = perRow ? columns.find((column) => column.row === undefined) : undefined;
     if (!bare) return;
     stopReading(
       "mapping-mismatch",
-      `Column '${bare.name}' is mapped to ${id} without a row, while other columns of ${id} have one. Give it a row or another channel.`,
+      `Column '${bare.name}' is mapped to ${bare.channel} without a row, while other columns of ${bare.channel} have one. Give it a row or another channel.`,
       { column: bare.name },
     );
   }

@@ -90,7 +90,7 @@ export class RecordCollector {
     return this.plan.shape === "long" ? this.rows : channel.fields.length;
   }
 
-  /** Reads a cell given as text by its column's kind. For readers of text. */
+  /** kernel: reads a cell given as text by its column's kind. For readers of text. */
   takeText(field: number, text: string, lineNumber: number, decimalComma = false): void {
     const kind = this.plan.kinds[field];
     if (kind === CELL.number) this.line[field] = this.orNote(parseNumber(text, decimalComma), text, field, lineNumber);
@@ -109,6 +109,7 @@ export class RecordCollector {
     return time.ms;
   }
 
+  /** kernel: the value, with a note when a cell that is not blank gave none. */
   private orNote(value: number, text: string, field: number, lineNumber: number): number {
     if (value !== value && !isMissing(text)) this.notes.add("unreadable-value", lineNumber, this.plan.names[field]);
     return value;

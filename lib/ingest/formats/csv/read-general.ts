@@ -31,7 +31,7 @@ export async function readGeneral(
     // Parsing again from the same start at every small chunk would cost the square of the row's length.
     if (rest.length < tried * 2) continue;
     const { rows, taken } = parseCsvText(rest, { ...dialect, isLast: false });
-    takeRows(rows, collector, state, dialect);
+    takeRows(rows, collector, { state, dialect });
     rest = rest.slice(taken);
     tried = rest.length;
     if (rest.length > LONGEST_ROW) stopUnclosedQuote(state.lineNumber + 1);
@@ -39,14 +39,13 @@ export async function readGeneral(
   rest += decoder.decode();
   const { rows, isOpen } = parseCsvText(rest, { ...dialect, isLast: true });
   if (isOpen) stopUnclosedQuote(state.lineNumber + 1);
-  takeRows(rows, collector, state, dialect);
+  takeRows(rows, collector, { state, dialect });
 }
 
 function takeRows(
   rows: readonly string[][],
   collector: RecordCollector,
-  state: GeneralState,
-  dialect: CsvDialect,
+  { state, dialect }: { state: GeneralState; dialect: CsvDialect },
 ): void {
   const { columnCount } = collector.plan;
   for (const row of rows) {

@@ -37,8 +37,8 @@ interface Candidate {
 /** The dialect of a text from its head; stops with `not-a-log` when the head is no table. `isWhole`: the head is the whole file. */
 export function sniffDialect(head: string, isWhole: boolean, name: string): CsvDialect {
   const newline = !head.includes("\n") && head.includes("\r") ? "\r" : "\n";
-  const text = cutSample(head, isWhole, newline);
-  const candidates = DELIMITERS.map((delimiter) => judge(text.text, delimiter, newline, text.isWhole));
+  const sample = cutSample(head, isWhole, newline);
+  const candidates = DELIMITERS.map((delimiter) => judge(sample, delimiter, newline));
   const best = candidates.reduce((a, b) => (b.score > a.score ? b : a));
   if (best.score <= 0) {
     const open = candidates.find((candidate) => candidate.isOpen && candidate.fields > 0);
@@ -52,22 +52,22 @@ export function sniffDialect(head: string, isWhole: boolean, name: string): CsvD
 }
 
 /** Enough of the head for 80 rows, cut at a line end. */
-function cutSample(head: string, isWhole: boolean, newline: string): { text: string; isWhole: boolean } {
+function cutSample(head: string, isWhole: boolean, newline: string): string {
   let end = -1;
   for (let rows = 0; rows < SNIFF_ROWS || end < SNIFF_CHARACTERS; rows++) {
     const next = head.indexOf(newline, end + 1);
-    if (next < 0) return { text: isWhole ? head : head.slice(0, end + 1), isWhole: true };
+    if (next < 0) return isWhole ? head : head.slice(0, end + 1);
     end = next;
   }
-  return { text: head.slice(0, end + 1), isWhole: true };
+  return head.slice(0, end + 1);
 }
 
 function isNumeric(cell: string, delimiter: string): boolean {
   return !Number.isNaN(parseNumber(cell, delimiter !== ",")) || !Number.isNaN(parseNumber(cell, true));
 }
 
-function judge(text: string, delimiter: string, newline: "\n" | "\r", isLast: boolean): Candidate {
-  const { rows, isOpen } = parseCsvText(text, { delimiter, newline, isLast, maxRows: SNIFF_ROWS });
+function judge(text: string, delimiter: string, newline: "\n" | "\r"): Candidate {
+  const { rows, isOpen } = parseCsvText(text, { delimiter, newline, isLast: true, maxRows: SNIFF_ROWS });
   const filled = rows.filter((row) => row.length > 1 || (row[0] ?? "").trim() !== "");
   const counts = new Map<number, number>();
   for (const row of filled) counts.set(row.length, (counts.get(row.length) ?? 0) + 1);

@@ -61,7 +61,10 @@ async function openLayer(source: ByteSource, options: ReadOptions, maxBytes = In
   if (records === 0) {
     stopReading("no-readings", `The shapefile in "${source.name}" holds no records. Export the log again.`);
   }
-  const { toDegrees, isDegrees } = judgeProjection(await readText(prj), points, source.name, notes);
+  const { toDegrees, isDegrees } = judgeProjection(await readText(prj), points, {
+    name: source.name,
+    notes,
+  });
   const point = isDegrees ? POINT_DEGREES : POINT_PLANE;
   const names = nameColumns([point.x, point.y, ...table.fields.map((field) => field.name)]);
   return { points, table, records, names, toDegrees, notes };
@@ -71,8 +74,7 @@ async function openLayer(source: ByteSource, options: ReadOptions, maxBytes = In
 function judgeProjection(
   prj: string | null,
   points: ShapePoints,
-  name: string,
-  notes: NoteBook,
+  { name, notes }: { name: string; notes: NoteBook },
 ): { toDegrees: ToDegrees | null; isDegrees: boolean } {
   if (prj === null || prj.trim() === "") {
     const isDegrees = points.x.every((x, i) => !(Math.abs(x) > 180) && !(Math.abs(points.y[i] ?? 0) > 180));
