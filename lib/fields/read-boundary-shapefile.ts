@@ -1,4 +1,5 @@
 import { unzipSync, type UnzipFileInfo } from "fflate";
+import proj4 from "proj4";
 import { parseShp } from "shpjs";
 import { BoundaryFileFailure } from "@/lib/fields/boundary-file-error";
 
@@ -46,14 +47,25 @@ function checkLength(name: string, shp: Uint8Array): void {
   }
 }
 
+/** A projection that nobody understands would leave metres to be taken for degrees. */
+function checkProjection(name: string, projection: string): void {
+  try {
+    proj4(projection);
+  } catch {
+    throw new BoundaryFileFailure("file-damaged", `The .prj beside ${name} names no projection that is known here.`);
+  }
+}
+
 function parseGeometries(name: string, shp: Uint8Array, prj: Uint8Array | undefined): unknown[] {
   checkLength(name, shp);
+  const projection = prj ? new TextDecoder().decode(prj) : undefined;
+  if (projection !== undefined) checkProjection(name, projection);
   try {
     // A copy of its own buffer: the parser reads from the buffer's start.
-    return parseShp(shp.slice(), prj ? new TextDecoder().decode(prj) : undefined);
+    return parseShp(shp.slice(), projection);
   } catch (cause) {
     const reason = cause instanceof Error ? cause.message : String(cause);
-    throw new BoundaryFileFailure("file-damaged", `${name} or its .prj could not be read: ${reason}`);
+    throw new BoundaryFileFailure("file-damaged", `${name} could not be read: ${reason}`);
   }
 }
 

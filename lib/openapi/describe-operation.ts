@@ -4,14 +4,11 @@ import type { FormPart, Operation, OperationReply } from "@/lib/openapi/operatio
 
 type Json = Record<string, unknown>;
 
-/** JSON Schema of a request (`input`) or a reply (`output`). */
+/** JSON Schema of a request (`input`) or a reply (`output`); the document names the dialect once for all. */
 function toSchema(schema: z.ZodType, io: "input" | "output"): Json {
-  const { $schema: _dialect, ...body } = z.toJSONSchema(schema, {
-    io,
-    unrepresentable: "any",
-    target: "draft-2020-12",
-  });
-  return body;
+  const whole: Json = { ...z.toJSONSchema(schema, { io, unrepresentable: "any", target: "draft-2020-12" }) };
+  delete whole.$schema;
+  return whole;
 }
 
 function describePathParameters(path: string): Json[] {

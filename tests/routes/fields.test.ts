@@ -1,4 +1,5 @@
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { adminDb } from "@/db/client";
 import { makeWorld, SQUARE, type World } from "@/tests/support/make-world";
 
 let world: World;
@@ -117,6 +118,35 @@ describe("fields", () => {
     const path = `/api/v1/fields/${String(id)}`;
     expect((await world.as("owner", { method: "DELETE", path })).status).toBe(204);
     await world.read("owner", { path, expect: 404 });
+  });
+});
+
+describe("deleting a field that holds logs", () => {
+  it("wants force, and then takes logs, files, shares and grants along", async () => {
+    const { id } = await addField("With a log", { boundary: SQUARE });
+    const path = `/api/v1/fields/${String(id)}`;
+    const key = "organisations/org_larkspurflats/uploads/aa11";
+    world.container.objects.set(key, new Uint8Array([1]));
+    await adminDb().$client.query(
+      `insert into logs (organisation_id, id, field_id, name, counts, file_name, file_bytes, sha256, status)
+       values ('org_larkspurflats', 'log_forced', $1, 'l',
+               '{"records":0,"rows":0,"readings":0,"flagged":0,"rejected":0,"passes":0}', 'a.csv', 1, 'aa11', 'failed')`,
+      [id],
+    );
+    const share = {
+      audience: "public",
+      layers: ["boundary"],
+      expiresAt: new Date(Date.now() + 86_400_000).toISOString(),
+    };
+    const { url } = await world.read("owner", { method: "POST", path: `${path}/shares`, body: share });
+    const kept = await world.read("owner", { method: "DELETE", path, expect: 409 });
+    expect(kept).toMatchObject({ code: "field_has_logs", logCount: 1 });
+    await world.read("owner", { method: "DELETE", path: `${path}?force=yes`, expect: 422 });
+    await world.read("owner", { method: "DELETE", path: `${path}?force=1`, expect: 204 });
+    await world.read("owner", { path: "/api/v1/logs/log_forced", expect: 404 });
+    expect(world.container.objects.has(key)).toBe(false);
+    const token = String(url).split("/s/")[1];
+    await world.read("stranger", { path: `/api/v1/shared/${token}`, expect: 404 });
   });
 });
 

@@ -70,8 +70,8 @@ function buildRequest(call: ApiCall): Request {
 export async function callApi(call: ApiCall): Promise<Response> {
   const request = buildRequest(call);
   const { folder, params } = findRoute(new URL(request.url).pathname);
-  const module = (await import(path.join(ROOT, folder, "route.ts"))) as Record<string, Handler | undefined>;
-  const handler = module[request.method];
+  const route = (await import(path.join(ROOT, folder, "route.ts"))) as Record<string, Handler | undefined>;
+  const handler = route[request.method];
   if (!handler) throw new Error(`${folder}/route.ts exports no ${request.method}`);
   return handler(request, { params: Promise.resolve(params) });
 }

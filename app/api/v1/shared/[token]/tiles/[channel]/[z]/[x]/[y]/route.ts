@@ -8,7 +8,10 @@ export const GET = withPublic<"token" | "channel" | "z" | "x" | "y">(async ({ co
   const opened = await openSharedRequest(request, params.token);
   const logId = sharedLogOfChannel(opened, params.channel);
   const input = parseTileInput({ ...params, logId }, url);
-  return tileResponse(await readTile(container, opened.scope, input), { input, request, url });
+  const response = tileResponse(await readTile(container, opened.scope, input), { input, request, url });
+  // Asked for again each time: a link that was withdrawn must not go on drawing from the visitor's cache.
+  response.headers.set("cache-control", "private, no-cache");
+  return response;
 });
 
 export {
