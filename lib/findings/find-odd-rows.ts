@@ -3,7 +3,7 @@ import type { Finding } from "@/lib/findings/finding";
 import { makeFinding, sayRows, startSentence } from "@/lib/findings/make-finding";
 import { passInterval } from "@/lib/findings/pass-interval";
 import { stretchPlace, wholeRowPlace } from "@/lib/findings/place-lines";
-import { rowStep, type ChannelEvidence } from "@/lib/findings/row-evidence";
+import { rowSteps, type ChannelEvidence, type RowStep } from "@/lib/findings/row-evidence";
 import { VERDICT_THRESHOLDS, type VerdictInput } from "@/lib/findings/verdict-input";
 import { rowSeries } from "@/lib/statistics/row-series";
 import { longestStretch, underTargetBelowN } from "@/lib/statistics/row-shares";
@@ -12,22 +12,47 @@ const METHOD =
   "Robust z of the row's distance-weighted median deviation from the median of the other rows at each record " +
   "(Iglewicz & Hoaglin 1993, limit 3.5) and more than 5 % of the median of all rows; interval by bootstrap over passes.";
 
-/** Rows that stand out from the rest: one finding a row, or one for rows side by side, which need not be the rows' fault. */
+/**
+ * Rows that stand out from the rest: one finding a row; one for rows side by side, or that differ on some passes only, which
+ * need not be the rows' fault; and a remark on wheel tracks.
+ */
 export function findOddRows(input: VerdictInput): Finding[] {
   const evidence = [input.margin, input.downforce, input.resistance].filter((one) => one !== null);
   const said = new Set<number>();
   const findings = evidence.flatMap((one) => {
     const flagged = one.statistics.items.filter((item) => item.flagged).map((item) => item.row);
-    const made = sideBySide(flagged).flatMap((run) => {
-      const left = run.filter((row) => !said.has(row));
-      if (run.length >= SIDE_BY_SIDE) return left.length > 0 ? [sayRun(input, run, one)] : [];
-      return left.map((row) => sayRow(input, row, one));
-    });
+    const steps = rowSteps(input, one, [...flagged, ...tracksThatMatter(one)]);
+    const unsaid = (rows: number[]) => rows.filter((row) => !said.has(row));
+    const runs = sideBySide(flagged);
+    const alone = unsaid(runs.filter((run) => run.length < SIDE_BY_SIDE).flat());
+    const made = [
+      ...alone
+        .filter((row) => steps.get(row)!.constant)
+        .map((row) => sayRow(input, one, { row, step: steps.get(row)! })),
+      ...runs
+        .filter((run) => run.length >= SIDE_BY_SIDE && unsaid(run).length > 0)
+        .map((run) => sayRun(input, one, run)),
+      ...saySomePasses(
+        one,
+        alone.filter((row) => !steps.get(row)!.constant),
+        steps,
+      ),
+    ];
     for (const row of flagged) said.add(row);
-    return made;
+    return [...made, ...sayWheelTracks(one, steps)];
   });
-  return [...findings, ...sayWheelTracks(evidence)];
+  return firstOfEach(findings, ["wheel-tracks", "rows-some-passes"]);
 }
+
+/** Keeps one finding of each of the given kinds: several channels tell the same tale. */
+function firstOfEach(findings: Finding[], kinds: Finding["kind"][]): Finding[] {
+  return findings.filter(
+    (one, k) => !kinds.includes(one.kind) || findings.findIndex((other) => other.kind === one.kind) === k,
+  );
+}
+
+const PASS_AT_AN_ANGLE =
+  "Drill one pass at an angle of 10 to 30 degrees, or shifted by half a width: what stays with the rows is the machine's.";
 
 /** As many rows differing side by side need not be the rows' own fault. */
 const SIDE_BY_SIDE = 3;
@@ -62,8 +87,11 @@ const WORDING: Record<string, { below: string; above: string; check: string }> =
   },
 };
 
-function sayRow(input: VerdictInput, row: number, evidence: ChannelEvidence): Finding {
-  const step = rowStep(input, evidence, row);
+function sayRow(
+  input: VerdictInput,
+  evidence: ChannelEvidence,
+  { row, step }: { row: number; step: RowStep },
+): Finding {
   const words = WORDING[evidence.statistics.channel] ?? WORDING.resistance!;
   const fewPasses = input.placed.passes.length < VERDICT_THRESHOLDS.minPassesToRank;
   const large =
@@ -119,7 +147,7 @@ function worstPlace({ placed, margin, distances }: VerdictInput, row: number): F
   return wholeRowPlace(placed, row);
 }
 
-function sayRun(input: VerdictInput, rows: number[], evidence: ChannelEvidence): Finding {
+function sayRun(input: VerdictInput, evidence: ChannelEvidence, rows: number[]): Finding {
   const deviations = rows.map((row) => evidence.statistics.deviations[row - 1]!);
   const largest = deviations.reduce((most, value) => (Math.abs(value) > Math.abs(most) ? value : most), 0);
   return makeFinding({
@@ -134,30 +162,51 @@ function sayRun(input: VerdictInput, rows: number[], evidence: ChannelEvidence):
     confidence: "low",
     method: METHOD,
     place: wholeRowPlace(input.placed, rows[rows.length >> 1]!),
-    check:
-      "Drill one pass at an angle of 10 to 30 degrees, or shifted by half a width: what stays with the rows is the machine's.",
+    check: PASS_AT_AN_ANGLE,
     rows,
   });
 }
 
-/** One remark for rows that stand out alike on both sides; they are not held against the rows. */
-function sayWheelTracks(evidence: ChannelEvidence[]): Finding[] {
-  const tracked = evidence.find((one) => tracksThatMatter(one).length > 0);
-  if (!tracked) return [];
-  const rows = tracksThatMatter(tracked);
-  const typical = rows.reduce((sum, row) => sum + tracked.statistics.deviations[row - 1]!, 0) / rows.length;
+/** Rows beyond the limits over the whole log, yet not on nearly every pass: the ground may have done it. */
+function saySomePasses(evidence: ChannelEvidence, rows: number[], steps: Map<number, RowStep>): Finding[] {
+  const largest = rows.map((row) => steps.get(row)!).sort((a, b) => Math.abs(b.deviation) - Math.abs(a.deviation))[0];
+  if (!largest) return [];
+  return [
+    makeFinding({
+      kind: "rows-some-passes",
+      severity: "look",
+      sentenceTemplate:
+        `${startSentence(sayRows(rows))} ${rows.length === 1 ? "differs" : "differ"} from the others by up to {difference}, but on ` +
+        "some passes only: consistent with the ground met there, such as residue lying along the passes. This log cannot blame the rows.",
+      values: { difference: { value: Math.abs(largest.deviation), unit: evidence.channel.unit } },
+      value: largest.deviation,
+      unit: evidence.channel.unit,
+      confidence: "low",
+      method: `${METHOD} A row is held to it where three quarters of the passes show at least 0.4 of the deviation.`,
+      check: PASS_AT_AN_ANGLE,
+      rows,
+    }),
+  ];
+}
+
+/** One remark for rows that stand out alike on both sides on nearly every pass; they are not held against the rows. */
+function sayWheelTracks(evidence: ChannelEvidence, steps: Map<number, RowStep>): Finding[] {
+  const rows = tracksThatMatter(evidence);
+  if (rows.length === 0 || rows.some((row) => !steps.get(row)!.constant)) return [];
+  const typical = rows.reduce((sum, row) => sum + steps.get(row)!.deviation, 0) / rows.length;
   return [
     makeFinding({
       kind: "wheel-tracks",
       severity: "look",
       sentenceTemplate: `${startSentence(sayRows(rows))} differ alike on both sides of the machine, by {difference}: consistent with wheel tracks.`,
-      values: { difference: { value: Math.abs(typical), unit: tracked.channel.unit } },
+      values: { difference: { value: Math.abs(typical), unit: evidence.channel.unit } },
       value: typical,
-      unit: tracked.channel.unit,
+      unit: evidence.channel.unit,
       confidence: "medium",
       method:
-        "Rows beyond a robust z of 3.5 whose mirror row about the centre line differs the same way, by at least half as much.",
-      check: "Compare the ground behind those rows with the ground between: firmness and depth.",
+        "Rows beyond a robust z of 3.5 whose mirror row about the centre line differs the same way, by at least half as much, on nearly every pass.",
+      check:
+        "Compare the ground behind those rows with the ground between: firmness and depth. Residue lying along the passes could look the same.",
       caution: CAUTIONS.digging,
       rows,
     }),

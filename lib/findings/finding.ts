@@ -13,6 +13,7 @@ export type FindingPlace = z.infer<typeof FindingPlace>;
 export const FINDING_KINDS = [
   "row-stands-out",
   "rows-side-by-side",
+  "rows-some-passes",
   "wheel-tracks",
   "rows-under-target",
   "rows-at-limit",

@@ -44,6 +44,7 @@ const KIND_ORDER: Finding["kind"][] = [
   "weight-short",
   "contact-lost",
   "rows-side-by-side",
+  "rows-some-passes",
   "rows-at-limit",
   "target-held",
   "rows-alike",

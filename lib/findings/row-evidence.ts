@@ -2,7 +2,7 @@ import { resolveChannel, type ResolvedChannel } from "@/lib/channels/resolve-cha
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import { median } from "@/lib/statistics/median";
 import { deviationFromOthers } from "@/lib/statistics/row-deviation";
-import { rowSeries } from "@/lib/statistics/row-series";
+import { rowSeries, type RowSeries } from "@/lib/statistics/row-series";
 import { distanceShare } from "@/lib/statistics/row-shares";
 import { rowStatistics, type RowStatistics } from "@/lib/statistics/row-statistics";
 
@@ -29,18 +29,36 @@ export interface RowStep {
   shareSameWay: number;
   /** Typical deviation in each pass, for the interval. */
   byPass: number[];
+  /**
+   * True where nearly every pass shows it, whichever way it was driven: then it goes with the machine. A band of residue
+   * driven along falls on other rows when the machine comes back.
+   */
+  constant: boolean;
 }
 
-/** How far a row (from 1) stands from the others, how constantly, and pass by pass. */
-export function rowStep(
+/** A pass shows a deviation when it has its sign and at least this share of its size. */
+const SHOWS_FROM = 0.4;
+/** Nearly every pass. */
+const CONSTANT_FROM = 0.75;
+
+/** How far each of `rows` (from 1) stands from the others, how constantly, and pass by pass. */
+export function rowSteps(
   { placed, distances }: { placed: PlacedLog; distances: Float32Array },
   evidence: ChannelEvidence,
-  row: number,
-): RowStep {
-  const deviation = evidence.statistics.deviations[row - 1]!;
-  const values = deviationFromOthers(evidence.channel.values, evidence.channel.rows);
-  const series = rowSeries(placed, { values, rows: evidence.channel.rows }, distances, row - 1);
-  const sameWay = (value: number) => (deviation < 0 ? value < 0 : value > 0);
+  rows: readonly number[],
+): Map<number, RowStep> {
+  if (rows.length === 0) return new Map();
+  const channel = { ...evidence.channel, values: deviationFromOthers(evidence.channel.values, evidence.channel.rows) };
+  return new Map(
+    rows.map((row) => {
+      const series = rowSeries(placed, channel, distances, row - 1);
+      return [row, describeStep(placed, series, evidence.statistics.deviations[row - 1]!)];
+    }),
+  );
+}
+
+function describeStep(placed: PlacedLog, series: RowSeries, deviation: number): RowStep {
+  const sign = deviation < 0 ? -1 : 1;
   const readings = new Map<number, number[]>();
   series.records.forEach((record, k) => {
     const pass = placed.passOf[record]!;
@@ -49,5 +67,11 @@ export function rowStep(
     readings.set(pass, list);
   });
   const byPass = [...readings.values()].filter((list) => list.length >= 10).map((list) => median(list));
-  return { deviation, shareSameWay: distanceShare(series, sameWay) ?? 0, byPass };
+  const showing = byPass.filter((value) => sign * value >= SHOWS_FROM * Math.abs(deviation));
+  return {
+    deviation,
+    shareSameWay: distanceShare(series, (value) => sign * value > 0) ?? 0,
+    byPass,
+    constant: showing.length >= CONSTANT_FROM * byPass.length,
+  };
 }

@@ -70,8 +70,9 @@ const PAIR_LIMIT = 2;
  *
  * Rows that stand out together and evenly about the centre line are where tractor or carrying wheels ran; they are
  * compared within their own group: their z counts from the group's median (of two rows: from the one nearer the rest),
- * with the same spread. All other rows keep the plain z. More rows side by side than a wheel is wide (`maxTrackRows`), or
- * a block across the centre line, are no wheel track: a band of residue driven along would look the same.
+ * with the same spread. All other rows keep the plain z. More rows side by side than a wheel is wide (`maxTrackRows`), a
+ * block across the centre line, or more than two rows at either rim are no wheel track: a band of residue driven along would
+ * look the same.
  */
 export function scoreRows(medianDeviations: ArrayLike<number>, options: { maxTrackRows?: number } = {}): RowScores {
   const centre = median(medianDeviations);
@@ -118,7 +119,8 @@ function findWheelTracks(deviation: Float64Array, spread: number, maxTrackRows: 
     let end = first;
     while (end < half && member[end]) end++;
     if (end === first) continue;
-    if (end - first <= maxTrackRows && end < half) {
+    const atTheRim = first === 0 && end > 2;
+    if (end - first <= maxTrackRows && end < half && !atTheRim) {
       for (let row = first; row < end; row++) groups[pairs[row]!.high ? "high" : "low"].push(row, last - row);
     }
     first = end;

@@ -68,6 +68,17 @@ describe("a sound machine", () => {
   }, 240_000);
 });
 
+describe("a field drilled along its residue bands", () => {
+  it("gets neither a row nor a wheel track blamed for the band, on 20 seeds", () => {
+    const along = { ...BANDS, headingDeg: 0, periodM: 6 };
+    for (let seed = 1; seed <= 20; seed++) {
+      const verdict = judgeSimulated({ ...FIELD, seed, bands: along });
+      const blaming = verdict.findings.filter((one) => one.kind === "row-stands-out" || one.kind === "wheel-tracks");
+      expect({ seed, blaming: blaming.map((one) => one.sentence) }).toEqual({ seed, blaming: [] });
+    }
+  }, 240_000);
+});
+
 /** What a verdict says, without the digits that a tenth of the readings would move. */
 function claims(verdict: PassVerdict) {
   const { rowsUnderTarget, rowsAtLimit, rowsStandingOut } = verdict;

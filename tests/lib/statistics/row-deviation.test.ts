@@ -67,4 +67,10 @@ describe("scoreRows", () => {
     expect(wheelTrackRows).toEqual([]);
     expect(z[10]).toBeGreaterThan(3.5);
   });
+
+  it("takes four rows at either rim for no wheel track, two for one", () => {
+    const rim = (count: number) => wobble.map((value, row) => value + (row < count || row >= 24 - count ? 200 : 0));
+    expect(scoreRows(rim(4), { maxTrackRows: 4 }).wheelTrackRows).toEqual([]);
+    expect(scoreRows(rim(2), { maxTrackRows: 4 }).wheelTrackRows).toEqual([1, 2, 23, 24]);
+  });
 });
