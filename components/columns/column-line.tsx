@@ -8,6 +8,8 @@ import { sayColumn } from "@/components/columns/say-meaning";
 import { Button } from "@/components/ui/button";
 import { StateMark } from "@/components/ui/state-mark";
 
+const SHOWN_SAMPLES = 3;
+
 export interface ColumnLineProps {
   column: FoundColumn;
   choice: ColumnChoice;
@@ -26,14 +28,16 @@ export function ColumnLine({ column, choice, problem, onChange }: ColumnLineProp
         <div className="min-w-0 flex-1 basis-72 space-y-1">
           <Sentence>{sayColumn(column, choice)}</Sentence>
           <p className="break-words text-table text-ink-soft">
-            <span className="tabular">{column.sample.join(" · ") || "empty in the lines looked at"}</span>
             {column.proposal ? (
               <>
-                {" — "}
                 <ConfidenceMark confidence={column.proposal.confidence} seen={choice.seen} />
                 {waiting && column.proposal.reason ? `: ${column.proposal.reason}` : null}
+                {" · "}
               </>
             ) : null}
+            <span className="tabular">
+              {column.sample.slice(0, SHOWN_SAMPLES).join(" · ") || "empty in the lines looked at"}
+            </span>
           </p>
         </div>
         <div className="flex flex-wrap gap-2">

@@ -46,7 +46,7 @@ export function GroupCard({ group, choices, problems, onChange }: GroupCardProps
             </p>
           )}
           <p className="text-table text-ink-soft">
-            {names.length} columns · <ConfidenceMark confidence={lowest} seen={!waiting} />
+            <ConfidenceMark confidence={lowest} seen={!waiting} /> · {names.length} columns
           </p>
         </div>
         <div className="flex flex-wrap gap-2">

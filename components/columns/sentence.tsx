@@ -26,7 +26,7 @@ export function ConfidenceMark({ confidence, seen }: { confidence: number; seen:
   const text = word === "please check" && seen ? "looked at" : word;
   const state = text === "please check" ? "look" : text === "likely" ? "none" : "fine";
   return (
-    <span className="inline-flex items-center gap-1.5">
+    <span className="inline-flex items-center gap-1.5 align-top">
       <StateMark state={state} />
       <span className={state === "look" ? "font-semibold text-straw-deep" : undefined}>{text}</span>
     </span>

@@ -26,5 +26,5 @@ export function formatBytes(bytes: number): string {
     step++;
   }
   const digits = step === 0 || value >= 100 ? 0 : 1;
-  return `${value.toFixed(digits)}\u2009${BYTE_STEPS[step]}`;
+  return `${value.toFixed(digits)}\u202f${BYTE_STEPS[step]}`;
 }

@@ -1,11 +1,10 @@
 import { formatBytes, formatMoment } from "@/components/ui/format-date";
 import { Notice } from "@/components/ui/notice";
+import { formatNumber } from "@/lib/units/format-quantity";
 import type { Log } from "@/lib/schemas/logs";
 
-const COUNT = new Intl.NumberFormat("en-US", { useGrouping: true });
-
-function count(value: number): string {
-  return COUNT.format(value).replaceAll(",", "\u202f");
+function formatCount(value: number): string {
+  return formatNumber(value, 0);
 }
 
 /** What was found in the file, and what was noticed while reading it. */
@@ -16,12 +15,12 @@ export function LogFacts({ log }: { log: Log }) {
   ];
   if (log.counts.records > 0) {
     facts.push(
-      ["Records", count(log.counts.records)],
-      ["Rows", count(log.counts.rows)],
-      ["Readings", count(log.counts.readings)],
-      ["Passes", count(log.counts.passes)],
-      ["Records with a flag", count(log.counts.flagged)],
-      ["Lines not used", count(log.counts.rejected)],
+      ["Records", formatCount(log.counts.records)],
+      ["Rows", formatCount(log.counts.rows)],
+      ["Readings", formatCount(log.counts.readings)],
+      ["Passes", formatCount(log.counts.passes)],
+      ["Records with a flag", formatCount(log.counts.flagged)],
+      ["Lines not used", formatCount(log.counts.rejected)],
     );
   }
   return (
