@@ -58,7 +58,7 @@ function OpenLog({ field, log, basemap, picker }: OpenLogProps) {
   const [book] = useState(() => {
     const { log: addressLog, ...address } = readAddress(new URLSearchParams(search.toString()));
     // Pass, row and view in an address belong to the log it names, not to another one.
-    const start = addressLog === log.id ? address : {};
+    const start = addressLog === log.id ? address : { channel: address.channel };
     const channels = channelsOf(log);
     const channel = start.channel && channels.includes(start.channel) ? start.channel : (channels[0] ?? "rowSpeed");
     return {

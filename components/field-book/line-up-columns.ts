@@ -1,7 +1,7 @@
 import type { DataColumn } from "@/components/ui/data-table";
 import type { RowStatisticsBody, RowStatisticsItem } from "@/lib/schemas/logs";
 import { displayUnit, type UnitSystem } from "@/lib/units/display-unit";
-import { formatQuantity } from "@/lib/units/format-quantity";
+import { formatQuantity, type FormattedQuantity } from "@/lib/units/format-quantity";
 
 type NumberField = {
   [Key in keyof RowStatisticsItem]: RowStatisticsItem[Key] extends number | null ? Key : never;
@@ -74,8 +74,13 @@ function numberColumn({ field, header, unit, channel, system }: NumberColumnOpti
       const value = item[field];
       return value === null ? undefined : Number((value / factor).toPrecision(7));
     },
-    cell: (item) => formatQuantity(item[field], unit, system, options).text,
+    cell: (item) => bareNumber(formatQuantity(item[field], unit, system, options)),
   };
+}
+
+/** The number alone: its unit stands in the header. */
+function bareNumber({ text, unit }: FormattedQuantity): string {
+  return unit === "" || !text.endsWith(unit) ? text : text.slice(0, -unit.length).trim();
 }
 
 /** The rows as tab-separated text, for pasting into a sheet. */

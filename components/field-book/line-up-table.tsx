@@ -29,7 +29,7 @@ export function LineUpTable({ statistics, onClose }: LineUpTableProps) {
     );
   };
   return (
-    <section aria-labelledby="line-up-table-title" className="h-full overflow-auto bg-paper px-4 py-3">
+    <section aria-labelledby="line-up-table-title" className="relative h-full overflow-auto bg-paper px-4 py-3">
       <div className="mb-2 flex flex-wrap items-center justify-between gap-2">
         <h2 id="line-up-table-title" className="text-section">
           Line-up, {name.toLowerCase()}, weighted by distance

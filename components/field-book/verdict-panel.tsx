@@ -110,7 +110,7 @@ export function rowWords(rows: readonly number[]): string {
 /** What to check, and what to mind while doing it: folded, so that all findings can be seen at once. */
 function CheckWords({ finding, open }: { finding: Finding; open: boolean }) {
   return (
-    <details open={open} className="text-table text-ink-soft">
+    <details open={open} className="text-table text-ink-soft open:basis-full">
       <summary className="flex min-h-11 items-center gap-1 text-slate md:min-h-6">
         <ChevronRight size={14} aria-hidden className="[details[open]_&]:rotate-90" />
         What to check{finding.caution ? ", and a caution" : ""}
@@ -146,12 +146,14 @@ function FindingItem({ finding, open }: { finding: Finding; open: boolean }) {
           <span className="sr-only">{word}: </span>
           {sentenceOf(finding, system)}
         </p>
-        {finding.check || finding.caution ? <CheckWords finding={finding} open={open} /> : null}
-        {bounds || row !== null ? (
-          <button type="button" onClick={seeIt} className="min-h-11 text-table text-slate underline md:min-h-6">
-            See it{row !== null ? `: row ${row}` : " on the map"}
-          </button>
-        ) : null}
+        <div className="flex flex-wrap items-start justify-between gap-x-4">
+          {finding.check || finding.caution ? <CheckWords finding={finding} open={open} /> : <span />}
+          {bounds || row !== null ? (
+            <button type="button" onClick={seeIt} className="min-h-11 text-table text-slate underline md:min-h-6">
+              See it{row !== null ? `: row ${row}` : " on the map"}
+            </button>
+          ) : null}
+        </div>
       </div>
     </li>
   );

@@ -1,0 +1,76 @@
+import { act, screen, within } from "@testing-library/react";
+import userEvent from "@testing-library/user-event";
+import { beforeAll, describe, expect, it } from "vitest";
+import { LineUpChart } from "@/components/field-book/line-up-chart";
+import { lineUpColumns, lineUpText } from "@/components/field-book/line-up-columns";
+import { LineUpTable } from "@/components/field-book/line-up-table";
+import { csvCell } from "@/components/ui/write-csv";
+import { giveElementsSize, renderInBook, STATISTICS } from "./render-in-book";
+
+beforeAll(() => giveElementsSize(380, 260));
+
+describe("the line-up's chart", () => {
+  it("offers every row, and a click lights it everywhere", async () => {
+    const { store } = renderInBook(<LineUpChart statistics={STATISTICS} classes={null} />);
+    expect(screen.getAllByRole("option")).toHaveLength(8);
+    await userEvent.click(screen.getByRole("option", { name: "Row 5, stands out" }));
+    expect(store.getState().row).toBe(5);
+    expect(screen.getByRole("option", { name: "Row 5, stands out" })).toHaveAttribute("aria-selected", "true");
+  });
+
+  it("can be walked through with the arrow keys, stopping at the ends", async () => {
+    const { store } = renderInBook(<LineUpChart statistics={STATISTICS} classes={null} />, { state: { row: 7 } });
+    act(() => screen.getByRole("listbox").focus());
+    await userEvent.keyboard("{ArrowRight}{ArrowRight}{ArrowRight}");
+    expect(store.getState().row).toBe(8);
+    await userEvent.keyboard("{ArrowLeft}{ArrowLeft}");
+    expect(store.getState().row).toBe(6);
+  });
+
+  it("names what stands out by a shape of its own, not by colour alone", () => {
+    const { container } = renderInBook(<LineUpChart statistics={STATISTICS} classes={null} />);
+    const marks = [...container.querySelectorAll("[data-row] rect[fill='#9A4A2C']")];
+    expect(marks.map((mark) => mark.closest("[data-row]")?.getAttribute("data-row"))).toEqual(["5"]);
+  });
+});
+
+describe("the line-up's table", () => {
+  it("shows numbers in the person's units", () => {
+    renderInBook(<LineUpTable statistics={STATISTICS} onClose={() => undefined} />, { system: "imperial" });
+    const row = screen.getByRole("button", { name: "Show row 5 everywhere" }).closest("tr")!;
+    // 300 N / 4.4482216152605 = 67.4 lbf; 1450.5 m / 0.3048 = 4758.9 ft (NIST SP 811).
+    expect(within(row).getByText("67")).toBeInTheDocument();
+    expect(within(row).getByText("4759")).toBeInTheDocument();
+    expect(screen.getByRole("columnheader", { name: "Median, lbf" })).toBeInTheDocument();
+  });
+
+  it("sorts by a column", async () => {
+    renderInBook(<LineUpTable statistics={STATISTICS} onClose={() => undefined} />);
+    await userEvent.click(screen.getByRole("button", { name: "Median, N" }));
+    const first = screen.getAllByRole("button", { name: /everywhere$/ })[0]!;
+    expect(first).toHaveAccessibleName("Show row 5 everywhere");
+  });
+
+  it("finds rows by what is written in them", async () => {
+    renderInBook(<LineUpTable statistics={STATISTICS} onClose={() => undefined} />);
+    await userEvent.type(screen.getByRole("searchbox"), "lower than");
+    expect(screen.getAllByRole("button", { name: /everywhere$/ })).toHaveLength(1);
+  });
+
+  it("keeps missing apart from 0 in what is copied, and guards formulas", () => {
+    const columns = lineUpColumns(STATISTICS, "metric");
+    const lines = lineUpText(columns, STATISTICS.items).split("\n");
+    const header = lines[0]!.split("\t");
+    const cells = lines[5]!.split("\t");
+    expect(cells[header.indexOf("At the limit, of distance, %")]).toBe("");
+    expect(cells[header.indexOf("Contact lost, of distance, %")]).toBe("0");
+    expect(cells[header.indexOf("Under target, of distance, %")]).toBe("81");
+    expect(cells.at(-1)).toBe("'=lower than the others");
+    expect(csvCell("=1+1")).toBe("'=1+1");
+  });
+
+  it("holds every number of the statistics", () => {
+    const ids = lineUpColumns(STATISTICS, "metric").map((column) => column.id);
+    expect(ids).toEqual(expect.arrayContaining(Object.keys(STATISTICS.items[0]!)));
+  });
+});

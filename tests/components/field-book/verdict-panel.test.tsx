@@ -1,0 +1,91 @@
+import { screen } from "@testing-library/react";
+import userEvent from "@testing-library/user-event";
+import { describe, expect, it } from "vitest";
+import { rowWords, VerdictPanel } from "@/components/field-book/verdict-panel";
+import type { Finding, VerdictBody } from "@/lib/schemas/logs";
+import { renderInBook } from "./render-in-book";
+
+function finding(part: Partial<Finding>): Finding {
+  return {
+    id: "f1",
+    kind: "row",
+    severity: "look",
+    sentence: "Row 5 carried 151 N less than its neighbours.",
+    value: 151,
+    unit: "N",
+    interval: null,
+    confidence: "high",
+    method: "row deviation",
+    place: null,
+    check: "Check its disc and bushing.",
+    caution: null,
+    ...part,
+  };
+}
+
+const VERDICT: VerdictBody = {
+  rowsUnderTarget: [3, 5],
+  rowsAtLimit: [],
+  weight: { headroomN: null, shareLiftedM2: null, state: "unknown" },
+  findings: [
+    finding({ id: "fine", severity: "ok", sentence: "Speed was even." }),
+    finding({
+      id: "row-5",
+      severity: "act",
+      row: 5,
+      sentenceTemplate: "Row 5 carried {less} less than its neighbours.",
+      values: { less: { value: 151, unit: "N" } },
+      place: {
+        type: "LineString",
+        coordinates: [
+          [-98.61, 38.41],
+          [-98.6, 38.42],
+        ],
+      },
+      caution: "Lower the machine before reaching under it.",
+    }),
+  ],
+};
+
+describe("the verdict", () => {
+  it("puts one number first and the pressing findings before the rest", () => {
+    renderInBook(<VerdictPanel verdict={VERDICT} rows={8} trouble={false} roomy />);
+    expect(screen.getByText("rows ran under target")).toBeInTheDocument();
+    expect(screen.getAllByRole("listitem").map((item) => item.dataset.severity)).toEqual(["act", "ok"]);
+  });
+
+  it("says numbers in the reader's units", () => {
+    renderInBook(<VerdictPanel verdict={VERDICT} rows={8} trouble={false} roomy />, { system: "imperial" });
+    // 151 N = 33.9 lbf (NIST SP 811).
+    expect(screen.getByText(/Row 5 carried 34 lbf less/)).toBeInTheDocument();
+  });
+
+  it("shows the caution beside the check", () => {
+    renderInBook(<VerdictPanel verdict={VERDICT} rows={8} trouble={false} roomy />);
+    expect(screen.getByText(/Lower the machine before reaching under it/)).toBeVisible();
+  });
+
+  it("moves selection and map only when asked", async () => {
+    const { store } = renderInBook(<VerdictPanel verdict={VERDICT} rows={8} trouble={false} roomy />);
+    expect(store.getState().row).toBeNull();
+    expect(store.getState().frame).toBeNull();
+    await userEvent.click(screen.getByRole("button", { name: "See it: row 5" }));
+    expect(store.getState().row).toBe(5);
+    expect(store.getState().frame?.bounds).toEqual([-98.61, 38.41, -98.6, 38.42]);
+    await userEvent.click(screen.getByRole("button", { name: "See it: row 5" }));
+    expect(store.getState().row).toBe(5);
+    expect(store.getState().frame?.wish).toBe(2);
+  });
+
+  it("says so when it could not be fetched", () => {
+    renderInBook(<VerdictPanel verdict={undefined} rows={8} trouble roomy />);
+    expect(screen.getByRole("alert")).toHaveTextContent("could not be fetched");
+  });
+
+  it("names rows the way people do", () => {
+    expect(rowWords([17])).toBe("Row 17");
+    expect(rowWords([3, 4, 17])).toBe("Rows 3, 4 and 17");
+    expect(rowWords([9, 3, 4, 5, 6, 7, 8])).toBe("Rows 3 to 9");
+    expect(rowWords([1, 2, 3, 10])).toBe("Rows 1 to 3 and 10");
+  });
+});
