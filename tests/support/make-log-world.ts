@@ -48,6 +48,12 @@ export function fixtureMachine(): Record<string, unknown> {
   return truth.machine;
 }
 
+/** Runs a step the first time and answers with the same promise afterwards. */
+function once(work: () => Promise<void>): () => Promise<void> {
+  let running: Promise<void> | undefined;
+  return () => (running ??= work());
+}
+
 const SETTLED = ["ready", "failed", "needs-mapping"];
 
 export async function makeLogWorld(changes: Record<string, string> = {}): Promise<LogWorld> {
@@ -109,8 +115,9 @@ export async function makeLogWorld(changes: Record<string, string> = {}): Promis
     },
     startWorker: async () => {
       const worker = await startWorker(createContainer(env));
-      workers.push(worker);
-      return worker;
+      const stop = once(worker.stop);
+      workers.push({ stop });
+      return { stop };
     },
     storedKeys: async () => {
       const keys: string[] = [];

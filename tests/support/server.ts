@@ -3,7 +3,7 @@ import { mkdtempSync, rmSync } from "node:fs";
 import { tmpdir } from "node:os";
 import path from "node:path";
 import { Client } from "pg";
-import { DEMO_PASSWORD } from "@/db/seed/organisations";
+import { DEMO_PASSWORD } from "@/lib/access/demo-accounts";
 import { runNode, startNode, waitForAnswer, type Child } from "@/scripts/child-process";
 import { findFreePort } from "@/scripts/find-port";
 

@@ -1,4 +1,4 @@
-import { and, eq, isNull, sql } from "drizzle-orm";
+import { and, eq, inArray, isNull, sql } from "drizzle-orm";
 import { drizzle } from "drizzle-orm/node-postgres";
 import type { PoolClient } from "pg";
 import { from as copyFrom } from "pg-copy-streams";
@@ -67,7 +67,19 @@ async function switchVersion(client: PoolClient, input: NewVersion): Promise<boo
     .set({ ...input.change, version, updatedAt: sql`now()` })
     .where(isOurs)
     .returning({ id: schema.logs.id });
-  return changed.length > 0;
+  if (changed.length === 0) return false;
+  // The job ends in the very moment the log is ready: no worker that dies between the two leaves one open.
+  await tx
+    .update(schema.jobs)
+    .set({ state: "done", endedAt: sql`now()` })
+    .where(
+      and(
+        eq(schema.jobs.organisationId, organisationId),
+        eq(schema.jobs.subject, logId),
+        inArray(schema.jobs.state, ["queued", "running"]),
+      ),
+    );
+  return true;
 }
 
 async function removeVersions(client: PoolClient, input: NewVersion, which: string): Promise<void> {

@@ -116,6 +116,4 @@ async function store(
     progress.signal.throwIfAborted();
     throw new LogInterrupted("cancelled");
   }
-  const scope = workerScope(log.organisationId);
-  await withOrganisation(scope, (tx) => endJobs(tx, scope, { subject: log.id, state: "done" }));
 }
