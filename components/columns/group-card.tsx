@@ -72,7 +72,7 @@ export function GroupCard({ group, choices, problems, onChange }: GroupCardProps
               ?.replaceAll("#", "")
               .replace(/[_\s-]+$/, "") || "column"
           }
-          onChange={(patch) => onChange(names, { ...withoutRow(patch), seen: true })}
+          onChange={(patch) => onChange(names, { ...patch, seen: true })}
         />
       ) : null}
       {wrong.length > 0 && !open ? (
@@ -102,10 +102,4 @@ export function GroupCard({ group, choices, problems, onChange }: GroupCardProps
       </details>
     </article>
   );
-}
-
-/** Changing the meaning of all keeps each column's own row, unless the new meaning has none. */
-function withoutRow(patch: Partial<ColumnChoice>): Partial<ColumnChoice> {
-  const { row: _row, ...rest } = patch;
-  return rest;
 }

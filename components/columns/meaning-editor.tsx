@@ -32,7 +32,8 @@ function chooseMeaning(value: string, choice: ColumnChoice, ownName: string): Pa
   const units = unitsForChannel(channel);
   const kept = choice.unit && units.includes(choice.unit) ? choice.unit : null;
   const unit = kept ?? (units.length === 1 ? (units[0] ?? null) : null);
-  return { use: "channel", channel, unit, row: isRowable(channel) ? choice.row : null };
+  // The row is kept, each column's own where a group changes together; a channel without rows has none.
+  return { use: "channel", channel, unit, ...(isRowable(channel) ? {} : { row: null }) };
 }
 
 const FORMAT_WORDS: Record<string, { label: string; hint: string }> = {

@@ -2,10 +2,18 @@
 
 import { useMachines } from "@/components/hooks/use-machines";
 import { MachineForm } from "@/components/machines/machine-form";
+import type { DraftMachine } from "@/components/machines/toolbar-drawing";
 import { Loading } from "@/components/ui/loading";
 import { Notice } from "@/components/ui/notice";
 import { PageHeading } from "@/components/ui/page-heading";
 import { describeFailure } from "@/lib/api/api-problem";
+import type { MachineReply } from "@/lib/schemas/machines";
+
+/** What a person described, without what the server wrote down about it. */
+function withoutRecord(machine: MachineReply): DraftMachine {
+  const kept = Object.entries(machine).filter(([key]) => !["id", "createdAt", "updatedAt"].includes(key));
+  return { ...Object.fromEntries(kept), kind: machine.kind };
+}
 
 /** One known machine, open for changes. */
 export function MachinePage({ slug, machineId }: { slug: string; machineId: string }) {
@@ -19,11 +27,10 @@ export function MachinePage({ slug, machineId }: { slug: string; machineId: stri
     );
   const machine = machines.data.items.find((candidate) => candidate.id === machineId);
   if (!machine) return <Notice state="act">This machine is not here. It may have been deleted.</Notice>;
-  const { id: _id, createdAt: _createdAt, updatedAt: _updatedAt, ...body } = machine;
   return (
     <>
       <PageHeading title={machine.name} />
-      <MachineForm slug={slug} machineId={machineId} start={body} />
+      <MachineForm slug={slug} machineId={machineId} start={withoutRecord(machine)} />
     </>
   );
 }

@@ -28,7 +28,7 @@ export function signInWords(error: string | null, status: number | null = null):
 
 /** After a sign-in: the whole page anew, so that nothing of the last person stays in memory. */
 function enter(): void {
-  window.location.assign("/");
+  window.location.replace(new URL("/", window.location.href));
 }
 
 export interface SignInFormProps {

@@ -28,6 +28,11 @@ const LIVES: [days: string, words: string][] = [
   ["", "until revoked"],
 ];
 
+/** The moment so many days from now; undefined for no end. */
+function expiryIn(days: string): string | undefined {
+  return days ? new Date(Date.now() + Number(days) * DAY_MS).toISOString() : undefined;
+}
+
 const FormShape = z.object({
   name: z.string().trim().min(1, "Name it after what will use it.").max(120, "At most 120 characters."),
   role: z.enum(ROLES),
@@ -43,7 +48,7 @@ export function TokenSettings({ role }: { role: Role }) {
   // A token may be at most what its owner is; roles are ordered from most to least trusted.
   const roles = ROLES.slice(ROLES.indexOf(role));
   const submit = form.handleSubmit(({ name, role: chosen, days }) => {
-    const expiresAt = days ? new Date(Date.now() + Number(days) * DAY_MS).toISOString() : undefined;
+    const expiresAt = expiryIn(days);
     actions.create.mutate(
       { name, role: chosen, expiresAt },
       {

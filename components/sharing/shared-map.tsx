@@ -1,5 +1,8 @@
-import type { MultiPolygon, Polygon } from "geojson";
+import type { MultiPolygon, Polygon, Position } from "geojson";
 import { BoundarySketch } from "@/components/fields/boundary-sketch";
+import { rankFindings } from "@/components/sharing/shared-finding";
+import { FindingPlace } from "@/lib/findings/finding";
+import { ShareMap } from "@/components/map/share-map";
 import { Boundary } from "@/lib/schemas/geometry";
 import type { SharedView } from "@/lib/schemas/shared";
 
@@ -9,18 +12,33 @@ export function sharedBoundary(view: SharedView): Polygon | MultiPolygon | null 
   return parsed.success ? parsed.data : null;
 }
 
-/** The field from above. */
+/** The place that the gravest sentence with a place speaks of. */
+export function sharedPlaces(view: SharedView): Position[][] {
+  if (!view.verdict) return [];
+  const speaking = rankFindings(view.verdict).filter((finding) => finding.severity !== "ok" && finding.place);
+  return speaking.slice(0, 1).flatMap((finding) => {
+    const place = FindingPlace.safeParse(finding.place);
+    if (!place.success) return [];
+    return place.data.type === "LineString" ? [place.data.coordinates] : place.data.coordinates;
+  });
+}
+
+/** The field from above, with the places that the sentences speak of. */
 export function SharedMap({ view }: { view: SharedView; token: string }) {
   const boundary = sharedBoundary(view);
+  const places = sharedPlaces(view);
   if (!boundary) return <p className="hatch p-6 text-ink-soft">The outline of the field was not shared.</p>;
   return (
     <figure className="sheet p-2">
       <BoundarySketch
         boundary={boundary}
-        className="mx-auto h-64 w-full print:h-52"
+        lines={places}
+        className="mx-auto h-72 w-full print:h-56"
         label={`Outline of ${view.fieldName}, north up`}
       />
-      <figcaption className="px-1 text-table text-ink-soft">North is up.</figcaption>
+      <figcaption className="px-1 text-table text-ink-soft">
+        North is up.{places.length > 0 ? " The thick line is the place to look at first." : ""}
+      </figcaption>
     </figure>
   );
 }

@@ -8,6 +8,7 @@ import { StateMark, type MarkState } from "@/components/ui/state-mark";
 import { Quantity } from "@/components/units/quantity";
 import { UnitSwitch } from "@/components/units/unit-switch";
 import { useUnits } from "@/components/units/use-units";
+import { VERDICT_THRESHOLDS } from "@/lib/findings/verdict-input";
 import type { Finding } from "@/lib/schemas/logs";
 import type { SharedView as SharedViewBody } from "@/lib/schemas/shared";
 
@@ -91,10 +92,18 @@ function WhatNext({ findings }: { findings: Finding[] }) {
   );
 }
 
+const HELD_PERCENT = Math.round(100 * (1 - VERDICT_THRESHOLDS.underTargetShare));
+
+/** How many rows fell under the target; null where no target was known, so that nothing is claimed. */
+function rowsUnderTarget({ verdict }: SharedViewBody): number | null {
+  const isJudged = verdict?.findings.some(({ kind }) => kind === "rows-under-target" || kind === "target-held");
+  return verdict && isJudged ? verdict.rowsUnderTarget.length : null;
+}
+
 function TwoNumbers({ view }: { view: SharedViewBody }) {
   const areaM2 = view.coverage?.coveredM2 ?? view.areaM2;
   const rows = view.log?.rows ?? 0;
-  const under = view.verdict?.rowsUnderTarget.length ?? null;
+  const under = rowsUnderTarget(view);
   return (
     <dl className="flex gap-6 md:flex-col md:gap-5 print:flex-col print:gap-3">
       <div>
@@ -109,7 +118,11 @@ function TwoNumbers({ view }: { view: SharedViewBody }) {
             {under === null ? rows : rows - under}
             {under === null ? null : <span className="text-section text-ink-soft"> of {rows}</span>}
           </dd>
-          <dt className="text-ink-soft">{under === null ? "rows logged" : "rows kept enough weight on the ground"}</dt>
+          <dt className="text-ink-soft">
+            {under === null
+              ? "rows logged"
+              : `rows held the target on at least ${HELD_PERCENT}\u202f% of their distance`}
+          </dt>
         </div>
       ) : null}
     </dl>
