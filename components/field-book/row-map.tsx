@@ -21,10 +21,12 @@ export interface RowMapProps {
   boundary: Boundary | null;
   classes: Classes | null;
   track: PassTrack | undefined;
+  /** On a page that scrolls. */
+  gentle: boolean;
 }
 
 /** The field from above: every row's readings in class colours, linked with the unrolled pass. */
-export function RowMap({ basemap, bounds, boundary, classes, track }: RowMapProps) {
+export function RowMap({ basemap, bounds, boundary, classes, track, gentle }: RowMapProps) {
   const { store, log } = useBook();
   const [map, setMap] = useState<MapLibreMap | null>(null);
   const channel = useBookState((state) => state.channel);
@@ -39,6 +41,7 @@ export function RowMap({ basemap, bounds, boundary, classes, track }: RowMapProp
       view={store.getState().view}
       description={`${channelWords(channel).name} of ${log.counts.rows} rows in ${log.counts.passes} passes, north up. The unrolled pass, the line-up and its table give the same readings in numbers.`}
       onMap={setMap}
+      gentle={gentle}
     />
   );
 }

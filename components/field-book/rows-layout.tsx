@@ -100,7 +100,16 @@ function useParts({ field, basemap, wide }: { field: Field; basemap: BasemapConf
   const flagged = (current?.items ?? []).filter((item) => item.flagged).map((item) => item.row);
   const [bounds] = useState<Bounds>(() => openingBounds(field, log));
   return {
-    map: <RowMap basemap={basemap} bounds={bounds} boundary={field.boundary} classes={classes} track={track} />,
+    map: (
+      <RowMap
+        basemap={basemap}
+        bounds={bounds}
+        boundary={field.boundary}
+        classes={classes}
+        track={track}
+        gentle={!wide}
+      />
+    ),
     legend: <Legend classes={classes} unit={overview?.unit ?? ""} />,
     verdict: <VerdictPanel verdict={verdict.data} rows={log.counts.rows} trouble={verdict.isError} roomy={wide} />,
     lineUp: <LineUp statistics={statistics} classes={classes} onTable={() => setAsTable(true)} />,

@@ -20,18 +20,23 @@ export interface MapCanvasProps {
   description: string;
   /** Called with the map once it can be drawn on, and with null when it is gone. */
   onMap: (map: MapLibreMap | null) => void;
+  /** On a page that scrolls: one finger scrolls the page, two move the map. */
+  gentle?: boolean;
+  /** For looking and printing: gentle, and what is drawn can be printed. */
+  readOnly?: boolean;
   children?: ReactNode;
 }
 
 const FIT_PADDING_PX = 28;
 
 /** A map with our ground, buttons and keys. What lies on it is drawn by whoever gets it through `onMap`. */
-export function MapCanvas({ basemap, bounds, view, description, onMap, children }: MapCanvasProps) {
+export function MapCanvas(props: MapCanvasProps) {
+  const { bounds, description, children } = props;
   const container = useRef<HTMLDivElement>(null);
   const [map, setMap] = useState<MapLibreMap | null>(null);
   const [trouble, setTrouble] = useState(false);
   // Only the first values count: the map never moves because a parent was drawn again.
-  const opening = useRef({ basemap, bounds, view, onMap });
+  const opening = useRef(props);
   useEffect(() => {
     const start = opening.current;
     let gone = false;
@@ -83,7 +88,7 @@ export function fitBounds(map: MapLibreMap, bounds: Bounds): void {
 
 async function openMap(
   container: HTMLElement,
-  { basemap, bounds, view }: Pick<MapCanvasProps, "basemap" | "bounds" | "view">,
+  { basemap, bounds, view, gentle, readOnly }: MapCanvasProps,
 ): Promise<MapLibreMap> {
   const maplibre = await loadMapLibre();
   const opening = view
@@ -99,6 +104,8 @@ async function openMap(
     pitchWithRotate: false,
     touchPitch: false,
     fadeDuration: 0,
+    cooperativeGestures: gentle || readOnly,
+    canvasContextAttributes: { preserveDrawingBuffer: readOnly },
   });
   map.touchZoomRotate.disableRotation();
   map.keyboard.disableRotation();
