@@ -12,7 +12,8 @@ import { colourExpression, recolourValues, showValues } from "@/components/map/v
 import { useUnits } from "@/components/units/use-units";
 import { requestJson } from "@/lib/api/request-json";
 import { channelWords } from "@/lib/legend/channel-words";
-import { proposeEdges } from "@/lib/legend/propose-edges";
+import { classOf } from "@/lib/legend/class-edges";
+import { presetsFor, proposeEdges } from "@/lib/legend/propose-edges";
 import { classColours, rampOf } from "@/lib/legend/ramps";
 import type { Bounds } from "@/lib/map-state/field-book-store";
 import { boundsOfGeometry } from "@/lib/map-state/geometry-bounds";
@@ -103,19 +104,22 @@ interface ShareClasses {
   colours: string[];
 }
 
-/** Published contact loads for margin, else round numbers over the whole range. */
-function classesOf({ encoding }: TileJson, shownFactor: number): ShareClasses {
+/** About the target where one is known, as in the field's book; else published contact loads or round numbers. */
+function classesOf(
+  { encoding, targetMarginN = null, marginDeadbandN = null }: TileJson,
+  shownFactor: number,
+): ShareClasses {
   const { channel, minimum, maximum } = encoding;
-  const edges = proposeEdges(channel === "margin" ? "contact-load" : "round", {
-    channel,
-    histogram: { minimum, maximum, counts: [1] },
-    targetMarginN: null,
-    marginDeadbandN: null,
-    shownFactor,
-  });
+  const histogram = { minimum, maximum, counts: [1] };
+  const context = { channel, histogram, targetMarginN, marginDeadbandN, shownFactor };
+  const edges = proposeEdges(presetsFor(context)[0] ?? "round", context);
+  const hasTarget = channel === "margin" && targetMarginN !== null;
   // Without a target there is no middle to be pale: plain steps from light to dark read better.
-  const ramp = channel === "margin" ? "cividis" : rampOf(channel);
-  return { edges, colours: classColours(ramp, edges.length + 1) };
+  const ramp = channel === "margin" && !hasTarget ? "YlOrBr" : rampOf(channel);
+  return {
+    edges,
+    colours: classColours(ramp, edges.length + 1, hasTarget ? classOf(targetMarginN, edges) : undefined),
+  };
 }
 
 /** The classes as a row of swatches with the edges between them. */

@@ -23,10 +23,33 @@ export function sharedPlaces(view: SharedView): Position[][] {
   });
 }
 
-/** The field from above, with the places that the sentences speak of. */
-export function SharedMap({ view }: { view: SharedView; token: string }) {
+/** Shared layers that can be drawn, the one that tells a landowner most first. */
+const DRAWN_FIRST = ["margin", "resistance", "downforce", "depth"] as const;
+
+/** The shared reading to draw; null where none was shared or the place is hidden (there are no tiles then). */
+export function sharedChannel(view: SharedView): string | null {
+  if (view.blurLocation || !view.log?.bbox) return null;
+  const logged = view.log.channels.map((channel) => channel.id);
+  return DRAWN_FIRST.find((layer) => view.layers.includes(layer) && logged.includes(layer)) ?? null;
+}
+
+/** The field from above, with the places that the sentences speak of: the shared reading on a map, or the outline alone. */
+export function SharedMap({ view, token }: { view: SharedView; token: string }) {
   const boundary = sharedBoundary(view);
   const places = sharedPlaces(view);
+  const channel = sharedChannel(view);
+  if (channel && view.log?.bbox) {
+    return (
+      <ShareMap
+        token={token}
+        fieldName={view.fieldName}
+        channel={channel}
+        boundary={boundary}
+        bbox={view.log.bbox}
+        places={places}
+      />
+    );
+  }
   if (!boundary) return <p className="hatch p-6 text-ink-soft">The outline of the field was not shared.</p>;
   return (
     <figure className="sheet p-2">

@@ -253,5 +253,8 @@ export const TileJson = z.object({
     maximum: z.number(),
     step: z.number(),
   }),
+  /** What the machine was set to, for classes about the target; null where nobody said. */
+  targetMarginN: NullableNumber.optional(),
+  marginDeadbandN: NullableNumber.optional(),
 });
 export type TileJson = z.infer<typeof TileJson>;

@@ -2,7 +2,7 @@ import "server-only";
 import type { TileJson } from "@/lib/schemas/logs";
 import type { Scope } from "@/lib/scope";
 import type { Container } from "@/lib/server/create-container";
-import { getReadLog, loadChannel } from "@/lib/server/logs/find-placed-log";
+import { findPlacedLog, loadChannel } from "@/lib/server/logs/find-placed-log";
 import { loadTileIndex } from "@/lib/server/tiles/load-tile-index";
 import { TILE_SIZE } from "@/lib/server/tiles/read-tile";
 import { tileIndexBounds } from "@/lib/tiles/build-tile-index";
@@ -14,7 +14,7 @@ export async function describeTiles(
   scope: Scope,
   input: { logId: string; channel: string; origin?: string },
 ): Promise<TileJson> {
-  const log = await getReadLog(scope, input.logId);
+  const { log, placed } = await findPlacedLog(scope, input.logId, null);
   const channel = await loadChannel(log, input.channel);
   const scale = valueScale(channel);
   const bounds = tileIndexBounds(await loadTileIndex(log)) ?? [-180, -85, 180, 85];
@@ -38,5 +38,7 @@ export async function describeTiles(
       maximum: scale.maximum,
       step: scale.step,
     },
+    targetMarginN: placed.machine?.targetMarginN ?? null,
+    marginDeadbandN: placed.machine?.marginDeadbandN ?? null,
   };
 }
