@@ -19,7 +19,7 @@ export const LAYER_WORDS: Record<ShareInput["layers"][number], { word: string; h
 };
 
 /** Layers chosen to begin with: what a landowner can read. */
-export const FIRST_LAYERS: ShareInput["layers"] = ["boundary", "verdict", "coverage"];
+export const FIRST_LAYERS: ShareInput["layers"] = ["boundary", "verdict", "coverage", "margin"];
 
 export const LIVES: { days: number; word: string }[] = [
   { days: 7, word: "one week" },

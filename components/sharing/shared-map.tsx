@@ -1,3 +1,6 @@
+"use client";
+
+import { useMemo } from "react";
 import type { MultiPolygon, Polygon, Position } from "geojson";
 import { BoundarySketch } from "@/components/fields/boundary-sketch";
 import { rankFindings } from "@/components/sharing/shared-finding";
@@ -36,7 +39,7 @@ export function sharedChannel(view: SharedView): string | null {
 /** The field from above, with the places that the sentences speak of: the shared reading on a map, or the outline alone. */
 export function SharedMap({ view, token }: { view: SharedView; token: string }) {
   const boundary = sharedBoundary(view);
-  const places = sharedPlaces(view);
+  const places = useMemo(() => sharedPlaces(view), [view]);
   const channel = sharedChannel(view);
   if (channel && view.log?.bbox) {
     return (
