@@ -15,9 +15,9 @@ function polygonOf(ring: Position[]): Polygon {
   return { type: "Polygon", coordinates: [ring] };
 }
 
-/** Outlines of what is chosen and pointed at, and the framing that somebody asked for. */
+/** Outlines of what is chosen and pointed at, the framing that somebody asked for, and the view for the address. */
 export function useMapMarks(map: MapLibreMap | null, track: PassTrack | undefined): void {
-  const { logVersion } = useBook();
+  const { logVersion, store } = useBook();
   const channel = useBookState((state) => state.channel);
   const pass = useBookState((state) => state.pass);
   const row = useBookState((state) => state.row);
@@ -57,4 +57,15 @@ export function useMapMarks(map: MapLibreMap | null, track: PassTrack | undefine
   useEffect(() => {
     if (map && frame) map.fitBounds(openBounds(frame.bounds, 0.15), { padding: 32, maxZoom: 20, animate: false });
   }, [map, frame]);
+  useEffect(() => {
+    if (!map) return;
+    const keep = () => {
+      const { lng, lat } = map.getCenter();
+      store.getState().setView({ longitude: lng, latitude: lat, zoom: map.getZoom() });
+    };
+    map.on("moveend", keep);
+    return () => {
+      map.off("moveend", keep);
+    };
+  }, [map, store]);
 }
