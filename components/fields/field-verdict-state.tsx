@@ -31,6 +31,7 @@ function NewestLogState({ fieldId }: { fieldId: string }) {
     const { mark, word } = verdictState(verdict.data);
     return <StateWord state={mark}>{word}</StateWord>;
   }
+  if (verdict.isLoading) return <span className="text-ink-soft">…</span>;
   const { mark, word } = describeLogStatus(newest.status);
   return <StateWord state={mark}>{word}</StateWord>;
 }

@@ -17,7 +17,9 @@ export default async function FieldsRoute({ params }: { params: Promise<{ org: s
     <PageBody>
       <PageHeading
         title="Fields"
-        lead={can(scope.role, "logs.upload") ? "Drop a log file on a field to take it in." : undefined}
+        lead={
+          can(scope.role, "logs.upload") ? "Open a field to take a log in, or drop the file on its name." : undefined
+        }
         actions={
           mayWrite ? (
             <Link href={`/${organisation.slug}/fields/new`} className={buttonClass("primary")}>
