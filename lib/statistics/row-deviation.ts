@@ -10,43 +10,63 @@ export const MIN_ROWS_TO_RANK = 5;
  */
 export function deviationFromOthers(values: Float32Array, rows: number): Float32Array {
   const deviations = new Float32Array(values.length).fill(NaN);
-  const sorted = new Float32Array(rows);
-  const owner = new Uint16Array(rows);
+  const record = new Float32Array(rows);
   for (let base = 0; base < values.length; base += rows) {
-    const n = sortRecord(values, base, sorted, owner);
-    for (let rank = 0; rank < n && n > 1; rank++) {
-      deviations[base + owner[rank]!] = sorted[rank]! - medianWithout(sorted, n, rank);
+    let n = 0;
+    for (let row = 0; row < rows; row++) {
+      const value = values[base + row]!;
+      if (!Number.isNaN(value)) record[n++] = value;
     }
+    if (n > 1) fillDeviations(values, deviations, { base, record, n });
   }
   return deviations;
 }
 
-/** Insertion sort of one record's finite readings: fastest for the few dozen rows of a machine. */
-// kernel: hot, so positional
-function sortRecord(values: Float32Array, base: number, sorted: Float32Array, owner: Uint16Array): number {
-  let n = 0;
-  for (let row = 0; row < sorted.length; row++) {
-    const value = values[base + row]!;
+/**
+ * The median of all values but one is read off the three in the middle of all: which of them, tells the value left out.
+ * So the middle is selected, not the whole record sorted.
+ */
+function fillDeviations(
+  values: Float32Array,
+  deviations: Float32Array,
+  { base, record, n }: { base: number; record: Float32Array; n: number },
+): void {
+  const middle = (n - 1) >> 1;
+  selectRank(record, n, middle);
+  const at = record[middle]!;
+  let below = -Infinity;
+  for (let i = 0; i < middle; i++) if (record[i]! > below) below = record[i]!;
+  let above = Infinity;
+  for (let i = middle + 1; i < n; i++) if (record[i]! < above) above = record[i]!;
+  const isOdd = (n - 1) % 2 === 1;
+  for (let place = base; place < base + record.length; place++) {
+    const value = values[place]!;
     if (Number.isNaN(value)) continue;
-    let at = n++;
-    while (at > 0 && sorted[at - 1]! > value) {
-      sorted[at] = sorted[at - 1]!;
-      owner[at] = owner[at - 1]!;
-      at--;
-    }
-    sorted[at] = value;
-    owner[at] = row;
+    const high = value > at ? at : above;
+    deviations[place] = value - (isOdd ? high : (high + (value >= at ? below : at)) / 2);
   }
-  return n;
 }
 
-/** Median of `n` sorted values with the one at `rank` left out. */
-function medianWithout(sorted: Float32Array, n: number, rank: number): number {
-  const left = n - 1;
-  const middle = left >> 1;
-  const high = sorted[middle < rank ? middle : middle + 1]!;
-  if (left % 2 === 1) return high;
-  return (high + sorted[middle - 1 < rank ? middle - 1 : middle]!) / 2;
+/** Moves the value of this rank to its place, smaller ones before it and larger ones behind (Hoare 1961, FIND). */
+// kernel: hot, so positional
+function selectRank(values: Float32Array, n: number, rank: number): void {
+  let left = 0;
+  let right = n - 1;
+  while (left < right) {
+    const pivot = values[rank]!;
+    let i = left;
+    let j = right;
+    while (i <= j) {
+      while (values[i]! < pivot) i++;
+      while (values[j]! > pivot) j--;
+      if (i > j) break;
+      const swapped = values[i]!;
+      values[i++] = values[j]!;
+      values[j--] = swapped;
+    }
+    if (j < rank) left = i;
+    if (rank < i) right = j;
+  }
 }
 
 export interface RowScores {
