@@ -98,9 +98,8 @@ describe("members", () => {
 describe("tokens", () => {
   it("keeps only the hash of at least 160 random bits", async () => {
     const { token } = await makeToken(world.cookies.owner, {});
-    const [prefix, secret] = token.split("_", 2) as [string, string];
-    expect(prefix).toBe("cbk");
-    expect(Buffer.from(secret, "base64url").length * 8).toBeGreaterThanOrEqual(160);
+    expect(token).toMatch(/^cbk_/);
+    expect(Buffer.from(token.slice(4), "base64url").length * 8).toBeGreaterThanOrEqual(160);
     const { rows } = await adminDb().$client.query("select * from tokens");
     expect(JSON.stringify(rows)).not.toContain(token.slice(4));
     const listed = await world.read("owner", { path: "/api/v1/tokens" });
