@@ -27,6 +27,7 @@ export function Readout({ spoken }: { spoken: boolean }) {
   const cursor = useBookState((state) => state.cursor);
   return (
     <p
+      data-testid="readout"
       aria-live={spoken ? "polite" : "off"}
       className="flex min-h-9 flex-wrap items-center gap-x-4 overflow-hidden text-table text-ink-soft md:h-7 md:min-h-0 md:flex-nowrap md:whitespace-nowrap"
     >

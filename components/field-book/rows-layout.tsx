@@ -111,7 +111,7 @@ function useParts({ field, basemap, wide }: { field: Field; basemap: BasemapConf
       />
     ),
     legend: <Legend classes={classes} unit={overview?.unit ?? ""} />,
-    verdict: <VerdictPanel verdict={verdict.data} rows={log.counts.rows} trouble={verdict.isError} roomy={wide} />,
+    verdict: <VerdictPanel verdict={verdict.data} rows={log.counts.rows} trouble={verdict.isError} />,
     lineUp: <LineUp statistics={statistics} classes={classes} onTable={() => setAsTable(true)} />,
     table: asTable && statistics ? <LineUpTable statistics={statistics} onClose={() => setAsTable(false)} /> : null,
     passHeading: <PassHeading passes={passes} />,

@@ -18,12 +18,10 @@ export interface VerdictPanelProps {
   verdict: VerdictBody | undefined;
   rows: number;
   trouble: boolean;
-  /** Room enough to unfold the first finding's check at once. */
-  roomy: boolean;
 }
 
 /** What the log says, in plain words: one large number, then the findings, the pressing ones first. */
-export function VerdictPanel({ verdict, rows, trouble, roomy }: VerdictPanelProps) {
+export function VerdictPanel({ verdict, rows, trouble }: VerdictPanelProps) {
   if (!verdict) return <VerdictWaiting trouble={trouble} />;
   const findings = rankFindings(verdict);
   const worst = findings[0]?.severity ?? "ok";
@@ -39,8 +37,8 @@ export function VerdictPanel({ verdict, rows, trouble, roomy }: VerdictPanelProp
       <Headline verdict={verdict} rows={rows} />
       {findings.length === 0 ? <p className="text-ink-soft">Nothing in this log needs your attention.</p> : null}
       <ul className="mt-2 divide-y divide-rule">
-        {findings.map((finding, index) => (
-          <FindingItem key={finding.id} finding={finding} open={index === 0 && roomy} />
+        {findings.map((finding) => (
+          <FindingItem key={finding.id} finding={finding} />
         ))}
       </ul>
     </section>
@@ -108,9 +106,9 @@ export function rowWords(rows: readonly number[]): string {
 }
 
 /** What to check, and what to mind while doing it: folded, so that all findings can be seen at once. */
-function CheckWords({ finding, open }: { finding: Finding; open: boolean }) {
+function CheckWords({ finding }: { finding: Finding }) {
   return (
-    <details open={open} className="text-table text-ink-soft open:basis-full">
+    <details className="text-table text-ink-soft open:basis-full">
       <summary className="flex min-h-11 items-center gap-1 text-slate md:min-h-6">
         <ChevronRight size={14} aria-hidden className="[details[open]_&]:rotate-90" />
         What to check{finding.caution ? ", and a caution" : ""}
@@ -125,7 +123,7 @@ function CheckWords({ finding, open }: { finding: Finding; open: boolean }) {
   );
 }
 
-function FindingItem({ finding, open }: { finding: Finding; open: boolean }) {
+function FindingItem({ finding }: { finding: Finding }) {
   const { store } = useBook();
   const selected = useBookState((state) => state.row);
   const { system } = useUnits();
@@ -147,7 +145,7 @@ function FindingItem({ finding, open }: { finding: Finding; open: boolean }) {
           {sentenceOf(finding, system)}
         </p>
         <div className="flex flex-wrap items-start justify-between gap-x-4">
-          {finding.check || finding.caution ? <CheckWords finding={finding} open={open} /> : <span />}
+          {finding.check || finding.caution ? <CheckWords finding={finding} /> : <span />}
           {bounds || row !== null ? (
             <button type="button" onClick={seeIt} className="min-h-11 text-table text-slate underline md:min-h-6">
               See it{row !== null ? `: row ${row}` : " on the map"}

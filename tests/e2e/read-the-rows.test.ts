@@ -92,6 +92,19 @@ async function readLegend(page: Page): Promise<{ edges: number[]; colours: strin
   return { edges: shown.map((edge) => edge * factor), colours };
 }
 
+/** Whether the middle of the map shows a class colour, not bare ground. */
+async function isFieldColoured(page: Page): Promise<boolean> {
+  const { colours } = await readLegend(page);
+  const box = (await page.locator("canvas.maplibregl-canvas").boundingBox())!;
+  const clip = { x: box.x + box.width / 2 + 40, y: box.y + box.height / 2, width: 20, height: 20 };
+  const { data } = await sharp(await page.screenshot({ clip }))
+    .removeAlpha()
+    .raw()
+    .toBuffer({ resolveWithObject: true });
+  const drawn = `#${[...data.subarray(0, 3)].map((byte) => byte.toString(16).padStart(2, "0")).join("")}`;
+  return colours.includes(drawn);
+}
+
 interface Sample {
   record: number;
   row: number;
@@ -151,10 +164,10 @@ describe("the rows of a field, wide", () => {
     const { page, context } = await beginVisit(browser, "wide");
     await openRows(page);
     const record = Math.floor(world.track.records / 2);
-    const readout = page.locator("[aria-live]").first();
+    const readout = page.getByTestId("readout");
     const onMap = await cellOnScreen(page, record, 9);
     await page.mouse.move(onMap.x, onMap.y);
-    await page.getByText("Row 9", { exact: true }).waitFor();
+    await readout.getByText("Row 9", { exact: true }).waitFor();
     const fromMap = await readout.textContent();
 
     const plot = (await page.getByTestId("unrolled-plot").boundingBox())!;
@@ -174,7 +187,7 @@ describe("the rows of a field, wide", () => {
     await page.getByTestId("unrolled-plot").focus();
     await page.keyboard.press("ArrowDown");
     await page.keyboard.press("ArrowDown");
-    await page.getByText("Row 3", { exact: true }).waitFor();
+    await page.getByTestId("readout").getByText("Row 3", { exact: true }).waitFor();
     await page.keyboard.press("Enter");
     expect(await page.getByRole("option", { name: /^Row 3\b/ }).getAttribute("aria-selected")).toBe("true");
     await page.keyboard.press("]");
@@ -207,7 +220,7 @@ describe("the rows of a field, wide", () => {
     await page.getByRole("button", { name: "Whole field" }).click();
     await page.getByRole("radio", { name: "Opener resistance" }).click();
     await page.getByRole("heading", { name: /^Opener resistance/ }).waitFor();
-    await page.waitForLoadState("networkidle");
+    await expect.poll(() => isFieldColoured(page), POLL).toBe(true);
     expect(await picture("rows")).toBeLessThanOrEqual(0);
     expect(await page.evaluate(() => document.documentElement.scrollHeight - window.innerHeight)).toBeLessThanOrEqual(
       0,

@@ -49,24 +49,26 @@ const VERDICT: VerdictBody = {
 
 describe("the verdict", () => {
   it("puts one number first and the pressing findings before the rest", () => {
-    renderInBook(<VerdictPanel verdict={VERDICT} rows={8} trouble={false} roomy />);
+    renderInBook(<VerdictPanel verdict={VERDICT} rows={8} trouble={false} />);
     expect(screen.getByText("rows ran under target")).toBeInTheDocument();
     expect(screen.getAllByRole("listitem").map((item) => item.dataset.severity)).toEqual(["act", "ok"]);
   });
 
   it("says numbers in the reader's units", () => {
-    renderInBook(<VerdictPanel verdict={VERDICT} rows={8} trouble={false} roomy />, { system: "imperial" });
+    renderInBook(<VerdictPanel verdict={VERDICT} rows={8} trouble={false} />, { system: "imperial" });
     // 151 N = 33.9 lbf (NIST SP 811).
     expect(screen.getByText(/Row 5 carried 34 lbf less/)).toBeInTheDocument();
   });
 
-  it("shows the caution beside the check", () => {
-    renderInBook(<VerdictPanel verdict={VERDICT} rows={8} trouble={false} roomy />);
+  it("folds the check away and shows the caution with it, announced beforehand", async () => {
+    renderInBook(<VerdictPanel verdict={VERDICT} rows={8} trouble={false} />);
+    expect(screen.getByText(/Lower the machine before reaching under it/)).not.toBeVisible();
+    await userEvent.click(screen.getByText(/What to check, and a caution/));
     expect(screen.getByText(/Lower the machine before reaching under it/)).toBeVisible();
   });
 
   it("moves selection and map only when asked", async () => {
-    const { store } = renderInBook(<VerdictPanel verdict={VERDICT} rows={8} trouble={false} roomy />);
+    const { store } = renderInBook(<VerdictPanel verdict={VERDICT} rows={8} trouble={false} />);
     expect(store.getState().row).toBeNull();
     expect(store.getState().frame).toBeNull();
     await userEvent.click(screen.getByRole("button", { name: "See it: row 5" }));
@@ -78,7 +80,7 @@ describe("the verdict", () => {
   });
 
   it("says so when it could not be fetched", () => {
-    renderInBook(<VerdictPanel verdict={undefined} rows={8} trouble roomy />);
+    renderInBook(<VerdictPanel verdict={undefined} rows={8} trouble />);
     expect(screen.getByRole("alert")).toHaveTextContent("could not be fetched");
   });
 
