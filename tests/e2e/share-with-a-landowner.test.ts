@@ -55,9 +55,12 @@ describe.each(["wide", "phone"] as const)("story 4, %s: a landowner opens a link
     expect(sheets.toString("latin1").match(/\/Type\s*\/Page\b/g)).toHaveLength(1);
     expect(guest.complaints).toEqual([]);
 
-    await maker.page.getByRole("button", { name: "I have it" }).click();
+    // Newest first: the first link that can be withdrawn is the one just made.
+    await maker.page.reload();
     await maker.page.getByRole("button", { name: "Withdraw" }).first().click();
+    const withdrawn = maker.page.waitForResponse((response) => response.request().method() === "DELETE");
     await maker.page.getByRole("alertdialog").getByRole("button", { name: "Withdraw" }).click();
+    expect((await withdrawn).status()).toBe(204);
     await maker.page.getByText("Withdrawn").first().waitFor();
     await guest.page.reload();
     await guest.page.getByRole("heading", { name: "This link was withdrawn" }).waitFor();
