@@ -239,7 +239,8 @@ describe("a blurred location", () => {
     const token = tokenOf(await share({ layers: ["boundary", "verdict", "downforce"], logId, blurLocation: true }));
     const text = await (await open(token)).text();
     const view = SharedView.parse(JSON.parse(text));
-    expect(text).not.toMatch(/38\.5|98\.0/);
+    const withoutTimes = text.replaceAll(/\d{4}-\d\d-\d\dT[\d:.]+Z/g, "");
+    expect(withoutTimes).not.toMatch(/38\.5|98\.0/);
     expect(view.log?.bbox).toBeNull();
     const [ring] = (view.boundary as unknown as typeof SQUARE).coordinates;
     expect(ring![0]).toEqual([0, 0]);
