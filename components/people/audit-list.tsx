@@ -19,6 +19,23 @@ function detailWords(detail: Record<string, unknown>): string {
     .join(", ");
 }
 
+const VERBS: Record<string, string> = {
+  create: "made",
+  update: "changed",
+  delete: "deleted",
+  revoke: "withdrew",
+  add: "added",
+  remove: "removed",
+  upload: "took in",
+};
+
+/** `share.create` as "made a share"; what is not in the list is shown as it is. */
+export function actionWords(action: string): string {
+  const [noun = "", verb = ""] = action.split(".");
+  const said = VERBS[verb];
+  return said ? `${said} a ${noun.replaceAll(/[-_]/g, " ")}` : action;
+}
+
 /** Who changed what, and when. For owners. */
 export function AuditList() {
   const audit = useAudit();
@@ -26,7 +43,7 @@ export function AuditList() {
     () => [
       { id: "at", header: "When", value: (entry) => entry.at, cell: (entry) => formatMoment(entry.at) },
       { id: "who", header: "Who", value: (entry) => entry.userName ?? "the program" },
-      { id: "action", header: "Did", value: (entry) => entry.action },
+      { id: "action", header: "Did", value: (entry) => actionWords(entry.action) },
       { id: "subject", header: "To", value: (entry) => entry.subject },
       { id: "detail", header: "Detail", value: (entry) => detailWords(entry.detail) },
     ],

@@ -1,8 +1,10 @@
 "use client";
 
+import { useQueryClient } from "@tanstack/react-query";
 import Link from "next/link";
 import { useRouter } from "next/navigation";
 import { useEffect } from "react";
+import { queryKeys } from "@/components/hooks/query-keys";
 import { useLogEvents } from "@/components/hooks/use-log-events";
 import { useLog, useLogActions } from "@/components/hooks/use-logs";
 import { Button, buttonClass } from "@/components/ui/button";
@@ -31,6 +33,12 @@ export function LogProgress({ logId, fieldId, fieldPath, role }: LogProgressProp
   const query = useLog(logId);
   const log = query.data;
   useLogEvents(log);
+  const client = useQueryClient();
+  const status = log?.status;
+  // The field's list of logs was fetched before this log came so far; pages that choose a log from it must not miss it.
+  useEffect(() => {
+    if (status === "ready" || status === "failed") void client.invalidateQueries({ queryKey: queryKeys.fields });
+  }, [client, status]);
   const asksForMeaning = log?.status === "needs-mapping" && can(role, "logs.map");
   useEffect(() => {
     if (asksForMeaning) router.replace(`${fieldPath}/logs/${logId}/columns`);
