@@ -29,7 +29,7 @@ const TEST_SETTINGS = "-c fsync=off -c synchronous_commit=off -c full_page_write
 const LOCAL_SETTINGS = "-c max_wal_size=2GB -c max_connections=100";
 
 /** The folder with initdb and pg_ctl: POSTGRES_BIN, else the newest of Debian's, else the PATH. */
-function findBinaries(): string {
+export function findBinaries(): string {
   if (process.env.POSTGRES_BIN) return process.env.POSTGRES_BIN;
   const root = "/usr/lib/postgresql";
   const versions = existsSync(root)

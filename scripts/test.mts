@@ -74,6 +74,7 @@ try {
   cluster = await startCluster({ dataDir: ".data/test-postgres", purpose: "test" });
   process.env.TEST_DATABASE_ADMIN_URL = cluster.adminUrl("postgres");
   process.env.NEXT_TELEMETRY_DISABLED = "1";
+  process.env.AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED = "true";
   await buildCodeIfStale();
   process.env.BUILD_DIR = "build";
   runStep("route types", NEXT, ["typegen"]);

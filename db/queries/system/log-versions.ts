@@ -8,14 +8,19 @@ import * as schema from "@/db/schema";
 import { packedColumns, packRun, recordRuns, type RecordRun } from "@/lib/logs/packed-columns";
 import type { PackedPlacedLog } from "@/lib/logs/packed-placed-log";
 
+export interface VersionAnswers {
+  results: { kind: string; body: unknown }[];
+  /** Columns of the log's row that change with the version. */
+  change: Partial<typeof schema.logs.$inferInsert>;
+}
+
 export interface NewVersion {
   organisationId: string;
   logId: string;
   version: number;
   placed: PackedPlacedLog;
-  results: { kind: string; body: unknown }[];
-  /** Columns of the log's row that change with the version. */
-  change: Partial<typeof schema.logs.$inferInsert>;
+  /** Worked out while the readings are written. A refusal undoes the whole version. */
+  answers: Promise<VersionAnswers>;
   onProgress(share: number): void;
   /** Awaited before the log's row is touched, so that nothing else writes to it afterwards. */
   beforeSwitch(): Promise<void>;
@@ -40,8 +45,9 @@ export async function writeLogVersion(input: NewVersion): Promise<boolean> {
     input.onProgress(0.3);
     await copyReadings(client, input, runs);
     input.onProgress(0.9);
+    const answers = await input.answers;
     await input.beforeSwitch();
-    const isSwitched = await switchVersion(client, input);
+    const isSwitched = await switchVersion(client, input, answers);
     if (isSwitched) await removeVersions(client, input, "version > 0 and version < $3");
     await client.query(isSwitched ? "commit" : "rollback");
     isBroken = false;
@@ -51,10 +57,10 @@ export async function writeLogVersion(input: NewVersion): Promise<boolean> {
   }
 }
 
-async function switchVersion(client: PoolClient, input: NewVersion): Promise<boolean> {
+async function switchVersion(client: PoolClient, input: NewVersion, answers: VersionAnswers): Promise<boolean> {
   const tx = drizzle(client, { schema, casing: "snake_case" });
   const { organisationId, logId, version } = input;
-  for (const { kind, body } of input.results) {
+  for (const { kind, body } of answers.results) {
     await tx.insert(schema.logResults).values({ organisationId, logId, version, kind, body });
   }
   const isOurs = and(
@@ -64,7 +70,7 @@ async function switchVersion(client: PoolClient, input: NewVersion): Promise<boo
   );
   const changed = await tx
     .update(schema.logs)
-    .set({ ...input.change, version, updatedAt: sql`now()` })
+    .set({ ...answers.change, version, updatedAt: sql`now()` })
     .where(isOurs)
     .returning({ id: schema.logs.id });
   if (changed.length === 0) return false;

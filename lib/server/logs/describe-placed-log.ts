@@ -2,7 +2,7 @@ import { resolveChannel } from "@/lib/channels/resolve-channel";
 import type { LogNote } from "@/lib/logs/machine-log";
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import type { Log, PassBody } from "@/lib/schemas/logs";
-import type { BuiltPackage } from "@/lib/server/logs/built-package";
+import type { BuiltAnswers } from "@/lib/server/logs/built-answers";
 
 /** Smallest and largest finite value and how many there are; null extremes for a channel without a reading. */
 function measureRange(values: Float32Array): { min: number | null; max: number | null; n: number } {
@@ -56,7 +56,7 @@ function timeSpan(placed: PlacedLog): { startedAt: Date | null; endedAt: Date | 
 const REJECTED_NOTES = /reject|ragged|skipped|duplicate-record/;
 
 /** What the log's row in the database tells about it. */
-export function describePlacedLog(placed: PlacedLog, notes: readonly LogNote[]): BuiltPackage["summary"] {
+export function describePlacedLog(placed: PlacedLog, notes: readonly LogNote[]): BuiltAnswers["summary"] {
   const { log } = placed;
   const ranges = log.channels.map((channel) => ({ channel, ...measureRange(channel.values) }));
   const channels = ranges.map(({ channel, min, max }) => ({

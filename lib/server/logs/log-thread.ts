@@ -4,7 +4,8 @@ import type { IngestError } from "@/lib/ingest/ingest-error";
 import type { Inspection } from "@/lib/ingest/log-format";
 import type { Result } from "@/lib/result";
 import type { Environment } from "@/lib/server/env";
-import type { BuiltPackage } from "@/lib/server/logs/built-package";
+import type { PackedPlacedLog } from "@/lib/logs/packed-placed-log";
+import type { BuiltAnswers } from "@/lib/server/logs/built-answers";
 import { LogFailure, type LogErrorPlace } from "@/lib/server/logs/log-failure";
 import type { ThreadMessage, ThreadTask } from "@/lib/server/logs/thread-messages";
 
@@ -14,9 +15,11 @@ const MEBIBYTE = 1024 * 1024;
 interface AskOptions {
   signal: AbortSignal;
   onProgress(stage: string, progress: number): void;
+  /** The log stands on the ground; what is told about it follows. */
+  onPlaced?(placed: PackedPlacedLog): void;
 }
 
-type Answer = Exclude<ThreadMessage, { kind: "progress" }>;
+type Answer = Exclude<ThreadMessage, { kind: "progress" } | { kind: "placed" }>;
 
 /** One reading thread. It is killed when it takes too long or too much memory, when it breaks, and on a signal. */
 export class LogThread {
@@ -46,7 +49,7 @@ export class LogThread {
 
   async read(task: Omit<Extract<ThreadTask, { task: "read" }>, "task">, options: AskOptions) {
     const answer = await this.ask({ task: "read", ...task }, options);
-    return (answer as { outcome: Result<BuiltPackage, LogErrorPlace> }).outcome;
+    return (answer as { outcome: Result<BuiltAnswers, LogErrorPlace> }).outcome;
   }
 
   /** Ends the thread at once, whatever it does. */
@@ -69,6 +72,7 @@ export class LogThread {
       const watch = this.watchLimits(killWith);
       const onMessage = (message: ThreadMessage) => {
         if (message.kind === "progress") return options.onProgress(message.stage, message.progress);
+        if (message.kind === "placed") return options.onPlaced?.(message.placed);
         if (message.kind === "broken") return killWith(brokenFailure(message.message));
         finish(() => settle(message));
       };

@@ -2,16 +2,15 @@ import { withOrganisation } from "@/db/client";
 import { endJobs } from "@/db/queries/jobs";
 import { saveLogResult } from "@/db/queries/log-results";
 import { changeLog, findBoundaryOfLog, findMachineOfLog, type LogRow } from "@/db/queries/logs";
-import { writeLogVersion } from "@/db/queries/system/log-versions";
 import type { Inspection } from "@/lib/ingest/log-format";
+import type { PackedPlacedLog } from "@/lib/logs/packed-placed-log";
 import type { Seeder } from "@/lib/machines/machine";
 import type { Boundary } from "@/lib/schemas/geometry";
-import type { BuiltPackage } from "@/lib/server/logs/built-package";
 import { chooseMapping, type ChosenMapping } from "@/lib/server/logs/choose-mapping";
-import { LogFailure, LogInterrupted } from "@/lib/server/logs/log-failure";
+import { LogFailure } from "@/lib/server/logs/log-failure";
 import type { LogProgress } from "@/lib/server/logs/log-progress";
-import { toPlacedBody } from "@/lib/server/logs/placed-body";
 import type { ThreadPool } from "@/lib/server/logs/thread-pool";
+import { VersionWriter } from "@/lib/server/logs/version-writer";
 import { workerScope } from "@/lib/server/logs/worker-scope";
 
 /**
@@ -34,9 +33,16 @@ export async function readAndStore(log: LogRow, threads: ThreadPool, progress: L
     if (!chosen) return waitForMapping(log, inspected.value, progress);
     progress.tell("Reading the records", 0.05);
     const { machine, boundary } = context;
-    const built = await thread.read({ file, mapping: chosen.mapping, machine, boundary }, ask);
-    if (!built.ok) throw new LogFailure(built.error);
-    await store(log, built.value, { machine, progress });
+    const writer = new VersionWriter(log, machine, progress);
+    const onPlaced = (placed: PackedPlacedLog) => writer.begin(placed);
+    try {
+      const built = await thread.read({ file, mapping: chosen.mapping, machine, boundary }, { ...ask, onPlaced });
+      if (!built.ok) throw new LogFailure(built.error);
+      await writer.finish(built.value);
+    } catch (error) {
+      await writer.undo(error);
+      throw error;
+    }
   });
 }
 
@@ -82,38 +88,4 @@ async function waitForMapping(log: LogRow, inspection: Inspection, progress: Log
     await changeLog(tx, scope, log.id, { status: "needs-mapping", stage, progress: 0, notes: inspection.notes });
     await endJobs(tx, scope, { subject: log.id, state: "done" });
   });
-}
-
-async function store(
-  log: LogRow,
-  built: BuiltPackage,
-  context: { machine: Seeder | null; progress: LogProgress },
-): Promise<void> {
-  const { progress } = context;
-  progress.tell("Storing the readings", 0.85, "building");
-  const isStored = await writeLogVersion({
-    organisationId: log.organisationId,
-    logId: log.id,
-    version: log.version + 1,
-    placed: built.placed,
-    results: [...built.results, { kind: "placed", body: toPlacedBody(built.placed) }],
-    change: {
-      ...built.summary,
-      notes: built.notes,
-      machineBody: context.machine,
-      status: "ready",
-      stage: "Ready",
-      progress: 1,
-      error: null,
-    },
-    onProgress: (share) => {
-      progress.signal.throwIfAborted();
-      progress.tell("Storing the readings", 0.85 + 0.14 * share, "building");
-    },
-    beforeSwitch: () => progress.end(),
-  });
-  if (!isStored) {
-    progress.signal.throwIfAborted();
-    throw new LogInterrupted("cancelled");
-  }
 }

@@ -4,16 +4,15 @@ import { inspectLog, readLog } from "@/lib/ingest";
 import { fail, succeed } from "@/lib/result";
 import { S3Storage } from "@/lib/server/adapters/storage/s3-storage";
 import type { Environment } from "@/lib/server/env";
-import { buildPackage } from "@/lib/server/logs/build-package";
-import { buffersOf } from "@/lib/server/logs/built-package";
+import { buildAnswers, packPlacedLog, placeLog } from "@/lib/server/logs/build-answers";
 import { storedSource } from "@/lib/server/logs/log-file";
 import { LogFailure } from "@/lib/server/logs/log-failure";
 import type { ThreadMessage, ThreadTask } from "@/lib/server/logs/thread-messages";
 
 const storage = new S3Storage((workerData as { env: Environment }).env);
 
-function say(message: ThreadMessage, handOver: ArrayBuffer[] = []): void {
-  parentPort?.postMessage(message, handOver);
+function say(message: ThreadMessage): void {
+  parentPort?.postMessage(message);
 }
 
 function tell(stage: string, progress: number): void {
@@ -35,8 +34,11 @@ async function read(task: Extract<ThreadTask, { task: "read" }>): Promise<void> 
   const outcome = await readLog(storedSource(storage, task.file), task.mapping, { onProgress });
   if (!outcome.ok) return say({ kind: "built", outcome });
   try {
-    const built = buildPackage(outcome.value, { machine: task.machine, boundary: task.boundary, tell });
-    say({ kind: "built", outcome: succeed(built) }, buffersOf(built));
+    tell("Placing every row on the ground", 0.5);
+    const built = placeLog(outcome.value, task.machine, task.boundary);
+    // A copy goes to be stored while this thread works on: writing and statistics then take one time, not two.
+    say({ kind: "placed", placed: packPlacedLog(built.placed) });
+    say({ kind: "built", outcome: succeed(buildAnswers(built, { boundary: task.boundary, tell })) });
   } catch (error) {
     if (!(error instanceof LogFailure)) throw error;
     say({ kind: "built", outcome: fail(error.place) });

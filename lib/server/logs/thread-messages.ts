@@ -4,7 +4,8 @@ import type { LogMapping } from "@/lib/ingest/mapping";
 import type { Seeder } from "@/lib/machines/machine";
 import type { Result } from "@/lib/result";
 import type { Boundary } from "@/lib/schemas/geometry";
-import type { BuiltPackage } from "@/lib/server/logs/built-package";
+import type { PackedPlacedLog } from "@/lib/logs/packed-placed-log";
+import type { BuiltAnswers } from "@/lib/server/logs/built-answers";
 import type { LogFile } from "@/lib/server/logs/log-file";
 import type { LogErrorPlace } from "@/lib/server/logs/log-failure";
 
@@ -13,9 +14,10 @@ export type ThreadTask =
   | { task: "inspect"; file: LogFile; near: { longitude: number; latitude: number } | null }
   | { task: "read"; file: LogFile; mapping: LogMapping; machine: Seeder | null; boundary: Boundary | null };
 
-/** What the thread says: progress any number of times, then one of the others. */
+/** What the thread says: progress any number of times, the placed log once it stands, then one of the others. */
 export type ThreadMessage =
   | { kind: "progress"; stage: string; progress: number }
+  | { kind: "placed"; placed: PackedPlacedLog }
   | { kind: "inspected"; outcome: Result<Inspection, IngestError> }
-  | { kind: "built"; outcome: Result<BuiltPackage, LogErrorPlace> }
+  | { kind: "built"; outcome: Result<BuiltAnswers, LogErrorPlace> }
   | { kind: "broken"; message: string };
