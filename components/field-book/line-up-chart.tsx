@@ -36,7 +36,6 @@ export function LineUpChart({ statistics, classes }: LineUpChartProps) {
   const { width, height } = useSize(box);
   const { store } = useBook();
   const selected = useBookState((state) => state.row);
-  const pointed = useBookState((state) => state.cursor?.row ?? null);
   const { items } = statistics;
   const hasStrip = items.some((item) => shareOf(item) !== null);
   const target = statistics.channel === "margin" ? (classes?.context.targetMarginN ?? null) : null;
@@ -62,13 +61,14 @@ export function LineUpChart({ statistics, classes }: LineUpChartProps) {
         <svg width={width} height={height} className="absolute inset-0 block" role="presentation">
           <ValueAxis plot={plot} statistics={statistics} />
           {target !== null ? <TargetLine plot={plot} value={target} /> : null}
+          <PointedRow plot={plot} />
           {items.map((item) => (
             <RowMark
               key={item.row}
               item={item}
               plot={plot}
               colour={colourOf(item, classes)}
-              state={{ selected: item.row === selected, pointed: item.row === pointed }}
+              selected={item.row === selected}
               onChoose={() => store.getState().chooseRow(item.row)}
             />
           ))}
@@ -170,15 +170,23 @@ function TargetLine({ plot, value }: { plot: Plot; value: number }) {
   );
 }
 
+/** A shade behind the row pointed at; on its own, so that pointing does not draw every row again. */
+function PointedRow({ plot }: { plot: Plot }) {
+  const row = useBookState((state) => state.cursor?.row ?? null);
+  if (row === null) return null;
+  const x = LEFT_PX + (row - 1) * plot.rowPx;
+  return <rect x={x} y={0} width={plot.rowPx} height={plot.height} fill="#1E2430" fillOpacity={0.08} />;
+}
+
 interface RowMarkProps {
   item: RowStatisticsItem;
   plot: Plot;
   colour: string;
-  state: { selected: boolean; pointed: boolean };
+  selected: boolean;
   onChoose: () => void;
 }
 
-function RowMark({ item, plot, colour, state, onChoose }: RowMarkProps) {
+function RowMark({ item, plot, colour, selected, onChoose }: RowMarkProps) {
   const left = LEFT_PX + (item.row - 1) * plot.rowPx;
   const middle = left + plot.rowPx / 2;
   const boxWidth = Math.max(3, Math.min(16, plot.rowPx * 0.62));
@@ -188,21 +196,14 @@ function RowMark({ item, plot, colour, state, onChoose }: RowMarkProps) {
     <g
       id={`line-up-row-${item.row}`}
       role="option"
-      aria-selected={state.selected}
+      aria-selected={selected}
       aria-label={words}
       data-row={item.row}
       onClick={onChoose}
       className="cursor-pointer"
     >
       <title>{words}</title>
-      <rect
-        x={left}
-        y={0}
-        width={plot.rowPx}
-        height={plot.height}
-        fill="#1E2430"
-        fillOpacity={state.pointed ? 0.06 : 0}
-      />
+      <rect x={left} y={0} width={plot.rowPx} height={plot.height} fill="#1E2430" fillOpacity={0} />
       {item.p05 !== null && item.p95 !== null && item.p50 !== null ? (
         <g>
           <line x1={middle} x2={middle} y1={plot.yOf(item.p95)} y2={plot.yOf(item.p05)} stroke="#6B7280" />
@@ -235,7 +236,7 @@ function RowMark({ item, plot, colour, state, onChoose }: RowMarkProps) {
         />
       ) : null}
       {item.flagged ? <rect x={middle - 4} y={1} width={8} height={8} fill="#9A4A2C" /> : null}
-      {state.selected ? (
+      {selected ? (
         <rect
           x={left + 0.5}
           y={1}

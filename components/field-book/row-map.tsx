@@ -2,6 +2,7 @@
 
 import type { Map as MapLibreMap } from "maplibre-gl";
 import { useState } from "react";
+import { CellMark } from "@/components/field-book/cell-mark";
 import { useBook, useBookState } from "@/components/field-book/field-book-context";
 import type { Classes } from "@/components/field-book/use-classes";
 import { useMapGround } from "@/components/field-book/use-map-ground";
@@ -42,6 +43,8 @@ export function RowMap({ basemap, bounds, boundary, classes, track, gentle }: Ro
       description={`${channelWords(channel).name} of ${log.counts.rows} rows in ${log.counts.passes} passes, north up. The unrolled pass, the line-up and its table give the same readings in numbers.`}
       onMap={setMap}
       gentle={gentle}
-    />
+    >
+      {map ? <CellMark map={map} /> : null}
+    </MapCanvas>
   );
 }

@@ -1,34 +1,26 @@
 "use client";
 
-import { useQuery } from "@tanstack/react-query";
 import type { FeatureCollection, Geometry, Polygon, Position } from "geojson";
 import type { Map as MapLibreMap } from "maplibre-gl";
 import { useEffect } from "react";
 import { useBook, useBookState } from "@/components/field-book/field-book-context";
-import { trackQuery } from "@/components/field-book/use-log-data";
 import { setOverlay } from "@/components/map/overlay-layers";
 import { openBounds } from "@/lib/map-state/geometry-bounds";
-import { cellRing, stretchRing } from "@/lib/map-state/pass-cells";
+import { stretchRing } from "@/lib/map-state/pass-cells";
 import { recordAtDistance, type PassTrack } from "@/lib/map-state/pass-track";
 
 function polygonOf(ring: Position[]): Polygon {
   return { type: "Polygon", coordinates: [ring] };
 }
 
-/** Outlines of what is chosen and pointed at, the framing that somebody asked for, and the view for the address. */
+/** Outlines of what is chosen, the framing that somebody asked for, and the view for the address. */
 export function useMapMarks(map: MapLibreMap | null, track: PassTrack | undefined): void {
-  const { logVersion, store } = useBook();
-  const channel = useBookState((state) => state.channel);
+  const { store } = useBook();
   const pass = useBookState((state) => state.pass);
   const row = useBookState((state) => state.row);
-  const cursor = useBookState((state) => state.cursor);
   const stretch = useBookState((state) => state.stretch);
   const place = useBookState((state) => state.place);
   const frame = useBookState((state) => state.frame);
-  const { data: pointed } = useQuery({
-    ...trackQuery(logVersion, channel, cursor?.pass ?? 0),
-    enabled: cursor !== null,
-  });
   const chosen = track?.pass === pass ? track : undefined;
   useEffect(() => {
     if (map) setOverlay(map, "pass", chosen ? polygonOf(stretchRing(chosen, null)) : null);
@@ -38,11 +30,6 @@ export function useMapMarks(map: MapLibreMap | null, track: PassTrack | undefine
     const has = chosen !== undefined && row !== null && row <= chosen.rowOffsetM.length;
     setOverlay(map, "row", has ? polygonOf(stretchRing(chosen, row)) : null);
   }, [map, chosen, row]);
-  useEffect(() => {
-    if (!map) return;
-    const within = cursor !== null && pointed?.pass === cursor.pass && cursor.record < pointed.records;
-    setOverlay(map, "cell", within ? polygonOf(cellRing(pointed, cursor.record, cursor.row)) : null);
-  }, [map, cursor, pointed]);
   useEffect(() => {
     if (!map) return;
     const within = chosen !== undefined && stretch?.pass === chosen.pass;

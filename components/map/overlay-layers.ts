@@ -3,7 +3,7 @@ import type { GeoJSONSource, LayerSpecification, Map as MapLibreMap } from "mapl
 import { GRID_LABELS, GRID_LINES, GRID_SOURCES, MAP_COLOURS } from "@/components/map/base-style";
 
 /** Things drawn over or under the values, each fed by its own source. */
-const OVERLAYS = ["boundary", "pass", "stretch", "row", "cell", "places"] as const;
+const OVERLAYS = ["boundary", "pass", "stretch", "row", "places"] as const;
 export type OverlayName = (typeof OVERLAYS)[number] | (typeof GRID_SOURCES)[number];
 export type OverlayData = Geometry | FeatureCollection | null;
 
@@ -52,8 +52,6 @@ const ABOVE: LayerSpecification[] = [
       "circle-stroke-width": 2.5,
     },
   },
-  outline("cell", "cell-halo", { colour: MAP_COLOURS.sheet, width: 4 }),
-  outline("cell", "cell-line", { colour: MAP_COLOURS.ink, width: 2 }),
   GRID_LABELS,
 ];
 
