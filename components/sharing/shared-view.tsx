@@ -85,7 +85,10 @@ function WhatNext({ findings }: { findings: Finding[] }) {
       <h2 className="mb-2 text-section">What is to be checked</h2>
       <ul className="list-disc space-y-1 pl-5">
         {asks.map((finding) => (
-          <li key={finding.id}>{finding.check}</li>
+          <li key={finding.id}>
+            {finding.row ? `Row ${finding.row}: ` : ""}
+            {finding.check}
+          </li>
         ))}
       </ul>
     </section>

@@ -25,10 +25,10 @@ export function parseEntry(text: string): number | undefined {
   return /^[-+]?\d*\.?\d+$/.test(clean) ? Number(clean) : NaN;
 }
 
-/** Enough figures that a value shown and typed back is the same machine: a tenth of a millimetre, a hundredth of a pound. */
+/** Five figures are enough to read; the value itself stays exact until somebody types another. */
 function writeEntry(valueSi: number | undefined, factor: number): string {
   if (valueSi === undefined || Number.isNaN(valueSi)) return "";
-  return String(Number((valueSi / factor).toPrecision(7)));
+  return String(Number((valueSi / factor).toPrecision(5)));
 }
 
 /** A number with a unit, kept in SI and typed in the person's units. To set it from outside, give it another `key`. */
