@@ -98,8 +98,8 @@ function EdgeField({ label, value, units, onEdge }: EdgeFieldProps) {
   );
 }
 
-/** The unit's own decimals, more where the edge is small; never more than four figures. */
+/** The unit's own decimals, more where the edge is small, with a true minus sign. */
 function edgeText(value: number, decimals: number): string {
-  if (Math.abs(value) >= 10 ** (1 - decimals) || value === 0) return String(Number(value.toFixed(decimals)));
-  return String(Number(value.toPrecision(2)));
+  const isLarge = Math.abs(value) >= 10 ** (1 - decimals) || value === 0;
+  return String(Number(isLarge ? value.toFixed(decimals) : value.toPrecision(2))).replace("-", "\u2212");
 }

@@ -44,17 +44,29 @@ interface Steps {
   resolution: number | null;
 }
 
-const MOST_BINS = 120;
+const BINS = 100;
 
-/** Bins as wide as a whole number of the log's own steps, each step in the middle of its part: others would look like a comb. */
+/**
+ * Counts readings in equal bins. A reading logged in steps stands for all values within half a step of it and is shared out
+ * over the bins that these reach: counted at a point, steps and bins out of tune would look like a comb.
+ */
 function histogramInSteps(values: Float32Array, { minimum, maximum, resolution }: Steps): Histogram {
   const range = maximum - minimum;
-  if (!resolution || !(range > 0)) return histogramOf(values, minimum, maximum, MOST_BINS);
-  const stepsPerBin = Math.max(1, Math.ceil((range / resolution + 1) / MOST_BINS));
-  const binWidth = stepsPerBin * resolution;
+  // Steps so coarse that there are fewer than bins get a bin each.
+  if (!resolution || !(range > 0)) return histogramOf(values, minimum, maximum, BINS);
   const low = minimum - resolution / 2;
-  const bins = Math.max(1, Math.ceil((maximum + resolution / 2 - low) / binWidth - 1e-6));
-  return histogramOf(values, low, low + bins * binWidth, bins);
+  const bins = Math.min(BINS, Math.round(range / resolution) + 1);
+  const width = (range + resolution) / bins;
+  const counts = new Float64Array(bins);
+  for (const value of values) {
+    if (!Number.isFinite(value)) continue;
+    const from = Math.max(0, (value - resolution / 2 - low) / width);
+    const to = Math.min(bins, (value + resolution / 2 - low) / width);
+    for (let bin = Math.floor(from); bin < to; bin += 1) {
+      counts[bin]! += (Math.min(to, bin + 1) - Math.max(from, bin)) / (to - from);
+    }
+  }
+  return { minimum: low, maximum: low + bins * width, counts: Array.from(counts, Math.round) };
 }
 
 /** Without what was logged while lifted and turning, which would fill a class of its own. */

@@ -37,4 +37,20 @@ describe("summariseLog", () => {
     expect(summary.passes[2]!.to - summary.passes[2]!.from).toBe(1);
     expect(summary.histogram.counts.reduce((a, b) => a + b)).toBe(2 * 40 * 4);
   });
+
+  it("counts steps evenly also where bins and steps are out of tune", () => {
+    // 160 steps of 0.5, alike often, in 100 bins: 1.6 steps a bin.
+    const { placed, channel } = placeStraightPasses({ ...LOG, value: (_, record, row) => 0.5 * (record * 4 + row) });
+    const { counts } = summariseLog(placed, { ...channel, resolution: 0.5 }, 60).histogram;
+    const each = (3 * 160) / counts.length;
+    for (const count of counts) expect(Math.abs(count - each)).toBeLessThanOrEqual(1);
+  });
+
+  it("leaves out what was logged while lifted", () => {
+    const { placed, channel } = placeStraightPasses({ ...LOG, value: () => 5 });
+    placed.passes.pop();
+    channel.values.fill(-999, 80 * 4);
+    const { histogram } = summariseLog(placed, channel, 60);
+    expect(histogram.minimum).toBeGreaterThan(0);
+  });
 });
