@@ -26,7 +26,7 @@ export function findUnderTarget(input: VerdictInput): Finding[] {
   return [
     makeFinding({
       kind: "rows-under-target",
-      severity: "act",
+      severity: worstShare >= LIMIT.actUnderTargetShare ? "act" : "look",
       sentenceTemplate: `${rows.length === 1 ? ONE_UNDER : SEVERAL_UNDER}${reason.text}`,
       values: {
         count: { value: rows.length, unit: "1" },

@@ -12,7 +12,7 @@ import { MIN_ROWS_TO_RANK } from "@/lib/statistics/row-deviation";
 import type { RowStatistics } from "@/lib/statistics/row-statistics";
 
 export interface PassVerdict {
-  /** Rows under target (margin < target - deadband) on at least 5 % of their distance. */
+  /** Rows under target (margin < target - deadband) on at least 10 % of their distance. */
   rowsUnderTarget: number[];
   /** Rows at their force limit on at least 5 % of their distance. */
   rowsAtLimit: number[];

@@ -15,8 +15,13 @@ export interface VerdictInput {
 
 /** Thresholds of the verdict, stated with it. Shares are of distance. */
 export const VERDICT_THRESHOLDS = {
-  /** A row counts as under target from this share of its distance (contact "good" is 95 %: common practice, no source). */
-  underTargetShare: 0.05,
+  /**
+   * A row counts as under target from this share of its distance (common practice, no source). Not 5 %: the first metres
+   * after each turn alone can take that much of a short field.
+   */
+  underTargetShare: 0.1,
+  /** From this share of its distance a row under target is something to act on. */
+  actUnderTargetShare: 0.25,
   atLimitShare: 0.05,
   contactLostShare: 0.05,
   overTargetShare: 0.5,
