@@ -27,7 +27,8 @@ describe("a row counts as under target", () => {
   });
 
   it("to look at from a tenth of its distance, to act on from a quarter", () => {
-    const severity = (under: number) => judge(under).findings.find(({ kind }) => kind === "rows-under-target")?.severity;
+    const severity = (under: number) =>
+      judge(under).findings.find(({ kind }) => kind === "rows-under-target")?.severity;
     expect(judge(15).rowsUnderTarget).toEqual([3]);
     expect([severity(15), severity(30)]).toEqual(["look", "act"]);
   });
