@@ -9,6 +9,13 @@ function isHttps(): boolean {
   return (process.env.BASE_URL ?? "").startsWith("https:");
 }
 
+/** Where an installation's own basemap comes from, if it names one; see BASEMAP_STYLE_URL and BASEMAP_TILES_URL. */
+function basemapOrigins(): string {
+  const addresses = [process.env.BASEMAP_STYLE_URL, process.env.BASEMAP_TILES_URL];
+  const origins = addresses.flatMap((address) => (address && URL.canParse(address) ? [new URL(address).origin] : []));
+  return [...new Set(origins)].map((origin) => ` ${origin}`).join("");
+}
+
 /**
  * What a page may load: its own origin, and scripts that carry this request's nonce.
  * `style-src` needs `unsafe-inline`: dialogs and menus (radix) lock scrolling with a style element of their own, and
@@ -22,9 +29,9 @@ function contentSecurityPolicy(nonce: string): string {
     // React's development build uses eval to show call stacks.
     `script-src 'self' 'nonce-${nonce}' 'strict-dynamic'${isDevelopment ? " 'unsafe-eval'" : ""}`,
     "style-src 'self' 'unsafe-inline'",
-    "img-src 'self' data: blob:",
+    `img-src 'self' data: blob:${basemapOrigins()}`,
     "font-src 'self' data:",
-    `connect-src 'self'${isDevelopment ? " ws:" : ""}`,
+    `connect-src 'self'${basemapOrigins()}${isDevelopment ? " ws:" : ""}`,
     "worker-src 'self' blob:",
     "object-src 'none'",
     "base-uri 'self'",

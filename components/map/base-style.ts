@@ -12,19 +12,32 @@ export const MAP_COLOURS = {
   slate: "#2F5D80",
 } as const;
 
+const FONT_FACES: StyleSpecification["font-faces"] = { "Roboto Flex": [{ url: "/basemap/roboto-flex.woff2" }] };
+
+/** The style to open the map with: the installation's own, with our font for the grid's numbers, or the offline default. */
+export async function chooseStyle(basemap: BasemapConfig): Promise<StyleSpecification> {
+  if (!basemap.styleUrl) return baseStyle(basemap);
+  const answer = await fetch(basemap.styleUrl);
+  if (!answer.ok) return baseStyle(basemap);
+  const style = (await answer.json()) as StyleSpecification;
+  return { ...style, "font-faces": { ...style["font-faces"], ...FONT_FACES } };
+}
+
 /**
  * White ground, and whatever tiles the installation names. Land and borders come in later, and only once somebody zooms out
  * so far that they mean something (see map-grid).
  */
-export function baseStyle({ tilesUrl }: BasemapConfig): StyleSpecification {
+export function baseStyle({ tilesUrl, attribution }: BasemapConfig): StyleSpecification {
   const layers: LayerSpecification[] = [
     { id: "ground", type: "background", paint: { "background-color": MAP_COLOURS.sheet } },
   ];
   if (tilesUrl) layers.push({ id: "picture", type: "raster", source: "picture" });
   return {
     version: 8,
-    "font-faces": { "Roboto Flex": [{ url: "/basemap/roboto-flex.woff2" }] },
-    sources: tilesUrl ? { picture: { type: "raster", tiles: [tilesUrl], tileSize: 256 } } : {},
+    "font-faces": FONT_FACES,
+    sources: tilesUrl
+      ? { picture: { type: "raster", tiles: [tilesUrl], tileSize: 256, attribution: attribution ?? "" } }
+      : {},
     layers,
   };
 }

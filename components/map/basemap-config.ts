@@ -4,6 +4,8 @@ export interface BasemapConfig {
   styleUrl: string | null;
   /** Raster tiles, with {z}, {x} and {y}. */
   tilesUrl: string | null;
+  /** Who made the tiles, as their licence wants it shown. */
+  attribution: string | null;
 }
 
-export const OFFLINE_BASEMAP: BasemapConfig = { styleUrl: null, tilesUrl: null };
+export const OFFLINE_BASEMAP: BasemapConfig = { styleUrl: null, tilesUrl: null, attribution: null };

@@ -3,7 +3,7 @@
 import "maplibre-gl/dist/maplibre-gl.css";
 import type { Map as MapLibreMap } from "maplibre-gl";
 import { useEffect, useRef, useState, type ReactNode } from "react";
-import { baseStyle } from "@/components/map/base-style";
+import { chooseStyle } from "@/components/map/base-style";
 import type { BasemapConfig } from "@/components/map/basemap-config";
 import { loadMapLibre } from "@/components/map/load-maplibre";
 import { MapButtons } from "@/components/map/map-buttons";
@@ -90,13 +90,13 @@ async function openMap(
   container: HTMLElement,
   { basemap, bounds, view, gentle, readOnly }: MapCanvasProps,
 ): Promise<MapLibreMap> {
-  const maplibre = await loadMapLibre();
+  const [maplibre, style] = await Promise.all([loadMapLibre(), chooseStyle(basemap)]);
   const opening = view
     ? { center: [view.longitude, view.latitude] as [number, number], zoom: view.zoom }
     : { bounds, fitBoundsOptions: { padding: FIT_PADDING_PX } };
   const map = new maplibre.Map({
     container,
-    style: basemap.styleUrl ?? baseStyle(basemap),
+    style,
     ...opening,
     maxZoom: 22,
     attributionControl: basemap.styleUrl || basemap.tilesUrl ? { compact: true } : false,

@@ -15,6 +15,7 @@ export default async function RowsPage({ params }: RowsPageProps) {
   const basemap = {
     styleUrl: process.env.BASEMAP_STYLE_URL || null,
     tilesUrl: process.env.BASEMAP_TILES_URL || null,
+    attribution: process.env.BASEMAP_ATTRIBUTION || null,
   };
   return <FieldBook fieldId={fieldId} logsHref={`/${org}/fields/${fieldId}/logs`} basemap={basemap} />;
 }
