@@ -23,7 +23,9 @@ export function drawGrid(map: MapLibreMap, anchor: [number, number], units: Grid
 
 /** Brings in land and borders the first time the view is wide enough for them. */
 export function addAtlasWhenWide(map: MapLibreMap): void {
-  if (map.getZoom() >= ATLAS_BELOW_ZOOM || map.getSource("atlas-land")) return;
+  // A basemap of the installation's own shows these better.
+  const isOffline = map.getLayer("ground") !== undefined && map.getLayer("picture") === undefined;
+  if (!isOffline || map.getZoom() >= ATLAS_BELOW_ZOOM || map.getSource("atlas-land")) return;
   for (const { id, source, layer } of ATLAS_LAYERS) {
     map.addSource(id, source);
     map.addLayer(layer, "boundary-fill");
