@@ -1,6 +1,6 @@
 import { readHead, type ByteSource } from "@/lib/ingest/byte-source";
 // The kinds of file a log may come in, in the order they are tried.
-import { shapefileFormat } from "@/lib/ingest/formats/shapefile/format";
+import { zipFormat } from "@/lib/ingest/formats/zip/format";
 import { geojsonFormat } from "@/lib/ingest/formats/geojson/format";
 import { csvFormat } from "@/lib/ingest/formats/csv/format";
 import { IngestFailure, ingestError, stopReading, type IngestError } from "@/lib/ingest/ingest-error";
@@ -9,7 +9,7 @@ import type { LogMapping } from "@/lib/ingest/mapping";
 import { isGzip, openText } from "@/lib/ingest/open-text";
 import { fail, succeed, type Result } from "@/lib/result";
 
-export const LOG_FORMATS: readonly LogFormat[] = [shapefileFormat, geojsonFormat, csvFormat];
+export const LOG_FORMATS: readonly LogFormat[] = [zipFormat, geojsonFormat, csvFormat];
 
 /** Bytes of the head that `detectFormat` wants. */
 export const DETECT_BYTES = 65_536;
@@ -46,7 +46,7 @@ async function findFormat(source: ByteSource): Promise<LogFormat> {
   if (format) return format;
   stopReading(
     "unknown-file-kind",
-    `"${source.name}" is no kind of log this program reads. Upload CSV, GeoJSON points or a zipped point shapefile.`,
+    `"${source.name}" is no kind of log this program reads. Upload CSV, GeoJSON, a zipped shapefile or zipped ISO 11783-10 task data.`,
   );
 }
 

@@ -10,6 +10,8 @@ export const INGEST_ERROR_CODES = [
   "archive-encrypted",
   "file-too-large",
   "several-layers",
+  "unknown-layer",
+  "task-data-damaged",
   "missing-part",
   "shapefile-damaged",
   "json-damaged",

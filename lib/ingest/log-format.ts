@@ -1,10 +1,11 @@
 import type { ByteSource } from "@/lib/ingest/byte-source";
+import type { ZipArchive } from "@/lib/ingest/formats/zip/open-zip";
 import type { LogMapping, LogShape } from "@/lib/ingest/mapping";
 import type { ChannelId } from "@/lib/logs/channel";
 import type { LogNote, MachineLog } from "@/lib/logs/machine-log";
 import type { UnitId } from "@/lib/units/unit-table";
 
-export type LogFormatId = "csv" | "geojson" | "shapefile";
+export type LogFormatId = "csv" | "geojson" | "shapefile" | "iso11783";
 
 /** What a column seems to mean. `unit` is null where nothing in the file says: a person must choose. */
 export interface ColumnProposal {
@@ -12,6 +13,8 @@ export interface ColumnProposal {
   row?: number;
   unit: UnitId | null;
   format?: string;
+  /** Values, in the file's own unit, that seem to stand for "nothing here". */
+  missing?: number[];
   /** 0..1. From 0.7 on, the header and the values agree. */
   confidence: number;
   /** One plain sentence: what the proposal rests on. */
@@ -32,6 +35,36 @@ export interface FoundColumn {
   words: string;
 }
 
+/** One of several logs in a file. Its columns are there so that a person can choose without the file being read again. */
+export interface LogLayer {
+  id: string;
+  label: string;
+  records: number;
+  shape: LogShape;
+  crs?: string;
+  columns: FoundColumn[];
+}
+
+/** A system the file's easting and northing may be in, offered where the file does not say. */
+export interface CrsCandidate {
+  crs: string;
+  /** "UTM zone 14 north, which puts the log 0.4 km from the field". */
+  words: string;
+}
+
+/** Where the rows of the machine stand, by the device description in the file. Row 1 first; metres. */
+export interface LoggedDevice {
+  name: string;
+  rows: number;
+  /** Right of the machine's reference point. */
+  rowOffsetsM: number[];
+  /** Ahead of the mean of the rows. */
+  rowForwardM: number[];
+  rowWidthsM: (number | null)[];
+  /** Behind the machine's reference point; null where the file does not say. */
+  rowsBehindReferenceM: number | null;
+}
+
 export interface Inspection {
   format: LogFormatId;
   shape: LogShape;
@@ -41,6 +74,11 @@ export interface Inspection {
   encoding?: string;
   /** Where the file itself says in which system its easting and northing are. */
   crs?: string;
+  /** Offered where the file holds easting and northing and does not say in which system; best first. */
+  crsCandidates?: CrsCandidate[];
+  /** Where the file holds several logs: all of them. `columns` are those of the first. */
+  layers?: LogLayer[];
+  device?: LoggedDevice;
   columns: FoundColumn[];
   recordsSampled: number;
   notes: LogNote[];
@@ -61,6 +99,8 @@ export interface ReadOptions {
 export interface ReadLog {
   log: MachineLog;
   notes: LogNote[];
+  /** Where the file describes the machine. */
+  device?: LoggedDevice;
 }
 
 /** One kind of file. `inspect` and `read` may throw IngestFailure; `lib/ingest/index.ts` turns that into a Result. */
@@ -71,6 +111,15 @@ export interface LogFormat {
   looksLike(head: Uint8Array, name: string): boolean;
   inspect(source: ByteSource, options: InspectOptions): Promise<Inspection>;
   read(source: ByteSource, mapping: LogMapping, options: ReadOptions): Promise<ReadLog>;
+}
+
+/** One kind of archive content. The archive is opened once, before anybody knows what is in it. */
+export interface ArchivedFormat {
+  id: LogFormatId;
+  label: string;
+  holds(archive: ZipArchive): boolean;
+  inspect(archive: ZipArchive, options: InspectOptions): Promise<Inspection>;
+  read(archive: ZipArchive, mapping: LogMapping, options: ReadOptions): Promise<ReadLog>;
 }
 
 /** Sizes beyond which reading stops with a clear error instead of exhausting the machine. */
@@ -85,4 +134,8 @@ export const READ_LIMITS = {
   /** Packed bytes of an archive, which is held in memory. */
   archiveBytes: 512 * 1024 * 1024,
   unpackedBytes: 2 * 1024 * 1024 * 1024,
+  /** Logs in one file. */
+  layers: 200,
+  /** Bytes of a device description, unpacked. */
+  xmlBytes: 64 * 1024 * 1024,
 } as const;

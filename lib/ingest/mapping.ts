@@ -21,6 +21,8 @@ export const MappedColumn = z.object({
   unit: z.enum(UNIT_IDS),
   /** `local`: the pattern of the time, such as `dd/MM/yyyy HH:mm:ss`; `bu/ac`: the bushel weight, `56 lb`; `row`: `from 0`. */
   format: z.string().trim().min(1).max(80).optional(),
+  /** Values, in the column's own unit, that stand for "nothing here", such as -999. */
+  missing: z.array(z.number().finite()).max(16).optional(),
 });
 export type MappedColumn = z.infer<typeof MappedColumn>;
 
@@ -35,6 +37,8 @@ export const LogMapping = z.object({
   crs: z.string().trim().min(1).max(500).optional(),
   /** IANA name for `local` times, such as `America/Chicago`. */
   timeZone: z.string().trim().min(1).max(80).optional(),
+  /** Which log of a file that holds several, by its id. */
+  layer: z.string().min(1).max(500).optional(),
   /** Name under which to keep this mapping as a recipe. */
   save: z.string().trim().min(1).max(120).optional(),
 });
@@ -73,9 +77,21 @@ export function headerSignature(inspection: Pick<Inspection, "format" | "shape" 
   return JSON.stringify([inspection.format, inspection.shape, ...inspection.columns.map((column) => column.name)]);
 }
 
-/** Whether a saved mapping can read this file: same shape, and every column it names is there. */
-export function mappingFits(mapping: LogMapping, inspection: Pick<Inspection, "shape" | "columns">): boolean {
+/** Columns of the log a mapping chooses in a file that holds several; null where it chooses none that is there. */
+export function chosenColumns(
+  mapping: Pick<LogMapping, "layer">,
+  { layers, columns }: Pick<Inspection, "layers" | "columns">,
+): Inspection["columns"] | null {
+  if (mapping.layer === undefined) return layers && layers.length > 1 ? null : columns;
+  return layers?.find((layer) => layer.id === mapping.layer)?.columns ?? null;
+}
+
+/** Whether a saved mapping can read this file: same shape, every column it names is there, and no choice of logs is open. */
+export function mappingFits(
+  mapping: LogMapping,
+  inspection: Pick<Inspection, "shape" | "columns" | "layers">,
+): boolean {
   if (mapping.shape !== inspection.shape) return false;
-  const names = new Set(inspection.columns.map((column) => column.name));
+  const names = new Set(chosenColumns(mapping, inspection)?.map((column) => column.name));
   return mapping.columns.every((column) => names.has(column.name));
 }

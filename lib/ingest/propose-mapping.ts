@@ -7,9 +7,18 @@ export function proposeMapping(inspection: Inspection): { mapping: LogMapping; u
   const columns: MappedColumn[] = [];
   for (const { name, proposal } of inspection.columns) {
     if (!proposal) continue;
-    const { channel, row, unit, format } = proposal;
+    const { channel, row, unit, format, missing } = proposal;
     if (unit === null) undecided.push(name);
-    else columns.push({ name, channel, ...(row === undefined ? {} : { row }), unit, ...(format ? { format } : {}) });
+    else {
+      columns.push({
+        name,
+        channel,
+        ...(row === undefined ? {} : { row }),
+        unit,
+        ...(format ? { format } : {}),
+        ...(missing ? { missing } : {}),
+      });
+    }
   }
   const { shape, crs } = inspection;
   return { mapping: { columns, shape, ...(crs === undefined ? {} : { crs }) }, undecided };

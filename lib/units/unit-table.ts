@@ -57,6 +57,7 @@ export const UNITS = {
   iso8601: { quantity: "clock", si: "s", factor: NaN, words: "ISO 8601 date and time" },
   "unix-s": { quantity: "clock", si: "s", factor: NaN, words: "seconds since 1970 (UTC)" },
   "unix-ms": { quantity: "clock", si: "s", factor: NaN, words: "milliseconds since 1970 (UTC)" },
+  "gps-week": { quantity: "clock", si: "s", factor: NaN, words: "GPS weeks since 6 January 1980" },
   "gps-s": { quantity: "clock", si: "s", factor: NaN, words: "GPS seconds since 6 January 1980" },
   local: { quantity: "clock", si: "s", factor: NaN, words: "local date and time" },
   percent: { quantity: "share", si: "fraction", factor: 0.01, words: "per cent" },
@@ -71,6 +72,7 @@ export const UNITS = {
   "bu/ac": { quantity: "arealMass", si: "kg/m2", factor: NaN, words: "bushels per acre" },
   "kg/s": { quantity: "massFlow", si: "kg/s", factor: 1, words: "kilograms per second" },
   "lb/s": { quantity: "massFlow", si: "kg/s", factor: POUND_KG, words: "pounds per second" },
+  Pa: { quantity: "pressure", si: "Pa", factor: 1, words: "pascals" },
   kPa: { quantity: "pressure", si: "Pa", factor: 1000, words: "kilopascals" },
   psi: {
     quantity: "pressure",

@@ -1,3 +1,6 @@
+import { keepFirstRecords } from "@/lib/simulator/benchmark-log";
+import { layOutRows } from "@/lib/simulator/row-layout";
+import type { SimulatedLog } from "@/lib/simulator/simulate-seeding-log";
 import { simulateHarvestLog } from "@/lib/simulator/simulate-harvest-log";
 import { LARKSPUR_COMBINE } from "@/lib/simulator/scenario/larkspur-machines";
 import { createLocalPlane } from "@/lib/geo/local-plane";
@@ -5,6 +8,7 @@ import { rectangleRing } from "@/lib/simulator/field-ring";
 import { writeLongCsv, writeWideCsv } from "@/lib/simulator/writers/write-csv";
 import { writeGeoJson } from "@/lib/simulator/writers/write-geojson";
 import { writeShapefileZip } from "@/lib/simulator/writers/write-shapefile";
+import { writeTaskDataZip } from "@/lib/simulator/writers/write-task-data";
 import { buildBadFixtures } from "@/tests/support/build-bad-fixtures";
 import { createFixtureLog, describeFixtureTruth } from "@/tests/support/fixture-logs";
 
@@ -53,9 +57,32 @@ export function buildFixtures(): Fixture[] {
       writeShapefileZip(log, "seeding", { force: "N", depth: "mm" }),
       "zipped point shapefile with .shp, .shx, .dbf, .prj and .cpg",
     ),
+    good(
+      "iso11783/one-task",
+      "input.zip",
+      writeTaskDataZip([{ designator: "East quarter, barley", log }], rowsOf(simulated)),
+      "ISO 11783-10 task data: one task, rows described by their offsets, clock five hours behind UTC, no margin",
+    ),
+    good(
+      "iso11783/several-tasks",
+      "input.zip",
+      writeTaskDataZip(
+        [
+          { designator: "West quarter, barley", log: keepFirstRecords(log, 60) },
+          { designator: "East quarter, barley", log },
+        ],
+        { ...rowsOf(simulated), letterCase: "lower", rowOrder: [5, 1, 8, 2, 7, 3, 6, 4], withMargin: true },
+      ),
+      "two tasks to choose from, small letters, rows listed out of order, margin under a maker's own identifier",
+    ),
     harvestFixture(),
     ...buildBadFixtures(log),
   ];
+}
+
+function rowsOf({ truth }: SimulatedLog): { rowOffsetsM: Float64Array; rowForwardM: Float64Array; rowWidthM: number } {
+  const { offsetM, forwardM, spacingM } = layOutRows(truth.options.machine);
+  return { rowOffsetsM: offsetM, rowForwardM: forwardM, rowWidthM: spacingM };
 }
 
 const POUNDS = { naming: "short", force: "lbf", depth: "in", speed: "mph", forceDecimals: 1 } as const;

@@ -5,7 +5,7 @@ import { fileURLToPath } from "node:url";
 import { buildFixtures, type Fixture } from "@/tests/support/build-fixtures";
 
 const ROOT = join(dirname(fileURLToPath(import.meta.url)), "../../fixtures");
-const OWN_FOLDERS = ["csv", "geojson", "shapefile", "bad"];
+const OWN_FOLDERS = ["csv", "geojson", "shapefile", "iso11783", "bad"];
 /** Only what stands between these belongs to this script. */
 const LIST_START = "<!-- simulated logs: written by tests/support/regenerate.ts -->";
 const LIST_END = "<!-- end of simulated logs -->";
@@ -36,7 +36,7 @@ function listFixtures(all: readonly Fixture[]): string {
     "",
     "",
     "Everything here is made by the simulator (`lib/simulator`), so every name and place is invented and the truth is known:",
-    "`truth.json` beside a file holds it in SI units, weighted as the API states. The six seeding files hold one and the same",
+    "`truth.json` beside a file holds it in SI units, weighted as the API states. The seeding files hold one and the same",
     "log. Make them again with `npx tsx tests/support/regenerate.ts`.",
     "",
     ...lines,

@@ -2,7 +2,7 @@ import { checkPositions } from "@/lib/ingest/columns/check-positions";
 import { describeProposal } from "@/lib/ingest/columns/describe-column";
 import { guessColumns } from "@/lib/ingest/columns/guess-columns";
 import { summariseCells } from "@/lib/ingest/columns/summarise-cells";
-import type { FoundColumn, InspectOptions } from "@/lib/ingest/log-format";
+import type { ColumnProposal, FoundColumn, InspectOptions } from "@/lib/ingest/log-format";
 import type { LogShape } from "@/lib/ingest/mapping";
 import type { NoteBook } from "@/lib/ingest/records/note-book";
 
@@ -14,6 +14,8 @@ export interface SampledColumns {
   decimalComma: boolean;
   near: InspectOptions["near"];
   notes: NoteBook;
+  /** Meanings the file itself states; undefined where only the header and the values tell. */
+  known?: readonly (ColumnProposal | undefined)[];
 }
 
 /** The columns of a file with what they hold and seem to mean. Same for every format. */
@@ -24,7 +26,7 @@ export function describeFoundColumns(sampled: SampledColumns): { columns: FoundC
     const summary = summaries[field];
     return summary ? [{ name, unitCell: units?.[field] ?? null, summary }] : [];
   });
-  const { proposals, shape } = guessColumns(evidence);
+  const { proposals, shape } = guessColumns(evidence, sampled.known);
   checkPositions(proposals, summaries, sampled);
   sampled.notes.set("unknown-unit", proposals.filter((proposal) => proposal?.unit === null).length);
   const columns = evidence.map(({ name, summary }, index) => {

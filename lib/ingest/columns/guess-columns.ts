@@ -15,14 +15,21 @@ export interface ColumnEvidence {
   summary: CellSummary;
 }
 
-/** What each column seems to mean, and the shape these meanings make. Nothing here is final: a person confirms. */
-export function guessColumns(columns: readonly ColumnEvidence[]): {
+/**
+ * What each column seems to mean, and the shape these meanings make. Nothing here is final: a person confirms. `known` meanings
+ * come from the file itself and stand; beside them a guess from words alone is never sure.
+ */
+export function guessColumns(
+  columns: readonly ColumnEvidence[],
+  known: readonly (ColumnProposal | undefined)[] = [],
+): {
   proposals: (ColumnProposal | null)[];
   shape: LogShape;
 } {
-  const proposals = columns.map(guessColumn);
+  const proposals = columns.map((column, index) => known[index] ?? guessColumn(column));
+  if (known.length > 0) proposals.forEach((proposal, index) => doubtGuess(known[index] ? null : proposal));
   keepBestOfEach(proposals);
-  settleRows(proposals);
+  if (known.length === 0) settleRows(proposals);
   return { proposals, shape: guessShape(proposals) };
 }
 
@@ -48,6 +55,14 @@ function guessColumn(column: ColumnEvidence): ColumnProposal | null {
     confidence: round(named.weight * trust * rowTrust),
     reason: `the header says "${named.words}"; ${reason}`,
   };
+}
+
+const DOUBT = 0.6;
+
+function doubtGuess(proposal: ColumnProposal | null): void {
+  if (!proposal) return;
+  proposal.confidence = Math.min(proposal.confidence, DOUBT);
+  proposal.reason += "; the file names it only in the maker's own words";
 }
 
 /** "Working (0 or 1)" is no row 1: brackets count only when they name a row. */

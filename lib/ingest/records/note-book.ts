@@ -63,7 +63,23 @@ function sayNote(code: string, count: number, { place, firstLine, column }: Note
     "null-geometry": `${n("feature", "features")} had no geometry and cannot be placed on the map.${first}`,
     "part-count-mismatch": `The .shp and .dbf parts disagree by ${records}; only the records found in both were read.`,
     "cut-short": "The .shp ends before the length it states: it was cut short on the way.",
+    "shapes-without-table": `${n(".shp file has", ".shp files have")} no .dbf beside ${count === 1 ? "it" : "them"} and ${count === 1 ? "was" : "were"} left out.`,
+    "area-centres":
+      "Each reading belongs to an area; it was placed at the centre of that area, which is where the rows were, not the antenna.",
+    "line-midpoints": "Each reading belongs to a line; it was placed halfway along it.",
+    "several-points": "Each reading belongs to several points; it was placed at their mean.",
     "no-projection": "The archive has no .prj part; the coordinates look like WGS 84 degrees and were read so.",
+    "absent-time-logs": `${n("time log is", "time logs are")} named by a task, but ${count === 1 ? "its files are" : "their files are"} not in the archive.`,
+    "local-clock":
+      "Times in task data are those of the machine's own clock, without a time zone; choose the zone it showed.",
+    "no-margin":
+      "Task data has no identifier for the load left on the gauge wheel (margin). The downforce in it is what was applied and is never taken for margin.",
+    "rows-by-number":
+      "The machine's description does not say where each row stands, so rows are numbered as it numbers them; check that row 1 is the leftmost.",
+    "presentation-disagrees": `The machine shows '${column ?? ""}' by a scale that does not fit the ISO 11783-11 dictionary; the dictionary was followed. Check a value you know.`,
+    "cut-record": "The last record is cut off and was left out; the records before it are whole.",
+    "unknown-values": `${n("value belongs", "values belong")} to no entry of the time log's header and ${count === 1 ? "was" : "were"} left out.${first}`,
+    "no-fix": `${records} ${count === 1 ? "was" : "were"} marked by the receiver as without a fix; ${count === 1 ? "its position counts" : "their positions count"} as missing.${first}`,
     "decimal-comma": "Numbers in this file are written with a decimal comma.",
     "no-header":
       "The first line holds numbers, so the columns have no names; they are called column 1, column 2 and so on.",

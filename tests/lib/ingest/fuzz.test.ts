@@ -32,11 +32,24 @@ const SHAPEFILE = zipOf({
   "a.prj": WGS84_PRJ,
 });
 
+const TASK_DATA = zipOf({
+  "TASKDATA/TASKDATA.XML":
+    '<ISO11783_TaskData><DVC A="DVC-1" B="Drill"><DET A="DET-1" B="1" C="1" E="0" F="0"/></DVC><TSK A="TSK-1"><TLG A="TLG00001" C="1"/></TSK></ISO11783_TaskData>',
+  "TASKDATA/TLG00001.XML": '<TIM A="" D="4"><PTN A="" B="" D=""/><DLV A="01AB" B="" C="DET-1"/></TIM>',
+  // Two records of 21 bytes: time, north, east, status, one value (ISO 11783-10 annex D).
+  "TASKDATA/TLG00001.BIN": Uint8Array.from(
+    Array.from({ length: 2 }, () => "e210ec024d3fc7ecbc18c79535c80401005804000".padEnd(42, "0").match(/../g) ?? [])
+      .flat()
+      .map((pair) => parseInt(pair, 16)),
+  ),
+});
+
 const FILES: [string, Uint8Array][] = [
   ["log.csv", CSV],
   ["log.csv.gz", gzipSync(CSV, { mtime: 0 })],
   ["log.geojson", GEOJSON],
   ["log.zip", SHAPEFILE],
+  ["tasks.zip", TASK_DATA],
 ];
 
 /** Some bytes changed, then perhaps cut: what a bad disk, a bad line or a bad person makes of a file. */
@@ -49,7 +62,8 @@ const damage = fc.record({
 async function outcomesOf(name: string, bytes: Uint8Array, chunkBytes: number) {
   const source = bytesSource(name, bytes, chunkBytes);
   const inspected = await inspectLog(source);
-  const mapping: LogMapping = inspected.ok ? proposeMapping(inspected.value).mapping : SIMPLE_MAPPING;
+  const proposed = inspected.ok ? proposeMapping(inspected.value).mapping : SIMPLE_MAPPING;
+  const mapping: LogMapping = { ...proposed, timeZone: "America/Chicago" };
   return [inspected, await readLog(source, mapping)] as const;
 }
 

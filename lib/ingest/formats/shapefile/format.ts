@@ -1,16 +1,22 @@
-import type { ByteSource } from "@/lib/ingest/byte-source";
+import { chooseLayer, describeLayers, type InspectedLayer } from "@/lib/ingest/columns/choose-layer";
 import { describeFoundColumns } from "@/lib/ingest/columns/describe-found-columns";
 import { nameColumns } from "@/lib/ingest/columns/name-columns";
 import { POINT_DEGREES, POINT_PLANE } from "@/lib/ingest/formats/point-columns";
-import { groupParts } from "@/lib/ingest/formats/shapefile/group-parts";
-import type { ZipEntry } from "@/lib/ingest/formats/shapefile/list-entries";
-import { isZip, openZip, unpackEntry } from "@/lib/ingest/formats/shapefile/open-zip";
+import { groupParts, holdsShapefile, type ShapefileParts } from "@/lib/ingest/formats/shapefile/group-parts";
 import { isDeleted, openDbf, readCellText, readCodePage, type DbfTable } from "@/lib/ingest/formats/shapefile/read-dbf";
 import { readShp, type ShapePoints } from "@/lib/ingest/formats/shapefile/read-shp";
+import type { ZipEntry } from "@/lib/ingest/formats/zip/list-entries";
+import { unpackEntry, type ZipArchive } from "@/lib/ingest/formats/zip/open-zip";
 import { stopReading } from "@/lib/ingest/ingest-error";
-import type { InspectOptions, Inspection, LogFormat, ReadLog, ReadOptions } from "@/lib/ingest/log-format";
+import {
+  READ_LIMITS,
+  type ArchivedFormat,
+  type InspectOptions,
+  type Inspection,
+  type ReadLog,
+  type ReadOptions,
+} from "@/lib/ingest/log-format";
 import type { LogMapping } from "@/lib/ingest/mapping";
-import { openText } from "@/lib/ingest/open-text";
 import { NoteBook } from "@/lib/ingest/records/note-book";
 import { createToDegrees, type ToDegrees } from "@/lib/ingest/records/project-position";
 import { readNumberBytes } from "@/lib/ingest/records/read-number-bytes";
@@ -23,12 +29,11 @@ const LOOK_BYTES = 2 * 1024 * 1024;
 /** Of a .prj or .cpg. */
 const TEXT_BYTES = 65_536;
 
-/** A zipped point shapefile: one point a record. */
-export const shapefileFormat: LogFormat = {
+/** Zipped shapefile: one shape a record; several layers to choose from. */
+export const shapefileFormat: ArchivedFormat = {
   id: "shapefile",
-  label: "Zipped point shapefile",
-  extensions: [".zip"],
-  looksLike: (head) => isZip(head),
+  label: "Zipped shapefile",
+  holds: holdsShapefile,
   inspect: inspectShapefile,
   read: readShapefile,
 };
@@ -43,10 +48,9 @@ interface Layer {
   notes: NoteBook;
 }
 
-/** The layer of an archive; with `maxBytes` only the beginnings of its parts, to look at. */
-async function openLayer(source: ByteSource, options: ReadOptions, maxBytes = Infinity): Promise<Layer> {
-  const archive = await openZip(openText(source, options));
-  const { shp, dbf, prj, cpg } = groupParts(archive);
+/** One layer of an archive; with `maxBytes` only the beginnings of its parts, to look at. */
+async function openLayer(archive: ZipArchive, parts: ShapefileParts, maxBytes = Infinity): Promise<Layer> {
+  const { shp, dbf, prj, cpg } = parts;
   const readText = async (entry: ZipEntry | null) =>
     entry ? new TextDecoder().decode(await unpackEntry(archive, entry, TEXT_BYTES)) : null;
   const points = readShp(await unpackEntry(archive, shp, maxBytes), shp.name);
@@ -58,17 +62,14 @@ async function openLayer(source: ByteSource, options: ReadOptions, maxBytes = In
     notes.set("part-count-mismatch", Math.max(points.x.length, table.stated, table.records) - records);
     if (points.isCutShort) notes.add("cut-short", points.x.length);
   }
-  if (records === 0) {
-    stopReading("no-readings", `The shapefile in "${source.name}" holds no records. Export the log again.`);
-  }
-  const { toDegrees, isDegrees } = judgeProjection(await readText(prj), points, {
-    name: source.name,
-    notes,
-  });
+  if (points.kind !== "point") notes.add(SHAPE_NOTES[points.kind]);
+  const { toDegrees, isDegrees } = judgeProjection(await readText(prj), points, { name: archive.name, notes });
   const point = isDegrees ? POINT_DEGREES : POINT_PLANE;
   const names = nameColumns([point.x, point.y, ...table.fields.map((field) => field.name)]);
   return { points, table, records, names, toDegrees, notes };
 }
+
+const SHAPE_NOTES = { points: "several-points", line: "line-midpoints", area: "area-centres" } as const;
 
 /** Degrees by the .prj, or by the look of the numbers where there is none (with a note). */
 function judgeProjection(
@@ -96,9 +97,35 @@ function pointOf({ points, toDegrees }: Layer, record: number): [x: number, y: n
   return toDegrees ? toDegrees(x, y) : [x, y];
 }
 
-async function inspectShapefile(source: ByteSource, options: InspectOptions): Promise<Inspection> {
-  const layer = await openLayer(source, options, LOOK_BYTES);
-  const { table, names, notes } = layer;
+async function inspectShapefile(archive: ZipArchive, options: InspectOptions): Promise<Inspection> {
+  const { layers, bare } = groupParts(archive);
+  const opened: (Layer & ShapefileParts)[] = [];
+  for (const part of layers.slice(0, READ_LIMITS.layers)) {
+    const layer = await openLayer(archive, part, LOOK_BYTES);
+    if (layer.records > 0) opened.push({ ...part, ...layer });
+  }
+  if (opened.length === 0) stopWithoutRecords(archive);
+  const inspected = opened.map((layer) => inspectLayer(layer, options));
+  const { notes, ...described } = describeLayers(inspected);
+  const firstId = described.layers?.[0]?.id;
+  const shown = Math.max(0, firstId === undefined ? 0 : inspected.findIndex(({ id }) => id === firstId));
+  const layer = opened[shown];
+  layer?.notes.set("shapes-without-table", bare.length);
+  return {
+    format: "shapefile",
+    ...described,
+    encoding: layer?.table.decoder.encoding,
+    recordsSampled: Math.min(layer?.records ?? 0, SAMPLE_RECORDS),
+    notes: [...notes, ...(layer?.notes.list("record") ?? [])],
+  };
+}
+
+function stopWithoutRecords({ name }: ZipArchive): never {
+  stopReading("no-readings", `The shapefile in "${name}" holds no records. Export the log again.`);
+}
+
+function inspectLayer(layer: Layer & ShapefileParts, options: InspectOptions): InspectedLayer {
+  const { id, label, table, names, notes } = layer;
   const count = Math.min(layer.records, SAMPLE_RECORDS);
   const sampled = Array.from({ length: count }, (_, record) => record).filter((record) => !isDeleted(table, record));
   const cells = (field: number): string[] => {
@@ -107,22 +134,16 @@ async function inspectShapefile(source: ByteSource, options: InspectOptions): Pr
     return column ? sampled.map((record) => readCellText(table, record, column)) : [];
   };
   const found = describeFoundColumns({ names, units: null, cells, decimalComma: false, near: options.near, notes });
-  return {
-    format: "shapefile",
-    shape: found.shape,
-    encoding: table.decoder.encoding,
-    columns: found.columns,
-    recordsSampled: sampled.length,
-    notes: notes.list("record"),
-  };
+  return { id, label, records: table.stated, ...found };
 }
 
 function coordinateText(value: number | undefined): string {
   return value === undefined || Number.isNaN(value) ? "" : String(value);
 }
 
-async function readShapefile(source: ByteSource, mapping: LogMapping, options: ReadOptions): Promise<ReadLog> {
-  const layer = await openLayer(source, options);
+async function readShapefile(archive: ZipArchive, mapping: LogMapping, options: ReadOptions): Promise<ReadLog> {
+  const layer = await openLayer(archive, chooseLayer(groupParts(archive).layers, mapping.layer, archive.name));
+  if (layer.records === 0) stopWithoutRecords(archive);
   const { table, names, records } = layer;
   const plan = buildReadPlan(mapping, names);
   const collector = new RecordCollector(plan, { expectedLines: records, place: "record" });
@@ -131,6 +152,9 @@ async function readShapefile(source: ByteSource, mapping: LogMapping, options: R
     return kind === CELL.skip ? [] : [{ column, field: index + 2, kind }];
   });
   for (let record = 0; record < records; record++) {
+    if (record % 4096 === 0 && options.signal?.aborted) {
+      stopReading("cancelled", `Reading "${archive.name}" was cancelled.`);
+    }
     if (isDeleted(table, record)) {
       collector.notes.add("deleted-records", record + 1);
       continue;

@@ -1,7 +1,12 @@
 import { stopReading } from "@/lib/ingest/ingest-error";
+import { centreOfRings, meanOfPoints, midpointOfLine, type Centre } from "@/lib/ingest/records/shape-centre";
 
-/** Positions of a point shapefile, in file order; NaN for a null shape. */
+/** What a record's shape is, and so where its reading stands: at the point, the centre of the area, halfway along the line. */
+export type ShapeKind = "point" | "points" | "line" | "area";
+
+/** Positions of a shapefile, one a record, in file order; NaN for a null shape. */
 export interface ShapePoints {
+  kind: ShapeKind;
   x: Float64Array;
   y: Float64Array;
   /** The file ends before the length its header states. */
@@ -10,19 +15,20 @@ export interface ShapePoints {
 
 const HEADER_BYTES = 100;
 const FILE_CODE = 9994;
-/** Point, PointZ, PointM: x and y stand first in each. */
-const POINT_TYPES: ReadonlySet<number> = new Set([1, 11, 21]);
-const TYPE_NAMES: Record<number, string> = {
-  3: "lines",
-  5: "polygons",
-  8: "multipoints",
-  13: "lines",
-  15: "polygons",
-  18: "multipoints",
-  23: "lines",
-  25: "polygons",
-  28: "multipoints",
-  31: "patches",
+/** Plain, with height (Z) and with measure (M): x and y stand in the same places in all three. */
+const KINDS: Record<number, ShapeKind | undefined> = {
+  1: "point",
+  11: "point",
+  21: "point",
+  3: "line",
+  13: "line",
+  23: "line",
+  5: "area",
+  15: "area",
+  25: "area",
+  8: "points",
+  18: "points",
+  28: "points",
 };
 
 /** Layout: Esri Shapefile Technical Description, July 1998. Headers big-endian, contents little-endian, lengths in 16-bit words. */
@@ -35,27 +41,29 @@ export function readShp(bytes: Uint8Array, name: string): ShapePoints {
     );
   }
   const type = view.getInt32(32, true);
-  if (type !== 0 && !POINT_TYPES.has(type)) {
+  const kind = type === 0 ? "point" : KINDS[type];
+  if (!kind) {
     stopReading(
       "not-points",
-      `"${name}" holds ${TYPE_NAMES[type] ?? `shapes of type ${type}`}. A log is made of points, one a record; boundaries and plots are uploaded elsewhere.`,
+      `"${name}" holds shapes of type ${type}. A log is made of points, lines or areas, one a record.`,
     );
   }
   const statedBytes = view.getInt32(24) * 2;
   const capacity = Math.ceil((bytes.length - HEADER_BYTES) / 12);
   const x = new Float64Array(capacity);
   const y = new Float64Array(capacity);
-  const { count, end } = readPoints(view, { x, y }, name);
+  const { count, end } = readShapes(view, { x, y, kind }, name);
   return {
+    kind,
     x: x.subarray(0, count),
     y: y.subarray(0, count),
     isCutShort: end < statedBytes || bytes.length < statedBytes,
   };
 }
 
-function readPoints(
+function readShapes(
   view: DataView,
-  points: { x: Float64Array; y: Float64Array },
+  shapes: { x: Float64Array; y: Float64Array; kind: ShapeKind },
   name: string,
 ): { count: number; end: number } {
   let at = HEADER_BYTES;
@@ -65,20 +73,48 @@ function readPoints(
     const next = at + 8 + contentBytes;
     if (contentBytes < 4 || next > view.byteLength) break;
     const type = view.getInt32(at + 8, true);
-    const isPoint = POINT_TYPES.has(type) && contentBytes >= 20;
-    if (!isPoint && type !== 0) {
-      stopReading(
-        "shapefile-damaged",
-        `Record ${count + 1} of "${name}" is no point (type ${type}). Export the log again.`,
-        {
-          line: count + 1,
-        },
-      );
+    if (type === 0) shapes.x[count] = shapes.y[count] = NaN;
+    else if (KINDS[type] !== shapes.kind) stopAtRecord(name, count, `is of another type (${type}) than the file`);
+    else if (shapes.kind === "point" && contentBytes >= 20) {
+      shapes.x[count] = view.getFloat64(at + 12, true);
+      shapes.y[count] = view.getFloat64(at + 20, true);
+    } else {
+      const [x, y] =
+        readCentre(view, { at: at + 8, end: next, kind: shapes.kind }) ?? stopAtRecord(name, count, DAMAGED);
+      shapes.x[count] = x;
+      shapes.y[count] = y;
     }
-    points.x[count] = isPoint ? view.getFloat64(at + 12, true) : NaN;
-    points.y[count] = isPoint ? view.getFloat64(at + 20, true) : NaN;
     count++;
     at = next;
   }
   return { count, end: at };
+}
+
+const DAMAGED = "is shorter than its own counts say";
+
+function stopAtRecord(name: string, count: number, why: string): never {
+  stopReading("shapefile-damaged", `Record ${count + 1} of "${name}" ${why}. Export the log again.`, {
+    line: count + 1,
+  });
+}
+
+const BOX_END = 36;
+
+/** Centre of a shape of several points: type, box, counts, starts of the parts (not for multipoints), points. Null when damaged. */
+function readCentre(view: DataView, { at, end, kind }: { at: number; end: number; kind: ShapeKind }): Centre | null {
+  if (kind === "point" || at + BOX_END + 8 > end) return null;
+  const parts = kind === "points" ? 0 : view.getInt32(at + BOX_END, true);
+  const countAt = kind === "points" ? at + BOX_END : at + BOX_END + 4;
+  const points = view.getInt32(countAt, true);
+  const partsAt = countAt + 4;
+  const pointsAt = partsAt + 4 * parts;
+  if (parts < 0 || points < 0 || pointsAt + 16 * points > end) return null;
+  const flat = Float64Array.from({ length: points * 2 }, (_, i) => view.getFloat64(pointsAt + 8 * i, true));
+  if (kind === "points") return meanOfPoints(flat);
+  const starts = Array.from({ length: parts }, (_, i) => view.getInt32(partsAt + 4 * i, true));
+  if (starts.some((start, i) => start < 0 || start > points || start < (starts[i - 1] ?? 0))) return null;
+  const pieces = starts.map((start, i) => flat.subarray(2 * start, 2 * (starts[i + 1] ?? points)));
+  if (kind === "area") return centreOfRings(pieces);
+  const longest = pieces.reduce((a, b) => (b.length > a.length ? b : a), new Float64Array(0));
+  return midpointOfLine(longest);
 }

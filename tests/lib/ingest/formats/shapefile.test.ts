@@ -85,11 +85,12 @@ describe("zipped point shapefile", () => {
   });
 
   it.each([
-    ["several-layers", layer({ "other/two.shp": makeShp(POINTS) })],
+    ["several-layers", layer({ "other/two.shp": makeShp(POINTS), "other/two.dbf": makeDbf(COLUMNS) })],
     ["missing-part", { "log.shp": makeShp(POINTS) }],
     ["unknown-file-kind", { "readme.txt": "nothing here" }],
-    ["unknown-file-kind", { "TASKDATA/TASKDATA.XML": "<ISO11783_TaskData/>" }],
-    ["not-points", layer({ "drill/log.shp": makeShp(POINTS, 5) })],
+    ["no-readings", { "TASKDATA/TASKDATA.XML": "<ISO11783_TaskData/>" }],
+    ["not-points", layer({ "drill/log.shp": makeShp(POINTS, 31) })],
+    ["shapefile-damaged", layer({ "drill/log.shp": makeShp(POINTS, 5) })],
     ["shapefile-damaged", layer({ "drill/log.shp": new Uint8Array(200) })],
     ["shapefile-damaged", layer({ "drill/log.dbf": new Uint8Array(200) })],
     ["unknown-projection", layer({ "drill/log.prj": 'PROJCS["Somewhere",PROJECTION["Unheard_Of"]]' })],

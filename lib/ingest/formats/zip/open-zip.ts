@@ -1,5 +1,5 @@
 import { joinChunks, type ByteSource } from "@/lib/ingest/byte-source";
-import { listEntries, type ZipEntry } from "@/lib/ingest/formats/shapefile/list-entries";
+import { listEntries, type ZipEntry } from "@/lib/ingest/formats/zip/list-entries";
 import { stopReading } from "@/lib/ingest/ingest-error";
 import { READ_LIMITS } from "@/lib/ingest/log-format";
 

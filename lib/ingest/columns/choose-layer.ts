@@ -1,0 +1,47 @@
+import { stopReading } from "@/lib/ingest/ingest-error";
+import type { FoundColumn, Inspection, LogLayer } from "@/lib/ingest/log-format";
+import type { LogNote } from "@/lib/logs/machine-log";
+import type { LogShape } from "@/lib/ingest/mapping";
+
+/** The log of a file that a mapping means. Stops with `several-layers` or `unknown-layer`. */
+export function chooseLayer<T extends { id: string }>(
+  layers: readonly T[],
+  wanted: string | undefined,
+  name: string,
+): T {
+  const ids = layers.slice(0, 4).map((layer) => `"${layer.id}"`);
+  const named = `${ids.join(", ")}${layers.length > 4 ? ", …" : ""}`;
+  const [first, second] = layers;
+  if (wanted === undefined) {
+    if (first && !second) return first;
+    stopReading(
+      "several-layers",
+      `"${name}" holds ${layers.length} logs (${named}). Choose one: give the mapping the layer to read.`,
+    );
+  }
+  const found = layers.find((layer) => layer.id === wanted);
+  if (found) return found;
+  stopReading("unknown-layer", `"${name}" holds no log "${wanted}" (it has ${named}). Choose one of those.`);
+}
+
+export interface InspectedLayer {
+  id: string;
+  label: string;
+  records: number;
+  shape: LogShape;
+  crs?: string;
+  columns: FoundColumn[];
+}
+
+/** What an inspection says of the logs in a file: the longest first, all of them named where there are several. */
+export function describeLayers(
+  inspected: readonly InspectedLayer[],
+): Pick<Inspection, "shape" | "columns" | "layers" | "crs"> & { notes: LogNote[] } {
+  const layers: LogLayer[] = [...inspected].sort((a, b) => b.records - a.records);
+  const [first] = layers;
+  const crs = first?.crs === undefined ? {} : { crs: first.crs };
+  const one = { shape: first?.shape ?? "single", columns: first?.columns ?? [], ...crs };
+  if (layers.length < 2) return { ...one, notes: [] };
+  const message = `The file holds ${layers.length} logs; choose which to read. The columns shown are those of "${first?.label ?? ""}", the longest.`;
+  return { ...one, layers, notes: [{ code: "several-layers", count: layers.length, message }] };
+}
