@@ -7,14 +7,31 @@ const WGS84 = "+proj=longlat +datum=WGS84 +no_defs";
 const WEB_MERCATOR =
   "+proj=merc +a=6378137 +b=6378137 +lat_ts=0 +lon_0=0 +x_0=0 +y_0=0 +k=1 +units=m +nadgrids=@null +no_defs";
 
-/** proj4 text of the EPSG codes a machine log is likely to be in: WGS 84, its UTM zones, web Mercator. */
+/** Families of UTM zones by EPSG code: code = base + zone. ETRS89, NAD83 and both GDAs lie within a metre or two of WGS 84 and are read so. */
+const UTM_FAMILIES: readonly {
+  base: number;
+  zones: [first: number, last: number];
+  south: boolean;
+  ellipsoid: string;
+}[] = [
+  { base: 32600, zones: [1, 60], south: false, ellipsoid: "+datum=WGS84" },
+  { base: 32700, zones: [1, 60], south: true, ellipsoid: "+datum=WGS84" },
+  { base: 26900, zones: [1, 23], south: false, ellipsoid: "+ellps=GRS80 +towgs84=0,0,0" },
+  { base: 25800, zones: [28, 38], south: false, ellipsoid: "+ellps=GRS80 +towgs84=0,0,0" },
+  { base: 28300, zones: [46, 59], south: true, ellipsoid: "+ellps=GRS80 +towgs84=0,0,0" },
+  { base: 7800, zones: [46, 59], south: true, ellipsoid: "+ellps=GRS80 +towgs84=0,0,0" },
+];
+
+/** proj4 text of the EPSG codes a machine log is likely to be in: degrees, UTM zones, web Mercator. */
 function epsgDefinition(code: number): string | null {
-  if (code === 4326) return WGS84;
+  if (code === 4326 || code === 4258 || code === 4269) return WGS84;
   if (code === 3857) return WEB_MERCATOR;
-  const zone = code % 100;
-  const hemisphere = Math.floor(code / 100);
-  if ((hemisphere !== 326 && hemisphere !== 327) || zone < 1 || zone > 60) return null;
-  return `+proj=utm +zone=${zone}${hemisphere === 327 ? " +south" : ""} +datum=WGS84 +units=m +no_defs`;
+  for (const { base, zones, south, ellipsoid } of UTM_FAMILIES) {
+    const zone = code - base;
+    if (zone < zones[0] || zone > zones[1]) continue;
+    return `+proj=utm +zone=${zone}${south ? " +south" : ""} ${ellipsoid} +units=m +no_defs`;
+  }
+  return null;
 }
 
 /**

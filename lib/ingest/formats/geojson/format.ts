@@ -23,12 +23,12 @@ import { RecordCollector } from "@/lib/ingest/records/record-collector";
 const SAMPLE_FEATURES = 500;
 const HEAD_BYTES = 65_536;
 
-/** GeoJSON point features, one a record; read feature by feature as the bytes arrive. */
+/** GeoJSON features (points; lines and areas by their middle), one a record, also as a text sequence; read feature by feature as the bytes arrive. */
 export const geojsonFormat: LogFormat = {
   id: "geojson",
-  label: "GeoJSON points",
-  extensions: [".geojson", ".json", ".geojson.gz", ".geojsonl"],
-  looksLike: (head) => /^\uFEFF?\s*[{[]/.test(new TextDecoder().decode(head.subarray(0, 256))),
+  label: "GeoJSON",
+  extensions: [".geojson", ".json", ".geojson.gz", ".geojsonl", ".geojsons"],
+  looksLike: (head) => /^\uFEFF?[\s\u001E]*[{[]/.test(new TextDecoder().decode(head.subarray(0, 256))),
   inspect: inspectGeojson,
   read: readGeojson,
 };
@@ -72,7 +72,7 @@ function readNamedCrs(head: string): string | undefined {
 async function inspectGeojson(source: ByteSource, options: InspectOptions): Promise<Inspection> {
   const { features, names, paths, crs } = await learnLayout(openText(source, options));
   const notes = new NoteBook();
-  for (const feature of features) if (!feature.hasGeometry) notes.add("null-geometry", feature.number);
+  for (const feature of features) noteGeometry(feature, notes);
   const cells = (field: number): string[] => {
     if (field < 2) return features.map((feature) => coordinateText(field === 0 ? feature.x : feature.y));
     const path = paths[field - 2];
@@ -88,6 +88,13 @@ async function inspectGeojson(source: ByteSource, options: InspectOptions): Prom
     recordsSampled: features.length,
     notes: notes.list("feature"),
   };
+}
+
+const MADE_NOTES = { points: "several-points", line: "line-midpoints", area: "area-centres" } as const;
+
+function noteGeometry({ hasGeometry, madeFrom, number }: PointFeature, notes: NoteBook): void {
+  if (!hasGeometry) notes.add("null-geometry", number);
+  else if (madeFrom) notes.add(MADE_NOTES[madeFrom], number);
 }
 
 function coordinateText(value: number): string {
@@ -120,10 +127,11 @@ async function readGeojson(source: ByteSource, mapping: LogMapping, options: Rea
 function prepareTaking(collector: RecordCollector, paths: readonly PropertyPath[]): (feature: PointFeature) => void {
   const { kinds } = collector.plan;
   const used = paths.flatMap((path, index) => (kinds[index + 2] === CELL.skip ? [] : [{ path, field: index + 2 }]));
-  return ({ x, y, hasGeometry, number, properties }) => {
+  return (feature) => {
+    const { x, y, number, properties } = feature;
     collector.line[0] = x;
     collector.line[1] = y;
-    if (!hasGeometry) collector.notes.add("null-geometry", number);
+    noteGeometry(feature, collector.notes);
     for (const { path, field } of used) collector.takeText(field, readProperty(properties, path), number);
   };
 }

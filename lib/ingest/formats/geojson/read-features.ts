@@ -1,6 +1,7 @@
-import type { ByteSource } from "@/lib/ingest/byte-source";
+import { readHead, type ByteSource } from "@/lib/ingest/byte-source";
 import { FeatureSplitter } from "@/lib/ingest/formats/geojson/split-features";
 import { stopReading } from "@/lib/ingest/ingest-error";
+import { centreOfRings, meanOfPoints, midpointOfLine, type Centre } from "@/lib/ingest/records/shape-centre";
 
 /** A point feature: longitude and latitude as they stand (RFC 7946 order), NaN without a geometry. */
 export interface PointFeature {
@@ -9,6 +10,8 @@ export interface PointFeature {
   x: number;
   y: number;
   hasGeometry: boolean;
+  /** What the position was made from, where the geometry is no single point. */
+  madeFrom: "points" | "line" | "area" | null;
   properties: Record<string, unknown>;
 }
 
@@ -18,13 +21,41 @@ export interface FeatureBytes {
   bytes: Uint8Array;
 }
 
-/** Features of a GeoJSON text as bytes, one at a time. Stops with `json-damaged` or `not-a-log`. */
+const RECORD_SEPARATOR = 0x1e;
+const HEAD_BYTES = 65_536;
+
+/**
+ * Whether a text is a sequence of GeoJSON texts instead of one: by RFC 8142 each begins with a record separator; the same
+ * without separators, one feature a line, is common too.
+ */
+async function isSequence(source: ByteSource): Promise<boolean> {
+  const head = await readHead(source, HEAD_BYTES);
+  const first = head.find((byte) => byte === RECORD_SEPARATOR || byte > 32);
+  if (first === RECORD_SEPARATOR) return true;
+  const splitter = new FeatureSplitter("sequence");
+  const [text] = splitter.push(head);
+  return text !== undefined && isFeature(decoder.decode(text));
+}
+
+function isFeature(text: string): boolean {
+  try {
+    const value: unknown = JSON.parse(text);
+    return isObject(value) && value.type === "Feature";
+  } catch {
+    return false;
+  }
+}
+
+/** Features of a GeoJSON text, or of a sequence of texts, as bytes, one at a time. Stops with `json-damaged` or `not-a-log`. */
 export async function* readFeatureBytes(source: ByteSource): AsyncGenerator<FeatureBytes[]> {
-  const splitter = new FeatureSplitter();
+  const isMany = await isSequence(source);
+  const splitter = new FeatureSplitter(isMany ? "sequence" : "collection");
   let number = 0;
   for await (const chunk of source.stream()) {
     const features: FeatureBytes[] = [];
-    for (const bytes of splitter.push(chunk)) features.push({ number: ++number, bytes });
+    for (const text of splitter.push(chunk)) {
+      for (const bytes of isMany ? openText(text) : [text]) features.push({ number: ++number, bytes });
+    }
     yield features;
   }
   if (!splitter.isComplete) {
@@ -40,6 +71,13 @@ export async function* readFeatureBytes(source: ByteSource): AsyncGenerator<Feat
       `"${source.name}" is JSON, but no GeoJSON FeatureCollection. Export the log as GeoJSON points and upload that.`,
     );
   }
+}
+
+/** A text of a sequence may be a whole collection (RFC 8142 section 2). */
+function openText(text: Uint8Array): Uint8Array[] {
+  const inner = new FeatureSplitter("collection");
+  const features = [...inner.push(text)];
+  return inner.sawCollection ? features : [text];
 }
 
 const decoder = new TextDecoder("utf-8");
@@ -64,18 +102,54 @@ function isObject(value: unknown): value is Record<string, unknown> {
 function toPoint(feature: unknown, number: number): PointFeature {
   const record = isObject(feature) ? feature : {};
   const properties = isObject(record.properties) ? record.properties : {};
-  if (!isObject(record.geometry)) return { number, x: NaN, y: NaN, hasGeometry: false, properties };
+  if (!isObject(record.geometry)) {
+    return { number, x: NaN, y: NaN, hasGeometry: false, madeFrom: null, properties };
+  }
   const { type, coordinates } = record.geometry;
-  const position: unknown = type === "MultiPoint" && Array.isArray(coordinates) ? coordinates[0] : coordinates;
-  if (type !== "Point" && !(type === "MultiPoint" && Array.isArray(coordinates) && coordinates.length === 1)) {
+  const placed = typeof type === "string" ? PLACES[type] : undefined;
+  if (!placed || !Array.isArray(coordinates)) {
     stopReading(
       "not-points",
-      `Feature ${number} is a ${typeof type === "string" ? type : "shape without a type"}. A log is made of points, one a record; boundaries and plots are uploaded elsewhere.`,
+      `Feature ${number} is a ${typeof type === "string" ? type : "shape without a type"}. A log is made of points, lines or areas, one a record; boundaries and plots are uploaded elsewhere.`,
       { line: number },
     );
   }
-  const [x, y]: unknown[] = Array.isArray(position) ? position : [];
-  return { number, x: asNumber(x), y: asNumber(y), hasGeometry: true, properties };
+  const [x, y] = placed.centre(coordinates);
+  return { number, x, y, hasGeometry: true, madeFrom: placed.madeFrom, properties };
+}
+
+interface Place {
+  madeFrom: PointFeature["madeFrom"];
+  centre(coordinates: readonly unknown[]): Centre;
+}
+
+const PLACES: Record<string, Place | undefined> = {
+  Point: { madeFrom: null, centre: ([x, y]) => [asNumber(x), asNumber(y)] },
+  MultiPoint: { madeFrom: "points", centre: (points) => meanOfPoints(flatten(points)) },
+  LineString: { madeFrom: "line", centre: (points) => midpointOfLine(flatten(points)) },
+  MultiLineString: {
+    madeFrom: "line",
+    centre: (lines) =>
+      midpointOfLine(
+        asLists(lines)
+          .map(flatten)
+          .reduce((a, b) => (b.length > a.length ? b : a), []),
+      ),
+  },
+  Polygon: { madeFrom: "area", centre: (rings) => centreOfRings(asLists(rings).map(flatten)) },
+  MultiPolygon: {
+    madeFrom: "area",
+    centre: (areas) => centreOfRings(asLists(areas).flatMap((rings) => asLists(rings).map(flatten))),
+  },
+};
+
+function asLists(values: readonly unknown[]): (readonly unknown[])[] {
+  return values.filter((value): value is unknown[] => Array.isArray(value));
+}
+
+/** Positions as x, y, x, y, …; heights are left out (RFC 7946 section 3.1.1). */
+function flatten(positions: readonly unknown[]): number[] {
+  return asLists(positions).flatMap(([x, y]) => [asNumber(x), asNumber(y)]);
 }
 
 function asNumber(value: unknown): number {

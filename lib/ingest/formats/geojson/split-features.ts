@@ -33,6 +33,11 @@ export class FeatureSplitter {
   /** A member "features" was seen. */
   sawCollection = false;
 
+  /** `sequence`: texts one after another, each given whole, instead of the features of one collection. */
+  constructor(kind: "collection" | "sequence" = "collection") {
+    if (kind === "sequence") this.featureDepth = 0;
+  }
+
   /** Takes a chunk and gives the bytes of each feature that ends in it. */
   *push(chunk: Uint8Array): Generator<Uint8Array> {
     let at = 0;

@@ -150,7 +150,7 @@ describe("GeoJSON points", () => {
       "not-points",
       source({
         type: "FeatureCollection",
-        features: [{ ...FEATURES[0], geometry: { type: "Polygon", coordinates: [] } }],
+        features: [{ ...FEATURES[0], geometry: { type: "GeometryCollection", geometries: [] } }],
       }),
     ],
     ["no-readings", source({ type: "FeatureCollection", features: [] })],
@@ -174,5 +174,128 @@ describe("GeoJSON points", () => {
       ],
     });
     expect(outcome).toMatchObject({ ok: false, error: { code: "latitude-out-of-range", line: 2 } });
+  });
+});
+
+describe("GeoJSON lines and areas that carry readings", () => {
+  const withGeometry = (geometry: unknown) =>
+    source({ type: "FeatureCollection", features: FEATURES.map((feature) => ({ ...feature, geometry })) });
+  const square = (x: number, y: number, size: number) => [
+    [x, y],
+    [x + size, y],
+    [x + size, y + size],
+    [x, y + size],
+    [x, y],
+  ];
+
+  // Worked by hand.
+  it.each([
+    ["area-centres", { type: "Polygon", coordinates: [square(-98.62, 38.4, 0.02)] }, [-98.61, 38.41]],
+    // A square of 4 with a hole of 1 in its upper right: centre (4*1 - 1*1.5) / 3 from the corner, in hundredths.
+    [
+      "area-centres",
+      {
+        type: "Polygon",
+        coordinates: [square(-98.62, 38.4, 0.02), [...square(-98.61, 38.41, 0.01)].reverse()],
+      },
+      [-98.62 + 0.025 / 3, 38.4 + 0.025 / 3],
+    ],
+    [
+      "area-centres",
+      { type: "MultiPolygon", coordinates: [[square(-98.62, 38.4, 0.01)], [square(-98.6, 38.4, 0.01)]] },
+      [-98.605, 38.405],
+    ],
+    [
+      "area-centres",
+      {
+        type: "Polygon",
+        coordinates: [
+          [
+            [179.9, 10],
+            [-179.9, 10],
+            [-179.9, 10.2],
+            [179.9, 10.2],
+            [179.9, 10],
+          ],
+        ],
+      },
+      [180, 10.1],
+    ],
+    [
+      "line-midpoints",
+      {
+        type: "LineString",
+        coordinates: [
+          [-98.62, 38.4, 450],
+          [-98.61, 38.4, 451],
+          [-98.61, 38.43, 452],
+        ],
+      },
+      [-98.61, 38.41],
+    ],
+    [
+      "line-midpoints",
+      {
+        type: "MultiLineString",
+        coordinates: [
+          [
+            [0, 0],
+            [1, 1],
+          ],
+          [
+            [-98.62, 38.4],
+            [-98.61, 38.4],
+            [-98.6, 38.4],
+          ],
+        ],
+      },
+      [-98.61, 38.4],
+    ],
+    [
+      "several-points",
+      {
+        type: "MultiPoint",
+        coordinates: [
+          [-98.62, 38.4],
+          [-98.6, 38.42],
+        ],
+      },
+      [-98.61, 38.41],
+    ],
+  ])("%s", async (code, geometry, [longitude, latitude]) => {
+    const { log, notes } = await readAsProposed(withGeometry(geometry));
+    expect(log.longitude[1]).toBeCloseTo(longitude ?? NaN, 9);
+    expect(log.latitude[1]).toBeCloseTo(latitude ?? NaN, 9);
+    expect(notes.map((note) => [note.code, note.count])).toEqual([[code, 2]]);
+    expect([...(log.channels[0]?.values ?? [])]).toEqual([900, 910.5, 905, NaN]);
+  });
+});
+
+describe("GeoJSON text sequences (RFC 8142)", () => {
+  const [first, second] = FEATURES.map((feature) => JSON.stringify(feature));
+  const texts: [string, string][] = [
+    ["a record separator before each", `\u001e${first}\n\u001e${second}\n`],
+    ["no separator, one a line", `${first}\n${second}\n`],
+    [
+      "a collection within",
+      `\u001e${JSON.stringify({ ...COLLECTION, features: FEATURES.slice(0, 1) })}\n\u001e${second}\n`,
+    ],
+    [
+      "spread over lines",
+      `\u001e${JSON.stringify(FEATURES[0], null, 2)}\n\u001e${JSON.stringify(FEATURES[1], null, 2)}\n`,
+    ],
+  ];
+  it.each(texts)("%s", async (_, text) => {
+    for (const chunkBytes of [3, 1 << 16]) {
+      const { log } = await readAsProposed(textSource(text, "log.geojsons", chunkBytes));
+      expect([...log.longitude]).toEqual([-98.61, -98.62]);
+      expect([...(log.channels[0]?.values ?? [])]).toEqual([900, 910.5, 905, NaN]);
+    }
+  });
+
+  it("cut in the middle is damaged", async () => {
+    expect((await errorOf(textSource(`\u001e${first}\n\u001e${second?.slice(0, 40)}`, "log.geojsons")))?.code).toBe(
+      "json-damaged",
+    );
   });
 });

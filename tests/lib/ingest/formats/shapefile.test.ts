@@ -1,7 +1,17 @@
 import { describe, expect, it } from "vitest";
 import { bytesSource } from "@/lib/ingest/byte-source";
-import { errorOf, mustInspect, readAsProposed } from "../support/make-source";
-import { makeDbf, makeShp, UTM14_PRJ, WGS84_PRJ, zipOf, type DbfColumn } from "../support/make-shapefile";
+import { mappingFits } from "@/lib/ingest/mapping";
+import { proposeMapping } from "@/lib/ingest/propose-mapping";
+import { errorOf, mustInspect, mustRead, readAsProposed } from "../support/make-source";
+import {
+  makeDbf,
+  makeManyPointShp,
+  makeShp,
+  UTM14_PRJ,
+  WGS84_PRJ,
+  zipOf,
+  type DbfColumn,
+} from "../support/make-shapefile";
 
 const POINTS: [number, number][] = [
   [-98.61, 38.41],
@@ -135,5 +145,97 @@ describe("zipped point shapefile", () => {
       const error = await errorOf(bytesSource("log.zip", zip.subarray(0, Math.floor(zip.length * share))));
       expect(error?.code).toBe("archive-truncated");
     }
+  });
+});
+
+describe("shapefile of lines, areas and multipoints", () => {
+  const strip = (x: number): [number, number][] => [
+    [x, 38.4],
+    [x, 38.42],
+    [x + 0.02, 38.42],
+    [x + 0.02, 38.4],
+    [x, 38.4],
+  ];
+  // Centres worked by hand.
+  it.each([
+    ["area-centres", makeManyPointShp([[strip(-98.62)], [strip(-98.6)], [strip(-98.58)]], 5), [-98.61, -98.59, -98.57]],
+    [
+      "several-points",
+      makeManyPointShp(
+        [-98.62, -98.6, -98.58].map((x) => [
+          [
+            [x, 38.4],
+            [x + 0.02, 38.42],
+          ],
+        ]),
+        8,
+      ),
+      [-98.61, -98.59, -98.57],
+    ],
+    [
+      "line-midpoints",
+      makeManyPointShp(
+        [-98.62, -98.6, -98.58].map((x) => [
+          [
+            [x, 38.41],
+            [x + 0.005, 38.41],
+            [x + 0.02, 38.41],
+          ],
+        ]),
+        3,
+      ),
+      [-98.61, -98.59, -98.57],
+    ],
+  ] as const)("%s", async (code, shp, longitudes) => {
+    const { log, notes } = await readAsProposed(source(layer({ "drill/log.shp": shp })));
+    longitudes.forEach((longitude, record) => expect(log.longitude[record]).toBeCloseTo(longitude, 9));
+    expect(log.latitude[0]).toBeCloseTo(38.41, 9);
+    expect(notes.map((note) => note.code)).toEqual([code]);
+  });
+
+  it("stops at counts that do not fit the record", async () => {
+    const shp = makeManyPointShp([[strip(-98.62)]], 5);
+    new DataView(shp.buffer).setInt32(100 + 8 + 40, 9999, true);
+    expect(await errorOf(source(layer({ "drill/log.shp": shp })))).toMatchObject({
+      code: "shapefile-damaged",
+      line: 1,
+    });
+  });
+});
+
+describe("several layers in one zip", () => {
+  const two = layer({
+    "west/log.shp": makeShp(POINTS.slice(0, 1)),
+    "west/log.dbf": makeDbf([{ name: "DEPTH_mm", type: "N", length: 4, cells: ["52"] }]),
+    "west/log.prj": WGS84_PRJ,
+    "bare.shp": makeShp(POINTS),
+  });
+
+  it("are offered, the longest first, each with its own columns; what has no table is said", async () => {
+    const inspection = await mustInspect(source(two));
+    expect(inspection.layers?.map(({ id, records, shape }) => [id, records, shape])).toEqual([
+      ["drill/log", 3, "wide"],
+      ["west/log", 1, "single"],
+    ]);
+    expect(inspection.layers?.[1]?.columns.map((column) => column.name)).toContain("DEPTH_mm");
+    expect(inspection.notes.map((note) => note.code)).toEqual(["several-layers", "shapes-without-table"]);
+  });
+
+  it("are read by choice, and no recipe is applied before the choice", async () => {
+    const inspection = await mustInspect(source(two));
+    const { mapping } = proposeMapping(inspection);
+    expect(mappingFits(mapping, inspection)).toBe(false);
+    expect(mappingFits({ ...mapping, layer: "drill/log" }, inspection)).toBe(true);
+    expect((await errorOf(source(two), mapping))?.code).toBe("several-layers");
+    const { log } = await mustRead(source(two), {
+      shape: "single",
+      layer: "west/log",
+      columns: [
+        { name: "point longitude", channel: "longitude", unit: "deg" },
+        { name: "point latitude", channel: "latitude", unit: "deg" },
+        { name: "DEPTH_mm", channel: "depth", unit: "mm" },
+      ],
+    });
+    expect([...(log.channels[0]?.values ?? [])]).toEqual([Math.fround(0.052)]);
   });
 });

@@ -79,3 +79,41 @@ export function zipOf(files: Record<string, Uint8Array | string>): Uint8Array {
   }
   return zipSync(entries);
 }
+
+/** A .shp of lines (3), areas (5) or multipoints (8) by the same description: type, box, counts, starts of the parts, points. */
+export function makeManyPointShp(shapes: [x: number, y: number][][][], type: 3 | 5 | 8): Uint8Array {
+  const contents = shapes.map((parts) => {
+    const points = parts.flat();
+    const partBytes = type === 8 ? 0 : 4 + 4 * parts.length;
+    const view = new DataView(new ArrayBuffer(40 + partBytes + 16 * points.length));
+    view.setInt32(0, type, true);
+    if (type !== 8) view.setInt32(36, parts.length, true);
+    view.setInt32(type === 8 ? 36 : 40, points.length, true);
+    let start = 0;
+    if (type !== 8) {
+      parts.forEach((part, i) => {
+        view.setInt32(44 + 4 * i, start, true);
+        start += part.length;
+      });
+    }
+    points.forEach(([x, y], i) => {
+      view.setFloat64(40 + partBytes + 16 * i, x, true);
+      view.setFloat64(48 + partBytes + 16 * i, y, true);
+    });
+    return new Uint8Array(view.buffer);
+  });
+  const bytes = new Uint8Array(100 + contents.reduce((sum, content) => sum + 8 + content.length, 0));
+  const view = new DataView(bytes.buffer);
+  view.setInt32(0, 9994);
+  view.setInt32(24, bytes.length / 2);
+  view.setInt32(28, 1000, true);
+  view.setInt32(32, type, true);
+  let at = 100;
+  contents.forEach((content, i) => {
+    view.setInt32(at, i + 1);
+    view.setInt32(at + 4, content.length / 2);
+    bytes.set(content, at + 8);
+    at += 8 + content.length;
+  });
+  return bytes;
+}
