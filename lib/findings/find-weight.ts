@@ -68,9 +68,15 @@ function sayUnknown(input: VerdictInput): Finding[] {
       sentenceTemplate: `Whether the frame is heavy enough cannot be said: it would need ${input.balance.missing.join(", and ")}.${hint}`,
       confidence: "low",
       method: METHOD,
-      check: together
-        ? "Watch the frame's height while it runs, and add its weights to the machine's description."
-        : "Add the frame's weights and distances to the machine's description.",
+      check: sayCheck(input, together),
     }),
   ];
+}
+
+function sayCheck({ balance }: VerdictInput, together: boolean): string {
+  if (balance.headroomN)
+    return "Check that this log has the machine that made it, with its weights and ballast as they were.";
+  return together
+    ? "Watch the frame's height while it runs, and add its weights to the machine's description."
+    : "Add the frame's weights and distances to the machine's description.";
 }

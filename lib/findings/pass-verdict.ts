@@ -2,6 +2,7 @@ import { measureFrameBalance, type FrameBalance } from "@/lib/ballast/frame-bala
 import type { Finding } from "@/lib/findings/finding";
 import { findOddRows } from "@/lib/findings/find-odd-rows";
 import { findAtLimit, findContactLost, findOverTarget, findUnderTarget } from "@/lib/findings/find-target-shares";
+import { doubtBalance } from "@/lib/findings/doubt-balance";
 import { findWeight } from "@/lib/findings/find-weight";
 import { makeFinding } from "@/lib/findings/make-finding";
 import { channelEvidence } from "@/lib/findings/row-evidence";
@@ -59,14 +60,15 @@ const KIND_ORDER: Finding["kind"][] = [
 export function passVerdict(placed: PlacedLog, options: VerdictOptions = {}): PassVerdict {
   const distances = options.distances ?? rowDistances(placed);
   const given = { ...options, distances };
+  const margin = channelEvidence(placed, "margin", given);
   const input: VerdictInput = {
     placed,
     distances,
-    margin: channelEvidence(placed, "margin", given),
+    margin,
     downforce: channelEvidence(placed, "downforce", given),
     resistance: channelEvidence(placed, "resistance", given),
     contact: channelEvidence(placed, "contact", given),
-    balance: measureFrameBalance(placed, distances),
+    balance: doubtBalance(measureFrameBalance(placed, distances), margin),
   };
   const odd = findOddRows(input);
   const missing = missingInputs(input);
