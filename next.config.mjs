@@ -2,7 +2,16 @@
 const config = {
   poweredByHeader: false,
   reactStrictMode: true,
-  serverExternalPackages: ["@node-rs/argon2", "sharp", "pg", "pg-boss", "pg-copy-streams", "nodemailer"],
+  serverExternalPackages: [
+    "@node-rs/argon2",
+    "sharp",
+    "pg",
+    "pg-boss",
+    "pg-copy-streams",
+    "nodemailer",
+    "node-sqlite3-wasm",
+    "apache-arrow",
+  ],
   experimental: { proxyClientMaxBodySize: "2gb" },
 };
 

@@ -1,5 +1,5 @@
 #!/usr/bin/env bash
-# System packages and node_modules, only where something is missing. Arguments: postgresql chromium
+# System packages and node_modules, only where something is missing. Arguments: postgresql chromium gdal-bin
 set -euo pipefail
 cd "$(dirname "$0")/.."
 
@@ -13,6 +13,9 @@ for package in "$@"; do
       ;;
     chromium)
       if [ -z "${CHROMIUM_PATH:-}" ] && ! command -v chromium >/dev/null; then missing+=(chromium); fi
+      ;;
+    gdal-bin)
+      if ! command -v ogrinfo >/dev/null; then missing+=(gdal-bin); fi
       ;;
   esac
 done

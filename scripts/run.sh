@@ -5,7 +5,7 @@ cd "$(dirname "$0")/.."
 script=$1
 shift
 case "$script" in
-  test) bash scripts/prepare.sh postgresql chromium ;;
+  test) bash scripts/prepare.sh postgresql chromium gdal-bin ;;
   *) bash scripts/prepare.sh postgresql ;;
 esac
 exec node --import tsx "scripts/$script.mts" "$@"

@@ -18,11 +18,12 @@ export interface StoredRun {
 
 /**
  * Stored runs of these channels of one version of a log, in the file's order, read by binary COPY (the ordinary protocol
- * is twice as slow for packed numbers). Runs as the application, under row-level security.
+ * is twice as slow for packed numbers). Runs as the application, under row-level security. `records`: only runs that begin
+ * among these.
  */
 export async function readStoredRuns(
   scope: Pick<Scope, "organisationId">,
-  input: { logId: string; version: number; channels: readonly string[] },
+  input: { logId: string; version: number; channels: readonly string[]; records?: { from: number; before: number } },
 ): Promise<StoredRun[]> {
   if (input.channels.length === 0) return [];
   const client = await appDb().$client.connect();
@@ -31,9 +32,13 @@ export async function readStoredRuns(
     await client.query("begin read only");
     await client.query("select set_config('app.organisation_id', $1, true)", [scope.organisationId]);
     const channels = input.channels.map((channel) => escapeLiteral(channel)).join(", ");
+    const { records } = input;
+    const within = records
+      ? ` and first_seq >= ${Math.trunc(records.from)} and first_seq < ${Math.trunc(records.before)}`
+      : "";
     const query = `select channel, pass, first_seq, records, rows, element, values from pass_readings
       where organisation_id = ${escapeLiteral(scope.organisationId)} and log_id = ${escapeLiteral(input.logId)}
-      and version = ${Math.trunc(input.version)} and channel in (${channels}) order by first_seq`;
+      and version = ${Math.trunc(input.version)} and channel in (${channels})${within} order by first_seq`;
     const rows = await readBinaryCopy(client.query(copyTo(`copy (${query}) to stdout binary`)));
     await client.query("commit");
     isBroken = false;

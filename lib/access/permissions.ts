@@ -11,6 +11,7 @@ export const PERMISSIONS = {
   "logs.read": ["owner", "agronomist", "researcher", "operator", "viewer"],
   "logs.upload": ["owner", "agronomist", "operator"],
   "logs.map": ["owner", "agronomist", "operator"],
+  "logs.export": ["owner", "agronomist", "researcher"],
   "logs.delete": ["owner", "agronomist"],
   "recipes.read": ["owner", "agronomist", "researcher", "operator"],
   "shares.read": ["owner", "agronomist"],

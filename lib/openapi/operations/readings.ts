@@ -1,5 +1,6 @@
 import { z } from "zod";
 import type { Method, Operation, OperationReply } from "@/lib/openapi/operation";
+import { ExportQuery } from "@/lib/schemas/export";
 import { ListQuery } from "@/lib/schemas/listing";
 import { ChannelQuery, PlaceQuery, SwathsQuery, ZonesQuery } from "@/lib/schemas/log-queries";
 import { SwathCollectionBody, ZoneCollectionBody } from "@/lib/schemas/log-shapes";
@@ -154,7 +155,24 @@ export const readingOperations: Operation[] = [
     errors: ["conflict"],
   },
   notBuilt("GET", "frames", "Shares of the machine, the field, the travel and the clock"),
-  notBuilt("GET", "export", "Readings, zones or swaths as a file"),
+  {
+    method: "GET",
+    path: "/api/v1/logs/{logId}/export",
+    tag,
+    permission: "logs.export",
+    summary: "Readings, zones or swaths as a file",
+    description:
+      "Column names end in the SI unit; longitude and latitude are WGS 84. `csv` (RFC 4180; a text that begins like a " +
+      "formula gets an apostrophe; `Link: rel=alternate` names the zip with README.txt and metadata.json, `bundle=zip`), " +
+      "`geojson` (RFC 7946; notes in the foreign member `about`), `shapefile` (zip with README.txt and metadata.json; 422 " +
+      "`export_too_large` past 2 GB), `geopackage` (notes in the table `about`), `arrow` (IPC file; notes in the schema's " +
+      "metadata). The notes hold source file and SHA-256, machine, the original's mapping, method, flags and a mapping that " +
+      "reads the table in again. A download that breaks off is not whole: a log read again meanwhile ends it. Every export " +
+      "is recorded in the audit.",
+    query: ExportQuery,
+    replies: [{ status: 200, description: "The file", contentType: "text/csv" }],
+    errors: ["conflict", "too_many_requests"],
+  },
   notBuilt("GET", "cleaning", "Cleaning rules with their counts"),
   notBuilt("POST", "cleaning", "Change the cleaning rules"),
 ];

@@ -38,7 +38,7 @@ export async function loadPlacedLog(log: LogVersion, channel: string | "all" | n
 }
 
 /** The logged channels that a channel, logged or derived, is made from. */
-function loggedChannels(channel: string | null): string[] {
+export function loggedChannels(channel: string | null): string[] {
   if (channel === null || channel === "rowSpeed") return [];
   if (channel === "resistance") return ["downforce", "margin"];
   if (channel.startsWith("deviation:")) return loggedChannels(channel.slice("deviation:".length));

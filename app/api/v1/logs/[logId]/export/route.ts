@@ -1,15 +1,18 @@
+import { parseQuery } from "@/app/_server/parse-body";
 import { withScope } from "@/app/_server/with-scope";
-import { AppError } from "@/lib/errors";
-import { getLog } from "@/lib/server/logs/read-logs";
+import { ExportQuery } from "@/lib/schemas/export";
+import { exportHeaders } from "@/lib/server/export/export-headers";
+import { exportLog } from "@/lib/server/export/export-log";
 
-const refuse = withScope<"logId">("logs.read", async ({ container, scope, params }) => {
-  await getLog(container, scope, params.logId);
-  throw new AppError("not_implemented", "Exports of a log are not built yet.");
+export const GET = withScope<"logId">("logs.export", async ({ container, scope, params, url }) => {
+  const query = parseQuery(ExportQuery, url);
+  const file = await exportLog(container, scope, { logId: params.logId, query });
+  return new Response(file.body, { headers: exportHeaders(file, query, url) });
 });
 
-export { refuse as GET };
-
 export {
+  // Without this, Next would answer HEAD by making the whole file for nobody.
+  refuseMethod as HEAD,
   refuseMethod as POST,
   refuseMethod as PUT,
   refuseMethod as PATCH,

@@ -1,0 +1,67 @@
+import type { ExportAbout } from "@/lib/export/about";
+
+const WIDTH = 100;
+
+/** The same for reading by eye: what the file is, where it came from, its columns and how it was made. */
+export function readmeText(about: ExportAbout, names: "long" | "short"): string {
+  const { log, source, machine } = about;
+  const sections = [
+    `${oneLine(about.title)}\n\nMade by Coulterbook on ${about.madeAt}. metadata.json holds the same for programs.`,
+    section("Where it came from", [
+      `Log ${log.id}, version ${log.version}, ${log.kind}, ${log.startedAt ?? "start unknown"} to ${log.endedAt ?? "end unknown"}.`,
+      `Original file: ${oneLine(source.fileName)}, ${source.bytes} bytes, SHA-256 ${source.sha256}.`,
+      machine
+        ? `Machine: ${oneLine(machine.name)}, ${machine.rowCount} rows ${machine.rowSpacingM} m apart.`
+        : "Machine: nobody said which; the rows are spread evenly by a guess.",
+    ]),
+    section(
+      "Columns",
+      about.columns.map(({ name, shortName, unit, meaning }) => {
+        const label = names === "short" ? `${shortName} (${name})` : name;
+        return `${label}${unit ? ` [${unit}]` : ""}: ${oneLine(meaning)}`;
+      }),
+    ),
+    section(
+      "Flags",
+      Object.entries(about.flags).map(([code, words]) => `${code}: ${words}`),
+    ),
+    section("Method", [about.coordinates, ...about.method, ...choiceLines(about)]),
+    section(
+      "Notes on the original",
+      about.notes.map((note) => `${oneLine(note.message)} (${note.count})`),
+    ),
+    section(
+      "Meaning given to the original's columns",
+      about.recipe?.columns.map(({ name, channel, row, unit }) => {
+        return `${oneLine(name)}: ${channel}${row === undefined ? "" : `, row ${row}`}, ${unit}`;
+      }) ?? [],
+    ),
+  ];
+  return sections.filter((text) => text !== "").join("\n\n") + "\n";
+}
+
+function choiceLines({ choice }: ExportAbout): string[] {
+  return choice ? [`Chosen: ${JSON.stringify(choice)}.`] : [];
+}
+
+function section(title: string, lines: readonly string[]): string {
+  if (lines.length === 0) return "";
+  return `${title}\n${"-".repeat(title.length)}\n${lines.map(foldLine).join("\n")}`;
+}
+
+/** Names from outside must not make lines of their own. */
+function oneLine(text: string): string {
+  return text.replaceAll(/\s+/g, " ");
+}
+
+function foldLine(line: string): string {
+  const folded: string[] = [""];
+  for (const word of line.split(" ")) {
+    const last = folded.length - 1;
+    const indent = folded.length > 1 ? 2 : 0;
+    if (folded[last] === "") folded[last] = word;
+    else if (indent + folded[last]!.length + 1 + word.length <= WIDTH) folded[last] += ` ${word}`;
+    else folded.push(word);
+  }
+  return folded.map((text, index) => (index === 0 ? text : `  ${text}`)).join("\n");
+}
