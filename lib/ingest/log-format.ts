@@ -42,6 +42,7 @@ export interface LogLayer {
   records: number;
   shape: LogShape;
   crs?: string;
+  crsCandidates?: CrsCandidate[];
   columns: FoundColumn[];
 }
 

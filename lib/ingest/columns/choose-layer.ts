@@ -1,5 +1,5 @@
 import { stopReading } from "@/lib/ingest/ingest-error";
-import type { FoundColumn, Inspection, LogLayer } from "@/lib/ingest/log-format";
+import type { CrsCandidate, FoundColumn, Inspection, LogLayer } from "@/lib/ingest/log-format";
 import type { LogNote } from "@/lib/logs/machine-log";
 import type { LogShape } from "@/lib/ingest/mapping";
 
@@ -30,17 +30,19 @@ export interface InspectedLayer {
   records: number;
   shape: LogShape;
   crs?: string;
+  crsCandidates?: CrsCandidate[];
   columns: FoundColumn[];
 }
 
 /** What an inspection says of the logs in a file: the longest first, all of them named where there are several. */
 export function describeLayers(
   inspected: readonly InspectedLayer[],
-): Pick<Inspection, "shape" | "columns" | "layers" | "crs"> & { notes: LogNote[] } {
+): Pick<Inspection, "shape" | "columns" | "layers" | "crs" | "crsCandidates"> & { notes: LogNote[] } {
   const layers: LogLayer[] = [...inspected].sort((a, b) => b.records - a.records);
   const [first] = layers;
   const crs = first?.crs === undefined ? {} : { crs: first.crs };
-  const one = { shape: first?.shape ?? "single", columns: first?.columns ?? [], ...crs };
+  const candidates = first?.crsCandidates ? { crsCandidates: first.crsCandidates } : {};
+  const one = { shape: first?.shape ?? "single", columns: first?.columns ?? [], ...crs, ...candidates };
   if (layers.length < 2) return { ...one, notes: [] };
   const message = `The file holds ${layers.length} logs; choose which to read. The columns shown are those of "${first?.label ?? ""}", the longest.`;
   return { ...one, layers, notes: [{ code: "several-layers", count: layers.length, message }] };

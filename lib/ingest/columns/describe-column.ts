@@ -2,12 +2,13 @@ import { channelWords } from "@/lib/ingest/channel-quantities";
 import type { ColumnProposal, FoundColumn } from "@/lib/ingest/log-format";
 import type { MappedColumn } from "@/lib/ingest/mapping";
 import { readBushelWeight } from "@/lib/ingest/records/bushel-weight";
+import { parseDegrees, readDegreesForm, type DegreesForm } from "@/lib/ingest/records/parse-degrees";
 import { parseNumber } from "@/lib/ingest/records/parse-number";
 import { unitFactor } from "@/lib/units/convert-unit";
 import { getUnit, type UnitId } from "@/lib/units/unit-table";
 
 /** What a column is taken to mean: an entry of a mapping, or a proposal whose unit may still be open. */
-export type ColumnMeaning = Pick<MappedColumn, "channel" | "row" | "format"> & { unit: UnitId | null };
+export type ColumnMeaning = Pick<MappedColumn, "channel" | "row" | "format" | "missing"> & { unit: UnitId | null };
 
 /**
  * A column's meaning as one sentence for a person:
@@ -31,7 +32,11 @@ export function describeColumn(
     return `${name} is ${what} as ${unit.words}${patternWords(meaning)}${quote(column.sample[0])}.`;
   const isFromStart = meaning.channel === "time" ? " from the start of the log" : "";
   const aside = unit.quantity === "pressure" && isForceChannel(meaning) ? " (a pressure, never shown as a force)" : "";
-  return `${name} is ${what} in ${unit.words}${isFromStart}${aside}${exampleWords(column, { ...meaning, unit: meaning.unit }, options)}.`;
+  return `${name} is ${what} in ${unit.words}${isFromStart}${aside}${exampleWords(column, { ...meaning, unit: meaning.unit }, options)}${missingWords(meaning)}.`;
+}
+
+function missingWords({ missing }: ColumnMeaning): string {
+  return missing?.length ? `; ${missing.join(" and ")} ${missing.length === 1 ? "counts" : "count"} as missing` : "";
 }
 
 function isForceChannel({ channel }: ColumnMeaning): boolean {
@@ -55,6 +60,8 @@ function exampleWords(
   { unit, format }: ColumnMeaning & { unit: UnitId },
   options: { decimalComma?: boolean },
 ): string {
+  const form = getUnit(unit).quantity === "angle" && format !== undefined ? readDegreesForm(format) : null;
+  if (form) return degreesExample(column, form, format ?? "");
   const poundsPerBushel = unit === "bu/ac" ? readBushelWeight(format) : undefined;
   if (poundsPerBushel === null) return "; give the weight of a bushel, such as 56 lb";
   const value = column.sample
@@ -66,6 +73,13 @@ function exampleWords(
   if (si === unit || (unit === "fraction" && si === "fraction")) return `, for example ${shown}`;
   const valueSi = value * unitFactor(unit, { poundsPerBushel });
   return `; ${shown} here is ${roundForReading(valueSi)} ${si === "fraction" ? "of one" : si}`;
+}
+
+function degreesExample({ sample }: Pick<FoundColumn, "sample">, form: DegreesForm, format: string): string {
+  const text = sample[0]?.trim() ?? "";
+  const degrees = parseDegrees(text, form);
+  const shown = Number.isNaN(degrees) ? "cannot be read so" : `here is ${Number(degrees.toFixed(6))} degrees`;
+  return ` written ${format}${text === "" ? "" : `; "${text}" ${shown}`}`;
 }
 
 function symbol(unit: UnitId): string {

@@ -1,8 +1,10 @@
 import { checkPositions } from "@/lib/ingest/columns/check-positions";
+import { checkMeanings } from "@/lib/ingest/columns/check-meanings";
 import { describeProposal } from "@/lib/ingest/columns/describe-column";
 import { guessColumns } from "@/lib/ingest/columns/guess-columns";
+import { offerSystems } from "@/lib/ingest/columns/offer-systems";
 import { summariseCells } from "@/lib/ingest/columns/summarise-cells";
-import type { ColumnProposal, FoundColumn, InspectOptions } from "@/lib/ingest/log-format";
+import type { ColumnProposal, CrsCandidate, FoundColumn, InspectOptions } from "@/lib/ingest/log-format";
 import type { LogShape } from "@/lib/ingest/mapping";
 import type { NoteBook } from "@/lib/ingest/records/note-book";
 
@@ -14,12 +16,18 @@ export interface SampledColumns {
   decimalComma: boolean;
   near: InspectOptions["near"];
   notes: NoteBook;
+  /** Where the file itself names the system of its easting and northing. */
+  crs?: string;
   /** Meanings the file itself states; undefined where only the header and the values tell. */
   known?: readonly (ColumnProposal | undefined)[];
 }
 
 /** The columns of a file with what they hold and seem to mean. Same for every format. */
-export function describeFoundColumns(sampled: SampledColumns): { columns: FoundColumn[]; shape: LogShape } {
+export function describeFoundColumns(sampled: SampledColumns): {
+  columns: FoundColumn[];
+  shape: LogShape;
+  crsCandidates?: CrsCandidate[];
+} {
   const { names, units, decimalComma } = sampled;
   const summaries = names.map((_, field) => summariseCells(sampled.cells(field), decimalComma));
   const evidence = names.flatMap((name, field) => {
@@ -28,6 +36,8 @@ export function describeFoundColumns(sampled: SampledColumns): { columns: FoundC
   });
   const { proposals, shape } = guessColumns(evidence, sampled.known);
   checkPositions(proposals, summaries, sampled);
+  checkMeanings(proposals, summaries, { notes: sampled.notes, known: sampled.known ?? [] });
+  const crsCandidates = sampled.crs === undefined ? offerSystems(proposals, summaries, sampled) : [];
   sampled.notes.set("unknown-unit", proposals.filter((proposal) => proposal?.unit === null).length);
   const columns = evidence.map(({ name, summary }, index) => {
     const proposal = proposals[index] ?? null;
@@ -35,5 +45,5 @@ export function describeFoundColumns(sampled: SampledColumns): { columns: FoundC
     const words = describeProposal({ name, sample }, proposal, { decimalComma });
     return { name, index, sample, min, max, proposal, words };
   });
-  return { columns, shape };
+  return { columns, shape, ...(crsCandidates.length === 0 ? {} : { crsCandidates }) };
 }

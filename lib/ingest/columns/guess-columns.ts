@@ -2,6 +2,7 @@ import { isRowable } from "@/lib/ingest/channel-quantities";
 import { guessUnit } from "@/lib/ingest/columns/guess-unit";
 import { nameChannel } from "@/lib/ingest/columns/name-channel";
 import { readHeaderUnit, readUnitWord } from "@/lib/ingest/columns/read-unit-words";
+import { setAsideSentinels } from "@/lib/ingest/columns/find-sentinels";
 import type { CellSummary } from "@/lib/ingest/columns/summarise-cells";
 import { readRowNumber, tokeniseHeader } from "@/lib/ingest/columns/tokenise-header";
 import type { ColumnProposal } from "@/lib/ingest/log-format";
@@ -29,6 +30,7 @@ export function guessColumns(
   const proposals = columns.map((column, index) => known[index] ?? guessColumn(column));
   if (known.length > 0) proposals.forEach((proposal, index) => doubtGuess(known[index] ? null : proposal));
   keepBestOfEach(proposals);
+  dropLoneWeek(proposals);
   if (known.length === 0) settleRows(proposals);
   return { proposals, shape: guessShape(proposals) };
 }
@@ -41,8 +43,9 @@ function guessColumn(column: ColumnEvidence): ColumnProposal | null {
   const inRow = readRowNumber(tokens);
   const named = nameChannel(inRow?.rest ?? tokens) ?? nameChannel(tokeniseHeader(column.name));
   if (!named || column.summary.filled === 0) return null;
+  const { missing, ...summary } = setAsideSentinels(column.summary);
   const { unit, format, trust, reason } = guessUnit(named.channel, unitWord, {
-    summary: column.summary,
+    summary,
     header: column.name,
   });
   const row = inRow && isRowable(named.channel) ? inRow.row : undefined;
@@ -52,6 +55,7 @@ function guessColumn(column: ColumnEvidence): ColumnProposal | null {
     ...(row === undefined ? {} : { row }),
     unit,
     ...(format === undefined ? {} : { format }),
+    ...(missing.length === 0 ? {} : { missing }),
     confidence: round(named.weight * trust * rowTrust),
     reason: `the header says "${named.words}"; ${reason}`,
   };
@@ -74,12 +78,27 @@ function round(confidence: number): number {
   return Math.round(Math.min(1, confidence) * 100) / 100;
 }
 
+/** A date and a time of day, and a GPS week and its seconds, are two columns of one time. */
+function sharedTimePart({ unit, format }: ColumnProposal): string {
+  if (unit === "local") return format ?? "";
+  return unit === "gps-week" ? unit : "";
+}
+
+/** A GPS week without the seconds of the week beside it is no time; beside a whole time it is not needed. */
+function dropLoneWeek(proposals: (ColumnProposal | null)[]): void {
+  const times = proposals.filter((proposal) => proposal?.channel === "time");
+  const isPair = times.length === 2 && times.some((time) => time?.unit === "s" || time?.unit === "ms");
+  proposals.forEach((proposal, index) => {
+    if (proposal?.unit === "gps-week" && !isPair) proposals[index] = null;
+  });
+}
+
 /** Of several columns that seem to be the same thing, the surest keeps it; a local date and a local time may share `time`. */
 function keepBestOfEach(proposals: (ColumnProposal | null)[]): void {
   const best = new Map<string, number>();
   proposals.forEach((proposal, index) => {
     if (!proposal) return;
-    const key = `${proposal.channel} ${proposal.row ?? ""} ${proposal.unit === "local" ? (proposal.format ?? "") : ""}`;
+    const key = `${proposal.channel} ${proposal.row ?? ""} ${sharedTimePart(proposal)}`;
     const other = best.get(key);
     if (other === undefined) {
       best.set(key, index);

@@ -7,6 +7,7 @@ import { parseIsoTime } from "@/lib/ingest/records/parse-time";
 /** Unix seconds of 1990 and 2100: no log lies outside. */
 const EARLIEST_S = 631_152_000;
 const LATEST_S = 4_102_444_800;
+const WEEK_S = 604_800;
 
 /** How a time column is written. */
 export function guessTimeUnit(word: UnitWord | null, summary: CellSummary, header: string): GuessedUnit {
@@ -26,6 +27,16 @@ export function guessTimeUnit(word: UnitWord | null, summary: CellSummary, heade
 function guessNumber(word: UnitWord | null, summary: CellSummary, header: string): GuessedUnit {
   const { min, max } = summary;
   if (min === null || max === null) return { unit: null, trust: 0.2, reason: "no cell is a time" };
+  const isOfWeek = /\b(?:tow|of week)\b|gps[ _]?s(?:ec)/i.test(header.replaceAll("_", " "));
+  if (/week/i.test(header) && !isOfWeek && max < 10_000 && summary.wholeShare === 1) {
+    return { unit: "gps-week", trust: 0.8, reason: "the header says week and its values are whole weeks" };
+  }
+  if (isOfWeek && min >= 0 && max <= WEEK_S) {
+    return { unit: "s", trust: 0.75, reason: "its values are seconds of a GPS week" };
+  }
+  if (isOfWeek && min >= 0 && max <= WEEK_S * 1000) {
+    return { unit: "ms", trust: 0.75, reason: "its values are milliseconds of a GPS week" };
+  }
   const saysGps = word === "gps-s" || /gps/i.test(header);
   if (min >= EARLIEST_S * 1000 && max <= LATEST_S * 1000) {
     return { unit: "unix-ms", trust: 1, reason: "its values are milliseconds since 1970" };

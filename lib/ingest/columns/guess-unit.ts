@@ -2,6 +2,7 @@ import { unitsForChannel } from "@/lib/ingest/channel-quantities";
 import type { CellSummary } from "@/lib/ingest/columns/summarise-cells";
 import type { UnitWord } from "@/lib/ingest/columns/read-unit-words";
 import { guessTimeUnit } from "@/lib/ingest/columns/guess-time";
+import { parseDegrees, readDegreesForm } from "@/lib/ingest/records/parse-degrees";
 import type { ChannelId } from "@/lib/logs/channel";
 import type { UnitId } from "@/lib/units/unit-table";
 
@@ -28,6 +29,10 @@ export function guessUnit(
       reason: isSwitch ? "its cells say on or off" : "its cells are not plainly on or off",
     };
   }
+  if (channel === "longitude" || channel === "latitude") {
+    const written = guessDegrees(channel, summary);
+    if (written) return written;
+  }
   if (channel === "pass" || channel === "row") return guessCount(channel, summary);
   const named = word === null ? null : resolveWord(channel, word);
   if (named) return checkRange(channel, named, summary);
@@ -42,7 +47,42 @@ function resolveWord(channel: ChannelId, word: UnitWord): { unit: UnitId; trust:
       return { unit: "lbf", trust: 0.8, reason: "the header says pounds, which on a force are pounds-force" };
     return allowed.includes("lb") ? { unit: "lb", trust: 0.95, reason: "the header names the unit" } : null;
   }
+  if (word === "kg" && allowed.includes("kgf")) {
+    return { unit: "kgf", trust: 0.7, reason: "the header says kilograms, which on a force are kilograms-force" };
+  }
   return allowed.includes(word) ? { unit: word, trust: 1, reason: "the header names the unit" } : null;
+}
+
+/** Degrees with minutes, as texts or packed into one number. Null for plain degrees. */
+function guessDegrees(
+  channel: "longitude" | "latitude",
+  { sample, numericShare, min, max, median }: CellSummary,
+): GuessedUnit | null {
+  const [asTexts, packed] = [readDegreesForm("degrees minutes"), readDegreesForm("ddmm.mmmm")];
+  if (!asTexts || !packed) return null;
+  if (numericShare < 0.5) {
+    const isFitting = sample.length > 0 && sample.every((text) => !Number.isNaN(parseDegrees(text, asTexts)));
+    return isFitting
+      ? {
+          unit: "deg",
+          format: "degrees minutes",
+          trust: 0.65,
+          reason: "its cells are degrees with minutes or a letter",
+        }
+      : null;
+  }
+  const limit = channel === "latitude" ? 90 : 180;
+  const values = [min, max, median].map((value) => Math.abs(value ?? NaN));
+  const isPacked =
+    values.some((value) => value > limit) &&
+    values.every((value) => value <= limit * 100 && value >= 100 && value % 100 < 60);
+  if (!isPacked) return null;
+  return {
+    unit: "deg",
+    format: "ddmm.mmmm",
+    trust: 0.6,
+    reason: `its values (${min} to ${max}) look like degrees and minutes in one number`,
+  };
 }
 
 interface Range {
@@ -56,6 +96,14 @@ const PLAUSIBLE: Partial<Record<ChannelId, Partial<Record<UnitId, Range>>>> = {
   latitude: { deg: { low: -90, high: 90 } },
   heading: { deg: { low: -180, high: 360 }, rad: { low: -6.3, high: 6.3 } },
   speed: { "m/s": { low: -1, high: 15 }, "km/h": { low: -3, high: 50 }, mph: { low: -2, high: 30 } },
+  // No opener is pressed with a tonne, or lifted with a quarter of one.
+  downforce: {
+    N: { low: -2500, high: 10_000 },
+    daN: { low: -250, high: 1000 },
+    kN: { low: -2.5, high: 10 },
+    kgf: { low: -250, high: 1000 },
+    lbf: { low: -550, high: 2200 },
+  },
   contact: { fraction: { low: 0, high: 1 }, percent: { low: 0, high: 100 } },
   moisture: { fraction: { low: 0, high: 1 }, percent: { low: 0, high: 100 } },
   depth: {

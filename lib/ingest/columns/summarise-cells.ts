@@ -13,6 +13,20 @@ export interface CellSummary {
   min: number | null;
   max: number | null;
   median: number | null;
+  /** The smallest and largest distinct numbers with their counts, in order: at most six from each end. */
+  ends: { value: number; count: number }[];
+}
+
+const ENDS = 6;
+
+function countEnds(sorted: readonly number[]): CellSummary["ends"] {
+  const counted: CellSummary["ends"] = [];
+  for (const value of sorted) {
+    const last = counted.at(-1);
+    if (last?.value === value) last.count++;
+    else counted.push({ value, count: 1 });
+  }
+  return counted.length <= 2 * ENDS ? counted : [...counted.slice(0, ENDS), ...counted.slice(-ENDS)];
 }
 
 export function summariseCells(cells: readonly string[], decimalComma: boolean): CellSummary {
@@ -29,6 +43,7 @@ export function summariseCells(cells: readonly string[], decimalComma: boolean):
     min: sorted[0] ?? null,
     max: sorted.at(-1) ?? null,
     median: sorted[Math.floor(sorted.length / 2)] ?? null,
+    ends: countEnds(sorted),
   };
 }
 

@@ -69,6 +69,24 @@ function sayNote(code: string, count: number, { place, firstLine, column }: Note
     "line-midpoints": "Each reading belongs to a line; it was placed halfway along it.",
     "several-points": "Each reading belongs to several points; it was placed at their mean.",
     "no-projection": "The archive has no .prj part; the coordinates look like WGS 84 degrees and were read so.",
+    "sentinel-values": `${n("value", "values")} of ${column ?? ""} stood for "nothing here", as the mapping says, and ${count === 1 ? "counts" : "count"} as missing.${first}`,
+    "sentinels-proposed": `${column ?? ""}: the value comes again and again far beyond the others, as loggers write for "nothing here". It is proposed as missing; confirm or empty that list.`,
+    "never-changes": `The ${column ?? ""} has the same value throughout: a sensor may be stuck or not connected.`,
+    "pressure-proposed": `The ${column ?? ""} is a pressure. It is kept as one and never shown as a force, because that needs the cylinder area and the linkage.`,
+    "contact-definition":
+      "Ground contact is the share of time a gauge wheel carried load in some logs, and a yes or no at the moment of the record in others. The file does not say which: ask whoever set up the machine, and compare logs only of one kind.",
+    "newtons-like-kilograms":
+      "The downforce is said to be in newtons, but its values would be little for newtons and are usual for kilograms-force. Check the unit: one kilogram-force is 9.8 N.",
+    "gps-week-short":
+      'The GPS weeks are below 1024. Some receivers begin again at 0 each 1024 weeks: if the dates come out decades too early, give that column the format "from 1024" or "from 2048".',
+    "degrees-minutes":
+      "Positions are written in degrees and minutes, not in plain degrees; check the format of both columns.",
+    "signs-left-out":
+      "Positions are written without the sign of west or south; they lie in the field only with it. Check the format of both columns.",
+    "systems-offered":
+      "The file does not say in which coordinate system its easting and northing are. Systems that put the log near the field are offered; choose one.",
+    "system-unknown":
+      "The file does not say in which coordinate system its easting and northing are; give it, such as EPSG:32614.",
     "absent-time-logs": `${n("time log is", "time logs are")} named by a task, but ${count === 1 ? "its files are" : "their files are"} not in the archive.`,
     "local-clock":
       "Times in task data are those of the machine's own clock, without a time zone; choose the zone it showed.",

@@ -1,6 +1,7 @@
 import { isRowable, unitsForChannel } from "@/lib/ingest/channel-quantities";
 import { stopReading } from "@/lib/ingest/ingest-error";
 import type { LogMapping, LogShape, MappedColumn } from "@/lib/ingest/mapping";
+import { DEGREES_FORMATS, readDegreesForm, type DegreesForm } from "@/lib/ingest/records/parse-degrees";
 import { readBushelWeight } from "@/lib/ingest/records/bushel-weight";
 import { createToDegrees, type ToDegrees } from "@/lib/ingest/records/project-position";
 import { createTimePlan, type TimePlan } from "@/lib/ingest/records/time-plan";
@@ -10,7 +11,7 @@ import { unitFactor } from "@/lib/units/convert-unit";
 import { getUnit } from "@/lib/units/unit-table";
 
 /** How a reader treats a cell. Numbers, ISO times (milliseconds) and booleans go into `line`, texts into `texts`. */
-export const CELL = { skip: 0, number: 1, isoTime: 2, boolean: 3, text: 4 } as const;
+export const CELL = { skip: 0, number: 1, isoTime: 2, boolean: 3, text: 4, degrees: 5 } as const;
 
 /** One number column: its place in the line and what one of its units is in SI. */
 export interface NumberField {
@@ -51,6 +52,10 @@ export interface ReadPlan {
   channels: ChannelPlan[];
   /** Rows a record by the mapping; 1 for the long shape, where the file tells. */
   rows: number;
+  /** Columns in which some numbers stand for "nothing here". */
+  missing: { field: number; values: readonly number[]; channel: ChannelId }[];
+  /** How longitude and latitude are written where they are no plain degrees; by field. */
+  degrees: Map<number, DegreesForm>;
   /** Mapped columns holding a pressure where a force was expected, for a note. */
   pressures: string[];
 }
@@ -86,6 +91,10 @@ export function buildReadPlan(mapping: LogMapping, names: readonly string[]): Re
     working: of("working").map((column) => column.field),
     channels: planChannels(measured, mapping.shape, { rows, missingField: names.length }),
     rows,
+    missing: columns.flatMap(({ field, missing, channel }) =>
+      missing?.length ? [{ field, values: missing, channel }] : [],
+    ),
+    degrees: planDegrees(columns),
     pressures: measured.filter(isPressureForForce).map((column) => column.name),
   };
   for (const column of columns) plan.kinds[column.field] = cellKind(column);
@@ -115,7 +124,29 @@ function isMeasured(channel: ChannelId): boolean {
   return !PLACING.has(channel);
 }
 
+function isAngleOfPosition({ channel }: MappedColumn): boolean {
+  return channel === "longitude" || channel === "latitude";
+}
+
+function planDegrees(columns: readonly PlacedColumn[]): Map<number, DegreesForm> {
+  const forms = new Map<number, DegreesForm>();
+  for (const column of columns) {
+    if (!isAngleOfPosition(column) || column.format === undefined) continue;
+    const form = readDegreesForm(column.format);
+    if (!form) {
+      stopReading(
+        "mapping-invalid",
+        `Column '${column.name}' has the format "${column.format}", which is no way of writing degrees. Use one of: ${DEGREES_FORMATS.join(", ")}.`,
+        { column: column.name },
+      );
+    }
+    forms.set(column.field, form);
+  }
+  return forms;
+}
+
 function cellKind(column: PlacedColumn): number {
+  if (isAngleOfPosition(column) && column.format !== undefined) return CELL.degrees;
   if (column.unit === "iso8601") return CELL.isoTime;
   if (column.unit === "local") return CELL.text;
   return column.unit === "boolean" ? CELL.boolean : CELL.number;

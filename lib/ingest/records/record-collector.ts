@@ -1,13 +1,16 @@
+import { channelWords } from "@/lib/ingest/channel-quantities";
 import { IngestFailure, ingestError, stopReading } from "@/lib/ingest/ingest-error";
 import { READ_LIMITS, type ReadLog } from "@/lib/ingest/log-format";
 import { nextCapacity, trimTo, withRoom } from "@/lib/ingest/records/growing-columns";
 import { NoteBook } from "@/lib/ingest/records/note-book";
 import { isMissing, parseNumber } from "@/lib/ingest/records/parse-number";
 import { parseBoolean } from "@/lib/ingest/records/parse-boolean";
+import { parseDegrees } from "@/lib/ingest/records/parse-degrees";
 import { parseIsoTime } from "@/lib/ingest/records/parse-time";
 import { CELL, type ChannelPlan, type ReadPlan } from "@/lib/ingest/records/read-plan";
 import { assembleLog } from "@/lib/ingest/records/assemble-log";
 import { isRowAveraged } from "@/lib/ingest/records/is-row-averaged";
+import { neverChanges } from "@/lib/ingest/records/never-changes";
 
 export interface CollectorOptions {
   /** About how many lines of data the file holds, to size the arrays; a wrong guess costs only time. */
@@ -97,6 +100,15 @@ export class RecordCollector {
     else if (kind === CELL.isoTime) this.line[field] = this.isoTime(text, field, lineNumber);
     else if (kind === CELL.boolean) this.line[field] = this.orNote(parseBoolean(text), text, field, lineNumber);
     else if (kind === CELL.text) this.texts[field] = text;
+    else if (kind === CELL.degrees) this.line[field] = this.degrees(text, { field, lineNumber, decimalComma });
+  }
+
+  private degrees(
+    text: string,
+    { field, lineNumber, decimalComma }: { field: number; lineNumber: number; decimalComma: boolean },
+  ): number {
+    const form = this.plan.degrees.get(field);
+    return this.orNote(form ? parseDegrees(text, form, decimalComma) : NaN, text, field, lineNumber);
   }
 
   private isoTime(text: string, field: number, lineNumber: number): number {
@@ -124,8 +136,18 @@ export class RecordCollector {
   /** Takes the filled line. Stops with `latitude-out-of-range`, `too-many-records` and the like. */
   commit(lineNumber: number): void {
     this.linesTaken++;
+    if (this.plan.missing.length > 0) this.dropMissing(lineNumber);
     if (this.plan.row) this.commitRow(lineNumber, this.plan.row);
     else this.commitRecord(lineNumber);
+  }
+
+  /** Numbers that the mapping says stand for "nothing here". */
+  private dropMissing(lineNumber: number): void {
+    for (const { field, values, channel } of this.plan.missing) {
+      if (!values.includes(this.line[field]!)) continue;
+      this.line[field] = NaN;
+      this.notes.add("sentinel-values", lineNumber, channelWords(channel));
+    }
   }
 
   private commitRecord(lineNumber: number): void {
@@ -227,7 +249,7 @@ export class RecordCollector {
     const time = this.plan.time;
     if (!time) return NaN;
     let ms = NaN;
-    if (time.fromNumber) ms = time.fromNumber(this.line[time.fields[0]!]!);
+    if (time.fromNumber) ms = time.fromNumber(this.line[time.fields[0]!]! + this.weekSeconds());
     else if (time.fromText) {
       const text = this.joinedTime(time.fields);
       ms = this.orNote(time.fromText(text), text, time.fields[0]!, lineNumber);
@@ -238,6 +260,11 @@ export class RecordCollector {
     this.lastTimeMs = ms;
     if (ms > this.latestTimeMs) this.latestTimeMs = ms;
     return ms;
+  }
+
+  private weekSeconds(): number {
+    const week = this.plan.time?.week;
+    return week ? (this.line[week.field]! + week.firstWeek) * week.unitsAWeek : 0;
   }
 
   private placeRecord(record: number, lineNumber: number): void {
@@ -333,8 +360,10 @@ export class RecordCollector {
       );
     }
     const log = assembleLog(this);
-    for (const channel of log.channels)
+    for (const channel of log.channels) {
       if (isRowAveraged(channel)) this.notes.add("row-averaged", undefined, channel.id);
+      if (neverChanges(channel)) this.notes.add("never-changes", undefined, channelWords(channel.id));
+    }
     return { log, notes: this.notes.list(this.place) };
   }
 

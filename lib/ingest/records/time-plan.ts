@@ -12,6 +12,8 @@ export interface TimePlan {
   /** Places in the line: one, or a date and a time column of local texts. */
   fields: number[];
   isRelative: boolean;
+  /** GPS week, beside the seconds (or milliseconds) of that week in `fields[0]`. */
+  week?: { field: number; firstWeek: number; unitsAWeek: number };
   /** For ISO texts without an offset; null reads them as UTC, with a note. */
   zone: ZoneClock | null;
 }
@@ -31,6 +33,7 @@ export function createTimePlan(
   const [first, second] = columns;
   if (!first) return null;
   if (columns.some((column) => column.unit === "local")) return planLocal(columns, zone);
+  if (columns.some((column) => column.unit === "gps-week")) return planGpsWeek(columns);
   if (second) {
     stopReading(
       "mapping-mismatch",
@@ -55,6 +58,38 @@ const NUMBER_TIMES: Partial<Record<MappedColumn["unit"], (value: number) => numb
   s: (value) => value * 1000,
   ms: (value) => value,
 };
+
+const WEEK_S = 604_800;
+
+/** A column of GPS weeks and one of seconds (or milliseconds) within them. A receiver that begins again at 0 each 1024 weeks has the format `from 1024` or `from 2048`. */
+function planGpsWeek(columns: readonly (MappedColumn & { field: number })[]): TimePlan {
+  const week = columns.find((column) => column.unit === "gps-week");
+  const inWeek = columns.find((column) => column.unit === "s" || column.unit === "ms");
+  if (!week || !inWeek || columns.length !== 2) {
+    stopReading(
+      "mapping-mismatch",
+      `Column '${week?.name ?? ""}' holds GPS weeks, which are a time only with one column of seconds or milliseconds of the week beside them. Map that to the time too.`,
+      { column: week?.name },
+    );
+  }
+  const from = /^from (\d{1,5})$/i.exec(week.format ?? "from 0")?.[1];
+  if (from === undefined) {
+    stopReading(
+      "unknown-time-format",
+      `Column '${week.name}' has the format "${week.format ?? ""}". For GPS weeks write the week that the file's 0 stands for, such as "from 2048".`,
+      { column: week.name },
+    );
+  }
+  const perSecond = inWeek.unit === "ms" ? 1000 : 1;
+  return {
+    fromNumber: (value) => gpsSecondsToMs(value / perSecond),
+    fromText: null,
+    fields: [inWeek.field],
+    isRelative: false,
+    week: { field: week.field, firstWeek: Number(from), unitsAWeek: WEEK_S * perSecond },
+    zone: null,
+  };
+}
 
 function planLocal(columns: readonly (MappedColumn & { field: number })[], zone: ZoneClock | null): TimePlan {
   const first = columns[0];

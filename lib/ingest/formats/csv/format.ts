@@ -86,6 +86,7 @@ async function inspectCsv(source: ByteSource, options: InspectOptions): Promise<
     delimiter: dialect.delimiter,
     decimalComma: dialect.decimalComma,
     encoding: encoding.encoding,
+    ...(found.crsCandidates ? { crsCandidates: found.crsCandidates } : {}),
     columns: found.columns,
     recordsSampled: rows.length,
     notes: notes.list("line"),

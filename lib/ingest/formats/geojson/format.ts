@@ -78,12 +78,21 @@ async function inspectGeojson(source: ByteSource, options: InspectOptions): Prom
     const path = paths[field - 2];
     return path ? features.map((feature) => readProperty(feature.properties, path)) : [];
   };
-  const found = describeFoundColumns({ names, units: null, cells, decimalComma: false, near: options.near, notes });
+  const found = describeFoundColumns({
+    names,
+    units: null,
+    cells,
+    decimalComma: false,
+    near: options.near,
+    notes,
+    crs,
+  });
   return {
     format: "geojson",
     shape: found.shape,
     encoding: "utf-8",
     ...(crs === undefined ? {} : { crs }),
+    ...(found.crsCandidates ? { crsCandidates: found.crsCandidates } : {}),
     columns: found.columns,
     recordsSampled: features.length,
     notes: notes.list("feature"),
