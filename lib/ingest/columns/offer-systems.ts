@@ -9,7 +9,7 @@ const KM_A_DEGREE = 111.2;
 
 /**
  * Systems that easting and northing may be in where the file does not say, best first: UTM zones about the field, and web
- * Mercator, that put the log near it. Without a field, nothing is offered: any zone fits any numbers.
+ * Mercator, that put the log near it. Without a field, nothing is offered: every zone fits every number.
  */
 export function offerSystems(
   proposals: readonly (ColumnProposal | null)[],

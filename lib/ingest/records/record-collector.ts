@@ -1,5 +1,5 @@
 import { channelWords } from "@/lib/ingest/channel-quantities";
-import { IngestFailure, ingestError, stopReading } from "@/lib/ingest/ingest-error";
+import { stopReading } from "@/lib/ingest/ingest-error";
 import { READ_LIMITS, type ReadLog } from "@/lib/ingest/log-format";
 import { nextCapacity, trimTo, withRoom } from "@/lib/ingest/records/growing-columns";
 import { NoteBook } from "@/lib/ingest/records/note-book";
@@ -8,6 +8,7 @@ import { parseBoolean } from "@/lib/ingest/records/parse-boolean";
 import { parseDegrees } from "@/lib/ingest/records/parse-degrees";
 import { parseIsoTime } from "@/lib/ingest/records/parse-time";
 import { CELL, type ChannelPlan, type ReadPlan } from "@/lib/ingest/records/read-plan";
+import { stopAtRejected } from "@/lib/ingest/records/stop-at-rejected";
 import { assembleLog } from "@/lib/ingest/records/assemble-log";
 import { isRowAveraged } from "@/lib/ingest/records/is-row-averaged";
 import { neverChanges } from "@/lib/ingest/records/never-changes";
@@ -346,7 +347,7 @@ export class RecordCollector {
 
   /** Ends the file: the log and its notes. Stops with `no-readings` or `ragged-rows`. */
   finish(): ReadLog {
-    if (this.linesRejected > this.linesTaken) throw new IngestFailure(this.rejectedError());
+    if (this.linesRejected > this.linesTaken) stopAtRejected(this, [this.linesRejected, this.linesTaken]);
     if (this.records === 0) {
       stopReading(
         "no-readings",
@@ -365,20 +366,6 @@ export class RecordCollector {
       if (neverChanges(channel)) this.notes.add("never-changes", undefined, channelWords(channel.id));
     }
     return { log, notes: this.notes.list(this.place) };
-  }
-
-  private rejectedError() {
-    const ragged = this.notes.countOf("ragged-rows");
-    const code = ragged > 0 ? "ragged-rows" : "bad-row-number";
-    const line = this.notes.firstLineOf(code);
-    const share = `${this.linesRejected} of ${this.linesRejected + this.linesTaken} lines`;
-    if (code === "ragged-rows") {
-      const message = `${share} do not have the ${this.plan.columnCount} fields of the header; the first is line ${line ?? 0}. Every line must have as many fields as the header: export the log again.`;
-      return ingestError("ragged-rows", message, { line });
-    }
-    const column = this.plan.names[this.plan.row?.field ?? 0];
-    const message = `${share} have no usable row number in column '${column ?? ""}'; the first is ${this.place} ${line ?? 0}. Rows are whole numbers from 1; if the file counts from 0, give that column the format "from 0".`;
-    return ingestError("missing-row", message, { line, column });
   }
 
   /** Arrays cut to the records there are. Frees each long buffer as it goes, to keep the peak low. */
