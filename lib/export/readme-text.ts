@@ -3,10 +3,13 @@ import type { ExportAbout } from "@/lib/export/about";
 const WIDTH = 100;
 
 /** The same for reading by eye: what the file is, where it came from, its columns and how it was made. */
-export function readmeText(about: ExportAbout, names: "long" | "short"): string {
+export function readmeText(
+  about: ExportAbout,
+  { names, metadataName }: { names: "long" | "short"; metadataName: string },
+): string {
   const { log, source, machine } = about;
   const sections = [
-    `${oneLine(about.title)}\n\nMade by Coulterbook on ${about.madeAt}. metadata.json holds the same for programs.`,
+    `${oneLine(about.title)}\n\nMade by Coulterbook on ${about.madeAt}. ${metadataName} holds the same as JSON.`,
     section("Where it came from", [
       `Log ${log.id}, version ${log.version}, ${log.kind}, ${log.startedAt ?? "start unknown"} to ${log.endedAt ?? "end unknown"}.`,
       `Original file: ${oneLine(source.fileName)}, ${source.bytes} bytes, SHA-256 ${source.sha256}.`,

@@ -164,7 +164,7 @@ export const readingOperations: Operation[] = [
     description:
       "Column names end in the SI unit; longitude and latitude are WGS 84. `csv` (RFC 4180; a text that begins like a " +
       "formula gets an apostrophe; `Link: rel=alternate` names the zip with README.txt and metadata.json, `bundle=zip`), " +
-      "`geojson` (RFC 7946; notes in the foreign member `about`), `shapefile` (zip with README.txt and metadata.json; 422 " +
+      "`geojson` (RFC 7946; notes in the foreign member `about`), `shapefile` (zip with README.txt and metadata.txt; 422 " +
       "`export_too_large` past 2 GB), `geopackage` (notes in the table `about`), `arrow` (IPC file; notes in the schema's " +
       "metadata). The notes hold source file and SHA-256, machine, the original's mapping, method, flags and a mapping that " +
       "reads the table in again. A download that breaks off is not whole: a log read again meanwhile ends it. Every export " +

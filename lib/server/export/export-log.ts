@@ -144,11 +144,13 @@ async function makeFile(job: Job): Promise<ExportFile> {
   return streamed(".zip", "application/zip", zipChunks(entries, job.madeOn));
 }
 
+/** Beside a shapefile the metadata end in `.txt`: readers of zipped maps take any `.json` for a layer. */
 function noteEntries(about: ExportAbout, names: "long" | "short"): ZipEntry[] {
   const encoder = new TextEncoder();
+  const metadataName = names === "short" ? "metadata.txt" : "metadata.json";
   return [
-    { name: "README.txt", content: encoder.encode(readmeText(about, names)) },
-    { name: "metadata.json", content: encoder.encode(`${JSON.stringify(about, null, 2)}\n`) },
+    { name: "README.txt", content: encoder.encode(readmeText(about, { names, metadataName })) },
+    { name: metadataName, content: encoder.encode(`${JSON.stringify(about, null, 2)}\n`) },
   ];
 }
 

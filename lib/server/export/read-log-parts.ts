@@ -34,14 +34,16 @@ export async function loadLogFrame(
  * The parts of a log in the file's order, a few passes at a time; no connection is held between them, so that a slow
  * download hinders nobody. @throws AppError `conflict` when a newer version takes the log's place on the way
  */
+// kernel: who asks, of what log, and how much at a time
 export async function* readLogParts(
   scope: Pick<Scope, "organisationId">,
   log: LogVersion,
   frame: LogFrame,
+  readingsAFetch = READINGS_A_FETCH,
 ): AsyncGenerator<LogPart> {
   const names = [...Object.keys(RECORD_COLUMNS), ...frame.channels.map(({ id }) => id)];
   let logStartMs = NaN;
-  for (const runs of groupRuns(frame)) {
+  for (const runs of groupRuns(frame, readingsAFetch)) {
     const first = runs[0]!;
     const records = { from: first.first, before: runs.at(-1)!.first + 1 };
     const stored = await readStoredRuns(scope, { logId: log.id, version: log.version, channels: names, records });
@@ -55,13 +57,13 @@ export async function* readLogParts(
   }
 }
 
-function* groupRuns({ body, channels }: LogFrame): Generator<RecordRun[]> {
+function* groupRuns({ body, channels }: LogFrame, readingsAFetch: number): Generator<RecordRun[]> {
   const aRecord = channels.reduce((sum, channel) => sum + channel.rows, Object.keys(RECORD_COLUMNS).length);
   let group: RecordRun[] = [];
   let readings = 0;
   const passes = body.passes.map((pass) => ({ ...pass, startedAtMs: NaN, endedAtMs: NaN, headingDeg: NaN }));
   for (const run of recordRuns(passes, body.records)) {
-    if (group.length > 0 && readings + run.records * aRecord > READINGS_A_FETCH) {
+    if (group.length > 0 && readings + run.records * aRecord > readingsAFetch) {
       yield group;
       group = [];
       readings = 0;
