@@ -1,11 +1,12 @@
 import type { ChoiceExtras } from "@/components/columns/check-choices";
-import type { Choices } from "@/components/columns/column-choice";
+import { readMissing, type Choices } from "@/components/columns/column-choice";
 import type { LogMapping, LogShape, MappedColumn } from "@/lib/ingest/mapping";
 
 function mappedColumns(choices: Choices): MappedColumn[] {
   return Object.entries(choices).flatMap(([name, choice]) => {
     if (choice.use !== "channel" || choice.channel === null || choice.unit === null) return [];
     const format = choice.format.trim();
+    const missing = readMissing(choice.missing) ?? [];
     return [
       {
         name,
@@ -13,19 +14,25 @@ function mappedColumns(choices: Choices): MappedColumn[] {
         unit: choice.unit,
         ...(choice.row === null ? {} : { row: choice.row }),
         ...(format === "" ? {} : { format }),
+        ...(missing.length === 0 ? {} : { missing }),
       },
     ];
   });
 }
 
 /** The mapping to send: columns left out are simply not named. */
-export function buildMapping(choices: Choices, shape: LogShape, extras: ChoiceExtras & { save: string }): LogMapping {
+export function buildMapping(
+  choices: Choices,
+  shape: LogShape,
+  extras: ChoiceExtras & { save: string; layer?: string | null },
+): LogMapping {
   const [crs, timeZone, save] = [extras.crs.trim(), extras.timeZone.trim(), extras.save.trim()];
   return {
     columns: mappedColumns(choices),
     shape,
     ...(crs ? { crs } : {}),
     ...(timeZone ? { timeZone } : {}),
+    ...(extras.layer ? { layer: extras.layer } : {}),
     ...(save ? { save } : {}),
   };
 }

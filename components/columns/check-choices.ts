@@ -1,4 +1,4 @@
-import type { Choices, ColumnChoice } from "@/components/columns/column-choice";
+import { readMissing, type Choices, type ColumnChoice } from "@/components/columns/column-choice";
 import { channelWords, isRowable } from "@/lib/ingest/channel-quantities";
 import type { LogShape } from "@/lib/ingest/mapping";
 
@@ -29,6 +29,7 @@ function problemOf(choice: ColumnChoice, shape: LogShape): string | null {
     return "Write how the time is written, such as dd/MM/yyyy HH:mm:ss.";
   if (choice.unit === "bu/ac" && !(Number.parseFloat(choice.format) > 0))
     return "Write what a bushel weighs, such as 56 lb.";
+  if (readMissing(choice.missing) === null) return "Write what counts as missing as numbers, such as -999, 65535.";
   if (choice.row !== null && !isRowable(choice.channel)) return `The ${channelWords(choice.channel)} has no rows.`;
   return choice.row !== null && shape !== "wide" ? "Only a file with one column a row has row numbers here." : null;
 }
@@ -39,8 +40,8 @@ function findDoubles(choices: Choices): Record<string, string> {
   const problems: Record<string, string> = {};
   for (const [name, choice] of Object.entries(choices)) {
     if (choice.use !== "channel" || choice.channel === null) continue;
-    // A local date and a local time are read together.
-    if (choice.channel === "time" && choice.unit === "local") continue;
+    // A local date and a local time are read together, and so are a GPS week and its seconds.
+    if (choice.channel === "time" && (choice.unit === "local" || choice.unit === "gps-week")) continue;
     const key = `${choice.channel}|${choice.row ?? ""}`;
     const other = seen.get(key);
     const what = `the ${channelWords(choice.channel)}${choice.row === null ? "" : ` of row ${choice.row}`}`;

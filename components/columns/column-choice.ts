@@ -12,8 +12,10 @@ export interface ColumnChoice {
   channel: ChannelId | null;
   row: number | null;
   unit: UnitId | null;
-  /** Pattern of a local time, weight of a bushel, or `from 0` for rows. */
+  /** Pattern of a local time, weight of a bushel, way of writing degrees, or `from 0` for rows. */
   format: string;
+  /** Numbers that stand for "nothing here", as typed: "-999, 65535". */
+  missing: string;
   /** A person has looked at it: changed it, or said it is right. */
   seen: boolean;
 }
@@ -29,7 +31,22 @@ export function confidenceWord(confidence: number): ConfidenceWord {
   return confidence >= LOOK_BELOW ? "likely" : "please check";
 }
 
-const UNDECIDED: ColumnChoice = { use: "undecided", channel: null, row: null, unit: null, format: "", seen: false };
+export const UNDECIDED: ColumnChoice = {
+  use: "undecided",
+  channel: null,
+  row: null,
+  unit: null,
+  format: "",
+  missing: "",
+  seen: false,
+};
+
+/** "-999, 65535" as numbers; null where something in it is none. */
+export function readMissing(text: string): number[] | null {
+  const parts = text.split(/[\s,;]+/).filter((part) => part !== "");
+  const numbers = parts.map(Number);
+  return numbers.every(Number.isFinite) && numbers.length <= 16 ? numbers : null;
+}
 
 function fromProposal(column: FoundColumn): ColumnChoice {
   const { proposal } = column;
@@ -41,6 +58,7 @@ function fromProposal(column: FoundColumn): ColumnChoice {
     row: proposal.row ?? null,
     unit: proposal.unit !== null && isUnitId(proposal.unit) ? proposal.unit : null,
     format: proposal.format ?? "",
+    missing: proposal.missing?.join(", ") ?? "",
     seen: proposal.unit !== null && proposal.confidence >= LOOK_BELOW,
   };
 }
@@ -49,8 +67,16 @@ function fromProposal(column: FoundColumn): ColumnChoice {
 function fromMapping(column: FoundColumn, mapping: LogMapping): ColumnChoice {
   const mapped = mapping.columns.find((candidate) => candidate.name === column.name);
   if (!mapped) return { ...UNDECIDED, use: "out", seen: true };
-  const { channel, row, unit, format } = mapped;
-  return { use: "channel", channel, row: row ?? null, unit, format: format ?? "", seen: true };
+  const { channel, row, unit, format, missing } = mapped;
+  return {
+    use: "channel",
+    channel,
+    row: row ?? null,
+    unit,
+    format: format ?? "",
+    missing: missing?.join(", ") ?? "",
+    seen: true,
+  };
 }
 
 export type Choices = Record<string, ColumnChoice>;

@@ -3,12 +3,13 @@
 import { useMemo, useState } from "react";
 import { buildMapping } from "@/components/columns/build-mapping";
 import { checkChoices } from "@/components/columns/check-choices";
-import { startChoices, type ColumnChoice } from "@/components/columns/column-choice";
+import { startChoices, UNDECIDED, type ColumnChoice } from "@/components/columns/column-choice";
 import { ColumnLine } from "@/components/columns/column-line";
 import { columnSections } from "@/components/columns/column-sections";
 import { ConfirmBar } from "@/components/columns/confirm-bar";
 import { GroupCard, type ChangeChoices } from "@/components/columns/group-card";
 import { groupColumns } from "@/components/columns/group-columns";
+import { LayerPicker, viewLayer } from "@/components/columns/layer-picker";
 import { MappingExtras, type Extras } from "@/components/columns/mapping-extras";
 import { Notice } from "@/components/ui/notice";
 import { ApiProblem } from "@/lib/api/api-problem";
@@ -29,7 +30,7 @@ function startExtras(log: Log, found: LogColumns): Extras {
   const inForce = LogMapping.safeParse(found.mapping);
   const mapping = inForce.success ? inForce.data : null;
   return {
-    crs: mapping?.crs ?? "",
+    crs: mapping?.crs ?? found.crs ?? "",
     timeZone: mapping?.timeZone ?? Intl.DateTimeFormat().resolvedOptions().timeZone,
     save: "",
     machineId: log.machineId ?? "",
@@ -43,7 +44,34 @@ function refusedColumns(failure: unknown): Record<string, string> {
   return Object.fromEntries(places.flatMap((place) => (place.column ? [[place.column, place.message]] : [])));
 }
 
-export function ColumnsForm({ log, found, machines, pending, failure, onSave }: ColumnsFormProps) {
+function startLayer({ mapping, layers }: LogColumns): string | null {
+  const inForce = LogMapping.safeParse(mapping);
+  return (inForce.success ? inForce.data.layer : undefined) ?? layers?.[0]?.id ?? null;
+}
+
+/** The meaning of every column; where the file holds several logs, of the one chosen. */
+export function ColumnsForm(props: ColumnsFormProps) {
+  const { found } = props;
+  const [layer, setLayer] = useState(() => startLayer(found));
+  const layers = found.layers ?? [];
+  if (layers.length < 2) return <LayerForm {...props} layer={null} />;
+  return (
+    <div className="space-y-8">
+      <LayerPicker layers={layers} value={layer} onChange={setLayer} />
+      <LayerForm key={layer} {...props} found={viewLayer(found, layer)} layer={layer} />
+    </div>
+  );
+}
+
+function LayerForm({
+  log,
+  found,
+  machines,
+  pending,
+  failure,
+  onSave,
+  layer,
+}: ColumnsFormProps & { layer: string | null }) {
   const [choices, setChoices] = useState(() => startChoices(found));
   const [extras, setExtras] = useState(() => startExtras(log, found));
   const isConfirmed = found.mapping !== null;
@@ -54,7 +82,7 @@ export function ColumnsForm({ log, found, machines, pending, failure, onSave }: 
     setChoices((before) => {
       const changed = names.map((name): [string, ColumnChoice] => {
         const next = {
-          ...(before[name] ?? { use: "undecided", channel: null, row: null, unit: null, format: "", seen: false }),
+          ...(before[name] ?? UNDECIDED),
           ...patch,
         };
         return [name, next];
@@ -68,14 +96,14 @@ export function ColumnsForm({ log, found, machines, pending, failure, onSave }: 
       className="space-y-8"
       onSubmit={(event) => {
         event.preventDefault();
-        onSave(buildMapping(choices, found.shape, extras), extras.machineId || null);
+        onSave(buildMapping(choices, found.shape, { ...extras, layer }), extras.machineId || null);
       }}
     >
       {found.recipe ? (
         <Notice state="fine">The recipe “{found.recipe.name}” fits this file; its meanings are shown below.</Notice>
       ) : null}
       {found.notes.map((note) => (
-        <Notice key={note.code} state="look">
+        <Notice key={`${note.code} ${note.message}`} state="look">
           {note.message}
         </Notice>
       ))}
@@ -117,6 +145,7 @@ export function ColumnsForm({ log, found, machines, pending, failure, onSave }: 
           onChange={(patch) => setExtras((before) => ({ ...before, ...patch }))}
           needsCrs={check.needsCrs}
           needsTimeZone={check.needsTimeZone}
+          crsCandidates={found.crsCandidates ?? []}
           machines={machines}
         />
       </section>

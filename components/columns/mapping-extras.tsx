@@ -1,7 +1,9 @@
 "use client";
 
 import { useId, useMemo } from "react";
+import { Button } from "@/components/ui/button";
 import { SelectField, TextField } from "@/components/ui/form-field";
+import type { CrsCandidate } from "@/lib/ingest/log-format";
 import type { MachineReply } from "@/lib/schemas/machines";
 
 export interface Extras {
@@ -16,11 +18,20 @@ export interface MappingExtrasProps {
   onChange: (patch: Partial<Extras>) => void;
   needsCrs: boolean;
   needsTimeZone: boolean;
+  /** Systems that put the log near the field, where the file does not name one. */
+  crsCandidates: CrsCandidate[];
   machines: MachineReply[];
 }
 
 /** What the columns alone do not say: machine, time zone, coordinate system; and a name to keep it all under. */
-export function MappingExtras({ extras, onChange, needsCrs, needsTimeZone, machines }: MappingExtrasProps) {
+export function MappingExtras({
+  extras,
+  onChange,
+  needsCrs,
+  needsTimeZone,
+  crsCandidates,
+  machines,
+}: MappingExtrasProps) {
   const zonesId = useId();
   const zones = useMemo(() => (needsTimeZone ? Intl.supportedValuesOf("timeZone") : []), [needsTimeZone]);
   return (
@@ -55,12 +66,19 @@ export function MappingExtras({ extras, onChange, needsCrs, needsTimeZone, machi
         </div>
       ) : null}
       {needsCrs ? (
-        <TextField
-          label="Coordinate system of easting and northing"
-          hint="Such as EPSG:32614 (UTM zone 14 north), or a proj4 text."
-          value={extras.crs}
-          onChange={(event) => onChange({ crs: event.target.value })}
-        />
+        <div className="space-y-2">
+          <TextField
+            label="Coordinate system of easting and northing"
+            hint="Such as EPSG:32614 (UTM zone 14 north), or a proj4 text."
+            value={extras.crs}
+            onChange={(event) => onChange({ crs: event.target.value })}
+          />
+          {crsCandidates.map(({ crs, words }) => (
+            <Button key={crs} aria-pressed={extras.crs === crs} onClick={() => onChange({ crs })}>
+              Use {words}
+            </Button>
+          ))}
+        </div>
       ) : null}
       <TextField
         label="Keep these meanings as a recipe"

@@ -33,13 +33,42 @@ function chooseMeaning(value: string, choice: ColumnChoice, ownName: string): Pa
   const kept = choice.unit && units.includes(choice.unit) ? choice.unit : null;
   const unit = kept ?? (units.length === 1 ? (units[0] ?? null) : null);
   // The row is kept, each column's own where a group changes together; a channel without rows has none.
-  return { use: "channel", channel, unit, ...(isRowable(channel) ? {} : { row: null }) };
+  // A way of writing belongs to its meaning: a pattern of dates says nothing about a force.
+  const format = channel === choice.channel ? {} : { format: "" };
+  return { use: "channel", channel, unit, ...format, ...(isRowable(channel) ? {} : { row: null }) };
 }
 
 const FORMAT_WORDS: Record<string, { label: string; hint: string }> = {
   local: { label: "Written as", hint: "dd day, MM month, yyyy year, HH:mm:ss, a for am/pm" },
   "bu/ac": { label: "A bushel weighs", hint: "such as 48 lb" },
+  "gps-week": { label: "Weeks begin", hint: "such as from 2048 where the receiver began again at 0; empty for 0" },
 };
+
+/** How degrees are written; each with the half of the globe where the file leaves the sign out. */
+function DegreesField({ choice, onChange }: Pick<MeaningEditorProps, "choice" | "onChange">) {
+  const half = choice.channel === "latitude" ? { letter: "S", words: "south" } : { letter: "W", words: "west" };
+  const ways: [format: string, words: string][] = [
+    ["", "plain degrees"],
+    [`dd.dddd ${half.letter}`, `plain degrees, ${half.words} without a sign`],
+    ["degrees minutes", "degrees and minutes as text"],
+    [`degrees minutes ${half.letter}`, `degrees and minutes as text, ${half.words} without a sign`],
+    ["ddmm.mmmm", "degrees and minutes in one number"],
+    [`ddmm.mmmm ${half.letter}`, `degrees and minutes in one number, ${half.words} without a sign`],
+  ];
+  return (
+    <SelectField
+      label="Written as"
+      value={choice.format}
+      onChange={(event) => onChange({ format: event.target.value })}
+    >
+      {ways.map(([format, words]) => (
+        <option key={format} value={format}>
+          {words}
+        </option>
+      ))}
+    </SelectField>
+  );
+}
 
 /** Meaning, unit, row and way of writing of one column or of a whole group. */
 export function MeaningEditor({ of, choice, onChange, withRow, ownName }: MeaningEditorProps) {
@@ -95,6 +124,17 @@ export function MeaningEditor({ of, choice, onChange, withRow, ownName }: Meanin
             const row = Number.parseInt(event.target.value, 10);
             onChange({ row: row >= 1 && row <= 1024 ? row : null });
           }}
+        />
+      ) : null}
+      {choice.channel === "longitude" || choice.channel === "latitude" ? (
+        <DegreesField choice={choice} onChange={onChange} />
+      ) : null}
+      {choice.use === "channel" && choice.unit && getUnit(choice.unit).quantity !== "clock" ? (
+        <TextField
+          label="Counts as missing"
+          hint="Numbers that stand for nothing, such as -999, 65535"
+          value={choice.missing}
+          onChange={(event) => onChange({ missing: event.target.value })}
         />
       ) : null}
       {format ? (

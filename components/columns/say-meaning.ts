@@ -1,4 +1,4 @@
-import type { ColumnChoice, FoundColumn } from "@/components/columns/column-choice";
+import { readMissing, type ColumnChoice, type FoundColumn } from "@/components/columns/column-choice";
 import { channelWords } from "@/lib/ingest/channel-quantities";
 import { describeColumn, type ColumnMeaning } from "@/lib/ingest/columns/describe-column";
 import type { UnitId } from "@/lib/units/unit-table";
@@ -14,11 +14,13 @@ export function unitSign(unit: UnitId): string {
 function meaningOf(choice: ColumnChoice): ColumnMeaning | null {
   if (choice.use !== "channel" || choice.channel === null) return null;
   const format = choice.format.trim();
+  const missing = readMissing(choice.missing) ?? [];
   return {
     channel: choice.channel,
     unit: choice.unit,
     ...(choice.row === null ? {} : { row: choice.row }),
     ...(format === "" ? {} : { format }),
+    ...(missing.length === 0 ? {} : { missing }),
   };
 }
 

@@ -77,13 +77,22 @@ export function headerSignature(inspection: Pick<Inspection, "format" | "shape" 
   return JSON.stringify([inspection.format, inspection.shape, ...inspection.columns.map((column) => column.name)]);
 }
 
-/** Columns of the log a mapping chooses in a file that holds several; null where it chooses none that is there. */
-export function chosenColumns(
+type Layered = Pick<Inspection, "format" | "shape" | "columns" | "layers">;
+
+/** The log a mapping chooses in a file that holds several; null where it chooses none that is there. */
+export function chosenLayer<T extends Pick<Layered, "shape" | "columns" | "layers">>(
   mapping: Pick<LogMapping, "layer">,
-  { layers, columns }: Pick<Inspection, "layers" | "columns">,
-): Inspection["columns"] | null {
-  if (mapping.layer === undefined) return layers && layers.length > 1 ? null : columns;
-  return layers?.find((layer) => layer.id === mapping.layer)?.columns ?? null;
+  inspection: T,
+): Omit<T, "layers"> | null {
+  const { layers, ...whole } = inspection;
+  if (mapping.layer === undefined) return layers && layers.length > 1 ? null : whole;
+  const layer = layers?.find((candidate) => candidate.id === mapping.layer);
+  return layer ? { ...whole, shape: layer.shape, columns: layer.columns } : null;
+}
+
+/** A mapping as it is kept for other files: which of several logs was read belongs to the one file. */
+export function toRecipe({ layer: _layer, save: _save, ...mapping }: LogMapping): LogMapping {
+  return mapping;
 }
 
 /** Whether a saved mapping can read this file: same shape, every column it names is there, and no choice of logs is open. */
@@ -92,6 +101,6 @@ export function mappingFits(
   inspection: Pick<Inspection, "shape" | "columns" | "layers">,
 ): boolean {
   if (mapping.shape !== inspection.shape) return false;
-  const names = new Set(chosenColumns(mapping, inspection)?.map((column) => column.name));
+  const names = new Set(chosenLayer(mapping, inspection)?.columns.map((column) => column.name));
   return mapping.columns.every((column) => names.has(column.name));
 }

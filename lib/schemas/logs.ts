@@ -74,6 +74,8 @@ export const ColumnProposal = z.object({
   row: z.number().int().optional(),
   unit: z.string().nullable(),
   format: z.string().optional(),
+  /** Values that seem to stand for "nothing here". */
+  missing: z.array(z.number()).optional(),
   confidence: z.number().min(0).max(1),
   reason: z.string(),
 });
@@ -86,10 +88,27 @@ export const FoundColumnBody = z.object({
   /** The proposal as a sentence a person can check. */
   words: z.string(),
 });
+export const CrsCandidateBody = z.object({ crs: z.string(), words: z.string() });
+/** One of several logs in a file; `layer` of a mapping names its id. */
+export const LogLayerBody = z.object({
+  id: z.string(),
+  label: z.string(),
+  records: z.number().int(),
+  shape: z.enum(["wide", "long", "single"]),
+  crs: z.string().optional(),
+  crsCandidates: z.array(CrsCandidateBody).optional(),
+  columns: z.array(FoundColumnBody),
+});
 export const LogColumns = z.object({
   format: z.string(),
   shape: z.enum(["wide", "long", "single"]),
   columns: z.array(FoundColumnBody),
+  /** Where the file itself says in which system its easting and northing are. */
+  crs: z.string().optional(),
+  /** Systems that put the log near its field, best first, where the file does not say. */
+  crsCandidates: z.array(CrsCandidateBody).optional(),
+  /** Where the file holds several logs: all of them, the longest first; `columns` are those of the first. */
+  layers: z.array(LogLayerBody).optional(),
   notes: z.array(LogNoteBody),
   /** The mapping in force, once a person or a recipe gave one. */
   mapping: z.unknown().nullable(),

@@ -3,7 +3,7 @@ import type { LogRow } from "@/db/queries/logs";
 import { findRecipesBySignature, markRecipeUsed, saveRecipe } from "@/db/queries/recipes";
 import { newId } from "@/lib/ids";
 import type { Inspection } from "@/lib/ingest/log-format";
-import { headerSignature, mappingFits, type LogMapping } from "@/lib/ingest/mapping";
+import { chosenLayer, headerSignature, mappingFits, toRecipe, type LogMapping } from "@/lib/ingest/mapping";
 import { workerScope } from "@/lib/server/logs/worker-scope";
 
 export interface ChosenMapping {
@@ -28,7 +28,8 @@ async function keepGivenMapping(
   const { save, ...mapping } = given;
   if (!save) return { mapping, recipeId: log.recipeId };
   const scope = { ...workerScope(log.organisationId), userId: log.uploadedBy ?? "" };
-  const recipe = { id: newId("recipe"), name: save, headerSignature: headerSignature(inspection), mapping };
+  const signature = headerSignature({ ...inspection, ...chosenLayer(mapping, inspection) });
+  const recipe = { id: newId("recipe"), name: save, headerSignature: signature, mapping: toRecipe(mapping) };
   return { mapping, recipeId: await saveRecipe(tx, scope, recipe) };
 }
 

@@ -6,9 +6,10 @@ import { changeLog, getLogOrThrow } from "@/db/queries/logs";
 import { findRecipe, saveRecipe } from "@/db/queries/recipes";
 import { AppError } from "@/lib/errors";
 import { newId } from "@/lib/ids";
+import { chooseLayer } from "@/lib/ingest/columns/choose-layer";
 import { IngestFailure, type IngestError } from "@/lib/ingest/ingest-error";
 import type { Inspection } from "@/lib/ingest/log-format";
-import { headerSignature, parseMapping, type LogMapping } from "@/lib/ingest/mapping";
+import { chosenLayer, headerSignature, parseMapping, toRecipe, type LogMapping } from "@/lib/ingest/mapping";
 import { buildReadPlan } from "@/lib/ingest/records/read-plan";
 import type { Log, LogColumns } from "@/lib/schemas/logs";
 import type { Scope } from "@/lib/scope";
@@ -32,9 +33,11 @@ export function readMapping(input: unknown): LogMapping {
 
 function refuseMisfit(mapping: LogMapping, inspection: Inspection): void {
   try {
+    chooseLayer<{ id: string }>(inspection.layers ?? [{ id: mapping.layer ?? "" }], mapping.layer, "The file");
+    const columns = chosenLayer(mapping, inspection)?.columns ?? inspection.columns;
     buildReadPlan(
       mapping,
-      inspection.columns.map((column) => column.name),
+      columns.map((column) => column.name),
     );
   } catch (error) {
     if (error instanceof IngestFailure) throw mappingError(error.error);
@@ -53,6 +56,9 @@ export async function getColumns(_container: Container, scope: Scope, logId: str
       format: found.format,
       shape: found.shape,
       columns: found.columns,
+      crs: found.crs,
+      crsCandidates: found.crsCandidates,
+      layers: found.layers,
       notes: found.notes,
       mapping: log.mapping,
       recipe: recipe && { id: recipe.id, name: recipe.name },
@@ -79,7 +85,8 @@ export async function putMapping(
     const found = (await findLogResult(tx, scope, { logId, version: 0, kind: "columns" })) as Inspection | null;
     if (!found) throw noColumns(before.error?.message);
     refuseMisfit(mapping, found);
-    const recipe = { id: newId("recipe"), name: save ?? "", headerSignature: headerSignature(found), mapping };
+    const signature = headerSignature({ ...found, ...chosenLayer(mapping, found) });
+    const recipe = { id: newId("recipe"), name: save ?? "", headerSignature: signature, mapping: toRecipe(mapping) };
     const recipeId = save ? await saveRecipe(tx, scope, recipe) : null;
     await changeLog(tx, scope, logId, { ...QUEUED, mapping, recipeId });
     await noteReadLog(tx, scope, logId);

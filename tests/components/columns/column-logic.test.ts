@@ -35,7 +35,15 @@ describe("groups of columns", () => {
 
   it("says anew what a person changed", () => {
     const [column] = makeFound().columns.slice(2);
-    const choice = { use: "channel", channel: "margin", row: 7, unit: "N", format: "", seen: true } as const;
+    const choice = {
+      use: "channel",
+      channel: "margin",
+      row: 7,
+      unit: "N",
+      format: "",
+      missing: "",
+      seen: true,
+    } as const;
     expect(column && sayColumn(column, choice)).toContain("of row 7 in newtons");
   });
 });

@@ -72,3 +72,73 @@ describe("the columns screen", () => {
     expect(within(card).getByRole("alert")).toHaveTextContent("Longitude is not a force.");
   });
 });
+
+describe("what the file leaves open", () => {
+  it("offers the logs of a file that holds several, and names the chosen one", async () => {
+    const found = makeFound();
+    const west = makeFound([makeColumn("AUX_3", null)], 2);
+    const layers = [
+      { id: "TSK-2/TLG00002", label: "East", records: 1234, shape: "wide" as const, columns: found.columns },
+      { id: "TSK-1/TLG00001", label: "West", records: 40, shape: "wide" as const, columns: west.columns },
+    ];
+    const { onSave, user } = show({ ...found, layers });
+    const picker = screen.getByLabelText("Log to read");
+    expect(within(picker).getAllByRole("option")).toHaveLength(2);
+    expect(picker).toHaveDisplayValue("East (1,234 records)");
+    await user.selectOptions(picker, "TSK-1/TLG00001");
+    // The other log has a column of its own that nobody has decided.
+    expect(screen.getByRole("button", { name: "Read the log" })).toBeDisabled();
+    await user.click(screen.getByRole("button", { name: "Leave out" }));
+    await user.click(screen.getByRole("button", { name: "Read the log" }));
+    expect(onSave.mock.calls[0]?.[0]).toMatchObject({ layer: "TSK-1/TLG00001" });
+    expect(onSave.mock.calls[0]?.[0].columns).toHaveLength(4);
+  });
+
+  it("does not ask for a log where there is one", () => {
+    show(makeFound());
+    expect(screen.queryByLabelText("Log to read")).not.toBeInTheDocument();
+  });
+
+  it("offers the systems that put the log near the field, and takes one only when it is pressed", async () => {
+    const found = makeFound();
+    found.columns.splice(
+      0,
+      2,
+      makeColumn("E", { channel: "easting", unit: "m" }),
+      makeColumn("N", { channel: "northing", unit: "m" }),
+    );
+    const crsCandidates = [{ crs: "EPSG:32614", words: "UTM zone 14 north, which puts the log 2 km from the field" }];
+    const { onSave, user } = show({ ...found, crsCandidates });
+    expect(screen.getByRole("button", { name: "Read the log" })).toBeDisabled();
+    await user.click(screen.getByRole("button", { name: /Use UTM zone 14 north/ }));
+    await user.click(screen.getByRole("button", { name: "Read the log" }));
+    expect(onSave.mock.calls[0]?.[0].crs).toBe("EPSG:32614");
+  });
+
+  it("proposes what counts as missing, says it, and refuses what is no number", async () => {
+    const { onSave, user } = show(
+      makeFound([makeColumn("DEPTH_mm", { channel: "depth", unit: "mm", missing: [-999] })]),
+    );
+    const card = screen.getByRole("article", { name: "Column DEPTH_mm" });
+    expect(card).toHaveTextContent("-999 counts as missing");
+    await user.click(within(card).getByRole("button", { name: "Change" }));
+    const field = within(card).getByLabelText("Counts as missing");
+    await user.clear(field);
+    await user.type(field, "none");
+    expect(within(card).getByRole("alert")).toHaveTextContent("as numbers");
+    await user.clear(field);
+    await user.type(field, "-999, 65535");
+    await user.click(screen.getByRole("button", { name: "Read the log" }));
+    expect(onSave.mock.calls[0]?.[0].columns.at(-1)).toMatchObject({ name: "DEPTH_mm", missing: [-999, 65535] });
+  });
+
+  it("lets a person say how degrees are written", async () => {
+    const found = makeFound();
+    const { onSave, user } = show(found);
+    const card = screen.getByRole("article", { name: "Column LON_deg" });
+    await user.click(within(card).getByRole("button", { name: "Change" }));
+    await user.selectOptions(within(card).getByLabelText("Written as"), "dd.dddd W");
+    await user.click(screen.getByRole("button", { name: "Read the log" }));
+    expect(onSave.mock.calls[0]?.[0].columns[0]).toMatchObject({ channel: "longitude", format: "dd.dddd W" });
+  });
+});
