@@ -16,6 +16,11 @@ export class NoteBook {
     if (count > 0) this.entries.set(code, { code, count, firstLine });
   }
 
+  /** Takes back notes that no longer hold. */
+  drop(code: string): void {
+    this.entries.delete(code);
+  }
+
   countOf(code: string): number {
     return this.entries.get(code)?.count ?? 0;
   }
@@ -51,6 +56,8 @@ function sayNote(code: string, count: number, { place, firstLine, column }: Note
     "ragged-rows": `${n("line", "lines")} did not have as many fields as the header and ${count === 1 ? "was" : "were"} left out.${first}`,
     "unreadable-value": `${n("cell", "cells")} of column '${column ?? ""}' could not be read as its unit says and ${count === 1 ? "counts" : "count"} as missing.${first}`,
     "zero-position": `${records} stood at longitude 0, latitude 0, which a receiver writes when it has no fix; ${count === 1 ? "its position counts" : "their positions count"} as missing.${first}`,
+    "repeated-header": `${n("line", "lines")} within the file repeated the header and ${count === 1 ? "was" : "were"} left out: it was put together from parts.${first}`,
+    regrouped: `The lines of one record did not stand together; ${records} were put together by time, place and pass, and ordered by time.`,
     "no-position": `${records} had no position and cannot be placed on the map.${first}`,
     "duplicate-times": `${records} carried the same time as the record before.${first}`,
     "out-of-order": `${records} went back in time; the order of the file was kept.${first}`,

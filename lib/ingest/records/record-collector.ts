@@ -10,6 +10,7 @@ import { parseIsoTime } from "@/lib/ingest/records/parse-time";
 import { CELL, type ChannelPlan, type ReadPlan } from "@/lib/ingest/records/read-plan";
 import { stopAtRejected } from "@/lib/ingest/records/stop-at-rejected";
 import { assembleLog } from "@/lib/ingest/records/assemble-log";
+import { regroupScattered } from "@/lib/ingest/records/regroup-records";
 import { isRowAveraged } from "@/lib/ingest/records/is-row-averaged";
 import { neverChanges } from "@/lib/ingest/records/never-changes";
 
@@ -354,13 +355,8 @@ export class RecordCollector {
         `The file has a header but no ${this.place} of readings after it. Export the log again.`,
       );
     }
-    if (this.plan.row && this.rows > 1 && this.records === this.linesTaken && this.records > 1) {
-      stopReading(
-        "records-not-together",
-        "In this long file no two neighbouring lines belong to the same record. Sort it by time, then by row, and upload it again.",
-      );
-    }
-    const log = assembleLog(this);
+    const assembled = assembleLog(this);
+    const log = this.plan.row ? regroupScattered(assembled, this.linesTaken, this.notes) : assembled;
     for (const channel of log.channels) {
       if (isRowAveraged(channel)) this.notes.add("row-averaged", undefined, channel.id);
       if (neverChanges(channel)) this.notes.add("never-changes", undefined, channelWords(channel.id));

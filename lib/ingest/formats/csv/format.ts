@@ -17,6 +17,8 @@ import { RecordCollector } from "@/lib/ingest/records/record-collector";
 const HEAD_BYTES = 1 << 19;
 const WIDE_HEAD_BYTES = 8 << 20;
 const SAMPLE_ROWS = 600;
+const LINE_FEED = 10;
+const CARRIAGE_RETURN = 13;
 
 /** Delimited text: one line a record (wide, single) or one a row unit (long); may be gzipped. */
 export const csvFormat: LogFormat = {
@@ -111,12 +113,30 @@ async function readCsv(source: ByteSource, mapping: LogMapping, options: ReadOpt
       decoder: new TextDecoder(encoding.encoding),
       lineNumber: 0,
       linesBefore: dialect.linesBefore,
+      headLines: cutHeadLines(layout),
     };
     if (await readPlain(opened, scan, encoding.markBytes)) return collector.finish();
   }
   const collector = new RecordCollector(plan, { expectedLines, place: "line" });
   await readGeneral(opened, collector, layout);
   return collector.finish();
+}
+
+/** The bytes of the header line and of the line of units, without their ends; none where there is no header. */
+function cutHeadLines({ head, dialect, encoding }: CsvLayout): Uint8Array[] {
+  if (!dialect.hasHeader) return [];
+  const count = dialect.units ? 2 : 1;
+  const lines: Uint8Array[] = [];
+  let start = encoding.markBytes;
+  for (let line = 1; line <= dialect.linesBefore; line++) {
+    const end = head.indexOf(LINE_FEED, start);
+    if (end < 0) return [];
+    if (line > dialect.linesBefore - count) {
+      lines.push(head.subarray(start, head[end - 1] === CARRIAGE_RETURN ? end - 1 : end));
+    }
+    start = end + 1;
+  }
+  return lines;
 }
 
 /** Lines of the file by the length of the lines in the head, a little over. */

@@ -1,5 +1,6 @@
 import type { ByteSource } from "@/lib/ingest/byte-source";
 import { countLines, parseCsvText, stopUnclosedQuote } from "@/lib/ingest/formats/csv/parse-csv-text";
+import { nameColumns } from "@/lib/ingest/columns/name-columns";
 import type { FoundEncoding } from "@/lib/ingest/formats/csv/decode-text";
 import type { CsvDialect } from "@/lib/ingest/formats/csv/sniff-dialect";
 import type { RecordCollector } from "@/lib/ingest/records/record-collector";
@@ -60,9 +61,20 @@ function takeRows(
       collector.rejectLine("ragged-rows", lineNumber);
       continue;
     }
+    if (isHeadRow(row, dialect)) {
+      collector.notes.add("repeated-header", lineNumber);
+      continue;
+    }
     for (let field = 0; field < columnCount; field++) {
       collector.takeText(field, row[field] ?? "", lineNumber, dialect.decimalComma);
     }
     collector.commit(lineNumber);
   }
+}
+
+/** The header or the line of units once more, as files put together from parts have it. */
+function isHeadRow(row: readonly string[], { hasHeader, names, units }: CsvDialect): boolean {
+  const first = row[0]?.trim();
+  if (hasHeader && first === names[0]) return nameColumns(row).every((name, i) => name === names[i]);
+  return units !== null && first === units[0] && row.every((cell, i) => cell.trim() === units[i]);
 }

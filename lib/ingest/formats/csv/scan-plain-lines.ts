@@ -20,6 +20,8 @@ export interface PlainScan {
   lineNumber: number;
   /** Lines at the top that are no data. */
   linesBefore: number;
+  /** The header line, and the line of units under it: a file put together from parts repeats them. */
+  headLines: readonly Uint8Array[];
 }
 
 /**
@@ -32,6 +34,8 @@ export function scanPlainLines(scan: PlainScan, bytes: Uint8Array, end: number):
   const { collector, delimiter, decoder } = scan;
   const { line, plan } = collector;
   const { kinds, columnCount } = plan;
+  const headByte = scan.headLines[0]?.[0] ?? -1;
+  const unitsByte = scan.headLines[1]?.[0] ?? -1;
   let at = 0;
   while (at < end) {
     scan.lineNumber++;
@@ -41,6 +45,11 @@ export function scanPlainLines(scan: PlainScan, bytes: Uint8Array, end: number):
       continue;
     }
     if (scan.lineNumber <= scan.linesBefore) {
+      at = bytes.indexOf(LINE_FEED, at) + 1;
+      continue;
+    }
+    if ((byte === headByte || byte === unitsByte) && isHeadLine(scan, bytes, at)) {
+      collector.notes.add("repeated-header", scan.lineNumber);
       at = bytes.indexOf(LINE_FEED, at) + 1;
       continue;
     }
@@ -107,6 +116,14 @@ export function scanPlainLines(scan: PlainScan, bytes: Uint8Array, end: number):
     else collector.rejectLine("ragged-rows", scan.lineNumber);
   }
   return true;
+}
+
+function isHeadLine({ headLines }: PlainScan, bytes: Uint8Array, start: number): boolean {
+  return headLines.some((line) => {
+    for (let i = 0; i < line.length; i++) if (bytes[start + i] !== line[i]) return false;
+    const next = bytes[start + line.length];
+    return next === LINE_FEED || next === CARRIAGE_RETURN;
+  });
 }
 
 interface Cell {

@@ -286,8 +286,41 @@ describe("long files", () => {
     expect(wrong).toMatchObject({ ok: false, error: { code: "missing-row", column: "row", line: 2 } });
   });
 
-  it("asks for sorting when no two lines share a record", async () => {
+  it("puts the lines of a record together in a file sorted by row, and says so", async () => {
     const text = `${HEADER}\n0,-98.6,38.4,2,1,10\n1,-98.6,38.5,2,1,11\n0,-98.6,38.4,2,2,20\n1,-98.6,38.5,2,2,21\n`;
+    const { log, notes } = await mustRead(textSource(text), mapping);
+    expect(valuesOf(log, "margin")).toEqual([10, 20, 11, 21]);
+    expect([...log.timeMs]).toEqual([0, 1000]);
+    expect([...log.sourceLine]).toEqual([2, 3]);
+    expect(notes).toMatchObject([{ code: "regrouped", count: 2 }]);
+  });
+
+  it("puts lines in any order into the same log as the sorted file", async () => {
+    const lines = Array.from({ length: 60 }, (_, i) => {
+      const [record, row] = [Math.floor(i / 3), (i % 3) + 1];
+      return `${record},-98.6,${38.4 + record / 1e4},2,${row},${record * 10 + row}`;
+    });
+    const sorted = await mustRead(textSource(`${HEADER}\n${lines.join("\n")}\n`), mapping);
+    // Steps of 7 visit all 60 lines, since 7 and 60 share no factor.
+    const mixed = lines.map((_, i) => lines[(i * 7) % 60]);
+    const { log, notes } = await mustRead(textSource(`${HEADER}\n${mixed.join("\n")}\n`), mapping);
+    expect(valuesOf(log, "margin")).toEqual(valuesOf(sorted.log, "margin"));
+    expect([...log.timeMs]).toEqual([...sorted.log.timeMs]);
+    expect(notes.map((note) => note.code)).toEqual(["regrouped"]);
+    expect(sorted.notes).toEqual([]);
+  });
+
+  it("keeps two records of the same row at the same time and place apart", async () => {
+    const text = `${HEADER}\n0,-98.6,38.4,2,1,10\n0,-98.6,38.4,2,1,11\n0,-98.6,38.4,2,2,20\n0,-98.6,38.4,2,2,21\n`;
+    const { log } = await mustRead(textSource(text), mapping);
+    expect(log.records).toBe(2);
+    const values = valuesOf(log, "margin");
+    expect([values[0], values[2]].sort()).toEqual([10, 11]);
+    expect([values[1], values[3]].sort()).toEqual([20, 21]);
+  });
+
+  it("stops when no two lines share a record", async () => {
+    const text = `${HEADER}\n0,-98.6,38.4,2,1,10\n1,-98.6,38.5,2,2,11\n2,-98.6,38.6,2,1,20\n3,-98.6,38.7,2,2,21\n`;
     expect(await readLog(textSource(text), mapping)).toMatchObject({
       ok: false,
       error: { code: "records-not-together" },
@@ -381,5 +414,61 @@ describe("the fast reader and the general reader", () => {
     const { log } = await mustRead(textSource(text), SIMPLE_MAPPING);
     expect(log.records).toBe(3000);
     expect([...log.sourceLine.subarray(2989, 2993)]).toEqual([2991, 2992, 2994, 2995]);
+  });
+});
+
+describe("files put together from parts", () => {
+  const head = "t,lon,lat,DF_1,DF_2";
+  const part = (from: number) =>
+    Array.from({ length: 3 }, (_, i) => `${from + i},-98.6,38.4,2${from + i},21`).join("\n");
+  const files: [string, string][] = [
+    ["plain", `${head}\n${part(0)}\n${head}\n${part(3)}\n`],
+    ["with CRLF", `${head}\n${part(0)}\n${head}\n${part(3)}\n`.replaceAll("\n", "\r\n")],
+    [
+      "read by the general reader",
+      `${head}\n${part(0)}\n${head}\n${part(3)}\n`.replaceAll(",", ";").replaceAll(".", ","),
+    ],
+    ["with a line of units", `${head}\ns,deg,deg,lbf,lbf\n${part(0)}\n${head}\ns,deg,deg,lbf,lbf\n${part(3)}\n`],
+  ];
+  it.each(files)("%s: leave the headers within out, with a note", async (_, text) => {
+    for (const chunkBytes of [11, 1 << 16]) {
+      const { log, notes } = await mustRead(textSource(text, "log.csv", chunkBytes), SIMPLE_MAPPING);
+      expect([...log.timeMs]).toEqual([0, 1000, 2000, 3000, 4000, 5000]);
+      expect(notes.map(({ code }) => code)).toEqual(["repeated-header"]);
+    }
+  });
+});
+
+describe("thousands of columns", () => {
+  it("are read as quickly sized arrays, each in its row", async () => {
+    const rows = 1000;
+    const channels = ["DF", "MG", "DP", "POP", "GC"];
+    const units = ["N", "N", "mm", "1/m2", "pct"];
+    const names = channels.flatMap((channel, at) =>
+      Array.from({ length: rows }, (_, i) => `${channel}_${i + 1}_${units[at]}`),
+    );
+    const line = (record: number) =>
+      `${record},-98.6,${38.4 + record / 1e5},${names.map((_, i) => (i + record) % 100).join(",")}`;
+    const text = `t_s,lon,lat,${names.join(",")}\n${Array.from({ length: 12 }, (_, record) => line(record)).join("\n")}\n`;
+    const inspection = await mustInspect(textSource(text));
+    expect(inspection.columns).toHaveLength(5003);
+    const columns = names.map((name, i) => ({
+      name,
+      channel: (["downforce", "margin", "depth", "population", "contact"] as const)[Math.floor(i / rows)] ?? "depth",
+      row: (i % rows) + 1,
+      unit: (["N", "N", "mm", "1/m2", "percent"] as const)[Math.floor(i / rows)] ?? "mm",
+    }));
+    const { log } = await mustRead(textSource(text), {
+      shape: "wide",
+      columns: [
+        { name: "t_s", channel: "time", unit: "s" },
+        { name: "lon", channel: "longitude", unit: "deg" },
+        { name: "lat", channel: "latitude", unit: "deg" },
+        ...columns,
+      ],
+    });
+    expect(log).toMatchObject({ records: 12, rows: 1000 });
+    // Column 1000 + 499 of record 7: (1499 + 7) % 100.
+    expect(log.channels.find(({ id }) => id === "margin")?.values[7 * 1000 + 499]).toBe(6);
   });
 });
