@@ -2,6 +2,7 @@
 
 import { useSearchParams } from "next/navigation";
 import { useState } from "react";
+import { BookExport } from "@/components/export/book-export";
 import { FieldBookProvider } from "@/components/field-book/field-book-context";
 import { LogPicker } from "@/components/field-book/log-picker";
 import { NoLogYet } from "@/components/field-book/no-log-yet";
@@ -11,6 +12,7 @@ import { useAddress } from "@/components/field-book/use-address";
 import { useField } from "@/components/hooks/use-fields";
 import { useLogs } from "@/components/hooks/use-logs";
 import type { BasemapConfig } from "@/components/map/basemap-config";
+import { can, type Role } from "@/lib/access/permissions";
 import { readAddress } from "@/lib/map-state/address-state";
 import { createFieldBookStore } from "@/lib/map-state/field-book-store";
 import type { Field } from "@/lib/schemas/fields";
@@ -21,10 +23,11 @@ export interface FieldBookProps {
   /** Address of the field's list of logs. */
   logsHref: string;
   basemap: BasemapConfig;
+  role: Role;
 }
 
 /** The chapter "Rows" of one field's book: picks the log, then shows it. */
-export function FieldBook({ fieldId, logsHref, basemap }: FieldBookProps) {
+export function FieldBook({ fieldId, logsHref, basemap, role }: FieldBookProps) {
   const field = useField(fieldId);
   const logs = useLogs(fieldId);
   const search = useSearchParams();
@@ -41,7 +44,12 @@ export function FieldBook({ fieldId, logsHref, basemap }: FieldBookProps) {
       field={field.data}
       log={log}
       basemap={basemap}
-      picker={<LogPicker logs={ready} chosen={log} onChoose={setChosenId} />}
+      picker={
+        <div className="flex min-w-0 items-center gap-2">
+          <LogPicker logs={ready} chosen={log} onChoose={setChosenId} />
+          {can(role, "logs.export") ? <BookExport /> : null}
+        </div>
+      }
     />
   );
 }

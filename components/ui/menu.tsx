@@ -12,7 +12,7 @@ export function Menu({ trigger, children }: { trigger: ReactNode; children: Reac
         <DropdownMenu.Content
           align="end"
           sideOffset={4}
-          className="z-50 min-w-48 rounded border border-rule bg-sheet py-1 shadow-[0_4px_16px_rgb(30_36_48/0.12)]"
+          className="z-50 max-h-[var(--radix-dropdown-menu-content-available-height)] min-w-48 overflow-y-auto rounded border border-rule bg-sheet py-1 shadow-[0_4px_16px_rgb(30_36_48/0.12)]"
         >
           {children}
         </DropdownMenu.Content>

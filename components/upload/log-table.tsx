@@ -2,6 +2,7 @@
 
 import Link from "next/link";
 import { useMemo } from "react";
+import { ExportMenu } from "@/components/export/export-menu";
 import { useLogActions } from "@/components/hooks/use-logs";
 import { useMachines } from "@/components/hooks/use-machines";
 import { buttonClass } from "@/components/ui/button";
@@ -89,6 +90,7 @@ export function LogTable({ logs, fieldId, fieldPath, role }: LogTableProps) {
             <Link href={logHref(log, fieldPath)} className={buttonClass("plain")}>
               {openWords(log)}
             </Link>
+            {log.status === "ready" && can(role, "logs.export") ? <ExportMenu log={log} /> : null}
             <LogMenu log={log} fieldPath={fieldPath} role={role} actions={actions} />
           </>
         )}

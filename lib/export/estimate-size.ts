@@ -10,24 +10,25 @@ export interface SizeInput {
   channels: readonly { perRow: boolean }[];
 }
 
-/** Bytes of a row and of each reading in it, measured on the fixture log of eight rows; zips by what deflate leaves. */
-const BYTES: Record<ExportFormat, { aRow: number; aReading: number }> = {
-  csv: { aRow: 92, aReading: 6 },
-  geojson: { aRow: 268, aReading: 24 },
-  shapefile: { aRow: 20, aReading: 3 },
-  geopackage: { aRow: 105, aReading: 8 },
-  arrow: { aRow: 64, aReading: 4 },
+/** Bytes of a line and of each reading in it, measured on the fixture log of eight rows. */
+const BYTES: Record<ExportFormat, { aLine: number; aReading: number }> = {
+  csv: { aLine: 100, aReading: 5.5 },
+  geojson: { aLine: 280, aReading: 22 },
+  // Zipped.
+  shapefile: { aLine: 20, aReading: 3.5 },
+  geopackage: { aLine: 120, aReading: 8 },
+  arrow: { aLine: 78, aReading: 4.2 },
 };
-const ZIPPED_SHARE = 0.22;
+
+/** What packing leaves of CSV: a long one says the same of a record in every row's line. */
+const ZIPPED_SHARE: Record<ExportShape, number> = { long: 0.2, wide: 0.35 };
 
 /** Roughly how large an export of readings will be. */
 export function estimateReadingsBytes({ format, shape, isBundle, records, rows, channels }: SizeInput): number {
   const perRow = channels.filter((channel) => channel.perRow).length;
-  const { aRow, aReading } = BYTES[format];
-  const hasRows = perRow > 0;
-  const whole =
-    shape === "wide"
-      ? records * (aRow + 50 + aReading * (perRow * rows + channels.length - perRow))
-      : records * (hasRows ? rows : 1) * (aRow + aReading * (channels.length + 1));
-  return isBundle && format === "csv" ? whole * ZIPPED_SHARE : whole;
+  const linesARecord = shape === "long" && perRow > 0 ? rows : 1;
+  const readingsALine = shape === "long" ? channels.length : perRow * rows + channels.length - perRow;
+  const { aLine, aReading } = BYTES[format];
+  const whole = records * linesARecord * (aLine + aReading * readingsALine);
+  return isBundle && format === "csv" ? whole * ZIPPED_SHARE[shape] : whole;
 }

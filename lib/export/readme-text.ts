@@ -12,7 +12,8 @@ export function readmeText(
     `${oneLine(about.title)}\n\nMade by Coulterbook on ${about.madeAt}. ${metadataName} holds the same as JSON.`,
     section("Where it came from", [
       `Log ${log.id}, version ${log.version}, ${log.kind}, ${log.startedAt ?? "start unknown"} to ${log.endedAt ?? "end unknown"}.`,
-      `Original file: ${oneLine(source.fileName)}, ${source.bytes} bytes, SHA-256 ${source.sha256}.`,
+      `Original file: ${oneLine(source.fileName)}, ${source.bytes} bytes.`,
+      `SHA-256 ${source.sha256}`,
       machine
         ? `Machine: ${oneLine(machine.name)}, ${machine.rowCount} rows ${machine.rowSpacingM} m apart.`
         : "Machine: nobody said which; the rows are spread evenly by a guess.",

@@ -8,6 +8,7 @@ import Papa from "papaparse";
 import { parseZip } from "shpjs";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import type { ExportAbout } from "@/lib/export/about";
+import { estimateReadingsBytes } from "@/lib/export/estimate-size";
 import { bytesSource } from "@/lib/ingest/byte-source";
 import type { LogMapping } from "@/lib/ingest/mapping";
 import type { Log, LogColumns, RowStatisticsBody } from "@/lib/schemas/logs";
@@ -416,5 +417,23 @@ describe("a log without a machine", () => {
     expect(whole.about.rows.isGuessed).toBe(true);
     expect(whole.features).toHaveLength(bare.counts.records * 8);
     expect(Object.keys(whole.features[0]!.properties)).not.toContain("resistanceN");
+  });
+});
+
+describe("the size said beforehand", () => {
+  it.each([
+    ["csv", "long", false],
+    ["csv", "long", true],
+    ["csv", "wide", false],
+    ["csv", "wide", true],
+    ["geojson", "long", false],
+    ["shapefile", "long", false],
+    ["geopackage", "long", false],
+    ["arrow", "long", false],
+  ] as const)("%s, %s, zipped %s, is right within a half", async (format, shape, isBundle) => {
+    const said = estimateReadingsBytes({ ...log.counts, channels: log.channels, format, shape, isBundle });
+    const made = await download(`format=${format}&shape=${shape}${isBundle ? "&bundle=zip" : ""}`);
+    expect(said / made.length).toBeGreaterThan(1 / 1.5);
+    expect(said / made.length).toBeLessThan(1.5);
   });
 });

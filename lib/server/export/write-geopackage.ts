@@ -1,6 +1,6 @@
 import path from "node:path";
 import { setImmediate } from "node:timers/promises";
-import sqlite from "node-sqlite3-wasm";
+import sqlite, { type SqliteDatabase } from "node-sqlite3-wasm";
 import type { ExportAbout } from "@/lib/export/about";
 import type { ExportBatch, ExportTable } from "@/lib/export/export-table";
 import { geopackageRows, NO_BOUNDS, type Bounds } from "@/lib/export/geopackage/geopackage-rows";
@@ -47,7 +47,7 @@ export async function writeGeopackage({ folder, table, batches, about }: Geopack
   return file;
 }
 
-function writeAbout(database: InstanceType<typeof sqlite.Database>, about: ExportAbout): void {
+function writeAbout(database: SqliteDatabase, about: ExportAbout): void {
   for (const [name, value] of Object.entries(about)) {
     const text = typeof value === "string" ? value : JSON.stringify(value);
     database.run("INSERT INTO about (name, value) VALUES (?, ?)", [name, text]);

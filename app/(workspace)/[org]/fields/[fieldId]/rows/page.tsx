@@ -11,11 +11,12 @@ interface RowsPageProps {
 /** The chapter "Rows". Whether the field may be seen is decided by the queries behind it. */
 export default async function RowsPage({ params }: RowsPageProps) {
   const { org, fieldId } = await params;
-  await requireScope(org);
+  const { scope } = await requireScope(org);
   const basemap = {
     styleUrl: process.env.BASEMAP_STYLE_URL || null,
     tilesUrl: process.env.BASEMAP_TILES_URL || null,
     attribution: process.env.BASEMAP_ATTRIBUTION || null,
   };
-  return <FieldBook fieldId={fieldId} logsHref={`/${org}/fields/${fieldId}/logs`} basemap={basemap} />;
+  const logsHref = `/${org}/fields/${fieldId}/logs`;
+  return <FieldBook fieldId={fieldId} logsHref={logsHref} basemap={basemap} role={scope.role} />;
 }
