@@ -31,17 +31,23 @@ function problemOf(choice: ColumnChoice, shape: LogShape): string | null {
     return "Write what a bushel weighs, such as 56 lb.";
   if (readMissing(choice.missing) === null) return "Write what counts as missing as numbers, such as -999, 65535.";
   if (choice.row !== null && !isRowable(choice.channel)) return `The ${channelWords(choice.channel)} has no rows.`;
-  return choice.row !== null && shape !== "wide" ? "Only a file with one column a row has row numbers here." : null;
+  return choice.row !== null && shape !== "wide"
+    ? "Only a file with one column a row has row numbers here: change the layout of the file, or leave the row empty."
+    : null;
 }
 
 /** Two columns may not both be the same thing of the same row. */
 function findDoubles(choices: Choices): Record<string, string> {
   const seen = new Map<string, string>();
+  const rowed = new Set(Object.values(choices).flatMap(({ row, channel }) => (row === null ? [] : [channel])));
   const problems: Record<string, string> = {};
   for (const [name, choice] of Object.entries(choices)) {
     if (choice.use !== "channel" || choice.channel === null) continue;
     // A local date and a local time are read together, and so are a GPS week and its seconds.
     if (choice.channel === "time" && (choice.unit === "local" || choice.unit === "gps-week")) continue;
+    if (choice.row === null && rowed.has(choice.channel)) {
+      problems[name] = `Other columns of the ${channelWords(choice.channel)} have a row. Give this one a row too.`;
+    }
     const key = `${choice.channel}|${choice.row ?? ""}`;
     const other = seen.get(key);
     const what = `the ${channelWords(choice.channel)}${choice.row === null ? "" : ` of row ${choice.row}`}`;

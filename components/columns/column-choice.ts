@@ -1,4 +1,4 @@
-import { LogMapping } from "@/lib/ingest/mapping";
+import { LogMapping, type LogShape } from "@/lib/ingest/mapping";
 import type { ChannelId } from "@/lib/logs/channel";
 import type { LogColumns } from "@/lib/schemas/logs";
 import { isUnitId, type UnitId } from "@/lib/units/unit-table";
@@ -90,4 +90,10 @@ export function startChoices(found: LogColumns): Choices {
       inForce.success ? fromMapping(column, inForce.data) : fromProposal(column),
     ]),
   );
+}
+
+/** The choices and the layout the screen opens with: those of the mapping in force, else what the file looks like. */
+export function startLayout(found: LogColumns): { shape: LogShape; choices: Choices } {
+  const inForce = LogMapping.safeParse(found.mapping);
+  return { shape: inForce.success ? inForce.data.shape : found.shape, choices: startChoices(found) };
 }

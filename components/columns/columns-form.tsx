@@ -3,7 +3,7 @@
 import { useMemo, useState } from "react";
 import { buildMapping } from "@/components/columns/build-mapping";
 import { checkChoices } from "@/components/columns/check-choices";
-import { startChoices, UNDECIDED, type ColumnChoice } from "@/components/columns/column-choice";
+import { startLayout } from "@/components/columns/column-choice";
 import { ColumnLine } from "@/components/columns/column-line";
 import { columnSections } from "@/components/columns/column-sections";
 import { ConfirmBar } from "@/components/columns/confirm-bar";
@@ -11,6 +11,8 @@ import { GroupCard, type ChangeChoices } from "@/components/columns/group-card";
 import { groupColumns } from "@/components/columns/group-columns";
 import { LayerPicker, viewLayer } from "@/components/columns/layer-picker";
 import { MappingExtras, type Extras } from "@/components/columns/mapping-extras";
+import { changeColumns, changeShape } from "@/components/columns/number-rows";
+import { ShapeChoice } from "@/components/columns/shape-choice";
 import { Notice } from "@/components/ui/notice";
 import { ApiProblem } from "@/lib/api/api-problem";
 import { LogMapping } from "@/lib/ingest/mapping";
@@ -72,23 +74,14 @@ function LayerForm({
   onSave,
   layer,
 }: ColumnsFormProps & { layer: string | null }) {
-  const [choices, setChoices] = useState(() => startChoices(found));
+  const [layout, setLayout] = useState(() => startLayout(found));
+  const { shape, choices } = layout;
   const [extras, setExtras] = useState(() => startExtras(log, found));
   const isConfirmed = found.mapping !== null;
   const sections = useMemo(() => columnSections(groupColumns(found.columns), isConfirmed), [found, isConfirmed]);
-  const check = checkChoices(choices, found.shape, extras);
+  const check = checkChoices(choices, shape, extras);
   const problems = { ...refusedColumns(failure), ...check.problems };
-  const change: ChangeChoices = (names, patch) =>
-    setChoices((before) => {
-      const changed = names.map((name): [string, ColumnChoice] => {
-        const next = {
-          ...(before[name] ?? UNDECIDED),
-          ...patch,
-        };
-        return [name, next];
-      });
-      return { ...before, ...Object.fromEntries(changed) };
-    });
+  const change: ChangeChoices = (names, patch) => setLayout((before) => changeColumns(before, names, patch));
 
   return (
     <form
@@ -96,7 +89,7 @@ function LayerForm({
       className="space-y-8"
       onSubmit={(event) => {
         event.preventDefault();
-        onSave(buildMapping(choices, found.shape, { ...extras, layer }), extras.machineId || null);
+        onSave(buildMapping(choices, shape, { ...extras, layer }), extras.machineId || null);
       }}
     >
       {found.recipe ? (
@@ -107,6 +100,9 @@ function LayerForm({
           {note.message}
         </Notice>
       ))}
+      <div className="max-w-md">
+        <ShapeChoice value={shape} onChange={(next) => setLayout((before) => changeShape(before, next))} />
+      </div>
       {sections.map((section) => (
         <section key={section.id} className="space-y-3" aria-labelledby={`section-${section.id}`}>
           <h2 id={`section-${section.id}`} className="text-section">

@@ -142,3 +142,44 @@ describe("what the file leaves open", () => {
     expect(onSave.mock.calls[0]?.[0].columns[0]).toMatchObject({ channel: "longitude", format: "dd.dddd W" });
   });
 });
+
+/** `ts,lat,lon,A1..A4,foo`: nothing in the header says what the numbered columns are. */
+function makeUnhelpful() {
+  const bare = ["A1", "A2", "A3", "A4"].map((name) => makeColumn(name, null));
+  return { ...makeFound(bare, 0), shape: "single" as const };
+}
+
+describe("a wide file whose header says nothing", () => {
+  it("numbers the rows of a group by itself and sends the mapping as wide", async () => {
+    const { onSave, user } = show(makeUnhelpful());
+    const group = screen.getByRole("article", { name: "4 columns" });
+    await user.selectOptions(within(group).getByLabelText("Is"), "downforce");
+    await user.selectOptions(within(group).getByLabelText("In"), "lbf");
+    expect(group).toHaveTextContent("are the downforce of rows 1 to 4 in pounds-force");
+    expect(screen.getByLabelText("Layout of the file")).toHaveValue("wide");
+    await user.click(screen.getByRole("button", { name: "Read the log" }));
+    const sent = onSave.mock.calls[0]?.[0];
+    expect(sent?.shape).toBe("wide");
+    expect(sent?.columns.flatMap(({ row }) => row ?? [])).toEqual([1, 2, 3, 4]);
+  });
+
+  it("opens a mapping with the mapping's own layout", async () => {
+    const columns = [
+      { name: "LON_deg", channel: "longitude", unit: "deg" },
+      { name: "LAT_deg", channel: "latitude", unit: "deg" },
+      ...["A1", "A2", "A3", "A4"].map((name, index) => ({ name, channel: "downforce", row: 4 - index, unit: "lbf" })),
+    ];
+    const { onSave, user } = show({ ...makeUnhelpful(), mapping: { columns, shape: "wide" } });
+    await user.click(screen.getByRole("button", { name: "Read the log" }));
+    expect(onSave.mock.calls[0]?.[0]).toMatchObject({ columns, shape: "wide" });
+  });
+
+  it("lets the layout be corrected, and says what then stands in the way", async () => {
+    const { user } = show(makeFound());
+    await user.selectOptions(screen.getByLabelText("Layout of the file"), "long");
+    expect(screen.getByText(/say which column is the row number/)).toBeInTheDocument();
+    expect(screen.getByRole("button", { name: "Read the log" })).toBeDisabled();
+    await user.selectOptions(screen.getByLabelText("Layout of the file"), "wide");
+    expect(screen.getByRole("button", { name: "Read the log" })).toBeEnabled();
+  });
+});
