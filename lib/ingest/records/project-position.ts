@@ -62,3 +62,20 @@ export function createToDegrees(crs: string): ToDegrees | null {
     return null;
   }
 }
+
+/** proj4 has no shift from the system's datum to WGS 84 (its constant for "none"). */
+const NO_SHIFT = 5;
+const WGS84_RADIUS_M = 6_378_137;
+
+/**
+ * Whether a system stands on an old datum whose shift to WGS 84 is not known here: positions are then some hundred metres off.
+ * Datums on the ellipsoids of WGS 84 and GRS 80 lie within a metre or two of it.
+ */
+export function lacksDatumShift(crs: string): boolean {
+  try {
+    const { a, datum } = new proj4.Proj(crs) as { a?: number; datum?: { datum_type?: number } };
+    return datum?.datum_type === NO_SHIFT && Math.abs((a ?? WGS84_RADIUS_M) - WGS84_RADIUS_M) > 1;
+  } catch {
+    return false;
+  }
+}

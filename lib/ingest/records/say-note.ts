@@ -50,6 +50,8 @@ const SENTENCES: Record<string, (say: Say) => string> = {
   "cut-short": () => "The .shp ends before the length it states: it was cut short on the way.",
   "shapes-without-table": (say) =>
     `${say.n(".shp file has", ".shp files have")} no .dbf beside ${say.count === 1 ? "it" : "them"} and ${say.count === 1 ? "was" : "were"} left out.`,
+  "old-datum": () =>
+    "The coordinate system in the .prj stands on an old datum whose shift to WGS 84 is not known here: positions may be some hundred metres off. Compare the map with the field, or export the log in WGS 84.",
   "area-centres": () =>
     "Each reading belongs to an area; it was placed at the centre of that area, which is where the rows were, not the antenna.",
   "line-midpoints": () => "Each reading belongs to a line; it was placed halfway along it.",

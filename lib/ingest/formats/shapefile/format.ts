@@ -18,7 +18,7 @@ import {
 } from "@/lib/ingest/log-format";
 import type { LogMapping } from "@/lib/ingest/mapping";
 import { NoteBook } from "@/lib/ingest/records/note-book";
-import { createToDegrees, type ToDegrees } from "@/lib/ingest/records/project-position";
+import { createToDegrees, lacksDatumShift, type ToDegrees } from "@/lib/ingest/records/project-position";
 import { readNumberBytes } from "@/lib/ingest/records/read-number-bytes";
 import { CELL, buildReadPlan } from "@/lib/ingest/records/read-plan";
 import { RecordCollector } from "@/lib/ingest/records/record-collector";
@@ -84,6 +84,7 @@ function judgeProjection(
   }
   if (/^\s*GEOG(?:CS|CRS)\b/i.test(prj) && /WGS_?\s?(?:19)?84/i.test(prj)) return { toDegrees: null, isDegrees: true };
   const toDegrees = createToDegrees(prj);
+  if (toDegrees && lacksDatumShift(prj)) notes.add("old-datum");
   if (toDegrees) return { toDegrees, isDegrees: true };
   return stopReading(
     "unknown-projection",

@@ -3,6 +3,7 @@ import { bytesSource } from "@/lib/ingest/byte-source";
 import { mappingFits } from "@/lib/ingest/mapping";
 import { proposeMapping } from "@/lib/ingest/propose-mapping";
 import { errorOf, mustInspect, mustRead, readAsProposed } from "../support/make-source";
+import { KNOWN_PROJECTIONS, OLD_DATUM } from "../support/projections";
 import {
   makeDbf,
   makeManyPointShp,
@@ -63,6 +64,32 @@ describe("zipped point shapefile", () => {
     const { log } = await readAsProposed(source(layer({ "drill/log.shp": shp, "drill/log.prj": UTM14_PRJ })));
     expect(log.longitude[0]).toBeCloseTo(-100, 8);
     expect(log.latitude[1]).toBeCloseTo(40, 8);
+  });
+
+  it.each(KNOWN_PROJECTIONS)("reads a .prj of $name", async ({ prj, east, north, longitude, latitude }) => {
+    const shp = makeShp([
+      [east, north],
+      [east, north],
+      [east, north],
+    ]);
+    const { log, notes } = await readAsProposed(source(layer({ "drill/log.shp": shp, "drill/log.prj": prj })));
+    expect(log.longitude[0]).toBeCloseTo(longitude, 8);
+    expect(log.latitude[0]).toBeCloseTo(latitude, 8);
+    expect(notes).toEqual([]);
+  });
+
+  it("says when a .prj stands on a datum whose shift it does not know", async () => {
+    const { prj, east, north, longitude, latitude } = OLD_DATUM;
+    const shp = makeShp([
+      [east, north],
+      [east, north],
+      [east, north],
+    ]);
+    const { log, notes } = await readAsProposed(source(layer({ "drill/log.shp": shp, "drill/log.prj": prj })));
+    expect(notes.map((note) => note.code)).toEqual(["old-datum"]);
+    // It is off, and less than 300 m: 0.004 degrees.
+    expect(Math.abs((log.longitude[0] ?? NaN) - longitude)).toBeLessThan(0.004);
+    expect(Math.abs((log.latitude[0] ?? NaN) - latitude)).toBeGreaterThan(1e-4);
   });
 
   it("says when there is no .prj, and offers easting and northing where the numbers are metres", async () => {
