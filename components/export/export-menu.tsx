@@ -3,7 +3,7 @@
 import { Download } from "lucide-react";
 import { buttonClass } from "@/components/ui/button";
 import { formatBytes } from "@/components/ui/format-date";
-import { Menu, MenuLink, MenuNote, MenuRule } from "@/components/ui/menu";
+import { Menu, MenuGroup, MenuLink, MenuRule } from "@/components/ui/menu";
 import { estimateReadingsBytes } from "@/lib/export/estimate-size";
 import { exportPath, type ExportChoice } from "@/lib/export/export-path";
 import type { ExportFormat, ExportShape } from "@/lib/export/export-table";
@@ -46,13 +46,14 @@ export function ExportMenu({ log, zones }: ExportMenuProps) {
         </button>
       }
     >
-      <MenuNote>Every reading, with units and notes</MenuNote>
-      {READINGS.map((line) => (
-        <MenuLink key={line.format + line.shape} href={exportPath(log.id, { ...line, level: "readings" })} download>
-          {line.words}
-          <span className="ml-auto pl-6 text-table text-ink-soft">{sizeWords(log, line)}</span>
-        </MenuLink>
-      ))}
+      <MenuGroup title="Every reading, with units and notes">
+        {linesOf(log).map((line) => (
+          <MenuLink key={line.format + line.shape} href={exportPath(log.id, { ...line, level: "readings" })} download>
+            {line.words}
+            <span className="ml-auto pl-6 text-table text-ink-soft">{sizeWords(log, line)}</span>
+          </MenuLink>
+        ))}
+      </MenuGroup>
       {zones ? (
         <Polygons log={log} title={`Zones of ${channelWords(zones.channel).name}, as coloured`} zones={zones} />
       ) : null}
@@ -65,21 +66,28 @@ function Polygons({ log, title, zones }: { log: Log; title: string; zones?: Expo
   return (
     <>
       <MenuRule />
-      <MenuNote>{title}</MenuNote>
-      {POLYGONS.map(({ format, words }) => (
-        <MenuLink key={format} href={exportPath(log.id, { format, level: zones ? "zones" : "swaths", zones })} download>
-          {words}
-        </MenuLink>
-      ))}
+      <MenuGroup title={title}>
+        {POLYGONS.map(({ format, words }) => (
+          <MenuLink
+            key={format}
+            href={exportPath(log.id, { format, level: zones ? "zones" : "swaths", zones })}
+            download
+          >
+            {words}
+          </MenuLink>
+        ))}
+      </MenuGroup>
     </>
   );
 }
 
-function sizeWords({ counts, channels }: Log, { format, shape }: Line): string {
-  return `about ${formatBytes(roundBytes(estimateReadingsBytes({ ...counts, channels, format, shape, isBundle: true })))}`;
+/** A log without rows has one line a record in either shape. */
+function linesOf({ channels }: Log): readonly Line[] {
+  return channels.some((channel) => channel.perRow) ? READINGS : READINGS.filter((_, index) => index > 0);
 }
 
 /** One digit that counts: the size is a guess. */
-function roundBytes(bytes: number): number {
-  return Number(bytes.toPrecision(1));
+function sizeWords({ counts, channels }: Log, { format, shape }: Line): string {
+  const bytes = estimateReadingsBytes({ ...counts, channels, format, shape, isBundle: true });
+  return `about ${formatBytes(Number(bytes.toPrecision(1))).replace(/\.0(?=\D)/, "")}`;
 }

@@ -46,6 +46,16 @@ export function MenuNote({ children }: { children: ReactNode }) {
   return <DropdownMenu.Label className="px-4 py-2 text-table text-ink-soft">{children}</DropdownMenu.Label>;
 }
 
+/** Entries under a heading that names them to those who hear the menu. */
+export function MenuGroup({ title, children }: { title: string; children: ReactNode }) {
+  return (
+    <DropdownMenu.Group aria-label={title}>
+      <MenuNote>{title}</MenuNote>
+      {children}
+    </DropdownMenu.Group>
+  );
+}
+
 export function MenuRule() {
   return <DropdownMenu.Separator className="my-1 border-t border-rule" />;
 }

@@ -28,7 +28,11 @@ export async function writeShapefile(input: ShapefileInput): Promise<{ shp: stri
     shx: path.join(folder, "export.shx"),
     dbf: path.join(folder, "export.dbf"),
   };
-  const files = { shp: await open(paths.shp, "w"), shx: await open(paths.shx, "w"), dbf: await open(paths.dbf, "w") };
+  const files = {
+    shp: await createFile(paths.shp),
+    shx: await createFile(paths.shx),
+    dbf: await createFile(paths.dbf),
+  };
   try {
     const shapes = new ShapeEncoder(table.geometry === "polygon" ? "polygon" : "point");
     const dbfStart = dbfHeader(fields, 0, toDay(madeOn));
@@ -49,6 +53,11 @@ export async function writeShapefile(input: ShapefileInput): Promise<{ shp: stri
     await Promise.all(Object.values(files).map((file) => file.close()));
   }
   return paths;
+}
+
+/** The comment keeps the bundler from packing the whole project for a path it cannot know. */
+function createFile(file: string): Promise<FileHandle> {
+  return open(/*turbopackIgnore: true*/ file, "w");
 }
 
 function addShapes(shapes: ShapeEncoder, { columns }: ExportTable, { rows, cells, polygons }: ExportBatch): ShapeBytes {
