@@ -7,7 +7,7 @@ import { areClassEdges } from "@/lib/legend/class-edges";
 export interface EdgeFieldsProps {
   edges: readonly number[];
   colours: readonly string[];
-  /** Share of all readings in each class. */
+  /** Share of the distance that rows drove in each class. */
   shares: readonly number[];
   units: ChannelUnits;
   onChange: (edges: number[]) => void;
@@ -51,16 +51,27 @@ export function EdgeFields({ edges, colours, shares, units, onChange }: EdgeFiel
           </div>
         ))}
       </div>
-      <div className="flex text-[11px] leading-4 text-ink-soft">
+      <div
+        className="flex text-[11px] leading-4 text-ink-soft"
+        role="group"
+        aria-label="Share of distance in each class"
+      >
         {shares.map((share, index) => (
           <span key={index} className="min-w-0 flex-1 text-center">
-            {share > 0 && share < 0.005 ? "<1" : Math.round(share * 100)}
-            {"\u202f"}%
+            {shareText(share)}
           </span>
         ))}
       </div>
+      {shares.length > 0 ? <p className="text-center text-[11px] leading-4 text-ink-soft">share of distance</p> : null}
     </div>
   );
+}
+
+/** "12 %"; a share that is not nothing, or not quite all, never reads as 0 or 100. */
+function shareText(share: number): string {
+  const rounded = Math.round(share * 100);
+  if (rounded === 0 && share > 0) return "<1\u202f%";
+  return rounded === 100 && share < 1 ? ">99\u202f%" : `${rounded}\u202f%`;
 }
 
 interface EdgeFieldProps {

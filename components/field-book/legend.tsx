@@ -9,15 +9,15 @@ import { useChannelUnits } from "@/components/field-book/use-channel-units";
 import type { Classes } from "@/components/field-book/use-classes";
 import { Menu, MenuItem, MenuNote } from "@/components/ui/menu";
 import { channelWords } from "@/lib/legend/channel-words";
-import { classOf, type Histogram } from "@/lib/legend/class-edges";
 import { type EdgePreset, presetsFor, proposeEdges } from "@/lib/legend/propose-edges";
+import { sharesOfClasses } from "@/lib/legend/value-distribution";
 
 const PRESET_WORDS: Record<EdgePreset, string> = {
   target: "Around the target",
   "contact-load": "Published contact loads",
   round: "Round numbers",
   equal: "Equal steps",
-  quantile: "As many readings in each",
+  quantile: "As much distance in each",
 };
 
 /** What the colours mean: class edges as numbers, with the readings behind them. */
@@ -25,7 +25,10 @@ export function Legend({ classes, unit }: { classes: Classes | null; unit: strin
   const { store } = useBook();
   const channel = useBookState((state) => state.channel);
   const units = useChannelUnits(unit, channel);
-  const shares = useMemo(() => (classes ? sharesOf(classes.context.histogram, classes.edges) : []), [classes]);
+  const shares = useMemo(() => {
+    const distribution = classes?.context.distribution;
+    return distribution ? sharesOfClasses(distribution, classes.edges) : [];
+  }, [classes]);
   if (!classes) return <div className="hatch h-20 opacity-60" role="status" aria-label="Counting the readings" />;
   const onChange = (edges: number[]) => store.getState().setEdges(channel, edges);
   return (
@@ -80,15 +83,4 @@ function Presets({ classes, onChoose }: { classes: Classes; onChoose: (edges: nu
       ) : null}
     </Menu>
   );
-}
-
-/** The part of the readings in each class, by the middles of the bins. */
-function sharesOf({ minimum, maximum, counts }: Histogram, edges: readonly number[]): number[] {
-  const shares = new Array<number>(edges.length + 1).fill(0);
-  const total = counts.reduce((sum, count) => sum + count, 0) || 1;
-  counts.forEach((count, bin) => {
-    const value = minimum + ((bin + 0.5) / counts.length) * (maximum - minimum);
-    shares[classOf(value, edges)]! += count / total;
-  });
-  return shares;
 }

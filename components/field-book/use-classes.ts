@@ -22,8 +22,15 @@ export function useClasses(channel: string, overview: LogOverview | undefined): 
   const { factor } = useChannelUnits(overview?.unit ?? "", channel);
   return useMemo(() => {
     if (!overview || overview.channel !== channel) return null;
-    const { histogram, targetMarginN, marginDeadbandN } = overview;
-    const context: EdgeContext = { channel, histogram, targetMarginN, marginDeadbandN, shownFactor: factor };
+    const { histogram, distribution, targetMarginN, marginDeadbandN } = overview;
+    const context: EdgeContext = {
+      channel,
+      histogram,
+      distribution,
+      targetMarginN,
+      marginDeadbandN,
+      shownFactor: factor,
+    };
     const edges = own ?? proposeEdges(presetsFor(context)[0] ?? "round", context);
     return { edges, colours: coloursFor(context, edges), context };
   }, [channel, overview, own, factor]);

@@ -1,8 +1,8 @@
 import type { ValueScale } from "@/lib/tiles/value-scale";
 
-/** The code of the first step of a scale that lies at or above a value. Half a millionth of a step forgives rounding. */
+/** The code of the first step of a scale that lies at or above a value. A thousandth of a step forgives single precision. */
 function firstCodeAtOrAbove(value: number, { offset, step }: ValueScale): number {
-  return Math.ceil((value - offset) / step - 1e-6);
+  return Math.ceil((value - offset) / step - 1e-3);
 }
 
 /**

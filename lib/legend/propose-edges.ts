@@ -7,6 +7,7 @@ import {
   type Histogram,
   quantileEdges,
 } from "@/lib/legend/class-edges";
+import { equalDistanceEdges, type ValueDistribution } from "@/lib/legend/value-distribution";
 
 export const EDGE_PRESETS = ["target", "contact-load", "round", "equal", "quantile"] as const;
 export type EdgePreset = (typeof EDGE_PRESETS)[number];
@@ -14,6 +15,8 @@ export type EdgePreset = (typeof EDGE_PRESETS)[number];
 export interface EdgeContext {
   channel: string;
   histogram: Histogram;
+  /** Distance at each value; without it classes alike in size are read off the histogram. */
+  distribution?: ValueDistribution;
   /** What the machine was set to hold, and how far off is still on target; null where nobody said. */
   targetMarginN: number | null;
   marginDeadbandN: number | null;
@@ -21,7 +24,7 @@ export interface EdgeContext {
   shownFactor: number;
 }
 
-/** Classes of equal width and of equal count. */
+/** Classes of equal width and of equal distance. */
 const CLASSES = 6;
 /** Tolerance where the machine's own is not known. Common practice, no source. */
 const GUESSED_DEADBAND_N = 100;
@@ -49,7 +52,9 @@ function edgesOf(preset: EdgePreset, context: EdgeContext): number[] {
     case "equal":
       return equalEdges(histogram.minimum, histogram.maximum, CLASSES);
     case "quantile":
-      return quantileEdges(histogram, CLASSES);
+      return context.distribution
+        ? equalDistanceEdges(context.distribution, CLASSES)
+        : quantileEdges(histogram, CLASSES);
     case "round":
       return context.channel.startsWith("deviation:") ? roundAroundZero(context) : roundEdges(context);
   }

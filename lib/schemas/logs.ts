@@ -233,6 +233,13 @@ export const LogOverview = z.object({
   values: z.array(z.array(NullableNumber)),
   /** Equal bins of all readings. */
   histogram: z.object({ minimum: z.number(), maximum: z.number(), counts: z.array(z.number().int()) }),
+  /** Metres of row at each value, value = offset + code * step: what shares of distance are worked out from. */
+  distribution: z.object({
+    offset: z.number(),
+    step: z.number(),
+    codes: z.array(z.number().int()),
+    distancesM: z.array(z.number()),
+  }),
   /** What the machine was set to; null where nobody said. */
   targetMarginN: NullableNumber,
   marginDeadbandN: NullableNumber,

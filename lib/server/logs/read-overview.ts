@@ -5,6 +5,7 @@ import type { Container } from "@/lib/server/create-container";
 import { findPlacedLog, loadChannel } from "@/lib/server/logs/find-placed-log";
 import { cachedForLog } from "@/lib/server/logs/log-cache";
 import { summariseLog } from "@/lib/tiles/summarise-log";
+import { weighValues } from "@/lib/tiles/weigh-values";
 
 /** Columns of the strip: about one a pixel of the widest screens it is drawn on. */
 const COLUMNS = 1200;
@@ -24,11 +25,12 @@ export async function readOverview(
       channel: channel.id,
       unit: channel.unit,
       values: values.map((line) => Array.from(line, writeNumber)),
+      distribution: weighValues(placed, channel),
       targetMarginN: placed.machine?.targetMarginN ?? null,
       marginDeadbandN: placed.machine?.marginDeadbandN ?? null,
       maxDownforceN: placed.machine?.maxDownforceN ?? null,
     };
-    return { value, bytes: summary.columns * summary.rows * 16 };
+    return { value, bytes: summary.columns * summary.rows * 16 + value.distribution.codes.length * 32 };
   });
 }
 

@@ -17,6 +17,7 @@ const OVERVIEW: LogOverview = {
   passes: [{ pass: 1, from: 0, to: 1 }],
   values: [],
   histogram: histogramOf(VALUES, 0, 1000, 100),
+  distribution: { offset: 0, step: 1, codes: Array.from(VALUES), distancesM: Array.from(VALUES, () => 2) },
   targetMarginN: 450,
   marginDeadbandN: 100,
   maxDownforceN: 1600,
@@ -38,11 +39,12 @@ describe("the legend", () => {
     expect(colours).toEqual(classColours("PuOr", 7, 3));
   });
 
-  it("says how many of the readings lie in each class", () => {
+  it("says how much of the distance lies in each class", () => {
     renderInBook(<LegendOfMargin />);
     // Even values 0 .. 999: a quarter below 250, a tenth in 250 .. 350, and so on (hand-worked).
     expect(screen.getByText("25 %")).toBeInTheDocument();
     expect(screen.getByText("35 %")).toBeInTheDocument();
+    expect(screen.getByText("share of distance")).toBeInTheDocument();
   });
 
   it("takes a typed edge in the person's unit", async () => {

@@ -47,13 +47,24 @@ describe("colourStops", () => {
           const scale = scaleBetween(Math.min(a, b), Math.max(a, b), resolution);
           const code = codeOf(scale.minimum + t * (scale.maximum - scale.minimum), scale);
           const value = valueOfCode(code, scale);
-          // A value within a millionth of a step of an edge may fall on either side of it.
-          fc.pre(edges.every((edge) => Math.abs(edge - value) > 2e-6 * scale.step));
+          // A value within a thousandth of a step of an edge may fall on either side of it.
+          fc.pre(edges.every((edge) => Math.abs(edge - value) > 2e-3 * scale.step));
           expect(drawn(colourStops(edges, COLOURS, scale), code)).toBe(COLOURS[classOf(value, edges)]);
         },
       ),
       { seed: 11, numRuns: 1000 },
     );
+  });
+
+  it("takes a typed edge for the logged step it names, whatever single precision made of the step", () => {
+    // Pounds-force (NIST SP 811) as logged in whole numbers and kept in single precision.
+    const pound = 4.4482216152605;
+    const scale = scaleBetween(Math.fround(90 * pound), Math.fround(900 * pound), pound);
+    for (const edge of [100, 212, 333, 450, 777]) {
+      const code = codeOf(Math.fround(edge * pound), scale);
+      const stops = colourStops([edge * pound], ["below", "from"], scale);
+      expect([drawn(stops, code - 1), drawn(stops, code)]).toEqual(["below", "from"]);
+    }
   });
 
   it("rises strictly, also with edges below, above and between two codes of the scale", () => {
