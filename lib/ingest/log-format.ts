@@ -137,6 +137,8 @@ export const READ_LIMITS = {
   unpackedBytes: 2 * 1024 * 1024 * 1024,
   /** Logs in one file. */
   layers: 200,
-  /** Bytes of a device description, unpacked. */
-  xmlBytes: 64 * 1024 * 1024,
+  /** Columns over all logs of one file that an inspection lists. */
+  listedColumns: 20_000,
+  /** Bytes of a description of tasks and devices, unpacked; read into a tree, it takes some twenty times that. */
+  xmlBytes: 16 * 1024 * 1024,
 } as const;

@@ -1,5 +1,11 @@
 import { stopReading } from "@/lib/ingest/ingest-error";
-import type { CrsCandidate, FoundColumn, Inspection, LogLayer } from "@/lib/ingest/log-format";
+import {
+  READ_LIMITS,
+  type CrsCandidate,
+  type FoundColumn,
+  type Inspection,
+  type LogLayer,
+} from "@/lib/ingest/log-format";
 import type { LogNote } from "@/lib/logs/machine-log";
 import type { LogShape } from "@/lib/ingest/mapping";
 
@@ -38,12 +44,30 @@ export interface InspectedLayer {
 export function describeLayers(
   inspected: readonly InspectedLayer[],
 ): Pick<Inspection, "shape" | "columns" | "layers" | "crs" | "crsCandidates"> & { notes: LogNote[] } {
-  const layers: LogLayer[] = [...inspected].sort((a, b) => b.records - a.records);
+  const layers = keepListed([...inspected].sort((a, b) => b.records - a.records));
+  const left = inspected.length - layers.length;
   const [first] = layers;
   const crs = first?.crs === undefined ? {} : { crs: first.crs };
   const candidates = first?.crsCandidates ? { crsCandidates: first.crsCandidates } : {};
   const one = { shape: first?.shape ?? "single", columns: first?.columns ?? [], ...crs, ...candidates };
   if (layers.length < 2) return { ...one, notes: [] };
-  const message = `The file holds ${layers.length} logs; choose which to read. The columns shown are those of "${first?.label ?? ""}", the longest.`;
-  return { ...one, layers, notes: [{ code: "several-layers", count: layers.length, message }] };
+  const unlisted = left === 0 ? "" : ` The ${left} shortest are not listed: there are too many columns.`;
+  const message = `The file holds ${inspected.length} logs; choose which to read. The columns shown are those of "${first?.label ?? ""}", the longest.${unlisted}`;
+  return { ...one, layers, notes: [{ code: "several-layers", count: inspected.length, message }] };
+}
+
+/** The first, and as many more as the list may hold. Without what only the inspecting format needs. */
+function keepListed(inspected: readonly InspectedLayer[]): LogLayer[] {
+  let columns = 0;
+  return inspected
+    .filter((layer, index) => (columns += layer.columns.length) <= READ_LIMITS.listedColumns || index === 0)
+    .map(({ id, label, records, shape, crs, crsCandidates, columns: own }) => ({
+      id,
+      label,
+      records,
+      shape,
+      ...(crs === undefined ? {} : { crs }),
+      ...(crsCandidates === undefined ? {} : { crsCandidates }),
+      columns: own,
+    }));
 }

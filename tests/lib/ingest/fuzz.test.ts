@@ -52,6 +52,10 @@ const FILES: [string, Uint8Array][] = [
   ["tasks.zip", TASK_DATA],
 ];
 
+/** A few hundred in every test run; `FUZZ_RUNS=10000` for the long one. */
+const RUNS = Number(process.env.FUZZ_RUNS ?? 250);
+const LONGEST_MS = 10_000 + RUNS * 60;
+
 /** Some bytes changed, then perhaps cut: what a bad disk, a bad line or a bad person makes of a file. */
 const damage = fc.record({
   flips: fc.array(fc.tuple(fc.nat(), fc.nat(255)), { maxLength: 6 }),
@@ -68,22 +72,26 @@ async function outcomesOf(name: string, bytes: Uint8Array, chunkBytes: number) {
 }
 
 describe.each(FILES)("a damaged %s", (name, whole) => {
-  it("always ends in a log or in an error that says what and where", async () => {
-    await fc.assert(
-      fc.asyncProperty(damage, async ({ flips, keep, chunkBytes }) => {
-        const bytes = whole.slice(0, Math.ceil(whole.length * keep));
-        for (const [at, value] of flips) if (bytes.length > 0) bytes[at % bytes.length] = value;
-        for (const outcome of await outcomesOf(name, bytes, chunkBytes)) {
-          if (outcome.ok) continue;
-          expect(INGEST_ERROR_CODES).toContain(outcome.error.code);
-          // "unreadable" is for what lies outside the file: damage inside it must be told by its own rule.
-          expect(outcome.error.code, outcome.error.message).not.toBe("unreadable");
-          expect(outcome.error.message).toMatch(/\.$/);
-        }
-      }),
-      { numRuns: 250 },
-    );
-  });
+  it(
+    "always ends in a log or in an error that says what and where",
+    async () => {
+      await fc.assert(
+        fc.asyncProperty(damage, async ({ flips, keep, chunkBytes }) => {
+          const bytes = whole.slice(0, Math.ceil(whole.length * keep));
+          for (const [at, value] of flips) if (bytes.length > 0) bytes[at % bytes.length] = value;
+          for (const outcome of await outcomesOf(name, bytes, chunkBytes)) {
+            if (outcome.ok) continue;
+            expect(INGEST_ERROR_CODES).toContain(outcome.error.code);
+            // "unreadable" is for what lies outside the file: damage inside it must be told by its own rule.
+            expect(outcome.error.code, outcome.error.message).not.toBe("unreadable");
+            expect(outcome.error.message).toMatch(/\.$/);
+          }
+        }),
+        { numRuns: RUNS },
+      );
+    },
+    LONGEST_MS,
+  );
 
   it("reads whole", async () => {
     const [, outcome] = await outcomesOf(name, whole, 1 << 16);
@@ -92,18 +100,22 @@ describe.each(FILES)("a damaged %s", (name, whole) => {
 });
 
 describe("bytes of any kind", () => {
-  it("never throw", async () => {
-    await fc.assert(
-      fc.asyncProperty(
-        fc.uint8Array({ maxLength: 400 }),
-        fc.constantFrom("a.csv", "a.zip", "a.json"),
-        async (bytes, name) => {
-          for (const outcome of await outcomesOf(name, bytes, 50)) {
-            if (!outcome.ok) expect(outcome.error.code, outcome.error.message).not.toBe("unreadable");
-          }
-        },
-      ),
-      { numRuns: 250 },
-    );
-  });
+  it(
+    "never throw",
+    async () => {
+      await fc.assert(
+        fc.asyncProperty(
+          fc.uint8Array({ maxLength: 400 }),
+          fc.constantFrom("a.csv", "a.zip", "a.json"),
+          async (bytes, name) => {
+            for (const outcome of await outcomesOf(name, bytes, 50)) {
+              if (!outcome.ok) expect(outcome.error.code, outcome.error.message).not.toBe("unreadable");
+            }
+          },
+        ),
+        { numRuns: RUNS },
+      );
+    },
+    LONGEST_MS,
+  );
 });

@@ -4,7 +4,7 @@ import { holdsTaskData, openTaskData } from "@/lib/ingest/formats/task-data/open
 import { hasFix, openTimeLog, TIME_FIELD, type TimeLog } from "@/lib/ingest/formats/task-data/open-time-log";
 import { noteTimeLog } from "@/lib/ingest/formats/task-data/note-time-log";
 import { readValue } from "@/lib/ingest/formats/task-data/read-value";
-import { scanTimeLog, type TimeRecord } from "@/lib/ingest/formats/task-data/scan-time-log";
+import { countRecords, scanTimeLog, type TimeRecord } from "@/lib/ingest/formats/task-data/scan-time-log";
 import type { ZipArchive } from "@/lib/ingest/formats/zip/open-zip";
 import { stopReading } from "@/lib/ingest/ingest-error";
 import {
@@ -69,7 +69,7 @@ function inspectTimeLog(
   log: TimeLog,
   options: InspectOptions,
 ): InspectedLayer & { log: TimeLog; sampled: number; notes: NoteBook } {
-  const { records } = scanTimeLog(log.bytes, log.header, () => undefined);
+  const records = countRecords(log.bytes, log.header);
   const stride = Math.max(1, Math.ceil(records / SAMPLE_RECORDS));
   const cells: string[][] = log.names.map(() => []);
   scanTimeLog(log.bytes, log.header, (record) => {
@@ -89,7 +89,9 @@ function inspectTimeLog(
     notes,
     known: [...log.recordColumns, ...log.valueColumns].map((column) => column.proposal),
   });
-  return { id: log.id, label: log.label, records, ...found, log, sampled: cells[0]?.length ?? 0, notes };
+  // Of many logs in one file, only one is in memory at a time.
+  const described: TimeLog = { ...log, bytes: new Uint8Array(0) };
+  return { id: log.id, label: log.label, records, ...found, log: described, sampled: cells[0]?.length ?? 0, notes };
 }
 
 function recordText(field: number, value: number): string {
@@ -106,7 +108,7 @@ async function readTaskData(archive: ZipArchive, mapping: LogMapping, options: R
   const { logs } = await openTaskData(archive);
   const log = await openTimeLog(archive, chooseLayer(logs, mapping.layer, archive.name));
   const plan = buildReadPlan(mapping, log.names);
-  const expectedLines = scanTimeLog(log.bytes, log.header, () => undefined).records;
+  const expectedLines = countRecords(log.bytes, log.header);
   const collector = new RecordCollector(planClock(plan), { expectedLines, place: "record" });
   const take = prepareTaking(log, collector, readClock(mapping, plan));
   const outcome = scanTimeLog(log.bytes, log.header, (record) => {

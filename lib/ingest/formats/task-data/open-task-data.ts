@@ -92,6 +92,6 @@ export async function unpackXml(archive: ZipArchive, entry: ZipEntry): Promise<U
   if (entry.unpackedBytes <= READ_LIMITS.xmlBytes) return unpackEntry(archive, entry);
   stopReading(
     "file-too-large",
-    `"${entry.name}" in "${archive.name}" is larger than 64 MB, which no description of tasks and devices is. Export less.`,
+    `"${entry.name}" in "${archive.name}" is larger than 16 MB, which no description of tasks and devices is. Export less.`,
   );
 }

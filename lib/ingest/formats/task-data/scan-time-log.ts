@@ -79,6 +79,17 @@ export function scanTimeLog(
   return outcome;
 }
 
+/** Whole records of a time log: only their lengths are looked at. */
+export function countRecords(bytes: Uint8Array, header: TimeLogHeader): number {
+  const headBytes = TIME_BYTES + header.parts.reduce((sum, part) => sum + POSITION_PARTS[part].bytes, 0) + 1;
+  let records = 0;
+  for (let at = 0; at + headBytes <= bytes.length; records++) {
+    at += headBytes + VALUE_BYTES * bytes[at + headBytes - 1]!;
+    if (at > bytes.length) break;
+  }
+  return records;
+}
+
 const NOTHING = {
   number: 0,
   clockMs: NaN,

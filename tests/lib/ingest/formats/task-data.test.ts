@@ -3,6 +3,8 @@ import { unzipSync } from "fflate";
 import { describe, expect, it } from "vitest";
 import { inspectLog, readLog } from "@/lib/ingest";
 import { bytesSource } from "@/lib/ingest/byte-source";
+import { readTimeLogHeader } from "@/lib/ingest/formats/task-data/read-time-log-header";
+import { countRecords, scanTimeLog } from "@/lib/ingest/formats/task-data/scan-time-log";
 import type { LogMapping } from "@/lib/ingest/mapping";
 import { proposeMapping } from "@/lib/ingest/propose-mapping";
 import type { MachineLog } from "@/lib/logs/machine-log";
@@ -70,6 +72,16 @@ describe("a time log made by hand", () => {
       const { log, notes } = await mustRead(source(small(bytesOf(RECORD + RECORD.slice(0, cut * 2)))), mapping);
       expect(log.records).toBe(1);
       expect(notes).toContainEqual(expect.objectContaining({ code: "cut-record", firstLine: 2 }));
+    }
+  });
+
+  it("counts whole records without reading them", () => {
+    const header = readTimeLogHeader(new TextEncoder().encode(HEADER), "TLG00001.XML");
+    const two = bytesOf(RECORD + RECORD);
+    for (let cut = 0; cut <= 62; cut++) {
+      const bytes = two.subarray(0, cut);
+      expect(countRecords(bytes, header)).toBe(Math.floor(cut / 31));
+      expect(scanTimeLog(bytes, header, () => undefined).records).toBe(Math.floor(cut / 31));
     }
   });
 
