@@ -20,7 +20,7 @@ export function ColumnsScreen({ logPath, logId }: ColumnsScreenProps) {
   const log = useLog(logId);
   const columns = useColumns(logId);
   const machines = useMachines();
-  const save = usePutMapping(logId, log.data?.machineId);
+  const save = usePutMapping(logId);
   const failed = [log, columns, machines].find((query) => query.isError);
   if (failed) {
     return (

@@ -2,17 +2,7 @@
 
 import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import { queryKeys } from "@/components/hooks/query-keys";
-import {
-  cancelLog,
-  changeLog,
-  deleteLog,
-  getColumns,
-  getLog,
-  getVerdict,
-  listLogs,
-  putMapping,
-  retryLog,
-} from "@/lib/api/client";
+import { cancelLog, deleteLog, getColumns, getLog, getVerdict, listLogs, putMapping, retryLog } from "@/lib/api/client";
 import type { LogMapping } from "@/lib/ingest/mapping";
 import { isWorking } from "@/components/upload/log-state";
 
@@ -58,14 +48,11 @@ export interface ConfirmedMapping {
   machineId: string | null;
 }
 
-/** Sets the machine first, so that the reading the mapping starts already knows it. */
-export function usePutMapping(logId: string, knownMachineId: string | null | undefined) {
+/** Meaning and machine in one step, so that the reading this starts knows both. */
+export function usePutMapping(logId: string) {
   const client = useQueryClient();
   return useMutation({
-    mutationFn: async ({ mapping, machineId }: ConfirmedMapping) => {
-      if (machineId !== knownMachineId) await changeLog(logId, { machineId });
-      await putMapping(logId, mapping);
-    },
+    mutationFn: ({ mapping, machineId }: ConfirmedMapping) => putMapping(logId, { ...mapping, machineId }),
     onSuccess: () => client.invalidateQueries({ queryKey: ["logs", logId] }),
   });
 }

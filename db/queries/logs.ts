@@ -30,6 +30,16 @@ export async function findLog(tx: Transaction, scope: Scope, logId: string): Pro
   return row ?? null;
 }
 
+/** As `findLog`, held until the transaction ends: of a person's change and a worker's beginning, one waits for the other. */
+export async function findLogForChange(tx: Transaction, scope: Scope, logId: string): Promise<LogRow | null> {
+  const [row] = await tx
+    .select()
+    .from(logs)
+    .where(and(isVisible(scope), eq(logs.id, logId)))
+    .for("update");
+  return row ?? null;
+}
+
 /** @throws AppError `not_found` for an absent, a foreign and a hidden log alike. */
 export async function getLogOrThrow(tx: Transaction, scope: Scope, logId: string): Promise<LogRow> {
   const row = await findLog(tx, scope, logId);

@@ -66,7 +66,7 @@ export const deleteLog = (logId: string) => requestNothing(`${ROOT}/logs/${logId
 export const cancelLog = (logId: string) => requestNothing(`${ROOT}/logs/${logId}/cancel`, { method: "POST" });
 export const retryLog = (logId: string) => requestNothing(`${ROOT}/logs/${logId}/retry`, { method: "POST" });
 export const getColumns = (logId: string) => requestJson(LogColumns, `${ROOT}/logs/${logId}/columns`);
-export const putMapping = (logId: string, body: LogMapping) =>
+export const putMapping = (logId: string, body: LogMapping & { machineId?: string | null }) =>
   requestNothing(`${ROOT}/logs/${logId}/mapping`, { method: "PUT", body });
 export const getVerdict = (logId: string) => requestJson(VerdictBody, `${ROOT}/logs/${logId}/verdict`);
 export const getCoverage = (logId: string) => requestJson(CoverageBody, `${ROOT}/logs/${logId}/coverage`);

@@ -69,6 +69,9 @@ export const LogPatch = z.object({
   machineId: Id.nullable().optional(),
 });
 
+/** The machine beside a mapping: null for none, left out to keep the one the log has. */
+export const MappingMachine = Id.nullable().optional();
+
 export const ColumnProposal = z.object({
   channel: z.string(),
   row: z.number().int().optional(),

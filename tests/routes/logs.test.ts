@@ -194,7 +194,7 @@ describe("a mapping", () => {
     expect((await world.as("owner", { path: `${path}/verdict` })).status).toBe(200);
   });
 
-  it("is refused with the column and the rule, and while the log is being read", async () => {
+  it("is refused with the column and the rule", async () => {
     const log = await world.uploadAndSettle({ bytes: fixtureBytes(WIDE), name: "rules.csv", query: "?again=1" });
     const mapping = confirmedMapping(await getColumns(log.id));
     const put = async (columns: Record<string, unknown>[]) => {
@@ -212,9 +212,6 @@ describe("a mapping", () => {
     const homeless = await put(mapping.columns.filter((column) => column.channel !== "longitude"));
     expect(homeless).toMatchObject({ status: 422, problem: { code: "missing-position" } });
     expect((await world.getLog(log.id)).status).toBe("needs-mapping");
-    expect((await put(mapping.columns)).status).toBe(202);
-    expect(await put(mapping.columns)).toMatchObject({ status: 409, problem: { code: "log_busy" } });
-    await world.settle(log.id);
   });
 });
 

@@ -1,7 +1,7 @@
 import { z } from "zod";
 import type { Operation, OperationReply } from "@/lib/openapi/operation";
 import { ListQuery } from "@/lib/schemas/listing";
-import { Log, LogAccepted, LogColumns, LogList, LogPatch } from "@/lib/schemas/logs";
+import { Log, LogAccepted, LogColumns, LogList, LogPatch, MappingMachine } from "@/lib/schemas/logs";
 import { RecipeList } from "@/lib/schemas/recipes";
 
 const tag = "Logs";
@@ -111,12 +111,15 @@ export const logOperations: Operation[] = [
     tag,
     permission: "logs.map",
     summary: "Say what the columns mean",
-    description: "Reads the log again; `save` keeps the meaning as a recipe for files with the same header.",
+    description:
+      "Reads the log again; `save` keeps the meaning as a recipe for files with the same header. `machineId` gives the log another machine in the same step. A log that waits for its turn is read with the new meaning; one being read is refused.",
     body: z.looseObject({
       columns: z.array(z.looseObject({ name: z.string(), channel: z.string(), unit: z.string().nullable() })),
       shape: z.enum(["wide", "long", "single"]),
+      machineId: MappingMachine,
     }),
     replies: [accepted],
+    errors: ["conflict"],
   },
   {
     method: "GET",

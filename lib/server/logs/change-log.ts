@@ -1,7 +1,13 @@
 import "server-only";
 import { withOrganisation } from "@/db/client";
 import { recordAudit } from "@/db/queries/audit";
-import { changeLog as changeLogRow, findMachineOfLog, getLogOrThrow, type LogRow } from "@/db/queries/logs";
+import {
+  changeLog as changeLogRow,
+  findLogForChange,
+  findMachineOfLog,
+  getLogOrThrow,
+  type LogRow,
+} from "@/db/queries/logs";
 import type { Transaction } from "@/db/client";
 import { AppError } from "@/lib/errors";
 import type { Log } from "@/lib/schemas/logs";
@@ -25,6 +31,18 @@ export function refuseBusy(log: LogRow): void {
   throw new AppError("conflict", "This log is being read. Wait for the end, or stop it first.", {
     detailCode: "log_busy",
   });
+}
+
+/** For a change that a log may also take while it merely waits: no reading has begun that would not know of it. */
+export function refuseBegun(log: LogRow): void {
+  if (log.status !== "queued") refuseBusy(log);
+}
+
+/** @throws AppError `not_found` */
+export async function getLogForChange(tx: Transaction, scope: Scope, logId: string): Promise<LogRow> {
+  const row = await findLogForChange(tx, scope, logId);
+  if (!row) throw new AppError("not_found", "There is no such log.");
+  return row;
 }
 
 /** @throws AppError `unprocessable` for a machine that is not there */

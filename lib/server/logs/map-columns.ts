@@ -1,4 +1,5 @@
 import "server-only";
+import { z } from "zod";
 import { withOrganisation } from "@/db/client";
 import { recordAudit } from "@/db/queries/audit";
 import { findLogResult } from "@/db/queries/log-results";
@@ -11,10 +12,10 @@ import { IngestFailure, type IngestError } from "@/lib/ingest/ingest-error";
 import type { Inspection } from "@/lib/ingest/log-format";
 import { chosenLayer, headerSignature, parseMapping, toRecipe, type LogMapping } from "@/lib/ingest/mapping";
 import { buildReadPlan } from "@/lib/ingest/records/read-plan";
-import type { Log, LogColumns } from "@/lib/schemas/logs";
+import { MappingMachine, type Log, type LogColumns } from "@/lib/schemas/logs";
 import type { Scope } from "@/lib/scope";
 import type { Container } from "@/lib/server/create-container";
-import { QUEUED, refuseBusy } from "@/lib/server/logs/change-log";
+import { demandMachine, getLogForChange, QUEUED, refuseBegun } from "@/lib/server/logs/change-log";
 import { describeLog } from "@/lib/server/logs/describe-log";
 import { noteReadLog, sendReadLog } from "@/lib/server/logs/queue-log";
 
@@ -71,26 +72,38 @@ function noColumns(reason: string | undefined): AppError {
   return new AppError("conflict", message, { detailCode: "columns_not_known" });
 }
 
-/** Takes the meaning of the columns and reads the file again with it, as a new version. */
+/** What may stand beside a mapping. @throws ZodError */
+function readMachineId(body: unknown): string | null | undefined {
+  return z.looseObject({ machineId: MappingMachine }).parse(body).machineId;
+}
+
+/**
+ * Takes the meaning of the columns, and with it the machine where one is named, and reads the file again as a new version.
+ * A log that waits for its first or next reading is read with the new meaning only.
+ */
 export async function putMapping(
   container: Container,
   scope: Scope,
   input: { logId: string; body: unknown },
 ): Promise<Log> {
   const { save, ...mapping } = readMapping(input.body);
+  const machineId = readMachineId(input.body);
   const { logId } = input;
   const log = await withOrganisation(scope, async (tx) => {
-    const before = await getLogOrThrow(tx, scope, logId);
-    refuseBusy(before);
+    const before = await getLogForChange(tx, scope, logId);
+    refuseBegun(before);
+    if (machineId && machineId !== before.machineId) await demandMachine(tx, scope, machineId);
     const found = (await findLogResult(tx, scope, { logId, version: 0, kind: "columns" })) as Inspection | null;
     if (!found) throw noColumns(before.error?.message);
     refuseMisfit(mapping, found);
     const signature = headerSignature({ ...found, ...chosenLayer(mapping, found) });
     const recipe = { id: newId("recipe"), name: save ?? "", headerSignature: signature, mapping: toRecipe(mapping) };
     const recipeId = save ? await saveRecipe(tx, scope, recipe) : null;
-    await changeLog(tx, scope, logId, { ...QUEUED, mapping, recipeId });
-    await noteReadLog(tx, scope, logId);
-    await recordAudit(tx, scope, { action: "log.map", subject: logId, detail: { recipe: save ?? null } });
+    const machine = machineId === undefined ? {} : { machineId };
+    await changeLog(tx, scope, logId, { ...QUEUED, mapping, recipeId, ...machine });
+    if (before.status !== "queued") await noteReadLog(tx, scope, logId);
+    const detail = { recipe: save ?? null, ...machine };
+    await recordAudit(tx, scope, { action: "log.map", subject: logId, detail });
     return describeLog(await getLogOrThrow(tx, scope, logId));
   });
   await sendReadLog(container, scope, logId);

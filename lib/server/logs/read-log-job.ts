@@ -1,6 +1,6 @@
 import { withOrganisation } from "@/db/client";
 import { endJobs, pauseJob, startJob } from "@/db/queries/jobs";
-import { changeLog, findLog, type LogRow } from "@/db/queries/logs";
+import { changeLog, findLogForChange, type LogRow } from "@/db/queries/logs";
 import { lockLog } from "@/db/queries/system/log-lock";
 import type { JobPayloads } from "@/lib/ports/job-queue";
 import { LogFailure, LogInterrupted } from "@/lib/server/logs/log-failure";
@@ -34,7 +34,7 @@ export async function readLogJob(payload: JobPayloads["read-log"], options: JobO
 async function beginWork({ organisationId, logId }: JobPayloads["read-log"]): Promise<LogRow | null> {
   const scope = workerScope(organisationId);
   return withOrganisation(scope, async (tx) => {
-    const log = await findLog(tx, scope, logId);
+    const log = await findLogForChange(tx, scope, logId);
     if (!log || !["queued", "reading", "building"].includes(log.status)) return null;
     const job = await startJob(tx, scope, logId);
     if (job && job.attempts > MAX_ATTEMPTS) {
