@@ -23,7 +23,7 @@ export function NoLogYet({ logs, logsHref }: { logs: readonly Log[]; logsHref: s
             ? `${waiting === 1 ? "One log waits" : `${waiting} logs wait`} for you to confirm what its columns mean.`
             : working > 0
               ? "This page opens by itself when the log is ready."
-              : "Add the file the machine wrote: CSV, GeoJSON or a zipped shapefile."}
+              : "Add the file the machine wrote: CSV, GeoJSON, a zipped shapefile or task data."}
         </p>
       </EmptyState>
     </div>

@@ -38,7 +38,7 @@ export function LogUpload({ fieldId, logsPath, exampleHref }: LogUploadProps) {
       <div className="space-y-2">
         <DropZone
           words="Choose a log file, or drop it anywhere on this page"
-          hint="CSV, GeoJSON points or a zipped point shapefile; .gz is fine"
+          hint="CSV, GeoJSON, a zipped shapefile or zipped ISO 11783-10 task data; .gz is fine"
           accept={LOG_FILE_KINDS}
           wholePage
           onFile={setFile}

@@ -28,7 +28,11 @@ export const logOperations: Operation[] = [
     description: "The same bytes in the same field: 409 naming the first log, unless `again=1`.",
     query: z.object({ again: z.enum(["0", "1"]).optional() }),
     form: {
-      file: { kind: "file", required: true, description: "CSV, also gzipped; GeoJSON points; zipped point shapefile" },
+      file: {
+        kind: "file",
+        required: true,
+        description: "CSV or GeoJSON, also gzipped; zipped shapefile; zipped ISO 11783-10 task data",
+      },
       machineId: { kind: "text", description: "The machine that made the log" },
       mapping: { kind: "json", description: "What the columns mean; see PUT /mapping" },
     },

@@ -54,7 +54,7 @@ async function refuseUnknownKind(name: string, head: Uint8Array): Promise<void> 
   if (unpacked === null || detectFormat(name, unpacked)) return;
   throw new AppError(
     "unsupported_file",
-    `"${name}" is no kind of log this program reads. Upload CSV (also packed as .gz), GeoJSON points or a zipped point shapefile.`,
+    `"${name}" is no kind of log this program reads. Upload CSV or GeoJSON (also packed as .gz), a zipped shapefile or zipped ISO 11783-10 task data.`,
   );
 }
 

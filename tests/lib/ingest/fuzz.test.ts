@@ -1,3 +1,4 @@
+import { readdirSync, readFileSync } from "node:fs";
 import { gzipSync } from "fflate";
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
@@ -114,6 +115,32 @@ describe("bytes of any kind", () => {
           },
         ),
         { numRuns: RUNS },
+      );
+    },
+    LONGEST_MS,
+  );
+});
+
+const FIXTURES = readdirSync("fixtures/logs", { recursive: true, encoding: "utf8" }).filter((path) =>
+  /input\.\w+$/.test(path),
+);
+
+describe("every fixture with bytes changed or cut off", () => {
+  it.each(FIXTURES)(
+    "%s ends in a log or in an error of its own rule",
+    async (path) => {
+      const whole = readFileSync(`fixtures/logs/${path}`);
+      // Large files a few times, small ones more often.
+      const rounds = Math.ceil(Math.min(RUNS / 10, 2_000_000 / (whole.length + 1_000)));
+      await fc.assert(
+        fc.asyncProperty(damage, async ({ flips, keep }) => {
+          const bytes = Uint8Array.from(whole.subarray(0, Math.ceil(whole.length * keep)));
+          for (const [at, value] of flips) if (bytes.length > 0) bytes[at % bytes.length] = value;
+          for (const outcome of await outcomesOf(path, bytes, 1 << 16)) {
+            if (!outcome.ok) expect(outcome.error.code, outcome.error.message).not.toBe("unreadable");
+          }
+        }),
+        { numRuns: rounds },
       );
     },
     LONGEST_MS,
