@@ -8,7 +8,19 @@ import { PLACING_CHANNELS } from "@/lib/logs/channel";
 import type { Log } from "@/lib/schemas/logs";
 
 /** Shown first, in this order, where the log has them. */
-const FIRST = ["margin", "resistance", "downforce", "depth", "contact"];
+const FIRST = [
+  "margin",
+  "resistance",
+  "downforce",
+  "depth",
+  "contact",
+  "yieldMass",
+  "yieldFlow",
+  "moisture",
+  "population",
+];
+/** Shown last: they say how the log was made, not what it measured. */
+const LAST = ["rowSpeed", "swathWidth", "distance", "interval"];
 /** Buttons before the rest goes into a menu. */
 const BUTTONS = 4;
 
@@ -18,7 +30,12 @@ export function channelsOf(log: Log): string[] {
   const measured = log.channels.map(({ id }) => id).filter((id) => !placing.includes(id));
   const perRow = log.channels.filter((channel) => channel.perRow && channel.id !== "rowSpeed").map(({ id }) => id);
   const plain = [...new Set([...measured, "rowSpeed"])];
-  const ordered = [...FIRST.filter((id) => plain.includes(id)), ...plain.filter((id) => !FIRST.includes(id))];
+  const ranked = [...FIRST, ...LAST];
+  const ordered = [
+    ...FIRST.filter((id) => plain.includes(id)),
+    ...plain.filter((id) => !ranked.includes(id)),
+    ...LAST.filter((id) => plain.includes(id)),
+  ];
   return [...ordered, ...ordered.filter((id) => perRow.includes(id)).map(deviationOf)];
 }
 

@@ -43,6 +43,7 @@ export function FieldBook({ fieldId, logsHref, basemap, role }: FieldBookProps) 
       key={`${log.id} ${log.version}`}
       field={field.data}
       log={log}
+      logsHref={logsHref}
       basemap={basemap}
       picker={
         <div className="flex min-w-0 items-center gap-2">
@@ -57,20 +58,26 @@ export function FieldBook({ fieldId, logsHref, basemap, role }: FieldBookProps) 
 interface OpenLogProps {
   field: Field;
   log: Log;
+  logsHref: string;
   basemap: BasemapConfig;
   picker: React.ReactNode;
 }
 
-function OpenLog({ field, log, basemap, picker }: OpenLogProps) {
+function OpenLog({ field, log, logsHref, basemap, picker }: OpenLogProps) {
   const search = useSearchParams();
   const [book] = useState(() => {
     const { log: addressLog, ...address } = readAddress(new URLSearchParams(search.toString()));
     // Pass, row and view in an address belong to the log it names, not to another one.
-    const start = addressLog === log.id ? address : { channel: address.channel };
+    const { edges = null, ...start } = addressLog === log.id ? address : { channel: address.channel };
     const channels = channelsOf(log);
     const channel = start.channel && channels.includes(start.channel) ? start.channel : (channels[0] ?? "rowSpeed");
     return {
-      store: createFieldBookStore({ ...start, channel }),
+      store: createFieldBookStore({
+        ...start,
+        channel,
+        // Edges are those of the channel in the address.
+        edges: edges && channel === start.channel ? { [channel]: edges } : {},
+      }),
       log,
       logVersion: { logId: log.id, version: log.version },
     };
@@ -78,7 +85,7 @@ function OpenLog({ field, log, basemap, picker }: OpenLogProps) {
   useAddress(book.store, log.id);
   return (
     <FieldBookProvider book={book}>
-      <RowsLayout field={field} basemap={basemap} picker={picker} />
+      <RowsLayout field={field} basemap={basemap} picker={picker} logsHref={logsHref} />
     </FieldBookProvider>
   );
 }

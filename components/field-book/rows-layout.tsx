@@ -25,15 +25,17 @@ export interface RowsLayoutProps {
   field: Field;
   basemap: BasemapConfig;
   picker: ReactNode;
+  /** Address of the field's list of logs. */
+  logsHref: string;
 }
 
 /** Fills the window under the header on a wide screen; flows down on a phone. */
 const WIDE_FRAME = "grid h-[calc(100dvh-3.5rem)] min-h-[38rem] grid-cols-[minmax(0,1fr)_24rem] md:-mb-10";
 
 /** Map above, unrolled pass beneath, verdict and line-up at the right; on a phone the verdict first and the pass upright at the end. */
-export function RowsLayout({ field, basemap, picker }: RowsLayoutProps) {
+export function RowsLayout({ field, basemap, picker, logsHref }: RowsLayoutProps) {
   const wide = useWideScreen();
-  const parts = useParts({ field, basemap, wide: wide === true });
+  const parts = useParts({ field, basemap, wide: wide === true, logsHref });
   if (wide === null) return <RowsSkeleton />;
   if (!wide) return <NarrowRows parts={parts} picker={picker} />;
   return (
@@ -85,15 +87,19 @@ function NarrowRows({ parts, picker }: { parts: Parts; picker: ReactNode }) {
 
 type Parts = ReturnType<typeof useParts>;
 
+interface PartsOptions extends Pick<RowsLayoutProps, "field" | "basemap" | "logsHref"> {
+  wide: boolean;
+}
+
 /** Everything the page shows, fed with the open log; where it goes depends on the screen. */
-function useParts({ field, basemap, wide }: { field: Field; basemap: BasemapConfig; wide: boolean }) {
+function useParts({ field, basemap, wide, logsHref }: PartsOptions) {
   const { log, logVersion } = useBook();
   const channel = useBookState((state) => state.channel);
   const [asTable, setAsTable] = useState(false);
   const { data: passes = [] } = usePasses(logVersion);
   const { data: overview } = useOverview(logVersion, channel);
   const { data: statistics } = useRowStatistics(logVersion, channel);
-  const verdict = useVerdict(log.id, log.version);
+  const verdict = useVerdict(log.id, log.version, log.kind !== "harvest");
   const track = useChosenTrack(passes);
   const classes = useClasses(channel, overview);
   const current = statistics?.channel === channel ? statistics : undefined;
@@ -111,7 +117,15 @@ function useParts({ field, basemap, wide }: { field: Field; basemap: BasemapConf
       />
     ),
     legend: <Legend classes={classes} unit={overview?.unit ?? ""} />,
-    verdict: <VerdictPanel verdict={verdict.data} rows={log.counts.rows} trouble={verdict.isError} />,
+    verdict: (
+      <VerdictPanel
+        verdict={verdict.data}
+        rows={log.counts.rows}
+        trouble={verdict.isError}
+        logsHref={logsHref}
+        openFirst={wide}
+      />
+    ),
     lineUp: <LineUp statistics={statistics} classes={classes} onTable={() => setAsTable(true)} />,
     table: asTable && statistics ? <LineUpTable statistics={statistics} onClose={() => setAsTable(false)} /> : null,
     passHeading: <PassHeading passes={passes} />,

@@ -12,8 +12,8 @@ export function useAddress(store: FieldBookStore, logId: string): void {
   useEffect(() => {
     let waiting: ReturnType<typeof setTimeout> | undefined;
     const write = () => {
-      const { channel, pass, row, view } = store.getState();
-      const search = writeAddress({ log: logId, channel, pass, row, view });
+      const { channel, pass, row, view, edges } = store.getState();
+      const search = writeAddress({ log: logId, channel, pass, row, view, edges: edges[channel] ?? null });
       window.history.replaceState(window.history.state, "", `${window.location.pathname}?${search.toString()}`);
     };
     const stop = store.subscribe((now, before) => {
@@ -21,6 +21,7 @@ export function useAddress(store: FieldBookStore, logId: string): void {
         now.channel === before.channel &&
         now.pass === before.pass &&
         now.row === before.row &&
+        now.edges === before.edges &&
         now.view === before.view;
       if (same) return;
       clearTimeout(waiting);

@@ -1,7 +1,10 @@
 "use client";
 
 import { ChevronRight } from "lucide-react";
-import { useBook, useBookState } from "@/components/field-book/field-book-context";
+import Link from "next/link";
+import { useBook } from "@/components/field-book/field-book-context";
+import { useSeeFinding } from "@/components/field-book/use-see-finding";
+import { verdictKnown } from "@/components/field-book/verdict-known";
 import { rankFindings, sentenceOf } from "@/components/sharing/shared-finding";
 import { StateMark, type MarkState } from "@/components/ui/state-mark";
 import { useUnits } from "@/components/units/use-units";
@@ -18,10 +21,16 @@ export interface VerdictPanelProps {
   verdict: VerdictBody | undefined;
   rows: number;
   trouble: boolean;
+  /** Where the machine that made a log is chosen. */
+  logsHref: string;
+  /** There is room to show what to check of the first finding. */
+  openFirst: boolean;
 }
 
 /** What the log says, in plain words: one large number, then the findings, the pressing ones first. */
-export function VerdictPanel({ verdict, rows, trouble }: VerdictPanelProps) {
+export function VerdictPanel({ verdict, rows, trouble, logsHref, openFirst }: VerdictPanelProps) {
+  const { log } = useBook();
+  if (log.kind === "harvest") return <HarvestWords />;
   if (!verdict) return <VerdictWaiting trouble={trouble} />;
   const findings = rankFindings(verdict);
   const worst = findings[0]?.severity ?? "ok";
@@ -34,13 +43,28 @@ export function VerdictPanel({ verdict, rows, trouble }: VerdictPanelProps) {
           {SEVERITY[worst].word}
         </span>
       </h2>
-      <Headline verdict={verdict} rows={rows} />
+      <Headline verdict={verdict} rows={rows} logsHref={logsHref} />
       {findings.length === 0 ? <p className="text-ink-soft">Nothing in this log needs your attention.</p> : null}
       <ul className="mt-2 divide-y divide-rule">
-        {findings.map((finding) => (
-          <FindingItem key={finding.id} finding={finding} />
+        {findings.map((finding, index) => (
+          <FindingItem key={finding.id} finding={finding} open={openFirst && index === 0} />
         ))}
       </ul>
+    </section>
+  );
+}
+
+/** A combine presses no rows into the ground: nothing of the verdict would mean anything. */
+function HarvestWords() {
+  return (
+    <section aria-labelledby="verdict-title" className="space-y-2 px-4 py-3" data-testid="harvest">
+      <h2 id="verdict-title" className="text-section">
+        Harvest log
+      </h2>
+      <p className="text-ink-soft">
+        This log was made by a combine, so there is no verdict on seeding in it. Map, legend and passes show what it
+        measured.
+      </p>
     </section>
   );
 }
@@ -62,10 +86,19 @@ function VerdictWaiting({ trouble }: { trouble: boolean }) {
   );
 }
 
+interface HeadlineProps {
+  verdict: VerdictBody;
+  rows: number;
+  logsHref: string;
+}
+
 /** The one number that matters, in words. */
-function Headline({ verdict, rows }: { verdict: VerdictBody; rows: number }) {
+function Headline({ verdict, rows, logsHref }: HeadlineProps) {
+  const { log } = useBook();
+  const known = verdictKnown(verdict, log);
   const under = verdict.rowsUnderTarget.length;
-  const atLimit = verdict.rowsAtLimit.length;
+  const rest = `${limitWords(verdict, known.atLimit)}${WEIGHT_WORDS[verdict.weight.state]}`;
+  if (!known.underTarget) return <NotKnown rest={rest} machineHref={log.machineId === null ? logsHref : null} />;
   return (
     <div className="mt-1">
       <p className="flex items-baseline gap-2">
@@ -77,11 +110,35 @@ function Headline({ verdict, rows }: { verdict: VerdictBody; rows: number }) {
       </p>
       <p className="text-table text-ink-soft">
         {under > 0 ? `${rowWords(verdict.rowsUnderTarget)} under target. ` : ""}
-        {atLimit > 0 ? `${rowWords(verdict.rowsAtLimit)} at the force limit. ` : "No row at its force limit. "}
-        {WEIGHT_WORDS[verdict.weight.state]}
+        {rest}
       </p>
     </div>
   );
+}
+
+/** In place of a number that nobody can know, and the way to knowing it. */
+function NotKnown({ rest, machineHref }: { rest: string; machineHref: string | null }) {
+  return (
+    <div className="mt-1">
+      <p className="flex flex-wrap items-baseline gap-x-2">
+        <span className="text-section font-semibold">Not known</span> which rows ran under target
+      </p>
+      {machineHref === null ? null : (
+        <p>
+          Nobody has said which machine made this log.{" "}
+          <Link href={machineHref} className="inline-flex min-h-11 items-center text-slate underline md:min-h-6">
+            Choose the machine
+          </Link>
+        </p>
+      )}
+      <p className="text-table text-ink-soft">{rest}</p>
+    </div>
+  );
+}
+
+function limitWords({ rowsAtLimit }: VerdictBody, known: boolean): string {
+  if (!known) return "Rows at their force limit: not known. ";
+  return rowsAtLimit.length > 0 ? `${rowWords(rowsAtLimit)} at the force limit. ` : "No row at its force limit. ";
 }
 
 const WEIGHT_WORDS: Record<VerdictBody["weight"]["state"], string> = {
@@ -105,10 +162,10 @@ export function rowWords(rows: readonly number[]): string {
   return `${rows.length === 1 ? "Row" : "Rows"} ${list}`;
 }
 
-/** What to check, and what to mind while doing it: folded, so that all findings can be seen at once. */
-function CheckWords({ finding }: { finding: Finding }) {
+/** What to check, and what to mind while doing it: folded but for the first, so that all findings can be seen at once. */
+function CheckWords({ finding, open }: { finding: Finding; open: boolean }) {
   return (
-    <details className="text-table text-ink-soft open:basis-full">
+    <details open={open} className="text-table text-ink-soft open:basis-full">
       <summary className="flex min-h-11 items-center gap-1 text-slate md:min-h-6">
         <ChevronRight size={14} aria-hidden className="[details[open]_&]:rotate-90" />
         What to check{finding.caution ? ", and a caution" : ""}
@@ -123,19 +180,12 @@ function CheckWords({ finding }: { finding: Finding }) {
   );
 }
 
-function FindingItem({ finding }: { finding: Finding }) {
-  const { store } = useBook();
-  const selected = useBookState((state) => state.row);
+function FindingItem({ finding, open }: { finding: Finding; open: boolean }) {
+  const seeFinding = useSeeFinding();
   const { system } = useUnits();
   const { mark, word } = SEVERITY[finding.severity];
   const row = finding.row ?? null;
   const bounds = finding.place ? boundsOfGeometry(finding.place) : null;
-  const seeIt = () => {
-    const state = store.getState();
-    if (row !== null && row !== selected) state.chooseRow(row);
-    state.showPlace(finding.place);
-    if (bounds) state.askToFrame(bounds);
-  };
   return (
     <li className="flex gap-2 py-2" data-severity={finding.severity}>
       <StateMark state={mark} className="mt-1" />
@@ -145,9 +195,13 @@ function FindingItem({ finding }: { finding: Finding }) {
           {sentenceOf(finding, system)}
         </p>
         <div className="flex flex-wrap items-start justify-between gap-x-4">
-          {finding.check || finding.caution ? <CheckWords finding={finding} /> : <span />}
+          {finding.check || finding.caution ? <CheckWords finding={finding} open={open} /> : <span />}
           {bounds || row !== null ? (
-            <button type="button" onClick={seeIt} className="min-h-11 text-table text-slate underline md:min-h-6">
+            <button
+              type="button"
+              onClick={() => seeFinding(finding)}
+              className="min-h-11 text-table text-slate underline md:min-h-6"
+            >
               See it{row !== null ? `: row ${row}` : " on the map"}
             </button>
           ) : null}

@@ -38,6 +38,13 @@ const ABOVE: LayerSpecification[] = [
   outline("stretch", "stretch-line", { colour: MAP_COLOURS.slate, width: 3 }),
   outline("row", "row-halo", { colour: MAP_COLOURS.sheet, width: 4 }),
   outline("row", "row-line", { colour: MAP_COLOURS.slate, width: 2 }),
+  {
+    id: "place-fill",
+    type: "fill",
+    source: "places",
+    filter: ["==", ["geometry-type"], "Polygon"],
+    paint: { "fill-color": MAP_COLOURS.clay, "fill-opacity": 0.18 },
+  },
   outline("places", "place-halo", { colour: MAP_COLOURS.sheet, width: 5 }),
   outline("places", "place-line", { colour: MAP_COLOURS.clay, width: 2.5 }),
   {

@@ -4,8 +4,8 @@ import { useMemo } from "react";
 import type { MultiPolygon, Polygon, Position } from "geojson";
 import { BoundarySketch } from "@/components/fields/boundary-sketch";
 import { rankFindings } from "@/components/sharing/shared-finding";
-import { FindingPlace } from "@/lib/findings/finding";
 import { ShareMap } from "@/components/map/share-map";
+import { linesOfPlace } from "@/lib/map-state/place-lines";
 import { Boundary } from "@/lib/schemas/geometry";
 import type { SharedView } from "@/lib/schemas/shared";
 
@@ -19,11 +19,7 @@ export function sharedBoundary(view: SharedView): Polygon | MultiPolygon | null 
 export function sharedPlaces(view: SharedView): Position[][] {
   if (!view.verdict) return [];
   const speaking = rankFindings(view.verdict).filter((finding) => finding.severity !== "ok" && finding.place);
-  return speaking.slice(0, 1).flatMap((finding) => {
-    const place = FindingPlace.safeParse(finding.place);
-    if (!place.success) return [];
-    return place.data.type === "LineString" ? [place.data.coordinates] : place.data.coordinates;
-  });
+  return linesOfPlace(speaking[0]?.place);
 }
 
 /** Shared layers that can be drawn, the one that tells a landowner most first. */

@@ -1,8 +1,13 @@
+import { areClassEdges } from "@/lib/legend/class-edges";
 import { isChannelId } from "@/lib/logs/channel";
 import type { FieldBookState, MapView } from "@/lib/map-state/field-book-store";
 
 /** The part of the state that an address carries, so that a link shows the same thing. */
-export type AddressState = Pick<FieldBookState, "channel" | "pass" | "row" | "view"> & { log: string | null };
+export type AddressState = Pick<FieldBookState, "channel" | "pass" | "row" | "view"> & {
+  log: string | null;
+  /** The person's own class edges of the channel, SI; null for the channel's default. */
+  edges: number[] | null;
+};
 
 function readPositiveInteger(text: string | null): number | null {
   return text !== null && /^[1-9]\d{0,8}$/.test(text) ? Number(text) : null;
@@ -17,7 +22,17 @@ function readView(text: string | null): MapView | null {
   return { longitude, latitude, zoom };
 }
 
-/** Reads `log, channel, pass, row, view`; whatever does not make sense is left out. */
+/** More classes than this no legend has room for. */
+const MOST_EDGES = 24;
+
+/** Reads rising numbers apart by commas. */
+function readEdges(text: string | null): number[] | null {
+  const parts = (text ?? "").split(",");
+  const edges = parts.map((part) => (part.trim() === "" ? NaN : Number(part)));
+  return edges.length <= MOST_EDGES && areClassEdges(edges) ? edges : null;
+}
+
+/** Reads `log, channel, pass, row, view, edges`; whatever does not make sense is left out. */
 export function readAddress(search: URLSearchParams): Partial<AddressState> {
   const channel = search.get("channel");
   const state: Partial<AddressState> = {
@@ -25,6 +40,7 @@ export function readAddress(search: URLSearchParams): Partial<AddressState> {
     pass: readPositiveInteger(search.get("pass")),
     row: readPositiveInteger(search.get("row")),
     view: readView(search.get("view")),
+    edges: readEdges(search.get("edges")),
   };
   if (channel !== null && isChannelId(channel)) state.channel = channel;
   return state;
@@ -41,5 +57,6 @@ export function writeAddress(state: AddressState): URLSearchParams {
     const { longitude, latitude, zoom } = state.view;
     search.set("view", `${longitude.toFixed(6)},${latitude.toFixed(6)},${zoom.toFixed(2)}`);
   }
+  if (state.edges) search.set("edges", state.edges.map((edge) => String(Number(edge.toPrecision(9)))).join(","));
   return search;
 }

@@ -75,11 +75,16 @@ export const STATISTICS: RowStatisticsBody = {
 /** Renders inside an open field's book and gives its store back. */
 export function renderInBook(
   children: ReactNode,
-  { state, system = "metric" }: { state?: Partial<FieldBookState>; system?: UnitSystemName } = {},
+  {
+    state,
+    system = "metric",
+    log: part = {},
+  }: { state?: Partial<FieldBookState>; system?: UnitSystemName; log?: Partial<Log> } = {},
 ) {
   const store = createFieldBookStore(state);
   const client = new QueryClient({ defaultOptions: { queries: { retry: false } } });
-  const book = { store, log: LOG, logVersion: { logId: LOG.id, version: LOG.version } };
+  const log = { ...LOG, ...part };
+  const book = { store, log, logVersion: { logId: LOG.id, version: LOG.version } };
   const view = render(
     <QueryClientProvider client={client}>
       <UnitsProvider start={system} keep={false}>

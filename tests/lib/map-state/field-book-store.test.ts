@@ -67,12 +67,14 @@ describe("the address", () => {
       pass: 12,
       row: 17,
       view: { longitude: -98.612, latitude: 38.417, zoom: 17.25 },
+      // 40 and 110 lbf below and above 0 (NIST SP 811, pound-force).
+      edges: [-177.928865, 0, 489.304378],
     };
     expect(readAddress(writeAddress(state))).toEqual(state);
   });
 
   it("leaves out what makes no sense", () => {
-    const read = readAddress(new URLSearchParams("channel=../x&pass=-3&row=0&view=1,2"));
-    expect(read).toEqual({ log: null, pass: null, row: null, view: null });
+    const read = readAddress(new URLSearchParams("channel=../x&pass=-3&row=0&view=1,2&edges=5,4"));
+    expect(read).toEqual({ log: null, pass: null, row: null, view: null, edges: null });
   });
 });
