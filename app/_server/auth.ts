@@ -3,6 +3,7 @@ import type { AuthOptions } from "next-auth";
 import CredentialsProvider from "next-auth/providers/credentials";
 import { container } from "@/app/_server/container";
 import { isSecure, SESSION_SECONDS } from "@/app/_server/session-cookie";
+import { returnAddress } from "@/lib/access/return-address";
 import { checkSignIn } from "@/lib/server/access/check-sign-in";
 
 /** next-auth for credentials. The session carries only who it is; membership and role are looked up at every request. */
@@ -24,6 +25,7 @@ export function authOptions(): AuthOptions {
     ],
     callbacks: {
       jwt: ({ token, user }) => (user ? { sub: user.id, stamp: user.stamp } : token),
+      redirect: ({ url, baseUrl }) => returnAddress(url, baseUrl),
       session: ({ session, token }) => ({ expires: session.expires, userId: token.sub ?? "" }),
     },
     logger: {

@@ -40,21 +40,20 @@ export async function* watchLog(
   }
 }
 
-/** The events as a body; a log that vanishes meanwhile ends it. */
+/** The events as a body; a log that vanishes meanwhile ends it. A reader may leave while the next event is awaited. */
 export function eventBody(events: AsyncGenerator<string>): ReadableStream<Uint8Array> {
   const encoder = new TextEncoder();
+  let hasLeft = false;
   return new ReadableStream({
     async pull(controller) {
-      try {
-        const { value, done } = await events.next();
-        if (done) controller.close();
-        else controller.enqueue(encoder.encode(value));
-      } catch {
-        controller.close();
-      }
+      const next = await events.next().catch(() => ({ done: true, value: undefined }));
+      if (hasLeft) return;
+      if (next.done || next.value === undefined) controller.close();
+      else controller.enqueue(encoder.encode(next.value));
     },
-    async cancel() {
-      await events.return(undefined);
+    cancel() {
+      hasLeft = true;
+      void events.return(undefined);
     },
   });
 }
