@@ -74,7 +74,12 @@ export function buildLog(
     passOf: passNumbers(works, passes),
     passes,
   };
-  const notes = [...ground.motion.notes, ...machineNotes(machine, guessed?.note), ...flagNotes(log, ground.flags)];
+  const notes = [
+    ...passNotes(log, passes),
+    ...ground.motion.notes,
+    ...machineNotes(machine, guessed?.note),
+    ...flagNotes(log, ground.flags),
+  ];
   options.onProgress?.(1);
   return succeed({ placed, notes });
 }
@@ -103,7 +108,8 @@ function trackOnGround(log: MachineLog, antenna: AntennaPositions, machine: Seed
   const line = placeRows({ ...antenna, headingDeg: motion.headingDeg, breaks: motion.breaks }, machine);
   const works = working.map((value, i) => (value === 1 && Number.isFinite(line.originEastM[i]!) ? 1 : 0));
   const { headingDeg } = motion;
-  const cut = segmentPasses({ ...antenna, headingDeg, timeMs: log.timeMs, works, loggedPass: log.loggedPass });
+  const { timeMs, speedMps, loggedPass } = log;
+  const cut = segmentPasses({ ...antenna, headingDeg, timeMs, speedMps, works, loggedPass });
   return { motion, flags, line, works, ...cut };
 }
 
@@ -125,6 +131,19 @@ function machineNotes(machine: Seeder | null, guess: LogNote | undefined): LogNo
   const message =
     "The distance from antenna to hitch pin is not given; it is taken from the other two distances of the machine.";
   return [{ code: "hitch-distance-assumed", message, count: 1 }];
+}
+
+/** More single-record passes than this share are no way to drive: times, positions or pass numbers must be wrong. */
+const MANY_LONE_RECORDS = 0.2;
+
+function passNotes(log: MachineLog, passes: Pass[]): LogNote[] {
+  const lone = passes.filter((pass) => pass.records === 1);
+  if (lone.length <= MANY_LONE_RECORDS * passes.length) return [];
+  const message =
+    `${lone.length} of ${passes.length} passes are a single record, so the log fell to pieces and its distances and shares ` +
+    "are not to be trusted. Check its times, positions and pass numbers.";
+  const firstLine = log.sourceLine[lone[0]!.first];
+  return [{ code: "passes-of-one-record", message, count: lone.length, firstLine }];
 }
 
 function addFlags(flags: Uint32Array, from: { turning: Uint8Array; line: RowLine; passes: Pass[] }): void {

@@ -2,6 +2,7 @@ import { circularMean, turnDegrees } from "@/lib/geo/circular-mean";
 import { HOLD_HEADING_BELOW_MPS, headingFromTrack, holdLast } from "@/lib/geo/heading-from-track";
 import { medianStepSeconds } from "@/lib/cleaning/position-steps";
 import type { LogNote, MachineLog } from "@/lib/logs/machine-log";
+import { drivableM, longestStepS } from "@/lib/passes/drivable-distance";
 import { median } from "@/lib/statistics/median";
 
 export interface Motion {
@@ -49,10 +50,13 @@ function trackBreaks(log: MachineLog, { eastM, northM }: Positions): Uint8Array 
   const breaks = new Uint8Array(log.records);
   const steps = stepLengths({ eastM, northM });
   const limitM = Math.max(3, 3 * (median(steps.filter((step) => step > 0)) || 0));
+  const maxS = longestStepS(log.timeMs);
+  const track = { eastM, northM, timeMs: log.timeMs, speedMps: log.speedMps };
   let last = -1;
   for (let i = 0; i < log.records; i++) {
     if (!Number.isFinite(eastM[i]!)) continue;
-    const far = last >= 0 && Math.hypot(eastM[i]! - eastM[last]!, northM[i]! - northM[last]!) > limitM * (i - last);
+    const metres = Math.hypot(eastM[i]! - eastM[last]!, northM[i]! - northM[last]!);
+    const far = metres > limitM * (i - last) && metres > drivableM(track, { from: last, to: i, maxS });
     const late = last >= 0 && log.timeMs[i]! - log.timeMs[last]! > TRACK_GAP_S * 1000;
     if (last < 0 || far || late) breaks[i] = 1;
     last = i;

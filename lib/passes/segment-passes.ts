@@ -1,5 +1,5 @@
 import { axialDifferenceDeg, turnDegrees } from "@/lib/geo/circular-mean";
-import { medianStepSeconds } from "@/lib/cleaning/position-steps";
+import { drivableM, longestStepS } from "@/lib/passes/drivable-distance";
 import { median } from "@/lib/statistics/median";
 
 /** One entry a record. */
@@ -8,6 +8,8 @@ export interface PassInput {
   northM: ArrayLike<number>;
   headingDeg: ArrayLike<number>;
   timeMs: ArrayLike<number>;
+  /** As logged; NaN or null where the log has none. */
+  speedMps: ArrayLike<number> | null;
   /** 1 where the record works and has a usable position. */
   works: ArrayLike<number>;
   /** Pass numbers as logged: a change starts a new pass. */
@@ -31,9 +33,7 @@ export const PASS_RULES = {
   maxOffS: 2,
   /** Used for a lift when the log has no times. */
   maxOffM: 5,
-  /** A gap longer than this many median steps, and than `maxOffS`, ends a pass. */
-  maxTimeSteps: 3,
-  /** A jump longer than this and than `maxDistanceSteps` median steps ends a pass. */
+  /** A jump longer than this, than `maxDistanceSteps` median steps and than the machine can have driven ends a pass. */
   maxDistanceM: 3,
   maxDistanceSteps: 3,
   sameLineDeg: 20,
@@ -47,8 +47,8 @@ interface Limits {
 }
 
 /**
- * Splits a track into passes: a lift over 2 s, a time gap over three median steps (and 2 s), a jump over 3 m and three
- * median steps, a change of the logged pass number, or a turn of more than 45 degrees within 15 m. A drop-out under 2 s on
+ * Splits a track into passes: a lift over 2 s, a time gap over three median steps (and 2 s), a jump over 3 m, three
+ * median steps and (where times are known) 1.5 v dt + 1 m, a change of the logged pass number, or a turn of more than 45 degrees within 15 m. A drop-out under 2 s on
  * the same line is bridged. Turns driven with the machine down are cut where half of each 180 degrees is done.
  */
 export function segmentPasses(input: PassInput): PassRanges {
@@ -71,7 +71,7 @@ function measureLimits(input: PassInput): Limits {
   }
   const usualM = steps.length > 0 ? median(steps) : 0;
   return {
-    gapS: Math.max(PASS_RULES.maxOffS, PASS_RULES.maxTimeSteps * (medianStepSeconds(input.timeMs) || 0)),
+    gapS: longestStepS(input.timeMs),
     gapM: Math.max(PASS_RULES.maxDistanceM, PASS_RULES.maxDistanceSteps * usualM),
   };
 }
@@ -109,12 +109,13 @@ function continues(input: PassInput, limits: Limits, { from, to, seconds }: Step
   if (input.loggedPass && input.loggedPass[from] !== input.loggedPass[to]) return false;
   const metres = stepM(input, from, to);
   const offRecords = to - from - 1;
-  if (offRecords === 0) return !(seconds > limits.gapS) && metres <= limits.gapM;
+  const driven = () => metres <= drivableM(input, { from, to, maxS: limits.gapS });
+  if (offRecords === 0) return !(seconds > limits.gapS) && (metres <= limits.gapM || driven());
   const sameLine = axialDifferenceDeg(input.headingDeg[from]!, input.headingDeg[to]!) <= PASS_RULES.sameLineDeg;
   const offSeconds = seconds * (offRecords / (offRecords + 1));
   const short = !(seconds >= 0) ? metres <= PASS_RULES.maxOffM : offSeconds < PASS_RULES.maxOffS;
   const reachM = Math.max(limits.gapM, (limits.gapM / PASS_RULES.maxDistanceSteps) * (offRecords + 2));
-  return short && sameLine && metres <= reachM;
+  return short && sameLine && (metres <= reachM || driven());
 }
 
 /** Marks the turning records of a run and cuts it in the middle of each half turn. */
