@@ -93,7 +93,10 @@ function LayerForm({
       }}
     >
       {found.recipe ? (
-        <Notice state="fine">The recipe “{found.recipe.name}” fits this file; its meanings are shown below.</Notice>
+        <Notice state="fine">
+          Read with the recipe “{found.recipe.name}”. Its meanings are shown below: change what is wrong, and read the
+          log again.
+        </Notice>
       ) : null}
       {found.notes.map((note) => (
         <Notice key={`${note.code} ${note.message}`} state="look">

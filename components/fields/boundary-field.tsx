@@ -22,7 +22,8 @@ interface Chosen {
 const NOTHING: Chosen = { change: { kind: "none" }, read: null, fileName: null };
 
 export interface BoundaryFieldProps {
-  onChange: (change: BoundaryChange) => void;
+  /** `isWrong`: something was given that is no boundary. */
+  onChange: (change: BoundaryChange, isWrong: boolean) => void;
   error?: string;
 }
 
@@ -35,7 +36,7 @@ export function BoundaryField({ onChange, error }: BoundaryFieldProps) {
   const choose = (next: Chosen, trouble: string | null) => {
     setChosen(next);
     setProblem(trouble);
-    onChange(next.change);
+    onChange(next.change, trouble !== null);
   };
   const takeText = (text: string, fileName: string | null) => {
     if (text.trim() === "") return choose(NOTHING, null);

@@ -37,12 +37,16 @@ export interface FieldFormProps {
 /** Name, farm, landowner and boundary of a field, new or known. */
 export function FieldForm({ start, saveWords, pending, failure, onSave, children }: FieldFormProps) {
   const [boundary, setBoundary] = useState<BoundaryChange>({ kind: "none" });
+  const [isBoundaryWrong, setBoundaryWrong] = useState(false);
+  // Words about an answer that has been given anew since are gone.
+  const [settled, setSettled] = useState<unknown>(null);
+  const standing = failure === settled ? null : failure;
   const form = useForm<FormValues>({
     resolver: zodResolver(FormShape),
     defaultValues: { name: start.name, farm: start.farm ?? "", landowner: start.landowner ?? "" },
   });
   const { errors } = form.formState;
-  const refused = failure instanceof ApiProblem ? failure : null;
+  const refused = standing instanceof ApiProblem ? standing : null;
   const submit = form.handleSubmit((values) =>
     onSave({ name: values.name, farm: values.farm || null, landowner: values.landowner || null }, boundary),
   );
@@ -67,14 +71,21 @@ export function FieldForm({ start, saveWords, pending, failure, onSave, children
           {...form.register("landowner")}
         />
       </div>
-      <BoundaryField onChange={setBoundary} error={refused?.messageFor("boundary")} />
-      {failure ? (
+      <BoundaryField
+        onChange={(change, isWrong) => {
+          setBoundary(change);
+          setBoundaryWrong(isWrong);
+          setSettled(failure);
+        }}
+        error={refused?.messageFor("boundary")}
+      />
+      {standing ? (
         <Notice state="act" urgent title="Not saved">
-          {describeFailure(failure)}
+          {describeFailure(standing)}
         </Notice>
       ) : null}
       <div className="flex flex-wrap gap-2">
-        <Button type="submit" kind="primary" disabled={pending}>
+        <Button type="submit" kind="primary" disabled={pending || isBoundaryWrong}>
           {pending ? "Saving…" : saveWords}
         </Button>
         {children}

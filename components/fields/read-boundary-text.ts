@@ -1,4 +1,5 @@
 import type { MultiPolygon, Polygon } from "geojson";
+import { findBoundaryFault } from "@/lib/geo/find-boundary-fault";
 import { geodesicAreaM2 } from "@/lib/geo/geodesic-area";
 import { fail, succeed, type Result } from "@/lib/result";
 import { Boundary } from "@/lib/schemas/geometry";
@@ -47,5 +48,7 @@ export function readBoundaryText(text: string): Result<ReadBoundary, string> {
     parts.push(parsed.data);
   }
   const geometry = joinPolygons(parts);
+  const fault = findBoundaryFault(geometry);
+  if (fault) return fail(`The boundary’s ${fault.place} ${fault.message}.`);
   return succeed({ geometry, areaM2: geodesicAreaM2(geometry) });
 }

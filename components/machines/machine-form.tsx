@@ -7,13 +7,15 @@ import { FormProvider, useForm, useWatch, type Resolver } from "react-hook-form"
 import { useSaveMachine } from "@/components/hooks/use-machines";
 import { CombineFields } from "@/components/machines/combine-fields";
 import { machineParseOptions } from "@/components/machines/machine-words";
+import { sensibleMachine } from "@/components/machines/machine-sense";
 import { SeederFields } from "@/components/machines/seeder-fields";
 import { ToolbarDrawing, type DraftMachine } from "@/components/machines/toolbar-drawing";
 import { Button, buttonClass } from "@/components/ui/button";
 import { TextField } from "@/components/ui/form-field";
 import { Notice } from "@/components/ui/notice";
+import { useUnits } from "@/components/units/use-units";
 import { describeFailure } from "@/lib/api/api-problem";
-import { MachineInput, type Machine } from "@/lib/machines/machine";
+import type { Machine } from "@/lib/machines/machine";
 
 export interface MachineFormProps {
   slug: string;
@@ -26,9 +28,14 @@ export interface MachineFormProps {
 export function MachineForm({ slug, machineId, start }: MachineFormProps) {
   const router = useRouter();
   const save = useSaveMachine(machineId);
+  const { system } = useUnits();
   const form = useForm<DraftMachine, unknown, Machine>({
     // The draft may be half empty; the resolver's outcome is a whole machine.
-    resolver: zodResolver(MachineInput, machineParseOptions) as unknown as Resolver<DraftMachine, unknown, Machine>,
+    resolver: zodResolver(sensibleMachine(system), machineParseOptions) as unknown as Resolver<
+      DraftMachine,
+      unknown,
+      Machine
+    >,
     defaultValues: start,
   });
   const draft = useWatch({ control: form.control });

@@ -14,6 +14,7 @@ import { PageHeading } from "@/components/ui/page-heading";
 import { ProgressBar } from "@/components/ui/progress-bar";
 import { LogFacts } from "@/components/upload/log-facts";
 import { LogSteps } from "@/components/upload/log-steps";
+import { RecipeWords } from "@/components/upload/recipe-words";
 import { isWorking } from "@/components/upload/log-state";
 import { can, type Role } from "@/lib/access/permissions";
 import { describeFailure } from "@/lib/api/api-problem";
@@ -56,6 +57,9 @@ export function LogProgress({ logId, fieldId, fieldPath, role }: LogProgressProp
       <PageHeading title={log.name} lead={log.fileName === log.name ? undefined : log.fileName} />
       <div className="max-w-2xl space-y-6">
         <LogSteps status={log.status} />
+        {log.status === "ready" ? (
+          <OutsideField log={log} fieldPath={fieldPath} mayMove={can(role, "logs.map")} />
+        ) : null}
         <Outcome log={log} fieldId={fieldId} fieldPath={fieldPath} role={role} />
         <LogFacts log={log} />
       </div>
@@ -88,17 +92,21 @@ function Outcome({ log, fieldId, fieldPath, role }: OutcomeProps) {
     );
   }
   if (log.status === "ready") {
+    const columnsHref = can(role, "logs.map") ? `${fieldPath}/logs/${log.id}/columns` : null;
     return (
-      <p className="flex flex-wrap gap-2">
-        <Link href={`${fieldPath}/rows?log=${log.id}`} className={buttonClass("primary")}>
-          See the verdict
-        </Link>
-        {can(role, "logs.map") ? (
-          <Link href={`${fieldPath}/logs/${log.id}/columns`} className={buttonClass("quiet")}>
-            What the columns mean
+      <div className="space-y-3">
+        <RecipeWords log={log} columnsHref={columnsHref} />
+        <p className="flex flex-wrap gap-2">
+          <Link href={`${fieldPath}/rows?log=${log.id}`} className={buttonClass("primary")}>
+            {log.kind === "harvest" ? "See the rows" : "See the verdict"}
           </Link>
-        ) : null}
-      </p>
+          {columnsHref ? (
+            <Link href={columnsHref} className={buttonClass("quiet")}>
+              What the columns mean
+            </Link>
+          ) : null}
+        </p>
+      </div>
     );
   }
   if (log.status === "failed") return <Failure log={log} fieldPath={fieldPath} role={role} actions={actions} />;

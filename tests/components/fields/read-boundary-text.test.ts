@@ -37,6 +37,12 @@ describe("pasted boundaries", () => {
     expect(words(JSON.stringify({ type: "Polygon", coordinates: [ring(298)] }))).toContain("longitude within 180");
   });
 
+  it("says at once where a boundary crosses itself", () => {
+    const [a, b, c, d] = ring(-98.6);
+    const bow = readBoundaryText(JSON.stringify({ type: "Polygon", coordinates: [[a, c, b, d, a]] }));
+    expect(bow.ok ? "" : bow.error).toMatch(/crosses itself/);
+  });
+
   it("draws the outline true to shape, north up", () => {
     // 0.002 degrees each way: narrower than tall by the cosine of the latitude.
     const path = boundaryPath({ type: "Polygon", coordinates: [ring(-98.6)] });

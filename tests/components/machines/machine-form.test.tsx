@@ -3,7 +3,7 @@ import { cleanup, render, screen, waitFor } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
 import { afterEach, describe, expect, it, vi } from "vitest";
 import { MachineForm } from "@/components/machines/machine-form";
-import { UnitsProvider } from "@/components/units/use-units";
+import { UnitsProvider, type UnitSystemName } from "@/components/units/use-units";
 
 vi.mock("next/navigation", () => ({ useRouter: () => ({ push: vi.fn() }) }));
 
@@ -12,7 +12,7 @@ afterEach(() => {
   vi.unstubAllGlobals();
 });
 
-function show() {
+function show(units: UnitSystemName = "imperial") {
   const sent: unknown[] = [];
   vi.stubGlobal("fetch", (_path: string, init: RequestInit) => {
     sent.push(JSON.parse(String(init.body)));
@@ -25,7 +25,7 @@ function show() {
   });
   render(
     <QueryClientProvider client={new QueryClient()}>
-      <UnitsProvider start="imperial" keep={false}>
+      <UnitsProvider start={units} keep={false}>
         <MachineForm
           slug="larkspur-flats"
           machineId={null}
@@ -61,5 +61,29 @@ describe("describing a drill", () => {
     expect(machine.antennaToRowsM).toBeCloseTo(3.048, 12);
     expect(machine.rowUnitMassKg).toBeCloseTo(45.359237, 9);
     expect(machine.rowCount).toBe(24);
+  });
+
+  it("asks again where rows are closer or the machine is wider than any, and takes a decimal comma", async () => {
+    const { sent, user } = show("metric");
+    await user.type(screen.getByLabelText("Name"), "4-row drill");
+    await user.type(screen.getByLabelText("Rows"), "4");
+    await user.type(screen.getByLabelText("Row spacing"), "0,75");
+    await user.type(screen.getByLabelText("Antenna to rows"), "3,5");
+    await user.type(screen.getByLabelText("Mass of one row unit"), "45");
+    const save = screen.getByRole("button", { name: "Save the machine" });
+    await user.click(save);
+    expect(await screen.findByText(/asked in millimetres. Did you mean 750\?/)).toBeInTheDocument();
+    await user.clear(screen.getByLabelText("Row spacing"));
+    await user.type(screen.getByLabelText("Row spacing"), "4000");
+    await user.clear(screen.getByLabelText("Rows"));
+    await user.type(screen.getByLabelText("Rows"), "40");
+    await user.click(save);
+    expect(await screen.findByText(/wider than any seeder/)).toBeInTheDocument();
+    expect(sent).toEqual([]);
+    await user.clear(screen.getByLabelText("Row spacing"));
+    await user.type(screen.getByLabelText("Row spacing"), "750,0");
+    await user.click(save);
+    await waitFor(() => expect(sent).toHaveLength(1));
+    expect(sent[0]).toMatchObject({ rowSpacingM: 0.75, antennaToRowsM: 3.5 });
   });
 });
