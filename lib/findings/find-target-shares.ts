@@ -4,7 +4,7 @@ import type { Finding } from "@/lib/findings/finding";
 import { makeFinding, sayRows, startSentence } from "@/lib/findings/make-finding";
 import { stretchPlace } from "@/lib/findings/place-lines";
 import { rowsFrom, VERDICT_THRESHOLDS, type VerdictInput } from "@/lib/findings/verdict-input";
-import { rowSeries } from "@/lib/statistics/row-series";
+import { mapRowSeries, rowSeries } from "@/lib/statistics/row-series";
 import { atLimitFromN, distanceShare, longestStretch, underTargetBelowN } from "@/lib/statistics/row-shares";
 
 const LIMIT = VERDICT_THRESHOLDS;
@@ -205,10 +205,8 @@ export function findOverTarget({ placed, margin, distances }: VerdictInput): Fin
   const target = placed.machine?.targetMarginN;
   const deadband = placed.machine?.marginDeadbandN;
   if (!margin || target === undefined || !deadband || margin.channel.unit !== "N") return [];
-  const shares = margin.statistics.items.map((item) => {
-    const series = rowSeries(placed, margin.channel, distances, item.row - 1);
-    return distanceShare(series, (value) => value > target + deadband) ?? 0;
-  });
+  const isOver = (value: number) => value > target + deadband;
+  const shares = mapRowSeries(placed, margin.channel, distances, (series) => distanceShare(series, isOver) ?? 0);
   const rows = shares.flatMap((share, k) => (share >= LIMIT.overTargetShare ? [k + 1] : []));
   if (rows.length * 2 < shares.length) return [];
   const mean = rows.reduce((sum, row) => sum + shares[row - 1]!, 0) / rows.length;

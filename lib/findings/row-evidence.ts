@@ -1,8 +1,7 @@
 import { resolveChannel, type ResolvedChannel } from "@/lib/channels/resolve-channel";
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import { median } from "@/lib/statistics/median";
-import { deviationFromOthers } from "@/lib/statistics/row-deviation";
-import { rowSeries, type RowSeries } from "@/lib/statistics/row-series";
+import { deviationSeries, rowSeries, type RowSeries } from "@/lib/statistics/row-series";
 import { distanceShare } from "@/lib/statistics/row-shares";
 import { rowStatistics, type RowStatistics } from "@/lib/statistics/row-statistics";
 
@@ -47,12 +46,13 @@ export function rowSteps(
   evidence: ChannelEvidence,
   rows: readonly number[],
 ): Map<number, RowStep> {
-  if (rows.length === 0) return new Map();
-  const channel = { ...evidence.channel, values: deviationFromOthers(evidence.channel.values, evidence.channel.rows) };
+  const { channel, statistics } = evidence;
+  const { middles } = statistics;
+  if (rows.length === 0 || !middles) return new Map();
   return new Map(
     rows.map((row) => {
-      const series = rowSeries(placed, channel, distances, row - 1);
-      return [row, describeStep(placed, series, evidence.statistics.deviations[row - 1]!)];
+      const series = deviationSeries(rowSeries(placed, channel, distances, row - 1), middles);
+      return [row, describeStep(placed, series, statistics.deviations[row - 1]!)];
     }),
   );
 }

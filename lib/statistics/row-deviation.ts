@@ -1,3 +1,4 @@
+import { medianOfOthers, middleReadings } from "@/lib/statistics/middle-readings";
 import { median } from "@/lib/statistics/median";
 import { robustSpread } from "@/lib/statistics/median-absolute-deviation";
 
@@ -9,64 +10,13 @@ export const MIN_ROWS_TO_RANK = 5;
  * ground the machine stood on. Row-major by record like the input; NaN where the row or all others are missing.
  */
 export function deviationFromOthers(values: Float32Array, rows: number): Float32Array {
-  const deviations = new Float32Array(values.length).fill(NaN);
-  const record = new Float32Array(rows);
-  for (let base = 0; base < values.length; base += rows) {
-    let n = 0;
-    for (let row = 0; row < rows; row++) {
-      const value = values[base + row]!;
-      if (!Number.isNaN(value)) record[n++] = value;
-    }
-    if (n > 1) fillDeviations(values, deviations, { base, record, n });
+  const middles = middleReadings(values, rows);
+  const deviations = new Float32Array(values.length);
+  for (let place = 0; place < values.length; place++) {
+    const value = values[place]!;
+    deviations[place] = value - medianOfOthers(middles, Math.floor(place / rows), value);
   }
   return deviations;
-}
-
-/**
- * The median of all values but one is read off the three in the middle of all: which of them, tells the value left out.
- * So the middle is selected, not the whole record sorted.
- */
-function fillDeviations(
-  values: Float32Array,
-  deviations: Float32Array,
-  { base, record, n }: { base: number; record: Float32Array; n: number },
-): void {
-  const middle = (n - 1) >> 1;
-  selectRank(record, n, middle);
-  const at = record[middle]!;
-  let below = -Infinity;
-  for (let i = 0; i < middle; i++) if (record[i]! > below) below = record[i]!;
-  let above = Infinity;
-  for (let i = middle + 1; i < n; i++) if (record[i]! < above) above = record[i]!;
-  const isOdd = (n - 1) % 2 === 1;
-  for (let place = base; place < base + record.length; place++) {
-    const value = values[place]!;
-    if (Number.isNaN(value)) continue;
-    const high = value > at ? at : above;
-    deviations[place] = value - (isOdd ? high : (high + (value >= at ? below : at)) / 2);
-  }
-}
-
-/** Moves the value of this rank to its place, smaller ones before it and larger ones behind (Hoare 1961, FIND). */
-// kernel: hot, so positional
-function selectRank(values: Float32Array, n: number, rank: number): void {
-  let left = 0;
-  let right = n - 1;
-  while (left < right) {
-    const pivot = values[rank]!;
-    let i = left;
-    let j = right;
-    while (i <= j) {
-      while (values[i]! < pivot) i++;
-      while (values[j]! > pivot) j--;
-      if (i > j) break;
-      const swapped = values[i]!;
-      values[i++] = values[j]!;
-      values[j--] = swapped;
-    }
-    if (j < rank) left = i;
-    if (rank < i) right = j;
-  }
 }
 
 export interface RowScores {

@@ -3,9 +3,10 @@ import { AppError } from "@/lib/errors";
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import { rowDistances } from "@/lib/rows/row-distances";
 import { median } from "@/lib/statistics/median";
-import { deviationFromOthers, scoreRows, Z_LIMIT, type RowScores } from "@/lib/statistics/row-deviation";
+import { middleReadings, type MiddleReadings } from "@/lib/statistics/middle-readings";
+import { scoreRows, Z_LIMIT, type RowScores } from "@/lib/statistics/row-deviation";
 import { rowReason } from "@/lib/statistics/row-reason";
-import { allRowSeries, type RowSeries } from "@/lib/statistics/row-series";
+import { deviationSeries, emptySeries, mapRowSeries, type RowSeries } from "@/lib/statistics/row-series";
 import {
   atLimitFromN,
   contactLostShare,
@@ -51,6 +52,8 @@ export interface RowStatistics {
   medianOfRows: number;
   wheelTrackRows: number[];
   censoredShare: number | null;
+  /** What the rows were compared with at each record; null for a channel of the whole machine. */
+  middles: MiddleReadings | null;
 }
 
 /** A row is flagged only where it is also this much of the median of all rows away from them. */
@@ -71,10 +74,17 @@ export function rowStatistics(
   if (!resolved.ok) throw new AppError("unprocessable", resolved.error, { detailCode: "channel_not_available" });
   const channel = resolved.value;
   const distances = options.distances ?? rowDistances(placed);
-  const described = allRowSeries(placed, channel, distances).map((one, row) =>
-    describeRow(placed, channel, { series: one, row: row + 1 }),
+  const middles = channel.perRow ? middleReadings(channel.values, channel.rows) : null;
+  const room = emptySeries(placed.log.records);
+  const found = mapRowSeries(placed, channel, distances, (series, row) => ({
+    ...describeRow(placed, channel, { series, row }),
+    typicalDeviation: middles ? medianOf(deviationSeries(series, middles, room)) : NaN,
+  }));
+  const described = found.map(({ typicalDeviation: _, ...item }) => item);
+  const scores = scoreRows(
+    found.map((item) => item.typicalDeviation),
+    { maxTrackRows: Math.max(2, Math.floor(WHEEL_WIDTH_M / placed.geometry.widthM[0]!)) },
   );
-  const scores = scoreChannel(placed, channel, distances);
   const medianOfRows = median(described.map((item) => item.p50 ?? NaN));
   const flagged = described.map((_, row) => isFlagged(scores, row, medianOfRows));
   const items = described.map((item, row) => ({
@@ -84,8 +94,9 @@ export function rowStatistics(
     reason: rowReason({ scores, row, flagged, medianOfRows, unit: channel.unit }),
   }));
   const { wheelTrackRows, deviation: deviations } = scores;
-  const censoredShare = channel.censoredShare;
-  return { channel: channelId, unit: channel.unit, items, deviations, medianOfRows, wheelTrackRows, censoredShare };
+  const { censoredShare } = channel;
+  const ofChannel = { channel: channelId, unit: channel.unit, censoredShare };
+  return { ...ofChannel, items, deviations, medianOfRows, wheelTrackRows, middles };
 }
 
 function isFlagged(scores: RowScores, row: number, medianOfRows: number): boolean {
@@ -94,13 +105,8 @@ function isFlagged(scores: RowScores, row: number, medianOfRows: number): boolea
   return z !== null && Math.abs(z) > Z_LIMIT && large;
 }
 
-function scoreChannel(placed: PlacedLog, channel: ResolvedChannel, distances: Float32Array): RowScores {
-  if (!channel.perRow) return scoreRows([NaN]);
-  const values = deviationFromOthers(channel.values, channel.rows);
-  const typical = allRowSeries(placed, { values, rows: channel.rows }, distances).map(
-    (series) => selectQuantiles(series.values, series.weightsM, [0.5]).quantiles[0] ?? NaN,
-  );
-  return scoreRows(typical, { maxTrackRows: Math.max(2, Math.floor(WHEEL_WIDTH_M / placed.geometry.widthM[0]!)) });
+function medianOf({ values, weightsM }: RowSeries): number {
+  return selectQuantiles(values, weightsM, [0.5]).quantiles[0] ?? NaN;
 }
 
 /** A tractor's wheel or belt is at most about this wide. Common practice, no source. */

@@ -61,6 +61,32 @@ describe("selectQuantiles", () => {
     );
   });
 
+  it("needs no sort for a log's rounded readings, and gives what a full sort gives", () => {
+    const rounded = fc.record({
+      step: fc.constantFrom(1, 10, 0.1, 4.4482216152605, 0.001),
+      list: fc.array(
+        fc.record({ steps: fc.integer({ min: -60, max: 60 }), weight: fc.double({ min: 0, max: 2, noNaN: true }) }),
+        {
+          minLength: 1,
+          maxLength: 300,
+        },
+      ),
+    });
+    fc.assert(
+      fc.property(rounded, ({ step, list }) => {
+        const values = Float32Array.from(list, (one) => one.steps * step);
+        const weights = Float32Array.from(list, (one) => one.weight);
+        const found = selectQuantiles(values, weights, LEVELS);
+        LEVELS.forEach((p, k) => {
+          const sorted = weightedQuantile(Array.from(values), Array.from(weights), p);
+          if (Number.isNaN(sorted)) expect(found.quantiles[k]).toBeNaN();
+          else expect(Math.abs(found.quantiles[k]! - sorted)).toBeLessThan(1e-6 * step);
+        });
+      }),
+      { seed: 11, numRuns: 300 },
+    );
+  });
+
   it("is the plain median where all weights are equal", () => {
     const values = Float32Array.from({ length: 4001 }, (_, i) => Math.fround(Math.sin(i * 12.9898) * 43758.5453) % 500);
     const found = selectQuantiles(values, new Float32Array(4001).fill(0.5), [0.5]);
