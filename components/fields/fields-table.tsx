@@ -50,7 +50,7 @@ export function FieldsTable({ slug, fields, mayUpload }: FieldsTableProps) {
         id: "verdict",
         header: "Newest log says",
         value: () => undefined,
-        cell: (field) => <FieldVerdictState fieldId={field.id} logCount={field.logCount} />,
+        cell: (field) => <FieldVerdictState fieldId={field.id} logCount={field.logCount} mayUpload={mayUpload} />,
       },
     ],
     [areaUnit, fromSquareMetres, mayUpload, slug],

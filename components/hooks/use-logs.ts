@@ -2,7 +2,17 @@
 
 import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import { queryKeys } from "@/components/hooks/query-keys";
-import { cancelLog, deleteLog, getColumns, getLog, getVerdict, listLogs, putMapping, retryLog } from "@/lib/api/client";
+import {
+  cancelLog,
+  changeLog,
+  deleteLog,
+  getColumns,
+  getLog,
+  getVerdict,
+  listLogs,
+  putMapping,
+  retryLog,
+} from "@/lib/api/client";
 import type { LogMapping } from "@/lib/ingest/mapping";
 import { isWorking } from "@/components/upload/log-state";
 
@@ -41,6 +51,18 @@ export function useLogActions(fieldId: string) {
     retry: useMutation({ mutationFn: retryLog, onSettled }),
     remove: useMutation({ mutationFn: deleteLog, onSettled }),
   };
+}
+
+/** Puts a log into another field; both fields' lists are asked for again. */
+export function useMoveLog(logId: string) {
+  const client = useQueryClient();
+  return useMutation({
+    mutationFn: (fieldId: string) => changeLog(logId, { fieldId }),
+    onSuccess: (log) => {
+      client.setQueryData(queryKeys.log(logId), log);
+      void client.invalidateQueries({ queryKey: queryKeys.fields });
+    },
+  });
 }
 
 export interface ConfirmedMapping {

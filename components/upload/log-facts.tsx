@@ -1,10 +1,16 @@
 import { formatBytes, formatMoment } from "@/components/ui/format-date";
 import { Notice } from "@/components/ui/notice";
 import { formatNumber } from "@/lib/units/format-quantity";
+import { OUTSIDE_FIELD } from "@/lib/logs/note-codes";
 import type { Log } from "@/lib/schemas/logs";
 
 function formatCount(value: number): string {
   return formatNumber(value, 0);
+}
+
+/** A log that lies outside its field is told above, with what to do about it. */
+function isSaidHere(note: Log["notes"][number]): boolean {
+  return note.code !== OUTSIDE_FIELD;
 }
 
 /** What was found in the file, and what was noticed while reading it. */
@@ -33,7 +39,7 @@ export function LogFacts({ log }: { log: Log }) {
           </div>
         ))}
       </dl>
-      {log.notes.map((note) => (
+      {log.notes.filter(isSaidHere).map((note) => (
         <Notice key={note.code} state="look">
           {note.message}
           {note.firstLine === undefined ? null : <span className="tabular"> First at line {note.firstLine}.</span>}

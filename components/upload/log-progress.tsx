@@ -16,6 +16,7 @@ import { LogFacts } from "@/components/upload/log-facts";
 import { LogSteps } from "@/components/upload/log-steps";
 import { RecipeWords } from "@/components/upload/recipe-words";
 import { isWorking } from "@/components/upload/log-state";
+import { OutsideField, outsideFieldNote } from "@/components/upload/outside-field";
 import { can, type Role } from "@/lib/access/permissions";
 import { describeFailure } from "@/lib/api/api-problem";
 import { logOriginalPath } from "@/lib/api/client";
@@ -97,7 +98,10 @@ function Outcome({ log, fieldId, fieldPath, role }: OutcomeProps) {
       <div className="space-y-3">
         <RecipeWords log={log} columnsHref={columnsHref} />
         <p className="flex flex-wrap gap-2">
-          <Link href={`${fieldPath}/rows?log=${log.id}`} className={buttonClass("primary")}>
+          <Link
+            href={`${fieldPath}/rows?log=${log.id}`}
+            className={buttonClass(outsideFieldNote(log) ? "plain" : "primary")}
+          >
             {log.kind === "harvest" ? "See the rows" : "See the verdict"}
           </Link>
           {columnsHref ? (

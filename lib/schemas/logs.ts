@@ -17,6 +17,8 @@ export const LogNoteBody = z.object({
   count: z.number().int(),
   firstLine: z.number().int().optional(),
   message: z.string(),
+  /** Another field that the note speaks of. */
+  fieldId: z.string().optional(),
 });
 export const LogCounts = z.object({
   records: z.number().int(),
@@ -67,6 +69,8 @@ export const LogAccepted = z.object({ id: Id, status: LogStatus });
 export const LogPatch = z.object({
   name: z.string().trim().min(1).max(200).optional(),
   machineId: Id.nullable().optional(),
+  /** The field that the log belongs to. */
+  fieldId: Id.optional(),
 });
 
 /** The machine beside a mapping: null for none, left out to keep the one the log has. */

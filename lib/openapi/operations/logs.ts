@@ -52,10 +52,11 @@ export const logOperations: Operation[] = [
     path: "/api/v1/logs/{logId}",
     tag,
     permission: "logs.map",
-    summary: "Rename a log or give it another machine",
-    description: "Another machine has the log placed again.",
+    summary: "Rename a log, give it another machine, or move it to another field",
+    description: "Another machine or another field has the log placed again.",
     body: LogPatch,
     replies: [{ status: 200, description: "The log as it is now", schema: Log }],
+    errors: ["conflict"],
   },
   {
     method: "DELETE",

@@ -9,6 +9,7 @@ import type { Boundary } from "@/lib/schemas/geometry";
 import { chooseMapping, type ChosenMapping } from "@/lib/server/logs/choose-mapping";
 import { LogFailure } from "@/lib/server/logs/log-failure";
 import type { LogProgress } from "@/lib/server/logs/log-progress";
+import { notePlace } from "@/lib/server/logs/note-place";
 import type { ThreadPool } from "@/lib/server/logs/thread-pool";
 import { VersionWriter } from "@/lib/server/logs/version-writer";
 import { workerScope } from "@/lib/server/logs/worker-scope";
@@ -34,11 +35,16 @@ export async function readAndStore(log: LogRow, threads: ThreadPool, progress: L
     progress.tell("Reading the records", 0.05);
     const { machine, boundary } = context;
     const writer = new VersionWriter(log, machine, progress);
-    const onPlaced = (placed: PackedPlacedLog) => writer.begin(placed);
+    let stood: PackedPlacedLog | undefined;
+    const onPlaced = (placed: PackedPlacedLog) => {
+      stood = placed;
+      writer.begin(placed);
+    };
     try {
       const built = await thread.read({ file, mapping: chosen.mapping, machine, boundary }, { ...ask, onPlaced });
       if (!built.ok) throw new LogFailure(built.error);
-      await writer.finish(built.value);
+      const place = stood ? await notePlace(log, stood.log) : [];
+      await writer.finish({ ...built.value, notes: [...place, ...built.value.notes] });
     } catch (error) {
       await writer.undo(error);
       throw error;

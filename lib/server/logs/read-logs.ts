@@ -7,10 +7,15 @@ import type { Scope } from "@/lib/scope";
 import type { Container } from "@/lib/server/create-container";
 import { getFieldOrThrow } from "@/lib/server/fields/get-field-or-throw";
 import { describeLog } from "@/lib/server/logs/describe-log";
+import { nameHoldingFields } from "@/lib/server/logs/note-place";
 
 /** @throws AppError `not_found` */
 export async function getLog(_container: Container, scope: Scope, logId: string): Promise<Log> {
-  return withOrganisation(scope, async (tx) => describeLog(await getLogOrThrow(tx, scope, logId)));
+  return withOrganisation(scope, async (tx) => {
+    const log = describeLog(await getLogOrThrow(tx, scope, logId));
+    const [named = log] = await nameHoldingFields(tx, scope, [log]);
+    return named;
+  });
 }
 
 /** Logs of a field, the newest first. @throws AppError `not_found` for a field that the caller may not see */
@@ -22,6 +27,6 @@ export async function listLogs(
   return withOrganisation(scope, async (tx) => {
     await getFieldOrThrow(tx, scope, input.fieldId);
     const { rows, nextCursor } = await listLogsOfField(tx, scope, input);
-    return { items: rows.map(describeLog), nextCursor };
+    return { items: await nameHoldingFields(tx, scope, rows.map(describeLog)), nextCursor };
   });
 }
