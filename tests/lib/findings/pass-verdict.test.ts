@@ -170,6 +170,11 @@ describe("the demo fields", () => {
     expect(verdict.rowsStandingOut).toEqual([17]);
     const refusal = verdict.findings.find((one) => one.kind === "rows-side-by-side");
     expect(refusal?.sentence).toContain("cannot tell");
+    // The worn row has a finding of its own: it is neither in the group nor in the group's size.
+    expect(refusal?.rows).not.toContain(17);
+    expect(refusal?.sentence).toMatch(
+      /^Rows 8 to 16 needed about 2[0-4]\d\u202fN more applied force than the others, side by side: .*cannot tell which\.$/,
+    );
     expect(refusal?.confidence).toBe("low");
     expect(verdict.findings.some((one) => one.kind === "wheel-tracks")).toBe(false);
   });
