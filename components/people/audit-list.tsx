@@ -27,6 +27,7 @@ const VERBS: Record<string, string> = {
   add: "added",
   remove: "removed",
   upload: "took in",
+  export: "exported",
 };
 
 /** `share.create` as "made a share"; what is not in the list is shown as it is. */

@@ -51,17 +51,30 @@ export function dbfRows(
 ): Uint8Array {
   const recordBytes = dbfRecordBytes(fields);
   const bytes = new Uint8Array(recordBytes * rows).fill(BLANK);
-  const encoder = new TextEncoder();
   for (let row = 0; row < rows; row++) {
     let at = recordBytes * row + 1;
     fields.forEach((field, index) => {
       const value = valueAt(index, row);
       const text = value === null ? "" : typeof value === "string" ? value : dbfNumber(value, field);
-      encoder.encodeInto(text, bytes.subarray(at, at + field.width));
+      writeText(bytes, text, { from: at, width: field.width });
       at += field.width;
     });
   }
   return bytes;
+}
+
+const encoder = new TextEncoder();
+
+/** UTF-8, no further than the field; the plain letters of nearly every cell without an encoder. */
+function writeText(bytes: Uint8Array, text: string, { from, width }: { from: number; width: number }): void {
+  for (let at = 0; at < text.length; at++) {
+    const code = text.charCodeAt(at);
+    if (at >= width || code > 127) {
+      if (code > 127) encoder.encodeInto(text.slice(at), bytes.subarray(from + at, from + width));
+      return;
+    }
+    bytes[from + at] = code;
+  }
 }
 
 /** A number at the right of its field: with fewer decimals, then as a power of ten, where it is too long; blank at last. */
