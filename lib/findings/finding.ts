@@ -11,6 +11,7 @@ export const FindingPlace = z.discriminatedUnion("type", [
 export type FindingPlace = z.infer<typeof FindingPlace>;
 
 export const FINDING_KINDS = [
+  "readings-doubtful",
   "row-stands-out",
   "rows-side-by-side",
   "rows-some-passes",

@@ -3,6 +3,7 @@ import type { Finding } from "@/lib/findings/finding";
 import { findOddRows } from "@/lib/findings/find-odd-rows";
 import { findAtLimit, findContactLost, findOverTarget, findUnderTarget } from "@/lib/findings/find-target-shares";
 import { doubtBalance } from "@/lib/findings/doubt-balance";
+import { doubtReadings } from "@/lib/findings/doubt-readings";
 import { findWeight } from "@/lib/findings/find-weight";
 import { makeFinding } from "@/lib/findings/make-finding";
 import { channelEvidence } from "@/lib/findings/row-evidence";
@@ -38,8 +39,9 @@ export interface VerdictOptions {
 }
 
 const ORDER: Record<Finding["severity"], number> = { act: 0, look: 1, ok: 2 };
-/** Within a severity: what is wrong with named rows, then with the machine, then what cannot be said. */
+/** Doubt about the readings comes before all; then, within a severity: what is wrong with named rows, then with the machine, then what cannot be said. */
 const KIND_ORDER: Finding["kind"][] = [
+  "readings-doubtful",
   "row-stands-out",
   "rows-under-target",
   "weight-short",
@@ -58,30 +60,21 @@ const KIND_ORDER: Finding["kind"][] = [
 
 /** What can be said about a log at once: which rows, which weight, what to look at, and what the log cannot tell. */
 export function passVerdict(placed: PlacedLog, options: VerdictOptions = {}): PassVerdict {
-  const distances = options.distances ?? rowDistances(placed);
-  const given = { ...options, distances };
-  const margin = channelEvidence(placed, "margin", given);
-  const input: VerdictInput = {
-    placed,
-    distances,
-    margin,
-    downforce: channelEvidence(placed, "downforce", given),
-    resistance: channelEvidence(placed, "resistance", given),
-    contact: channelEvidence(placed, "contact", given),
-    balance: doubtBalance(measureFrameBalance(placed, distances), margin),
-  };
+  const given = gatherEvidence(placed, options);
+  const { findings: doubts, judged: input } = doubtReadings(given);
   const odd = findOddRows(input);
-  const missing = missingInputs(input);
+  const missing = missingInputs(given);
   const findings = [
+    ...doubts,
     ...odd,
     ...sayAlike(input, odd),
     ...findUnderTarget(input),
     ...findAtLimit(input),
     ...findContactLost(input),
     ...findOverTarget(input),
-    ...findWeight(input),
+    ...(given.downforce && !input.downforce ? [] : findWeight(input)),
     ...sayMissing(missing),
-  ].sort((a, b) => ORDER[a.severity] - ORDER[b.severity] || kindRank(a) - kindRank(b) || size(b) - size(a));
+  ].sort((a, b) => rank(a) - rank(b) || size(b) - size(a));
   const { headroomN, shareLiftedM2, state, liftOffForcePerRowN } = input.balance;
   return {
     rowsUnderTarget: rowsFrom(input.margin, "shareUnderTarget", VERDICT_THRESHOLDS.underTargetShare).rows,
@@ -96,8 +89,24 @@ export function passVerdict(placed: PlacedLog, options: VerdictOptions = {}): Pa
   };
 }
 
-function kindRank(finding: Finding): number {
-  return KIND_ORDER.indexOf(finding.kind);
+function gatherEvidence(placed: PlacedLog, options: VerdictOptions): VerdictInput {
+  const distances = options.distances ?? rowDistances(placed);
+  const given = { ...options, distances };
+  const margin = channelEvidence(placed, "margin", given);
+  return {
+    placed,
+    distances,
+    margin,
+    downforce: channelEvidence(placed, "downforce", given),
+    resistance: channelEvidence(placed, "resistance", given),
+    contact: channelEvidence(placed, "contact", given),
+    balance: doubtBalance(measureFrameBalance(placed, distances), margin),
+  };
+}
+
+function rank({ kind, severity }: Finding): number {
+  const first = kind === "readings-doubtful" ? -1 : ORDER[severity];
+  return first * KIND_ORDER.length + KIND_ORDER.indexOf(kind);
 }
 
 function size(finding: Finding): number {
