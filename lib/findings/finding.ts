@@ -26,6 +26,7 @@ export const FINDING_KINDS = [
   "target-held",
   "rows-alike",
   "cannot-judge",
+  "not-a-seeding-log",
 ] as const;
 export type FindingKind = (typeof FINDING_KINDS)[number];
 

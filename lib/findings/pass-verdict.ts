@@ -10,6 +10,7 @@ import { channelEvidence } from "@/lib/findings/row-evidence";
 import { rowsFrom, VERDICT_THRESHOLDS, type VerdictInput } from "@/lib/findings/verdict-input";
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import { rowDistances } from "@/lib/rows/row-distances";
+import { atLimitFromN, underTargetBelowN } from "@/lib/statistics/row-shares";
 import { MIN_ROWS_TO_RANK } from "@/lib/statistics/row-deviation";
 import type { RowStatistics } from "@/lib/statistics/row-statistics";
 
@@ -18,6 +19,8 @@ export interface PassVerdict {
   rowsUnderTarget: number[];
   /** Rows at their force limit on at least 5 % of their distance. */
   rowsAtLimit: number[];
+  /** Whether the two lists above could be made at all: an empty list that is not known is no "none". */
+  known: { underTarget: boolean; atLimit: boolean };
   weight: Pick<FrameBalance, "headroomN" | "shareLiftedM2" | "state" | "missing" | "liftOffForcePerRowN">;
   /** The most important first. */
   findings: Finding[];
@@ -56,10 +59,12 @@ const KIND_ORDER: Finding["kind"][] = [
   "wheel-tracks",
   "cannot-judge",
   "weight-unknown",
+  "not-a-seeding-log",
 ];
 
 /** What can be said about a log at once: which rows, which weight, what to look at, and what the log cannot tell. */
 export function passVerdict(placed: PlacedLog, options: VerdictOptions = {}): PassVerdict {
+  if (placed.log.kind === "harvest") return harvestVerdict();
   const given = gatherEvidence(placed, options);
   const { findings: doubts, judged: input } = doubtReadings(given);
   const odd = findOddRows(input);
@@ -79,12 +84,39 @@ export function passVerdict(placed: PlacedLog, options: VerdictOptions = {}): Pa
   return {
     rowsUnderTarget: rowsFrom(input.margin, "shareUnderTarget", VERDICT_THRESHOLDS.underTargetShare).rows,
     rowsAtLimit: rowsFrom(input.downforce, "shareAtLimit", VERDICT_THRESHOLDS.atLimitShare).rows,
+    known: {
+      underTarget: input.margin !== null && underTargetBelowN(placed, input.margin.channel) !== null,
+      atLimit: input.downforce !== null && atLimitFromN(placed, input.downforce.channel) !== null,
+    },
     weight: { headroomN, shareLiftedM2, state, missing: input.balance.missing, liftOffForcePerRowN },
     findings,
     headline: chooseHeadline(findings),
     rowsStandingOut: odd.flatMap((one) => (one.kind === "row-stands-out" ? one.rows : [])).sort((a, b) => a - b),
     missing,
     resistanceCensoredShare: input.resistance?.channel.censoredShare ?? null,
+    thresholds: VERDICT_THRESHOLDS,
+  };
+}
+
+/** A harvest log sowed nothing: one sentence says so, and nothing is known about rows or weight. */
+function harvestVerdict(): PassVerdict {
+  const finding = makeFinding({
+    kind: "not-a-seeding-log",
+    severity: "ok",
+    sentenceTemplate: "This is a harvest log; seeding verdicts do not apply.",
+    method: "The kind of the log.",
+    check: "",
+  });
+  return {
+    rowsUnderTarget: [],
+    rowsAtLimit: [],
+    known: { underTarget: false, atLimit: false },
+    weight: { headroomN: null, shareLiftedM2: null, state: "unknown", missing: [], liftOffForcePerRowN: null },
+    findings: [finding],
+    headline: [finding.id],
+    rowsStandingOut: [],
+    missing: [],
+    resistanceCensoredShare: null,
     thresholds: VERDICT_THRESHOLDS,
   };
 }

@@ -217,6 +217,8 @@ export const VerdictBody = z
   .object({
     rowsUnderTarget: z.array(z.number().int()),
     rowsAtLimit: z.array(z.number().int()),
+    /** Whether the lists above could be made; verdicts of earlier builds do not say. */
+    known: z.object({ underTarget: z.boolean(), atLimit: z.boolean() }).optional(),
     weight: z.object({
       headroomN: z.object({ p05: z.number(), p50: z.number() }).nullable(),
       shareLiftedM2: NullableNumber,

@@ -43,6 +43,7 @@ function moveFindings(body: unknown, move: MoveGeometry): VerdictBody | null {
   return {
     rowsUnderTarget: verdict.rowsUnderTarget,
     rowsAtLimit: verdict.rowsAtLimit,
+    known: verdict.known,
     weight: verdict.weight,
     findings: verdict.findings.map((finding) => ({ ...finding, place: move(finding.place) })),
   };

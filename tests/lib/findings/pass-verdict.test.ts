@@ -5,6 +5,7 @@ import { passVerdict, type PassVerdict } from "@/lib/findings/pass-verdict";
 import { sayFinding } from "@/lib/findings/say-finding";
 import type { MachineLog } from "@/lib/logs/machine-log";
 import type { Seeder } from "@/lib/machines/machine";
+import { VerdictBody } from "@/lib/schemas/logs";
 import { LARKSPUR } from "@/lib/simulator/scenario/larkspur";
 import { createSeededRandom } from "@/lib/simulator/seeded-random";
 import { simulateSeedingLog } from "@/lib/simulator/simulate-seeding-log";
@@ -221,12 +222,38 @@ describe("with less to go on the verdict says what is missing", () => {
     const verdict = judge(log, null);
     expect(verdict.weight).toMatchObject({ state: "unknown", headroomN: null, shareLiftedM2: null });
     expect(verdict.rowsUnderTarget).toEqual([]);
+    expect(verdict.known).toEqual({ underTarget: false, atLimit: false });
     expect(verdict.rowsStandingOut).toEqual([17]);
     expect(verdict.missing.join(" ")).toContain("which machine made the log");
   });
 
+  it("without a target or a limit, which no empty list stands for", () => {
+    const { targetMarginN, maxDownforceN, ...machine } = truth.options.machine;
+    expect(judge(log, truth.options.machine).known).toEqual({ underTarget: true, atLimit: true });
+    expect(judge(log, { ...machine, maxDownforceN }).known).toEqual({ underTarget: false, atLimit: true });
+    expect(judge(log, { ...machine, targetMarginN }).known).toEqual({ underTarget: true, atLimit: false });
+  });
+
+  it("of a harvest log only that it is one", () => {
+    const verdict = judge({ ...log, kind: "harvest" }, truth.options.machine);
+    expect(verdict.findings.map(({ kind, severity, sentence }) => ({ kind, severity, sentence }))).toEqual([
+      {
+        kind: "not-a-seeding-log",
+        severity: "ok",
+        sentence: "This is a harvest log; seeding verdicts do not apply.",
+      },
+    ]);
+    expect(verdict).toMatchObject({
+      rowsStandingOut: [],
+      known: { underTarget: false, atLimit: false },
+      weight: { state: "unknown" },
+    });
+    expect(VerdictBody.parse(verdict).known).toEqual({ underTarget: false, atLimit: false });
+  });
+
   it("without forces", () => {
     const verdict = judge(only("margin"), truth.options.machine);
+    expect(verdict.known).toEqual({ underTarget: true, atLimit: false });
     expect(verdict.rowsStandingOut).toEqual([17]);
     expect(verdict.weight.missing.join()).toContain("force applied to each row");
     expect(verdict.resistanceCensoredShare).toBeNull();
