@@ -15,11 +15,13 @@ export interface EdgeFieldsProps {
 
 /** The classes side by side, each edge a number that can be typed. */
 export function EdgeFields({ edges, colours, shares, units, onChange }: EdgeFieldsProps) {
-  const change = (index: number, value: number) => {
+  const [refusal, setRefusal] = useState<string | null>(null);
+  const change = (index: number, typed: string) => {
+    const value = readEdge(typed) * units.factor;
     const next = edges.map((edge, i) => (i === index ? value : edge));
-    if (!areClassEdges(next)) return false;
-    onChange(next);
-    return true;
+    const why = whyNoEdge(typed, { index, next, edges, units });
+    setRefusal(why);
+    if (why === null) onChange(next);
   };
   return (
     <div className="tabular min-w-0">
@@ -46,11 +48,17 @@ export function EdgeFields({ edges, colours, shares, units, onChange }: EdgeFiel
               label={`Class edge ${index + 1}, ${units.symbol}`}
               value={edge}
               units={units}
-              onEdge={(value) => change(index, value)}
+              onEdge={(typed) => change(index, typed)}
+              onStart={() => setRefusal(null)}
             />
           </div>
         ))}
       </div>
+      {refusal === null ? null : (
+        <p role="alert" className="py-0.5 text-table text-clay">
+          {refusal}
+        </p>
+      )}
       <div
         className="flex text-[11px] leading-4 text-ink-soft"
         role="group"
@@ -78,18 +86,17 @@ interface EdgeFieldProps {
   label: string;
   value: number;
   units: ChannelUnits;
-  /** Answers whether the edge could be taken. */
-  onEdge: (value: number) => boolean;
+  /** Called with what was typed, once it is done. */
+  onEdge: (typed: string) => void;
+  onStart: () => void;
 }
 
-function EdgeField({ label, value, units, onEdge }: EdgeFieldProps) {
+function EdgeField({ label, value, units, onEdge, onStart }: EdgeFieldProps) {
   const [draft, setDraft] = useState<string | null>(null);
   const shown = edgeText(value / units.factor, units.decimals);
   const keep = () => {
-    const typed = Number((draft ?? "").replace(",", ".").replace("\u2212", "-"));
-    if (draft !== null && draft !== shown && draft.trim() !== "" && Number.isFinite(typed))
-      onEdge(typed * units.factor);
-    // An edge out of order goes back to what it was: the number in the field is always the one in force.
+    if (draft !== null && draft !== shown && draft.trim() !== "") onEdge(draft);
+    // An edge that cannot be goes back to what it was: the number in the field is always the one in force.
     setDraft(null);
   };
   return (
@@ -97,7 +104,10 @@ function EdgeField({ label, value, units, onEdge }: EdgeFieldProps) {
       aria-label={label}
       inputMode="decimal"
       value={draft ?? shown}
-      onChange={(event) => setDraft(event.target.value)}
+      onChange={(event) => {
+        setDraft(event.target.value);
+        onStart();
+      }}
       onFocus={(event) => event.target.select()}
       onBlur={keep}
       onKeyDown={(event) => {
@@ -109,8 +119,34 @@ function EdgeField({ label, value, units, onEdge }: EdgeFieldProps) {
   );
 }
 
-/** The unit's own decimals, more where the edge is small, with a true minus sign. */
+/** A decimal comma and a true minus sign are read as a keyboard's own; NaN for what is no number. */
+function readEdge(typed: string): number {
+  return Number(typed.trim().replace(",", ".").replace("\u2212", "-"));
+}
+
+interface TypedEdge {
+  index: number;
+  next: readonly number[];
+  edges: readonly number[];
+  units: ChannelUnits;
+}
+
+/** Why a typed edge cannot be taken; null where it can. */
+function whyNoEdge(typed: string, { index, next, edges, units }: TypedEdge): string | null {
+  if (!Number.isFinite(readEdge(typed))) return `“${typed.trim()}” is no number; the edge stays as it was.`;
+  if (areClassEdges(next)) return null;
+  const [before, after] = [edges[index - 1], edges[index + 1]];
+  const bounds = [
+    before === undefined ? "" : `above ${units.format(before)}`,
+    after === undefined ? "" : `below ${units.format(after)}`,
+  ].filter((bound) => bound !== "");
+  return `This edge must lie ${bounds.join(" and ")}, so that the classes keep their order; it stays as it was.`;
+}
+
+/** The unit's own decimals, one more for an edge between them, more where the edge is small; with a true minus sign. */
 function edgeText(value: number, decimals: number): string {
   const isLarge = Math.abs(value) >= 10 ** (1 - decimals) || value === 0;
-  return String(Number(isLarge ? value.toFixed(decimals) : value.toPrecision(2))).replace("-", "\u2212");
+  const isBetween = Math.abs(value - Number(value.toFixed(decimals))) > 0.05 * 10 ** -decimals;
+  const text = isLarge ? value.toFixed(isBetween ? decimals + 1 : decimals) : value.toPrecision(2);
+  return String(Number(text)).replace("-", "\u2212");
 }

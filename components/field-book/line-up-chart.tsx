@@ -7,6 +7,7 @@ import type { Classes } from "@/components/field-book/use-classes";
 import { useChannelUnits } from "@/components/field-book/use-channel-units";
 import { useSize } from "@/components/field-book/use-size";
 import { classOf } from "@/lib/legend/class-edges";
+import { pickLabels } from "@/lib/legend/pick-labels";
 import type { RowStatisticsBody, RowStatisticsItem } from "@/lib/schemas/logs";
 import { formatNumber } from "@/lib/units/format-quantity";
 
@@ -60,7 +61,6 @@ export function LineUpChart({ statistics, classes }: LineUpChartProps) {
       {width > 0 && plot ? (
         <svg width={width} height={height} className="absolute inset-0 block" role="presentation">
           <ValueAxis plot={plot} statistics={statistics} />
-          {target !== null ? <TargetLine plot={plot} value={target} /> : null}
           <PointedRow plot={plot} />
           {items.map((item) => (
             <RowMark
@@ -72,6 +72,7 @@ export function LineUpChart({ statistics, classes }: LineUpChartProps) {
               onChoose={() => store.getState().chooseRow(item.row)}
             />
           ))}
+          {target !== null ? <TargetLine plot={plot} value={target} /> : null}
           <RowNumbers plot={plot} items={items} selected={selected} />
         </svg>
       ) : null}
@@ -161,8 +162,9 @@ function TargetLine({ plot, value }: { plot: Plot; value: number }) {
   if (value < plot.low || value > plot.high) return null;
   const y = plot.yOf(value);
   return (
-    <g>
-      <line x1={LEFT_PX} x2={plot.width} y1={y} y2={y} stroke="#7D5A14" strokeDasharray="4 3" />
+    <g className="pointer-events-none" data-testid="target-line">
+      <line x1={LEFT_PX} x2={plot.width} y1={y} y2={y} stroke="#FFFFFF" strokeWidth={3} strokeOpacity={0.8} />
+      <line x1={LEFT_PX} x2={plot.width} y1={y} y2={y} stroke="#7D5A14" strokeWidth={1.5} strokeDasharray="4 3" />
       <text x={plot.width} y={TOP_PX - 5} textAnchor="end" fontSize={11} fill="#7D5A14">
         dashed: target
       </text>
@@ -262,24 +264,27 @@ function RowNumbers({
 }) {
   const every = [1, 2, 4, 6, 8, 12, 24].find((step) => step * plot.rowPx >= 20) ?? 48;
   const isShown = ({ row, flagged }: RowStatisticsItem) => row === selected || flagged;
-  const isPlain = ({ row }: RowStatisticsItem) => row === 1 || row % every === 0;
-  const strong = items.filter(isShown);
-  const plain = items.filter(
-    (item) => isPlain(item) && !strong.some((other) => Math.abs(other.row - item.row) * plot.rowPx < 20),
+  const weightOf = ({ row, flagged }: RowStatisticsItem) => (row === selected ? 3 : flagged ? 2 : 0);
+  const wanted = items.filter((item) => isShown(item) || item.row === 1 || item.row % every === 0);
+  const kept = pickLabels(
+    wanted.map((item) => ({ row: item.row, weight: weightOf(item) })),
+    { rowPx: plot.rowPx, leastPx: 20 },
   );
   return (
     <g fontSize={11} textAnchor="middle" className="tabular pointer-events-none">
-      {[...plain, ...strong].map((item) => (
-        <text
-          key={item.row}
-          x={LEFT_PX + (item.row - 0.5) * plot.rowPx}
-          y={plot.height - 8}
-          fill={item.row === selected ? "#2F5D80" : item.flagged ? "#9A4A2C" : "#4A5261"}
-          fontWeight={isShown(item) ? 600 : 400}
-        >
-          {item.row}
-        </text>
-      ))}
+      {items
+        .filter((item) => kept.includes(item.row))
+        .map((item) => (
+          <text
+            key={item.row}
+            x={LEFT_PX + (item.row - 0.5) * plot.rowPx}
+            y={plot.height - 8}
+            fill={item.row === selected ? "#2F5D80" : item.flagged ? "#9A4A2C" : "#4A5261"}
+            fontWeight={isShown(item) ? 600 : 400}
+          >
+            {item.row}
+          </text>
+        ))}
     </g>
   );
 }

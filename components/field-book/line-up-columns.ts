@@ -38,17 +38,21 @@ const ON_PHONE: NumberField[] = ["p50", "shareUnderTarget", "shareAtLimit", "dev
 
 /** Columns of the line-up's table in a person's units. Numbers go into the file rounded to four figures beyond the shown ones. */
 export function lineUpColumns(
-  { channel, unit }: RowStatisticsBody,
+  { channel, unit, items }: RowStatisticsBody,
   system: UnitSystem,
 ): DataColumn<RowStatisticsItem>[] {
-  const numbers = FIELDS.map(({ field, header, unit: own }) =>
+  // What no row has, such as a share at the limit of a margin, would be a column of dashes.
+  const filled = FIELDS.filter(({ field }) => items.length === 0 || items.some((item) => item[field] !== null));
+  const numbers = filled.map(({ field, header, unit: own }) =>
     numberColumn({ field, header, unit: own ?? unit, channel, system }),
   );
   return [
     { id: "row", header: "Row", value: (item) => item.row, numeric: true },
-    ...numbers,
     { id: "flagged", header: "Stands out", value: (item) => (item.flagged ? "yes" : "no") },
-    { id: "reason", header: "Why", value: (item) => item.reason ?? undefined },
+    ...(items.some((item) => item.reason !== null)
+      ? [{ id: "reason", header: "Why", value: (item: RowStatisticsItem) => item.reason ?? undefined }]
+      : []),
+    ...numbers,
   ];
 }
 
@@ -64,7 +68,7 @@ function numberColumn({ field, header, unit, channel, system }: NumberColumnOpti
   // "m" of a depth is shown in millimetres, "m" of a distance is not.
   const shownAs = DISTANCES.includes(field) ? "distance" : channel;
   const { symbol, factor } = displayUnit(unit, system, shownAs);
-  const options = field === "n" ? { decimals: 0 } : { channel: shownAs };
+  const options = field === "n" ? { decimals: 0 } : field === "deviationZ" ? { decimals: 2 } : { channel: shownAs };
   return {
     id: field,
     header: symbol ? `${header}, ${symbol}` : header,

@@ -43,6 +43,7 @@ export function LineUpTable({ statistics, onClose }: LineUpTableProps) {
         </div>
       </div>
       <DataTable
+        stickyFirst
         caption={`The rows compared by ${name.toLowerCase()}`}
         rows={statistics.items}
         columns={columns}

@@ -3,6 +3,7 @@
 import { ticks } from "d3-array";
 import { useChannelUnits } from "@/components/field-book/use-channel-units";
 import type { PassScale } from "@/components/field-book/pass-scale";
+import { pickLabels } from "@/lib/legend/pick-labels";
 import { formatNumber } from "@/lib/units/format-quantity";
 
 /** Numbers stand at least this far apart. */
@@ -53,7 +54,13 @@ export function RowAxis({
   const shown = (row: number) =>
     row === selected || flagged.includes(row) || row === 1 || row === scale.rows || row % every === 0;
   const rows = Array.from({ length: scale.rows }, (_, index) => index + 1).filter(shown);
-  const kept = rows.filter((row) => isFree(row, { rows, selected, flagged, least, rowPx }));
+  const weightOf = (row: number) =>
+    row === selected ? 3 : flagged.includes(row) ? 2 : row === 1 || row === scale.rows ? 1 : 0;
+  // A plain number gives way to a selected or flagged one beside it, and to the first and last.
+  const kept = pickLabels(
+    rows.map((row) => ({ row, weight: weightOf(row) })),
+    { rowPx, leastPx: least },
+  );
   return (
     <div aria-hidden="true" className={across ? "relative w-9" : "relative ml-11 h-5"}>
       {kept.map((row) => (
@@ -68,19 +75,4 @@ export function RowAxis({
       ))}
     </div>
   );
-}
-
-interface RoomOptions {
-  rows: number[];
-  selected: number | null;
-  flagged: number[];
-  least: number;
-  rowPx: number;
-}
-
-/** A plain number gives way to a selected or flagged one beside it, and to the first and last. */
-function isFree(row: number, { rows, selected, flagged, least, rowPx }: RoomOptions): boolean {
-  const last = rows[rows.length - 1];
-  const weight = (r: number) => (r === selected ? 3 : flagged.includes(r) ? 2 : r === 1 || r === last ? 1 : 0);
-  return !rows.some((other) => other !== row && weight(other) > weight(row) && Math.abs(other - row) * rowPx < least);
 }

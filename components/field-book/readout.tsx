@@ -80,9 +80,9 @@ function TrackWords({ cursor, track }: { cursor: Cursor; track: PassTrack }) {
   );
 }
 
-/** Clock time of the reader's own zone; where the log has no date, seconds since it began. */
+/** Clock time of the reader's own zone, which it names; where the log has no date, seconds since it began. */
 function clockOf(secondsIntoLog: number, startedAt: string | null): string {
   if (Number.isNaN(secondsIntoLog)) return "no time";
   if (startedAt === null) return `${secondsIntoLog.toFixed(1)}\u202fs`;
-  return new Date(Date.parse(startedAt) + secondsIntoLog * 1000).toLocaleTimeString("en-GB");
+  return new Date(Date.parse(startedAt) + secondsIntoLog * 1000).toLocaleTimeString("en-GB", { timeZoneName: "short" });
 }

@@ -1,6 +1,6 @@
 "use client";
 
-import type { KeyboardEvent } from "react";
+import { useEffect, type KeyboardEvent } from "react";
 import { useBook } from "@/components/field-book/field-book-context";
 import type { PassTrack } from "@/lib/map-state/pass-track";
 
@@ -10,6 +10,13 @@ const LONG_STEP = 10;
 /** Arrows move the cursor, brackets change the pass, Enter keeps the row, Escape lets go. */
 export function usePassKeys(track: PassTrack | undefined, passes: readonly number[], onSpoken: () => void) {
   const { store } = useBook();
+  useEffect(() => {
+    // The pass stepped to may be shorter than the one before.
+    const { cursor, pointAt } = store.getState();
+    if (track && track.records > 0 && cursor?.pass === track.pass && cursor.record >= track.records) {
+      pointAt({ ...cursor, record: track.records - 1 });
+    }
+  }, [store, track]);
   return (event: KeyboardEvent) => {
     if (!track || event.altKey || event.ctrlKey || event.metaKey) return;
     const state = store.getState();

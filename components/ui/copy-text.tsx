@@ -14,12 +14,13 @@ export function CopyText({ text, label }: { text: string; label: string }) {
   };
   return (
     <div className="flex flex-wrap items-stretch gap-2">
-      <input
+      <textarea
         readOnly
+        rows={1}
         aria-label={label}
         value={text}
         onFocus={(event) => event.target.select()}
-        className="tabular min-h-11 min-w-0 flex-1 basis-60 rounded border border-edge bg-paper px-3 md:min-h-9"
+        className="tabular min-h-11 min-w-0 flex-1 basis-96 resize-none break-all rounded border border-edge bg-paper px-3 py-2 [field-sizing:content] md:min-h-9 md:py-1.5"
       />
       <Button onClick={copy}>Copy</Button>
       <span role="status" className="self-center text-table text-ink-soft">

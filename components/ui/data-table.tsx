@@ -54,6 +54,8 @@ export interface DataTableProps<Row> {
   /** Said when the filter leaves nothing. */
   nothingWords?: string;
   initialSort?: { id: string; desc: boolean };
+  /** The first column stays in sight where the table scrolls sideways. */
+  stickyFirst?: boolean;
 }
 
 /** A table that sorts, filters and leaves as a CSV file. On a phone each row becomes a card of label and value. */
@@ -102,9 +104,10 @@ export function DataTable<Row extends object>(props: DataTableProps<Row>) {
         <caption className="sr-only">{caption}</caption>
         <thead className="border-b border-ink max-md:hidden">
           <tr>
-            {shown.map((column) => (
+            {shown.map((column, index) => (
               <HeadCell
                 key={column.id}
+                sticky={props.stickyFirst === true && index === 0}
                 header={column.header}
                 numeric={column.numeric ?? false}
                 sort={table.state.sorting.find((entry) => entry.id === column.id)}
@@ -120,7 +123,13 @@ export function DataTable<Row extends object>(props: DataTableProps<Row>) {
         </thead>
         <tbody className="max-md:block">
           {visible.map((row) => (
-            <BodyRow key={props.rowId(row)} row={row} columns={shown} actions={props.actions} />
+            <BodyRow
+              key={props.rowId(row)}
+              row={row}
+              columns={shown}
+              actions={props.actions}
+              stickyFirst={props.stickyFirst}
+            />
           ))}
         </tbody>
       </table>
@@ -168,17 +177,22 @@ function TableTools(props: { filter: string; onFilter: (text: string) => void; o
 interface HeadCellProps {
   header: string;
   numeric: boolean;
+  sticky: boolean;
   sort: { desc: boolean } | undefined;
   onSort: (down: boolean) => void;
 }
 
-function HeadCell({ header, numeric, sort, onSort }: HeadCellProps) {
+function HeadCell({ header, numeric, sticky, sort, onSort }: HeadCellProps) {
   const direction = sort ? (sort.desc ? "descending" : "ascending") : "none";
   return (
     <th
       scope="col"
       aria-sort={direction}
-      className={classNames("p-0 font-semibold", numeric ? "text-right" : "text-left")}
+      className={classNames(
+        "p-0 font-semibold",
+        numeric ? "text-right" : "text-left",
+        sticky && "md:sticky md:left-0 md:z-10 md:bg-paper",
+      )}
     >
       <button
         type="button"
@@ -199,9 +213,10 @@ interface BodyRowProps<Row> {
   row: Row;
   columns: DataColumn<Row>[];
   actions?: (row: Row) => ReactNode;
+  stickyFirst?: boolean;
 }
 
-function BodyRow<Row>({ row, columns, actions }: BodyRowProps<Row>) {
+function BodyRow<Row>({ row, columns, actions, stickyFirst }: BodyRowProps<Row>) {
   return (
     <tr className="border-b border-rule bg-sheet max-md:mb-3 max-md:block max-md:border max-md:p-3">
       {columns.map((column, index) => (
@@ -212,6 +227,7 @@ function BodyRow<Row>({ row, columns, actions }: BodyRowProps<Row>) {
             column.numeric && "md:text-right",
             column.wideOnly && "max-md:hidden",
             index === 0 && "max-md:pb-2 max-md:text-text",
+            index === 0 && stickyFirst && "md:sticky md:left-0 md:z-10 md:bg-sheet",
           )}
         >
           {index === 0 ? null : <span className="text-ink-soft md:hidden">{column.header}</span>}

@@ -6,12 +6,15 @@ export function formatDay(instant: string | null, timeZone?: string): string {
   );
 }
 
-/** "14 October 2026, 16:05". */
+/** "14 October 2026, 16:05 UTC": the time names its zone. */
 export function formatMoment(instant: string | null, timeZone?: string): string {
   if (!instant) return "";
-  const time = new Intl.DateTimeFormat("en-GB", { hour: "2-digit", minute: "2-digit", timeZone }).format(
-    new Date(instant),
-  );
+  const time = new Intl.DateTimeFormat("en-GB", {
+    hour: "2-digit",
+    minute: "2-digit",
+    timeZoneName: "short",
+    timeZone,
+  }).format(new Date(instant));
   return `${formatDay(instant, timeZone)}, ${time}`;
 }
 

@@ -64,3 +64,5 @@ export function edgesAroundTarget(target: number, tolerance: number): number[] {
  * Source: Hanna, Steward and Aldinger 2010, Applied Engineering in Agriculture 26(4):551-556.
  */
 export const CONTACT_LOAD_EDGES_N = [180, 490, 890] as const;
+/** The same as the source gives them in pounds-force. */
+export const CONTACT_LOAD_EDGES_LBF = [40, 110, 200] as const;

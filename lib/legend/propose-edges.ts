@@ -1,6 +1,7 @@
 import { ticks } from "d3-array";
 import {
   areClassEdges,
+  CONTACT_LOAD_EDGES_LBF,
   CONTACT_LOAD_EDGES_N,
   edgesAroundTarget,
   equalEdges,
@@ -46,11 +47,13 @@ function edgesOf(preset: EdgePreset, context: EdgeContext): number[] {
   const { histogram, targetMarginN, marginDeadbandN } = context;
   switch (preset) {
     case "target":
-      return targetMarginN === null ? [] : edgesAroundTarget(targetMarginN, marginDeadbandN || GUESSED_DEADBAND_N);
+      return targetMarginN === null ? [] : targetEdges(context, targetMarginN, marginDeadbandN || GUESSED_DEADBAND_N);
     case "contact-load":
-      return [...CONTACT_LOAD_EDGES_N];
+      return isPounds(context)
+        ? CONTACT_LOAD_EDGES_LBF.map((edge) => edge * context.shownFactor)
+        : [...CONTACT_LOAD_EDGES_N];
     case "equal":
-      return equalEdges(histogram.minimum, histogram.maximum, CLASSES);
+      return roundIfRising(equalEdges(histogram.minimum, histogram.maximum, CLASSES), context.shownFactor);
     case "quantile":
       return context.distribution
         ? equalDistanceEdges(context.distribution, CLASSES)
@@ -58,6 +61,35 @@ function edgesOf(preset: EdgePreset, context: EdgeContext): number[] {
     case "round":
       return context.channel.startsWith("deviation:") ? roundAroundZero(context) : roundEdges(context);
   }
+}
+
+/** Pounds-force, exact (NIST SP 811). */
+const POUND_FORCE_N = 4.4482216152605;
+
+function isPounds({ shownFactor }: EdgeContext): boolean {
+  return Math.abs(shownFactor / POUND_FORCE_N - 1) < 1e-6;
+}
+
+/** A step of the reader's unit: a power of ten, small beside what the edges span. */
+function roundStep(spanSi: number, shownFactor: number): number {
+  const span = Math.abs(spanSi) / shownFactor;
+  const step = span > 0 && Number.isFinite(span) ? 10 ** Math.floor(Math.log10(span / 20)) : 1;
+  return step * shownFactor;
+}
+
+/** Edges as round numbers of the reader's unit, where they still rise then. */
+function roundIfRising(edges: number[], shownFactor: number): number[] {
+  const step = roundStep((edges.at(-1) ?? 0) - (edges[0] ?? 0), shownFactor);
+  const rounded = edges.map((edge) => Math.round(edge / step) * step);
+  return areClassEdges(rounded) ? rounded : edges;
+}
+
+/** Round in the reader's unit but for the two one tolerance off: there a reading begins to count as off target. */
+// kernel: the context and the two numbers found in it.
+function targetEdges({ shownFactor }: EdgeContext, target: number, tolerance: number): number[] {
+  const exact = edgesAroundTarget(target, tolerance);
+  const rounded = roundIfRising(exact, shownFactor).map((edge, i) => (i === 1 || i === 4 ? exact[i]! : edge));
+  return areClassEdges(rounded) ? rounded : exact;
 }
 
 /** Round numbers of the reader's unit within the middle 96 % of the readings, so that a few strays do not use up the classes. */

@@ -82,7 +82,10 @@ export function createFieldBookStore(initial: Partial<FieldBookState> = {}) {
     stepPass: (by, passes) => {
       const at = passes.indexOf(get().pass ?? NaN);
       const next = at < 0 ? passes[0] : passes[Math.min(passes.length - 1, Math.max(0, at + by))];
-      if (next !== undefined) get().choosePass(next);
+      const { cursor } = get();
+      if (next === undefined || next === get().pass) return;
+      // The row pointed at stays pointed at: who walks by keys follows it from pass to pass.
+      set({ pass: next, stretch: null, cursor: cursor ? { ...cursor, pass: next } : null });
     },
     chooseRow: (row) => set((state) => ({ row: row === state.row ? null : row })),
     pointAt: (cursor) => {

@@ -39,6 +39,12 @@ describe("the legend", () => {
     expect(colours).toEqual(classColours("PuOr", 7, 3));
   });
 
+  it("writes round edges in pounds-force, and the exact one where under target begins", () => {
+    renderInBook(<LegendOfMargin />, { system: "imperial" });
+    // 450 and 100 N are 101.16 and 22.48 lbf (NIST SP 811): one tolerance off are 78.7 and 123.6.
+    expect(edges()).toEqual(["56", "78.7", "90", "112", "123.6", "146"]);
+  });
+
   it("says how much of the distance lies in each class", () => {
     renderInBook(<LegendOfMargin />);
     // Even values 0 .. 999: a quarter below 250, a tenth in 250 .. 350, and so on (hand-worked).
@@ -54,6 +60,20 @@ describe("the legend", () => {
     await userEvent.type(field, "40{Enter}");
     // 40 lbf = 177.93 N (NIST SP 811).
     expect(store.getState().edges.margin?.[0]).toBeCloseTo(177.93, 2);
+  });
+
+  it("says why a typed edge cannot be", async () => {
+    renderInBook(<LegendOfMargin />);
+    const field = screen.getByRole("textbox", { name: "Class edge 2, N" });
+    await userEvent.clear(field);
+    await userEvent.type(field, "abc{Enter}");
+    expect(screen.getByRole("alert")).toHaveTextContent("“abc” is no number");
+    await userEvent.clear(field);
+    await userEvent.type(field, "900{Enter}");
+    expect(screen.getByRole("alert")).toHaveTextContent(/above 250.N and below 400.N/);
+    await userEvent.clear(field);
+    await userEvent.type(field, "355{Enter}");
+    expect(screen.queryByRole("alert")).not.toBeInTheDocument();
   });
 
   it("refuses an edge out of order and shows the one in force", async () => {

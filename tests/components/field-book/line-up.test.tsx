@@ -62,15 +62,24 @@ describe("the line-up's table", () => {
     const lines = lineUpText(columns, STATISTICS.items).split("\n");
     const header = lines[0]!.split("\t");
     const cells = lines[5]!.split("\t");
-    expect(cells[header.indexOf("At the limit, of distance, %")]).toBe("");
+    // No row of a margin has a share at the limit: no column of dashes.
+    expect(header).not.toContain("At the limit, of distance, %");
+    expect(header.slice(0, 3)).toEqual(["Row", "Stands out", "Why"]);
+    expect(lines[1]!.split("\t")[2]).toBe("");
     expect(cells[header.indexOf("Contact lost, of distance, %")]).toBe("0");
     expect(cells[header.indexOf("Under target, of distance, %")]).toBe("81");
-    expect(cells.at(-1)).toBe("'=lower than the others");
+    expect(cells[2]).toBe("'=lower than the others");
     expect(csvCell("=1+1")).toBe("'=1+1");
   });
 
+  it("shows z with two decimals", () => {
+    renderInBook(<LineUpTable statistics={STATISTICS} onClose={() => undefined} />);
+    expect(screen.getByText("\u22126.20")).toBeInTheDocument();
+  });
+
   it("holds every number of the statistics", () => {
-    const ids = lineUpColumns(STATISTICS, "metric").map((column) => column.id);
+    const items = STATISTICS.items.map((item) => ({ ...item, shareAtLimit: 0.1 }));
+    const ids = lineUpColumns({ ...STATISTICS, items }, "metric").map((column) => column.id);
     expect(ids).toEqual(expect.arrayContaining(Object.keys(STATISTICS.items[0]!)));
   });
 });

@@ -29,6 +29,19 @@ describe("proposeEdges", () => {
     for (const edge of edges) expect((edge / pound) % 10).toBeCloseTo(0, 6);
   });
 
+  it("makes the edges about a target and the published loads round in pounds-force", () => {
+    const pound = 4.4482216152605;
+    const imperial = { ...MARGIN, shownFactor: pound };
+    const shown = proposeEdges("target", imperial).map((edge) => edge / pound);
+    // 450 N and 80 N are 101.2 and 18.0 lbf (NIST SP 811); one tolerance off is kept exact.
+    expect(shown[1]).toBeCloseTo(370 / pound, 9);
+    expect(shown[4]).toBeCloseTo(530 / pound, 9);
+    for (const at of [0, 2, 3, 5]) expect(shown[at]! - Math.round(shown[at]!)).toBeCloseTo(0, 6);
+    proposeEdges("contact-load", imperial).forEach((edge, at) => {
+      expect(edge / pound).toBeCloseTo([40, 110, 200][at]!, 9);
+    });
+  });
+
   it("puts 0 in the middle class of differences", () => {
     const histogram = histogramOf(
       Float32Array.from({ length: 1000 }, (_, i) => i - 400),

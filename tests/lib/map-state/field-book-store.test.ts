@@ -59,6 +59,18 @@ describe("the state of a field's book", () => {
   });
 });
 
+describe("stepping from pass to pass", () => {
+  it("keeps the row pointed at", () => {
+    const store = createFieldBookStore({ pass: 1, cursor: { pass: 1, record: 30, row: 7 } });
+    store.getState().stepPass(1, [1, 2, 3]);
+    expect(store.getState().cursor).toEqual({ pass: 2, record: 30, row: 7 });
+    store.getState().stepPass(-1, [1, 2, 3]);
+    store.getState().stepPass(-1, [1, 2, 3]);
+    expect(store.getState().pass).toBe(1);
+    expect(store.getState().cursor?.row).toBe(7);
+  });
+});
+
 describe("the address", () => {
   it("comes back as it was written", () => {
     const state = {
