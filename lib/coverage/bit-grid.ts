@@ -54,8 +54,13 @@ export function setSpan(grid: BitGrid, row: number, from: number, end: number): 
     return;
   }
   grid.words[base + first]! |= head;
-  grid.words.fill(0xffffffff, base + first + 1, base + last);
+  for (let word = base + first + 1; word < base + last; word++) grid.words[word] = 0xffffffff;
   grid.words[base + last]! |= tail;
+}
+
+/** The first column whose centre is not left of x, within the grid. */
+export function firstCentreAfter(grid: BitGrid, x: number): number {
+  return Math.min(grid.columns, Math.max(0, Math.ceil((x - grid.originX) / grid.cellM - 0.5)));
 }
 
 export function isSet(grid: BitGrid, row: number, column: number): boolean {

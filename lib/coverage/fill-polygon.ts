@@ -1,4 +1,4 @@
-import { setSpan, type BitGrid } from "@/lib/coverage/bit-grid";
+import { firstCentreAfter, setSpan, type BitGrid } from "@/lib/coverage/bit-grid";
 
 /**
  * Sets the cells whose centre lies inside the rings (flat x, y lists, closed or not), by the even-odd rule, so that holes
@@ -38,9 +38,4 @@ function collectCrossings(ring: Float64Array, y: number, crossings: number[]): v
     fromX = toX;
     fromY = toY;
   }
-}
-
-/** The first column whose centre is not left of x, within the grid. */
-function firstCentreAfter(grid: BitGrid, x: number): number {
-  return Math.min(grid.columns, Math.max(0, Math.ceil((x - grid.originX) / grid.cellM - 0.5)));
 }

@@ -2,6 +2,7 @@ import type { MultiPolygon, Polygon } from "geojson";
 import { countBits, createBitGrid, emptyCopy, type BitGrid } from "@/lib/coverage/bit-grid";
 import { countEnclosedGaps } from "@/lib/coverage/enclosed-gaps";
 import { fillPolygon } from "@/lib/coverage/fill-polygon";
+import { fillQuad } from "@/lib/coverage/fill-quad";
 import { cellBounds, visitCells } from "@/lib/coverage/pass-cells";
 import { groupRows } from "@/lib/coverage/row-groups";
 import { RADIANS_PER_DEGREE } from "@/lib/geo/circular-mean";
@@ -50,11 +51,7 @@ export function measureCoverage(placed: PlacedLog, options: CoverageOptions = {}
   if (!bounds) return { sweptM2, coveredM2: 0, overlapM2: sweptM2, skippedM2: 0, resolutionM: 0 };
   const spacingM = Math.min(...placed.geometry.widthM);
   const grid = createBitGrid(bounds, spacingM / CELLS_PER_SPACING, options.maxCells ?? MAX_CELLS);
-  const ring: [Float64Array] = [new Float64Array(8)];
-  visitCells(placed, frame, (quad) => {
-    ring[0] = quad;
-    fillPolygon(grid, ring);
-  });
+  visitCells(placed, frame, (quad) => fillQuad(grid, quad));
   const cellM2 = grid.cellM * grid.cellM;
   const coveredM2 = Math.min(countBits(grid) * cellM2, sweptM2);
   const maxGap = Math.ceil((2 * implementWidthM(placed.geometry)) / grid.cellM);
