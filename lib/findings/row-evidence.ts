@@ -3,7 +3,7 @@ import type { PlacedLog } from "@/lib/logs/placed-log";
 import { median } from "@/lib/statistics/median";
 import { deviationSeries, rowSeries, type RowSeries } from "@/lib/statistics/row-series";
 import { distanceShare } from "@/lib/statistics/row-shares";
-import { rowStatistics, type RowStatistics } from "@/lib/statistics/row-statistics";
+import { describeRows, type RowStatistics } from "@/lib/statistics/row-statistics";
 
 /** All that the verdict needs of one per-row channel. */
 export interface ChannelEvidence {
@@ -17,9 +17,10 @@ export function channelEvidence(
   id: string,
   given: { distances: Float32Array; statistics?: ReadonlyMap<string, RowStatistics> },
 ): ChannelEvidence | null {
-  const channel = resolveChannel(placed, id);
-  if (!channel || !channel.perRow) return null;
-  return { channel, statistics: given.statistics?.get(id) ?? rowStatistics(placed, id, given) };
+  const known = given.statistics?.get(id);
+  const channel = known ? known.readings : resolveChannel(placed, id);
+  if (!channel?.perRow) return null;
+  return { channel, statistics: known ?? describeRows(placed, channel, given.distances) };
 }
 
 export interface RowStep {

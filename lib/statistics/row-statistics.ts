@@ -44,6 +44,8 @@ export interface RowStatisticsItem {
 
 export interface RowStatistics {
   channel: string;
+  /** What was described. */
+  readings: ResolvedChannel;
   unit: string;
   items: RowStatisticsItem[];
   /** Typical deviation of each row from the others less the median over rows, in the unit; NaN where unknown. */
@@ -61,8 +63,6 @@ export const FLAG_DEVIATION_SHARE = 0.05;
 
 /**
  * Statistics of every row in one channel, row 1 first; one item for a channel logged once for the whole machine.
- * `deviationZ` is the robust score of `scoreRows`; a row is flagged where it exceeds 3.5 either way and the deviation is
- * more than 5 % of the median of all rows.
  * @throws AppError unprocessable where the log cannot give the channel.
  */
 export function rowStatistics(
@@ -72,8 +72,14 @@ export function rowStatistics(
 ): RowStatistics {
   const resolved = resolveChannelOrReason(placed, channelId);
   if (!resolved.ok) throw new AppError("unprocessable", resolved.error, { detailCode: "channel_not_available" });
-  const channel = resolved.value;
-  const distances = options.distances ?? rowDistances(placed);
+  return describeRows(placed, resolved.value, options.distances ?? rowDistances(placed));
+}
+
+/**
+ * The same of a channel that stands already, with the distances of `rowDistances`. `deviationZ` is the robust score of
+ * `scoreRows`; a row is flagged where it exceeds 3.5 either way and the deviation is more than 5 % of the median of all rows.
+ */
+export function describeRows(placed: PlacedLog, channel: ResolvedChannel, distances: Float32Array): RowStatistics {
   const middles = channel.perRow ? middleReadings(channel.values, channel.rows) : null;
   const room = emptySeries(placed.log.records);
   const found = mapRowSeries(placed, channel, distances, (series, row) => ({
@@ -95,7 +101,7 @@ export function rowStatistics(
   }));
   const { wheelTrackRows, deviation: deviations } = scores;
   const { censoredShare } = channel;
-  const ofChannel = { channel: channelId, unit: channel.unit, censoredShare };
+  const ofChannel = { channel: channel.id, readings: channel, unit: channel.unit, censoredShare };
   return { ...ofChannel, items, deviations, medianOfRows, wheelTrackRows, middles };
 }
 

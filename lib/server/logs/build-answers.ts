@@ -1,5 +1,5 @@
 import { buildLog, type BuiltLog } from "@/lib/build/build-log";
-import { resolveChannel } from "@/lib/channels/resolve-channel";
+import { resolveChannel, type ResolvedChannel } from "@/lib/channels/resolve-channel";
 import { measureCoverage } from "@/lib/coverage/measure-coverage";
 import { passVerdict } from "@/lib/findings/pass-verdict";
 import type { ReadLog } from "@/lib/ingest/log-format";
@@ -11,7 +11,7 @@ import type { Boundary } from "@/lib/schemas/geometry";
 import type { BuiltAnswers } from "@/lib/server/logs/built-answers";
 import { describePassBodies, describePlacedLog } from "@/lib/server/logs/describe-placed-log";
 import { LogFailure } from "@/lib/server/logs/log-failure";
-import { rowStatistics, type RowStatistics } from "@/lib/statistics/row-statistics";
+import { describeRows, type RowStatistics } from "@/lib/statistics/row-statistics";
 
 /** Said while the work goes on; `progress` is the share of the whole log that is done. */
 export type TellProgress = (stage: string, progress: number) => void;
@@ -29,9 +29,9 @@ export function packPlacedLog({ plane, ...placed }: PlacedLog): PackedPlacedLog 
 }
 
 /** Logged channels of a log, and opener resistance where it can be had. */
-function describedChannels(placed: PlacedLog): string[] {
-  const logged = placed.log.channels.map((channel) => channel.id as string);
-  return resolveChannel(placed, "resistance") ? [...logged, "resistance"] : logged;
+function describedChannels(placed: PlacedLog): ResolvedChannel[] {
+  const ids = [...placed.log.channels.map((channel) => channel.id), "resistance"];
+  return ids.map((id) => resolveChannel(placed, id)).filter((channel) => channel !== null);
 }
 
 /** The answers that are stored with a version: passes, rows of every channel, coverage, verdict. */
@@ -46,13 +46,14 @@ export function buildAnswers(
   const statistics = new Map<string, RowStatistics>();
   channels.forEach((channel, order) => {
     tell("Working out what each row did", 0.55 + (0.2 * order) / channels.length);
-    const known = rowStatistics(placed, channel, { distances });
-    statistics.set(channel, known);
-    results.push({ kind: `rows:${channel}`, body: { channel, unit: known.unit, items: known.items } });
+    const known = describeRows(placed, channel, distances);
+    statistics.set(channel.id, known);
+    results.push({ kind: `rows:${channel.id}`, body: { channel: channel.id, unit: known.unit, items: known.items } });
   });
   tell("Measuring the ground covered", 0.76);
   results.push({ kind: "coverage", body: measureCoverage(placed, { distances, boundary }) });
   tell("Saying what stands out", 0.8);
   results.push({ kind: "verdict", body: passVerdict(placed, { distances, statistics }) });
-  return { notes, summary: describePlacedLog(placed, notes), results };
+  const resistance = channels.find((channel) => channel.id === "resistance") ?? null;
+  return { notes, summary: describePlacedLog(placed, notes, resistance), results };
 }

@@ -1,4 +1,4 @@
-import { resolveChannel } from "@/lib/channels/resolve-channel";
+import type { ResolvedChannel } from "@/lib/channels/resolved-channel";
 import type { LogNote } from "@/lib/logs/machine-log";
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import type { Log, PassBody } from "@/lib/schemas/logs";
@@ -9,8 +9,9 @@ function measureRange(values: Float32Array): { min: number | null; max: number |
   let min = Infinity;
   let max = -Infinity;
   let n = 0;
-  for (const value of values) {
-    if (!Number.isFinite(value)) continue;
+  for (let i = 0; i < values.length; i++) {
+    const value = values[i]!;
+    if (!(Math.abs(value) < Infinity)) continue;
     n += 1;
     if (value < min) min = value;
     if (value > max) max = value;
@@ -55,8 +56,12 @@ function timeSpan(placed: PlacedLog): { startedAt: Date | null; endedAt: Date | 
 /** Notes of the reader about records it left out; their count is the log's `rejected`. */
 const REJECTED_NOTES = /reject|ragged|skipped|duplicate-record/;
 
-/** What the log's row in the database tells about it. */
-export function describePlacedLog(placed: PlacedLog, notes: readonly LogNote[]): BuiltAnswers["summary"] {
+/** What the log's row in the database tells about it; `resistance` where the log can give it. */
+export function describePlacedLog(
+  placed: PlacedLog,
+  notes: readonly LogNote[],
+  resistance: ResolvedChannel | null,
+): BuiltAnswers["summary"] {
   const { log } = placed;
   const ranges = log.channels.map((channel) => ({ channel, ...measureRange(channel.values) }));
   const channels = ranges.map(({ channel, min, max }) => ({
@@ -66,7 +71,6 @@ export function describePlacedLog(placed: PlacedLog, notes: readonly LogNote[]):
     max,
     perRow: channel.perRow,
   }));
-  const resistance = resolveChannel(placed, "resistance");
   if (resistance) {
     const { min, max } = measureRange(resistance.values);
     if (min !== null) channels.push({ id: "resistance", unit: resistance.unit, min, max, perRow: true });
