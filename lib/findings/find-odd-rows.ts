@@ -68,21 +68,31 @@ function sideBySide(rows: number[]): number[][] {
   return runs;
 }
 
-const WORDING: Record<string, { below: string; above: string; check: string }> = {
+interface RowWords {
+  below: string;
+  above: string;
+  /** What of the row may be at fault. */
+  parts: string;
+  check: string;
+}
+
+const WORDING: Record<string, RowWords> = {
   margin: {
-    below: "Row {row} carried {difference} less on its gauge wheel than its neighbours on {share} of the distance.",
-    above: "Row {row} carried {difference} more on its gauge wheel than its neighbours on {share} of the distance.",
-    check: "Check its disc and bushing, its gauge wheel and arm, and that its margin sensor reads about 0 when raised.",
+    below: "Row {row} carried {difference} less on its gauge wheel than the other rows on {share} of the distance.",
+    above: "Row {row} carried {difference} more on its gauge wheel than the other rows on {share} of the distance.",
+    parts: "disc, bushing, gauge wheel and sensor",
+    check: "Check its disc, bushing, gauge wheel and arm, and that its margin sensor reads about 0 when raised.",
   },
   downforce: {
-    below: "Row {row} was pushed down {difference} less than its neighbours on {share} of the distance.",
-    above: "Row {row} was pushed down {difference} harder than its neighbours on {share} of the distance.",
-    check:
-      "Check its disc and bushing, its hose and cylinder, and compare its sensor with a neighbour's by swapping them.",
+    below: "Row {row} was pushed down {difference} less than the other rows on {share} of the distance.",
+    above: "Row {row} was pushed down {difference} harder than the other rows on {share} of the distance.",
+    parts: "disc, bushing, cylinder and sensor",
+    check: "Check its disc, bushing, hose and cylinder, and compare its sensor with a neighbour's by swapping them.",
   },
   resistance: {
-    below: "Row {row} needed {difference} less to open its furrow than its neighbours on {share} of the distance.",
-    above: "Row {row} needed {difference} more to open its furrow than its neighbours on {share} of the distance.",
+    below: "Row {row} needed {difference} less to open its furrow than the other rows on {share} of the distance.",
+    above: "Row {row} needed {difference} more to open its furrow than the other rows on {share} of the distance.",
+    parts: "disc, bushing and row cleaner",
     check: "Check its disc, bushing and row cleaner, then dig behind it and behind a neighbour.",
   },
 };
@@ -101,7 +111,7 @@ function sayRow(
   return makeFinding({
     kind: "row-stands-out",
     severity: large && !fewPasses ? "act" : "look",
-    sentenceTemplate: `${step.deviation < 0 ? words.below : words.above} ${shortCheck(words.check)}${doubt}`,
+    sentenceTemplate: `${step.deviation < 0 ? words.below : words.above} Check its ${words.parts}: which of them, this log cannot tell.${doubt}`,
     values: {
       row: { value: row, unit: "1" },
       difference: { value: Math.abs(step.deviation), unit: evidence.channel.unit },
@@ -113,7 +123,7 @@ function sayRow(
     confidence: fewPasses ? "low" : input.placed.passes.length < 8 ? "medium" : "high",
     method: ODD_ROW_METHOD,
     place: worstPlace(input, row),
-    check: `${words.check} A row that stands out everywhere is consistent with wear, a blockage or a sensor; this log cannot tell which.`,
+    check: words.check,
     caution: pushed ? `${CAUTIONS.underMachine} ${CAUTIONS.hydraulics}` : CAUTIONS.underMachine,
     row,
   });
@@ -125,11 +135,6 @@ function intervalAbout(value: number, byPass: number[]): [number, number] | null
   if (!interval) return null;
   const mean = byPass.reduce((sum, each) => sum + each, 0) / byPass.length;
   return [value + interval[0] - mean, value + interval[1] - mean];
-}
-
-/** The first thing to look at, for the sentence: everything up to the first comma. */
-function shortCheck(check: string): string {
-  return `${check.split(",")[0]!}.`;
 }
 
 /** The longest stretch under target where there is one, else the row's whole line. */
