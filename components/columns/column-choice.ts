@@ -49,8 +49,11 @@ export function readMissing(text: string): number[] | null {
 }
 
 function fromProposal(column: FoundColumn): ColumnChoice {
-  const { proposal } = column;
-  if (!proposal) return UNDECIDED;
+  const { proposal, hint } = column;
+  if (!proposal) {
+    const unit = hint?.unit !== undefined && isUnitId(hint.unit) ? hint.unit : null;
+    return { ...UNDECIDED, unit, row: hint?.row ?? null };
+  }
   return {
     use: "channel",
     // The reply's schema says string; ids come from the same table.

@@ -57,7 +57,8 @@ export function changeColumns(before: Layout, names: readonly string[], patch: P
   const { channel } = patch;
   const isNewMeaning = patch.use === "channel" && channel != null && isRowable(channel);
   const numbered = isNewMeaning ? numberRows(choices, channel) : choices;
-  const isWide = typeof patch.row === "number" || numbered !== choices;
+  const hasRows = isNewMeaning && names.some((name) => numbered[name]?.row != null);
+  const isWide = typeof patch.row === "number" || hasRows || numbered !== choices;
   return { shape: isWide ? "wide" : before.shape, choices: numbered };
 }
 

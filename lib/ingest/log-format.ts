@@ -31,8 +31,16 @@ export interface FoundColumn {
   min: number | null;
   max: number | null;
   proposal: ColumnProposal | null;
+  /** Said by the header of a column whose meaning is unknown. */
+  hint?: ColumnHint;
   /** The proposal as a sentence for a person. */
   words: string;
+}
+
+/** Unit and row that a header names though not what the column is. */
+export interface ColumnHint {
+  unit?: UnitId;
+  row?: number;
 }
 
 /** One of several logs in a file. Its columns are there so that a person can choose without the file being read again. */

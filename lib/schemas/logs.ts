@@ -92,6 +92,8 @@ export const FoundColumnBody = z.object({
   min: NullableNumber,
   max: NullableNumber,
   proposal: ColumnProposal.nullable(),
+  /** Unit and row that the header names though not what the column is. */
+  hint: z.object({ unit: z.string().optional(), row: z.number().int().optional() }).optional(),
   /** The proposal as a sentence a person can check. */
   words: z.string(),
 });

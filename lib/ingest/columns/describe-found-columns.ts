@@ -2,6 +2,7 @@ import { checkPositions } from "@/lib/ingest/columns/check-positions";
 import { checkMeanings } from "@/lib/ingest/columns/check-meanings";
 import { describeProposal } from "@/lib/ingest/columns/describe-column";
 import { guessColumns } from "@/lib/ingest/columns/guess-columns";
+import { hintColumns } from "@/lib/ingest/columns/hint-columns";
 import { offerSystems } from "@/lib/ingest/columns/offer-systems";
 import { summariseCells } from "@/lib/ingest/columns/summarise-cells";
 import type { ColumnProposal, CrsCandidate, FoundColumn, InspectOptions } from "@/lib/ingest/log-format";
@@ -39,11 +40,13 @@ export function describeFoundColumns(sampled: SampledColumns): {
   checkMeanings(proposals, summaries, { notes: sampled.notes, known: sampled.known ?? [] });
   const crsCandidates = sampled.crs === undefined ? offerSystems(proposals, summaries, sampled) : [];
   sampled.notes.set("unknown-unit", proposals.filter((proposal) => proposal?.unit === null).length);
+  const hints = hintColumns(evidence, proposals);
   const columns = evidence.map(({ name, summary }, index) => {
     const proposal = proposals[index] ?? null;
     const { sample, min, max } = summary;
     const words = describeProposal({ name, sample }, proposal, { decimalComma });
-    return { name, index, sample, min, max, proposal, words };
+    const hint = hints[index];
+    return { name, index, sample, min, max, proposal, ...(hint ? { hint } : {}), words };
   });
   return { columns, shape, ...(crsCandidates.length === 0 ? {} : { crsCandidates }) };
 }

@@ -43,6 +43,8 @@ function guessColumn(column: ColumnEvidence): ColumnProposal | null {
   const inRow = readRowNumber(tokens);
   const named = nameChannel(inRow?.rest ?? tokens) ?? nameChannel(tokeniseHeader(column.name));
   if (!named || column.summary.filled === 0) return null;
+  // "sensor row 1" is something of row 1, not a column of row numbers.
+  if (named.channel === "row" && inRow?.isNamed) return null;
   const { missing, ...summary } = setAsideSentinels(column.summary);
   const { unit, format, trust, reason } = guessUnit(named.channel, unitWord, {
     summary,

@@ -1,4 +1,5 @@
-import type { ChannelId } from "@/lib/logs/channel";
+import { OTHER_LANGUAGES } from "@/lib/ingest/columns/other-languages";
+import type { ChannelId, KnownChannel } from "@/lib/logs/channel";
 
 interface NameRule {
   channel: ChannelId;
@@ -9,7 +10,7 @@ interface NameRule {
 }
 
 /** Words of headers, most telling first: the first rule that fits is taken. Words of the trade only. */
-const RULES: readonly NameRule[] = [
+const ENGLISH: readonly NameRule[] = [
   { channel: "longitude", words: ["longitude", "lon", "long", "lng"], weight: 0.95 },
   { channel: "latitude", words: ["latitude", "lat"], weight: 0.95 },
   { channel: "easting", words: ["easting", "east", "utm e", "utm x", "point x"], weight: 0.9 },
@@ -87,10 +88,20 @@ const RULES: readonly NameRule[] = [
   },
   { channel: "pass", words: ["pass number", "pass no", "pass"], weight: 0.85 },
   { channel: "row", words: ["row number", "row no", "row unit", "row", "opener", "unit number"], weight: 0.85 },
+  // German for length and width too, so a person looks.
+  { channel: "longitude", words: ["lange", "laenge"], weight: 0.5 },
+  { channel: "latitude", words: ["breite"], weight: 0.5 },
   { channel: "longitude", words: ["x"], weight: 0.5 },
   { channel: "latitude", words: ["y"], weight: 0.5 },
   { channel: "margin", words: ["load"], weight: 0.5 },
 ];
+
+/** The first rule of a channel knows the other languages' words for it. */
+const RULES: readonly NameRule[] = ENGLISH.map((rule) => {
+  const isFirst = ENGLISH.find(({ channel }) => channel === rule.channel) === rule;
+  const others = isFirst ? (OTHER_LANGUAGES[rule.channel as KnownChannel] ?? []) : [];
+  return { ...rule, words: [...rule.words, ...others] };
+});
 
 export interface NamedChannel {
   channel: ChannelId;

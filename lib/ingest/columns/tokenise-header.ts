@@ -1,6 +1,11 @@
-/** Lower-case words of a header: split at marks, at capitals inside a word, and between letters and digits. */
+import { ROW_WORDS_ELSEWHERE } from "@/lib/ingest/columns/other-languages";
+
+/** Lower-case words of a header, without accents: split at marks, at capitals inside a word, and between letters and digits. */
 export function tokeniseHeader(header: string): string[] {
   return header
+    .normalize("NFD")
+    .replace(/\p{Mn}/gu, "")
+    .replace(/ß/g, "ss")
     .replace(/([a-z])([A-Z])/g, "$1 $2")
     .replace(/([A-Z]+)([A-Z][a-z])/g, "$1 $2")
     .replace(/([A-Za-z])(\d)/g, "$1 $2")
@@ -10,7 +15,7 @@ export function tokeniseHeader(header: string): string[] {
     .filter((token) => token !== "");
 }
 
-const ROW_WORDS = new Set(["row", "r", "rw", "unit", "ru", "opener"]);
+const ROW_WORDS = new Set(["row", "r", "rw", "unit", "ru", "opener", ...ROW_WORDS_ELSEWHERE]);
 
 export interface RowInHeader {
   row: number;

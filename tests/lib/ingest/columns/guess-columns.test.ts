@@ -45,6 +45,59 @@ describe("proposals from header words and values", () => {
     expect(await proposalOf(header, cells)).toMatchObject({ channel, unit });
   });
 
+  it.each([
+    ["Geschwindigkeit (km/h)", ["8.1", "8.3"], "speed", "km/h"],
+    ["Tiefe [cm]", ["4.5", "5"], "depth", "cm"],
+    ["Kurs (°)", ["181.2", "12"], "heading", "deg"],
+    ["Stützlast (daN)", ["31", "29"], "margin", "daN"],
+    ["Profondeur (mm)", ["45", "50"], "depth", "mm"],
+    ["Vitesse (m/s)", ["2.1", "2.3"], "speed", "m/s"],
+    ["Humidité (%)", ["15.5", "16"], "moisture", "percent"],
+    ["Profundidad (cm)", ["4.5", "5"], "depth", "cm"],
+    ["Velocidad (km/h)", ["8.1", "8.3"], "speed", "km/h"],
+  ])("other languages: %s", async (header, cells, channel, unit) => {
+    expect(await proposalOf(header, cells)).toMatchObject({ channel, unit });
+  });
+
+  it.each(["Längengrad;Breitengrad", "Longitud;Latitud", "Länge (°);Breite (°)"])("positions: %s", async (headers) => {
+    const inspection = await mustInspect(textSource(`${headers};N\n-98.6;38.4;1\n-98.7;38.5;2\n`));
+    const channels = inspection.columns.slice(0, 2).map((column) => column.proposal?.channel);
+    expect(channels).toEqual(["longitude", "latitude"]);
+  });
+
+  it.each([
+    ["Schardruck Reihe 1 (kgf),Schardruck Reihe 2 (kgf)", "downforce", "kgf"],
+    ["force d'appui rang 1 (daN),force d'appui rang 2 (daN)", "downforce", "daN"],
+    ["Profundidad surco 01 (mm),Profundidad surco 02 (mm)", "depth", "mm"],
+  ])("rows in other languages: %s", async (headers, channel, unit) => {
+    const inspection = await mustInspect(textSource(`lon,lat,${headers}\n${PLACE},45,46\n${PLACE},44,47\n`));
+    const proposals = inspection.columns.slice(2).map((column) => column.proposal);
+    expect(proposals).toMatchObject([
+      { channel, unit, row: 1 },
+      { channel, unit, row: 2 },
+    ]);
+    expect(inspection.shape).toBe("wide");
+  });
+
+  it("says unit and row of a column whose meaning it does not know", async () => {
+    const headers = "Ukwaa 01 (kgf),Ukwaa 02 (kgf),zork rang 0,zork rang 1,Lone 7 [cm],plain";
+    const inspection = await mustInspect(
+      textSource(`lon,lat,${headers}\n${PLACE},1,2,3,4,5,6\n${PLACE},2,3,4,5,6,7\n`),
+    );
+    const columns = inspection.columns.slice(2);
+    expect(columns.map((column) => column.proposal?.channel)).toEqual(
+      expect.not.arrayContaining(["downforce", "depth", "margin"]),
+    );
+    expect(columns.map((column) => column.hint)).toEqual([
+      { unit: "kgf", row: 1 },
+      { unit: "kgf", row: 2 },
+      { row: 1 },
+      { row: 2 },
+      { unit: "cm" },
+      undefined,
+    ]);
+  });
+
   it("guesses no unit that nothing names", async () => {
     for (const header of ["downforce", "downforce (clicks)", "margin", "depth", "speed"]) {
       const proposal = await proposalOf(header, ["12", "13"]);

@@ -1,0 +1,63 @@
+import type { KnownChannel } from "@/lib/logs/channel";
+
+/** Header words of the trade in German, French and Spanish, as `tokeniseHeader` leaves them: lower case, without accents. */
+export const OTHER_LANGUAGES: Partial<Record<KnownChannel, readonly string[]>> = {
+  longitude: ["langengrad", "laengengrad", "geographische lange", "geografische lange", "longitud"],
+  latitude: ["breitengrad", "geographische breite", "geografische breite", "latitud"],
+  easting: ["rechtswert", "ostwert", "este"],
+  northing: ["hochwert", "nordwert", "nord", "norte"],
+  heading: ["kurs", "fahrtrichtung", "kurswinkel", "cap", "azimut", "rumbo"],
+  speed: ["geschwindigkeit", "fahrgeschwindigkeit", "vitesse", "velocidad"],
+  margin: [
+    "stutzlast",
+    "stuetzlast",
+    "tiefenfuhrungsrad",
+    "tiefenfuehrungsrad",
+    "radlast",
+    "roue de jauge",
+    "charge de roue",
+    "rueda de control",
+    "carga de la rueda",
+  ],
+  contact: ["bodenkontakt", "bodenschluss", "contact au sol", "contacto", "contacto con el suelo"],
+  downforce: [
+    "schardruck",
+    "anpressdruck",
+    "anpresskraft",
+    "scharkraft",
+    "auflagedruck",
+    "force d appui",
+    "appui",
+    "pression d enterrage",
+    "carga vertical",
+    "fuerza",
+    "fuerza descendente",
+    "presion de siembra",
+  ],
+  depth: ["tiefe", "ablagetiefe", "saattiefe", "profondeur", "profundidad"],
+  population: [
+    "aussaatstarke",
+    "aussaatstaerke",
+    "kornzahl",
+    "bestandesdichte",
+    "densite de semis",
+    "densite",
+    "peuplement",
+    "densidad de siembra",
+    "densidad",
+    "poblacion",
+  ],
+  moisture: ["feuchte", "feuchtigkeit", "kornfeuchte", "humidite", "humedad"],
+  yieldFlow: ["durchsatz", "kornstrom", "debit", "flujo", "caudal"],
+  yieldMass: ["ertrag", "rendement", "rendimiento"],
+  swathWidth: ["arbeitsbreite", "schnittbreite", "largeur", "largeur de travail", "ancho", "ancho de trabajo"],
+  interval: ["intervall", "zeitschritt", "intervalle", "intervalo"],
+  time: ["zeit", "zeitstempel", "uhrzeit", "datum", "heure", "temps", "horodatage", "hora", "fecha", "tiempo"],
+  distance: ["entfernung", "strecke", "weg", "distancia"],
+  working: ["arbeitsstellung", "arbeitszustand", "ausgehoben", "etat de travail", "en travail", "trabajando"],
+  pass: ["uberfahrt", "ueberfahrt", "spur", "passage", "pasada"],
+  row: ["reihe", "reihennummer", "schar", "rang", "fila", "hilera", "surco"],
+};
+
+/** Words that stand before the number of a row. */
+export const ROW_WORDS_ELSEWHERE = ["reihe", "schar", "rang", "fila", "hilera", "surco"] as const;
