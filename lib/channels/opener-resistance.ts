@@ -1,3 +1,4 @@
+import { commonStep } from "@/lib/channels/common-step";
 import type { ResolvedChannel } from "@/lib/channels/resolved-channel";
 import type { LogChannel } from "@/lib/logs/machine-log";
 import type { PlacedLog } from "@/lib/logs/placed-log";
@@ -44,7 +45,7 @@ export function openerResistance(placed: PlacedLog): Result<ResolvedChannel, str
       else censored++;
     }
   }
-  const resolution = Math.max(downforce.resolution ?? 0, margin.resolution ?? 0) || null;
+  const resolution = commonStep(downforce.resolution, margin.resolution);
   return succeed({
     id: "resistance",
     unit: "N",

@@ -34,5 +34,8 @@ function deviationChannel(placed: PlacedLog, channelId: AnyChannelId): Result<Re
   if (!base.value.perRow || base.value.rows < 2) {
     return fail(`"${base.value.id}" is logged once for the whole machine, so rows cannot be compared.`);
   }
-  return succeed({ ...base.value, id: channelId, values: deviationFromOthers(base.value.values, base.value.rows) });
+  const { values, rows, resolution } = base.value;
+  // The median of an even number of readings may lie half a step between two of them.
+  const step = resolution === null ? null : resolution / 2;
+  return succeed({ ...base.value, id: channelId, values: deviationFromOthers(values, rows), resolution: step });
 }

@@ -31,7 +31,7 @@ describe("opener resistance", () => {
     const resistance = resolveChannel(place({ records, channels }, MACHINE), "resistance");
     expect(Array.from(resistance!.values.slice(40, 44))).toEqual([1250, 1250, NaN, NaN]);
     expect(resistance!.censoredShare).toBeCloseTo(1 / 3, 9);
-    expect(resistance!.resolution).toBe(5);
+    expect(resistance!.resolution).toBe(1);
   });
 
   it("says what is missing", () => {
