@@ -14,8 +14,15 @@ export interface FrameBalance {
   shareLiftedM2: number | null;
   /** Equal force on every row at which the wheels come off the ground. */
   liftOffForcePerRowN: number | null;
-  /** Records of the longest stretch with the frame lifted. */
-  longestLift: { firstRecord: number; lastRecord: number; lengthM: number } | null;
+  /** Records of every stretch with the frame lifted, in the log's order. */
+  lifts: Lift[];
+}
+
+/** A stretch of one pass with the frame lifted. */
+export interface Lift {
+  firstRecord: number;
+  lastRecord: number;
+  lengthM: number;
 }
 
 /** The frame counts as lifted when its wheels carry less than this share of what they carry with the openers up. */
@@ -56,7 +63,7 @@ export function measureFrameBalance(placed: PlacedLog, distances: Float32Array):
     ...(downforce ? [] : ["the force applied to each row (in newtons)"]),
   ];
   const liftOffForcePerRowN = frame ? liftOffForceN(frame, placed.geometry.rows) : null;
-  const unknown = { headroomN: null, shareLiftedM2: null, liftOffForcePerRowN, longestLift: null };
+  const unknown = { headroomN: null, shareLiftedM2: null, liftOffForcePerRowN, lifts: [] };
   if (!frame || !downforce) return { state: "unknown", missing, ...unknown };
   const loads = wheelLoads(placed, frame, downforce.values);
   const areas = workedAreas(placed, distances);
@@ -75,7 +82,7 @@ export function measureFrameBalance(placed: PlacedLog, distances: Float32Array):
     headroomN,
     shareLiftedM2: lift.share,
     liftOffForcePerRowN,
-    longestLift: lift.longest,
+    lifts: lift.lifts,
   };
 }
 
@@ -107,15 +114,11 @@ function workedAreas(placed: PlacedLog, distances: Float32Array): Float32Array {
   });
 }
 
-function measureLift(
-  placed: PlacedLog,
-  lifted: Float32Array,
-  areas: Float32Array,
-): { share: number; longest: FrameBalance["longestLift"] } {
+function measureLift(placed: PlacedLog, lifted: Float32Array, areas: Float32Array): { share: number; lifts: Lift[] } {
   let liftedM2 = 0;
   let total = 0;
-  let open: FrameBalance["longestLift"] = null;
-  let longest: FrameBalance["longestLift"] = null;
+  let open: Lift | null = null;
+  const lifts: Lift[] = [];
   const widthM = placed.geometry.widthM.reduce((sum, width) => sum + width, 0);
   for (let record = 0; record < lifted.length; record++) {
     if (Number.isNaN(lifted[record]!)) continue;
@@ -126,10 +129,12 @@ function measureLift(
     }
     liftedM2 += areas[record]!;
     const follows = open?.lastRecord === record - 1 && placed.passOf[record] === placed.passOf[record - 1];
-    if (!open || !follows) open = { firstRecord: record, lastRecord: record, lengthM: 0 };
+    if (!open || !follows) {
+      open = { firstRecord: record, lastRecord: record, lengthM: 0 };
+      lifts.push(open);
+    }
     open.lastRecord = record;
     open.lengthM += areas[record]! / widthM;
-    if (!longest || open.lengthM > longest.lengthM) longest = open;
   }
-  return { share: total > 0 ? liftedM2 / total : 0, longest };
+  return { share: total > 0 ? liftedM2 / total : 0, lifts };
 }

@@ -44,7 +44,7 @@ export function doubtReadings(input: VerdictInput): { findings: Finding[]; judge
 }
 
 function unknownBalance({ balance }: VerdictInput): VerdictInput["balance"] {
-  const nothing = { headroomN: null, shareLiftedM2: null, longestLift: null };
+  const nothing = { headroomN: null, shareLiftedM2: null, lifts: [] };
   return { ...balance, ...nothing, state: "unknown", missing: ["force readings that this machine can apply"] };
 }
 

@@ -1,7 +1,7 @@
 import { CAUTIONS } from "@/lib/findings/cautions";
 import type { Finding } from "@/lib/findings/finding";
 import { makeFinding } from "@/lib/findings/make-finding";
-import { stretchPlace } from "@/lib/findings/place-lines";
+import { stretchesPlace } from "@/lib/findings/place-lines";
 import { rowsFrom, VERDICT_THRESHOLDS, type VerdictInput } from "@/lib/findings/verdict-input";
 
 const METHOD =
@@ -33,7 +33,7 @@ function sayShort({ placed, balance }: VerdictInput, headroomN: { p05: number; p
     value: headroomN.p05,
     unit: "N",
     method: METHOD,
-    place: stretchPlace(placed, Math.ceil(placed.geometry.rows / 2), balance.longestLift),
+    place: stretchesPlace(placed, Math.ceil(placed.geometry.rows / 2), balance.lifts),
     check:
       "Watch the frame's height while it runs there, and check the ballast against the manual and the dealer's advice.",
     caution: CAUTIONS.ballast,

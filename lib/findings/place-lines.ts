@@ -9,14 +9,14 @@ const MAX_CORNERS = 60;
 export function rowLine(
   placed: PlacedLog,
   row: number,
-  span: { firstRecord: number; lastRecord: number },
+  span: { firstRecord: number; lastRecord: number; maxCorners?: number },
 ): [number, number][] | null {
   const records: number[] = [];
   const from = span.firstRecord === span.lastRecord ? Math.max(0, span.firstRecord - 1) : span.firstRecord;
   for (let record = from; record <= span.lastRecord; record++) {
     if (Number.isFinite(placed.originEastM[record]!)) records.push(record);
   }
-  const step = Math.max(1, Math.ceil(records.length / MAX_CORNERS));
+  const step = Math.max(1, Math.ceil(records.length / (span.maxCorners ?? MAX_CORNERS)));
   const kept = records.filter((_, k) => k % step === 0 || k === records.length - 1);
   if (kept.length < 2) return null;
   return kept.map(
@@ -31,6 +31,24 @@ export function stretchPlace(
 ): FindingPlace | null {
   const line = span && rowLine(placed, row, span);
   return line ? { type: "LineString", coordinates: line } : null;
+}
+
+/** Of many stretches so many are drawn, the longest first, each with few corners: a map shows no more. */
+const MAX_STRETCHES = 50;
+const MAX_STRETCH_CORNERS = 12;
+
+/** Where a row ran on the longest of some stretches, the longest first; null without any. */
+export function stretchesPlace(
+  placed: PlacedLog,
+  row: number,
+  spans: readonly { firstRecord: number; lastRecord: number; lengthM: number }[],
+): FindingPlace | null {
+  const longest = [...spans].sort((a, b) => b.lengthM - a.lengthM).slice(0, MAX_STRETCHES);
+  const lines = longest.flatMap((span) => {
+    const line = rowLine(placed, row, { ...span, maxCorners: MAX_STRETCH_CORNERS });
+    return line ? [line] : [];
+  });
+  return lines.length > 0 ? { type: "MultiLineString", coordinates: lines } : null;
 }
 
 /** Where a row ran over the whole log: one line a pass. */
