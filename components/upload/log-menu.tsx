@@ -42,18 +42,18 @@ export function LogMenu({ log, fieldPath, role, actions }: LogMenuProps) {
         {can(role, "logs.upload") && log.status === "failed" ? (
           <MenuItem onSelect={() => actions.retry.mutate(log.id)}>Read it again</MenuItem>
         ) : null}
-        {can(role, "logs.delete") ? (
+        {log.removable ? (
           <>
             <MenuRule />
-            <MenuItem onSelect={() => setAsking(true)}>Delete…</MenuItem>
+            <MenuItem onSelect={() => setAsking(true)}>Remove…</MenuItem>
           </>
         ) : null}
       </Menu>
       <ConfirmDialog
         open={asking}
         onOpenChange={setAsking}
-        title={`Delete ${log.name}?`}
-        confirmWords="Delete the log"
+        title={`Remove ${log.name}?`}
+        confirmWords="Remove the log"
         onConfirm={() => actions.remove.mutate(log.id)}
       >
         <p>The original file and everything worked out from it go. This cannot be taken back.</p>

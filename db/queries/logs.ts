@@ -2,6 +2,7 @@ import { and, desc, eq, isNull, ne, sql, type SQL } from "drizzle-orm";
 import type { Transaction } from "@/db/client";
 import { visibleLog } from "@/db/queries/visibility";
 import { fields, logs, machines } from "@/db/schema";
+import { can } from "@/lib/access/permissions";
 import { AppError } from "@/lib/errors";
 import type { Machine } from "@/lib/machines/machine";
 import { cursorInstant, decodeCursor, pageOf } from "@/lib/paging/cursor";
@@ -127,6 +128,17 @@ export async function changeLog(
     .update(logs)
     .set({ ...change, updatedAt: new Date() })
     .where(and(eq(logs.organisationId, scope.organisationId), eq(logs.id, logId)));
+}
+
+/** Whether the caller may delete this log: any, or their own upload while nothing was ever read from it. */
+export async function isLogRemovable(tx: Transaction, scope: Scope, logId: string): Promise<boolean> {
+  const own = and(eq(logs.uploadedBy, scope.userId), eq(logs.version, 0), ne(logs.status, "ready"));
+  const rows = await tx
+    .select({ id: logs.id })
+    .from(logs)
+    .where(and(isVisible(scope), eq(logs.id, logId), can(scope.role, "logs.delete") ? undefined : own))
+    .for("update");
+  return rows.length > 0;
 }
 
 /** Asks the worker to stop; false when nothing is going on. */

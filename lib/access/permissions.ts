@@ -13,6 +13,8 @@ export const PERMISSIONS = {
   "logs.map": ["owner", "agronomist", "operator"],
   "logs.export": ["owner", "agronomist", "researcher"],
   "logs.delete": ["owner", "agronomist"],
+  /** One's own upload, while nothing was ever read from it; any log with `logs.delete`. */
+  "logs.remove": ["owner", "agronomist", "operator"],
   "recipes.read": ["owner", "agronomist", "researcher", "operator"],
   "shares.read": ["owner", "agronomist"],
   "shares.write": ["owner", "agronomist"],

@@ -61,6 +61,8 @@ export const Log = z.object({
   /** Grows with every new mapping or machine; part of tile addresses. */
   version: z.number().int(),
   createdAt: Instant,
+  /** Whether whoever asks may delete it. */
+  removable: z.boolean().optional(),
 });
 export type Log = z.infer<typeof Log>;
 export const LogList = listOf(Log);

@@ -62,9 +62,11 @@ export const logOperations: Operation[] = [
     method: "DELETE",
     path: "/api/v1/logs/{logId}",
     tag,
-    permission: "logs.delete",
+    permission: "logs.remove",
     summary: "Delete a log with everything derived from it",
+    description: "An operator may delete their own uploads that were never read; owners and agronomists any log.",
     replies: [{ status: 204, description: "Gone" }],
+    errors: ["conflict"],
   },
   {
     method: "GET",

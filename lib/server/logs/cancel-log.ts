@@ -26,7 +26,7 @@ export async function cancelLog(_container: Container, scope: Scope, logId: stri
       await endJobs(tx, scope, { subject: logId, state: "cancelled" });
     }
     await recordAudit(tx, scope, { action: "log.cancel", subject: logId });
-    return describeLog(await getLogOrThrow(tx, scope, logId));
+    return describeLog(await getLogOrThrow(tx, scope, logId), scope);
   });
 }
 
@@ -37,7 +37,7 @@ export async function retryLog(container: Container, scope: Scope, logId: string
     await changeLog(tx, scope, logId, QUEUED);
     await noteReadLog(tx, scope, logId);
     await recordAudit(tx, scope, { action: "log.retry", subject: logId });
-    return describeLog(await getLogOrThrow(tx, scope, logId));
+    return describeLog(await getLogOrThrow(tx, scope, logId), scope);
   });
   await sendReadLog(container, scope, logId);
   return log;

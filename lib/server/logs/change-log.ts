@@ -84,7 +84,7 @@ export async function changeLog(container: Container, scope: Scope, input: LogCh
     if (isReadAgain) await noteReadLog(tx, scope, logId);
     const detail = { name, machineId, ...(isMoved ? { fieldId, fromFieldId: before.fieldId } : {}) };
     await recordAudit(tx, scope, { action: isMoved ? "log.move" : "log.change", subject: logId, detail });
-    return { log: describeLog(await getLogOrThrow(tx, scope, logId)), isQueued: isReadAgain };
+    return { log: describeLog(await getLogOrThrow(tx, scope, logId), scope), isQueued: isReadAgain };
   });
   if (isQueued) await sendReadLog(container, scope, logId);
   return log;

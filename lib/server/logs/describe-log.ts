@@ -1,8 +1,16 @@
 import type { LogRow } from "@/db/queries/logs";
+import { can } from "@/lib/access/permissions";
 import type { Log } from "@/lib/schemas/logs";
+import type { Scope } from "@/lib/scope";
 
-/** A log's row as the API tells it. */
-export function describeLog(row: LogRow): Log {
+function mayRemove(row: LogRow, scope: Scope): boolean {
+  if (can(scope.role, "logs.delete")) return true;
+  if (!can(scope.role, "logs.remove")) return false;
+  return row.uploadedBy === scope.userId && row.version === 0 && row.status !== "ready";
+}
+
+/** A log's row as the API tells it to the caller. */
+export function describeLog(row: LogRow, scope: Scope): Log {
   return {
     id: row.id,
     fieldId: row.fieldId,
@@ -25,6 +33,7 @@ export function describeLog(row: LogRow): Log {
     sha256: row.sha256,
     version: row.version,
     createdAt: row.createdAt.toISOString(),
+    removable: mayRemove(row, scope),
   };
 }
 

@@ -104,7 +104,7 @@ export async function putMapping(
     if (before.status !== "queued") await noteReadLog(tx, scope, logId);
     const detail = { recipe: save ?? null, ...machine };
     await recordAudit(tx, scope, { action: "log.map", subject: logId, detail });
-    return describeLog(await getLogOrThrow(tx, scope, logId));
+    return describeLog(await getLogOrThrow(tx, scope, logId), scope);
   });
   await sendReadLog(container, scope, logId);
   return log;

@@ -12,7 +12,7 @@ import { nameHoldingFields } from "@/lib/server/logs/note-place";
 /** @throws AppError `not_found` */
 export async function getLog(_container: Container, scope: Scope, logId: string): Promise<Log> {
   return withOrganisation(scope, async (tx) => {
-    const log = describeLog(await getLogOrThrow(tx, scope, logId));
+    const log = describeLog(await getLogOrThrow(tx, scope, logId), scope);
     const [named = log] = await nameHoldingFields(tx, scope, [log]);
     return named;
   });
@@ -27,6 +27,13 @@ export async function listLogs(
   return withOrganisation(scope, async (tx) => {
     await getFieldOrThrow(tx, scope, input.fieldId);
     const { rows, nextCursor } = await listLogsOfField(tx, scope, input);
-    return { items: await nameHoldingFields(tx, scope, rows.map(describeLog)), nextCursor };
+    return {
+      items: await nameHoldingFields(
+        tx,
+        scope,
+        rows.map((row) => describeLog(row, scope)),
+      ),
+      nextCursor,
+    };
   });
 }

@@ -15,7 +15,7 @@ export const PATCH = withScope<"logId">("logs.map", async ({ container, scope, p
   return reply(Log, await changeLog(container, scope, { logId: params.logId, ...change }));
 });
 
-export const DELETE = withScope<"logId">("logs.delete", async ({ container, scope, params }) => {
+export const DELETE = withScope<"logId">("logs.remove", async ({ container, scope, params }) => {
   await deleteLog(container, scope, params.logId);
   return replyNothing();
 });
