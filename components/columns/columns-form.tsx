@@ -25,6 +25,8 @@ export interface ColumnsFormProps {
   machines: MachineReply[];
   pending: boolean;
   failure: unknown;
+  /** False: to look at only. */
+  mayChange?: boolean;
   onSave: (mapping: LogMapping, machineId: string | null) => void;
 }
 
@@ -71,6 +73,7 @@ function LayerForm({
   machines,
   pending,
   failure,
+  mayChange = true,
   onSave,
   layer,
 }: ColumnsFormProps & { layer: string | null }) {
@@ -103,52 +106,54 @@ function LayerForm({
           {note.message}
         </Notice>
       ))}
-      <div className="max-w-md">
-        <ShapeChoice value={shape} onChange={(next) => setLayout((before) => changeShape(before, next))} />
-      </div>
-      {sections.map((section) => (
-        <section key={section.id} className="space-y-3" aria-labelledby={`section-${section.id}`}>
-          <h2 id={`section-${section.id}`} className="text-section">
-            {section.title}
-          </h2>
-          {section.groups.map((group) => {
-            const [column] = group.columns;
-            const choice = column ? choices[column.name] : undefined;
-            if (group.columns.length > 1 || !column || !choice) {
+      <fieldset disabled={!mayChange} className="min-w-0 space-y-8">
+        <div className="max-w-md">
+          <ShapeChoice value={shape} onChange={(next) => setLayout((before) => changeShape(before, next))} />
+        </div>
+        {sections.map((section) => (
+          <section key={section.id} className="space-y-3" aria-labelledby={`section-${section.id}`}>
+            <h2 id={`section-${section.id}`} className="text-section">
+              {section.title}
+            </h2>
+            {section.groups.map((group) => {
+              const [column] = group.columns;
+              const choice = column ? choices[column.name] : undefined;
+              if (group.columns.length > 1 || !column || !choice) {
+                return (
+                  <GroupCard key={group.key} group={group} choices={choices} problems={problems} onChange={change} />
+                );
+              }
               return (
-                <GroupCard key={group.key} group={group} choices={choices} problems={problems} onChange={change} />
+                <article
+                  key={group.key}
+                  className="sheet p-4"
+                  aria-label={`Column ${column.name}`}
+                  data-waiting={!choice.seen || undefined}
+                >
+                  <ColumnLine
+                    column={column}
+                    choice={choice}
+                    problem={problems[column.name]}
+                    onChange={(patch) => change([column.name], patch)}
+                  />
+                </article>
               );
-            }
-            return (
-              <article
-                key={group.key}
-                className="sheet p-4"
-                aria-label={`Column ${column.name}`}
-                data-waiting={!choice.seen || undefined}
-              >
-                <ColumnLine
-                  column={column}
-                  choice={choice}
-                  problem={problems[column.name]}
-                  onChange={(patch) => change([column.name], patch)}
-                />
-              </article>
-            );
-          })}
+            })}
+          </section>
+        ))}
+        <section className="space-y-3">
+          <h2 className="text-section">And besides</h2>
+          <MappingExtras
+            extras={extras}
+            onChange={(patch) => setExtras((before) => ({ ...before, ...patch }))}
+            needsCrs={check.needsCrs}
+            needsTimeZone={check.needsTimeZone}
+            crsCandidates={found.crsCandidates ?? []}
+            machines={machines}
+          />
         </section>
-      ))}
-      <section className="space-y-3">
-        <h2 className="text-section">And besides</h2>
-        <MappingExtras
-          extras={extras}
-          onChange={(patch) => setExtras((before) => ({ ...before, ...patch }))}
-          needsCrs={check.needsCrs}
-          needsTimeZone={check.needsTimeZone}
-          crsCandidates={found.crsCandidates ?? []}
-          machines={machines}
-        />
-      </section>
-      <ConfirmBar check={{ ...check, problems }} pending={pending} failure={failure} />
+      </fieldset>
+      {mayChange ? <ConfirmBar check={{ ...check, problems }} pending={pending} failure={failure} /> : null}
     </form>
   );
 }

@@ -22,10 +22,12 @@ export interface MachineFormProps {
   /** Null for a new machine. */
   machineId: string | null;
   start: DraftMachine;
+  /** False: to look at only. */
+  mayWrite?: boolean;
 }
 
 /** A machine being described: in SI underneath, in the person's units on the page, drawn as it is typed. */
-export function MachineForm({ slug, machineId, start }: MachineFormProps) {
+export function MachineForm({ slug, machineId, start, mayWrite = true }: MachineFormProps) {
   const router = useRouter();
   const save = useSaveMachine(machineId);
   const { system } = useUnits();
@@ -46,7 +48,8 @@ export function MachineForm({ slug, machineId, start }: MachineFormProps) {
   return (
     <FormProvider {...form}>
       <form noValidate onSubmit={(event) => void submit(event)} className="grid gap-8 lg:grid-cols-[1fr_24rem]">
-        <div className="max-w-2xl space-y-8 max-lg:order-2">
+        <fieldset disabled={!mayWrite} className="min-w-0 max-w-2xl space-y-8 max-lg:order-2">
+          {mayWrite ? null : <Notice state="none">Your role may look at this machine, not change it.</Notice>}
           <TextField
             label="Name"
             hint="As the farm calls it, such as 24-row drill."
@@ -65,19 +68,21 @@ export function MachineForm({ slug, machineId, start }: MachineFormProps) {
             </Notice>
           ) : null}
           <div className="flex flex-wrap gap-2">
-            <Button type="submit" kind="primary" disabled={save.isPending || save.isSuccess}>
-              {save.isPending ? "Saving…" : "Save the machine"}
-            </Button>
+            {mayWrite ? (
+              <Button type="submit" kind="primary" disabled={save.isPending || save.isSuccess}>
+                {save.isPending ? "Saving…" : "Save the machine"}
+              </Button>
+            ) : null}
             <Link href={`/${slug}/machines`} className={buttonClass("quiet")}>
               Back to machines
             </Link>
           </div>
-          {machineId ? (
+          {machineId && mayWrite ? (
             <p className="text-table text-ink-soft">
               Logs already read keep the machine as it was. Read a log again to place its rows anew.
             </p>
           ) : null}
-        </div>
+        </fieldset>
         <aside className="max-lg:order-1">
           <div className="sheet p-3 lg:sticky lg:top-20">
             <ToolbarDrawing

@@ -15,8 +15,14 @@ function withoutRecord(machine: MachineReply): DraftMachine {
   return { ...Object.fromEntries(kept), kind: machine.kind };
 }
 
-/** One known machine, open for changes. */
-export function MachinePage({ slug, machineId }: { slug: string; machineId: string }) {
+export interface MachinePageProps {
+  slug: string;
+  machineId: string;
+  mayWrite: boolean;
+}
+
+/** One known machine, open for changes to those who may. */
+export function MachinePage({ slug, machineId, mayWrite }: MachinePageProps) {
   const machines = useMachines();
   if (machines.isPending) return <Loading what="the machine" />;
   if (machines.isError)
@@ -30,7 +36,7 @@ export function MachinePage({ slug, machineId }: { slug: string; machineId: stri
   return (
     <>
       <PageHeading title={machine.name} />
-      <MachineForm slug={slug} machineId={machineId} start={withoutRecord(machine)} />
+      <MachineForm slug={slug} machineId={machineId} start={withoutRecord(machine)} mayWrite={mayWrite} />
     </>
   );
 }

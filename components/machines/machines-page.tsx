@@ -33,17 +33,14 @@ export function MachinesPage({ slug, mayWrite }: { slug: string; mayWrite: boole
         id: "name",
         header: "Machine",
         value: (machine) => machine.name,
-        cell: (machine) =>
-          mayWrite ? (
-            <Link
-              href={`/${slug}/machines/${machine.id}`}
-              className="inline-flex min-h-11 items-center font-semibold md:min-h-8"
-            >
-              {machine.name}
-            </Link>
-          ) : (
-            <span className="font-semibold">{machine.name}</span>
-          ),
+        cell: (machine) => (
+          <Link
+            href={`/${slug}/machines/${machine.id}`}
+            className="inline-flex min-h-11 items-center font-semibold md:min-h-8"
+          >
+            {machine.name}
+          </Link>
+        ),
       },
       { id: "kind", header: "Kind", value: (machine) => KIND_WORDS[machine.kind] },
       {
@@ -70,7 +67,7 @@ export function MachinesPage({ slug, mayWrite }: { slug: string; mayWrite: boole
       },
       { id: "hitch", header: "Hitch", value: (machine) => (machine.kind === "seeder" ? machine.hitch : undefined) },
     ];
-  }, [mayWrite, parts, slug]);
+  }, [parts, slug]);
   if (machines.isPending) return <Loading what="the machines" />;
   if (machines.isError)
     return (

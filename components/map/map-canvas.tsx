@@ -41,10 +41,12 @@ export function MapCanvas(props: MapCanvasProps) {
     const start = opening.current;
     let gone = false;
     let made: MapLibreMap | null = null;
+    let stopRefitting: (() => void) | null = null;
     openMap(container.current!, start).then(
       (ready) => {
         if (gone) return ready.remove();
         made = ready;
+        if (start.readOnly) stopRefitting = refitWhenResized(ready, start.bounds);
         setMap(ready);
         start.onMap(ready);
       },
@@ -53,6 +55,7 @@ export function MapCanvas(props: MapCanvasProps) {
     return () => {
       gone = true;
       start.onMap(null);
+      stopRefitting?.();
       made?.remove();
     };
   }, []);
@@ -84,6 +87,34 @@ export function MapCanvas(props: MapCanvasProps) {
 /** Shows bounds at once, without flying. */
 export function fitBounds(map: MapLibreMap, bounds: Bounds): void {
   map.fitBounds(bounds, { padding: FIT_PADDING_PX, maxZoom: 20, animate: false });
+}
+
+/**
+ * Keeps the whole of `bounds` in a map that is only looked at, also on paper, where its box has another shape: until
+ * somebody moves it, every change of its size fits it anew. Answers how to stop.
+ */
+function refitWhenResized(map: MapLibreMap, bounds: Bounds): () => void {
+  let isMoved = false;
+  map.on("movestart", (event: { originalEvent?: unknown }) => {
+    if (event.originalEvent) isMoved = true;
+  });
+  map.on("resize", () => {
+    if (!isMoved) fitBounds(map, bounds);
+  });
+  const print = window.matchMedia("print");
+  const measureAnew = () => {
+    map.resize();
+    // Paper does not wait for the next frame.
+    map.redraw();
+  };
+  window.addEventListener("beforeprint", measureAnew);
+  window.addEventListener("afterprint", measureAnew);
+  print.addEventListener("change", measureAnew);
+  return () => {
+    window.removeEventListener("beforeprint", measureAnew);
+    window.removeEventListener("afterprint", measureAnew);
+    print.removeEventListener("change", measureAnew);
+  };
 }
 
 async function openMap(

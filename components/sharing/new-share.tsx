@@ -7,6 +7,7 @@ import { AUDIENCES, expiryAfter, FIRST_LAYERS, LAYER_WORDS, LIVES } from "@/comp
 import { Button } from "@/components/ui/button";
 import { CheckField } from "@/components/ui/check-field";
 import { SelectField, TextField } from "@/components/ui/form-field";
+import { formatDay } from "@/components/ui/format-date";
 import { Notice } from "@/components/ui/notice";
 import { StateMark } from "@/components/ui/state-mark";
 import { describeFailure } from "@/lib/api/api-problem";
@@ -103,7 +104,7 @@ export function NewShare({ logs, landowner, pending, failure, onCreate }: NewSha
           {ready.length === 0 ? <option value="">No log is ready yet</option> : null}
           {ready.map((log) => (
             <option key={log.id} value={log.id}>
-              {log.name}
+              {[log.name, formatDay(log.startedAt)].filter((part) => part !== "").join(" · ")}
             </option>
           ))}
         </SelectField>

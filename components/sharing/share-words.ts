@@ -1,4 +1,5 @@
 import type { MarkState } from "@/components/ui/state-mark";
+import { channelWords } from "@/lib/legend/channel-words";
 import type { Share, ShareInput } from "@/lib/schemas/shares";
 
 export const AUDIENCES: { id: ShareInput["audience"]; word: string; hint: string }[] = [
@@ -12,10 +13,10 @@ export const LAYER_WORDS: Record<ShareInput["layers"][number], { word: string; h
   boundary: { word: "Boundary", hint: "the outline of the field and its area" },
   verdict: { word: "Verdict", hint: "what the pass came to, in sentences" },
   coverage: { word: "Coverage", hint: "the area seeded, overlapped and missed" },
-  downforce: { word: "Downforce map", hint: "how hard each row was pushed" },
-  margin: { word: "Margin map", hint: "what was left on each gauge wheel" },
-  depth: { word: "Depth map", hint: "where the machine logged it" },
-  resistance: { word: "Opener resistance map", hint: "what the ground asked for" },
+  downforce: { word: `${channelWords("downforce").name} map`, hint: "how hard each row was pushed" },
+  margin: { word: `${channelWords("margin").name} map`, hint: "what was left on each gauge wheel" },
+  depth: { word: `${channelWords("depth").name} map`, hint: "where the machine logged it" },
+  resistance: { word: `${channelWords("resistance").name} map`, hint: "what the ground asked for" },
 };
 
 /** Layers chosen to begin with: what a landowner can read. */

@@ -99,8 +99,9 @@ const HELD_PERCENT = Math.round(100 * (1 - VERDICT_THRESHOLDS.underTargetShare))
 
 /** How many rows fell under the target; null where no target was known, so that nothing is claimed. */
 function rowsUnderTarget({ verdict }: SharedViewBody): number | null {
-  const isJudged = verdict?.findings.some(({ kind }) => kind === "rows-under-target" || kind === "target-held");
-  return verdict && isJudged ? verdict.rowsUnderTarget.length : null;
+  if (!verdict) return null;
+  const isSaid = verdict.findings.some(({ kind }) => kind === "rows-under-target" || kind === "target-held");
+  return (verdict.known?.underTarget ?? isSaid) ? verdict.rowsUnderTarget.length : null;
 }
 
 function TwoNumbers({ view }: { view: SharedViewBody }) {

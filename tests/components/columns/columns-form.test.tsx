@@ -183,3 +183,22 @@ describe("a wide file whose header says nothing", () => {
     expect(screen.getByRole("button", { name: "Read the log" })).toBeEnabled();
   });
 });
+
+describe("for a role that may only look", () => {
+  it("shows every meaning and lets nothing be changed or sent", () => {
+    render(
+      <ColumnsForm
+        log={log}
+        found={makeFound()}
+        machines={[]}
+        pending={false}
+        failure={null}
+        mayChange={false}
+        onSave={vi.fn()}
+      />,
+    );
+    expect(screen.getByText(/rows 1 to 3/)).toBeInTheDocument();
+    for (const button of screen.getAllByRole("button")) expect(button).toBeDisabled();
+    expect(screen.queryByRole("button", { name: "Read the log" })).not.toBeInTheDocument();
+  });
+});

@@ -87,3 +87,20 @@ describe("describing a drill", () => {
     expect(sent[0]).toMatchObject({ rowSpacingM: 0.75, antennaToRowsM: 3.5 });
   });
 });
+
+describe("a machine that a role may only look at", () => {
+  it("is shown with its numbers, none of which can be changed", () => {
+    const start = { kind: "seeder", name: "24-row drill", hitch: "rigid", rowCount: 24, rowSpacingM: 0.25 } as const;
+    render(
+      <QueryClientProvider client={new QueryClient()}>
+        <UnitsProvider start="metric" keep={false}>
+          <MachineForm slug="larkspur-flats" machineId="mac_1" start={start} mayWrite={false} />
+        </UnitsProvider>
+      </QueryClientProvider>,
+    );
+    expect(screen.getByLabelText("Row spacing")).toHaveValue("250");
+    for (const field of screen.getAllByRole("textbox")) expect(field).toBeDisabled();
+    expect(screen.queryByRole("button", { name: "Save the machine" })).not.toBeInTheDocument();
+    expect(screen.getByText(/Your role may look at this machine/)).toBeInTheDocument();
+  });
+});

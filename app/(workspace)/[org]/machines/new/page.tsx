@@ -1,9 +1,9 @@
 import type { Metadata } from "next";
-import { notFound } from "next/navigation";
 import { requireScope } from "@/app/_server/require-scope";
 import { MachineForm } from "@/components/machines/machine-form";
 import { PageBody } from "@/components/ui/page-body";
 import { PageHeading } from "@/components/ui/page-heading";
+import { RoleBars } from "@/components/ui/role-bars";
 import { can } from "@/lib/access/permissions";
 
 export const metadata: Metadata = { title: "New machine" };
@@ -16,7 +16,7 @@ interface NewMachineProps {
 export default async function NewMachineRoute({ params, searchParams }: NewMachineProps) {
   const [{ org }, { kind }] = await Promise.all([params, searchParams]);
   const { scope, organisation } = await requireScope(org);
-  if (!can(scope.role, "machines.write")) notFound();
+  if (!can(scope.role, "machines.write")) return <RoleBars role={scope.role} toDo="describe machines" />;
   const isCombine = kind === "combine";
   return (
     <PageBody>

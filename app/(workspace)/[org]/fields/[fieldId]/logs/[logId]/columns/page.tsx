@@ -1,5 +1,4 @@
 import type { Metadata } from "next";
-import { notFound } from "next/navigation";
 import { requireScope } from "@/app/_server/require-scope";
 import { ColumnsScreen } from "@/components/columns/columns-screen";
 import { PageBody } from "@/components/ui/page-body";
@@ -15,14 +14,22 @@ interface ColumnsRouteProps {
 export default async function ColumnsRoute({ params }: ColumnsRouteProps) {
   const { org, fieldId, logId } = await params;
   const { scope, organisation } = await requireScope(org);
-  if (!can(scope.role, "logs.map")) notFound();
+  const mayChange = can(scope.role, "logs.map");
   return (
     <PageBody>
       <PageHeading
         title="What the columns mean"
-        lead="This is how the file was understood. Read it, change what is wrong, then let the log be read."
+        lead={
+          mayChange
+            ? "This is how the file was understood. Read it, change what is wrong, then let the log be read."
+            : "This is how the file was understood. Your role may look at it, not change it."
+        }
       />
-      <ColumnsScreen logPath={`/${organisation.slug}/fields/${fieldId}/logs/${logId}`} logId={logId} />
+      <ColumnsScreen
+        logPath={`/${organisation.slug}/fields/${fieldId}/logs/${logId}`}
+        logId={logId}
+        role={scope.role}
+      />
     </PageBody>
   );
 }
