@@ -24,11 +24,20 @@ const finding = {
   check: "Look at the opener.",
   caution: null,
 };
+const lack = {
+  ...finding,
+  id: "f2",
+  kind: "cannot-judge",
+  sentence: "The machine has no target margin.",
+  place: null,
+  check: "Complete the machine's description.",
+};
 const verdict = {
   rowsUnderTarget: [7],
   rowsAtLimit: [],
   weight: { headroomN: null, shareLiftedM2: null, state: "unknown" },
-  findings: [finding],
+  known: { underTarget: true, atLimit: false },
+  findings: [finding, lack],
   inner: "not part of the reply's schema",
 };
 const coverage = { sweptM2: 10, coveredM2: 9, overlapM2: 1, skippedM2: 0, resolutionM: 0.25 };
@@ -161,6 +170,18 @@ describe("opening a share", () => {
     expect(view.verdict?.findings[0]).toMatchObject({ sentence: "Row 7 ran light.", place: finding.place });
     expect(view.verdict).not.toHaveProperty("inner");
     expect(view.log?.channels).toEqual([]);
+  });
+
+  it("leaves out, for a landowner only, what the machine's description lacks", async () => {
+    const logId = await addLog();
+    const view = async (audience: string) => {
+      const token = tokenOf(await share({ audience, layers: ["verdict"], logId }));
+      return SharedView.parse(await (await open(token)).json()).verdict;
+    };
+    const landowner = await view("landowner");
+    expect(landowner?.findings.map((one) => one.id)).toEqual(["f1"]);
+    expect(landowner?.known).toEqual({ underTarget: true, atLimit: false });
+    expect((await view("adviser"))?.findings.map((one) => one.id)).toEqual(["f1", "f2"]);
   });
 
   it("counts openings, and keeps search engines' and other sites' hands off", async () => {

@@ -3,6 +3,7 @@ import { withOrganisation, type Transaction } from "@/db/client";
 import { findLogResult } from "@/db/queries/log-results";
 import { findLog, type LogRow } from "@/db/queries/logs";
 import { findOrganisationName } from "@/db/queries/organisations";
+import { findingsForReader } from "@/lib/findings/findings-for-reader";
 import { CoverageBody, VerdictBody } from "@/lib/schemas/logs";
 import type { SharedView } from "@/lib/schemas/shared";
 import { ShareLayer } from "@/lib/schemas/shares";
@@ -37,7 +38,7 @@ async function readResult(tx: Transaction, scope: Scope, log: LogRow | null, kin
   return findLogResult(tx, scope, { logId: log.id, version: log.version, kind });
 }
 
-function moveFindings(body: unknown, move: MoveGeometry): VerdictBody | null {
+function verdictForReader(body: unknown, audience: string, move: MoveGeometry): VerdictBody | null {
   const verdict = VerdictBody.nullable().parse(body);
   if (!verdict) return null;
   return {
@@ -45,7 +46,10 @@ function moveFindings(body: unknown, move: MoveGeometry): VerdictBody | null {
     rowsAtLimit: verdict.rowsAtLimit,
     known: verdict.known,
     weight: verdict.weight,
-    findings: verdict.findings.map((finding) => ({ ...finding, place: move(finding.place) })),
+    findings: findingsForReader(verdict.findings, audience).map((finding) => ({
+      ...finding,
+      place: move(finding.place),
+    })),
   };
 }
 
@@ -67,7 +71,9 @@ export async function readSharedView({ share, scope }: OpenedShare): Promise<Sha
       boundary: has("boundary") ? move(field.boundary) : null,
       areaM2: has("boundary") ? field.areaM2 : null,
       log: log ? describeSharedLog(log, { layers, isBlurred }) : null,
-      verdict: has("verdict") ? moveFindings(await readResult(tx, scope, log, "verdict"), move) : null,
+      verdict: has("verdict")
+        ? verdictForReader(await readResult(tx, scope, log, "verdict"), share.audience, move)
+        : null,
       coverage: has("coverage") ? CoverageBody.nullable().parse(await readResult(tx, scope, log, "coverage")) : null,
     };
   });

@@ -81,6 +81,15 @@ describe("the page a link opens", () => {
     expect(screen.getByText("rows logged")).toBeInTheDocument();
   });
 
+  it("counts the rows on target where the target is known, whatever sentences were left out", () => {
+    const verdict = { ...VIEW.verdict!, findings: VIEW.verdict!.findings.slice(1) };
+    show({ ...VIEW, verdict: { ...verdict, known: { underTarget: true, atLimit: true } } });
+    expect(screen.getByText(/of 24/)).toBeInTheDocument();
+    cleanup();
+    show({ ...VIEW, verdict: { ...verdict, known: { underTarget: false, atLimit: true } } });
+    expect(screen.getByText("rows logged")).toBeInTheDocument();
+  });
+
   it("tells kindly why it shows nothing, and nothing of the field", () => {
     render(<ClosedShare state="revoked" />);
     expect(screen.getByRole("heading")).toHaveTextContent("This link was withdrawn");
