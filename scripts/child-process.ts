@@ -34,7 +34,7 @@ export function startNode(input: {
   const output = input.quiet ? "ignore" : "inherit";
   const preload = new URL("./exit-with-parent.mjs", import.meta.url).href;
   const child = spawn(process.execPath, ["--import", preload, input.script, ...(input.arguments ?? [])], {
-    env: input.environment,
+    env: { ...input.environment, EXIT_WITH_PARENT: String(process.pid) },
     stdio: ["ignore", output, "inherit", "ipc"],
   });
   const ready = waitUntilReady(input.name, child);
