@@ -18,7 +18,8 @@ const NOT_YOURS =
 export async function deleteLog(container: Container, scope: Scope, logId: string): Promise<void> {
   await withOrganisation(scope, async (tx) => {
     const log = await getLogOrThrow(tx, scope, logId);
-    if (!(await isLogRemovable(tx, scope, logId))) throw new AppError("conflict", NOT_YOURS, { detailCode: "log_kept" });
+    if (!(await isLogRemovable(tx, scope, logId)))
+      throw new AppError("conflict", NOT_YOURS, { detailCode: "log_kept" });
     await lockBytes(tx, scope, log.sha256);
     const isShared = await isFileInUse(tx, scope, { sha256: log.sha256, exceptLogId: logId });
     await deleteLogRows(tx, scope, logId);
