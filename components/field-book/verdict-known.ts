@@ -1,4 +1,3 @@
-import { z } from "zod";
 import type { Log, VerdictBody } from "@/lib/schemas/logs";
 
 /** What of a verdict's counts could be judged at all: a count of a thing that is not known is no nought. */
@@ -7,13 +6,9 @@ export interface VerdictKnown {
   atLimit: boolean;
 }
 
-/** As the verdict says it itself. */
-const Told = z.object({ known: z.object({ underTarget: z.boolean(), atLimit: z.boolean() }) });
-
-/** Verdicts worked out before they said it: what was found or missing tells. */
+/** As the verdict says it itself; of one worked out before verdicts did, what was found or missing tells. */
 export function verdictKnown(verdict: VerdictBody, log: Pick<Log, "machineId">): VerdictKnown {
-  const told = Told.safeParse(verdict);
-  if (told.success) return told.data.known;
+  if (verdict.known) return verdict.known;
   const has = (kind: string) => verdict.findings.some((finding) => finding.kind === kind);
   const lacksLimit = verdict.findings.some(
     ({ kind, sentence }) => kind === "cannot-judge" && /no force limit|which machine/.test(sentence),
