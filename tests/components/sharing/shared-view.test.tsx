@@ -3,6 +3,7 @@ import userEvent from "@testing-library/user-event";
 import { afterEach, describe, expect, it } from "vitest";
 import { ClosedShare } from "@/components/sharing/closed-share";
 import { toShareInput } from "@/components/sharing/new-share";
+import { rankFindings } from "@/components/sharing/shared-finding";
 import { SharedView } from "@/components/sharing/shared-view";
 import { UnitsProvider } from "@/components/units/use-units";
 import type { SharedView as SharedViewBody } from "@/lib/schemas/shared";
@@ -79,6 +80,13 @@ describe("the page a link opens", () => {
     expect(screen.queryByText(/Row 17/)).toBeNull();
     expect(screen.queryByText(/of 24/)).toBeNull();
     expect(screen.getByText("rows logged")).toBeInTheDocument();
+  });
+
+  it("puts doubt about the readings before all that was read from them", () => {
+    const [held, row] = VIEW.verdict!.findings;
+    const doubt = { ...held!, id: "f3", kind: "readings-doubtful", severity: "look" as const };
+    const ranked = rankFindings({ ...VIEW.verdict!, findings: [held!, row!, doubt] });
+    expect(ranked.map(({ id }) => id)).toEqual(["f3", "f2", "f1"]);
   });
 
   it("counts the rows on target where the target is known, whatever sentences were left out", () => {
