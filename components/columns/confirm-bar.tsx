@@ -53,7 +53,9 @@ export function ConfirmBar({ check, pending, failure }: ConfirmBarProps) {
             </p>
           ) : null}
           {wrong > 0 ? (
-            <StateWord state="act">{wrong === 1 ? "1 column is wrong." : `${wrong} columns are wrong.`}</StateWord>
+            <StateWord state="act">
+              {wrong === 1 ? "1 column lacks a right answer." : `${wrong} columns lack a right answer.`}
+            </StateWord>
           ) : null}
           {blocked ? null : (
             <p className="text-ink-soft">

@@ -13,9 +13,10 @@ function organisationChapters(root: string, role: Role): Chapter[] {
   return chapters;
 }
 
-function fieldChapters(root: string, role: Role): Chapter[] {
+/** On the page of one log, its rows are meant. */
+function fieldChapters(root: string, role: Role, logId?: string): Chapter[] {
   const chapters: Chapter[] = [
-    { href: `${root}/rows`, word: "Rows", icon: Rows3 },
+    { href: logId ? `${root}/rows?log=${logId}` : `${root}/rows`, word: "Rows", icon: Rows3 },
     { href: `${root}/logs`, word: "Logs", icon: FileStack },
   ];
   if (can(role, "shares.read")) chapters.push({ href: `${root}/share`, word: "Share", icon: Send });
@@ -25,10 +26,10 @@ function fieldChapters(root: string, role: Role): Chapter[] {
 
 /** Inside a field its chapters, with the way back to all fields; elsewhere the organisation's pages. */
 export function WorkspaceChapters({ slug, role }: { slug: string; role: Role }) {
-  const { fieldId } = useParams<{ fieldId?: string }>();
+  const { fieldId, logId } = useParams<{ fieldId?: string; logId?: string }>();
   const pages = organisationChapters(`/${slug}`, role);
   if (!fieldId) return <ChapterBar label="Pages" chapters={pages} />;
-  const chapters = fieldChapters(`/${slug}/fields/${fieldId}`, role);
+  const chapters = fieldChapters(`/${slug}/fields/${fieldId}`, role, logId);
   return <ChapterBar label="Chapters of this field" chapters={chapters} beyond={pages.map(asBeyond)} />;
 }
 

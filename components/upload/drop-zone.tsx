@@ -7,6 +7,8 @@ import { classNames } from "@/components/ui/class-names";
 export interface DropZoneProps {
   /** Words on the zone, such as "Choose a log file". */
   words: string;
+  /** Words after them where a mouse can drop something. */
+  dropWords?: string;
   hint: string;
   /** File endings for the picker. */
   accept: string;
@@ -55,7 +57,15 @@ function usePageDrop(enabled: boolean, onFile: (file: File) => void): boolean {
 }
 
 /** Drop a file, or press to choose one: on a phone the whole box is the button. */
-export function DropZone({ words, hint, accept, onFile, wholePage = false, disabled = false }: DropZoneProps) {
+export function DropZone({
+  words,
+  dropWords,
+  hint,
+  accept,
+  onFile,
+  wholePage = false,
+  disabled = false,
+}: DropZoneProps) {
   const input = useRef<HTMLInputElement>(null);
   const over = usePageDrop(wholePage && !disabled, onFile);
   return (
@@ -78,7 +88,10 @@ export function DropZone({ words, hint, accept, onFile, wholePage = false, disab
         )}
       >
         <FileInput size={22} strokeWidth={1.5} aria-hidden />
-        <span className="font-semibold">{over ? "Let go to take it in" : words}</span>
+        <span className="font-semibold">
+          {over ? "Let go to take it in" : words}
+          {dropWords && !over ? <span className="max-md:hidden">{dropWords}</span> : null}
+        </span>
         <span className="text-table text-ink-soft">{hint}</span>
       </button>
       <input

@@ -12,6 +12,7 @@ import { Loading } from "@/components/ui/loading";
 import { Notice } from "@/components/ui/notice";
 import { PageHeading } from "@/components/ui/page-heading";
 import { ProgressBar } from "@/components/ui/progress-bar";
+import { LogFailure } from "@/components/upload/log-failure";
 import { LogFacts } from "@/components/upload/log-facts";
 import { LogSteps } from "@/components/upload/log-steps";
 import { RecipeWords } from "@/components/upload/recipe-words";
@@ -19,7 +20,6 @@ import { isWorking } from "@/components/upload/log-state";
 import { OutsideField, outsideFieldNote } from "@/components/upload/outside-field";
 import { can, type Role } from "@/lib/access/permissions";
 import { describeFailure } from "@/lib/api/api-problem";
-import { logOriginalPath } from "@/lib/api/client";
 import type { Log } from "@/lib/schemas/logs";
 
 export interface LogProgressProps {
@@ -113,36 +113,6 @@ function Outcome({ log, fieldId, fieldPath, role }: OutcomeProps) {
       </div>
     );
   }
-  if (log.status === "failed") return <Failure log={log} fieldPath={fieldPath} role={role} actions={actions} />;
+  if (log.status === "failed") return <LogFailure log={log} fieldPath={fieldPath} role={role} actions={actions} />;
   return <Notice state="look">The file is here. Somebody who may must say what its columns mean.</Notice>;
-}
-
-interface FailureProps extends Omit<OutcomeProps, "fieldId"> {
-  actions: ReturnType<typeof useLogActions>;
-}
-
-function Failure({ log, fieldPath, role, actions }: FailureProps) {
-  const place = [
-    log.error?.line === undefined ? null : `line ${log.error.line}`,
-    log.error?.column === undefined ? null : `column ${log.error.column}`,
-  ].filter((part) => part !== null);
-  return (
-    <div className="space-y-3">
-      <Notice state="act" urgent title="The log could not be read">
-        <p>{log.error?.message ?? "No reason was kept."}</p>
-        {place.length > 0 ? <p className="tabular">At {place.join(", ")}.</p> : null}
-      </Notice>
-      <div className="flex flex-wrap gap-2">
-        {can(role, "logs.map") ? (
-          <Link href={`${fieldPath}/logs/${log.id}/columns`} className={buttonClass("primary")}>
-            Look at the columns
-          </Link>
-        ) : null}
-        {can(role, "logs.upload") ? <Button onClick={() => actions.retry.mutate(log.id)}>Read it again</Button> : null}
-        <a href={logOriginalPath(log.id)} download className={buttonClass("quiet")}>
-          Download the original
-        </a>
-      </div>
-    </div>
-  );
 }

@@ -26,4 +26,4 @@ export function describeLogStatus(status: LogStatus): StateWords {
 }
 
 /** Kinds of file a log may come in, for the file picker. */
-export const LOG_FILE_KINDS = ".csv,.txt,.gz,.geojson,.json,.zip";
+export const LOG_FILE_KINDS = ".csv,.tsv,.txt,.gz,.geojson,.json,.zip";

@@ -8,6 +8,7 @@ import { LogTable } from "@/components/upload/log-table";
 import { LogUpload } from "@/components/upload/log-upload";
 import { can, type Role } from "@/lib/access/permissions";
 import { describeFailure } from "@/lib/api/api-problem";
+import type { Log } from "@/lib/schemas/logs";
 
 export interface LogsPageProps {
   fieldId: string;
@@ -16,12 +17,22 @@ export interface LogsPageProps {
   exampleHref: string | null;
 }
 
+/** The machine of the newest seeding log that has one. */
+export function lastSeedingMachine(logs: readonly Log[]): string | null {
+  return logs.find((log) => log.kind === "seeding" && log.machineId !== null)?.machineId ?? null;
+}
+
 export function LogsPage({ fieldId, fieldPath, role, exampleHref }: LogsPageProps) {
   const logs = useLogs(fieldId);
   return (
     <div className="space-y-8">
       {can(role, "logs.upload") ? (
-        <LogUpload fieldId={fieldId} logsPath={`${fieldPath}/logs`} exampleHref={exampleHref} />
+        <LogUpload
+          fieldId={fieldId}
+          logsPath={`${fieldPath}/logs`}
+          exampleHref={exampleHref}
+          lastMachineId={lastSeedingMachine(logs.data?.items ?? [])}
+        />
       ) : null}
       {logs.isPending ? <Loading what="the logs" /> : null}
       {logs.isError ? (

@@ -70,7 +70,7 @@ export async function keepUpload(container: Container, scope: Scope, input: NewU
     await lockBytes(tx, scope, sha256);
     if (!input.again) await refuseSameBytes(tx, scope, { fieldId, sha256 });
     const isKept = await isFileInUse(tx, scope, { sha256, exceptLogId: id });
-    const name = fileName.replace(/\.(csv|txt|json|geojson|zip|gz)$/i, "").replace(/\.csv$/i, "") || fileName;
+    const name = fileName.replace(/\.(csv|tsv|txt|json|geojson|zip|gz)$/i, "").replace(/\.csv$/i, "") || fileName;
     await insertLog(tx, scope, { id, fieldId, machineId, mapping, name, fileName, fileBytes, sha256 });
     await noteReadLog(tx, scope, id);
     await recordAudit(tx, scope, { action: "log.upload", subject: id, detail: { fieldId, fileName, fileBytes } });

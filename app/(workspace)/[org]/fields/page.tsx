@@ -18,7 +18,11 @@ export default async function FieldsRoute({ params }: { params: Promise<{ org: s
       <PageHeading
         title="Fields"
         lead={
-          can(scope.role, "logs.upload") ? "Open a field to take a log in, or drop the file on its name." : undefined
+          can(scope.role, "logs.upload") ? (
+            <>
+              Open a field to take a log in<span className="max-md:hidden">, or drop the file on its name</span>.
+            </>
+          ) : undefined
         }
         actions={
           mayWrite ? (

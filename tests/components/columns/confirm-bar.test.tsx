@@ -1,0 +1,17 @@
+import { cleanup, render, screen } from "@testing-library/react";
+import { afterEach, describe, expect, it } from "vitest";
+import { ConfirmBar } from "@/components/columns/confirm-bar";
+
+afterEach(cleanup);
+
+describe("what stands in the way of reading", () => {
+  it.each([
+    [{ A: "Choose the unit." }, "1 column lacks a right answer."],
+    [{ A: "Choose the unit.", B: "Choose the unit." }, "2 columns lack a right answer."],
+  ])("is counted as answers, not as wrong columns: %o", (problems, words) => {
+    const check = { waiting: [], general: [], needsCrs: false, needsTimeZone: false, problems };
+    render(<ConfirmBar check={check} pending={false} failure={null} />);
+    expect(screen.getByText(words)).toBeInTheDocument();
+    expect(screen.getByRole("button", { name: "Read the log" })).toBeDisabled();
+  });
+});
