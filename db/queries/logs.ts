@@ -130,7 +130,7 @@ export async function changeLog(
     .where(and(eq(logs.organisationId, scope.organisationId), eq(logs.id, logId)));
 }
 
-/** Whether the caller may delete this log: any, or their own upload while nothing was ever read from it. */
+/** Whether the caller may delete this log: every log, or only their own upload while nothing was ever read from it. */
 export async function isLogRemovable(tx: Transaction, scope: Scope, logId: string): Promise<boolean> {
   const own = and(eq(logs.uploadedBy, scope.userId), eq(logs.version, 0), ne(logs.status, "ready"));
   const rows = await tx
