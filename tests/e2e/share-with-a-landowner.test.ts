@@ -32,7 +32,11 @@ async function makeLink({ page }: Visit, passcode = ""): Promise<string> {
   await page.getByRole("button", { name: "Make a link" }).click();
   await page.getByText("This land belongs to").waitFor();
   // The seeding log is the one with a verdict.
-  await page.getByLabel("Log", { exact: true }).selectOption({ label: "east-quarter-seeding" });
+  const logs = page.getByLabel("Log", { exact: true });
+  const seeding = await logs
+    .getByRole("option", { name: /^east-quarter-seeding · \d+ \w+ \d+$/ })
+    .getAttribute("value");
+  await logs.selectOption(seeding);
   await page.getByLabel("Passcode (optional)").fill(passcode);
   await page.getByRole("button", { name: "Make the link" }).click();
   await page.getByText("The link is ready").waitFor();
