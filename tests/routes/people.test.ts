@@ -136,6 +136,19 @@ describe("tokens", () => {
     expect((await callApi(call)).status).toBe(422);
   });
 
+  it("cannot make a token that outlives itself", async () => {
+    const ends = new Date(Date.now() + 3_600_000);
+    const { token } = await makeToken(world.cookies.owner, { expiresAt: ends.toISOString() });
+    const make = (body: Record<string, unknown>) =>
+      callApi({ method: "POST", path: "/api/v1/tokens", token, body: { name: "t", ...body } });
+    const later = await make({ expiresAt: new Date(ends.getTime() + 1000).toISOString() });
+    expect(later.status).toBe(422);
+    expect(await later.json()).toMatchObject({ errors: [{ path: "expiresAt" }] });
+    expect(await (await make({})).json()).toMatchObject({ expiresAt: ends.toISOString() });
+    const sooner = new Date(ends.getTime() - 1000).toISOString();
+    expect(await (await make({ expiresAt: sooner })).json()).toMatchObject({ expiresAt: sooner });
+  });
+
   it("stops when withdrawn, when it expires, and when its owner leaves", async () => {
     const person = await addMember("agronomist");
     const withdrawn = await makeToken(person.cookie, {});

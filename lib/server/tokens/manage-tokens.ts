@@ -24,20 +24,28 @@ function describeToken(row: TokenRow): z.output<typeof Token> {
   };
 }
 
-function readExpiry(expiresAt: string | undefined, now: Date): Date | null {
-  if (expiresAt === undefined) return null;
+/** What ends with the token that asks ends the new one too, whether or not an end is given. */
+function readExpiry(expiresAt: string | undefined, { now, latest }: { now: Date; latest: Date | null }): Date | null {
+  if (expiresAt === undefined) return latest;
   const at = new Date(expiresAt);
-  if (at > now) return at;
-  throw new AppError("unprocessable", "A token must expire in the future.", {
-    places: [{ path: "expiresAt", message: "is not in the future" }],
-  });
+  if (at <= now) {
+    throw new AppError("unprocessable", "A token must expire in the future.", {
+      places: [{ path: "expiresAt", message: "is not in the future" }],
+    });
+  }
+  if (latest && at > latest) {
+    throw new AppError("unprocessable", "A token made with a token cannot outlive it.", {
+      places: [{ path: "expiresAt", message: `is after ${latest.toISOString()}, when the token that asks expires` }],
+    });
+  }
+  return at;
 }
 
-/** A token of the caller's own, its role within theirs. The secret is in this reply and nowhere else. */
+/** A token of the caller's own, its role within theirs; made with a token, it may not outlive that one. The secret is in this reply and nowhere else. */
 export async function createToken(
   container: Container,
   scope: Scope,
-  input: z.output<typeof TokenInput>,
+  input: z.output<typeof TokenInput> & { madeWith: Pick<TokenRow, "expiresAt"> | null },
 ): Promise<z.output<typeof TokenCreated>> {
   const role = input.role ?? scope.role;
   if (!isRoleWithin(role, scope.role)) {
@@ -47,7 +55,7 @@ export async function createToken(
   }
   const now = container.clock.now();
   const secret = newPersonalToken();
-  const expiresAt = readExpiry(input.expiresAt, now);
+  const expiresAt = readExpiry(input.expiresAt, { now, latest: input.madeWith?.expiresAt ?? null });
   const id = newId("token");
   const row = await withOrganisation(scope, async (tx) => {
     const values = { id, name: input.name, role, expiresAt, tokenHash: hashSecret(secret), createdAt: now };

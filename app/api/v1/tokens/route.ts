@@ -9,8 +9,9 @@ export const GET = withScope("tokens.own", async ({ container, scope, url }) =>
   reply(TokenList, await listTokens(container, scope, parseQuery(ListQuery, url))),
 );
 
-export const POST = withScope("tokens.own", async ({ container, scope, request }) => {
-  const token = await createToken(container, scope, await parseBody(TokenInput, request));
+export const POST = withScope("tokens.own", async ({ container, scope, identity, request }) => {
+  const input = await parseBody(TokenInput, request);
+  const token = await createToken(container, scope, { ...input, madeWith: identity.token });
   return reply(TokenCreated, token, { status: 201, headers: { location: `/api/v1/tokens/${token.id}` } });
 });
 
