@@ -18,6 +18,8 @@ import { implementWidthM, machineRowGeometry } from "@/lib/rows/row-geometry";
 
 export interface BuildOptions {
   boundary?: Polygon | MultiPolygon | null;
+  /** Working width of the named machine where that is no seeder. */
+  workingWidthM?: number | null;
   /** Called with 0..1 as the work goes on. */
   onProgress?: (share: number) => void;
 }
@@ -55,7 +57,7 @@ export function buildLog(
   const { works, line, turning, ranges } = ground;
   const along = { eastM: line.originEastM, northM: line.originNorthM };
   const passes = describePasses({ ranges, works, timeMs: log.timeMs, headingDeg: line.headingDeg, ...along });
-  const guessed = machine ? null : guessRowGeometry({ log, passes, ...along });
+  const guessed = machine ? null : guessRowGeometry({ log, passes, ...along, workingWidthM: options.workingWidthM });
   const geometry = guessed?.geometry ?? machineRowGeometry(machine as Seeder);
   const boundaryRings = options.boundary ? ringsInPlane(options.boundary, antenna.plane) : null;
   labelHeadlands({ passes, ...along, implementWidthM: implementWidthM(geometry), boundaryRings });

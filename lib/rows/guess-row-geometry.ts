@@ -13,14 +13,18 @@ export interface GuessInput {
   passes: Pass[];
   eastM: ArrayLike<number>;
   northM: ArrayLike<number>;
+  /** Working width of a machine that is named but has no row units, such as a combine's header. */
+  workingWidthM?: number | null;
 }
 
 /**
  * Rows for a log whose machine nobody described, and the note that says how they were guessed: the logged swath width,
  * else the usual distance between neighbouring passes, else 0.762 m a row; spread evenly, straight under the antenna.
+ * A machine that is named with its working width needs no note.
  */
-export function guessRowGeometry(input: GuessInput): { geometry: RowGeometry; note: LogNote } {
+export function guessRowGeometry(input: GuessInput): { geometry: RowGeometry; note?: LogNote } {
   const { rows } = input.log;
+  if (input.workingWidthM) return { geometry: evenRowGeometry(rows, input.workingWidthM / rows) };
   const swathM = loggedSwathWidthM(input.log);
   const spacingM = swathM === null ? passSpacingM(input) : null;
   const widthM = swathM ?? spacingM ?? rows * FALLBACK_ROW_SPACING_M;

@@ -46,6 +46,21 @@ describe("a mapping with a machine", () => {
     await worker.stop();
   });
 
+  it("that is a combine leaves no word of an unknown machine, and its header gives the width", async () => {
+    const { log, path, mapping, put } = await lookedAt();
+    const body = { kind: "combine", name: "Larkspur combine", headerWidthM: 9.6 };
+    const combine = await world.read("owner", { method: "POST", path: "/api/v1/machines", body, expect: 201 });
+    expect((await put({ ...mapping, machineId: combine.id })).status).toBe(202);
+    const worker = await world.startWorker();
+    const settled = await world.settle(log.id);
+    await worker.stop();
+    expect(settled).toMatchObject({ status: "ready", machineId: combine.id });
+    expect(settled.notes.map((note) => note.code)).not.toContain("machine-unknown");
+    const readings = await world.read("owner", { path: `${path}/passes/1/readings?channel=depth` });
+    // Eight rows share 9.6 m.
+    for (const widthM of readings.rowWidthsM as number[]) expect(widthM).toBeCloseTo(1.2, 6);
+  });
+
   it("keeps the machine where none is named, and refuses one that is not there", async () => {
     const { log, mapping, put } = await lookedAt();
     const unknown = await put({ ...mapping, machineId: "mac_nosuchmachine" });

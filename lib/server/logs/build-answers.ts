@@ -17,8 +17,12 @@ import { describeRows, type RowStatistics } from "@/lib/statistics/row-statistic
 export type TellProgress = (stage: string, progress: number) => void;
 
 /** Puts the records on the ground, with every note so far. @throws LogFailure where they cannot be placed */
-export function placeLog(read: ReadLog, machine: Seeder | null, boundary: Boundary | null): BuiltLog {
-  const built = buildLog(read.log, machine, { boundary });
+export function placeLog(
+  read: ReadLog,
+  machine: Seeder | null,
+  options: { boundary: Boundary | null; workingWidthM: number | null },
+): BuiltLog {
+  const built = buildLog(read.log, machine, options);
   if (!built.ok) throw new LogFailure({ code: built.error.code, message: built.error.message });
   return { placed: built.value.placed, notes: [...read.notes, ...built.value.notes] };
 }

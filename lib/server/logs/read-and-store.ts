@@ -33,7 +33,8 @@ export async function readAndStore(log: LogRow, threads: ThreadPool, progress: L
     await keepInspection(log, inspected.value, chosen);
     if (!chosen) return waitForMapping(log, inspected.value, progress);
     progress.tell("Reading the records", 0.05);
-    const { machine, boundary } = context;
+    const { machine, workingWidthM, boundary } = context;
+    const { mapping } = chosen;
     const writer = new VersionWriter(log, machine, progress);
     let stood: PackedPlacedLog | undefined;
     const onPlaced = (placed: PackedPlacedLog) => {
@@ -41,7 +42,7 @@ export async function readAndStore(log: LogRow, threads: ThreadPool, progress: L
       writer.begin(placed);
     };
     try {
-      const built = await thread.read({ file, mapping: chosen.mapping, machine, boundary }, { ...ask, onPlaced });
+      const built = await thread.read({ file, mapping, machine, workingWidthM, boundary }, { ...ask, onPlaced });
       if (!built.ok) throw new LogFailure(built.error);
       const place = stood ? await notePlace(log, stood.log) : [];
       await writer.finish({ ...built.value, notes: [...place, ...built.value.notes] });
@@ -58,6 +59,8 @@ function fileOf({ organisationId, sha256, fileName, fileBytes }: LogRow) {
 
 interface LogContext {
   machine: Seeder | null;
+  /** Of a named machine that is no seeder: a combine's header. */
+  workingWidthM: number | null;
   boundary: Boundary | null;
   near: { longitude: number; latitude: number } | null;
 }
@@ -71,6 +74,7 @@ async function readContext(log: LogRow): Promise<LogContext> {
     const corner = ring?.[0];
     return {
       machine: machine?.kind === "seeder" ? machine : null,
+      workingWidthM: machine?.kind === "combine" ? machine.headerWidthM : null,
       boundary,
       near: corner ? { longitude: corner[0] ?? 0, latitude: corner[1] ?? 0 } : null,
     };

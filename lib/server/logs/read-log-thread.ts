@@ -35,7 +35,7 @@ async function read(task: Extract<ThreadTask, { task: "read" }>): Promise<void> 
   if (!outcome.ok) return say({ kind: "built", outcome });
   try {
     tell("Placing every row on the ground", 0.5);
-    const built = placeLog(outcome.value, task.machine, task.boundary);
+    const built = placeLog(outcome.value, task.machine, task);
     // A copy goes to be stored while this thread works on: writing and statistics then take one time, not two.
     say({ kind: "placed", placed: packPlacedLog(built.placed) });
     say({ kind: "built", outcome: succeed(buildAnswers(built, { boundary: task.boundary, tell })) });

@@ -12,7 +12,15 @@ import type { LogErrorPlace } from "@/lib/server/logs/log-failure";
 /** What the worker asks of a reading thread. */
 export type ThreadTask =
   | { task: "inspect"; file: LogFile; near: { longitude: number; latitude: number } | null }
-  | { task: "read"; file: LogFile; mapping: LogMapping; machine: Seeder | null; boundary: Boundary | null };
+  | {
+      task: "read";
+      file: LogFile;
+      mapping: LogMapping;
+      machine: Seeder | null;
+      /** Of a named machine that is no seeder. */
+      workingWidthM: number | null;
+      boundary: Boundary | null;
+    };
 
 /** What the thread says: progress any number of times, the placed log once it stands, then one of the others. */
 export type ThreadMessage =
