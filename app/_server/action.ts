@@ -6,6 +6,7 @@ import { can, type Permission } from "@/lib/access/permissions";
 import { AppError } from "@/lib/errors";
 import type { Problem } from "@/lib/schemas/problem";
 import type { Scope } from "@/lib/scope";
+import { forgetAccess } from "@/lib/server/access/recent-access";
 
 export type ActionOutcome<Value> = { ok: true; value: Value } | { ok: false; problem: Problem };
 
@@ -31,6 +32,8 @@ export function action<Schema extends z.ZodType, Value>(
     } catch (error) {
       if (isFrameworkSignal(error)) throw error;
       return { ok: false, problem: toProblem(error) };
+    } finally {
+      forgetAccess();
     }
   };
 }

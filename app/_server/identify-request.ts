@@ -2,6 +2,7 @@ import "server-only";
 import { container } from "@/app/_server/container";
 import { readCookie, readSessionClaims, sessionCookieName } from "@/app/_server/session-cookie";
 import { AppError } from "@/lib/errors";
+import { hashSecret } from "@/lib/server/access/secrets";
 import { authenticateSession, authenticateToken, type Identity } from "@/lib/server/access/authenticate";
 
 /** Remembers the organisation a person looked at last. */
@@ -16,6 +17,16 @@ async function identityOfCookie(header: string | null): Promise<Identity | null>
   const { env } = container();
   const claims = await readSessionClaims(readCookie(header, sessionCookieName(env.baseUrl)), env.AUTH_SECRET);
   return claims ? authenticateSession(claims) : null;
+}
+
+/** Names all that the answer to "who asks, and in which organisation" depends on, without holding a secret. */
+export function credentialsOf({ headers }: Request): string {
+  const cookies = headers.get("cookie");
+  const session = readCookie(cookies, sessionCookieName(container().env.baseUrl)) ?? null;
+  const organisation = readCookie(cookies, ORGANISATION_COOKIE) ?? null;
+  return hashSecret(
+    JSON.stringify([headers.get("authorization"), session, organisation, headers.get("x-organisation")]),
+  );
 }
 
 /** Who sends this request: a personal token wins over a session. @throws AppError 401 */

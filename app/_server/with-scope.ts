@@ -1,6 +1,6 @@
 import "server-only";
 import { container } from "@/app/_server/container";
-import { identifyRequest, ORGANISATION_COOKIE } from "@/app/_server/identify-request";
+import { credentialsOf, identifyRequest, ORGANISATION_COOKIE } from "@/app/_server/identify-request";
 import { refuseForeignOrigin } from "@/app/_server/refuse-foreign-origin";
 import { readCookie } from "@/app/_server/session-cookie";
 import { toResponse } from "@/app/_server/to-response";
@@ -9,6 +9,7 @@ import { can, type Permission } from "@/lib/access/permissions";
 import { AppError } from "@/lib/errors";
 import type { Scope } from "@/lib/scope";
 import { chooseOrganisation } from "@/lib/server/access/choose-organisation";
+import { forgetAccess, recallAccess } from "@/lib/server/access/recent-access";
 import type { Identity } from "@/lib/server/access/authenticate";
 import type { Container } from "@/lib/server/container";
 
@@ -37,6 +38,17 @@ async function readParams<Name extends string>(context: RouteContext<Name>): Pro
   return params;
 }
 
+interface Access {
+  identity: Identity;
+  scope: Scope;
+}
+
+async function findAccess(request: Request): Promise<Access> {
+  const identity = await identifyRequest(request);
+  if (!identity.token) refuseForeignOrigin(request, container().env.baseUrl);
+  return { identity, scope: await scopeOf(request, identity) };
+}
+
 async function scopeOf(request: Request, identity: Identity): Promise<Scope> {
   const { scope } = await chooseOrganisation(identity, {
     demanded: request.headers.get("x-organisation"),
@@ -59,6 +71,13 @@ function withApiHeaders(response: Response): Response {
   return response;
 }
 
+interface ScopeOptions {
+  /** Who asks and with what role is looked up once in two seconds: for pictures that a page asks for by the dozen. */
+  recallsAccess?: boolean;
+}
+
+const READING = new Set(["GET", "HEAD", "OPTIONS"]);
+
 /**
  * Wraps a route that needs an account: who asks, in which organisation, whether the role allows it, same origin,
  * Idempotency-Key, and every error as problem+json. Name the address's parameters: `withScope<"fieldId">(...)`.
@@ -66,13 +85,15 @@ function withApiHeaders(response: Response): Response {
 export function withScope<Name extends string = never>(
   permission: Permission,
   handler: (input: ScopedInput<Name>) => Promise<Response>,
+  options: ScopeOptions = {},
 ): RouteHandler<Name> {
   return async (request, context) => {
+    const onlyReads = READING.has(request.method);
     try {
       const outside = container();
-      const identity = await identifyRequest(request);
-      if (!identity.token) refuseForeignOrigin(request, outside.env.baseUrl);
-      const scope = await scopeOf(request, identity);
+      const find = () => findAccess(request);
+      const isRecalled = options.recallsAccess && onlyReads;
+      const { identity, scope } = await (isRecalled ? recallAccess(credentialsOf(request), find) : find());
       refuseLowRole(scope, permission);
       const params = await readParams(context);
       const handle = (received: Request) =>
@@ -80,6 +101,8 @@ export function withScope<Name extends string = never>(
       return withApiHeaders(await onlyOnce({ request, scope, container: outside, handle }));
     } catch (error) {
       return withApiHeaders(toResponse(error));
+    } finally {
+      if (!onlyReads) forgetAccess();
     }
   };
 }

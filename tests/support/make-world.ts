@@ -30,7 +30,7 @@ const EMAILS: Record<Exclude<Actor, "stranger">, string> = {
 };
 
 /** The session cookie of a person, as a browser sends it back. */
-export async function sessionCookieOf(email: string, container: TestContainer): Promise<string> {
+export async function sessionCookieOf(email: string, container: Pick<TestContainer, "env">): Promise<string> {
   const person = await findPersonByEmail(email);
   if (!person) throw new Error(`nobody has the address ${email}`);
   const claims = { userId: person.id, stamp: passwordStamp(person.passwordHash) };

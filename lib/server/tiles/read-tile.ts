@@ -1,10 +1,12 @@
 import "server-only";
 import sharp from "sharp";
+import type { LogRow } from "@/db/queries/logs";
 import { AppError } from "@/lib/errors";
 import { areClassEdges } from "@/lib/legend/class-edges";
 import { isRampName, RAMP_NAMES, rampOf } from "@/lib/legend/ramps";
 import type { Scope } from "@/lib/scope";
 import type { Container } from "@/lib/server/create-container";
+import { recallAccess } from "@/lib/server/access/recent-access";
 import { getReadLog, loadChannel } from "@/lib/server/logs/find-placed-log";
 import { cachedForLog } from "@/lib/server/logs/log-cache";
 import { loadTileIndex } from "@/lib/server/tiles/load-tile-index";
@@ -22,6 +24,8 @@ export interface TileInput extends TileAddress {
   channel: string;
   /** Null for a value tile, else class edges of a picture. */
   classes: Breaks;
+  /** The version that the caller knows of; null where none was named. */
+  version: number | null;
 }
 
 /** `a,b,c` as rising class edges. @throws AppError `unprocessable` */
@@ -49,7 +53,7 @@ export async function readTile(
   input: TileInput,
 ): Promise<{ png: Uint8Array<ArrayBuffer>; version: number }> {
   checkTile(input);
-  const log = await getReadLog(scope, input.logId);
+  const log = await recallLog(scope, input);
   const { z, x, y, classes } = input;
   const look = classes ? `${classes.breaks.join(",")}/${classes.ramp ?? ""}` : "values";
   const key = `${log.id}:${log.version}:tile:${input.channel}/${z}/${x}/${y}/${look}`;
@@ -61,6 +65,13 @@ export async function readTile(
     return { value, bytes: value.byteLength };
   });
   return { png, version: log.version };
+}
+
+/** The log, looked up once in two seconds for all tiles of the version that a map shows; afresh for any other. */
+async function recallLog(scope: Scope, { logId, version }: TileInput): Promise<LogRow> {
+  const key = JSON.stringify(["log", scope.organisationId, scope.userId, scope.role, logId]);
+  const serves = (log: LogRow) => log.version === version;
+  return recallAccess(key, () => getReadLog(scope, logId), { serves });
 }
 
 async function drawPng(

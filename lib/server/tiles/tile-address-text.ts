@@ -19,7 +19,8 @@ export function parseTileInput({ logId, channel, z, x, y }: TileParams, url: URL
   }
   const breaks = parseBreaks(url.searchParams.get("breaks"));
   const classes = breaks ? { breaks, ramp: url.searchParams.get("ramp") } : null;
-  return { logId, channel: decodeURIComponent(channel), z: Number(z), x: Number(x), y: Number(row), classes };
+  const version = Number(url.searchParams.get("v") ?? NaN) || null;
+  return { logId, channel: decodeURIComponent(channel), z: Number(z), x: Number(x), y: Number(row), classes, version };
 }
 
 /** The tile, or 304 where the caller has it. Under `?v=` of this very version it may be kept for good. */
@@ -30,7 +31,7 @@ export function tileResponse(
   const { z, x, y, channel, classes } = asked.input;
   const look = classes ? `${classes.breaks.join("_")}-${classes.ramp ?? ""}` : "values";
   const etag = `"${tile.version}-${encodeURIComponent(channel)}-${z}-${x}-${y}-${look}"`;
-  const isVersioned = asked.url.searchParams.get("v") === String(tile.version);
+  const isVersioned = asked.input.version === tile.version;
   const headers = {
     etag,
     "cache-control": isVersioned ? "private, max-age=31536000, immutable" : "private, no-cache",

@@ -8,6 +8,7 @@ export const GET = withScope<"logId" | "channel" | "z" | "x" | "y">(
     const input = parseTileInput(params, url);
     return tileResponse(await readTile(container, scope, input), { input, request, url });
   },
+  { recallsAccess: true },
 );
 
 export {
