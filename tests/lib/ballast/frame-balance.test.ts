@@ -3,7 +3,7 @@ import { frameMomentNm, liftOffForceN, measureFrameBalance, wheelLoadN } from "@
 import { buildLog } from "@/lib/build/build-log";
 import type { Seeder } from "@/lib/machines/machine";
 import { rowDistances } from "@/lib/rows/row-distances";
-import { makeLog, makeSeeder, straightTrack } from "../../support/make-log";
+import { makeLog, makeSeeder, straightTrack } from "@/tests/support/make-log";
 
 const FRAME: NonNullable<Seeder["frame"]> = {
   massKg: 3000,

@@ -4,7 +4,7 @@ import { rowDistances } from "@/lib/rows/row-distances";
 import { rowPosition } from "@/lib/rows/row-position";
 import { simulateSeedingLog } from "@/lib/simulator/simulate-seeding-log";
 import { rowStatistics } from "@/lib/statistics/row-statistics";
-import { makeLog, makeSeeder, straightTrack } from "../../support/make-log";
+import { makeLog, makeSeeder, straightTrack } from "@/tests/support/make-log";
 
 const CHANNELS = [{ id: "downforce" as const, value: () => 900 }];
 const straight = (headingDeg = 0) => straightTrack({ from: [0, 0], headingDeg, records: 100 });

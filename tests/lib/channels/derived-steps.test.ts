@@ -3,7 +3,7 @@ import { buildLog } from "@/lib/build/build-log";
 import { commonStep } from "@/lib/channels/common-step";
 import { resolveChannel } from "@/lib/channels/resolve-channel";
 import { codeOf, valueOfCode, valueScale } from "@/lib/tiles/value-scale";
-import { makeLog, makeSeeder, straightTrack } from "../../support/make-log";
+import { makeLog, makeSeeder, straightTrack } from "@/tests/support/make-log";
 
 /** Readings spread over all residues: record and row make other multiples of each step. */
 function place(forceStepN: number, marginStepN: number) {

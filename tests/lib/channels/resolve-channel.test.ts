@@ -4,7 +4,7 @@ import { openerResistanceN } from "@/lib/channels/opener-resistance";
 import { resolveChannel, resolveChannelOrReason } from "@/lib/channels/resolve-channel";
 import { rowSpeedMps } from "@/lib/channels/row-speed";
 import type { Seeder } from "@/lib/machines/machine";
-import { makeLog, makeSeeder, straightTrack, type MadeLog } from "../../support/make-log";
+import { makeLog, makeSeeder, straightTrack, type MadeLog } from "@/tests/support/make-log";
 
 function place(made: MadeLog, machine: Seeder | null) {
   const built = buildLog(makeLog(made), machine);

@@ -3,7 +3,7 @@ import { buildLog } from "@/lib/build/build-log";
 import { flagCodes } from "@/lib/cleaning/flags";
 import { rowDistances } from "@/lib/rows/row-distances";
 import type { MachineLog } from "@/lib/logs/machine-log";
-import { makeLog, makeSeeder, straightTrack } from "../../support/make-log";
+import { makeLog, makeSeeder, straightTrack } from "@/tests/support/make-log";
 
 const CHANNELS = [{ id: "downforce" as const, value: () => 900 }];
 const straight = () =>

@@ -6,7 +6,7 @@ import { fillPolygon } from "@/lib/coverage/fill-polygon";
 import { measureCoverage } from "@/lib/coverage/measure-coverage";
 import type { Seeder } from "@/lib/machines/machine";
 import { simulateSeedingLog } from "@/lib/simulator/simulate-seeding-log";
-import { makeLog, makeSeeder, straightTrack, type MadeRecord } from "../../support/make-log";
+import { makeLog, makeSeeder, straightTrack, type MadeRecord } from "@/tests/support/make-log";
 
 function place(records: MadeRecord[], machine: Seeder) {
   const channels = [{ id: "downforce" as const, value: () => 900 }];

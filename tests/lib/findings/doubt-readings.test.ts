@@ -3,7 +3,7 @@ import { buildLog } from "@/lib/build/build-log";
 import { passVerdict } from "@/lib/findings/pass-verdict";
 import { LARKSPUR } from "@/lib/simulator/scenario/larkspur";
 import { simulateSeedingLog } from "@/lib/simulator/simulate-seeding-log";
-import { makeLog, makeSeeder, straightTrack } from "../../support/make-log";
+import { makeLog, makeSeeder, straightTrack } from "@/tests/support/make-log";
 
 const EAST = simulateSeedingLog(LARKSPUR.fields[0]!.seeding.input);
 

@@ -4,7 +4,7 @@ import { passVerdict } from "@/lib/findings/pass-verdict";
 import { geodesicDistanceM } from "@/lib/geo/geodesic-distance";
 import { LARKSPUR } from "@/lib/simulator/scenario/larkspur";
 import { simulateSeedingLog } from "@/lib/simulator/simulate-seeding-log";
-import { makeLog, makeSeeder, straightTrack } from "../../support/make-log";
+import { makeLog, makeSeeder, straightTrack } from "@/tests/support/make-log";
 
 /** Hand-worked: the wheels carry nothing from 1000 kg x 9.80665 x 2 m / (4 rows x 5 m) = 980.665 N a row. */
 const FRAME = {

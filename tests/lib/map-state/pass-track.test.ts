@@ -4,7 +4,7 @@ import { gridOfPass, paintGrid, turnUpright } from "@/lib/map-state/paint-pass";
 import { recordAtDistance, recordSpanM } from "@/lib/map-state/pass-track";
 import { buildTileIndex } from "@/lib/tiles/build-tile-index";
 import { locateReading } from "@/lib/tiles/locate-reading";
-import { cellMiddle, placeStraightPasses, type StraightPasses } from "../tiles/place-straight-passes";
+import { cellMiddle, placeStraightPasses, type StraightPasses } from "@/tests/lib/tiles/place-straight-passes";
 import { trackOfLog } from "./track-of-log";
 
 const LOG: StraightPasses = {

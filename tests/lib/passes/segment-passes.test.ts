@@ -4,7 +4,7 @@ import { FLAGS } from "@/lib/cleaning/flags";
 import { mainAxisDeg } from "@/lib/passes/main-axis";
 import { rowDistances } from "@/lib/rows/row-distances";
 import { simulateSeedingLog } from "@/lib/simulator/simulate-seeding-log";
-import { makeLog, makeSeeder, straightTrack, type MadeRecord } from "../../support/make-log";
+import { makeLog, makeSeeder, straightTrack, type MadeRecord } from "@/tests/support/make-log";
 
 const CHANNELS = [{ id: "downforce" as const, value: () => 900 }];
 

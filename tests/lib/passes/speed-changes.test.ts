@@ -3,7 +3,7 @@ import { buildLog } from "@/lib/build/build-log";
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import { rowDistances } from "@/lib/rows/row-distances";
 import { rowStatistics } from "@/lib/statistics/row-statistics";
-import { makeLog, makeSeeder, type MadeLog, type MadeRecord } from "../../support/make-log";
+import { makeLog, makeSeeder, type MadeLog, type MadeRecord } from "@/tests/support/make-log";
 
 const MACHINE = makeSeeder({ targetMarginN: 400, marginDeadbandN: 50 });
 

@@ -3,7 +3,7 @@ import { buildLog } from "@/lib/build/build-log";
 import { geodesicDestination, geodesicLine } from "@/lib/geo/geodesic-distance";
 import { rowLonLat, rowPosition } from "@/lib/rows/row-position";
 import { placeRows } from "@/lib/rows/place-rows";
-import { makeLog, makeSeeder, straightTrack } from "../../support/make-log";
+import { makeLog, makeSeeder, straightTrack } from "@/tests/support/make-log";
 
 function placeOne(headingDeg: number, machine: ReturnType<typeof makeSeeder>) {
   return placeRows(

@@ -3,7 +3,7 @@ import { buildLog } from "@/lib/build/build-log";
 import { FLAGS } from "@/lib/cleaning/flags";
 import { turnDegrees } from "@/lib/geo/circular-mean";
 import { relaxHitchAngleDeg, trailHitch } from "@/lib/rows/trail-hitch";
-import { makeLog, makeSeeder, straightTrack } from "../../support/make-log";
+import { makeLog, makeSeeder, straightTrack } from "@/tests/support/make-log";
 
 describe("relaxHitchAngleDeg", () => {
   it("brings 20 degrees to 7.423 over one drawbar length (hand-worked tractrix)", () => {

@@ -4,7 +4,7 @@ import { rowDistances } from "@/lib/rows/row-distances";
 import { deviationFromOthers } from "@/lib/statistics/row-deviation";
 import { middleReadings } from "@/lib/statistics/middle-readings";
 import { deviationSeries, mapRowSeries, rowSeries } from "@/lib/statistics/row-series";
-import { makeLog, makeSeeder, straightTrack } from "../../support/make-log";
+import { makeLog, makeSeeder, straightTrack } from "@/tests/support/make-log";
 
 /** More rows than are gathered at once, with readings missing here and there. */
 const ROWS = 19;

@@ -5,7 +5,7 @@ import { rowDistances } from "@/lib/rows/row-distances";
 import { simulateSeedingLog } from "@/lib/simulator/simulate-seeding-log";
 import { LARKSPUR } from "@/lib/simulator/scenario/larkspur";
 import { rowStatistics } from "@/lib/statistics/row-statistics";
-import { makeLog, makeSeeder, straightTrack, type MadeLog } from "../../support/make-log";
+import { makeLog, makeSeeder, straightTrack, type MadeLog } from "@/tests/support/make-log";
 
 function place(made: MadeLog, machine: Seeder | null) {
   const built = buildLog(makeLog(made), machine);

@@ -8,7 +8,7 @@ import { mergeShortRuns } from "@/lib/zones/merge-short-runs";
 import { smoothTrack } from "@/lib/zones/smooth-track";
 import { buildSwaths } from "@/lib/zones/swaths";
 import { buildZones } from "@/lib/zones/zones";
-import { makeLog, makeSeeder, straightTrack, type MadeRecord } from "../../support/make-log";
+import { makeLog, makeSeeder, straightTrack, type MadeRecord } from "@/tests/support/make-log";
 
 const BREAKS = [180, 490, 890];
 

@@ -1,7 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { describeColumn } from "@/lib/ingest/columns/describe-column";
 import { proposeMapping } from "@/lib/ingest/propose-mapping";
-import { mustInspect, textSource } from "../support/make-source";
+import { mustInspect, textSource } from "@/tests/lib/ingest/support/make-source";
 
 const PLACE = "-98.612,38.417";
 

@@ -2,7 +2,14 @@ import { describe, expect, it } from "vitest";
 import type { LogMapping } from "@/lib/ingest/mapping";
 import { proposeMapping } from "@/lib/ingest/propose-mapping";
 import { parseDegrees, readDegreesForm } from "@/lib/ingest/records/parse-degrees";
-import { errorOf, mustInspect, mustRead, readAsProposed, SIMPLE_MAPPING, textSource } from "../support/make-source";
+import {
+  errorOf,
+  mustInspect,
+  mustRead,
+  readAsProposed,
+  SIMPLE_MAPPING,
+  textSource,
+} from "@/tests/lib/ingest/support/make-source";
 
 const FIELD = { longitude: -98.61, latitude: 38.41 };
 const rows = (count: number, line: (i: number) => string) =>

@@ -14,7 +14,7 @@ import {
   SIMPLE_MAPPING,
   textSource,
   utf16,
-} from "../support/make-source";
+} from "@/tests/lib/ingest/support/make-source";
 
 const LINES = ["0,-98.6125,38.4171,200,210.5", "1,-98.6124,38.4172,,-211", "2,-98.6123,38.4173,1e2,abc"];
 const TEXT = `${SIMPLE_HEADER}\n${LINES.join("\n")}\n`;

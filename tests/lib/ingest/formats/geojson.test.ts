@@ -3,7 +3,7 @@ import { describe, expect, it } from "vitest";
 import { readLog } from "@/lib/ingest";
 import { bytesSource } from "@/lib/ingest/byte-source";
 import type { LogMapping } from "@/lib/ingest/mapping";
-import { errorOf, mustInspect, mustRead, readAsProposed, textSource } from "../support/make-source";
+import { errorOf, mustInspect, mustRead, readAsProposed, textSource } from "@/tests/lib/ingest/support/make-source";
 
 interface Point {
   type: "Feature";

@@ -2,8 +2,8 @@ import { describe, expect, it } from "vitest";
 import { bytesSource } from "@/lib/ingest/byte-source";
 import { mappingFits } from "@/lib/ingest/mapping";
 import { proposeMapping } from "@/lib/ingest/propose-mapping";
-import { errorOf, mustInspect, mustRead, readAsProposed } from "../support/make-source";
-import { KNOWN_PROJECTIONS, OLD_DATUM } from "../support/projections";
+import { errorOf, mustInspect, mustRead, readAsProposed } from "@/tests/lib/ingest/support/make-source";
+import { KNOWN_PROJECTIONS, OLD_DATUM } from "@/tests/lib/ingest/support/projections";
 import {
   makeDbf,
   makeManyPointShp,
@@ -12,7 +12,7 @@ import {
   WGS84_PRJ,
   zipOf,
   type DbfColumn,
-} from "../support/make-shapefile";
+} from "@/tests/lib/ingest/support/make-shapefile";
 
 const POINTS: [number, number][] = [
   [-98.61, 38.41],

@@ -11,8 +11,8 @@ import type { MachineLog } from "@/lib/logs/machine-log";
 import { layOutRows } from "@/lib/simulator/row-layout";
 import { writeTaskDataZip, type TaskDataStyle } from "@/lib/simulator/writers/write-task-data";
 import { createFixtureLog } from "@/tests/support/fixture-logs";
-import { errorOf, mustInspect, mustRead } from "../support/make-source";
-import { zipOf } from "../support/make-shapefile";
+import { errorOf, mustInspect, mustRead } from "@/tests/lib/ingest/support/make-source";
+import { zipOf } from "@/tests/lib/ingest/support/make-shapefile";
 
 const { log: simulated, truth } = createFixtureLog();
 const layout = layOutRows(truth.options.machine);
