@@ -90,31 +90,23 @@ export function fitBounds(map: MapLibreMap, bounds: Bounds): void {
 }
 
 /**
- * Keeps the whole of `bounds` in a map that is only looked at, also on paper, where its box has another shape: until
- * somebody moves it, every change of its size fits it anew. Answers how to stop.
+ * Keeps the whole of `bounds` in a map that is only looked at: until somebody moves it, every change of its size fits it
+ * anew. On paper the picture is kept as it is and scaled (see globals.css): drawing anew takes longer than a printer
+ * waits. Answers how to stop.
  */
 function refitWhenResized(map: MapLibreMap, bounds: Bounds): () => void {
   let isMoved = false;
   map.on("movestart", (event: { originalEvent?: unknown }) => {
     if (event.originalEvent) isMoved = true;
   });
-  map.on("resize", () => {
+  const paper = window.matchMedia("print");
+  const observer = new ResizeObserver(() => {
+    if (paper.matches) return;
+    map.resize();
     if (!isMoved) fitBounds(map, bounds);
   });
-  const print = window.matchMedia("print");
-  const measureAnew = () => {
-    map.resize();
-    // Paper does not wait for the next frame.
-    map.redraw();
-  };
-  window.addEventListener("beforeprint", measureAnew);
-  window.addEventListener("afterprint", measureAnew);
-  print.addEventListener("change", measureAnew);
-  return () => {
-    window.removeEventListener("beforeprint", measureAnew);
-    window.removeEventListener("afterprint", measureAnew);
-    print.removeEventListener("change", measureAnew);
-  };
+  observer.observe(map.getContainer());
+  return () => observer.disconnect();
 }
 
 async function openMap(
@@ -136,6 +128,8 @@ async function openMap(
     touchPitch: false,
     fadeDuration: 0,
     cooperativeGestures: gentle || readOnly,
+    // A map that is only looked at is told of its size by `refitWhenResized`.
+    trackResize: !readOnly,
     canvasContextAttributes: { preserveDrawingBuffer: readOnly },
   });
   map.touchZoomRotate.disableRotation();
