@@ -1,5 +1,6 @@
 // `npm test`: its own cluster and ports, then types, lint, unit, component, integration and browser tests.
-import { spawnSync } from "node:child_process";
+import { spawn, type ChildProcess } from "node:child_process";
+import { once } from "node:events";
 import { mkdirSync, readFileSync, rmSync, existsSync } from "node:fs";
 import { buildCodeIfStale, buildIfStale } from "@/scripts/build-if-stale";
 import { startCluster, type Cluster } from "@/scripts/cluster";
@@ -16,14 +17,16 @@ interface Tally {
 const tally: Tally = { passed: 0, failed: 0, skipped: 0 };
 const failedSteps: string[] = [];
 
+let running: ChildProcess | undefined;
+
 /** Runs a tool to its end; a failed one is counted and the rest still runs. */
-function runStep(name: string, script: string, parameters: string[]): boolean {
+async function runStep(name: string, script: string, parameters: string[]): Promise<void> {
   console.log(`\n== ${name}`);
   const started = Date.now();
-  const done = spawnSync(process.execPath, [script, ...parameters], { stdio: ["ignore", "inherit", "inherit"] });
-  console.log(`== ${name}: ${done.status === 0 ? "ok" : "FAILED"} in ${Math.round((Date.now() - started) / 1000)} s`);
-  if (done.status !== 0) failedSteps.push(name);
-  return done.status === 0;
+  running = spawn(process.execPath, [script, ...parameters], { stdio: ["ignore", "inherit", "inherit"] });
+  const [code] = (await once(running, "exit")) as [number | null];
+  console.log(`== ${name}: ${code === 0 ? "ok" : "FAILED"} in ${Math.round((Date.now() - started) / 1000)} s`);
+  if (code !== 0) failedSteps.push(name);
 }
 
 /** Counts a report of vitest; a run without a report has failed as a whole. */
@@ -42,10 +45,10 @@ function countReport(name: string, path: string): void {
   if (report.success === false && number("numFailedTests") === 0) tally.failed += 1;
 }
 
-function runProject(project: string): void {
+async function runProject(project: string): Promise<void> {
   const path = `${REPORTS}/${project}.json`;
   const flags = ["run", "--project", project, "--passWithNoTests", "--reporter=default", "--reporter=json"];
-  runStep(`${project} tests`, "node_modules/vitest/vitest.mjs", [...flags, `--outputFile.json=${path}`]);
+  await runStep(`${project} tests`, "node_modules/vitest/vitest.mjs", [...flags, `--outputFile.json=${path}`]);
   countReport(`${project} tests`, path);
 }
 
@@ -66,7 +69,16 @@ function finish(code: number): never {
   if (cluster?.started) cluster.stop();
   process.exit(code);
 }
-for (const signal of ["SIGINT", "SIGTERM", "SIGHUP"] as const) process.on(signal, () => finish(1));
+/** A signal ends the step under way first: its own processes need the cluster to the last. */
+async function interrupt(): Promise<never> {
+  if (running && running.exitCode === null && running.signalCode === null) {
+    running.kill("SIGTERM");
+    await Promise.race([once(running, "exit"), new Promise((resolve) => setTimeout(resolve, 5000))]);
+    running.kill("SIGKILL");
+  }
+  return finish(1);
+}
+for (const signal of ["SIGINT", "SIGTERM", "SIGHUP"] as const) process.on(signal, () => void interrupt());
 
 try {
   rmSync(REPORTS, { recursive: true, force: true });
@@ -77,11 +89,11 @@ try {
   process.env.AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED = "true";
   await buildCodeIfStale();
   process.env.BUILD_DIR = "build";
-  runStep("route types", NEXT, ["typegen"]);
-  runStep("types", "node_modules/typescript/bin/tsc", ["--noEmit"]);
-  runStep("lint", "node_modules/eslint/bin/eslint.js", ["."]);
-  for (const project of ["unit", "components", "integration"]) runProject(project);
-  if (await buildForBrowser()) runProject("e2e");
+  await runStep("route types", NEXT, ["typegen"]);
+  await runStep("types", "node_modules/typescript/bin/tsc", ["--noEmit"]);
+  await runStep("lint", "node_modules/eslint/bin/eslint.js", ["."]);
+  for (const project of ["unit", "components", "integration"]) await runProject(project);
+  if (await buildForBrowser()) await runProject("e2e");
 } catch (error) {
   console.error(error);
   failedSteps.push("preparation");
