@@ -1,7 +1,13 @@
 import { channelWords } from "@/lib/ingest/channel-quantities";
 import { stopReading } from "@/lib/ingest/ingest-error";
 import { READ_LIMITS, type ReadLog } from "@/lib/ingest/log-format";
-import { nextCapacity, trimTo, withRoom } from "@/lib/ingest/records/growing-columns";
+import {
+  nextCapacity,
+  readingRoom,
+  takeReadings,
+  withReadingRoom,
+  withRoom,
+} from "@/lib/ingest/records/growing-columns";
 import { NoteBook } from "@/lib/ingest/records/note-book";
 import { isMissing, parseNumber } from "@/lib/ingest/records/parse-number";
 import { parseBoolean } from "@/lib/ingest/records/parse-boolean";
@@ -83,7 +89,7 @@ export class RecordCollector {
     this.working = plan.working.length > 0 ? new Uint8Array(size) : null;
     this.stores = plan.channels.map((channel) => ({
       plan: channel,
-      values: new Float32Array(size * this.widthOf(channel)).fill(NaN),
+      values: readingRoom(size * this.widthOf(channel)),
     }));
     for (const name of plan.pressures) this.notes.add("pressure-not-force", undefined, name);
     if (plan.working.length > 1) this.notes.add("working-by-row");
@@ -319,7 +325,7 @@ export class RecordCollector {
     this.speed &&= withRoom(this.speed, size);
     this.pass &&= withRoom(this.pass, size);
     this.working &&= withRoom(this.working, size);
-    for (const store of this.stores) store.values = withRoom(store.values, size * this.widthOf(store.plan), NaN);
+    for (const store of this.stores) store.values = withReadingRoom(store.values, size * this.widthOf(store.plan));
     this.capacity = size;
   }
 
@@ -337,7 +343,7 @@ export class RecordCollector {
     this.checkReadings(this.capacity * row * this.stores.length);
     for (const store of this.stores) {
       if (!store.plan.perRow) continue;
-      const wider = new Float32Array(this.capacity * row).fill(NaN);
+      const wider = readingRoom(this.capacity * row);
       for (let record = 0; record < this.records; record++) {
         wider.set(store.values.subarray(record * before, (record + 1) * before), record * row);
       }
@@ -364,9 +370,9 @@ export class RecordCollector {
     return { log, notes: this.notes.list(this.place) };
   }
 
-  /** Arrays cut to the records there are. Frees each long buffer as it goes, to keep the peak low. */
+  /** Readings of the records there are. Lets go of each long buffer as it goes, to keep the peak low. */
   takeValues(store: ChannelStore): Float32Array {
-    const values = trimTo(store.values, this.records * this.widthOf(store.plan));
+    const values = takeReadings(store.values, this.records * this.widthOf(store.plan));
     store.values = new Float32Array(0);
     return values;
   }

@@ -36,7 +36,8 @@ async function read(task: Extract<ThreadTask, { task: "read" }>): Promise<void> 
   try {
     tell("Placing every row on the ground", 0.5);
     const built = placeLog(outcome.value, task.machine, task);
-    // A copy goes to be stored while this thread works on: writing and statistics then take one time, not two.
+    // It is stored while this thread works on: writing and statistics then take one time, not two. The readings lie in
+    // shared memory and are not copied; from here on nobody writes to them.
     say({ kind: "placed", placed: packPlacedLog(built.placed) });
     say({ kind: "built", outcome: succeed(buildAnswers(built, { boundary: task.boundary, tell })) });
   } catch (error) {
