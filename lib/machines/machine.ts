@@ -1,37 +1,42 @@
 import { z } from "zod";
+import { plainText } from "@/lib/schemas/plain-text";
 
-const metres = z.number().finite();
-const BallastPiece = z.object({ massKg: z.number().min(0), behindHitchM: metres });
+/** Bounds no farm machine reaches: they keep a slip of the keyboard, or an ill will, from drawing rows across a continent. */
+const metres = z.number().min(-100).max(100);
+const reachM = z.number().positive().max(100);
+const massKg = z.number().min(0).max(200_000);
+const forceN = z.number().min(0).max(1_000_000);
+const BallastPiece = z.object({ massKg, behindHitchM: metres });
 
 export const Frame = z.object({
-  massKg: z.number().positive(),
+  massKg: massKg.positive(),
   behindHitchM: metres,
-  wheelsBehindHitchM: z.number().positive(),
-  rowsBehindHitchM: z.number().positive(),
-  ballast: z.array(BallastPiece).default([]),
-  minWheelLoadN: z.number().min(0),
+  wheelsBehindHitchM: reachM,
+  rowsBehindHitchM: reachM,
+  ballast: z.array(BallastPiece).max(100).default([]),
+  minWheelLoadN: forceN,
 });
 export type Frame = z.infer<typeof Frame>;
 
-const name = z.string().trim().min(1).max(120);
+const name = plainText(120).min(1);
 
 /** A drill or planter. Offsets: `antennaToRowsM` behind the antenna; right of centre positive; row 1 leftmost looking forward. */
 export const SeederInput = z.object({
   kind: z.literal("seeder"),
   name,
   rowCount: z.number().int().min(1).max(256),
-  rowSpacingM: z.number().positive().max(5),
+  rowSpacingM: z.number().min(0.02).max(5),
   rowOffsetsM: z.array(metres).optional(),
   rowForwardM: z.array(metres).optional(),
   antennaToRowsM: metres,
   antennaRightM: metres.default(0),
   hitch: z.enum(["rigid", "trailed"]),
   antennaToHitchM: metres.optional(),
-  hitchToRowsM: z.number().positive().optional(),
-  rowUnitMassKg: z.number().min(0),
-  maxDownforceN: z.number().positive().optional(),
-  targetMarginN: z.number().positive().optional(),
-  marginDeadbandN: z.number().min(0).optional(),
+  hitchToRowsM: reachM.optional(),
+  rowUnitMassKg: massKg,
+  maxDownforceN: forceN.positive().optional(),
+  targetMarginN: forceN.positive().optional(),
+  marginDeadbandN: forceN.optional(),
   frame: Frame.optional(),
 });
 export type Seeder = z.infer<typeof SeederInput>;

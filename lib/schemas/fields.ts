@@ -1,8 +1,9 @@
 import { z } from "zod";
 import { Boundary } from "@/lib/schemas/geometry";
 import { Id, Instant, listOf } from "@/lib/schemas/listing";
+import { plainText } from "@/lib/schemas/plain-text";
 
-const shortText = z.string().trim().max(120);
+const shortText = plainText(120);
 
 export const FieldInput = z.object({
   name: shortText.min(1, "a field needs a name"),

@@ -1,4 +1,5 @@
 import { z } from "zod";
+import { plainText } from "@/lib/schemas/plain-text";
 import { Id, Instant, listOf, NullableNumber } from "@/lib/schemas/listing";
 import { PlaceGeometry } from "@/lib/schemas/geometry";
 
@@ -69,7 +70,7 @@ export const LogList = listOf(Log);
 
 export const LogAccepted = z.object({ id: Id, status: LogStatus });
 export const LogPatch = z.object({
-  name: z.string().trim().min(1).max(200).optional(),
+  name: plainText(200).min(1).optional(),
   machineId: Id.nullable().optional(),
   /** The field that the log belongs to. */
   fieldId: Id.optional(),

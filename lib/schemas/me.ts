@@ -1,4 +1,5 @@
 import { z } from "zod";
+import { plainText } from "@/lib/schemas/plain-text";
 import { Id } from "@/lib/schemas/listing";
 import { RoleName, UnitSystem } from "@/lib/schemas/people";
 
@@ -20,7 +21,7 @@ export const NewPassword = z.string().min(12, "a password has at least 12 charac
 /** `newPassword` needs `currentPassword`, and ends every other session of the person. */
 export const MePatch = z
   .object({
-    name: z.string().trim().min(1).max(120).optional(),
+    name: plainText(120).min(1).optional(),
     unitSystem: UnitSystem.optional(),
     currentPassword: z.string().max(200).optional(),
     newPassword: NewPassword.optional(),

@@ -1,4 +1,5 @@
 import { z } from "zod";
+import { plainText } from "@/lib/schemas/plain-text";
 import { ROLES } from "@/lib/access/permissions";
 import { Id, Instant, listOf } from "@/lib/schemas/listing";
 
@@ -19,7 +20,7 @@ export const MemberList = listOf(Member);
 
 export const MemberInput = z.object({
   email: z.email(),
-  name: z.string().trim().min(1).max(120),
+  name: plainText(120).min(1),
   role: RoleName,
   /** First password; the person changes it in settings. */
   password: z.string().min(12, "a password has at least 12 characters").max(200),
@@ -27,7 +28,7 @@ export const MemberInput = z.object({
 export const MemberPatch = z.object({ role: RoleName.optional(), fieldIds: z.array(Id).optional() });
 
 export const TokenInput = z.object({
-  name: z.string().trim().min(1).max(120),
+  name: plainText(120).min(1),
   role: RoleName.optional(),
   expiresAt: Instant.optional(),
 });

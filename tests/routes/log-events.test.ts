@@ -45,7 +45,7 @@ describe("server-sent events", () => {
   });
 
   it("of a settled log tell its state and end at once", async () => {
-    const { items } = (await world.read("owner", { path: `/api/v1/fields/${world.fieldId}/logs` })) as {
+    const { items } = (await world.read("operator", { path: `/api/v1/fields/${world.fieldId}/logs` })) as {
       items: Log[];
     };
     expect(await readEvents(items[0]!.id)).toEqual([items[0]]);

@@ -244,7 +244,8 @@ describe("who may see a log", () => {
     async (ending) => {
       const address = `/api/v1/logs/${log.id}${ending ? `/${ending}` : ""}`;
       expect((await world.as("other-owner", { path: address })).status).toBe(404);
-      expect((await world.as("viewer", { path: address })).status).toBe(404);
+      // A viewer may export nothing at all, so there the role is too low whatever the log.
+      expect((await world.as("viewer", { path: address })).status).toBe(ending.startsWith("export") ? 403 : 404);
       expect((await world.as("stranger", { path: address })).status).toBe(401);
     },
   );
