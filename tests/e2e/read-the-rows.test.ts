@@ -150,7 +150,7 @@ describe("the rows of a field, wide", () => {
     const requests: string[] = [];
     page.on("request", (request) => requests.push(request.url()));
     await page.getByRole("button", { name: "Classes" }).click();
-    await page.getByRole("menuitem", { name: "As many readings in each" }).click();
+    await page.getByRole("menuitem", { name: "As much distance in each" }).click();
     await expect.poll(async () => (await readLegend(page)).colours.length, POLL).toBe(6);
     await expect
       .poll(async () => (await sampleMap(page)).filter(({ drawn, wanted }) => drawn !== wanted), POLL)

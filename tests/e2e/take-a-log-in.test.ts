@@ -71,7 +71,8 @@ describe.each(["wide", "phone"] as const)("story 1, %s: an operator takes a log 
     await verdict.click();
     await page.waitForURL(/\/rows\?log=log_/);
     await page.getByRole("heading", { name: "Verdict" }).waitFor();
-    await page.getByText("See it on the map").first().waitFor();
+    await page.getByText("ran under target").first().waitFor();
+    await page.getByRole("button", { name: "Classes" }).waitFor();
     expect(await picture("story-1-verdict")).toBeLessThanOrEqual(0);
     expect(complaints).toEqual([]);
     await context.close();
