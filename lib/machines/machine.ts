@@ -25,7 +25,7 @@ export const SeederInput = z.object({
   kind: z.literal("seeder"),
   name,
   rowCount: z.number().int().min(1).max(256),
-  rowSpacingM: z.number().min(0.02).max(5),
+  rowSpacingM: z.number().positive().max(5),
   rowOffsetsM: z.array(metres).optional(),
   rowForwardM: z.array(metres).optional(),
   antennaToRowsM: metres,

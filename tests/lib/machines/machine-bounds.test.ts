@@ -13,7 +13,6 @@ describe("a machine's numbers", () => {
     { rowCount: 2, rowOffsetsM: [-500, 500] },
     { antennaToRowsM: 1e308 },
     { antennaRightM: 500 },
-    { rowSpacingM: 0.00075 },
     { rowUnitMassKg: 1e308 },
     { maxDownforceN: 1e12 },
     { frame: { ...LARKSPUR_DRILL.frame, wheelsBehindHitchM: 1e9 } },
