@@ -39,14 +39,14 @@ describe("an operator removes", () => {
   ] as const)("no log %s, though they uploaded it", async (_, change) => {
     const id = await upload("operator", change);
     expect(await world.read("operator", { path: `/api/v1/logs/${id}` })).toMatchObject({ removable: false });
-    expect(await remove("operator", id)).toBe(403);
+    expect(await remove("operator", id)).toBe(409);
     expect((await world.getLog(id)).id).toBe(id);
     expect(await remove("agronomist", id)).toBe(204);
   });
 
   it("no upload of somebody else", async () => {
     const id = await upload("agronomist");
-    expect(await remove("operator", id)).toBe(403);
+    expect(await remove("operator", id)).toBe(409);
     expect(await remove("researcher", id)).toBe(403);
     expect(await remove("owner", id)).toBe(204);
   });

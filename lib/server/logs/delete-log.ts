@@ -13,13 +13,13 @@ const NOT_YOURS =
 
 /**
  * Removes a log with everything derived from it, and its file where no other log keeps the same bytes. A worker reading
- * it notices and stops. @throws AppError `not_found`, `forbidden` where it is not the caller's to remove
+ * it notices and stops. @throws AppError `not_found`, `conflict` where it is not the caller's to remove
  */
 export async function deleteLog(container: Container, scope: Scope, logId: string): Promise<void> {
   await withOrganisation(scope, async (tx) => {
     const log = await getLogOrThrow(tx, scope, logId);
     if (!(await isLogRemovable(tx, scope, logId)))
-      throw new AppError("forbidden", NOT_YOURS, { detailCode: "log_kept" });
+      throw new AppError("conflict", NOT_YOURS, { detailCode: "log_kept" });
     await lockBytes(tx, scope, log.sha256);
     const isShared = await isFileInUse(tx, scope, { sha256: log.sha256, exceptLogId: logId });
     await deleteLogRows(tx, scope, logId);
