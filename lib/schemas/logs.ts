@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { plainText } from "@/lib/schemas/plain-text";
+import { OverlapByCause } from "@/lib/schemas/coverage";
 import { Id, Instant, listOf, NullableNumber } from "@/lib/schemas/listing";
 import { PlaceGeometry } from "@/lib/schemas/geometry";
 
@@ -194,6 +195,10 @@ export const CoverageBody = z.object({
   overlapM2: z.number(),
   skippedM2: z.number(),
   resolutionM: z.number(),
+  /** Why ground was worked twice; the areas add up to `overlapM2`. Versions of earlier builds do not say. */
+  overlapByCause: z.array(OverlapByCause).optional(),
+  /** Pieces of ground left out between worked ground. */
+  skips: z.object({ count: z.number().int(), areaM2: z.number(), largestM2: z.number() }).optional(),
 });
 export type CoverageBody = z.infer<typeof CoverageBody>;
 
