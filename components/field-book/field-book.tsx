@@ -68,7 +68,8 @@ function OpenLog({ field, log, logsHref, basemap, picker }: OpenLogProps) {
   const [book] = useState(() => {
     const { log: addressLog, ...address } = readAddress(new URLSearchParams(search.toString()));
     // Pass, row and view in an address belong to the log it names, not to another one.
-    const { edges = null, ...start } = addressLog === log.id ? address : { channel: address.channel };
+    const { edges = null, ...start } =
+      addressLog === log.id ? address : { channel: address.channel, cleaned: address.cleaned };
     const channels = channelsOf(log);
     const channel = start.channel && channels.includes(start.channel) ? start.channel : (channels[0] ?? "rowSpeed");
     return {

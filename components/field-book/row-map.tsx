@@ -2,6 +2,7 @@
 
 import type { Map as MapLibreMap } from "maplibre-gl";
 import { useState } from "react";
+import { useGroundOverlays } from "@/components/coverage/use-ground-overlays";
 import { CellMark } from "@/components/field-book/cell-mark";
 import { useBook, useBookState } from "@/components/field-book/field-book-context";
 import type { Classes } from "@/components/field-book/use-classes";
@@ -33,6 +34,7 @@ export function RowMap({ basemap, bounds, boundary, classes, track, gentle }: Ro
   const channel = useBookState((state) => state.channel);
   useMapGround(map, { bounds, boundary });
   useMapValues(map, classes);
+  useGroundOverlays(map);
   useMapMarks(map, track);
   useMapPointer(map);
   return (

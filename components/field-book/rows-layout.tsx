@@ -1,6 +1,7 @@
 "use client";
 
 import { useEffect, useState, type ReactNode } from "react";
+import { CoveragePanel } from "@/components/coverage/coverage-panel";
 import { ChannelSwitch } from "@/components/field-book/channel-switch";
 import { useBook, useBookState } from "@/components/field-book/field-book-context";
 import { FieldStrip } from "@/components/field-book/field-strip";
@@ -58,7 +59,10 @@ export function RowsLayout({ field, basemap, picker, logsHref }: RowsLayoutProps
         {parts.table ? <div className="absolute inset-0 z-20">{parts.table}</div> : null}
       </div>
       <div className="grid min-h-0 grid-rows-[minmax(0,1fr)_22rem] divide-y divide-rule border-l border-rule bg-sheet">
-        <div className="overflow-y-auto">{parts.verdict}</div>
+        <div className="divide-y divide-rule overflow-y-auto">
+          {parts.verdict}
+          {parts.coverage}
+        </div>
         {parts.lineUp}
       </div>
     </div>
@@ -76,6 +80,7 @@ function NarrowRows({ parts, picker }: { parts: Parts; picker: ReactNode }) {
       <div className="h-[26rem]">{parts.map}</div>
       <div className="px-4 py-3">{parts.legend}</div>
       <div className="bg-sheet">{parts.table ?? parts.lineUp}</div>
+      <div className="bg-sheet">{parts.coverage}</div>
       <div className="px-4 py-3">
         {parts.passHeading}
         <div className="py-2">{parts.strip}</div>
@@ -126,6 +131,7 @@ function useParts({ field, basemap, wide, logsHref }: PartsOptions) {
         openFirst={wide}
       />
     ),
+    coverage: <CoveragePanel />,
     lineUp: <LineUp statistics={statistics} classes={classes} onTable={() => setAsTable(true)} />,
     table: asTable && statistics ? <LineUpTable statistics={statistics} onClose={() => setAsTable(false)} /> : null,
     passHeading: <PassHeading passes={passes} />,

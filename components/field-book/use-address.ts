@@ -12,8 +12,8 @@ export function useAddress(store: FieldBookStore, logId: string): void {
   useEffect(() => {
     let waiting: ReturnType<typeof setTimeout> | undefined;
     const write = () => {
-      const { channel, pass, row, view, edges } = store.getState();
-      const search = writeAddress({ log: logId, channel, pass, row, view, edges: edges[channel] ?? null });
+      const { edges, ...state } = store.getState();
+      const search = writeAddress({ ...state, log: logId, edges: edges[state.channel] ?? null });
       window.history.replaceState(window.history.state, "", `${window.location.pathname}?${search.toString()}`);
     };
     const stop = store.subscribe((now, before) => {
@@ -22,6 +22,8 @@ export function useAddress(store: FieldBookStore, logId: string): void {
         now.pass === before.pass &&
         now.row === before.row &&
         now.edges === before.edges &&
+        now.cleaned === before.cleaned &&
+        now.ground === before.ground &&
         now.view === before.view;
       if (same) return;
       clearTimeout(waiting);

@@ -1,9 +1,10 @@
 import { areClassEdges } from "@/lib/legend/class-edges";
 import { isChannelId } from "@/lib/logs/channel";
 import type { FieldBookState, MapView } from "@/lib/map-state/field-book-store";
+import { isGroundLayer } from "@/lib/map-state/ground-layers";
 
 /** The part of the state that an address carries, so that a link shows the same thing. */
-export type AddressState = Pick<FieldBookState, "channel" | "pass" | "row" | "view"> & {
+export type AddressState = Pick<FieldBookState, "channel" | "pass" | "row" | "view" | "cleaned" | "ground"> & {
   log: string | null;
   /** The person's own class edges of the channel, SI; null for the channel's default. */
   edges: number[] | null;
@@ -32,7 +33,7 @@ function readEdges(text: string | null): number[] | null {
   return edges.length <= MOST_EDGES && areClassEdges(edges) ? edges : null;
 }
 
-/** Reads `log, channel, pass, row, view, edges`; whatever does not make sense is left out. */
+/** Reads `log, channel, pass, row, view, edges, cleaned, ground`; whatever does not make sense is left out. */
 export function readAddress(search: URLSearchParams): Partial<AddressState> {
   const channel = search.get("channel");
   const state: Partial<AddressState> = {
@@ -41,6 +42,8 @@ export function readAddress(search: URLSearchParams): Partial<AddressState> {
     row: readPositiveInteger(search.get("row")),
     view: readView(search.get("view")),
     edges: readEdges(search.get("edges")),
+    cleaned: search.get("cleaned") !== "0",
+    ground: (search.get("ground") ?? "").split(",").filter(isGroundLayer),
   };
   if (channel !== null && isChannelId(channel)) state.channel = channel;
   return state;
@@ -58,5 +61,7 @@ export function writeAddress(state: AddressState): URLSearchParams {
     search.set("view", `${longitude.toFixed(6)},${latitude.toFixed(6)},${zoom.toFixed(2)}`);
   }
   if (state.edges) search.set("edges", state.edges.map((edge) => String(Number(edge.toPrecision(9)))).join(","));
+  if (!state.cleaned) search.set("cleaned", "0");
+  if (state.ground.length > 0) search.set("ground", state.ground.join(","));
   return search;
 }

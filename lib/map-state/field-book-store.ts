@@ -1,4 +1,5 @@
 import { createStore } from "zustand/vanilla";
+import { toggleGroundLayer, type GroundLayer } from "@/lib/map-state/ground-layers";
 
 /** A reading pointed at: pass, record within the pass (from 0) and row (from 1). */
 export interface Cursor {
@@ -38,6 +39,10 @@ export interface FieldBookState {
   place: unknown;
   /** A wish to see a place on the map; `wish` grows so that the same place can be asked for twice. */
   frame: { bounds: Bounds; wish: number } | null;
+  /** Whether cleaning rules apply to everything shown; false for the log as it was read. */
+  cleaned: boolean;
+  /** What of the ground lies over the readings. */
+  ground: readonly GroundLayer[];
 }
 
 export interface FieldBookActions {
@@ -53,6 +58,8 @@ export interface FieldBookActions {
   setEdges(channel: string, edges: number[] | null): void;
   showPlace(place: unknown): void;
   askToFrame(bounds: Bounds): void;
+  setCleaned(cleaned: boolean): void;
+  toggleGround(layer: GroundLayer): void;
 }
 
 export type FieldBookStore = ReturnType<typeof createFieldBookStore>;
@@ -68,6 +75,8 @@ const EMPTY: FieldBookState = {
   edges: {},
   place: null,
   frame: null,
+  cleaned: true,
+  ground: [],
 };
 
 /** What a person looks at in one field's book. Knows nothing of React or of the server. */
@@ -100,6 +109,8 @@ export function createFieldBookStore(initial: Partial<FieldBookState> = {}) {
       }),
     showPlace: (place) => set({ place }),
     askToFrame: (bounds) => set((state) => ({ frame: { bounds, wish: (state.frame?.wish ?? 0) + 1 } })),
+    setCleaned: (cleaned) => set({ cleaned }),
+    toggleGround: (layer) => set((state) => ({ ground: toggleGroundLayer(state.ground, layer) })),
   }));
 }
 
