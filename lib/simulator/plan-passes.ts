@@ -31,25 +31,28 @@ export interface PlanInPolygon {
   headlandM: number;
   /** Shorter lines are left undriven. */
   minimumLengthM: number;
+  /** Run on until the whole width has left the field, rather than lift where the first row would leave it. */
+  runsOut?: boolean;
 }
 
-/** Straight lines side by side through a convex polygon, leftmost first; the whole width stays inside, less the headland. */
+/** Straight lines side by side through a convex polygon, leftmost first; the whole width stays inside, less the headland, unless it runs out. */
 export function planPassesInPolygon(plan: PlanInPolygon): PlannedPass[] {
   const across = plan.ring.map((point) => point[1]);
-  const last = Math.max(...across) - plan.widthM / 2;
+  const lastAcrossM = Math.max(...across) - plan.widthM / 2;
   const passes: PlannedPass[] = [];
-  for (let acrossM = Math.min(...across) + plan.widthM / 2; acrossM <= last + 1e-6; acrossM += plan.spacingM) {
+  for (let acrossM = Math.min(...across) + plan.widthM / 2; acrossM <= lastAcrossM + 1e-6; acrossM += plan.spacingM) {
     const edge = plan.widthM / 2 - 1e-6;
     const spans = [acrossM - edge, acrossM, acrossM + edge].map((line) => spanOfLine(plan.ring, line));
-    const fromAlongM = Math.max(...spans.map((span) => span[0])) + plan.headlandM;
-    const toAlongM = Math.min(...spans.map((span) => span[1])) - plan.headlandM;
+    const [first, last] = plan.runsOut ? [Math.min, Math.max] : [Math.max, Math.min];
+    const fromAlongM = first(...spans.map((span) => span[0])) + plan.headlandM;
+    const toAlongM = last(...spans.map((span) => span[1])) - plan.headlandM;
     if (toAlongM - fromAlongM >= plan.minimumLengthM) passes.push({ acrossM, fromAlongM, toAlongM });
   }
   return passes;
 }
 
 /** Where the line at `acrossM` enters and leaves a convex ring; [Infinity, -Infinity] where it misses. */
-function spanOfLine(ring: [number, number][], acrossM: number): [number, number] {
+export function spanOfLine(ring: [number, number][], acrossM: number): [number, number] {
   let from = Infinity;
   let to = -Infinity;
   ring.forEach(([alongA, acrossA], index) => {

@@ -51,6 +51,7 @@ function linesOf(options: SimulationOptions, plane: LocalPlane, axes: FieldAxes)
     spacingM,
     headlandM: options.headlandM,
     minimumLengthM: SHORTEST_PASS_M,
+    runsOut: options.sectionControl !== null,
   });
   const { first, last } = options.shape.lines ?? { first: 1, last: passes.length };
   const driven = passes.slice(first - 1, last);

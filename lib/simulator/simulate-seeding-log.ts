@@ -10,6 +10,7 @@ import { type PlannedTrack, planTrack } from "@/lib/simulator/plan-track";
 import { layOutRows, type RowLayout } from "@/lib/simulator/row-layout";
 import { createSeededRandom } from "@/lib/simulator/seeded-random";
 import { senseChannel } from "@/lib/simulator/sense-channel";
+import { switchSections } from "@/lib/simulator/switch-sections";
 import { type RowForces, simulateRowForces } from "@/lib/simulator/simulate-row-forces";
 import {
   resolveSimulationOptions,
@@ -35,6 +36,8 @@ export function simulateSeedingLog(input: SimulationInput): SimulatedLog {
   const ground = createGround(options, planned.plane);
   const forces = simulateRowForces({ options, track: planned.track, ground, layout });
   const log = writeDown(options, planned, forces);
+  const isOn = switchSections({ options, planned, layout });
+  if (isOn) blankSwitchedOff(log, isOn);
   return { log, truth: describeTruth({ options, planned, layout, forces, log }) };
 }
 
@@ -60,6 +63,11 @@ function writeDown(options: SimulationOptions, { track, plane }: PlannedTrack, f
     sourceLine: Uint32Array.from({ length: track.records }, (_, record) => record + 2),
     channels: options.channels.map((id) => senseRows(options, track, forces, id)),
   };
+}
+
+/** A section that is switched off writes no readings. */
+function blankSwitchedOff(log: MachineLog, isOn: Uint8Array): void {
+  for (const { values } of log.channels) isOn.forEach((on, at) => on === 0 && (values[at] = NaN));
 }
 
 /** The antenna rides `antennaToRowsM` ahead of the line of rows and `antennaRightM` right of its middle. */
@@ -151,7 +159,10 @@ function describeTruth({ options, planned: { track, axes }, layout, forces, log 
     rowEffectN: [...forces.rowEffectN],
     wornRow: options.wornRow,
     wheelTracks: options.wheelTracks,
-    coverage: options.headland?.downInCorners ? null : describeCoverage({ track, layout, passes, axes }),
+    coverage:
+      options.headland?.downInCorners || options.sectionControl
+        ? null
+        : describeCoverage({ track, layout, passes, axes }),
     shareLifted: lifted / all,
     liftedM2: lifted * layout.spacingM,
     weight: frame

@@ -72,6 +72,11 @@ export interface SimulationOptions {
   headlandM: number;
   /** Rounds drilled along the boundary before the passes (`block` only); lifted in the corners unless `downInCorners`. */
   headland: { rounds: number; downInCorners: boolean } | null;
+  /**
+   * Sections of so many rows that switch off past the end of their own ground (`polygon` only): passes then run on until the
+   * last section has left the field, less the headland.
+   */
+  sectionControl: { rowsPerSection: number; delayS: number } | null;
   turnRadiusM: number;
   startedAt: string;
   recordIntervalS: number;
@@ -131,6 +136,7 @@ export const SIMULATION_DEFAULTS: SimulationOptions = {
   passWanderM: 0,
   headlandM: 18,
   headland: null,
+  sectionControl: null,
   turnRadiusM: 7,
   startedAt: "2026-09-24T14:05:00.000Z",
   recordIntervalS: 0.5,
@@ -165,6 +171,9 @@ export function resolveSimulationOptions(input: SimulationInput): SimulationOpti
   requirePositive("turnRadiusM", options.turnRadiusM);
   if (options.headland && options.shape.kind !== "block") {
     throw new RangeError("resolveSimulationOptions: headland rounds need a block, this field is a polygon");
+  }
+  if (options.sectionControl && options.shape.kind !== "polygon") {
+    throw new RangeError("resolveSimulationOptions: section control needs a polygon, this field is a block");
   }
   if (options.frameLifts && !options.machine.frame) {
     throw new RangeError("resolveSimulationOptions: frameLifts needs a machine with a frame");

@@ -57,7 +57,7 @@ export interface SimulationTruth {
   rowEffectN: number[];
   wornRow: WornRow | null;
   wheelTracks: WheelTrackRows | null;
-  /** Null where the implement worked through curves. */
+  /** Null where the implement worked through curves or switched sections off. */
   coverage: CoverageTruth | null;
   /** Share of the working distance (and its area) with the frame's wheels off the ground. */
   shareLifted: number;
