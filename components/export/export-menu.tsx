@@ -14,6 +14,8 @@ export interface ExportMenuProps {
   log: Log;
   /** Classes of the channel that is looked at, in SI; null where none is. */
   zones?: ExportChoice["zones"] | null;
+  /** False: files of the log as it was read. */
+  cleaned?: boolean;
 }
 
 interface Line {
@@ -36,7 +38,7 @@ const POLYGONS: readonly Line[] = READINGS.filter(({ format }) =>
 );
 
 /** What of a log may be taken away as a file. The browser shows how the download goes. */
-export function ExportMenu({ log, zones }: ExportMenuProps) {
+export function ExportMenu({ log, zones, cleaned = true }: ExportMenuProps) {
   return (
     <Menu
       trigger={
@@ -48,21 +50,37 @@ export function ExportMenu({ log, zones }: ExportMenuProps) {
     >
       <MenuGroup title="Every reading, with units and notes">
         {linesOf(log).map((line) => (
-          <MenuLink key={line.format + line.shape} href={exportPath(log.id, { ...line, level: "readings" })} download>
+          <MenuLink
+            key={line.format + line.shape}
+            href={exportPath(log.id, { ...line, level: "readings", cleaned })}
+            download
+          >
             {line.words}
             <span className="ml-auto pl-6 text-table text-ink-soft">{sizeWords(log, line)}</span>
           </MenuLink>
         ))}
       </MenuGroup>
       {zones ? (
-        <Polygons log={log} title={`Zones of ${channelWords(zones.channel).name}, as coloured`} zones={zones} />
+        <Polygons
+          log={log}
+          title={`Zones of ${channelWords(zones.channel).name}, as coloured`}
+          zones={zones}
+          cleaned={cleaned}
+        />
       ) : null}
-      <Polygons log={log} title="Ground of each pass" />
+      <Polygons log={log} title="Ground of each pass" cleaned={cleaned} />
     </Menu>
   );
 }
 
-function Polygons({ log, title, zones }: { log: Log; title: string; zones?: ExportChoice["zones"] }) {
+interface PolygonsProps {
+  log: Log;
+  title: string;
+  zones?: ExportChoice["zones"];
+  cleaned: boolean;
+}
+
+function Polygons({ log, title, zones, cleaned }: PolygonsProps) {
   return (
     <>
       <MenuRule />
@@ -70,7 +88,7 @@ function Polygons({ log, title, zones }: { log: Log; title: string; zones?: Expo
         {POLYGONS.map(({ format, words }) => (
           <MenuLink
             key={format}
-            href={exportPath(log.id, { format, level: zones ? "zones" : "swaths", zones })}
+            href={exportPath(log.id, { format, level: zones ? "zones" : "swaths", zones, cleaned })}
             download
           >
             {words}

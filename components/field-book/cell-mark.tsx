@@ -3,7 +3,7 @@
 import { useQuery } from "@tanstack/react-query";
 import type { Map as MapLibreMap } from "maplibre-gl";
 import { useEffect, useState } from "react";
-import { useBook, useBookState } from "@/components/field-book/field-book-context";
+import { useBookState, useLogVersion } from "@/components/field-book/field-book-context";
 import { trackQuery } from "@/components/field-book/use-log-data";
 import { cellRing } from "@/lib/map-state/pass-cells";
 
@@ -12,7 +12,7 @@ import { cellRing } from "@/lib/map-state/pass-cells";
  * paints the whole map again, far too slow for every move of the pointer.
  */
 export function CellMark({ map }: { map: MapLibreMap }) {
-  const { logVersion } = useBook();
+  const logVersion = useLogVersion();
   const channel = useBookState((state) => state.channel);
   const cursor = useBookState((state) => state.cursor);
   const { data: track } = useQuery({

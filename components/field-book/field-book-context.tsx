@@ -1,6 +1,6 @@
 "use client";
 
-import { createContext, useContext, type ReactNode } from "react";
+import { createContext, useContext, useMemo, type ReactNode } from "react";
 import { useStore } from "zustand";
 import type { LogVersion } from "@/components/field-book/use-log-data";
 import type { FieldBook, FieldBookStore } from "@/lib/map-state/field-book-store";
@@ -28,4 +28,11 @@ export function useBook(): Book {
 /** One part of what is looked at; the component is drawn again only when that part changes. */
 export function useBookState<Part>(select: (state: FieldBook) => Part): Part {
   return useStore(useBook().store, select);
+}
+
+/** The open log with its adjustments, or as it was read where the person chose so. */
+export function useLogVersion(): LogVersion {
+  const { logVersion } = useBook();
+  const cleaned = useBookState((state) => state.cleaned);
+  return useMemo(() => ({ ...logVersion, cleaned }), [logVersion, cleaned]);
 }

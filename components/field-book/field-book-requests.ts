@@ -6,6 +6,7 @@ import {
   ReadingAt,
   RowStatisticsBody,
   TileJson,
+  VerdictBody,
   type PassBody,
 } from "@/lib/schemas/logs";
 
@@ -27,20 +28,36 @@ export async function fetchPasses(logId: string): Promise<PassBody[]> {
   return passes;
 }
 
-export function fetchReadings(logId: string, channel: string, pass: number): Promise<PassReadings> {
-  return requestJson(PassReadings, `${ROOT}/${logId}/passes/${pass}/readings?channel=${encodeURIComponent(channel)}`);
+/** A log and whether its adjustments apply. */
+export interface ReadLog {
+  logId: string;
+  cleaned?: boolean;
 }
 
-export function fetchRowStatistics(logId: string, channel: string): Promise<RowStatisticsBody> {
-  return requestJson(RowStatisticsBody, `${ROOT}/${logId}/rows?channel=${encodeURIComponent(channel)}`);
+/** The address of an answer about a channel. */
+function channelPath({ logId, cleaned = true }: ReadLog, answer: string, channel: string): string {
+  return `${ROOT}/${logId}/${answer}?channel=${encodeURIComponent(channel)}${cleaned ? "" : "&cleaned=false"}`;
 }
 
-export function fetchOverview(logId: string, channel: string): Promise<LogOverview> {
-  return requestJson(LogOverview, `${ROOT}/${logId}/overview?channel=${encodeURIComponent(channel)}`);
+export function fetchReadings(log: ReadLog, channel: string, pass: number): Promise<PassReadings> {
+  return requestJson(PassReadings, channelPath(log, `passes/${pass}/readings`, channel));
 }
 
-export function fetchTileJson(logId: string, channel: string): Promise<TileJson> {
-  return requestJson(TileJson, `${ROOT}/${logId}/tiles/${encodeURIComponent(channel)}/tiles.json`);
+export function fetchRowStatistics(log: ReadLog, channel: string): Promise<RowStatisticsBody> {
+  return requestJson(RowStatisticsBody, channelPath(log, "rows", channel));
+}
+
+export function fetchOverview(log: ReadLog, channel: string): Promise<LogOverview> {
+  return requestJson(LogOverview, channelPath(log, "overview", channel));
+}
+
+export function fetchTileJson({ logId, cleaned = true }: ReadLog, channel: string): Promise<TileJson> {
+  const query = cleaned ? "" : "?cleaned=false";
+  return requestJson(TileJson, `${ROOT}/${logId}/tiles/${encodeURIComponent(channel)}/tiles.json${query}`);
+}
+
+export function fetchVerdict({ logId, cleaned = true }: ReadLog): Promise<VerdictBody> {
+  return requestJson(VerdictBody, `${ROOT}/${logId}/verdict${cleaned ? "" : "?cleaned=false"}`);
 }
 
 export function fetchReadingAt(logId: string, longitude: number, latitude: number): Promise<ReadingAt> {

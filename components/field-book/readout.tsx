@@ -1,7 +1,7 @@
 "use client";
 
 import { useChannelUnits } from "@/components/field-book/use-channel-units";
-import { useBook, useBookState } from "@/components/field-book/field-book-context";
+import { useBook, useBookState, useLogVersion } from "@/components/field-book/field-book-context";
 import { trackQuery } from "@/components/field-book/use-log-data";
 import { useQuery } from "@tanstack/react-query";
 import { flagCodes, type FlagCode } from "@/lib/cleaning/flags";
@@ -46,7 +46,7 @@ export function Readout({ spoken }: { spoken: boolean }) {
 }
 
 function ReadingWords({ cursor }: { cursor: Cursor }) {
-  const { logVersion } = useBook();
+  const logVersion = useLogVersion();
   const channel = useBookState((state) => state.channel);
   const { data: track } = useQuery(trackQuery(logVersion, channel, cursor.pass));
   if (!track || track.channel !== channel) return <span>Reading…</span>;

@@ -3,7 +3,7 @@
 import { useEffect, useState, type ReactNode } from "react";
 import { CoveragePanel } from "@/components/coverage/coverage-panel";
 import { ChannelSwitch } from "@/components/field-book/channel-switch";
-import { useBook, useBookState } from "@/components/field-book/field-book-context";
+import { useBook, useBookState, useLogVersion } from "@/components/field-book/field-book-context";
 import { FieldStrip } from "@/components/field-book/field-strip";
 import { Legend } from "@/components/field-book/legend";
 import { LineUp } from "@/components/field-book/line-up";
@@ -12,10 +12,15 @@ import { PassHeading } from "@/components/field-book/pass-heading";
 import { RowMap } from "@/components/field-book/row-map";
 import { UnrolledPass } from "@/components/field-book/unrolled-pass";
 import { useClasses } from "@/components/field-book/use-classes";
-import { useOverview, usePasses, useRowStatistics, useTrack } from "@/components/field-book/use-log-data";
+import {
+  useLogVerdict,
+  useOverview,
+  usePasses,
+  useRowStatistics,
+  useTrack,
+} from "@/components/field-book/use-log-data";
 import { useWideScreen } from "@/components/field-book/use-wide-screen";
 import { VerdictPanel } from "@/components/field-book/verdict-panel";
-import { useVerdict } from "@/components/hooks/use-logs";
 import type { BasemapConfig } from "@/components/map/basemap-config";
 import type { Bounds } from "@/lib/map-state/field-book-store";
 import { boundsOfGeometry } from "@/lib/map-state/geometry-bounds";
@@ -98,13 +103,14 @@ interface PartsOptions extends Pick<RowsLayoutProps, "field" | "basemap" | "logs
 
 /** Everything the page shows, fed with the open log; where it goes depends on the screen. */
 function useParts({ field, basemap, wide, logsHref }: PartsOptions) {
-  const { log, logVersion } = useBook();
+  const { log } = useBook();
+  const logVersion = useLogVersion();
   const channel = useBookState((state) => state.channel);
   const [asTable, setAsTable] = useState(false);
   const { data: passes = [] } = usePasses(logVersion);
   const { data: overview } = useOverview(logVersion, channel);
   const { data: statistics } = useRowStatistics(logVersion, channel);
-  const verdict = useVerdict(log.id, log.version, log.kind !== "harvest");
+  const verdict = useLogVerdict(logVersion, log.kind !== "harvest");
   const track = useChosenTrack(passes);
   const classes = useClasses(channel, overview);
   const current = statistics?.channel === channel ? statistics : undefined;
@@ -150,7 +156,8 @@ function useParts({ field, basemap, wide, logsHref }: PartsOptions) {
 
 /** The readings of the chosen pass; until somebody chooses one, the longest inside the field. */
 function useChosenTrack(passes: readonly PassBody[]) {
-  const { store, logVersion } = useBook();
+  const { store } = useBook();
+  const logVersion = useLogVersion();
   const channel = useBookState((state) => state.channel);
   const pass = useBookState((state) => state.pass);
   const opening = openingPass(passes);

@@ -7,31 +7,40 @@ import {
   fetchReadings,
   fetchRowStatistics,
   fetchTileJson,
+  fetchVerdict,
 } from "@/components/field-book/field-book-requests";
 import { createPassTrack } from "@/lib/map-state/pass-track";
 
-/** A version of a log never changes, so nothing about it is asked for twice. */
+/** A version of a log with one revision of its adjustments never changes, so nothing about it is asked for twice. */
 export interface LogVersion {
   logId: string;
   version: number;
+  /** Number of the adjustments in force; 0 for a log as it was read. */
+  revision?: number;
+  /** False: the log as it was read, whatever adjustments there are. */
+  cleaned?: boolean;
 }
 
 const FOREVER = { staleTime: Infinity, gcTime: 10 * 60_000 } as const;
 
-function keyOf({ logId, version }: LogVersion, ...rest: (string | number)[]) {
-  return ["log-version", logId, version, ...rest] as const;
+/** Name of an answer about a log in the cache. */
+export function logVersionKey(
+  { logId, version, revision = 0, cleaned = true }: LogVersion,
+  ...rest: (string | number)[]
+) {
+  return ["log-version", logId, version, cleaned ? revision : "as-logged", ...rest] as const;
 }
 
 export function trackQuery(log: LogVersion, channel: string, pass: number) {
   return queryOptions({
-    queryKey: keyOf(log, "track", channel, pass),
-    queryFn: async () => createPassTrack(await fetchReadings(log.logId, channel, pass)),
+    queryKey: logVersionKey(log, "track", channel, pass),
+    queryFn: async () => createPassTrack(await fetchReadings(log, channel, pass)),
     ...FOREVER,
   });
 }
 
 export function usePasses(log: LogVersion) {
-  return useQuery({ queryKey: keyOf(log, "passes"), queryFn: () => fetchPasses(log.logId), ...FOREVER });
+  return useQuery({ queryKey: logVersionKey(log, "passes"), queryFn: () => fetchPasses(log.logId), ...FOREVER });
 }
 
 /** The readings of one pass; while another is fetched the one before stays, so nothing jumps. */
@@ -45,8 +54,8 @@ export function useTrack(log: LogVersion, channel: string, pass: number | null) 
 
 export function useRowStatistics(log: LogVersion, channel: string) {
   return useQuery({
-    queryKey: keyOf(log, "rows", channel),
-    queryFn: () => fetchRowStatistics(log.logId, channel),
+    queryKey: logVersionKey(log, "rows", channel),
+    queryFn: () => fetchRowStatistics(log, channel),
     placeholderData: keepPreviousData,
     ...FOREVER,
   });
@@ -54,8 +63,8 @@ export function useRowStatistics(log: LogVersion, channel: string) {
 
 export function useOverview(log: LogVersion, channel: string) {
   return useQuery({
-    queryKey: keyOf(log, "overview", channel),
-    queryFn: () => fetchOverview(log.logId, channel),
+    queryKey: logVersionKey(log, "overview", channel),
+    queryFn: () => fetchOverview(log, channel),
     placeholderData: keepPreviousData,
     ...FOREVER,
   });
@@ -63,8 +72,17 @@ export function useOverview(log: LogVersion, channel: string) {
 
 export function useTileJson(log: LogVersion, channel: string) {
   return useQuery({
-    queryKey: keyOf(log, "tiles", channel),
-    queryFn: () => fetchTileJson(log.logId, channel),
+    queryKey: logVersionKey(log, "tiles", channel),
+    queryFn: () => fetchTileJson(log, channel),
+    ...FOREVER,
+  });
+}
+
+export function useLogVerdict(log: LogVersion, isWanted: boolean) {
+  return useQuery({
+    queryKey: logVersionKey(log, "verdict"),
+    queryFn: () => fetchVerdict(log),
+    enabled: isWanted,
     ...FOREVER,
   });
 }

@@ -3,9 +3,9 @@
 import { useQueryClient, type QueryClient } from "@tanstack/react-query";
 import type { LngLat, Map as MapLibreMap, MapMouseEvent } from "maplibre-gl";
 import { useEffect } from "react";
-import { useBook } from "@/components/field-book/field-book-context";
+import { useBook, useLogVersion } from "@/components/field-book/field-book-context";
 import { fetchReadingAt } from "@/components/field-book/field-book-requests";
-import { trackQuery, type LogVersion } from "@/components/field-book/use-log-data";
+import { logVersionKey, trackQuery, type LogVersion } from "@/components/field-book/use-log-data";
 import type { Cursor, FieldBookStore } from "@/lib/map-state/field-book-store";
 import { locateInPass } from "@/lib/map-state/pass-cells";
 import type { PassTrack } from "@/lib/map-state/pass-track";
@@ -23,7 +23,7 @@ interface Finder {
 function tracksAtHand({ client, log, store }: Finder): PassTrack[] {
   const { channel, pass } = store.getState();
   const queries = client.getQueriesData<PassTrack>({
-    queryKey: ["log-version", log.logId, log.version, "track", channel],
+    queryKey: logVersionKey(log, "track", channel),
   });
   return queries
     .flatMap(([, track]) => (track ? [track] : []))
@@ -48,7 +48,8 @@ async function findFarAway(finder: Finder, place: LngLat): Promise<Cursor | null
 
 /** Pointing names a reading, from memory where its pass is loaded; a click unrolls the pass there. */
 export function useMapPointer(map: MapLibreMap | null): void {
-  const { store, logVersion } = useBook();
+  const { store } = useBook();
+  const logVersion = useLogVersion();
   const client = useQueryClient();
   useEffect(() => {
     if (!map) return;

@@ -2,7 +2,7 @@
 
 import type { Map as MapLibreMap } from "maplibre-gl";
 import { useEffect, useRef } from "react";
-import { useBook, useBookState } from "@/components/field-book/field-book-context";
+import { useBookState, useLogVersion } from "@/components/field-book/field-book-context";
 import type { Classes } from "@/components/field-book/use-classes";
 import { useTileJson } from "@/components/field-book/use-log-data";
 import { FIRST_LAYER_OVER_VALUES } from "@/components/map/overlay-layers";
@@ -10,7 +10,7 @@ import { colourExpression, recolourValues, showValues } from "@/components/map/v
 
 /** The channel's tiles in class colours. A change of classes recolours what is there; only a change of channel asks for tiles. */
 export function useMapValues(map: MapLibreMap | null, classes: Classes | null): void {
-  const { logVersion } = useBook();
+  const logVersion = useLogVersion();
   const channel = useBookState((state) => state.channel);
   const { data: tileJson } = useTileJson(logVersion, channel);
   const shown = useRef<{ map: MapLibreMap; address: string } | null>(null);

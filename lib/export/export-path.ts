@@ -6,10 +6,12 @@ export interface ExportChoice {
   shape?: ExportShape;
   /** Class edges in SI, for zones. */
   zones?: { channel: string; edges: readonly number[] };
+  /** False: the log as it was read, without its cleaning rules. */
+  cleaned?: boolean;
 }
 
 /** Address of an export; CSV comes zipped, with its notes. */
-export function exportPath(logId: string, { format, level, shape, zones }: ExportChoice): string {
+export function exportPath(logId: string, { format, level, shape, zones, cleaned = true }: ExportChoice): string {
   const query = new URLSearchParams({ format, level });
   if (shape === "wide") query.set("shape", shape);
   if (format === "csv") query.set("bundle", "zip");
@@ -17,5 +19,6 @@ export function exportPath(logId: string, { format, level, shape, zones }: Expor
     query.set("channel", zones.channel);
     query.set("breaks", zones.edges.join(","));
   }
+  if (!cleaned) query.set("cleaned", "false");
   return `/api/v1/logs/${logId}/export?${query}`;
 }
