@@ -33,6 +33,8 @@ export const logs = pgTable(
     /** The machine as it was when this version was built. */
     machineBody: jsonb().$type<Machine>(),
     recipeId: text(),
+    /** The version of the recipe that this log was read with. */
+    recipeVersion: integer(),
     mapping: jsonb().$type<LogMapping>(),
     name: text().notNull(),
     kind: text().$type<Log["kind"]>().notNull().default("seeding"),
@@ -127,25 +129,4 @@ export const logResults = pgTable(
     body: jsonb().$type<unknown>().notNull(),
   },
   (table) => [primaryKey({ columns: [table.organisationId, table.logId, table.version, table.kind] })],
-);
-
-/** Column meanings a person confirmed, offered to the next file with the same header. */
-export const recipes = pgTable(
-  "recipes",
-  {
-    organisationId: text()
-      .notNull()
-      .references(() => organisations.id),
-    id: text().notNull(),
-    name: text().notNull(),
-    headerSignature: text().notNull(),
-    mapping: jsonb().$type<LogMapping>().notNull(),
-    createdBy: text(),
-    createdAt: instant().notNull().defaultNow(),
-    usedAt: instant(),
-  },
-  (table) => [
-    primaryKey({ columns: [table.organisationId, table.id] }),
-    index("recipes_signature_index").on(table.organisationId, table.headerSignature),
-  ],
 );

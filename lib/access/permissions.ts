@@ -16,6 +16,7 @@ export const PERMISSIONS = {
   /** One's own upload, while nothing was ever read from it; any log with `logs.delete`. */
   "logs.remove": ["owner", "agronomist", "operator"],
   "recipes.read": ["owner", "agronomist", "researcher", "operator"],
+  "recipes.write": ["owner", "agronomist", "operator"],
   "shares.read": ["owner", "agronomist"],
   "shares.write": ["owner", "agronomist"],
   "members.read": ["owner", "agronomist", "researcher"],

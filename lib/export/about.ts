@@ -5,6 +5,9 @@ import type { LogNote } from "@/lib/logs/machine-log";
 import type { PlacedLog, RowGeometry } from "@/lib/logs/placed-log";
 import type { Seeder } from "@/lib/machines/machine";
 
+/** A mapping, and the recipe that it is. */
+export type ExportRecipe = LogMapping & { name: string | null; version: number | null };
+
 /** What travels beside exported data: where it came from, what it means and how it was made. */
 export interface ExportAbout {
   title: string;
@@ -18,8 +21,8 @@ export interface ExportAbout {
   machine: Seeder | null;
   /** Metres: right of the centre line, ahead of the line of rows, width answered for. */
   rows: { isGuessed: boolean; offsetM: number[]; forwardM: number[]; widthM: number[] };
-  /** Meaning that a person confirmed of the original file's columns. */
-  recipe: LogMapping | null;
+  /** Meaning that a person confirmed of the original file's columns; name and version where it was kept as a recipe. */
+  recipe: ExportRecipe | null;
   /** Class edges and the like, for zones. */
   choice: Record<string, unknown> | null;
   coordinates: string;

@@ -1,4 +1,5 @@
 import type { ExportAbout } from "@/lib/export/about";
+import { sayContact } from "@/lib/ingest/columns/say-contact";
 
 const WIDTH = 100;
 
@@ -34,14 +35,23 @@ export function readmeText(
       "Notes on the original",
       about.notes.map((note) => `${oneLine(note.message)} (${note.count})`),
     ),
-    section(
-      "Meaning given to the original's columns",
-      about.recipe?.columns.map(({ name, channel, row, unit }) => {
-        return `${oneLine(name)}: ${channel}${row === undefined ? "" : `, row ${row}`}, ${unit}`;
-      }) ?? [],
-    ),
+    section("Meaning given to the original's columns", recipeLines(about)),
   ];
   return sections.filter((text) => text !== "").join("\n\n") + "\n";
+}
+
+function recipeLines({ recipe }: ExportAbout): string[] {
+  if (!recipe) return [];
+  const { name, version, timeZone, crs, contact } = recipe;
+  const lines = recipe.columns.map(
+    (column) =>
+      `${oneLine(column.name)}: ${column.channel}${column.row === undefined ? "" : `, row ${column.row}`}, ${column.unit}`,
+  );
+  if (name !== null) lines.unshift(`Recipe “${oneLine(name)}”${version === null ? "" : `, version ${version}`}.`);
+  if (timeZone) lines.push(`Local times are those of ${oneLine(timeZone)}.`);
+  if (crs) lines.push(`Easting and northing are in ${oneLine(crs)}.`);
+  if (contact) lines.push(`Ground contact is ${oneLine(sayContact(contact))}.`);
+  return lines;
 }
 
 function choiceLines({ choice }: ExportAbout): string[] {

@@ -5,7 +5,8 @@ import type { ChannelId } from "@/lib/logs/channel";
 import type { LogNote, MachineLog } from "@/lib/logs/machine-log";
 import type { UnitId } from "@/lib/units/unit-table";
 
-export type LogFormatId = "csv" | "geojson" | "shapefile" | "iso11783";
+export const LOG_FORMAT_IDS = ["csv", "geojson", "shapefile", "iso11783"] as const;
+export type LogFormatId = (typeof LOG_FORMAT_IDS)[number];
 
 /** What a column seems to mean. `unit` is null where nothing in the file says: a person must choose. */
 export interface ColumnProposal {
@@ -110,6 +111,8 @@ export interface ReadLog {
   notes: LogNote[];
   /** Where the file describes the machine. */
   device?: LoggedDevice;
+  /** Of a log in several files: how many records came from each, in the order the files were given. */
+  fileRecords?: number[];
 }
 
 /** One kind of file. `inspect` and `read` may throw IngestFailure; `lib/ingest/index.ts` turns that into a Result. */

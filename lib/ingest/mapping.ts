@@ -3,6 +3,7 @@ import { fail, succeed, type Result } from "@/lib/result";
 import { ingestError, type IngestError } from "@/lib/ingest/ingest-error";
 import type { Inspection } from "@/lib/ingest/log-format";
 import { KNOWN_CHANNELS, type ChannelId } from "@/lib/logs/channel";
+import { plainText } from "@/lib/schemas/plain-text";
 import { UNIT_IDS } from "@/lib/units/unit-table";
 
 /** A channel a column may be mapped to: a known one or `other:<name>`. Derived channels are not logged. */
@@ -29,6 +30,20 @@ export type MappedColumn = z.infer<typeof MappedColumn>;
 export const LOG_SHAPES = ["wide", "long", "single"] as const;
 export type LogShape = (typeof LOG_SHAPES)[number];
 
+export const CONTACT_KINDS = ["share-of-time", "at-the-moment", "other"] as const;
+
+/** How the log defines ground contact: files do not say, and logs of two kinds must not be compared. */
+export const ContactDefinition = z.object({
+  /** Share of a window of time under load, or a yes or no at the moment of the record. */
+  kind: z.enum(CONTACT_KINDS),
+  /** Load from which the wheel counts as touching. */
+  thresholdN: z.number().finite().min(0).max(100_000).optional(),
+  windowS: z.number().positive().max(600).optional(),
+  /** In the words of whoever set the machine up. */
+  words: plainText(300).optional(),
+});
+export type ContactDefinition = z.infer<typeof ContactDefinition>;
+
 /** What the columns of a log mean. Columns not listed are not read. */
 export const LogMapping = z.object({
   columns: z.array(MappedColumn).min(1).max(20_000),
@@ -39,10 +54,15 @@ export const LogMapping = z.object({
   timeZone: z.string().trim().min(1).max(80).optional(),
   /** Which log of a file that holds several, by its id. */
   layer: z.string().min(1).max(500).optional(),
+  /** How ground contact is defined in this log, as a person said. */
+  contact: ContactDefinition.optional(),
   /** Name under which to keep this mapping as a recipe. */
-  save: z.string().trim().min(1).max(120).optional(),
+  save: plainText(120).min(1).optional(),
 });
 export type LogMapping = z.infer<typeof LogMapping>;
+
+/** A mapping as it is kept for other files. */
+export const RecipeMapping = LogMapping.omit({ layer: true, save: true });
 
 /** A mapping from outside. The error names the column and the rule: `unknown-unit` for a unit, else `mapping-invalid`. */
 export function parseMapping(input: unknown): Result<LogMapping, IngestError> {
@@ -73,7 +93,11 @@ function readEntry(input: unknown, index: PropertyKey | undefined): { name?: unk
 }
 
 /** The header names and shape of a file as one text: equal for files that one recipe fits. */
-export function headerSignature(inspection: Pick<Inspection, "format" | "shape" | "columns">): string {
+export function headerSignature(inspection: {
+  format: string;
+  shape: LogShape;
+  columns: readonly { name: string }[];
+}): string {
   return JSON.stringify([inspection.format, inspection.shape, ...inspection.columns.map((column) => column.name)]);
 }
 

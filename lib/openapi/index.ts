@@ -4,6 +4,7 @@ import { logOperations } from "@/lib/openapi/operations/logs";
 import { machineOperations } from "@/lib/openapi/operations/machines";
 import { peopleOperations } from "@/lib/openapi/operations/people";
 import { readingOperations } from "@/lib/openapi/operations/readings";
+import { recipeOperations } from "@/lib/openapi/operations/recipes";
 import { shareOperations } from "@/lib/openapi/operations/shares";
 import type { Operation } from "@/lib/openapi/operation";
 
@@ -12,6 +13,7 @@ export const OPERATIONS: readonly Operation[] = [
   ...fieldOperations,
   ...machineOperations,
   ...logOperations,
+  ...recipeOperations,
   ...readingOperations,
   ...shareOperations,
   ...peopleOperations,

@@ -19,6 +19,8 @@ export const LogNoteBody = z.object({
   count: z.number().int(),
   firstLine: z.number().int().optional(),
   message: z.string(),
+  /** Of a log that came in several files: the one it speaks of, to which `firstLine` belongs. */
+  file: z.string().optional(),
   /** Another field that the note speaks of. */
   fieldId: z.string().optional(),
 });
@@ -36,6 +38,16 @@ export const LogChannelBody = z.object({
   min: NullableNumber,
   max: NullableNumber,
   perRow: z.boolean(),
+});
+
+export const LogFileBody = z.object({
+  name: z.string(),
+  bytes: z.number().int(),
+  sha256: z.string(),
+  /** Records read from it; null until it has been read. */
+  records: z.number().int().nullable(),
+  /** Names of further files of the same upload with these very bytes, which were kept once. */
+  copies: z.array(z.string()),
 });
 
 export const Log = z.object({
@@ -56,10 +68,15 @@ export const Log = z.object({
   /** west, south, east, north; west > east across the antimeridian (RFC 7946 5.2). */
   bbox: z.tuple([z.number(), z.number(), z.number(), z.number()]).nullable(),
   machineId: Id.nullable(),
+  /** The recipe that it was read with, and which version of it. */
   mappingId: Id.nullable(),
+  mappingVersion: z.number().int().nullable().optional(),
   fileName: z.string(),
   fileBytes: z.number().int(),
+  /** Of a log in several files: a hash over the hashes of all of them. */
   sha256: z.string(),
+  /** The files it was uploaded as, in the order sent; told where one log is asked for. */
+  files: z.array(LogFileBody).optional(),
   /** Grows with every new mapping or machine; part of tile addresses. */
   version: z.number().int(),
   createdAt: Instant,
@@ -125,7 +142,8 @@ export const LogColumns = z.object({
   notes: z.array(LogNoteBody),
   /** The mapping in force, once a person or a recipe gave one. */
   mapping: z.unknown().nullable(),
-  recipe: z.object({ id: Id, name: z.string() }).nullable(),
+  /** The recipe that gave it, also where it was deleted since. */
+  recipe: z.object({ id: Id, name: z.string(), version: z.number().int() }).nullable(),
 });
 export type LogColumns = z.infer<typeof LogColumns>;
 

@@ -25,7 +25,9 @@ async function fillBoth(): Promise<void> {
        (organisation_id, log_id, version, pass, channel, unit, element, first_seq, records, rows, "values")
        values ($1, 'log_x', 1, 1, 'downforce', 'N', 'f4', 1, 1, 1, '\\x00000000')`,
       `insert into log_results (organisation_id, log_id, version, kind, body) values ($1, 'log_x', 1, 'passes', '[]')`,
-      `insert into recipes (organisation_id, id, name, header_signature, mapping) values ($1, 'rec_x', 'r', 's', '{}')`,
+      `insert into recipes (organisation_id, id, name) values ($1, 'rec_x', 'r')`,
+      `insert into recipe_versions (organisation_id, recipe_id, version, format, column_names, header_signature, mapping)
+       values ($1, 'rec_x', 1, 'csv', '["a"]', 's', '{}')`,
       `insert into jobs (organisation_id, id, name, subject, payload) values ($1, 'job_x', 'read-log', 'log_x', '{}')`,
       `insert into shares (organisation_id, id, field_id, audience, layers, token_hash, expires_at)
        values ($1, 'shr_x', 'fld_x', 'public', '[]', $1, now())`,

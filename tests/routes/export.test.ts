@@ -56,7 +56,7 @@ async function csvLines(query: string): Promise<Record<string, string>[]> {
 async function readLog(name: string, bytes: Uint8Array, machineId?: null): Promise<Log> {
   const waiting = await world.uploadAndSettle({ bytes, name, machineId });
   const columns = (await world.read("owner", { path: `/api/v1/logs/${waiting.id}/columns` })) as unknown as LogColumns;
-  const body = confirmedMapping(columns);
+  const body = { ...confirmedMapping(columns), save: "Larkspur drill" };
   await world.read("operator", { method: "PUT", path: `/api/v1/logs/${waiting.id}/mapping`, body });
   return world.settle(waiting.id);
 }
@@ -211,6 +211,8 @@ describe("readings as CSV", () => {
     const readme = new TextDecoder().decode(files["README.txt"]);
     expect(readme).toContain(log.sha256);
     expect(readme).toContain("marginN [N]");
+    expect(about.recipe).toMatchObject({ name: "Larkspur drill", version: 1 });
+    expect(readme).toContain("Recipe “Larkspur drill”, version 1.");
     for (const line of readme.split("\n")) expect(line.length).toBeLessThan(140);
   });
 });

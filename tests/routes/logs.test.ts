@@ -136,13 +136,39 @@ describe("a mapping", () => {
     const second = await world.uploadAndSettle({ bytes: bytes("\n\n"), name: "second.csv" });
     expect(second).toMatchObject({ status: "ready", mappingId: mapped.mappingId });
     const columns = await getColumns(second.id);
-    expect(columns.recipe).toEqual({ id: mapped.mappingId, name: "Drill, pounds" });
+    expect(columns.recipe).toEqual({ id: mapped.mappingId, name: "Drill, pounds", version: 1 });
+    expect(second.mappingVersion).toBe(1);
     const { items } = (await world.read("operator", { path: "/api/v1/recipes" })) as { items: { id: string }[] };
     expect(items.map((item) => item.id)).toContain(mapped.mappingId);
     const path = `/api/v1/recipes/${mapped.mappingId}`;
     expect((await world.as("agronomist", { method: "DELETE", path })).status).toBe(204);
     const third = await world.uploadAndSettle({ bytes: bytes("\n\n\n"), name: "third.csv" });
     expect(third.status).toBe("needs-mapping");
+    expect((await getColumns(second.id)).recipe).toMatchObject({ name: "Drill, pounds", version: 1 });
+  });
+
+  it("saved again under the same name is the recipe's next version, which the next file is read with", async () => {
+    const bytes = (extra: string) => `${fixtureBytes("csv/wide-pounds/input.csv")}# versions${extra}`;
+    const log = await world.uploadAndSettle({ bytes: bytes(""), name: "versions.csv" });
+    const first = await mapAndSettle(log, { save: "Drill, versions" });
+    expect(first.mappingVersion).toBe(1);
+    const second = await mapAndSettle(log, { save: "Drill, versions" });
+    expect(second).toMatchObject({ mappingId: first.mappingId, mappingVersion: 2, version: 2 });
+    const kept = await mapAndSettle(log);
+    expect(kept).toMatchObject({ mappingId: first.mappingId, mappingVersion: 2, version: 3 });
+    const next = await world.uploadAndSettle({ bytes: bytes("2"), name: "versions-2.csv" });
+    expect(next).toMatchObject({ status: "ready", mappingId: first.mappingId, mappingVersion: 2 });
+    const recipe = await world.read("researcher", { path: `/api/v1/recipes/${first.mappingId}` });
+    const machine = expect.objectContaining({ kind: "seeder" });
+    expect(recipe).toMatchObject({ version: 2, logCount: 2, machine, versions: [{ version: 2 }, { version: 1 }] });
+    const changed = confirmedMapping(await getColumns(log.id));
+    const away = await world.read("owner", {
+      method: "PUT",
+      path: `/api/v1/logs/${log.id}/mapping`,
+      body: { ...changed, columns: changed.columns.filter((column) => column.channel !== "depth") },
+    });
+    expect(away).toMatchObject({ mappingId: null, mappingVersion: null });
+    await world.settle(log.id);
   });
 
   it("put again makes version 2, and readers see one version or the other, never a mixture", async () => {

@@ -23,6 +23,27 @@ async function grant(fieldId: string): Promise<void> {
 }
 
 const combine = { kind: "combine", name: "Header", headerWidthM: 6.096 };
+const recipe = {
+  mapping: {
+    columns: [
+      { name: "a", channel: "longitude", unit: "deg" },
+      { name: "b", channel: "latitude", unit: "deg" },
+    ],
+    shape: "single",
+  },
+};
+const recipeFile = {
+  ...recipe,
+  kind: "coulterbook-recipe",
+  schemaVersion: 1,
+  name: "Travelled",
+  version: 4,
+  format: "csv",
+  columnNames: ["a", "b"],
+  machine: null,
+  note: null,
+  exportedAt: "2026-11-30T12:00:00Z",
+};
 const shareBody = { audience: "landowner", layers: ["boundary"], expiresAt: "2027-06-01T00:00:00Z" };
 
 /** A thing of the owner's organisation that an address can name; a viewer was given its field. */
@@ -54,12 +75,8 @@ const targets: Record<string, () => Promise<string>> = {
     return id;
   },
   recipeId: async () => {
-    const id = `rec_test${serial++}`;
-    await adminDb().$client.query(
-      "insert into recipes (organisation_id, id, name, header_signature, mapping) values ($1, $2, 'r', 's', '{}')",
-      [LARKSPUR, id],
-    );
-    return id;
+    const name = `Recipe ${serial++}`;
+    return make("/api/v1/recipes", { ...recipe, name });
   },
 };
 
@@ -72,6 +89,9 @@ const BODIES: Record<string, unknown> = {
   "PATCH /api/v1/machines/{machineId}": { name: "Changed" },
   "PATCH /api/v1/members/{memberId}": { role: "researcher" },
   "POST /api/v1/tokens": { name: "script", role: "viewer" },
+  "POST /api/v1/recipes": { ...recipe, name: "Kept" },
+  "POST /api/v1/recipes/import": recipeFile,
+  "PATCH /api/v1/recipes/{recipeId}": { useVersion: 1 },
   "PATCH /api/v1/me": { unitSystem: "metric" },
   "PATCH /api/v1/logs/{logId}": { name: "Changed" },
   "PUT /api/v1/logs/{logId}/mapping": { columns: [{ name: "a", channel: "longitude", unit: "deg" }], shape: "single" },

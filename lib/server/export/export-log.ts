@@ -12,6 +12,7 @@ import { readmeText } from "@/lib/export/readme-text";
 import { WGS84_WKT } from "@/lib/export/shapefile/shape-encoder";
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import type { ExportQuery } from "@/lib/schemas/export";
+import type { LogColumns } from "@/lib/schemas/logs";
 import type { Scope } from "@/lib/scope";
 import type { Container } from "@/lib/server/create-container";
 import { arrowChunks } from "@/lib/server/export/arrow-chunks";
@@ -25,6 +26,7 @@ import { writeGeopackage } from "@/lib/server/export/write-geopackage";
 import { writeShapefile } from "@/lib/server/export/write-shapefile";
 import { zipChunks, type ZipEntry } from "@/lib/server/export/zip-chunks";
 import { getReadLog } from "@/lib/server/logs/find-placed-log";
+import { findRecipeOfLog } from "@/lib/server/logs/recipe-of-log";
 
 export interface ExportFile {
   body: ReadableStream<Uint8Array>;
@@ -63,11 +65,12 @@ export async function exportLog(
   const outline = outlineOfFrame(frame);
   const source = chooseTable(outline, query);
   const madeOn = container.clock.now();
+  const recipe = await withOrganisation(scope, (tx) => findRecipeOfLog(tx, scope, log));
   const job: Job = {
     query,
     table: source.table,
     batches: batchesOf(source, readLogParts(scope, log, frame)),
-    about: aboutLog({ log, outline, source, query, madeOn }),
+    about: aboutLog({ log, outline, source, query, madeOn, recipe }),
     madeOn,
     dataDir: container.env.DATA_DIR,
     name: nameExport(log.name, query.level),
@@ -99,8 +102,9 @@ function aboutLog(input: {
   source: TableSource;
   query: ExportQuery;
   madeOn: Date;
+  recipe: LogColumns["recipe"];
 }): ExportAbout {
-  const { log, outline, source, query, madeOn } = input;
+  const { log, outline, source, query, madeOn, recipe } = input;
   const { level, shape, channel, breaks, minLengthM } = query;
   const { readings } = source;
   const names = query.format === "shapefile" ? "shortName" : "name";
@@ -118,7 +122,7 @@ function aboutLog(input: {
       endedAt: log.endedAt?.toISOString() ?? null,
     },
     source: { fileName: log.fileName, bytes: log.fileBytes, sha256: log.sha256 },
-    recipe: log.mapping,
+    recipe: log.mapping && { ...log.mapping, name: recipe?.name ?? null, version: recipe?.version ?? null },
     notes: log.notes,
     choice: level === "zones" ? { channel, breaks, minLengthM: minLengthM ?? null } : null,
     readAgain: readings ? readAgainMapping({ table: readings, shape, channels: outline.log.channels, names }) : null,

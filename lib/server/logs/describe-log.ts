@@ -28,6 +28,7 @@ export function describeLog(row: LogRow, scope: Scope): Log {
     bbox: row.bbox ?? null,
     machineId: row.machineId,
     mappingId: row.recipeId,
+    mappingVersion: row.recipeVersion,
     fileName: row.fileName,
     fileBytes: row.fileBytes,
     sha256: row.sha256,

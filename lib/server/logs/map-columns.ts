@@ -4,26 +4,20 @@ import { withOrganisation } from "@/db/client";
 import { recordAudit } from "@/db/queries/audit";
 import { findLogResult } from "@/db/queries/log-results";
 import { changeLog, getLogOrThrow } from "@/db/queries/logs";
-import { findRecipe, saveRecipe } from "@/db/queries/recipes";
 import { AppError } from "@/lib/errors";
-import { newId } from "@/lib/ids";
 import { chooseLayer } from "@/lib/ingest/columns/choose-layer";
-import { IngestFailure, type IngestError } from "@/lib/ingest/ingest-error";
+import { IngestFailure } from "@/lib/ingest/ingest-error";
 import type { Inspection } from "@/lib/ingest/log-format";
-import { chosenLayer, headerSignature, parseMapping, toRecipe, type LogMapping } from "@/lib/ingest/mapping";
+import { chosenLayer, parseMapping, type LogMapping } from "@/lib/ingest/mapping";
 import { buildReadPlan } from "@/lib/ingest/records/read-plan";
 import { MappingMachine, type Log, type LogColumns } from "@/lib/schemas/logs";
 import type { Scope } from "@/lib/scope";
 import type { Container } from "@/lib/server/create-container";
 import { demandMachine, getLogForChange, QUEUED, refuseBegun } from "@/lib/server/logs/change-log";
 import { describeLog } from "@/lib/server/logs/describe-log";
+import { mappingError } from "@/lib/server/logs/mapping-error";
 import { noteReadLog, sendReadLog } from "@/lib/server/logs/queue-log";
-
-/** An error of the reader as an answer to a request: 422 naming column and rule. */
-export function mappingError(error: IngestError): AppError {
-  const { code, message, column, line } = error;
-  return new AppError("unprocessable", message, { detailCode: code, places: [{ message, column, line }] });
-}
+import { findRecipeOfLog, keepRecipe, saveRecipeOfLog } from "@/lib/server/logs/recipe-of-log";
 
 /** A mapping from outside. @throws AppError `unprocessable` naming the column and the rule */
 export function readMapping(input: unknown): LogMapping {
@@ -52,7 +46,7 @@ export async function getColumns(_container: Container, scope: Scope, logId: str
     const log = await getLogOrThrow(tx, scope, logId);
     const found = (await findLogResult(tx, scope, { logId, version: 0, kind: "columns" })) as Inspection | null;
     if (!found) throw noColumns(log.error?.message);
-    const recipe = log.recipeId ? await findRecipe(tx, scope, log.recipeId) : null;
+    const recipe = await findRecipeOfLog(tx, scope, log);
     return {
       format: found.format,
       shape: found.shape,
@@ -62,7 +56,7 @@ export async function getColumns(_container: Container, scope: Scope, logId: str
       layers: found.layers,
       notes: found.notes,
       mapping: log.mapping,
-      recipe: recipe && { id: recipe.id, name: recipe.name },
+      recipe,
     };
   });
 }
@@ -96,13 +90,18 @@ export async function putMapping(
     const found = (await findLogResult(tx, scope, { logId, version: 0, kind: "columns" })) as Inspection | null;
     if (!found) throw noColumns(before.error?.message);
     refuseMisfit(mapping, found);
-    const signature = headerSignature({ ...found, ...chosenLayer(mapping, found) });
-    const recipe = { id: newId("recipe"), name: save ?? "", headerSignature: signature, mapping: toRecipe(mapping) };
-    const recipeId = save ? await saveRecipe(tx, scope, recipe) : null;
+    const recipe = save
+      ? await saveRecipeOfLog(tx, scope, {
+          name: save,
+          mapping,
+          found,
+          machineId: machineId === undefined ? before.machineId : machineId,
+        })
+      : await keepRecipe(tx, scope, { log: before, mapping });
     const machine = machineId === undefined ? {} : { machineId };
-    await changeLog(tx, scope, logId, { ...QUEUED, mapping, recipeId, ...machine });
+    await changeLog(tx, scope, logId, { ...QUEUED, mapping, ...recipe, ...machine });
     if (before.status !== "queued") await noteReadLog(tx, scope, logId);
-    const detail = { recipe: save ?? null, ...machine };
+    const detail = { recipe: save ?? null, recipeVersion: recipe.recipeVersion, ...machine };
     await recordAudit(tx, scope, { action: "log.map", subject: logId, detail });
     return describeLog(await getLogOrThrow(tx, scope, logId), scope);
   });
