@@ -5,6 +5,8 @@ import { once } from "node:events";
 export interface Child {
   name: string;
   process: ChildProcess;
+  /** What it wrote to its standard error so far; empty unless started with `keepsErrors`. */
+  errors(): string;
   /** Resolves when the program says `{ready: true}`. @throws when it ends before. */
   ready: Promise<void>;
   stop(graceMs?: number): Promise<void>;
@@ -30,18 +32,26 @@ export function startNode(input: {
   arguments?: string[];
   environment: NodeJS.ProcessEnv;
   quiet?: boolean;
+  /** Standard error is kept for whoever started it, beside being shown. */
+  keepsErrors?: boolean;
 }): Child {
   const output = input.quiet ? "ignore" : "inherit";
   const preload = new URL("./exit-with-parent.mjs", import.meta.url).href;
   const child = spawn(process.execPath, ["--import", preload, input.script, ...(input.arguments ?? [])], {
     env: { ...input.environment, EXIT_WITH_PARENT: String(process.pid) },
-    stdio: ["ignore", output, "inherit", "ipc"],
+    stdio: ["ignore", output, input.keepsErrors ? "pipe" : "inherit", "ipc"],
+  });
+  let errors = "";
+  child.stderr?.on("data", (chunk: Buffer) => {
+    errors += chunk.toString("utf8");
+    process.stderr.write(chunk);
   });
   const ready = waitUntilReady(input.name, child);
   ready.catch(() => undefined);
   return {
     name: input.name,
     process: child,
+    errors: () => errors,
     ready,
     stop: (graceMs = 10_000) => stopChild(child, graceMs),
   };

@@ -1,5 +1,6 @@
 import "server-only";
 import { AppError } from "@/lib/errors";
+import { requestChunks } from "@/lib/server/request-chunks";
 
 /** JSON bodies and boundary files; logs are streamed and have their own limit. */
 export const MAX_BODY_BYTES = 5 * 1024 * 1024;
@@ -14,7 +15,7 @@ export async function readBody(request: Request, maxBytes = MAX_BODY_BYTES): Pro
   if (!request.body) return new Uint8Array(0);
   const chunks: Uint8Array[] = [];
   let length = 0;
-  for await (const chunk of request.body) {
+  for await (const chunk of requestChunks(request.body)) {
     length += chunk.length;
     if (length > maxBytes) throw tooLarge(maxBytes);
     chunks.push(chunk);

@@ -93,22 +93,6 @@ export async function findSameBytes(
   return row ?? null;
 }
 
-/** Whether any log of the organisation, other than `exceptLogId`, keeps these bytes. */
-export async function isFileInUse(
-  tx: Transaction,
-  scope: Scope,
-  input: { sha256: string; exceptLogId: string },
-): Promise<boolean> {
-  const [row] = await tx
-    .select({ id: logs.id })
-    .from(logs)
-    .where(
-      and(eq(logs.organisationId, scope.organisationId), eq(logs.sha256, input.sha256), ne(logs.id, input.exceptLogId)),
-    )
-    .limit(1);
-  return row !== undefined;
-}
-
 export async function insertLog(tx: Transaction, scope: Scope, input: NewLog): Promise<void> {
   await tx.insert(logs).values({
     ...input,
@@ -160,7 +144,7 @@ export async function requestCancel(tx: Transaction, scope: Scope, logId: string
 
 /** Removes the log and everything derived from it. */
 export async function deleteLogRows(tx: Transaction, scope: Scope, logId: string): Promise<void> {
-  for (const table of ["pass_readings", "log_points", "log_results"]) {
+  for (const table of ["pass_readings", "log_points", "log_results", "log_files"]) {
     await tx.execute(
       sql`delete from ${sql.identifier(table)} where organisation_id = ${scope.organisationId} and log_id = ${logId}`,
     );

@@ -1,5 +1,6 @@
 export * from "@/db/schema/fields";
 export * from "@/db/schema/jobs";
+export * from "@/db/schema/log-files";
 export * from "@/db/schema/logs";
 export * from "@/db/schema/organisations";
 export * from "@/db/schema/rate-limits";

@@ -91,9 +91,9 @@ async function seedLog(
   if (known) return;
   const key = incomingKey(scope.organisationId, sha256);
   await container.storage.put(key, bytes);
-  const upload = { key, fileName: file.fileName, fileBytes: bytes.length, sha256 };
+  const files = [{ key, fileName: file.fileName, fileBytes: bytes.length, sha256 }];
   const mapping = await proposedMapping(file, bytes);
-  const logId = await keepUpload(container, scope, { ...into, again: false, upload, mapping });
+  const logId = await keepUpload(container, scope, { ...into, again: false, files, mapping });
   await container.storage.delete(key);
   const { organisationId } = scope;
   await readLogJob({ organisationId, logId }, { threads, signal: new AbortController().signal });

@@ -49,4 +49,6 @@ export interface LogNote {
   message: string;
   count: number;
   firstLine?: number;
+  /** Of a log that came in several files: the one it speaks of. */
+  file?: string;
 }

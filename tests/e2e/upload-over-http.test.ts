@@ -84,7 +84,42 @@ function sendUntilAnswered(headers: Record<string, string | number>, totalBytes:
   });
 }
 
+/** Refusing an upload is the day's work: the server has nothing to complain of. */
+function expectNoComplaint(): void {
+  expect(server.web.errors()).not.toMatch(/uncaughtException|unhandledRejection|Invalid state|TypeError/);
+}
+
+/** A form that ends as one should, sent at once. */
+function sendWhole(fileName: string, content: Buffer): Promise<{ status: number; body: string }> {
+  const body = Buffer.concat([
+    Buffer.from(HEAD.replace("a.csv", fileName)),
+    content,
+    Buffer.from(`\r\n--${BOUNDARY}--\r\n`),
+  ]);
+  return new Promise((resolve, reject) => {
+    const headers = { ...uploadHeaders(), "transfer-encoding": "chunked" };
+    const outgoing = request(`${server.baseUrl}${path}`, { method: "POST", headers }, (response) => {
+      const chunks: Buffer[] = [];
+      response.on("data", (chunk: Buffer) => chunks.push(chunk));
+      response.on("end", () => resolve({ status: response.statusCode ?? 0, body: Buffer.concat(chunks).toString() }));
+    });
+    outgoing.on("error", reject);
+    outgoing.end(body);
+  });
+}
+
 describe("an upload over the wire", () => {
+  it("that is refused is answered, and leaves the server without an error of its own", async () => {
+    const noise = Buffer.alloc(600_000);
+    for (let times = 0; times < 5; times++) {
+      const unknown = await sendWhole("picture.bin", noise);
+      expect(unknown.status).toBe(415);
+      const large = await sendWhole("large.csv", Buffer.concat(Array.from({ length: 80 }, () => LINE)));
+      expect(large.status).toBe(413);
+    }
+    expectNoComplaint();
+  });
+
   it("of 1 GiB against a smaller limit is answered 413 long before its end", async () => {
     const told = await sendUntilAnswered({ ...uploadHeaders(), "content-length": GIBIBYTE }, GIBIBYTE);
     expect(told.status).toBe(413);
@@ -95,6 +130,7 @@ describe("an upload over the wire", () => {
     expect(await countLogs()).toBe(0);
     expect(storedFiles()).toEqual([]);
     expect((await fetch(`${server.baseUrl}/api/health`)).status).toBe(200);
+    expectNoComplaint();
   });
 
   it("whose connection is lost leaves no log and no bytes", async () => {
@@ -115,5 +151,6 @@ describe("an upload over the wire", () => {
     const next = await fetch(`${server.baseUrl}${path}`, { method: "POST", headers: headersOfForm, body: form });
     expect(next.status).toBe(202);
     expect(storedFiles()).toHaveLength(1);
+    expectNoComplaint();
   });
 });

@@ -100,8 +100,8 @@ export async function startTestServer(options: TestServerOptions = {}): Promise<
   const environment = await testEnvironment(name, folder, options.environment ?? {});
   const build = process.env.BUILD_DIR ?? "build";
   const children: Child[] = [];
-  const begin = (label: string, script: string, parameters: string[] = []) => {
-    const child = startNode({ name: label, script, arguments: parameters, environment, quiet: true });
+  const begin = (label: string, script: string, parameters: string[] = [], keepsErrors = false) => {
+    const child = startNode({ name: label, script, arguments: parameters, environment, quiet: true, keepsErrors });
     children.push(child);
     return child;
   };
@@ -122,7 +122,7 @@ export async function startTestServer(options: TestServerOptions = {}): Promise<
     await runNode({ name: "demo data", script: `${build}/seed.mjs`, environment: seedEnvironment });
     const worker = await startWorker();
     const flags = ["start", "-H", "127.0.0.1", "-p", environment.PORT];
-    const web = begin("web", "node_modules/next/dist/bin/next", flags);
+    const web = begin("web", "node_modules/next/dist/bin/next", flags, true);
     await waitForAnswer(`${environment.BASE_URL}/api/health`, web, 60_000);
     return {
       baseUrl: environment.BASE_URL,

@@ -1,5 +1,6 @@
 import { ingestError, type IngestError } from "@/lib/ingest/ingest-error";
 import { READ_LIMITS } from "@/lib/ingest/log-format";
+import { readingRoom } from "@/lib/ingest/records/growing-columns";
 import type { LogChannel, LogNote, MachineLog } from "@/lib/logs/machine-log";
 import { fail, succeed, type Result } from "@/lib/result";
 
@@ -106,7 +107,7 @@ function joinChannel(logs: readonly MachineLog[], id: LogChannel["id"], rows: nu
   const model = parts.find((part) => part !== undefined);
   if (!model) return [];
   const width = model.perRow ? rows : 1;
-  const values = new Float32Array(logs.reduce((sum, log) => sum + log.records, 0) * width).fill(NaN);
+  const values = readingRoom(logs.reduce((sum, log) => sum + log.records, 0) * width);
   let at = 0;
   logs.forEach((log, index) => {
     const part = parts[index];

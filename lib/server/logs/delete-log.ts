@@ -1,8 +1,9 @@
 import "server-only";
-import { withOrganisation } from "@/db/client";
+import { withOrganisation, type Transaction } from "@/db/client";
 import { recordAudit } from "@/db/queries/audit";
 import { endJobs } from "@/db/queries/jobs";
-import { deleteLogRows, getLogOrThrow, isFileInUse, isLogRemovable, lockBytes } from "@/db/queries/logs";
+import { isFileInUse, listLogFiles } from "@/db/queries/log-files";
+import { deleteLogRows, getLogOrThrow, isLogRemovable, lockBytes } from "@/db/queries/logs";
 import { AppError } from "@/lib/errors";
 import type { Scope } from "@/lib/scope";
 import type { Container } from "@/lib/server/create-container";
@@ -20,11 +21,21 @@ export async function deleteLog(container: Container, scope: Scope, logId: strin
     const log = await getLogOrThrow(tx, scope, logId);
     if (!(await isLogRemovable(tx, scope, logId)))
       throw new AppError("conflict", NOT_YOURS, { detailCode: "log_kept" });
-    await lockBytes(tx, scope, log.sha256);
-    const isShared = await isFileInUse(tx, scope, { sha256: log.sha256, exceptLogId: logId });
+    const unshared: string[] = [];
+    for (const { sha256 } of await lockLogFiles(tx, scope, logId)) {
+      if (!(await isFileInUse(tx, scope, { sha256, exceptLogId: logId }))) unshared.push(sha256);
+    }
     await deleteLogRows(tx, scope, logId);
     await endJobs(tx, scope, { subject: logId, state: "cancelled" });
     await recordAudit(tx, scope, { action: "log.delete", subject: logId, detail: { name: log.name } });
-    if (!isShared) await container.storage.delete(uploadKey(log));
+    const { organisationId } = scope;
+    for (const sha256 of unshared) await container.storage.delete(uploadKey({ organisationId, sha256 }));
   });
+}
+
+/** The files of a log, each held; always in the same order, so that two requests never wait for each other. */
+async function lockLogFiles(tx: Transaction, scope: Scope, logId: string): Promise<{ sha256: string }[]> {
+  const files = (await listLogFiles(tx, scope, logId)).sort((a, b) => (a.sha256 < b.sha256 ? -1 : 1));
+  for (const { sha256 } of files) await lockBytes(tx, scope, sha256);
+  return files;
 }

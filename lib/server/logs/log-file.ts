@@ -8,6 +8,12 @@ export interface LogFile {
   fileBytes: number;
 }
 
+/** One line for a log of several files: what it is listed under. */
+export function nameFiles(names: readonly string[]): string {
+  const [first = "log", ...others] = names;
+  return others.length === 0 ? first : `${first} and ${others.length} more`;
+}
+
 /** Where an upload is kept: by its own hash, so that the same bytes are kept once an organisation. */
 export function uploadKey(file: Pick<LogFile, "organisationId" | "sha256">): string {
   return `organisations/${file.organisationId}/uploads/${file.sha256}`;

@@ -1,10 +1,13 @@
 // The reading thread: all work on a log that takes time happens here, so that it can be watched and killed.
 import { parentPort, workerData } from "node:worker_threads";
 import { inspectLog, readLog } from "@/lib/ingest";
+import type { ByteSource } from "@/lib/ingest/byte-source";
+import { inspectParts, readParts } from "@/lib/ingest/read-parts";
 import { fail, succeed } from "@/lib/result";
+import { packPlacedLog } from "@/lib/logs/packed-placed-log";
 import { S3Storage } from "@/lib/server/adapters/storage/s3-storage";
 import type { Environment } from "@/lib/server/env";
-import { buildAnswers, packPlacedLog, placeLog } from "@/lib/server/logs/build-answers";
+import { buildAnswers, placeLog } from "@/lib/server/logs/build-answers";
 import { storedSource } from "@/lib/server/logs/log-file";
 import { LogFailure } from "@/lib/server/logs/log-failure";
 import type { ThreadMessage, ThreadTask } from "@/lib/server/logs/thread-messages";
@@ -19,8 +22,24 @@ function tell(stage: string, progress: number): void {
   say({ kind: "progress", stage, progress });
 }
 
+/** Each with bytes of its own: the same ones twice were found when they arrived. */
+function sourcesOf({ files }: Pick<ThreadTask, "files">): ByteSource[] {
+  return files.map((file) => storedSource(storage, file));
+}
+
+function readFiles(task: Extract<ThreadTask, { task: "read" }>, onProgress: (fraction: number) => void) {
+  const [first, ...others] = sourcesOf(task);
+  if (first && others.length === 0) return readLog(first, task.mapping, { onProgress });
+  return readParts(sourcesOf(task), task.mapping, { onProgress, areDistinct: true });
+}
+
 async function inspect(task: Extract<ThreadTask, { task: "inspect" }>): Promise<void> {
-  const outcome = await inspectLog(storedSource(storage, task.file), { near: task.near ?? undefined });
+  const near = task.near ?? undefined;
+  const [first, ...others] = sourcesOf(task);
+  const outcome =
+    first && others.length === 0
+      ? await inspectLog(first, { near })
+      : await inspectParts(sourcesOf(task), { near, areDistinct: true });
   say({ kind: "inspected", outcome });
 }
 
@@ -31,7 +50,7 @@ async function read(task: Extract<ThreadTask, { task: "read" }>): Promise<void> 
     told = Date.now();
     tell("Reading the records", 0.05 + 0.45 * fraction);
   };
-  const outcome = await readLog(storedSource(storage, task.file), task.mapping, { onProgress });
+  const outcome = await readFiles(task, onProgress);
   if (!outcome.ok) return say({ kind: "built", outcome });
   try {
     tell("Placing every row on the ground", 0.5);
@@ -39,7 +58,10 @@ async function read(task: Extract<ThreadTask, { task: "read" }>): Promise<void> 
     // It is stored while this thread works on: writing and statistics then take one time, not two. The readings lie in
     // shared memory and are not copied; from here on nobody writes to them.
     say({ kind: "placed", placed: packPlacedLog(built.placed) });
-    say({ kind: "built", outcome: succeed(buildAnswers(built, { boundary: task.boundary, tell })) });
+    const answers = buildAnswers(built, { boundary: task.boundary, tell });
+    const records = outcome.value.fileRecords ?? [outcome.value.log.records];
+    answers.results.push({ kind: "files", body: { records } });
+    say({ kind: "built", outcome: succeed(answers) });
   } catch (error) {
     if (!(error instanceof LogFailure)) throw error;
     say({ kind: "built", outcome: fail(error.place) });

@@ -7,14 +7,16 @@ import type { Scope } from "@/lib/scope";
 import type { Container } from "@/lib/server/create-container";
 import { getFieldOrThrow } from "@/lib/server/fields/get-field-or-throw";
 import { describeLog } from "@/lib/server/logs/describe-log";
+import { describeLogFiles } from "@/lib/server/logs/describe-log-files";
 import { nameHoldingFields } from "@/lib/server/logs/note-place";
 
 /** @throws AppError `not_found` */
 export async function getLog(_container: Container, scope: Scope, logId: string): Promise<Log> {
   return withOrganisation(scope, async (tx) => {
-    const log = describeLog(await getLogOrThrow(tx, scope, logId), scope);
+    const row = await getLogOrThrow(tx, scope, logId);
+    const log = describeLog(row, scope);
     const [named = log] = await nameHoldingFields(tx, scope, [log]);
-    return named;
+    return { ...named, files: await describeLogFiles(tx, scope, row) };
   });
 }
 

@@ -1,23 +1,36 @@
 import "server-only";
 import { createHash } from "node:crypto";
-import { Readable } from "node:stream";
-import { pipeline } from "node:stream/promises";
+import { finished } from "node:stream/promises";
 import busboy from "busboy";
 import { nanoid } from "nanoid";
 import { AppError } from "@/lib/errors";
-import { DETECT_BYTES, detectFormat } from "@/lib/ingest";
-import { bytesSource, joinChunks, readHead } from "@/lib/ingest/byte-source";
-import { isGzip, openText } from "@/lib/ingest/open-text";
+import { DETECT_BYTES } from "@/lib/ingest";
+import { joinChunks } from "@/lib/ingest/byte-source";
+import { MOST_PARTS } from "@/lib/ingest/join-parts";
 import type { Container } from "@/lib/server/create-container";
 import { incomingKey } from "@/lib/server/logs/log-file";
+import { cleanFileName, refuseUnknownKind } from "@/lib/server/logs/refuse-unknown-kind";
+import { requestChunks } from "@/lib/server/request-chunks";
 
-/** A file that has arrived whole, under a key of its own, with the other parts of the form. */
-export interface ReceivedUpload {
+/** A file that has arrived whole, under a key of its own. */
+export interface ReceivedFile {
   key: string;
   fileName: string;
   fileBytes: number;
   sha256: string;
+}
+
+/** What a form brought: its files in the order sent, at least one, and its other parts. */
+export interface ReceivedUpload {
+  files: ReceivedFile[];
   fields: Record<string, string>;
+}
+
+interface ReceiveOptions {
+  organisationId: string;
+  request: Request;
+  /** Several `file` parts are parts of one log; without it there may be one. */
+  together: boolean;
 }
 
 const FIELD_BYTES = 4 * 1024 * 1024;
@@ -30,44 +43,24 @@ function tooLarge(maxBytes: number): AppError {
   });
 }
 
-/** The file's own name: no folders, no control characters, at most 200 letters. */
-function cleanName(name: string | undefined): string {
-  const last = (name ?? "").split(/[/\\]/).at(-1) ?? "";
-  return (
-    last
-      .replace(/[\u0000-\u001f\u007f]/g, "")
-      .trim()
-      .slice(0, 200) || "log"
-  );
+function refuseFiles(message: string): AppError {
+  return new AppError("unprocessable", message, { places: [{ path: "file", message }] });
 }
 
-/** @throws AppError `unprocessable` for an empty file, `unsupported_file` for one that no reader takes */
-async function refuseUnknownKind(name: string, head: Uint8Array): Promise<void> {
-  if (head.length === 0) {
-    throw new AppError("unprocessable", `"${name}" is empty. Export the log again and upload that file.`, {
-      detailCode: "empty-file",
-      places: [{ path: "file", message: "the file is empty" }],
-    });
-  }
-  // The head of a packed file ends in the middle: what it holds so far is enough, and its end is no fault.
-  const unpacked = isGzip(head) ? await readHead(openText(bytesSource(name, head), {}), 512).catch(() => null) : head;
-  if (unpacked === null || detectFormat(name, unpacked)) return;
-  throw new AppError(
-    "unsupported_file",
-    `"${name}" is no kind of log this program reads. Upload CSV or GeoJSON (also packed as .gz), a zipped shapefile or zipped ISO 11783-10 task data.`,
-  );
+function brokenForm(cause: unknown): AppError {
+  const message = "The upload broke off before its end, or is not a whole form. Nothing was kept; send it again.";
+  return new AppError("bad_request", message, { detailCode: "upload_broken", cause });
 }
 
-/** Passes the bytes on, hashing and counting, once the first of them look like a log. */
+/** Passes the bytes on once the first of them look like a log; `onBytes` sees each chunk as it comes. */
 async function* checkBytes(
   file: AsyncIterable<Uint8Array>,
-  input: { name: string; maxBytes: number; onBytes(chunk: Uint8Array): void },
+  input: { name: string; onBytes(chunk: Uint8Array): void },
 ): AsyncIterable<Uint8Array> {
   let head: Uint8Array[] | null = [];
   let bytes = 0;
   for await (const chunk of file) {
     bytes += chunk.length;
-    if (bytes > input.maxBytes) throw tooLarge(input.maxBytes);
     input.onBytes(chunk);
     if (!head) {
       yield chunk;
@@ -84,48 +77,96 @@ async function* checkBytes(
   yield* head;
 }
 
-interface Parts {
-  fields: Record<string, string>;
-  storing: Promise<{ bytes: number; fileName: string }> | null;
-}
-
 /**
- * Streams a multipart form with one `file` to the object store without holding it. Parts may come in any order. When
- * anything goes wrong (too large, no log, connection lost) nothing stays in the store.
+ * Streams a multipart form with its `file` parts to the object store without holding them. Parts may come in any order.
+ * When anything goes wrong (too large, no log, connection lost) nothing stays in the store.
  * @throws AppError 413, 415, 422; 400 for a broken form
  */
-export async function receiveUpload(
-  { env, storage }: Container,
-  organisationId: string,
-  request: Request,
-): Promise<ReceivedUpload> {
+export async function receiveUpload(container: Container, options: ReceiveOptions): Promise<ReceivedUpload> {
+  const { env, storage } = container;
   const maxBytes = env.MAX_UPLOAD_BYTES;
-  // The form around the file takes some bytes of its own.
-  if (Number(request.headers.get("content-length") ?? 0) > maxBytes + FIELD_BYTES) throw tooLarge(maxBytes);
-  const key = incomingKey(organisationId, nanoid());
-  const hash = createHash("sha256");
+  // The form around the files takes some bytes of its own.
+  if (Number(options.request.headers.get("content-length") ?? 0) > maxBytes + FIELD_BYTES) throw tooLarge(maxBytes);
   const stopping = new AbortController();
-  const parts: Parts = { fields: {}, storing: null };
-  const form = openForm(request);
-  form.on("field", (name, value) => (parts.fields[name] = value));
+  const form = openForm(options.request);
+  const keys: string[] = [];
+  const storing: Promise<ReceivedFile>[] = [];
+  const fields: Record<string, string> = {};
+  let taken = 0;
+  let refusal: unknown = null;
+  // The form ends at once when a file is refused: nobody wants the rest of it. The first reason is the one to tell:
+  // what it brings about (a form without its end, a stopped upload) says nothing to the sender.
+  const refuse = (error: unknown) => {
+    refusal ??= error;
+    form.destroy(error instanceof Error ? error : new Error(String(error)));
+  };
+  const onBytes = (chunk: Uint8Array) => {
+    taken += chunk.length;
+    if (taken > maxBytes) throw tooLarge(maxBytes);
+  };
+  form.on("field", (name, value) => (fields[name] = value));
+  form.on("filesLimit", () => refuse(refuseFiles(`One log may come in at most ${MOST_PARTS} files.`)));
   form.on("file", (part, file, info) => {
-    if (part !== "file" || parts.storing) return void file.resume();
-    const fileName = cleanName(info.filename);
-    const checked = checkBytes(file, { name: fileName, maxBytes, onBytes: (chunk) => void hash.update(chunk) });
-    parts.storing = storage.put(key, checked, { signal: stopping.signal }).then(({ bytes }) => ({ bytes, fileName }));
-    // The form ends at once when the file is refused: nobody wants the rest of it.
-    parts.storing.catch((error: unknown) => form.destroy(error instanceof Error ? error : new Error(String(error))));
+    if (part !== "file") return void file.resume();
+    if (storing.length > 0 && !options.together) {
+      return refuse(
+        refuseFiles("One upload is one log. Send several files one by one, or with together=1 as parts of one log."),
+      );
+    }
+    const key = incomingKey(options.organisationId, nanoid());
+    keys.push(key);
+    const fileName = cleanFileName(info.filename);
+    const stored = storeFile({ container, key, file, fileName, onBytes, refuse, signal: stopping.signal });
+    storing.push(stored);
+    stored.catch(refuse);
   });
   try {
-    await receiveForm(request, form);
-    if (!parts.storing) throw missingFile();
-    const { bytes, fileName } = await parts.storing;
-    return { key, fileName, fileBytes: bytes, sha256: hash.digest("hex"), fields: parts.fields };
+    await receiveForm(options.request, form);
+    if (storing.length === 0) throw refuseFiles("Choose a file: the form needs a part named file.");
+    return { files: await Promise.all(storing), fields };
   } catch (error) {
     stopping.abort(error);
-    await parts.storing?.catch(() => undefined);
-    await storage.delete(key).catch(() => undefined);
-    throw error instanceof AppError ? error : brokenForm(error);
+    await Promise.allSettled(storing);
+    await Promise.allSettled(keys.map((key) => storage.delete(key)));
+    const reason = refusal ?? error;
+    throw reason instanceof AppError ? reason : brokenForm(reason);
+  }
+}
+
+interface StoreInput {
+  container: Container;
+  key: string;
+  file: AsyncIterable<Uint8Array>;
+  fileName: string;
+  onBytes(chunk: Uint8Array): void;
+  /** Told at once when the file itself is at fault: the store takes its time to give up what it has begun. */
+  refuse(error: unknown): void;
+  signal: AbortSignal;
+}
+
+/** @throws AppError as `checkBytes`, `unavailable` where the store and not the file failed */
+async function storeFile({ container, key, file, fileName, ...input }: StoreInput): Promise<ReceivedFile> {
+  const hash = createHash("sha256");
+  let isFileAtFault = false;
+  const onBytes = (chunk: Uint8Array) => {
+    input.onBytes(chunk);
+    hash.update(chunk);
+  };
+  async function* watched(): AsyncIterable<Uint8Array> {
+    try {
+      yield* checkBytes(file, { name: fileName, onBytes });
+    } catch (error) {
+      isFileAtFault = true;
+      input.refuse(error);
+      throw error;
+    }
+  }
+  try {
+    const { bytes } = await container.storage.put(key, watched(), { signal: input.signal });
+    return { key, fileName, fileBytes: bytes, sha256: hash.digest("hex") };
+  } catch (cause) {
+    if (isFileAtFault || input.signal.aborted) throw cause;
+    throw new AppError("unavailable", "The file store does not answer. Nothing was kept; try again.", { cause });
   }
 }
 
@@ -140,24 +181,35 @@ function openForm(request: Request): busboy.Busboy {
     return busboy({
       headers: { "content-type": type },
       defParamCharset: "utf8",
-      limits: { files: 4, fields: 20, fieldSize: FIELD_BYTES },
+      limits: { files: MOST_PARTS, fields: 20, fieldSize: FIELD_BYTES },
     });
   } catch (error) {
     throw brokenForm(error);
   }
 }
 
+/** Feeds the form; settles as soon as it has ended or was refused, whatever is still on its way. */
 async function receiveForm(request: Request, form: busboy.Busboy): Promise<void> {
-  if (!request.body) throw missingFile();
-  await pipeline(Readable.fromWeb(request.body as Parameters<typeof Readable.fromWeb>[0]), form);
+  if (!request.body) throw refuseFiles("Choose a file: the form needs a part named file.");
+  const ended = finished(form);
+  feedForm(request.body, form).catch((error: unknown) => form.destroy(error instanceof Error ? error : undefined));
+  await ended;
 }
 
-function missingFile(): AppError {
-  const message = "the form needs a part named file";
-  return new AppError("unprocessable", `Choose a file: ${message}.`, { places: [{ path: "file", message }] });
+async function feedForm(body: ReadableStream<Uint8Array>, form: busboy.Busboy): Promise<void> {
+  for await (const chunk of requestChunks(body)) {
+    if (form.destroyed) return;
+    if (!form.write(chunk)) await nextDrain(form);
+  }
+  if (!form.destroyed) form.end();
 }
 
-function brokenForm(cause: unknown): AppError {
-  const message = "The upload broke off before its end, or is not a whole form. Nothing was kept; send it again.";
-  return new AppError("bad_request", message, { detailCode: "upload_broken", cause });
+function nextDrain(form: busboy.Busboy): Promise<void> {
+  return new Promise((resolve) => {
+    const go = () => {
+      form.off("drain", go).off("close", go);
+      resolve();
+    };
+    form.on("drain", go).on("close", go);
+  });
 }

@@ -11,10 +11,11 @@ import type { LogErrorPlace } from "@/lib/server/logs/log-failure";
 
 /** What the worker asks of a reading thread. */
 export type ThreadTask =
-  | { task: "inspect"; file: LogFile; near: { longitude: number; latitude: number } | null }
+  | { task: "inspect"; files: LogFile[]; near: { longitude: number; latitude: number } | null }
   | {
       task: "read";
-      file: LogFile;
+      /** One, or the parts of one log. */
+      files: LogFile[];
       mapping: LogMapping;
       machine: Seeder | null;
       /** Of a named machine that is no seeder. */

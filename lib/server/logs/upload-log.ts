@@ -1,7 +1,8 @@
 import "server-only";
 import { withOrganisation, type Transaction } from "@/db/client";
 import { recordAudit } from "@/db/queries/audit";
-import { findSameBytes, insertLog, isFileInUse, lockBytes } from "@/db/queries/logs";
+import { insertLogFiles, isFileInUse } from "@/db/queries/log-files";
+import { findSameBytes, insertLog, lockBytes } from "@/db/queries/logs";
 import { AppError } from "@/lib/errors";
 import { newId } from "@/lib/ids";
 import type { LogMapping } from "@/lib/ingest/mapping";
@@ -9,39 +10,45 @@ import type { Scope } from "@/lib/scope";
 import type { Container } from "@/lib/server/create-container";
 import { getFieldOrThrow } from "@/lib/server/fields/get-field-or-throw";
 import { demandMachine } from "@/lib/server/logs/change-log";
-import { uploadKey } from "@/lib/server/logs/log-file";
+import { distinctFiles, hashOfSet } from "@/lib/server/logs/distinct-files";
+import { nameFiles, uploadKey } from "@/lib/server/logs/log-file";
 import { readMapping } from "@/lib/server/logs/map-columns";
 import { noteReadLog, sendReadLog } from "@/lib/server/logs/queue-log";
-import { receiveUpload, type ReceivedUpload } from "@/lib/server/logs/receive-upload";
+import { receiveUpload, type ReceivedFile } from "@/lib/server/logs/receive-upload";
 
 interface UploadInput {
   fieldId: string;
   /** Take bytes that the field has already. */
   again: boolean;
+  /** Several files are parts of one log. */
+  together: boolean;
   request: Request;
 }
 
-/** A file whose parts have been read: what `POST /logs` stores. */
+/** A log whose files have arrived: what `POST /logs` stores. */
 export interface NewUpload {
   fieldId: string;
   again: boolean;
-  upload: Pick<ReceivedUpload, "key" | "fileName" | "fileBytes" | "sha256">;
+  /** At least one; the same bytes twice are kept once. */
+  files: readonly ReceivedFile[];
   machineId: string | null;
   mapping: LogMapping | null;
 }
 
 /** Streams a log to the object store, notes it and hands it to the worker. @throws AppError 404, 409, 413, 415, 422 */
 export async function uploadLog(container: Container, scope: Scope, input: UploadInput): Promise<{ id: string }> {
-  await withOrganisation(scope, (tx) => getFieldOrThrow(tx, scope, input.fieldId));
-  const upload = await receiveUpload(container, scope.organisationId, input.request);
+  const { fieldId, again, together, request } = input;
+  await withOrganisation(scope, (tx) => getFieldOrThrow(tx, scope, fieldId));
+  const { organisationId } = scope;
+  const { files, fields } = await receiveUpload(container, { organisationId, request, together });
   try {
-    const mapping = parseMappingField(upload.fields.mapping);
-    const machineId = upload.fields.machineId || null;
-    const id = await keepUpload(container, scope, { ...input, upload, machineId, mapping });
+    const mapping = parseMappingField(fields.mapping);
+    const machineId = fields.machineId || null;
+    const id = await keepUpload(container, scope, { fieldId, again, files, machineId, mapping });
     await sendReadLog(container, scope, id);
     return { id };
   } finally {
-    await container.storage.delete(upload.key).catch(() => undefined);
+    await Promise.allSettled(files.map(({ key }) => container.storage.delete(key)));
   }
 }
 
@@ -59,24 +66,38 @@ function parseMappingField(text: string | undefined): LogMapping | null {
   }
 }
 
-/** Moves the bytes to their place and writes the log's row, both or neither. The caller wakes the worker. */
+/** Moves the bytes to their place and writes the log's rows, all or nothing. The caller wakes the worker. */
 export async function keepUpload(container: Container, scope: Scope, input: NewUpload): Promise<string> {
-  const { fieldId, upload, machineId, mapping } = input;
-  const { sha256, fileName, fileBytes } = upload;
+  const { fieldId, machineId, mapping } = input;
+  const files = distinctFiles(input.files);
+  const sha256 = hashOfSet(files.map((file) => file.sha256));
+  const fileName = nameFiles(files.map((file) => file.fileName));
+  const fileBytes = files.reduce((sum, file) => sum + file.fileBytes, 0);
   const id = newId("log");
-  const key = uploadKey({ organisationId: scope.organisationId, sha256 });
   await withOrganisation(scope, async (tx) => {
     if (machineId) await demandMachine(tx, scope, machineId);
-    await lockBytes(tx, scope, sha256);
+    // Always in the same order, so that two requests never wait for each other.
+    for (const hash of files.map((file) => file.sha256).sort()) await lockBytes(tx, scope, hash);
     if (!input.again) await refuseSameBytes(tx, scope, { fieldId, sha256 });
-    const isKept = await isFileInUse(tx, scope, { sha256, exceptLogId: id });
-    const name = fileName.replace(/\.(csv|tsv|txt|json|geojson|zip|gz)$/i, "").replace(/\.csv$/i, "") || fileName;
+    const arrived: typeof files = [];
+    for (const file of files) {
+      if (!(await isFileInUse(tx, scope, { sha256: file.sha256, exceptLogId: id }))) arrived.push(file);
+    }
+    const name = logName(files[0]?.fileName ?? fileName);
     await insertLog(tx, scope, { id, fieldId, machineId, mapping, name, fileName, fileBytes, sha256 });
+    await insertLogFiles(tx, scope, { logId: id, files });
     await noteReadLog(tx, scope, id);
-    await recordAudit(tx, scope, { action: "log.upload", subject: id, detail: { fieldId, fileName, fileBytes } });
-    if (!isKept) await container.storage.copy(upload.key, key);
+    const detail = { fieldId, fileName, fileBytes, files: files.length };
+    await recordAudit(tx, scope, { action: "log.upload", subject: id, detail });
+    for (const file of arrived) {
+      await container.storage.copy(file.key, uploadKey({ organisationId: scope.organisationId, sha256: file.sha256 }));
+    }
   });
   return id;
+}
+
+function logName(fileName: string): string {
+  return fileName.replace(/\.(csv|tsv|txt|json|geojson|zip|gz)$/i, "").replace(/\.csv$/i, "") || fileName;
 }
 
 async function refuseSameBytes(

@@ -12,7 +12,8 @@ export const GET = withScope<"fieldId">("logs.read", async ({ container, scope, 
 
 export const POST = withScope<"fieldId">("logs.upload", async ({ container, scope, params, request, url }) => {
   const again = url.searchParams.get("again") === "1";
-  const { id } = await uploadLog(container, scope, { fieldId: params.fieldId, again, request });
+  const together = url.searchParams.get("together") === "1";
+  const { id } = await uploadLog(container, scope, { fieldId: params.fieldId, again, together, request });
   return reply(LogAccepted, { id, status: "queued" }, { status: 202, headers: { location: `/api/v1/logs/${id}` } });
 });
 
