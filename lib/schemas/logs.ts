@@ -19,8 +19,6 @@ export const LogNoteBody = z.object({
   count: z.number().int(),
   firstLine: z.number().int().optional(),
   message: z.string(),
-  /** Of a log that came in several files: the one it speaks of, to which `firstLine` belongs. */
-  file: z.string().optional(),
   /** Another field that the note speaks of. */
   fieldId: z.string().optional(),
 });
@@ -38,16 +36,6 @@ export const LogChannelBody = z.object({
   min: NullableNumber,
   max: NullableNumber,
   perRow: z.boolean(),
-});
-
-export const LogFileBody = z.object({
-  name: z.string(),
-  bytes: z.number().int(),
-  sha256: z.string(),
-  /** Records read from it; null until it has been read. */
-  records: z.number().int().nullable(),
-  /** Names of further files of the same upload with these very bytes, which were kept once. */
-  copies: z.array(z.string()),
 });
 
 export const Log = z.object({
@@ -73,10 +61,7 @@ export const Log = z.object({
   mappingVersion: z.number().int().nullable().optional(),
   fileName: z.string(),
   fileBytes: z.number().int(),
-  /** Of a log in several files: a hash over the hashes of all of them. */
   sha256: z.string(),
-  /** The files it was uploaded as, in the order sent; told where one log is asked for. */
-  files: z.array(LogFileBody).optional(),
   /** Grows with every new mapping or machine; part of tile addresses. */
   version: z.number().int(),
   createdAt: Instant,
