@@ -19,6 +19,8 @@ export const LogNoteBody = z.object({
   count: z.number().int(),
   firstLine: z.number().int().optional(),
   message: z.string(),
+  /** Of a log that came in several files: the one it speaks of, to which `firstLine` belongs. */
+  file: z.string().optional(),
   /** Another field that the note speaks of. */
   fieldId: z.string().optional(),
 });
@@ -36,6 +38,16 @@ export const LogChannelBody = z.object({
   min: NullableNumber,
   max: NullableNumber,
   perRow: z.boolean(),
+});
+
+export const LogFileBody = z.object({
+  name: z.string(),
+  bytes: z.number().int(),
+  sha256: z.string(),
+  /** Records read from it; null until it has been read. */
+  records: z.number().int().nullable(),
+  /** Names of further files of the same upload with these very bytes, which were kept once. */
+  copies: z.array(z.string()),
 });
 
 export const Log = z.object({
@@ -61,9 +73,14 @@ export const Log = z.object({
   mappingVersion: z.number().int().nullable().optional(),
   fileName: z.string(),
   fileBytes: z.number().int(),
+  /** Of a log in several files: a hash over the hashes of all of them. */
   sha256: z.string(),
+  /** The files it was uploaded as, in the order sent; told where one log is asked for. */
+  files: z.array(LogFileBody).optional(),
   /** Grows with every new mapping or machine; part of tile addresses. */
   version: z.number().int(),
+  /** Of the adjustments in force (cleaning rules, delays); 0 where they change no reading. Part of tile addresses. */
+  revision: z.number().int().optional(),
   createdAt: Instant,
   /** Whether whoever asks may delete it. */
   removable: z.boolean().optional(),
@@ -278,6 +295,8 @@ export const ReadingAt = z.object({
   speedMps: NullableNumber,
   values: z.record(z.string(), NullableNumber),
   flags: z.array(z.string()),
+  /** Why readings here are left out (null in `values`): each reason with the channels it takes. */
+  leftOut: z.array(z.object({ code: z.string(), words: z.string(), channels: z.array(z.string()) })).optional(),
 });
 export type ReadingAt = z.infer<typeof ReadingAt>;
 

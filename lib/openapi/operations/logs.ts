@@ -24,13 +24,15 @@ export const logOperations: Operation[] = [
     tag,
     permission: "logs.upload",
     summary: "Upload a log",
-    description: "The same bytes in the same field: 409 naming the first log, unless `again=1`.",
-    query: z.object({ again: z.enum(["0", "1"]).optional() }),
+    description:
+      "The same bytes in the same field: 409 naming the first log, unless `again=1`. With `together=1` several `file` parts (at most 500) are parts of one log: they need the same columns, stand in the order of their times, and each is kept; the same bytes twice are used once. A zip of CSV or GeoJSON files is one log as well.",
+    query: z.object({ again: z.enum(["0", "1"]).optional(), together: z.enum(["0", "1"]).optional() }),
     form: {
       file: {
         kind: "file",
         required: true,
-        description: "CSV or GeoJSON, also gzipped; zipped shapefile; zipped ISO 11783-10 task data",
+        description:
+          "CSV or GeoJSON, also gzipped or several in a zip; zipped shapefile; zipped ISO 11783-10 task data. Repeated with `together=1`",
       },
       machineId: { kind: "text", description: "The machine that made the log" },
       mapping: { kind: "json", description: "What the columns mean; see PUT /mapping" },
@@ -100,6 +102,8 @@ export const logOperations: Operation[] = [
     tag,
     permission: "logs.read",
     summary: "The file as it was uploaded",
+    description: "Of a log in several files the one with this `sha256`, or without it all of them in a zip.",
+    query: z.object({ sha256: z.string().optional() }),
     replies: [{ status: 200, description: "The same bytes", contentType: "application/octet-stream" }],
   },
   {

@@ -1,12 +1,16 @@
 import { withOrganisation } from "@/db/client";
 import { endJobs } from "@/db/queries/jobs";
+import { listLogFiles } from "@/db/queries/log-files";
 import { saveLogResult } from "@/db/queries/log-results";
 import { changeLog, findBoundaryOfLog, findMachineOfLog, type LogRow } from "@/db/queries/logs";
+import { noteRepeated } from "@/lib/ingest/join-parts";
 import type { Inspection } from "@/lib/ingest/log-format";
+import type { LogNote } from "@/lib/logs/machine-log";
 import type { PackedPlacedLog } from "@/lib/logs/packed-placed-log";
 import type { Seeder } from "@/lib/machines/machine";
 import type { Boundary } from "@/lib/schemas/geometry";
 import { chooseMapping, type ChosenMapping } from "@/lib/server/logs/choose-mapping";
+import type { LogFile } from "@/lib/server/logs/log-file";
 import { LogFailure } from "@/lib/server/logs/log-failure";
 import type { LogProgress } from "@/lib/server/logs/log-progress";
 import { notePlace } from "@/lib/server/logs/note-place";
@@ -26,9 +30,10 @@ export async function readAndStore(log: LogRow, threads: ThreadPool, progress: L
       onProgress: (stage: string, share: number) => progress.tell(stage, share, share < 0.5 ? "reading" : "building"),
     };
     progress.tell("Looking at the columns", 0.01);
-    const file = fileOf(log);
-    const inspected = await thread.inspect({ file, near: context.near }, ask);
+    const { files, repeated } = context;
+    const inspected = await thread.inspect({ files, near: context.near }, ask);
     if (!inspected.ok) throw new LogFailure(inspected.error);
+    inspected.value.notes.push(...repeated);
     const chosen = await chooseMapping(log, inspected.value);
     await keepInspection(log, inspected.value, chosen);
     if (!chosen) return waitForMapping(log, inspected.value, progress);
@@ -42,10 +47,10 @@ export async function readAndStore(log: LogRow, threads: ThreadPool, progress: L
       writer.begin(placed);
     };
     try {
-      const built = await thread.read({ file, mapping, machine, workingWidthM, boundary }, { ...ask, onPlaced });
+      const built = await thread.read({ files, mapping, machine, workingWidthM, boundary }, { ...ask, onPlaced });
       if (!built.ok) throw new LogFailure(built.error);
       const place = stood ? await notePlace(log, stood.log) : [];
-      await writer.finish({ ...built.value, notes: [...place, ...built.value.notes] });
+      await writer.finish({ ...built.value, notes: [...place, ...repeated, ...built.value.notes] });
     } catch (error) {
       await writer.undo(error);
       throw error;
@@ -53,11 +58,11 @@ export async function readAndStore(log: LogRow, threads: ThreadPool, progress: L
   });
 }
 
-function fileOf({ organisationId, sha256, fileName, fileBytes }: LogRow) {
-  return { organisationId, sha256, fileName, fileBytes };
-}
-
 interface LogContext {
+  /** In the order sent, each with bytes of its own. */
+  files: LogFile[];
+  /** Says which files were sent twice. */
+  repeated: LogNote[];
   machine: Seeder | null;
   /** Of a named machine that is no seeder: a combine's header. */
   workingWidthM: number | null;
@@ -72,7 +77,13 @@ async function readContext(log: LogRow): Promise<LogContext> {
     const machine = log.machineId ? await findMachineOfLog(tx, scope, log.machineId) : null;
     const ring = boundary?.type === "Polygon" ? boundary.coordinates[0] : boundary?.coordinates[0]?.[0];
     const corner = ring?.[0];
+    const rows = await listLogFiles(tx, scope, log.id);
+    const copies = rows.flatMap((row) => row.copies);
     return {
+      files: rows.map(({ organisationId, sha256, fileName, fileBytes }) => {
+        return { organisationId, sha256, fileName, fileBytes };
+      }),
+      repeated: copies.length === 0 ? [] : [noteRepeated(copies)],
       machine: machine?.kind === "seeder" ? machine : null,
       workingWidthM: machine?.kind === "combine" ? machine.headerWidthM : null,
       boundary,
