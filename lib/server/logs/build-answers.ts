@@ -3,7 +3,6 @@ import { resolveChannel, type ResolvedChannel } from "@/lib/channels/resolve-cha
 import { measureCoverage } from "@/lib/coverage/measure-coverage";
 import { passVerdict } from "@/lib/findings/pass-verdict";
 import type { ReadLog } from "@/lib/ingest/log-format";
-import type { PackedPlacedLog } from "@/lib/logs/packed-placed-log";
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import type { Seeder } from "@/lib/machines/machine";
 import { rowDistances } from "@/lib/rows/row-distances";
@@ -25,11 +24,6 @@ export function placeLog(
   const built = buildLog(read.log, machine, options);
   if (!built.ok) throw new LogFailure({ code: built.error.code, message: built.error.message });
   return { placed: built.value.placed, notes: [...read.notes, ...built.value.notes] };
-}
-
-/** Without the plane's functions, which cannot cross between threads. */
-export function packPlacedLog({ plane, ...placed }: PlacedLog): PackedPlacedLog {
-  return { ...placed, planeCentre: { longitude: plane.longitude, latitude: plane.latitude } };
 }
 
 /** Logged channels of a log, and opener resistance where it can be had. */
