@@ -70,12 +70,15 @@ export function isSet(grid: BitGrid, row: number, column: number): boolean {
 /** Number of cells set. */
 export function countBits(grid: BitGrid): number {
   let count = 0;
-  for (let word of grid.words) {
-    word -= (word >>> 1) & 0x55555555;
-    word = (word & 0x33333333) + ((word >>> 2) & 0x33333333);
-    count += Math.imul((word + (word >>> 4)) & 0x0f0f0f0f, 0x01010101) >>> 24;
-  }
+  for (let at = 0; at < grid.words.length; at++) count += countWordBits(grid.words[at]!);
   return count;
+}
+
+/** Number of bits set in a word of 32. */
+export function countWordBits(bits: number): number {
+  let word = bits - ((bits >>> 1) & 0x55555555);
+  word = (word & 0x33333333) + ((word >>> 2) & 0x33333333);
+  return Math.imul((word + (word >>> 4)) & 0x0f0f0f0f, 0x01010101) >>> 24;
 }
 
 /** First column at or after `from` whose cell is set (or, with `wanted` false, clear); `columns` where there is none. */

@@ -1,14 +1,14 @@
 import { emptyCopy, isSet, nextColumn, setSpan, type BitGrid } from "@/lib/coverage/bit-grid";
 
 /**
- * Counts clear cells that lie between set ones along both directions of the grid, in gaps of at most `maxGap` cells; only
- * those set in `inside`, where it is given.
+ * Clear cells that lie between set ones along both directions of the grid, in gaps of at most `maxGap` cells; only those set
+ * in `inside`, where it is given.
  */
-export function countEnclosedGaps(grid: BitGrid, maxGap: number, inside: BitGrid | null): number {
+export function markEnclosedGaps(grid: BitGrid, maxGap: number, inside: BitGrid | null): BitGrid {
   const gaps = markRowGaps(grid, maxGap);
   if (inside) for (let k = 0; k < gaps.words.length; k++) gaps.words[k]! &= inside.words[k]!;
+  const enclosed = emptyCopy(grid);
   const lastSet = new Int32Array(grid.wordsPerRow * 32).fill(-1);
-  let count = 0;
   for (let row = 0; row < grid.rows; row++) {
     for (let word = 0; word < grid.wordsPerRow; word++) {
       const now = grid.words[row * grid.wordsPerRow + word]!;
@@ -16,11 +16,11 @@ export function countEnclosedGaps(grid: BitGrid, maxGap: number, inside: BitGrid
       for (let bits = before & ~now; bits !== 0; bits &= bits - 1) lastSet[columnOf(word, bits)] = row - 1;
       for (let bits = now & ~before; bits !== 0; bits &= bits - 1) {
         const column = columnOf(word, bits);
-        count += countColumnGap(gaps, column, { after: lastSet[column]!, before: row, maxGap });
+        markColumnGap(gaps, enclosed, column, { after: lastSet[column]!, before: row, maxGap });
       }
     }
   }
-  return count;
+  return enclosed;
 }
 
 function columnOf(word: number, bits: number): number {
@@ -47,9 +47,10 @@ interface ColumnGap {
   maxGap: number;
 }
 
-function countColumnGap(gaps: BitGrid, column: number, { after, before, maxGap }: ColumnGap): number {
-  if (after < 0 || before - after - 1 > maxGap) return 0;
-  let count = 0;
-  for (let row = after + 1; row < before; row++) if (isSet(gaps, row, column)) count++;
-  return count;
+// kernel: hot, so positional
+function markColumnGap(gaps: BitGrid, enclosed: BitGrid, column: number, { after, before, maxGap }: ColumnGap): void {
+  if (after < 0 || before - after - 1 > maxGap) return;
+  for (let row = after + 1; row < before; row++) {
+    if (isSet(gaps, row, column)) setSpan(enclosed, row, column, column + 1);
+  }
 }

@@ -1,15 +1,13 @@
 import type { MultiPolygon, Polygon } from "geojson";
-import { countBits, createBitGrid, emptyCopy, type BitGrid } from "@/lib/coverage/bit-grid";
-import { countEnclosedGaps } from "@/lib/coverage/enclosed-gaps";
-import { fillPolygon } from "@/lib/coverage/fill-polygon";
-import { fillQuad } from "@/lib/coverage/fill-quad";
-import { cellBounds, visitCells } from "@/lib/coverage/pass-cells";
-import { groupRows } from "@/lib/coverage/row-groups";
-import { RADIANS_PER_DEGREE } from "@/lib/geo/circular-mean";
+import { countBits, countWordBits } from "@/lib/coverage/bit-grid";
+import { drawPasses } from "@/lib/coverage/draw-passes";
+import { findSkips } from "@/lib/coverage/find-skips";
+import { overlapCause } from "@/lib/coverage/overlap-cause";
+import { findSwitchedOff } from "@/lib/coverage/switched-off";
 import type { PlacedLog } from "@/lib/logs/placed-log";
-import { mainAxisDeg } from "@/lib/passes/main-axis";
 import { rowDistances } from "@/lib/rows/row-distances";
 import { implementWidthM } from "@/lib/rows/row-geometry";
+import { OVERLAP_CAUSES, type OverlapByCause, type OverlapCause } from "@/lib/schemas/coverage";
 
 export interface Coverage {
   /** Sum over working readings of row spacing times distance. */
@@ -25,70 +23,91 @@ export interface Coverage {
   skippedM2: number;
   /** Side of the grid's cells. */
   resolutionM: number;
+  /** In the order of `OVERLAP_CAUSES`; the areas add up to `overlapM2`. */
+  overlapByCause: OverlapByCause[];
+  /** Pieces of skipped ground of at least 1 m2. */
+  skips: { count: number; areaM2: number; largestM2: number };
 }
 
 export interface CoverageOptions {
   distances?: Float32Array;
   boundary?: Polygon | MultiPolygon | null;
-  /** Cells of the grid at most; they grow beyond that. The default takes 64 MB. */
+  /** Cells of the grid at most; they grow beyond that. The default takes 128 MB. */
   maxCells?: number;
 }
 
-/**
- * The grid stands at this angle to the passes: along them, a whole edge would fall to one side of a line of cell centres
- * and the errors would add up; aslant they cancel.
- */
-const GRID_TURN_DEG = 31;
-const CELLS_PER_SPACING = 2.5;
-const MAX_CELLS = 2 ** 29;
-
-/** Area swept, covered, overlapped and skipped, by a grid finer than half a row spacing. */
+/** Area swept, covered, overlapped by cause, and skipped, by a grid finer than half a row spacing. */
 export function measureCoverage(placed: PlacedLog, options: CoverageOptions = {}): Coverage {
-  const sweptM2 = sweptAreaM2(placed, options.distances ?? rowDistances(placed));
-  const xAxisDeg = (mainAxisDeg(placed.passes) ?? 0) + GRID_TURN_DEG;
-  const frame = { groups: groupRows(placed.geometry), xAxisDeg };
-  const bounds = cellBounds(placed, frame);
-  if (!bounds) return { sweptM2, coveredM2: 0, overlapM2: sweptM2, skippedM2: 0, resolutionM: 0 };
-  const spacingM = Math.min(...placed.geometry.widthM);
-  const grid = createBitGrid(bounds, spacingM / CELLS_PER_SPACING, options.maxCells ?? MAX_CELLS);
-  visitCells(placed, frame, (quad) => fillQuad(grid, quad));
-  const cellM2 = grid.cellM * grid.cellM;
-  const coveredM2 = Math.min(countBits(grid) * cellM2, sweptM2);
-  const maxGap = Math.ceil((2 * implementWidthM(placed.geometry)) / grid.cellM);
-  const inside = options.boundary ? boundaryGrid(placed, grid, { boundary: options.boundary, xAxisDeg }) : null;
-  const skippedM2 = countEnclosedGaps(grid, maxGap, inside) * cellM2;
-  return { sweptM2, coveredM2, overlapM2: sweptM2 - coveredM2, skippedM2, resolutionM: grid.cellM };
+  const switchedOff = findSwitchedOff(placed);
+  const sweptM2 = sweptAreaM2(placed, options.distances ?? rowDistances(placed), switchedOff);
+  const cells = new Map<number, number>();
+  const drawn = drawPasses(placed, {
+    maxCells: options.maxCells,
+    switchedOff,
+    visit: ({ bits, later, earlier }) => {
+      const pair = later * STRETCHES + earlier;
+      cells.set(pair, (cells.get(pair) ?? 0) + countWordBits(bits));
+    },
+  });
+  if (!drawn) return nothingDrawn(sweptM2);
+  const { worked, frame, stretches } = drawn;
+  const { cellM } = worked.cells;
+  const coveredM2 = Math.min(countBits(worked.cells) * cellM * cellM, sweptM2);
+  const widthM = implementWidthM(placed.geometry);
+  const causes = new Map<OverlapCause, number>();
+  for (const [pair, count] of cells) {
+    const later = stretches[Math.floor(pair / STRETCHES)]!;
+    const cause = overlapCause(later, stretches[pair % STRETCHES]!, widthM);
+    causes.set(cause, (causes.get(cause) ?? 0) + count * cellM * cellM);
+  }
+  const overlapM2 = sweptM2 - coveredM2;
+  const { boundary = null } = options;
+  const skips = findSkips(placed, worked.cells, { boundary, xAxisDeg: frame.xAxisDeg });
+  return {
+    sweptM2,
+    coveredM2,
+    overlapM2,
+    skippedM2: skips.cells * cellM * cellM,
+    resolutionM: cellM,
+    overlapByCause: shareOut(causes, overlapM2),
+    skips: {
+      count: skips.pieces.length,
+      areaM2: skips.pieces.reduce((sum, piece) => sum + piece.areaM2, 0),
+      largestM2: skips.pieces[0]?.areaM2 ?? 0,
+    },
+  };
 }
 
-function sweptAreaM2(placed: PlacedLog, distances: Float32Array): number {
+/** More stretches than a log has: pairs of them make one number. */
+const STRETCHES = 2 ** 26;
+
+function nothingDrawn(sweptM2: number): Coverage {
+  const overlapByCause = shareOut(new Map(), sweptM2);
+  const skips = { count: 0, areaM2: 0, largestM2: 0 };
+  return { sweptM2, coveredM2: 0, overlapM2: sweptM2, skippedM2: 0, resolutionM: 0, overlapByCause, skips };
+}
+
+/**
+ * Causes that add up to the overlap, which is swept less covered: what the grid did not see twice (a pass that crosses itself)
+ * is other; where the grid saw a little more than that, all are scaled down.
+ */
+function shareOut(causes: ReadonlyMap<OverlapCause, number>, overlapM2: number): OverlapByCause[] {
+  const seenM2 = [...causes.values()].reduce((sum, areaM2) => sum + areaM2, 0);
+  const factor = seenM2 > overlapM2 ? overlapM2 / seenM2 : 1;
+  const restM2 = Math.max(0, overlapM2 - seenM2);
+  return OVERLAP_CAUSES.map((cause) => ({
+    cause,
+    areaM2: factor * (causes.get(cause) ?? 0) + (cause === "other" ? restM2 : 0),
+  }));
+}
+
+function sweptAreaM2(placed: PlacedLog, distances: Float32Array, switchedOff: Uint8Array | null): number {
   const { rows, widthM } = placed.geometry;
   let area = 0;
   for (let at = 0; at < distances.length; at += rows) {
-    for (let row = 0; row < rows; row++) area += distances[at + row]! * widthM[row]!;
+    for (let row = 0; row < rows; row++) {
+      if (switchedOff?.[at + row] !== 1) area += distances[at + row]! * widthM[row]!;
+    }
   }
   return area;
-}
-
-interface TurnedBoundary {
-  boundary: Polygon | MultiPolygon;
-  xAxisDeg: number;
-}
-
-function boundaryGrid(placed: PlacedLog, grid: BitGrid, { boundary, xAxisDeg }: TurnedBoundary): BitGrid {
-  const inside = emptyCopy(grid);
-  const sin = Math.sin(xAxisDeg * RADIANS_PER_DEGREE);
-  const cos = Math.cos(xAxisDeg * RADIANS_PER_DEGREE);
-  const polygons = boundary.type === "Polygon" ? [boundary.coordinates] : boundary.coordinates;
-  for (const rings of polygons) {
-    const turned = rings.map((ring) =>
-      Float64Array.from(
-        ring.flatMap((corner) => {
-          const [east, north] = placed.plane.toPlane(corner[0] ?? NaN, corner[1] ?? NaN);
-          return [east * sin + north * cos, north * sin - east * cos];
-        }),
-      ),
-    );
-    fillPolygon(inside, turned);
-  }
-  return inside;
 }

@@ -1,8 +1,8 @@
 import type { Bounds } from "@/lib/coverage/bit-grid";
-import type { RowGroup } from "@/lib/coverage/row-groups";
+import { groupRows, type RowGroup } from "@/lib/coverage/row-groups";
 import { RADIANS_PER_DEGREE } from "@/lib/geo/circular-mean";
 import type { PlacedLog } from "@/lib/logs/placed-log";
-import { passSteps } from "@/lib/rows/pass-members";
+import { passSteps, type PassStep } from "@/lib/rows/pass-members";
 
 /** Corners of one cell as x, y four times round; overwritten by the next. */
 export type Quad = Float64Array;
@@ -11,6 +11,8 @@ export type Quad = Float64Array;
 export interface CellFrame {
   groups: RowGroup[];
   xAxisDeg: number;
+  /** 1 where a row was switched off, laid out like a channel. */
+  switchedOff?: Uint8Array | null;
 }
 
 /**
@@ -18,27 +20,47 @@ export interface CellFrame {
  * record, in a frame whose x axis points along `xAxisDeg`. The first record of a pass reaches back as far as the next one
  * goes on.
  */
-export function visitCells(placed: PlacedLog, { groups, xAxisDeg }: CellFrame, visit: (quad: Quad) => void): void {
-  const quad = new Float64Array(8);
-  const turn = { sin: Math.sin(xAxisDeg * RADIANS_PER_DEGREE), cos: Math.cos(xAxisDeg * RADIANS_PER_DEGREE) };
+export function visitCells(placed: PlacedLog, frame: CellFrame, visit: (quad: Quad) => void): void {
   for (const pass of placed.passes) {
-    for (const step of passSteps(placed, pass)) {
-      if (step.before < 0 && step.after < 0) continue;
-      for (const group of groups) {
-        writeEdge(placed, group, step.record, { quad, at: 4, turn });
-        if (step.before >= 0) writeEdge(placed, group, step.before, { quad, at: 0, turn });
-        else {
-          writeEdge(placed, group, step.after, { quad, at: 0, turn });
-          // Edges run right to left in the second half, left to right in the first: mirror about the record's own edge.
-          quad[0] = 2 * quad[6]! - quad[0]!;
-          quad[1] = 2 * quad[7]! - quad[1]!;
-          quad[2] = 2 * quad[4]! - quad[2]!;
-          quad[3] = 2 * quad[5]! - quad[3]!;
-        }
-        visit(quad);
+    const steps = passSteps(placed, pass).filter((step) => step.before >= 0 || step.after >= 0);
+    visitStepCells(placed, frame, steps, visit);
+  }
+}
+
+/** The same for some steps of a pass; without the rows that were switched off, where the frame says so. */
+export function visitStepCells(
+  placed: PlacedLog,
+  frame: CellFrame,
+  steps: readonly PassStep[],
+  visit: (quad: Quad) => void,
+): void {
+  const quad = new Float64Array(8);
+  const turn = {
+    sin: Math.sin(frame.xAxisDeg * RADIANS_PER_DEGREE),
+    cos: Math.cos(frame.xAxisDeg * RADIANS_PER_DEGREE),
+  };
+  for (const step of steps) {
+    for (const group of groupsAt(placed, frame, step.record)) {
+      writeEdge(placed, group, step.record, { quad, at: 4, turn });
+      if (step.before >= 0) writeEdge(placed, group, step.before, { quad, at: 0, turn });
+      else {
+        writeEdge(placed, group, step.after, { quad, at: 0, turn });
+        // Edges run right to left in the second half, left to right in the first: mirror about the record's own edge.
+        quad[0] = 2 * quad[6]! - quad[0]!;
+        quad[1] = 2 * quad[7]! - quad[1]!;
+        quad[2] = 2 * quad[4]! - quad[2]!;
+        quad[3] = 2 * quad[5]! - quad[3]!;
       }
+      visit(quad);
     }
   }
+}
+
+function groupsAt(placed: PlacedLog, { groups, switchedOff }: CellFrame, record: number): RowGroup[] {
+  if (!switchedOff) return groups;
+  const { rows } = placed.geometry;
+  const off = switchedOff.subarray(record * rows, (record + 1) * rows);
+  return off.includes(1) ? groupRows(placed.geometry, (row) => off[row] === 1) : groups;
 }
 
 interface EdgeTarget {
@@ -74,8 +96,17 @@ function writePoint(
 
 /** The box around all cells; null where there are none. */
 export function cellBounds(placed: PlacedLog, frame: CellFrame): Bounds | null {
+  return boundsOf((grow) => visitCells(placed, frame, grow));
+}
+
+/** The box around the cells of some steps; null where there are none. */
+export function stepBounds(placed: PlacedLog, frame: CellFrame, steps: readonly PassStep[]): Bounds | null {
+  return boundsOf((grow) => visitStepCells(placed, frame, steps, grow));
+}
+
+function boundsOf(draw: (grow: (quad: Quad) => void) => void): Bounds | null {
   const bounds = { minX: Infinity, minY: Infinity, maxX: -Infinity, maxY: -Infinity };
-  visitCells(placed, frame, (quad) => {
+  draw((quad) => {
     for (let k = 0; k < 8; k += 2) {
       bounds.minX = Math.min(bounds.minX, quad[k]!);
       bounds.maxX = Math.max(bounds.maxX, quad[k]!);

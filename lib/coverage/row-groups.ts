@@ -10,13 +10,14 @@ export interface RowGroup {
 /** Edges closer than this join: a millimetre is below what any row spacing is given to. */
 const JOIN_M = 0.001;
 
-/** The strips of a machine: one where all rows stand in line, one a row where ranks alternate. */
-export function groupRows(geometry: RowGeometry): RowGroup[] {
+/** The strips of a machine: one where all rows stand in line, one a row where ranks alternate; without the rows that are off. */
+export function groupRows(geometry: RowGeometry, isOff?: (row: number) => boolean): RowGroup[] {
   const order = Array.from({ length: geometry.rows }, (_, row) => row).sort(
     (a, b) => geometry.offsetM[a]! - geometry.offsetM[b]!,
   );
   const groups: RowGroup[] = [];
   for (const row of order) {
+    if (isOff?.(row)) continue;
     const leftM = geometry.offsetM[row]! - geometry.widthM[row]! / 2;
     const rightM = leftM + geometry.widthM[row]!;
     const forwardM = geometry.forwardM[row]!;

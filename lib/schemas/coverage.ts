@@ -2,9 +2,9 @@ import { z } from "zod";
 import { MultiPolygonSchema, PolygonSchema } from "@/lib/schemas/geometry";
 
 /**
- * Why ground was worked twice. `headland`: a headland pass worked one of the two times. `point-row`: passes that run at an
- * angle to each other. `guess-row`: neighbouring passes side by side, closer than the machine is wide. `other`: all else, the
- * same pass crossing itself included.
+ * Why ground was worked twice. `headland`: a headland pass met another pass squarely or alongside. `point-row`: passes that
+ * meet at an angle. `guess-row`: neighbouring passes side by side, closer than the machine is wide. `other`: all else, the same
+ * line driven again and a pass that crosses itself included.
  */
 export const OVERLAP_CAUSES = ["headland", "point-row", "guess-row", "other"] as const;
 export const OverlapCause = z.enum(OVERLAP_CAUSES);
