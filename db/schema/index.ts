@@ -1,3 +1,4 @@
+export * from "@/db/schema/adjustments";
 export * from "@/db/schema/fields";
 export * from "@/db/schema/jobs";
 export * from "@/db/schema/log-files";

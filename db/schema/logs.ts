@@ -53,6 +53,8 @@ export const logs = pgTable(
     sha256: text().notNull(),
     /** Version of the derived data that readers see; 0 before the first. */
     version: integer().notNull().default(0),
+    /** Revision of the adjustments in force; 0 where they change no reading (see `log_adjustments`). */
+    adjustmentRevision: integer().notNull().default(0),
     /** Set when a person asked to stop; the worker looks between stages. */
     cancelRequestedAt: instant(),
     uploadedBy: text(),

@@ -1,6 +1,7 @@
 import { openerResistance } from "@/lib/channels/opener-resistance";
 import type { ResolvedChannel } from "@/lib/channels/resolved-channel";
 import { rowSpeed } from "@/lib/channels/row-speed";
+import { leftOutNumbers } from "@/lib/cleaning/left-out";
 import { isChannelId, type AnyChannelId } from "@/lib/logs/channel";
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import { fail, succeed, type Result } from "@/lib/result";
@@ -9,16 +10,24 @@ import { deviationFromOthers } from "@/lib/statistics/row-deviation";
 export type { ResolvedChannel } from "@/lib/channels/resolved-channel";
 
 /**
- * A channel of a log by name, logged or derived (`resistance`, `rowSpeed`, `deviation:<channel>`), or the reason in plain
+ * A channel of a log by name, logged or derived (`resistance`, `rowSpeed`, `flags`, `deviation:<channel>`), or the reason in plain
  * words why this log cannot give it.
  */
 export function resolveChannelOrReason(placed: PlacedLog, channelId: string): Result<ResolvedChannel, string> {
   if (!isChannelId(channelId)) return fail(`"${channelId}" is not the name of a channel.`);
   if (channelId === "resistance") return openerResistance(placed);
   if (channelId === "rowSpeed") return succeed(rowSpeed(placed));
+  if (channelId === "flags") return succeed(flagsChannel(placed));
   if (channelId.startsWith("deviation:")) return deviationChannel(placed, channelId);
   const logged = placed.log.channels.find((channel) => channel.id === channelId);
   return logged ? succeed({ ...logged, censoredShare: null }) : fail(`This log has no channel "${channelId}".`);
+}
+
+/** Number of the first cleaning rule that takes out a reading of the row there; NaN where all are kept. */
+function flagsChannel(placed: PlacedLog): ResolvedChannel {
+  const { rows } = placed.geometry;
+  const values = leftOutNumbers(placed.leftOut ?? null, { records: placed.log.records, rows });
+  return { id: "flags", unit: "1", rows, perRow: true, values, resolution: 1, censoredShare: null };
 }
 
 /** The same, null where the log cannot give it. */

@@ -1,3 +1,4 @@
+import type { LeftOut } from "@/lib/cleaning/left-out";
 import type { LocalPlane } from "@/lib/geo/local-plane";
 import type { MachineLog } from "@/lib/logs/machine-log";
 import type { Seeder } from "@/lib/machines/machine";
@@ -50,4 +51,6 @@ export interface PlacedLog {
   /** Pass number, or 0 for a record in no pass (not working, or without a position). */
   passOf: Int32Array;
   passes: Pass[];
+  /** What cleaning rules took out of the channels; absent for a log as it was read. */
+  leftOut?: LeftOut;
 }

@@ -120,6 +120,7 @@ export const ChannelSummary = z.object({
   /** Margin only, where the machine has a target. */
   shareUnderTarget: NullableNumber,
 });
+export type ChannelSummary = z.infer<typeof ChannelSummary>;
 export const CleaningEffect = z.object({
   channel: z.string(),
   unit: z.string(),

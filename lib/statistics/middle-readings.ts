@@ -51,7 +51,7 @@ export function medianOfOthers(middles: MiddleReadings, record: number, value: n
 
 /** Moves the value of this rank to its place, smaller ones before it and larger ones behind (Hoare 1961, FIND). */
 // kernel: hot, so positional
-function selectRank(values: Float32Array, n: number, rank: number): void {
+export function selectRank(values: Float32Array, n: number, rank: number): void {
   let left = 0;
   let right = n - 1;
   while (left < right) {

@@ -25,6 +25,10 @@ async function fillBoth(): Promise<void> {
        (organisation_id, log_id, version, pass, channel, unit, element, first_seq, records, rows, "values")
        values ($1, 'log_x', 1, 1, 'downforce', 'N', 'f4', 1, 1, 1, '\\x00000000')`,
       `insert into log_results (organisation_id, log_id, version, kind, body) values ($1, 'log_x', 1, 'passes', '[]')`,
+      `insert into log_files (organisation_id, log_id, part, file_name, file_bytes, sha256)
+       values ($1, 'log_x', 0, 'a.csv', 1, 'aa')`,
+      `insert into log_adjustments (organisation_id, log_id, revision, delays_s, cleaning, is_as_read)
+       values ($1, 'log_x', 1, '{}', '{}', true)`,
       `insert into recipes (organisation_id, id, name) values ($1, 'rec_x', 'r')`,
       `insert into recipe_versions (organisation_id, recipe_id, version, format, column_names, header_signature, mapping)
        values ($1, 'rec_x', 1, 'csv', '["a"]', 's', '{}')`,
