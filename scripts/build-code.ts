@@ -6,6 +6,7 @@ const ENTRIES: Record<string, string> = {
   worker: "lib/server/worker/main.ts",
   "read-log-thread": "lib/server/logs/read-log-thread.ts",
   fakes: "lib/server/fakes/main.ts",
+  web: "scripts/web-main.ts",
   migrate: "db/migrate-main.ts",
   seed: "db/seed/main.ts",
 };

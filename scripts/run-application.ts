@@ -39,7 +39,10 @@ export async function runApplication(
     if (options.worker !== false) await begin("The worker", "build/worker.mjs").ready;
     if (options.web !== "none") {
       const host = ["-H", process.env.HOST ?? "127.0.0.1", "-p", String(environment.PORT)];
-      const web = begin("The web server", NEXT, [options.web, ...host]);
+      const web =
+        options.web === "dev"
+          ? begin("The web server", NEXT, ["dev", ...host])
+          : begin("The web server", "build/web.mjs");
       await waitForAnswer(`http://127.0.0.1:${environment.PORT}/api/health`, web, 120_000);
     }
   } catch (error) {

@@ -121,8 +121,7 @@ export async function startTestServer(options: TestServerOptions = {}): Promise<
     const seedEnvironment = { ...environment, SEED_LOGS: options.seed === false ? "0" : "1" };
     await runNode({ name: "demo data", script: `${build}/seed.mjs`, environment: seedEnvironment });
     const worker = await startWorker();
-    const flags = ["start", "-H", "127.0.0.1", "-p", environment.PORT];
-    const web = begin("web", "node_modules/next/dist/bin/next", flags, true);
+    const web = begin("web", `${build}/web.mjs`, [], true);
     await waitForAnswer(`${environment.BASE_URL}/api/health`, web, 60_000);
     return {
       baseUrl: environment.BASE_URL,
