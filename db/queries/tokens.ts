@@ -40,11 +40,11 @@ export async function insertToken(
   return row;
 }
 
-/** False when there is no such token of this person. */
-export async function deleteToken(tx: Transaction, scope: Scope, tokenId: string): Promise<boolean> {
+/** The token's name; null when there is no such token of this person. */
+export async function deleteToken(tx: Transaction, scope: Scope, tokenId: string): Promise<string | null> {
   const gone = await tx
     .delete(tokens)
     .where(and(isOwn(scope), eq(tokens.id, tokenId)))
-    .returning({ id: tokens.id });
-  return gone.length > 0;
+    .returning({ name: tokens.name });
+  return gone[0]?.name ?? null;
 }

@@ -25,7 +25,7 @@ export async function cancelLog(_container: Container, scope: Scope, logId: stri
       await changeLog(tx, scope, logId, { status: "failed", stage: "Stopped", error, cancelRequestedAt: null });
       await endJobs(tx, scope, { subject: logId, state: "cancelled" });
     }
-    await recordAudit(tx, scope, { action: "log.cancel", subject: logId });
+    await recordAudit(tx, scope, { action: "log.cancel", subject: logId, detail: { name: before.name } });
     return describeLog(await getLogOrThrow(tx, scope, logId), scope);
   });
 }
@@ -33,10 +33,11 @@ export async function cancelLog(_container: Container, scope: Scope, logId: stri
 /** Reads the stored file again, with the mapping it has. */
 export async function retryLog(container: Container, scope: Scope, logId: string): Promise<Log> {
   const log = await withOrganisation(scope, async (tx) => {
-    refuseBusy(await getLogOrThrow(tx, scope, logId));
+    const before = await getLogOrThrow(tx, scope, logId);
+    refuseBusy(before);
     await changeLog(tx, scope, logId, QUEUED);
     await noteReadLog(tx, scope, logId);
-    await recordAudit(tx, scope, { action: "log.retry", subject: logId });
+    await recordAudit(tx, scope, { action: "log.retry", subject: logId, detail: { name: before.name } });
     return describeLog(await getLogOrThrow(tx, scope, logId), scope);
   });
   await sendReadLog(container, scope, logId);

@@ -13,6 +13,7 @@ import {
   type LogRow,
 } from "@/db/queries/logs";
 import type { Transaction } from "@/db/client";
+import { describeChanges } from "@/lib/audit/describe-changes";
 import { AppError } from "@/lib/errors";
 import type { Log } from "@/lib/schemas/logs";
 import type { Scope } from "@/lib/scope";
@@ -82,7 +83,8 @@ export async function changeLog(container: Container, scope: Scope, input: LogCh
       ...(isReadAgain ? QUEUED : {}),
     });
     if (isReadAgain) await noteReadLog(tx, scope, logId);
-    const detail = { name, machineId, ...(isMoved ? { fieldId, fromFieldId: before.fieldId } : {}) };
+    const changes = describeChanges(before, { name, machineId, fieldId });
+    const detail = { name: before.name, ...changes };
     await recordAudit(tx, scope, { action: isMoved ? "log.move" : "log.change", subject: logId, detail });
     return { log: describeLog(await getLogOrThrow(tx, scope, logId), scope), isQueued: isReadAgain };
   });

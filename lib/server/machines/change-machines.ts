@@ -8,6 +8,7 @@ import {
   insertMachine,
   updateMachine as updateMachineRow,
 } from "@/db/queries/machines";
+import { describeChanges } from "@/lib/audit/describe-changes";
 import { AppError } from "@/lib/errors";
 import { newId } from "@/lib/ids";
 import { MachineInput, type Machine } from "@/lib/machines/machine";
@@ -37,6 +38,11 @@ function applyPatch(body: Machine, patch: Record<string, unknown>): Machine {
   return MachineInput.parse(Object.fromEntries(merged));
 }
 
+/** The new machine, with null for what the old one had and the new one has not. */
+function fillRemoved(before: Machine, after: Machine): Record<string, unknown> {
+  return { ...Object.fromEntries(Object.keys(before).map((key) => [key, null])), ...after };
+}
+
 /** Logs already built keep the machine as it was; they are read again only when someone asks. */
 export async function updateMachine(
   container: Container,
@@ -47,7 +53,7 @@ export async function updateMachine(
     const known = await getMachineOrThrow(tx, scope, input.machineId);
     const body = applyPatch(known.body, input.patch);
     await updateMachineRow(tx, scope, { machineId: known.id, body, at: container.clock.now() });
-    const detail = { changed: Object.keys(input.patch) };
+    const detail = { name: known.name, ...describeChanges(known.body, fillRemoved(known.body, body)) };
     await recordAudit(tx, scope, { action: "machine.update", subject: known.id, detail });
     return describeMachine(await getMachineOrThrow(tx, scope, known.id));
   });

@@ -29,7 +29,11 @@ export async function addMember(
     if (!(await insertMembership(tx, scope, { id, userId: person.id, role }))) {
       throw new AppError("conflict", `${person.email} is a member already.`, { detailCode: "already_member" });
     }
-    await recordAudit(tx, scope, { action: "member.add", subject: id, detail: { userId: person.id, role } });
+    await recordAudit(tx, scope, {
+      action: "member.add",
+      subject: id,
+      detail: { name: person.name, userId: person.id, role },
+    });
     return describeMember(await getMemberOrThrow(tx, scope, id));
   });
 }

@@ -5,6 +5,7 @@ import { recordAudit } from "@/db/queries/audit";
 import { countFields } from "@/db/queries/fields";
 import { deleteMembership, lockOwners, replaceGrants, updateRole } from "@/db/queries/members";
 import type { Role } from "@/lib/access/permissions";
+import { describeChanges } from "@/lib/audit/describe-changes";
 import { AppError } from "@/lib/errors";
 import type { Member, MemberPatch } from "@/lib/schemas/people";
 import type { Scope } from "@/lib/scope";
@@ -42,10 +43,15 @@ export async function updateMember(
 ): Promise<Member> {
   const { membershipId, patch } = input;
   return withOrganisation(scope, async (tx) => {
-    const { userId } = await getMemberOrThrow(tx, scope, membershipId);
+    const known = await getMemberOrThrow(tx, scope, membershipId);
+    const { userId, name } = known;
     if (patch.role) await changeRole(tx, scope, { membershipId, role: patch.role });
     if (patch.fieldIds) await giveFields(tx, scope, { userId, fieldIds: patch.fieldIds });
-    await recordAudit(tx, scope, { action: "member.update", subject: membershipId, detail: { ...patch } });
+    await recordAudit(tx, scope, {
+      action: "member.update",
+      subject: membershipId,
+      detail: { name, ...describeChanges(known, patch) },
+    });
     return describeMember(await getMemberOrThrow(tx, scope, membershipId));
   });
 }
@@ -53,9 +59,9 @@ export async function updateMember(
 /** Ends a membership and withdraws the person's tokens here. The last owner stays. */
 export async function removeMember(_container: Container, scope: Scope, membershipId: string): Promise<void> {
   await withOrganisation(scope, async (tx) => {
-    const { userId, role } = await getMemberOrThrow(tx, scope, membershipId);
+    const { userId, role, name } = await getMemberOrThrow(tx, scope, membershipId);
     if (role === "owner") await refuseLastOwner(tx, scope, membershipId);
     await deleteMembership(tx, scope, { membershipId, userId });
-    await recordAudit(tx, scope, { action: "member.remove", subject: membershipId, detail: { userId, role } });
+    await recordAudit(tx, scope, { action: "member.remove", subject: membershipId, detail: { name, userId, role } });
   });
 }

@@ -52,7 +52,15 @@ export async function createShare(
     const hashes = { tokenHash: hashSecret(token), passcodeHash };
     const values = { fieldId, logId, audience, layers, allowDownload, blurLocation, expiresAt, ...hashes };
     const made = await insertShare(tx, scope, { ...values, id: newId("share"), createdAt: now });
-    const detail = { fieldId, logId, audience, layers, expiresAt: input.expiresAt, hasPasscode: passcodeHash !== null };
+    const detail = {
+      name,
+      fieldId,
+      logId,
+      audience,
+      layers,
+      expiresAt: input.expiresAt,
+      hasPasscode: passcodeHash !== null,
+    };
     await recordAudit(tx, scope, { action: "share.create", subject: made.id, detail });
     return { row: made, fieldName: name };
   });

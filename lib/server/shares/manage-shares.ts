@@ -33,6 +33,8 @@ export async function revokeShare(container: Container, scope: Scope, shareId: s
     if (!share) throw new AppError("not_found", "There is no such share.");
     if (share.revokedAt) return;
     await revokeShareRow(tx, scope, { shareId, at: container.clock.now() });
-    await recordAudit(tx, scope, { action: "share.revoke", subject: shareId, detail: { fieldId: share.fieldId } });
+    const { name } = await getFieldOrThrow(tx, scope, share.fieldId);
+    const { fieldId, audience } = share;
+    await recordAudit(tx, scope, { action: "share.revoke", subject: shareId, detail: { name, fieldId, audience } });
   });
 }

@@ -74,7 +74,8 @@ export async function listTokens(_container: Container, scope: Scope, query: Lis
 /** @throws AppError `not_found` for another person's token too */
 export async function revokeToken(_container: Container, scope: Scope, tokenId: string): Promise<void> {
   await withOrganisation(scope, async (tx) => {
-    if (!(await deleteToken(tx, scope, tokenId))) throw new AppError("not_found", "There is no such token.");
-    await recordAudit(tx, scope, { action: "token.revoke", subject: tokenId });
+    const name = await deleteToken(tx, scope, tokenId);
+    if (name === null) throw new AppError("not_found", "There is no such token.");
+    await recordAudit(tx, scope, { action: "token.revoke", subject: tokenId, detail: { name } });
   });
 }
