@@ -12,7 +12,8 @@ const config = {
     "node-sqlite3-wasm",
     "apache-arrow",
   ],
-  experimental: { proxyClientMaxBodySize: "2gb" },
+  // authInterrupts: `forbidden()` and `unauthorized()`, so that a page refused to a role answers 403.
+  experimental: { proxyClientMaxBodySize: "2gb", authInterrupts: true },
 };
 
 export default config;

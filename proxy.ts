@@ -71,8 +71,10 @@ export async function proxy(request: NextRequest): Promise<NextResponse> {
   const headers = new Headers(request.headers);
   headers.set("x-nonce", nonce);
   headers.set("Content-Security-Policy", policy);
-  const response = NextResponse.next({ request: { headers } });
   const [first, ...rest] = request.nextUrl.pathname.split("/").filter(Boolean);
+  // Next's not-found and unauthorized pages are told neither address nor parameters.
+  headers.set("x-share-token", first === "s" ? (rest[0] ?? "") : "");
+  const response = NextResponse.next({ request: { headers } });
   setHeaders(response, policy, first === "s");
   if (rest.length > 0) rememberOrganisation(response, first);
   return response;

@@ -1,10 +1,11 @@
 import "server-only";
 import { cookies } from "next/headers";
-import { notFound, redirect } from "next/navigation";
+import { forbidden, notFound, redirect } from "next/navigation";
 import { cache } from "react";
 import { container } from "@/app/_server/container";
 import { readSessionClaims, sessionCookieName } from "@/app/_server/session-cookie";
 import type { PersonRow } from "@/db/queries/system/people";
+import { can, type Permission } from "@/lib/access/permissions";
 import { AppError } from "@/lib/errors";
 import type { Scope } from "@/lib/scope";
 import { authenticateSession, type Identity } from "@/lib/server/access/authenticate";
@@ -39,14 +40,33 @@ async function pageScope(identity: Identity, organisationSlug: string | null): P
   };
 }
 
-/** For pages under `/[org]`: the person's scope there. Sends strangers to sign-in; other organisations do not exist. */
-export async function requireScope(organisationSlug: string): Promise<PageScope> {
+async function findScope(organisationSlug: string): Promise<PageScope> {
   const identity = await currentIdentity();
   if (!identity) redirect("/sign-in");
   try {
     return await pageScope(identity, organisationSlug);
   } catch (error) {
     if (error instanceof AppError) notFound();
+    throw error;
+  }
+}
+
+/**
+ * For pages under `/[org]`: the person's scope there. Sends strangers to sign-in; other organisations do not exist (404);
+ * a page whose permission the role lacks is refused (403).
+ */
+export async function requireScope(organisationSlug: string, permission?: Permission): Promise<PageScope> {
+  const found = await findScope(organisationSlug);
+  if (permission && !can(found.scope.role, permission)) forbidden();
+  return found;
+}
+
+/** What a page shows, or the page that says it is not here: absent, another organisation's, and not given read the same. */
+export async function orNotFound<Value>(reading: Promise<Value>): Promise<Value> {
+  try {
+    return await reading;
+  } catch (error) {
+    if (error instanceof AppError && error.code === "not_found") notFound();
     throw error;
   }
 }

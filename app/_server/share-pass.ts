@@ -1,5 +1,6 @@
 import "server-only";
 import { cookies, headers } from "next/headers";
+import { cache } from "react";
 import { container } from "@/app/_server/container";
 import { addressOf } from "@/app/_server/identify-request";
 import { readCookie } from "@/app/_server/session-cookie";
@@ -23,6 +24,9 @@ export function openSharedRequest(request: Request, token: string): Promise<Open
   return openShare(container(), { token, pass, from: addressOf(request) });
 }
 
+/** Set by `proxy.ts` on requests for `/s/…`; whatever a visitor sent under this name is overwritten. */
+export const SHARE_TOKEN_HEADER = "x-share-token";
+
 export type SharedPage =
   { state: "open"; view: SharedView } | { state: "passcode" | "unknown" | "expired" | "revoked" | "busy" };
 
@@ -34,8 +38,8 @@ const STATES: Record<string, Exclude<SharedPage["state"], "open">> = {
   too_many_requests: "busy",
 };
 
-/** For the page `/s/[token]`: what it shows, or why it shows nothing. Counts an opening. */
-export async function openSharedPage(token: string): Promise<SharedPage> {
+/** For the page `/s/[token]`: what it shows, or why it shows nothing. Counts an opening, once a request. */
+export const openSharedPage = cache(async (token: string): Promise<SharedPage> => {
   const request = new Request("http://localhost/", { headers: new Headers(await headers()) });
   const pass = (await cookies()).get(passCookieName(token))?.value;
   try {
@@ -47,4 +51,9 @@ export async function openSharedPage(token: string): Promise<SharedPage> {
     if (!state) throw error;
     return { state };
   }
+});
+
+/** For the pages that Next puts in place of a closed link: which link, as `proxy.ts` noted it. */
+export async function sharedTokenOfRequest(): Promise<string> {
+  return (await headers()).get(SHARE_TOKEN_HEADER) ?? "";
 }

@@ -1,7 +1,6 @@
 import type { Metadata } from "next";
+import { notFound, unauthorized } from "next/navigation";
 import { openSharedPage } from "@/app/_server/share-pass";
-import { ClosedShare } from "@/components/sharing/closed-share";
-import { PasscodeForm } from "@/components/sharing/passcode-form";
 import { SharedView } from "@/components/sharing/shared-view";
 import { UnitsProvider } from "@/components/units/use-units";
 
@@ -11,17 +10,15 @@ export const metadata: Metadata = {
   robots: { index: false, follow: false },
 };
 
+/** The shared field; 401 with the question for the passcode, 404 with the reason for a link that opens nothing. */
 export default async function SharedRoute({ params }: { params: Promise<{ token: string }> }) {
   const { token } = await params;
   const page = await openSharedPage(token);
-  if (page.state === "open") {
-    return (
-      <UnitsProvider start="imperial" keep={false}>
-        <SharedView view={page.view} token={token} />
-      </UnitsProvider>
-    );
-  }
+  if (page.state === "passcode") unauthorized();
+  if (page.state !== "open") notFound();
   return (
-    <ClosedShare state={page.state}>{page.state === "passcode" ? <PasscodeForm token={token} /> : null}</ClosedShare>
+    <UnitsProvider start="imperial" keep={false}>
+      <SharedView view={page.view} token={token} />
+    </UnitsProvider>
   );
 }

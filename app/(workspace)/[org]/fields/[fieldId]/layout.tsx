@@ -1,8 +1,6 @@
 import type { ReactNode } from "react";
-import { notFound } from "next/navigation";
 import { container } from "@/app/_server/container";
-import { requireScope } from "@/app/_server/require-scope";
-import { AppError } from "@/lib/errors";
+import { orNotFound, requireScope } from "@/app/_server/require-scope";
 import { readField } from "@/lib/server/fields/read-fields";
 
 interface FieldLayoutProps {
@@ -14,11 +12,6 @@ interface FieldLayoutProps {
 export default async function FieldLayout({ children, params }: FieldLayoutProps) {
   const { org, fieldId } = await params;
   const { scope } = await requireScope(org);
-  try {
-    await readField(container(), scope, fieldId);
-  } catch (error) {
-    if (error instanceof AppError && error.code === "not_found") notFound();
-    throw error;
-  }
+  await orNotFound(readField(container(), scope, fieldId));
   return children;
 }

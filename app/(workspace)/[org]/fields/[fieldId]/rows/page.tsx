@@ -1,10 +1,9 @@
 import type { Metadata } from "next";
 import { container } from "@/app/_server/container";
-import { requireScope } from "@/app/_server/require-scope";
+import { orNotFound, requireScope } from "@/app/_server/require-scope";
 import { FieldBook } from "@/components/field-book/field-book";
 import { PageBody } from "@/components/ui/page-body";
 import { UnreadLog } from "@/components/upload/unread-log";
-import { AppError } from "@/lib/errors";
 import type { Log } from "@/lib/schemas/logs";
 import type { Scope } from "@/lib/scope";
 import { getLog } from "@/lib/server/logs/read-logs";
@@ -16,16 +15,11 @@ interface RowsPageProps {
   searchParams: Promise<{ log?: string | string[] }>;
 }
 
-/** The log that the address asks for, if it has nothing to show yet. An unknown one is left to the book. */
+/** The log that the address asks for, if it has nothing to show yet. An unknown one is not here. */
 async function findUnreadLog(scope: Scope, logId: string | string[] | undefined): Promise<Log | null> {
   if (typeof logId !== "string") return null;
-  try {
-    const log = await getLog(container(), scope, logId);
-    return log.status === "ready" ? null : log;
-  } catch (error) {
-    if (error instanceof AppError && error.code === "not_found") return null;
-    throw error;
-  }
+  const log = await orNotFound(getLog(container(), scope, logId));
+  return log.status === "ready" ? null : log;
 }
 
 /** The chapter "Rows". Whether the field may be seen is decided by the queries behind it. */

@@ -3,15 +3,12 @@ import { requireScope } from "@/app/_server/require-scope";
 import { FieldSettings } from "@/components/fields/field-settings";
 import { PageBody } from "@/components/ui/page-body";
 import { PageHeading } from "@/components/ui/page-heading";
-import { RoleBars } from "@/components/ui/role-bars";
-import { can } from "@/lib/access/permissions";
 
 export const metadata: Metadata = { title: "About this field" };
 
 export default async function FieldSettingsRoute({ params }: { params: Promise<{ org: string; fieldId: string }> }) {
   const { org, fieldId } = await params;
-  const { scope, organisation } = await requireScope(org);
-  if (!can(scope.role, "fields.write")) return <RoleBars role={scope.role} toDo="change fields" />;
+  const { organisation } = await requireScope(org, "fields.write");
   return (
     <PageBody>
       <PageHeading title="About this field" />

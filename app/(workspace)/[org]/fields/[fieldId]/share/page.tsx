@@ -3,15 +3,12 @@ import { requireScope } from "@/app/_server/require-scope";
 import { ShareChapter } from "@/components/sharing/share-chapter";
 import { PageBody } from "@/components/ui/page-body";
 import { PageHeading } from "@/components/ui/page-heading";
-import { RoleBars } from "@/components/ui/role-bars";
-import { can } from "@/lib/access/permissions";
 
 export const metadata: Metadata = { title: "Share" };
 
 export default async function ShareRoute({ params }: { params: Promise<{ org: string; fieldId: string }> }) {
   const { org, fieldId } = await params;
-  const { scope } = await requireScope(org);
-  if (!can(scope.role, "shares.read")) return <RoleBars role={scope.role} toDo="share fields" />;
+  await requireScope(org, "shares.read");
   return (
     <PageBody>
       <PageHeading title="Share" lead="One page for somebody without an account." />

@@ -1,7 +1,9 @@
 import type { Metadata } from "next";
-import { requireScope } from "@/app/_server/require-scope";
+import { container } from "@/app/_server/container";
+import { orNotFound, requireScope } from "@/app/_server/require-scope";
 import { PageBody } from "@/components/ui/page-body";
 import { LogProgress } from "@/components/upload/log-progress";
+import { getLog } from "@/lib/server/logs/read-logs";
 
 export const metadata: Metadata = { title: "Log" };
 
@@ -12,6 +14,7 @@ interface LogRouteProps {
 export default async function LogRoute({ params }: LogRouteProps) {
   const { org, fieldId, logId } = await params;
   const { scope, organisation } = await requireScope(org);
+  await orNotFound(getLog(container(), scope, logId));
   return (
     <PageBody>
       <LogProgress
