@@ -5,15 +5,13 @@ import { MachinesPage } from "@/components/machines/machines-page";
 import { buttonClass } from "@/components/ui/button";
 import { PageBody } from "@/components/ui/page-body";
 import { PageHeading } from "@/components/ui/page-heading";
-import { RoleBars } from "@/components/ui/role-bars";
 import { can } from "@/lib/access/permissions";
 
 export const metadata: Metadata = { title: "Machines" };
 
 export default async function MachinesRoute({ params }: { params: Promise<{ org: string }> }) {
   const { org } = await params;
-  const { scope, organisation } = await requireScope(org);
-  if (!can(scope.role, "machines.read")) return <RoleBars role={scope.role} toDo="see the machines" />;
+  const { scope, organisation } = await requireScope(org, "machines.read");
   const mayWrite = can(scope.role, "machines.write");
   const root = `/${organisation.slug}/machines`;
   return (

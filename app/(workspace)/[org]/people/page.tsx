@@ -3,15 +3,13 @@ import { requireScope } from "@/app/_server/require-scope";
 import { PeoplePage } from "@/components/people/people-page";
 import { PageBody } from "@/components/ui/page-body";
 import { PageHeading } from "@/components/ui/page-heading";
-import { RoleBars } from "@/components/ui/role-bars";
 import { can } from "@/lib/access/permissions";
 
 export const metadata: Metadata = { title: "People" };
 
 export default async function PeopleRoute({ params }: { params: Promise<{ org: string }> }) {
   const { org } = await params;
-  const { scope } = await requireScope(org);
-  if (!can(scope.role, "members.read")) return <RoleBars role={scope.role} toDo="see the people" />;
+  const { scope } = await requireScope(org, "members.read");
   return (
     <PageBody>
       <PageHeading title="People" />

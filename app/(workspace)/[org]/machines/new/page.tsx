@@ -3,8 +3,6 @@ import { requireScope } from "@/app/_server/require-scope";
 import { MachineForm } from "@/components/machines/machine-form";
 import { PageBody } from "@/components/ui/page-body";
 import { PageHeading } from "@/components/ui/page-heading";
-import { RoleBars } from "@/components/ui/role-bars";
-import { can } from "@/lib/access/permissions";
 
 export const metadata: Metadata = { title: "New machine" };
 
@@ -15,8 +13,7 @@ interface NewMachineProps {
 
 export default async function NewMachineRoute({ params, searchParams }: NewMachineProps) {
   const [{ org }, { kind }] = await Promise.all([params, searchParams]);
-  const { scope, organisation } = await requireScope(org);
-  if (!can(scope.role, "machines.write")) return <RoleBars role={scope.role} toDo="describe machines" />;
+  const { organisation } = await requireScope(org, "machines.write");
   const isCombine = kind === "combine";
   return (
     <PageBody>
