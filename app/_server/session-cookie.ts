@@ -1,14 +1,10 @@
 import "server-only";
-import { decode, encode } from "next-auth/jwt";
+import { decode, encode, type JWT } from "next-auth/jwt";
+import type { SessionClaims } from "@/lib/server/access/authenticate";
+import { newSessionId } from "@/lib/server/access/secrets";
 
 /** How long a sign-in lasts. */
 export const SESSION_SECONDS = 14 * 24 * 60 * 60;
-
-export interface SessionClaims {
-  userId: string;
-  /** See `passwordStamp`. */
-  stamp: string;
-}
 
 export function isSecure(baseUrl: string): boolean {
   return baseUrl.startsWith("https:");
@@ -18,22 +14,31 @@ export function sessionCookieName(baseUrl: string): string {
   return `${isSecure(baseUrl) ? "__Secure-" : ""}next-auth.session-token`;
 }
 
+/** Who a decoded token speaks for; null where it is none of ours. */
+export function readClaims(token: JWT): SessionClaims | null {
+  const { sub, stamp, sid } = token;
+  if (typeof sub !== "string" || typeof stamp !== "string" || typeof sid !== "string") return null;
+  return { userId: sub, stamp, sessionId: sid };
+}
+
 /** The claims in a session cookie's value; null for anything forged, expired or malformed. */
 export async function readSessionClaims(value: string | undefined, secret: string): Promise<SessionClaims | null> {
   if (!value) return null;
   try {
     const claims = await decode({ token: value, secret });
-    if (typeof claims?.sub !== "string" || typeof claims.stamp !== "string") return null;
-    return { userId: claims.sub, stamp: claims.stamp };
+    return claims ? readClaims(claims) : null;
   } catch {
     return null;
   }
 }
 
-/** A Set-Cookie line that opens a new session, for after a password change. */
-export async function newSessionCookie(claims: SessionClaims, settings: { secret: string; baseUrl: string }) {
+/** A Set-Cookie line that opens a new session, for after a change that ended the one before. */
+export async function newSessionCookie(
+  claims: Pick<SessionClaims, "userId" | "stamp">,
+  settings: { secret: string; baseUrl: string },
+) {
   const value = await encode({
-    token: { sub: claims.userId, stamp: claims.stamp },
+    token: { sub: claims.userId, stamp: claims.stamp, sid: newSessionId() },
     secret: settings.secret,
     maxAge: SESSION_SECONDS,
   });

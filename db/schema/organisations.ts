@@ -3,6 +3,12 @@ import type { Role } from "@/lib/access/permissions";
 
 const createdAt = () => timestamp({ withTimezone: true, mode: "date" }).notNull().defaultNow();
 
+export interface EndedSession {
+  id: string;
+  /** ISO 8601. */
+  until: string;
+}
+
 export const organisations = pgTable("organisations", {
   id: text().primaryKey(),
   name: text().notNull(),
@@ -21,6 +27,10 @@ export const users = pgTable(
     name: text().notNull(),
     passwordHash: text().notNull(),
     unitSystem: text().$type<"metric" | "imperial">().notNull().default("imperial"),
+    /** Part of every session's stamp: another salt ends them all. */
+    sessionSalt: text().notNull().default(""),
+    /** Sessions signed out before their time, kept until they would have run out by themselves. */
+    endedSessions: jsonb().$type<EndedSession[]>().notNull().default([]),
     createdAt: createdAt(),
   },
   (table) => [uniqueIndex("users_email_key").on(table.email)],

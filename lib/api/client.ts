@@ -97,6 +97,7 @@ export const changeMe = (body: { name?: string; unitSystem?: "metric" | "imperia
   requestNothing(`${ROOT}/me`, { method: "PATCH", body });
 export const changePassword = (body: { currentPassword: string; newPassword: string }) =>
   requestNothing(`${ROOT}/me`, { method: "PATCH", body });
+export const signOutEverywhere = () => requestNothing(`${ROOT}/me/sessions`, { method: "DELETE" });
 export const listTokens = () => requestJson(TokenList, `${ROOT}/tokens?${PAGE}`);
 export const createToken = (body: z.input<typeof TokenInput>) =>
   requestJson(TokenCreated, `${ROOT}/tokens`, { method: "POST", body });

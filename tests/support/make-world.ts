@@ -3,7 +3,7 @@ import { newSessionCookie } from "@/app/_server/session-cookie";
 import { findPersonByEmail } from "@/db/queries/system/people";
 import { seedOrganisations } from "@/db/seed/organisations";
 import type { Role } from "@/lib/access/permissions";
-import { passwordStamp } from "@/lib/server/access/secrets";
+import { sessionStamp } from "@/lib/server/access/secrets";
 import { callApi, type ApiCall } from "@/tests/support/call-api";
 import { makeContainer, type TestContainer } from "@/tests/support/make-container";
 import { createTestDatabase } from "@/tests/support/test-db";
@@ -17,6 +17,8 @@ export interface World {
   as: (actor: Actor, call: ApiCall) => Promise<Response>;
   /** The same, its JSON read; fails the test on another status. */
   read: (actor: Actor, call: ApiCall & { expect?: number }) => Promise<Record<string, unknown>>;
+  /** Goes on with the session that a reply opened, as a browser does. */
+  keepCookie: (actor: Exclude<Actor, "stranger">, response: Response) => void;
   close: () => Promise<void>;
 }
 
@@ -33,7 +35,7 @@ const EMAILS: Record<Exclude<Actor, "stranger">, string> = {
 export async function sessionCookieOf(email: string, container: Pick<TestContainer, "env">): Promise<string> {
   const person = await findPersonByEmail(email);
   if (!person) throw new Error(`nobody has the address ${email}`);
-  const claims = { userId: person.id, stamp: passwordStamp(person.passwordHash) };
+  const claims = { userId: person.id, stamp: sessionStamp(person) };
   const { AUTH_SECRET: secret, baseUrl } = container.env;
   return (await newSessionCookie(claims, { secret, baseUrl })).split(";")[0]!;
 }
@@ -60,6 +62,10 @@ export async function makeWorld(): Promise<World> {
       const isExpected = wanted === undefined ? response.ok : response.status === wanted;
       if (!isExpected) throw new Error(`${call.method ?? "GET"} ${call.path}: ${response.status} ${text}`);
       return text ? (JSON.parse(text) as Record<string, unknown>) : {};
+    },
+    keepCookie: (actor, response) => {
+      const [line] = response.headers.getSetCookie();
+      if (line) cookies[actor] = line.split(";")[0]!;
     },
     close: async () => {
       replaceContainer(undefined);

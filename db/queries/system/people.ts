@@ -1,4 +1,4 @@
-import { and, asc, eq } from "drizzle-orm";
+import { and, asc, eq, sql } from "drizzle-orm";
 import { adminDb } from "@/db/client";
 import { memberships, organisations, users } from "@/db/schema";
 import type { Role } from "@/lib/access/permissions";
@@ -43,9 +43,23 @@ export async function listMembershipsOfPerson(userId: string): Promise<Membershi
 
 export async function updatePerson(
   userId: string,
-  changes: Partial<Pick<PersonRow, "name" | "unitSystem" | "passwordHash">>,
+  changes: Partial<Pick<PersonRow, "name" | "unitSystem" | "passwordHash" | "sessionSalt">>,
 ): Promise<void> {
   await adminDb().update(users).set(changes).where(eq(users.id, userId));
+}
+
+/** Notes that this session was signed out; forgets those that have run out by themselves. */
+export async function recordEndedSession(
+  userId: string,
+  input: { sessionId: string; until: Date; now: Date },
+): Promise<void> {
+  const ended = JSON.stringify([{ id: input.sessionId, until: input.until.toISOString() }]);
+  const living = sql`(select coalesce(jsonb_agg(entry), '[]') from jsonb_array_elements(${users.endedSessions}) entry
+    where (entry->>'until')::timestamptz > ${input.now.toISOString()}::timestamptz)`;
+  await adminDb()
+    .update(users)
+    .set({ endedSessions: sql`${living} || ${ended}::jsonb` })
+    .where(eq(users.id, userId));
 }
 
 /** The person with this address, made when there is none. `created` tells the two apart. */

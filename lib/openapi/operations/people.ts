@@ -119,6 +119,15 @@ export const peopleOperations: Operation[] = [
     errors: ["too_many_requests"],
   },
   {
+    method: "DELETE",
+    path: "/api/v1/me/sessions",
+    tag,
+    permission: "me.own",
+    summary: "Sign out everywhere",
+    description: "Ends every session of yours; the one that asks goes on with the cookie of this reply. Tokens stay.",
+    replies: [{ status: 204, description: "All other sessions have ended" }],
+  },
+  {
     method: "GET",
     path: "/api/v1/audit",
     tag,

@@ -3,7 +3,7 @@ import { findPersonById, type PersonRow } from "@/db/queries/system/people";
 import { findTokenByHash, recordTokenUse, type TokenRow } from "@/db/queries/system/tokens";
 import { AppError } from "@/lib/errors";
 import { countAttempt } from "@/lib/server/access/limit-attempts";
-import { hashSecret, passwordStamp } from "@/lib/server/access/secrets";
+import { hashSecret, sessionStamp } from "@/lib/server/access/secrets";
 
 /** Last use is written at most this often, so that reading does not write every time. */
 const USE_RECORDED_EVERY_MS = 60_000;
@@ -14,10 +14,18 @@ export interface Identity {
   token: TokenRow | null;
 }
 
-/** The person of a session; null when gone or when the password has changed since. */
-export async function authenticateSession(claims: { userId: string; stamp: string }): Promise<Identity | null> {
+export interface SessionClaims {
+  userId: string;
+  /** See `sessionStamp`. */
+  stamp: string;
+  sessionId: string;
+}
+
+/** The person of a session; null when gone, signed out, or when the password has changed since. */
+export async function authenticateSession(claims: SessionClaims): Promise<Identity | null> {
   const person = await findPersonById(claims.userId);
-  if (!person || passwordStamp(person.passwordHash) !== claims.stamp) return null;
+  if (!person || sessionStamp(person) !== claims.stamp) return null;
+  if (person.endedSessions.some((ended) => ended.id === claims.sessionId)) return null;
   return { person, token: null };
 }
 

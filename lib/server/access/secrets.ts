@@ -16,7 +16,22 @@ export function newShareToken(): string {
   return randomBytes(20).toString("base64url");
 }
 
-/** Marks the password a session was opened with: a new password ends the sessions of the old one. */
-export function passwordStamp(passwordHash: string): string {
-  return hashSecret(passwordHash).slice(0, 16);
+/** What a session stands on. */
+export interface SessionGround {
+  passwordHash: string;
+  sessionSalt: string;
+}
+
+/** Marks what a session was opened with: a new password, and signing out everywhere, end the sessions before. */
+export function sessionStamp({ passwordHash, sessionSalt }: SessionGround): string {
+  return hashSecret(`${sessionSalt}${passwordHash}`).slice(0, 16);
+}
+
+/** Tells one sign-in from another, so that it can be ended alone. */
+export function newSessionId(): string {
+  return randomBytes(12).toString("base64url");
+}
+
+export function newSessionSalt(): string {
+  return randomBytes(12).toString("base64url");
 }

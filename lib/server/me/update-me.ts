@@ -2,12 +2,13 @@ import "server-only";
 import { withOrganisation } from "@/db/client";
 import { recordAudit } from "@/db/queries/audit";
 import { findPersonById, updatePerson } from "@/db/queries/system/people";
+import { describeChanges } from "@/lib/audit/describe-changes";
 import { AppError } from "@/lib/errors";
 import type { MePatch } from "@/lib/schemas/me";
 import type { Scope } from "@/lib/scope";
 import { countAttempt, forgetAttempts } from "@/lib/server/access/limit-attempts";
 import { hashPassword, isPasswordRight } from "@/lib/server/access/passwords";
-import { passwordStamp } from "@/lib/server/access/secrets";
+import { sessionStamp } from "@/lib/server/access/secrets";
 import type { Container } from "@/lib/server/container";
 
 async function newHash(userId: string, patch: MePatch): Promise<string | undefined> {
@@ -30,15 +31,18 @@ async function newHash(userId: string, patch: MePatch): Promise<string | undefin
  */
 export async function updateMe(_container: Container, scope: Scope, patch: MePatch): Promise<{ stamp: string | null }> {
   const { name, unitSystem } = patch;
+  const before = await findPersonById(scope.userId);
   const passwordHash = await newHash(scope.userId, patch);
-  const changes = Object.fromEntries(
+  const values = Object.fromEntries(
     Object.entries({ name, unitSystem, passwordHash }).filter(([, value]) => value !== undefined),
   );
-  if (Object.keys(changes).length === 0) return { stamp: null };
-  await updatePerson(scope.userId, changes);
-  const changed = Object.keys(changes).map((key) => (key === "passwordHash" ? "password" : key));
+  if (Object.keys(values).length === 0) return { stamp: null };
+  await updatePerson(scope.userId, values);
+  const changes = describeChanges(before ?? {}, { name, unitSystem });
+  const changed = passwordHash ? [...changes.changed, "password"] : changes.changed;
+  const detail = { name: before?.name ?? null, ...changes, changed };
   await withOrganisation(scope, (tx) =>
-    recordAudit(tx, scope, { action: "person.update", subject: scope.userId, detail: { changed } }),
+    recordAudit(tx, scope, { action: "person.update", subject: scope.userId, detail }),
   );
-  return { stamp: passwordHash ? passwordStamp(passwordHash) : null };
+  return { stamp: passwordHash ? sessionStamp({ passwordHash, sessionSalt: before?.sessionSalt ?? "" }) : null };
 }

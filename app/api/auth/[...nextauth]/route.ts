@@ -2,19 +2,29 @@ import NextAuth from "next-auth";
 import { NextRequest } from "next/server";
 import { authOptions } from "@/app/_server/auth";
 import { limitSignIn } from "@/app/_server/limit-sign-in";
+import { forgetReturnCookie, hasUnreadableReturnCookie, mendSignInRequest } from "@/app/_server/mend-sign-in";
+import { toResponse } from "@/app/_server/to-response";
 
 interface Context {
   params: Promise<{ nextauth: string[] }>;
 }
 
-async function handle(request: Request, context: Context): Promise<Response> {
+async function signIn(request: Request, context: Context): Promise<Response> {
   const params = await context.params;
-  return NextAuth(new NextRequest(request), { params }, authOptions());
+  const ignoresReturnCookie = hasUnreadableReturnCookie(request);
+  const response: Response = await NextAuth(new NextRequest(request), { params }, authOptions({ ignoresReturnCookie }));
+  if (ignoresReturnCookie) response.headers.append("set-cookie", forgetReturnCookie());
+  return response;
 }
 
-async function handlePost(request: Request, context: Context): Promise<Response> {
-  const isSignIn = (await context.params).nextauth.join("/") === "callback/credentials";
-  return isSignIn ? limitSignIn(request, (received) => handle(received, context)) : handle(request, context);
+async function handle(request: Request, context: Context): Promise<Response> {
+  try {
+    const mended = await mendSignInRequest(request);
+    const isAttempt = request.method === "POST" && /\/callback\/credentials\/?$/.test(new URL(request.url).pathname);
+    return await (isAttempt ? limitSignIn(mended, (received) => signIn(received, context)) : signIn(mended, context));
+  } catch (error) {
+    return toResponse(error);
+  }
 }
 
-export { handle as GET, handlePost as POST };
+export { handle as GET, handle as POST };
