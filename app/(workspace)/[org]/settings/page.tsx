@@ -19,6 +19,14 @@ export default async function SettingsRoute({ params }: { params: Promise<{ org:
         <PersonSettings name={user.name} />
         <PasswordSettings />
         <TokenSettings role={scope.role} />
+        {can(scope.role, "recipes.read") ? (
+          <section className="space-y-1">
+            <h2 className="text-section">Recipes</h2>
+            <p>
+              <Link href={`/${organisation.slug}/recipes`}>What the columns of your files mean</Link>
+            </p>
+          </section>
+        ) : null}
         {can(scope.role, "audit.read") ? (
           <section className="space-y-1">
             <h2 className="text-section">Record of changes</h2>

@@ -1,6 +1,8 @@
 import type { Metadata } from "next";
+import Link from "next/link";
 import { requireScope } from "@/app/_server/require-scope";
 import { ColumnsScreen } from "@/components/columns/columns-screen";
+import { buttonClass } from "@/components/ui/button";
 import { PageBody } from "@/components/ui/page-body";
 import { PageHeading } from "@/components/ui/page-heading";
 import { can } from "@/lib/access/permissions";
@@ -23,6 +25,13 @@ export default async function ColumnsRoute({ params }: ColumnsRouteProps) {
           mayChange
             ? "This is how the file was understood. Read it, change what is wrong, then let the log be read."
             : "This is how the file was understood. Your role may look at it, not change it."
+        }
+        actions={
+          can(scope.role, "recipes.read") ? (
+            <Link href={`/${organisation.slug}/recipes`} className={buttonClass("quiet")}>
+              All recipes
+            </Link>
+          ) : null
         }
       />
       <ColumnsScreen

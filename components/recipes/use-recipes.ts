@@ -1,0 +1,58 @@
+"use client";
+
+import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
+import type { z } from "zod";
+import { requestJson, requestNothing } from "@/lib/api/request-json";
+import { Recipe, RecipeDetail, RecipeList, type RecipePatch } from "@/lib/schemas/recipes";
+
+const ROOT = "/api/v1/recipes";
+const KEY = ["recipes"] as const;
+
+export const recipeExportPath = (recipeId: string, version?: number) =>
+  `${ROOT}/${recipeId}/export${version === undefined ? "" : `?version=${version}`}`;
+
+export function useRecipes() {
+  return useQuery({ queryKey: [...KEY, "list"], queryFn: () => requestJson(RecipeList, ROOT) });
+}
+
+/** Those that were deleted and can be restored. */
+export function useDeletedRecipes() {
+  return useQuery({ queryKey: [...KEY, "deleted"], queryFn: () => requestJson(RecipeList, `${ROOT}?deleted=1`) });
+}
+
+/** One recipe with all of its versions; null: none asked for. */
+export function useRecipe(recipeId: string | null) {
+  return useQuery({
+    queryKey: [...KEY, "one", recipeId],
+    queryFn: () => requestJson(RecipeDetail, `${ROOT}/${recipeId ?? ""}`),
+    enabled: recipeId !== null,
+  });
+}
+
+/** What can be done to recipes; each asks for all of them again. */
+export function useRecipeActions() {
+  const client = useQueryClient();
+  const onSettled = () => client.invalidateQueries({ queryKey: KEY });
+  return {
+    change: useMutation({
+      mutationFn: ({ id, patch }: { id: string; patch: z.input<typeof RecipePatch> }) =>
+        requestJson(Recipe, `${ROOT}/${id}`, { method: "PATCH", body: patch }),
+      onSettled,
+    }),
+    remove: useMutation({
+      mutationFn: (recipe: Recipe) => requestNothing(`${ROOT}/${recipe.id}`, { method: "DELETE" }),
+      onSettled,
+    }),
+    restore: useMutation({
+      mutationFn: (recipe: Recipe) => requestJson(Recipe, `${ROOT}/${recipe.id}/restore`, { method: "POST" }),
+      onSettled,
+    }),
+    takeIn: useMutation({
+      mutationFn: (body: unknown) =>
+        requestJson(Recipe, `${ROOT}/import`, { method: "POST", body, idempotencyKey: crypto.randomUUID() }),
+      onSettled,
+    }),
+  };
+}
+
+export type RecipeActions = ReturnType<typeof useRecipeActions>;
