@@ -3,15 +3,13 @@ import { requireScope } from "@/app/_server/require-scope";
 import { RecipesPage } from "@/components/recipes/recipes-page";
 import { PageBody } from "@/components/ui/page-body";
 import { PageHeading } from "@/components/ui/page-heading";
-import { RoleBars } from "@/components/ui/role-bars";
 import { can } from "@/lib/access/permissions";
 
 export const metadata: Metadata = { title: "Recipes" };
 
 export default async function RecipesRoute({ params }: { params: Promise<{ org: string }> }) {
   const { org } = await params;
-  const { scope } = await requireScope(org);
-  if (!can(scope.role, "recipes.read")) return <RoleBars role={scope.role} toDo="see the recipes" />;
+  const { scope } = await requireScope(org, "recipes.read");
   return (
     <PageBody>
       <PageHeading
