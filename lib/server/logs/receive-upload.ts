@@ -107,6 +107,8 @@ export async function receiveUpload(container: Container, options: ReceiveOption
   form.on("field", (name, value) => (fields[name] = value));
   form.on("filesLimit", () => refuse(refuseFiles(`One log may come in at most ${MOST_PARTS} files.`)));
   form.on("file", (part, file, info) => {
+    // A refused form ends its files with the reason, which is told elsewhere; unheard, it would end the process.
+    file.on("error", () => undefined);
     if (part !== "file") return void file.resume();
     if (storing.length > 0 && !options.together) {
       return refuse(

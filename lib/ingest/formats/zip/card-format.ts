@@ -20,8 +20,12 @@ export const cardFormat: ArchivedFormat = {
   label: "Zip of CSV or GeoJSON files",
   holds: ({ entries }) => entries.some(isLog),
   inspect: async (archive, options) => orStop(await inspectPartsBy(TEXT_PARTS, await openParts(archive), options)),
-  read: async (archive, mapping, options) =>
-    orStop(await readPartsBy(TEXT_PARTS, await openParts(archive), mapping, options)),
+  async read(archive, mapping, options) {
+    const outcome = await readPartsBy(TEXT_PARTS, await openParts(archive), mapping, options);
+    // The parts are inside: whoever reads the zip gave one file.
+    const { log, notes } = orStop(outcome);
+    return { log, notes };
+  },
 };
 
 const TEXT_PARTS: PartReader = {
