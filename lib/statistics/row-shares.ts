@@ -57,23 +57,33 @@ export interface Stretch {
 /** The longest stretch of consecutive readings for which `holds`; a missing reading or the end of a pass ends a stretch. Null without any. */
 export function longestStretch(
   placed: PlacedLog,
-  series: RowSeries,
+  { values, weightsM, records }: RowSeries,
   holds: (value: number) => boolean,
 ): Stretch | null {
-  let longest: Stretch | null = null;
-  let open: Stretch | null = null;
-  for (let i = 0; i < series.values.length; i++) {
-    const record = series.records[i]!;
-    if (!holds(series.values[i]!)) {
-      open = null;
+  const { passOf } = placed;
+  const longest = { lengthM: -1, firstRecord: 0, lastRecord: 0 };
+  let lengthM = 0;
+  let first = 0;
+  let last = -2;
+  let isLongest = false;
+  for (let i = 0; i < values.length; i++) {
+    if (!holds(values[i]!)) {
+      last = -2;
       continue;
     }
-    const follows =
-      open !== null && record === open.lastRecord + 1 && placed.passOf[record] === placed.passOf[record - 1];
-    if (open === null || !follows) open = { lengthM: 0, firstRecord: record, lastRecord: record };
-    open.lengthM += series.weightsM[i]!;
-    open.lastRecord = record;
-    if (longest === null || open.lengthM > longest.lengthM) longest = open;
+    const record = records[i]!;
+    if (record !== last + 1 || passOf[record] !== passOf[last]) {
+      lengthM = 0;
+      first = record;
+      isLongest = false;
+    }
+    lengthM += weightsM[i]!;
+    last = record;
+    isLongest ||= lengthM > longest.lengthM;
+    if (!isLongest) continue;
+    longest.lengthM = lengthM;
+    longest.firstRecord = first;
+    longest.lastRecord = last;
   }
-  return longest;
+  return longest.lengthM < 0 ? null : longest;
 }

@@ -15,8 +15,7 @@ import {
   underTargetBelowN,
 } from "@/lib/statistics/row-shares";
 import { selectQuantiles } from "@/lib/statistics/select-quantiles";
-import { weightedMean } from "@/lib/statistics/weighted-mean";
-import { weightedSd } from "@/lib/statistics/weighted-sd";
+import { weightedMoments } from "@/lib/statistics/weighted-moments";
 
 /** What one row did over a log. Every mean, sd, quantile and share is weighted by the distance the row travelled. */
 export interface RowStatisticsItem {
@@ -130,6 +129,7 @@ function describeRow(
     series.weightsM,
     [0.05, 0.25, 0.5, 0.75, 0.95],
   );
+  const { mean, sd } = weightedMoments(series.values, series.weightsM);
   const at = (k: number) => finiteOrNull(quantiles[k] ?? NaN);
   const under = underTargetBelowN(placed, channel);
   const limit = atLimitFromN(placed, channel);
@@ -138,8 +138,8 @@ function describeRow(
     row,
     n: series.values.length,
     distanceM: weight,
-    mean: finiteOrNull(weightedMean(series.values, series.weightsM)),
-    sd: finiteOrNull(weightedSd(series.values, series.weightsM)),
+    mean: finiteOrNull(mean),
+    sd: finiteOrNull(sd),
     min: finiteOrNull(min),
     p05: at(0),
     p25: at(1),

@@ -13,7 +13,7 @@ export interface WeightedSummary {
 
 const BUCKETS = 4096;
 /** Bucket of a reading that counts for nothing. */
-const NOWHERE = 0xffff;
+const NOWHERE = BUCKETS;
 
 /**
  * Weighted quantiles by the midpoint definition without sorting everything: readings are counted into 4096 even steps from
@@ -22,22 +22,37 @@ const NOWHERE = 0xffff;
  */
 export function selectQuantiles(values: Float32Array, weights: Float32Array, ps: readonly number[]): WeightedSummary {
   const { min, max } = rangeOf(values);
-  const histogram = countBuckets(values, weights, min, max);
+  const counted = countBuckets(values, weights, min, max);
+  const { bucketOf, sums } = counted;
   let weight = 0;
-  for (const sum of histogram.sums) weight += sum;
-  const quantiles = ps.map((p) => (weight > 0 ? selectAt(values, weights, histogram, p * weight) : NaN));
+  for (const sum of sums) weight += sum;
+  if (!(weight > 0)) return { min, max, weight, quantiles: ps.map(() => NaN) };
+  const places = ps.map((p) => findPlace(sums, p * weight));
+  const steps = describeSteps(values, weights, bucketOf, places);
+  const isPlain = ({ low, bucket, high }: Place) => ![low, bucket, high].some((step) => steps.mixed[step] === 1);
+  const quantiles = places.map((place) =>
+    isPlain(place) ? valueBetween(steps, sums, place) : valueAmong(values, weights, counted, place),
+  );
   return { min, max, weight, quantiles };
 }
 
-interface Histogram {
-  /** Bucket of every reading. */
-  bucketOf: Uint16Array;
-  /** Of each bucket: total weight, the weights of its first and last reading, its value, and 1 where it holds several values. */
-  sums: Float64Array;
+/** Where a quantile lies: its step, the nearest steps below and above that hold anything, its weight and that below the step. */
+interface Place {
+  low: number;
+  bucket: number;
+  high: number;
+  target: number;
+  below: number;
+}
+
+/** What tells whether a step holds one value; known of the steps about the quantiles. */
+interface Steps {
+  /** 1 where the step holds several values. */
+  mixed: Uint8Array;
+  /** The step's first value, and the weights of its first and last reading. */
+  values: Float32Array;
   firsts: Float32Array;
   lasts: Float32Array;
-  values: Float32Array;
-  mixed: Uint8Array;
 }
 
 function rangeOf(values: Float32Array): { min: number; max: number } {
@@ -51,39 +66,33 @@ function rangeOf(values: Float32Array): { min: number; max: number } {
   return max < min ? { min: NaN, max: NaN } : { min, max };
 }
 
+interface Counted {
+  /** Step of every reading. */
+  bucketOf: Uint16Array;
+  /** Weight in every step. */
+  sums: Float64Array;
+}
+
 // kernel: hot, so positional
-function countBuckets(values: Float32Array, weights: Float32Array, min: number, max: number): Histogram {
-  const histogram = {
-    bucketOf: new Uint16Array(values.length),
-    sums: new Float64Array(BUCKETS),
-    firsts: new Float32Array(BUCKETS),
-    lasts: new Float32Array(BUCKETS),
-    values: new Float32Array(BUCKETS),
-    mixed: new Uint8Array(BUCKETS),
-  };
+function countBuckets(values: Float32Array, weights: Float32Array, min: number, max: number): Counted {
+  const bucketOf = new Uint16Array(values.length);
+  const sums = new Float64Array(BUCKETS);
   const scale = max > min ? (BUCKETS - 1) / (max - min) : 0;
   for (let i = 0; i < values.length; i++) {
     const weight = weights[i]!;
     const value = values[i]!;
     if (!(weight > 0) || value !== value) {
-      histogram.bucketOf[i] = NOWHERE;
+      bucketOf[i] = NOWHERE;
       continue;
     }
     const bucket = ((value - min) * scale) | 0;
-    histogram.bucketOf[i] = bucket;
-    if (histogram.sums[bucket] === 0) {
-      histogram.firsts[bucket] = weight;
-      histogram.values[bucket] = value;
-    } else if (histogram.values[bucket] !== value) histogram.mixed[bucket] = 1;
-    histogram.sums[bucket]! += weight;
-    histogram.lasts[bucket] = weight;
+    bucketOf[i] = bucket;
+    sums[bucket]! += weight;
   }
-  return histogram;
+  return { bucketOf, sums };
 }
 
-// kernel: hot, so positional
-function selectAt(values: Float32Array, weights: Float32Array, histogram: Histogram, target: number): number {
-  const { sums, mixed } = histogram;
+function findPlace(sums: Float64Array, target: number): Place {
   let bucket = 0;
   let below = 0;
   while (bucket < BUCKETS - 1 && below + sums[bucket]! < target) below += sums[bucket++]!;
@@ -93,23 +102,46 @@ function selectAt(values: Float32Array, weights: Float32Array, histogram: Histog
   while (low >= 0 && sums[low] === 0) low--;
   let high = bucket + 1;
   while (high < BUCKETS && sums[high] === 0) high++;
-  const isMixed = mixed[bucket] === 1 || mixed[low] === 1 || mixed[high] === 1;
-  if (!isMixed) return valueBetween(histogram, { low, bucket, high }, target - below);
-  if (low >= 0) below -= sums[low]!;
-  const some = gatherBuckets(values, weights, histogram.bucketOf, { low: Math.max(0, low), high });
-  const sorted = sortWeighted(some.values, some.weights);
-  return weightedValueAt(sorted, target - below);
+  return { low, bucket, high, target, below };
+}
+
+// kernel: hot, so positional
+function describeSteps(
+  values: Float32Array,
+  weights: Float32Array,
+  bucketOf: Uint16Array,
+  places: readonly Place[],
+): Steps {
+  const wanted = new Uint8Array(BUCKETS + 1);
+  for (const { low, bucket, high } of places) for (const step of [low, bucket, high]) if (step >= 0) wanted[step] = 1;
+  wanted[NOWHERE] = 0;
+  const steps = {
+    mixed: new Uint8Array(BUCKETS),
+    values: new Float32Array(BUCKETS),
+    firsts: new Float32Array(BUCKETS),
+    lasts: new Float32Array(BUCKETS),
+  };
+  for (let i = 0; i < bucketOf.length; i++) {
+    const bucket = bucketOf[i]!;
+    if (wanted[bucket] === 0) continue;
+    const weight = weights[i]!;
+    const value = values[i]!;
+    if (steps.firsts[bucket] === 0) {
+      steps.firsts[bucket] = weight;
+      steps.values[bucket] = value;
+    } else if (steps.values[bucket] !== value) steps.mixed[bucket] = 1;
+    steps.lasts[bucket] = weight;
+  }
+  return steps;
 }
 
 /**
- * The value at `within`, the weight counted from where the bucket begins, where it and its neighbours hold one value each: that
- * value from the middle of its first reading to the middle of its last, a straight line to the neighbour's beyond.
+ * The value at the target weight where its step and the two beside it hold one value each: that value from the middle of its
+ * first reading to the middle of its last, a straight line to the neighbour's beyond.
  */
-function valueBetween(
-  { sums, firsts, lasts, values }: Histogram,
-  { low, bucket, high }: { low: number; bucket: number; high: number },
-  within: number,
-): number {
+function valueBetween({ values, firsts, lasts }: Steps, sums: Float64Array, place: Place): number {
+  const { low, bucket, high } = place;
+  const within = place.target - place.below;
   const value = values[bucket]!;
   const first = firsts[bucket]! / 2;
   const last = sums[bucket]! - lasts[bucket]! / 2;
@@ -125,19 +157,20 @@ function valueBetween(
 }
 
 // kernel: hot, so positional
-function gatherBuckets(
-  values: Float32Array,
-  weights: Float32Array,
-  bucketOf: Uint16Array,
-  { low, high }: { low: number; high: number },
-): { values: Float32Array; weights: Float32Array } {
+function valueAmong(values: Float32Array, weights: Float32Array, { bucketOf, sums }: Counted, place: Place): number {
+  const { high, target, below } = place;
+  const low = Math.max(0, place.low);
   let n = 0;
-  for (let i = 0; i < bucketOf.length; i++) if (bucketOf[i]! >= low && bucketOf[i]! <= high) n++;
-  const picked = { values: new Float32Array(n), weights: new Float32Array(n) };
+  for (let i = 0; i < bucketOf.length; i++)
+    n += +(bucketOf[i]! >= low) & +(bucketOf[i]! <= high) & +(bucketOf[i] !== NOWHERE);
+  const some = { values: new Float32Array(n), weights: new Float32Array(n) };
   for (let i = 0, k = 0; k < n; i++) {
-    if (bucketOf[i]! < low || bucketOf[i]! > high) continue;
-    picked.values[k] = values[i]!;
-    picked.weights[k++] = weights[i]!;
+    if (bucketOf[i]! < low || bucketOf[i]! > high || bucketOf[i] === NOWHERE) continue;
+    some.values[k] = values[i]!;
+    some.weights[k++] = weights[i]!;
   }
-  return picked;
+  return weightedValueAt(
+    sortWeighted(some.values, some.weights),
+    target - (place.low >= 0 ? below - sums[low]! : below),
+  );
 }

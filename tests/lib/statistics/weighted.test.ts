@@ -3,6 +3,7 @@ import { describe, expect, it } from "vitest";
 import { quantileType7, sortFinite } from "@/lib/statistics/quantile";
 import { selectQuantiles } from "@/lib/statistics/select-quantiles";
 import { weightedMean } from "@/lib/statistics/weighted-mean";
+import { weightedMoments } from "@/lib/statistics/weighted-moments";
 import { weightedQuantile, weightedQuantileLower } from "@/lib/statistics/weighted-quantile";
 import { weightedSd } from "@/lib/statistics/weighted-sd";
 import { LEVELS, S10 } from "./samples";
@@ -91,5 +92,20 @@ describe("selectQuantiles", () => {
     const values = Float32Array.from({ length: 4001 }, (_, i) => Math.fround(Math.sin(i * 12.9898) * 43758.5453) % 500);
     const found = selectQuantiles(values, new Float32Array(4001).fill(0.5), [0.5]);
     expect(found.quantiles[0]).toBeCloseTo(quantileType7(sortFinite(values), 0.5), 6);
+  });
+});
+
+describe("weightedMoments", () => {
+  it("gives the very numbers of weightedMean and weightedSd, on any readings", () => {
+    fc.assert(
+      fc.property(readings, (list) => {
+        const values = Float32Array.from(list, (one) => one.value);
+        const weights = Float32Array.from(list, (one) => one.weight);
+        const { mean, sd } = weightedMoments(values, weights);
+        expect(mean).toBe(weightedMean(values, weights));
+        expect(sd).toBe(weightedSd(values, weights));
+      }),
+      { seed: 13, numRuns: 300 },
+    );
   });
 });
