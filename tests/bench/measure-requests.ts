@@ -1,7 +1,7 @@
 import autocannon from "autocannon";
 import { fromWorld, tileAt } from "@/lib/tiles/tile-address";
 import { medianOf, printRatio } from "@/tests/bench/ratios";
-import type { BenchContext } from "@/tests/bench/measure-upload";
+import type { BenchContext } from "@/tests/bench/bench-context";
 
 const SECONDS = 4;
 const CONNECTIONS = 16;

@@ -6,14 +6,28 @@ export function medianOf(values: readonly number[]): number {
   return sorted.length % 2 === 1 ? high : ((sorted[half - 1] ?? NaN) + high) / 2;
 }
 
-/** Median of the ratios of pairs taken one after the other, with the smallest and the largest: machines drift, pairs less. */
-export function pairedRatio(pairs: readonly { ours: number; base: number }[]): string {
+/** Two measurements taken one right after the other. */
+export interface Pair {
+  ours: number;
+  base: number;
+}
+
+/** Median of the ratios of pairs, with the smallest and the largest: machines drift, pairs less. */
+export function pairedRatio(pairs: readonly Pair[]): string {
   const ratios = pairs.map(({ ours, base }) => ours / base);
   const range = `[${Math.min(...ratios).toFixed(2)}..${Math.max(...ratios).toFixed(2)}]`;
   return `${medianOf(ratios).toFixed(2)} ${range}, n = ${pairs.length}`;
 }
 
-/** One line of the report: what, the ratio, the goal where there is one. */
+/** One line of the report: what, the ratio, a note where there is one. */
 export function printRatio(label: string, value: string, note = ""): void {
-  console.log(`${label.padEnd(64)} ${value}${note ? `   (${note})` : ""}`);
+  console.log(`${label.padEnd(72)} ${value}${note ? `   (${note})` : ""}`);
+}
+
+/** The same beside a goal: the median of the pairs may be `atMost` that. */
+export function printGoal(label: string, pairs: readonly Pair[], goal: { atMost: number; note?: string }): void {
+  const median = medianOf(pairs.map(({ ours, base }) => ours / base));
+  const verdict = median <= goal.atMost ? "pass" : "MISS";
+  const aim = `goal: at most ${goal.atMost.toFixed(2)}`;
+  printRatio(label, `${pairedRatio(pairs)}   ${aim} ${verdict}`, goal.note);
 }
