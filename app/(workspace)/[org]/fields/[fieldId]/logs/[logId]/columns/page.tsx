@@ -1,11 +1,13 @@
 import type { Metadata } from "next";
 import Link from "next/link";
-import { requireScope } from "@/app/_server/require-scope";
+import { container } from "@/app/_server/container";
+import { orNotFound, requireScope } from "@/app/_server/require-scope";
 import { ColumnsScreen } from "@/components/columns/columns-screen";
 import { buttonClass } from "@/components/ui/button";
 import { PageBody } from "@/components/ui/page-body";
 import { PageHeading } from "@/components/ui/page-heading";
 import { can } from "@/lib/access/permissions";
+import { getLog } from "@/lib/server/logs/read-logs";
 
 export const metadata: Metadata = { title: "What the columns mean" };
 
@@ -16,6 +18,7 @@ interface ColumnsRouteProps {
 export default async function ColumnsRoute({ params }: ColumnsRouteProps) {
   const { org, fieldId, logId } = await params;
   const { scope, organisation } = await requireScope(org);
+  await orNotFound(getLog(container(), scope, logId));
   const mayChange = can(scope.role, "logs.map");
   return (
     <PageBody>
