@@ -46,20 +46,23 @@ export function joinRuns(runs: CellRun[]): CellRun[] {
   return joined;
 }
 
-/** Pieces of ground: runs (in order) that touch, corners included, from row to row. */
-export function connectRuns(runs: readonly CellRun[]): CellRun[][] {
+/** Pieces of ground: runs (in order) that touch from row to row, in corners too unless `sidesOnly`. */
+export function connectRuns(runs: readonly CellRun[], { sidesOnly = false } = {}): CellRun[][] {
   const parent = Int32Array.from(runs, (_, k) => k);
   const find = (k: number): number => {
     while (parent[k] !== k) k = parent[k] = parent[parent[k]!]!;
     return k;
   };
+  const reach = sidesOnly ? 0 : 1;
   let above = 0;
   for (let k = 0; k < runs.length; k++) {
     const run = runs[k]!;
-    while (runs[above]!.row < run.row - 1 || (runs[above]!.row === run.row - 1 && runs[above]!.end < run.from)) above++;
+    const isPast = (upper: CellRun) =>
+      upper.row < run.row - 1 || (upper.row === run.row - 1 && upper.end + reach <= run.from);
+    while (isPast(runs[above]!)) above++;
     for (let other = above; other < k; other++) {
       const upper = runs[other]!;
-      if (upper.row >= run.row || upper.from > run.end) break;
+      if (upper.row >= run.row || upper.from >= run.end + reach) break;
       parent[find(other)] = find(k);
     }
   }

@@ -126,3 +126,17 @@ function pushEntry(lists: OwnerLists, stretch: number, mask: number, next: numbe
   lists.next[entry] = next;
   return entry;
 }
+
+/** The stretches that worked a cell; none for a cell outside the grid or not worked. */
+export function ownersAt({ cells, owner, lists }: WorkedGrid, row: number, column: number): number[] {
+  if (row < 0 || row >= cells.rows || column < 0 || column >= cells.columns) return [];
+  const at = row * cells.wordsPerRow + (column >>> 5);
+  const bit = 1 << (column & 31);
+  if ((cells.words[at]! & bit) === 0) return [];
+  if (owner[at]! > 0) return [owner[at]! - 1];
+  const found: number[] = [];
+  for (let entry = -owner[at]! - 1; entry >= 0; entry = lists.next[entry]!) {
+    if ((lists.mask[entry]! & bit) !== 0) found.push(lists.stretch[entry]!);
+  }
+  return found;
+}

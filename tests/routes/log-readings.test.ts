@@ -1,6 +1,8 @@
 import sharp from "sharp";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { CoverageAreas } from "@/lib/schemas/coverage";
 import type {
+  CoverageBody,
   Log,
   LogColumns,
   PassBody,
@@ -218,6 +220,21 @@ describe("places", () => {
   });
 });
 
+describe("ground covered", () => {
+  it("is told by cause, adding up to what was worked twice, and drawn as areas", async () => {
+    const coverage = await ask<CoverageBody>("coverage");
+    const byCause = (coverage.overlapByCause ?? []).reduce((sum, item) => sum + item.areaM2, 0);
+    expect(byCause).toBeCloseTo(coverage.overlapM2, 6);
+    const { features } = CoverageAreas.parse(await ask("coverage/areas"));
+    const skipped = features.filter((area) => area.properties.kind === "skip");
+    expect(skipped.length).toBe(coverage.skips?.count);
+    const twiceM2 = features
+      .filter((area) => area.properties.kind === "overlap")
+      .reduce((sum, area) => sum + area.properties.areaM2, 0);
+    expect(twiceM2).toBeLessThanOrEqual(coverage.overlapM2 + 1);
+  });
+});
+
 describe("who may see a log", () => {
   const ENDINGS = [
     "",
@@ -227,6 +244,7 @@ describe("who may see a log", () => {
     "passes/1/readings?channel=margin",
     "rows?channel=margin",
     "coverage",
+    "coverage/areas",
     "zones?channel=margin&breaks=400",
     "swaths",
     "tiles/margin/17/29619/50364.png",

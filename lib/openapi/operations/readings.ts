@@ -1,5 +1,6 @@
 import { z } from "zod";
 import type { Method, Operation, OperationReply } from "@/lib/openapi/operation";
+import { CoverageAreas } from "@/lib/schemas/coverage";
 import { ExportQuery } from "@/lib/schemas/export";
 import { ListQuery } from "@/lib/schemas/listing";
 import { ChannelQuery, PlaceQuery, SwathsQuery, ZonesQuery } from "@/lib/schemas/log-queries";
@@ -92,6 +93,22 @@ export const readingOperations: Operation[] = [
     permission: "logs.read",
     summary: "Area swept, covered, overlapped and skipped",
     replies: [{ status: 200, description: "Areas", schema: CoverageBody }],
+    errors: ["conflict"],
+  },
+  {
+    method: "GET",
+    path: "/api/v1/logs/{logId}/coverage/areas",
+    tag,
+    permission: "logs.read",
+    summary: "Ground worked twice, with its cause and passes, and ground left out, as polygons",
+    replies: [
+      {
+        status: 200,
+        description: "At most 2000 areas, the largest first",
+        schema: CoverageAreas,
+        contentType: "application/geo+json",
+      },
+    ],
     errors: ["conflict"],
   },
   {
