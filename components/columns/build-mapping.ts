@@ -1,6 +1,6 @@
 import type { ChoiceExtras } from "@/components/columns/check-choices";
 import { readMissing, type Choices } from "@/components/columns/column-choice";
-import type { LogMapping, LogShape, MappedColumn } from "@/lib/ingest/mapping";
+import type { ContactDefinition, LogMapping, LogShape, MappedColumn } from "@/lib/ingest/mapping";
 
 function mappedColumns(choices: Choices): MappedColumn[] {
   return Object.entries(choices).flatMap(([name, choice]) => {
@@ -24,15 +24,18 @@ function mappedColumns(choices: Choices): MappedColumn[] {
 export function buildMapping(
   choices: Choices,
   shape: LogShape,
-  extras: ChoiceExtras & { save: string; layer?: string | null },
+  extras: ChoiceExtras & { save: string; layer?: string | null; contact?: ContactDefinition | null },
 ): LogMapping {
   const [crs, timeZone, save] = [extras.crs.trim(), extras.timeZone.trim(), extras.save.trim()];
+  const columns = mappedColumns(choices);
+  const hasContact = columns.some(({ channel }) => channel === "contact");
   return {
-    columns: mappedColumns(choices),
+    columns,
     shape,
     ...(crs ? { crs } : {}),
     ...(timeZone ? { timeZone } : {}),
     ...(extras.layer ? { layer: extras.layer } : {}),
+    ...(extras.contact && hasContact ? { contact: extras.contact } : {}),
     ...(save ? { save } : {}),
   };
 }

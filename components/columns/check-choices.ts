@@ -1,6 +1,6 @@
 import { readMissing, type Choices, type ColumnChoice } from "@/components/columns/column-choice";
 import { channelWords, isRowable } from "@/lib/ingest/channel-quantities";
-import type { LogShape } from "@/lib/ingest/mapping";
+import { ContactDefinition, type LogShape } from "@/lib/ingest/mapping";
 
 export interface ChoiceCheck {
   /** Columns nobody has decided or looked at yet. */
@@ -11,9 +11,12 @@ export interface ChoiceCheck {
   general: string[];
   needsCrs: boolean;
   needsTimeZone: boolean;
+  /** Some column is ground contact: how it is defined must be asked, since files do not say. */
+  asksContact: boolean;
 }
 
 export interface ChoiceExtras {
+  contact?: ContactDefinition | null;
   crs: string;
   timeZone: string;
 }
@@ -85,11 +88,16 @@ export function checkChoices(choices: Choices, shape: LogShape, extras: ChoiceEx
   const general = findGeneral(choices, shape, extras);
   if (needsTimeZone && extras.timeZone.trim() === "")
     general.push("Local times need their time zone, such as America/Chicago.");
+  const asksContact = readsAs(choices, "contact");
+  if (asksContact && extras.contact && !ContactDefinition.safeParse(extras.contact).success) {
+    general.push("Ground contact: write the load and the time as numbers, or leave them empty.");
+  }
   return {
     waiting: entries.filter(([, choice]) => !choice.seen || choice.use === "undecided").map(([name]) => name),
     problems,
     general,
     needsCrs: readsAs(choices, "easting") || readsAs(choices, "northing"),
     needsTimeZone,
+    asksContact,
   };
 }

@@ -7,6 +7,7 @@ import { startLayout } from "@/components/columns/column-choice";
 import { ColumnLine } from "@/components/columns/column-line";
 import { columnSections } from "@/components/columns/column-sections";
 import { ConfirmBar } from "@/components/columns/confirm-bar";
+import { DeviceCard } from "@/components/columns/device-card";
 import { GroupCard, type ChangeChoices } from "@/components/columns/group-card";
 import { groupColumns } from "@/components/columns/group-columns";
 import { LayerPicker, viewLayer } from "@/components/columns/layer-picker";
@@ -23,6 +24,10 @@ export interface ColumnsFormProps {
   log: Log;
   found: LogColumns;
   machines: MachineReply[];
+  /** The machine to begin with; the log's own when left out. */
+  machineId?: string | null;
+  /** Where a machine can be made from the file's description; null for those who may not. */
+  makeMachineHref?: string | null;
   pending: boolean;
   failure: unknown;
   /** False: to look at only. */
@@ -30,14 +35,15 @@ export interface ColumnsFormProps {
   onSave: (mapping: LogMapping, machineId: string | null) => void;
 }
 
-function startExtras(log: Log, found: LogColumns): Extras {
+function startExtras(found: LogColumns, machineId: string | null): Extras {
   const inForce = LogMapping.safeParse(found.mapping);
   const mapping = inForce.success ? inForce.data : null;
   return {
     crs: mapping?.crs ?? found.crs ?? "",
     timeZone: mapping?.timeZone ?? Intl.DateTimeFormat().resolvedOptions().timeZone,
     save: "",
-    machineId: log.machineId ?? "",
+    machineId: machineId ?? "",
+    contact: mapping?.contact ?? null,
   };
 }
 
@@ -51,6 +57,10 @@ function refusedColumns(failure: unknown): Record<string, string> {
 function startLayer({ mapping, layers }: LogColumns): string | null {
   const inForce = LogMapping.safeParse(mapping);
   return (inForce.success ? inForce.data.layer : undefined) ?? layers?.[0]?.id ?? null;
+}
+
+function linkLayer(href: string, layer: string | null): string {
+  return layer === null ? href : `${href}&layer=${encodeURIComponent(layer)}`;
 }
 
 /** The meaning of every column; where the file holds several logs, of the one chosen. */
@@ -74,12 +84,14 @@ function LayerForm({
   pending,
   failure,
   mayChange = true,
+  machineId = log.machineId,
+  makeMachineHref = null,
   onSave,
   layer,
 }: ColumnsFormProps & { layer: string | null }) {
   const [layout, setLayout] = useState(() => startLayout(found));
   const { shape, choices } = layout;
-  const [extras, setExtras] = useState(() => startExtras(log, found));
+  const [extras, setExtras] = useState(() => startExtras(found, machineId));
   const isConfirmed = found.mapping !== null;
   const sections = useMemo(() => columnSections(groupColumns(found.columns), isConfirmed), [found, isConfirmed]);
   const check = checkChoices(choices, shape, extras);
@@ -97,9 +109,16 @@ function LayerForm({
     >
       {found.recipe ? (
         <Notice state="fine">
-          Read with the recipe “{found.recipe.name}”. Its meanings are shown below: change what is wrong, and read the
-          log again.
+          Read with the recipe “{found.recipe.name}”, version {found.recipe.version}. Its meanings are shown below:
+          change what is wrong, and read the log again.
         </Notice>
+      ) : null}
+      {found.device ? (
+        <DeviceCard
+          device={found.device}
+          machine={machines.find((machine) => machine.id === extras.machineId) ?? null}
+          makeHref={mayChange && makeMachineHref ? linkLayer(makeMachineHref, layer) : null}
+        />
       ) : null}
       {found.notes.map((note) => (
         <Notice key={`${note.code} ${note.message}`} state="look">
@@ -148,6 +167,7 @@ function LayerForm({
             onChange={(patch) => setExtras((before) => ({ ...before, ...patch }))}
             needsCrs={check.needsCrs}
             needsTimeZone={check.needsTimeZone}
+            asksContact={check.asksContact}
             crsCandidates={found.crsCandidates ?? []}
             machines={machines}
           />

@@ -1,6 +1,6 @@
 "use client";
 
-import { useRouter } from "next/navigation";
+import { useRouter, useSearchParams } from "next/navigation";
 import { ColumnsForm } from "@/components/columns/columns-form";
 import { useColumns, useLog, usePutMapping } from "@/components/hooks/use-logs";
 import { useMachines } from "@/components/hooks/use-machines";
@@ -19,6 +19,7 @@ export interface ColumnsScreenProps {
 /** Asks for what was found in the file, and sends back what a person says it means. */
 export function ColumnsScreen({ logPath, logId, role }: ColumnsScreenProps) {
   const router = useRouter();
+  const madeMachineId = useSearchParams().get("machine");
   const log = useLog(logId);
   const columns = useColumns(logId);
   const machines = useMachines(can(role, "machines.read"));
@@ -38,6 +39,8 @@ export function ColumnsScreen({ logPath, logId, role }: ColumnsScreenProps) {
       log={log.data}
       found={columns.data}
       machines={known}
+      machineId={madeMachineId ?? log.data.machineId}
+      makeMachineHref={can(role, "machines.write") ? `/${logPath.split("/")[1]}/machines/new?log=${logId}` : null}
       mayChange={can(role, "logs.map")}
       pending={save.isPending || save.isSuccess}
       failure={save.error}

@@ -3,7 +3,9 @@
 import { useId, useMemo } from "react";
 import { Button } from "@/components/ui/button";
 import { SelectField, TextField } from "@/components/ui/form-field";
+import { ContactFields } from "@/components/columns/contact-fields";
 import type { CrsCandidate } from "@/lib/ingest/log-format";
+import type { ContactDefinition } from "@/lib/ingest/mapping";
 import type { MachineReply } from "@/lib/schemas/machines";
 
 export interface Extras {
@@ -11,6 +13,8 @@ export interface Extras {
   timeZone: string;
   save: string;
   machineId: string;
+  /** How this log defines ground contact; null where nobody said. */
+  contact: ContactDefinition | null;
 }
 
 export interface MappingExtrasProps {
@@ -18,6 +22,7 @@ export interface MappingExtrasProps {
   onChange: (patch: Partial<Extras>) => void;
   needsCrs: boolean;
   needsTimeZone: boolean;
+  asksContact: boolean;
   /** Systems that put the log near the field, where the file does not name one. */
   crsCandidates: CrsCandidate[];
   machines: MachineReply[];
@@ -29,6 +34,7 @@ export function MappingExtras({
   onChange,
   needsCrs,
   needsTimeZone,
+  asksContact,
   crsCandidates,
   machines,
 }: MappingExtrasProps) {
@@ -80,9 +86,10 @@ export function MappingExtras({
           ))}
         </div>
       ) : null}
+      {asksContact ? <ContactFields value={extras.contact} onChange={(contact) => onChange({ contact })} /> : null}
       <TextField
         label="Keep these meanings as a recipe"
-        hint="Give it a name, and the next file with the same columns is read without asking. Leave empty to keep nothing."
+        hint="Give it a name, and the next file with the same columns is read without asking. A name that is there already gains a version. Leave empty to keep nothing."
         value={extras.save}
         maxLength={120}
         onChange={(event) => onChange({ save: event.target.value })}

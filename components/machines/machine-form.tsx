@@ -22,12 +22,14 @@ export interface MachineFormProps {
   /** Null for a new machine. */
   machineId: string | null;
   start: DraftMachine;
+  /** Where to go on once saved, with `?machine=` naming it; the list of machines when left out. */
+  returnTo?: string;
   /** False: to look at only. */
   mayWrite?: boolean;
 }
 
 /** A machine being described: in SI underneath, in the person's units on the page, drawn as it is typed. */
-export function MachineForm({ slug, machineId, start, mayWrite = true }: MachineFormProps) {
+export function MachineForm({ slug, machineId, start, returnTo, mayWrite = true }: MachineFormProps) {
   const router = useRouter();
   const save = useSaveMachine(machineId);
   const { system } = useUnits();
@@ -43,7 +45,9 @@ export function MachineForm({ slug, machineId, start, mayWrite = true }: Machine
   const draft = useWatch({ control: form.control });
   const nameError = form.formState.errors["name"]?.message;
   const submit = form.handleSubmit((machine) =>
-    save.mutate(machine, { onSuccess: () => router.push(`/${slug}/machines`) }),
+    save.mutate(machine, {
+      onSuccess: ({ id }) => router.push(returnTo === undefined ? `/${slug}/machines` : `${returnTo}?machine=${id}`),
+    }),
   );
   return (
     <FormProvider {...form}>
@@ -73,8 +77,8 @@ export function MachineForm({ slug, machineId, start, mayWrite = true }: Machine
                 {save.isPending ? "Saving…" : "Save the machine"}
               </Button>
             ) : null}
-            <Link href={`/${slug}/machines`} className={buttonClass("quiet")}>
-              Back to machines
+            <Link href={returnTo ?? `/${slug}/machines`} className={buttonClass("quiet")}>
+              {returnTo === undefined ? "Back to machines" : "Back to the log"}
             </Link>
           </div>
           {machineId && mayWrite ? (

@@ -52,6 +52,7 @@ export interface LogLayer {
   shape: LogShape;
   crs?: string;
   crsCandidates?: CrsCandidate[];
+  device?: LoggedDevice;
   columns: FoundColumn[];
 }
 

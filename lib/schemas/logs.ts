@@ -121,6 +121,21 @@ export const FoundColumnBody = z.object({
   words: z.string(),
 });
 export const CrsCandidateBody = z.object({ crs: z.string(), words: z.string() });
+/** Where the rows of the machine stand by the file's own description of it; row 1 first. */
+export const LoggedDeviceBody = z.object({
+  name: z.string(),
+  rows: z.number().int(),
+  /** Middle distance between neighbouring rows, and over the outer edges of all. */
+  rowSpacingM: z.number(),
+  widthM: z.number(),
+  /** Right of the machine's own reference point. */
+  rowOffsetsM: z.array(z.number()),
+  /** Ahead of the mean of the rows. */
+  rowForwardM: z.array(z.number()),
+  rowWidthsM: z.array(NullableNumber),
+  /** Behind the machine's own reference point, which need not be the antenna; null where the file does not say. */
+  rowsBehindReferenceM: NullableNumber,
+});
 /** One of several logs in a file; `layer` of a mapping names its id. */
 export const LogLayerBody = z.object({
   id: z.string(),
@@ -129,6 +144,7 @@ export const LogLayerBody = z.object({
   shape: z.enum(["wide", "long", "single"]),
   crs: z.string().optional(),
   crsCandidates: z.array(CrsCandidateBody).optional(),
+  device: LoggedDeviceBody.optional(),
   columns: z.array(FoundColumnBody),
 });
 export const LogColumns = z.object({
@@ -141,6 +157,8 @@ export const LogColumns = z.object({
   crsCandidates: z.array(CrsCandidateBody).optional(),
   /** Where the file holds several logs: all of them, the longest first; `columns` are those of the first. */
   layers: z.array(LogLayerBody).optional(),
+  /** The machine by the file's own description, where it has one. */
+  device: LoggedDeviceBody.optional(),
   notes: z.array(LogNoteBody),
   /** The mapping in force, once a person or a recipe gave one. */
   mapping: z.unknown().nullable(),

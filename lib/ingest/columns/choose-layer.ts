@@ -4,6 +4,7 @@ import {
   type CrsCandidate,
   type FoundColumn,
   type Inspection,
+  type LoggedDevice,
   type LogLayer,
 } from "@/lib/ingest/log-format";
 import type { LogNote } from "@/lib/logs/machine-log";
@@ -37,6 +38,7 @@ export interface InspectedLayer {
   shape: LogShape;
   crs?: string;
   crsCandidates?: CrsCandidate[];
+  device?: LoggedDevice;
   columns: FoundColumn[];
 }
 
@@ -61,13 +63,14 @@ function keepListed(inspected: readonly InspectedLayer[]): LogLayer[] {
   let columns = 0;
   return inspected
     .filter((layer, index) => (columns += layer.columns.length) <= READ_LIMITS.listedColumns || index === 0)
-    .map(({ id, label, records, shape, crs, crsCandidates, columns: own }) => ({
+    .map(({ id, label, records, shape, crs, crsCandidates, device, columns: own }) => ({
       id,
       label,
       records,
       shape,
       ...(crs === undefined ? {} : { crs }),
       ...(crsCandidates === undefined ? {} : { crsCandidates }),
+      ...(device === undefined ? {} : { device }),
       columns: own,
     }));
 }

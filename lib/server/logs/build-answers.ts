@@ -5,6 +5,7 @@ import { passVerdict } from "@/lib/findings/pass-verdict";
 import type { ReadLog } from "@/lib/ingest/log-format";
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import type { Seeder } from "@/lib/machines/machine";
+import { noteDevice } from "@/lib/machines/note-device";
 import { rowDistances } from "@/lib/rows/row-distances";
 import type { Boundary } from "@/lib/schemas/geometry";
 import type { BuiltAnswers } from "@/lib/server/logs/built-answers";
@@ -23,7 +24,8 @@ export function placeLog(
 ): BuiltLog {
   const built = buildLog(read.log, machine, options);
   if (!built.ok) throw new LogFailure({ code: built.error.code, message: built.error.message });
-  return { placed: built.value.placed, notes: [...read.notes, ...built.value.notes] };
+  const device = noteDevice(read.device, machine);
+  return { placed: built.value.placed, notes: [...read.notes, ...device, ...built.value.notes] };
 }
 
 /** Logged channels of a log, and opener resistance where it can be had. */

@@ -7,9 +7,10 @@ import { changeLog, getLogOrThrow } from "@/db/queries/logs";
 import { AppError } from "@/lib/errors";
 import { chooseLayer } from "@/lib/ingest/columns/choose-layer";
 import { IngestFailure } from "@/lib/ingest/ingest-error";
-import type { Inspection } from "@/lib/ingest/log-format";
+import type { Inspection, LoggedDevice } from "@/lib/ingest/log-format";
 import { chosenLayer, parseMapping, type LogMapping } from "@/lib/ingest/mapping";
 import { buildReadPlan } from "@/lib/ingest/records/read-plan";
+import { measureDevice } from "@/lib/machines/describe-device";
 import { MappingMachine, type Log, type LogColumns } from "@/lib/schemas/logs";
 import type { Scope } from "@/lib/scope";
 import type { Container } from "@/lib/server/create-container";
@@ -53,12 +54,19 @@ export async function getColumns(_container: Container, scope: Scope, logId: str
       columns: found.columns,
       crs: found.crs,
       crsCandidates: found.crsCandidates,
-      layers: found.layers,
+      layers: found.layers?.map(({ device, ...layer }) => ({ ...layer, device: describeDevice(device) })),
+      device: describeDevice(found.device),
       notes: found.notes,
       mapping: log.mapping,
       recipe,
     };
   });
+}
+
+function describeDevice(device: LoggedDevice | undefined): LogColumns["device"] {
+  if (!device) return undefined;
+  const { rowSpacingM, widthM } = measureDevice(device);
+  return { ...device, rowSpacingM, widthM };
 }
 
 function noColumns(reason: string | undefined): AppError {

@@ -5,6 +5,7 @@ import { ColumnsForm } from "@/components/columns/columns-form";
 import { ApiProblem } from "@/lib/api/api-problem";
 import type { LogMapping } from "@/lib/ingest/mapping";
 import type { Log } from "@/lib/schemas/logs";
+import type { MachineReply } from "@/lib/schemas/machines";
 import { makeColumn, makeFound } from "@/tests/components/columns/make-columns";
 import { makeLogReply } from "@/tests/components/upload/make-log-reply";
 
@@ -140,6 +141,101 @@ describe("what the file leaves open", () => {
     await user.selectOptions(within(card).getByLabelText("Written as"), "dd.dddd W");
     await user.click(screen.getByRole("button", { name: "Read the log" }));
     expect(onSave.mock.calls[0]?.[0].columns[0]).toMatchObject({ channel: "longitude", format: "dd.dddd W" });
+  });
+});
+
+/** 3 rows a quarter metre apart, as a file describes its own machine. */
+const device = {
+  name: "Larkspur drill",
+  rows: 3,
+  rowSpacingM: 0.25,
+  widthM: 0.75,
+  rowOffsetsM: [-0.25, 0, 0.25],
+  rowForwardM: [0, 0, 0],
+  rowWidthsM: [0.25, 0.25, 0.25],
+  rowsBehindReferenceM: null,
+};
+
+describe("a file that describes its machine", () => {
+  const chosen = (rowSpacingM: number): MachineReply => ({
+    kind: "seeder",
+    id: "mac_1",
+    name: "Chosen drill",
+    rowCount: 3,
+    rowSpacingM,
+    antennaToRowsM: 2,
+    antennaRightM: 0,
+    hitch: "rigid",
+    rowUnitMassKg: 80,
+    createdAt: "2026-12-01T12:00:00Z",
+    updatedAt: "2026-12-01T12:00:00Z",
+  });
+  const showDevice = (machines: MachineReply[], makeMachineHref: string | null) =>
+    render(
+      <ColumnsForm
+        log={log}
+        found={{ ...makeFound(), device }}
+        machines={machines}
+        machineId={machines[0]?.id ?? null}
+        makeMachineHref={makeMachineHref}
+        pending={false}
+        failure={null}
+        onSave={vi.fn()}
+      />,
+    );
+
+  it("says so, and offers to make a machine of it to those who may", () => {
+    showDevice([], "/larkspur/machines/new?log=log_1");
+    expect(screen.getByText(/Larkspur drill: 3 rows/)).toBeInTheDocument();
+    const link = screen.getByRole("link", { name: "Make a machine from this" });
+    expect(link).toHaveAttribute("href", "/larkspur/machines/new?log=log_1");
+    cleanup();
+    showDevice([], null);
+    expect(screen.queryByRole("link", { name: "Make a machine from this" })).not.toBeInTheDocument();
+    expect(screen.getByText(/An owner or agronomist can make a machine/)).toBeInTheDocument();
+  });
+
+  it("warns where the chosen machine is another, and says when it is the same", () => {
+    showDevice([chosen(0.3)], "/larkspur/machines/new?log=log_1");
+    expect(screen.getByText("Chosen drill is another machine than that")).toBeInTheDocument();
+    expect(screen.getByText(/wide, the chosen one/)).toBeInTheDocument();
+    cleanup();
+    showDevice([chosen(0.25)], "/larkspur/machines/new?log=log_1");
+    expect(screen.getByText("Chosen drill has its rows in the same places.")).toBeInTheDocument();
+  });
+});
+
+describe("ground contact", () => {
+  const contactColumn = makeColumn("GW_01", { channel: "contact", row: 1, unit: "percent" });
+
+  it("is asked how it is defined, and the answer is sent with the meanings", async () => {
+    const { onSave, user } = show(makeFound([contactColumn]));
+    await user.selectOptions(screen.getByLabelText("What it means in this log"), "share-of-time");
+    await user.type(screen.getByLabelText("Over how long"), "1");
+    await user.type(screen.getByLabelText("In their words"), "gauge wheel pin");
+    await user.click(screen.getByRole("button", { name: "Read the log" }));
+    expect(onSave.mock.calls[0]?.[0].contact).toEqual({
+      kind: "share-of-time",
+      windowS: 1,
+      words: "gauge wheel pin",
+    });
+  });
+
+  it("stays unsaid where nobody says it, and is not asked of other files", async () => {
+    const { onSave, user } = show(makeFound([contactColumn]));
+    await user.click(screen.getByRole("button", { name: "Read the log" }));
+    expect(onSave.mock.calls[0]?.[0]).not.toHaveProperty("contact");
+    cleanup();
+    show(makeFound());
+    expect(screen.queryByLabelText("What it means in this log")).not.toBeInTheDocument();
+  });
+
+  it("does not send what is no number", async () => {
+    const { user } = show(makeFound([contactColumn]));
+    await user.selectOptions(screen.getByLabelText("What it means in this log"), "at-the-moment");
+    await user.type(screen.getByLabelText("Load from which it counts as contact"), "much");
+    expect(screen.getByRole("button", { name: "Read the log" })).toBeDisabled();
+    expect(screen.getByText(/write the load and the time as numbers/)).toBeInTheDocument();
   });
 });
 

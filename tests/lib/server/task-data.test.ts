@@ -34,6 +34,26 @@ describe("a file that holds several logs", () => {
     expect(read.channels.map(({ id }) => id)).toEqual(expect.arrayContaining(["downforce", "margin", "depth"]));
   });
 
+  it("says what machine the file describes, and notes one that differs", async () => {
+    const bytes = fixtureBytes("iso11783/one-task/input.zip");
+    const machine = { kind: "seeder", name: "Wider drill", rowCount: 8, rowSpacingM: 0.3, antennaToRowsM: 2.5 };
+    const body = { ...machine, hitch: "rigid", rowUnitMassKg: 82 };
+    const { id } = await world.read("owner", { method: "POST", path: "/api/v1/machines", body });
+    const log = await world.uploadAndSettle({ bytes, name: "one.zip", machineId: String(id) });
+    const path = `/api/v1/logs/${log.id}`;
+    const columns = (await world.read("operator", { path: `${path}/columns` })) as unknown as LogColumns;
+    expect(columns.device).toMatchObject({ name: "Larkspur drill", rows: 8, rowSpacingM: 0.25, widthM: 2 });
+    expect(columns.device?.rowOffsetsM).toHaveLength(8);
+    const mapping = { ...confirmedMapping(columns), timeZone: "America/Chicago" };
+    await world.read("operator", { method: "PUT", path: `${path}/mapping`, body: mapping });
+    const wide = await world.settle(log.id);
+    const note = wide.notes.find(({ code }) => code === "device-disagrees");
+    expect(note?.message).toContain("The file's machine is 2 m wide, the chosen one 2.4 m.");
+    await world.read("owner", { method: "PATCH", path, body: { machineId: world.machineId } });
+    const right = await world.settle(log.id);
+    expect(right.notes.map(({ code }) => code)).not.toContain("device-disagrees");
+  });
+
   it("the recipe of it does not choose for the next file", async () => {
     const query = "?again=1";
     const bytes = fixtureBytes("iso11783/several-tasks/input.zip");

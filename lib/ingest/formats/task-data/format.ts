@@ -91,7 +91,9 @@ function inspectTimeLog(
   });
   // Of many logs in one file, only one is in memory at a time.
   const described: TimeLog = { ...log, bytes: new Uint8Array(0) };
-  return { id: log.id, label: log.label, records, ...found, log: described, sampled: cells[0]?.length ?? 0, notes };
+  const device = log.device ? { device: log.device } : {};
+  const sampled = cells[0]?.length ?? 0;
+  return { id: log.id, label: log.label, records, ...found, ...device, log: described, sampled, notes };
 }
 
 function recordText(field: number, value: number): string {
