@@ -88,6 +88,7 @@ function WhatNext({ findings }: { findings: Finding[] }) {
           <li key={finding.id}>
             {finding.row ? `Row ${finding.row}: ` : ""}
             {finding.check}
+            {finding.caution ? <span className="block text-table text-ink-soft">{finding.caution}</span> : null}
           </li>
         ))}
       </ul>

@@ -125,6 +125,20 @@ describe("making a share", () => {
     expect((await open(tokenOf(unsent))).status).toBe(200);
   });
 
+  it("stops a person after twenty mails in an hour, before a share is made", async () => {
+    const statuses = [];
+    for (let i = 0; i < 22; i++) {
+      const body = { audience: "landowner", layers: ["boundary"], expiresAt: SOON(), emailTo: "hale@larkspur.example" };
+      const path = `/api/v1/fields/${fieldId}/shares`;
+      statuses.push((await world.as("owner", { method: "POST", path, body })).status);
+    }
+    expect(statuses.slice(0, 20)).toEqual(Array.from({ length: 20 }, () => 201));
+    expect(statuses.slice(20)).toEqual([429, 429]);
+    const listed = await world.read("owner", { path: `/api/v1/fields/${fieldId}/shares` });
+    expect(listed.items).toHaveLength(20);
+    expect(await share({})).toMatchObject({ emailed: null });
+  });
+
   it("fixes the log when it is made: a later harvest does not show", async () => {
     const logId = await addLog();
     await addLog("harvest");

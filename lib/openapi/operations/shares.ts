@@ -26,9 +26,10 @@ const ownerOperations: Operation[] = [
     description:
       "`url` is shown in this reply only. Without `logId` the newest seeding log of the field at this moment is shared. " +
       "`blurLocation` moves every shape to 0° N 0° E and gives no tiles. `allowDownload` must stay false for now. " +
-      "`emailed` says whether the link was mailed to `emailTo`.",
+      "`emailed` says whether the link was mailed to `emailTo`; a person may mail 20 links an hour, an organisation 50.",
     body: ShareInput,
     replies: [{ status: 201, description: "The share with its address", schema: ShareCreated }],
+    errors: ["too_many_requests"],
   },
   {
     method: "GET",

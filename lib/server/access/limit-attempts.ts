@@ -18,6 +18,8 @@ export const ATTEMPT_LIMITS = {
   passcode: { points: 20, duration: 900 },
   /** Share links mailed by one organisation. */
   mail: { points: 50, duration: 3600 },
+  /** Share links mailed by one person. */
+  "mail-from": { points: 20, duration: 3600 },
   /** Wrong old passwords when changing one's password. */
   password: { points: 10, duration: 900 },
 } as const;

@@ -12,7 +12,7 @@ import { hashSecret, newShareToken } from "@/lib/server/access/secrets";
 import type { Container } from "@/lib/server/container";
 import { getFieldOrThrow } from "@/lib/server/fields/get-field-or-throw";
 import { describeShare } from "@/lib/server/shares/describe-share";
-import { mailShare } from "@/lib/server/shares/mail-share";
+import { countMail, mailShare } from "@/lib/server/shares/mail-share";
 
 function refuse(path: string, message: string): never {
   throw new AppError("unprocessable", `${path}: ${message}.`, { places: [{ path, message }] });
@@ -41,6 +41,7 @@ export async function createShare(
   const { fieldId, input } = request;
   const now = container.clock.now();
   checkWishes(input, now);
+  if (input.emailTo) await countMail(scope);
   const token = newShareToken();
   const passcodeHash = input.passcode ? await hashPassword(input.passcode) : null;
   const { row, fieldName } = await withOrganisation(scope, async (tx) => {
@@ -66,6 +67,6 @@ export async function createShare(
   });
   const url = `${container.env.baseUrl}/s/${token}`;
   const letter = { url, fieldName, expiresAt: row.expiresAt, hasPasscode: passcodeHash !== null };
-  const emailed = input.emailTo ? await mailShare(container, scope, { to: input.emailTo, ...letter }) : null;
+  const emailed = input.emailTo ? await mailShare(container, { to: input.emailTo, ...letter }) : null;
   return { ...describeShare(row, now), url, emailed };
 }

@@ -23,10 +23,15 @@ function writeText({ fieldName, url, expiresAt, hasPasscode }: Letter): string {
   ].join("\n");
 }
 
+/** Counts a mail before anything is made. @throws AppError `too_many_requests` for the person or the organisation */
+export async function countMail(scope: Scope): Promise<void> {
+  await countAttempt("mail-from", scope.userId);
+  await countAttempt("mail", scope.organisationId);
+}
+
 /** Mails the link. False when the mail did not leave; the share itself stands, and its maker has the address. */
-export async function mailShare(container: Container, scope: Scope, letter: Letter): Promise<boolean> {
+export async function mailShare(container: Container, letter: Letter): Promise<boolean> {
   try {
-    await countAttempt("mail", scope.organisationId);
     const subject = `A field shared with you: ${letter.fieldName.replaceAll(/[\r\n]+/g, " ")}`;
     await container.mailer.send({ to: letter.to, subject, text: writeText(letter) });
     return true;

@@ -1,4 +1,4 @@
-import { cleanup, render, screen } from "@testing-library/react";
+import { cleanup, render, screen, within } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
 import { afterEach, describe, expect, it } from "vitest";
 import { ClosedShare } from "@/components/sharing/closed-share";
@@ -49,6 +49,7 @@ const VIEW: SharedViewBody = {
         sentenceTemplate: "Row 17 carried {difference} less.",
         values: { difference: { value: 180, unit: "N" } },
         check: "Check its disc and bushing.",
+        caution: "Stop the engine and take the key before reaching under it.",
       },
     ],
   },
@@ -70,7 +71,8 @@ describe("the page a link opens", () => {
     const sentence = screen.getByText(/Row 17 carried 40\slbf less\./);
     const other = screen.getByText("Most rows held.");
     expect(sentence.compareDocumentPosition(other) & Node.DOCUMENT_POSITION_FOLLOWING).toBeTruthy();
-    expect(screen.getByText("Check its disc and bushing.")).toBeInTheDocument();
+    const asked = screen.getByText("Check its disc and bushing.");
+    expect(within(asked).getByText("Stop the engine and take the key before reaching under it.")).toBeInTheDocument();
     await userEvent.setup().click(screen.getByRole("radio", { name: "Metric" }));
     expect(screen.getByText(/Row 17 carried 180\sN less\./)).toBeInTheDocument();
   });
