@@ -45,7 +45,7 @@ export const openSharedPage = cache(async (token: string): Promise<SharedPage> =
   try {
     const opened = await openShare(container(), { token, pass, from: addressOf(request) });
     await countOpening(container(), opened.share);
-    return { state: "open", view: await readSharedView(opened) };
+    return { state: "open", view: await readSharedView(container(), opened) };
   } catch (error) {
     const state = error instanceof AppError ? STATES[error.detailCode] : undefined;
     if (!state) throw error;

@@ -11,6 +11,8 @@ export const PERMISSIONS = {
   "logs.read": ["owner", "agronomist", "researcher", "operator", "viewer"],
   "logs.upload": ["owner", "agronomist", "operator"],
   "logs.map": ["owner", "agronomist", "operator"],
+  /** Cleaning rules and delays. */
+  "logs.clean": ["owner", "agronomist"],
   "logs.export": ["owner", "agronomist", "researcher"],
   "logs.delete": ["owner", "agronomist"],
   /** One's own upload, while nothing was ever read from it; any log with `logs.delete`. */

@@ -1,3 +1,4 @@
+import type { Adjustments } from "@/lib/adjustments/adjustments";
 import type { FlagCode } from "@/lib/cleaning/flags";
 import type { ExportColumn, ExportLevel, ExportShape, ExportTable } from "@/lib/export/export-table";
 import type { LogMapping } from "@/lib/ingest/mapping";
@@ -23,6 +24,8 @@ export interface ExportAbout {
   rows: { isGuessed: boolean; offsetM: number[]; forwardM: number[]; widthM: number[] };
   /** Meaning that a person confirmed of the original file's columns; name and version where it was kept as a recipe. */
   recipe: ExportRecipe | null;
+  /** Cleaning rules and delays that the readings are given with; null as they were logged. */
+  adjustments: (Adjustments & { revision: number }) | null;
   /** Class edges and the like, for zones. */
   choice: Record<string, unknown> | null;
   coordinates: string;
@@ -36,7 +39,7 @@ export interface ExportAbout {
 
 export interface AboutInput extends Pick<
   ExportAbout,
-  "log" | "source" | "recipe" | "notes" | "madeAt" | "shape" | "choice"
+  "log" | "source" | "recipe" | "notes" | "madeAt" | "shape" | "choice" | "adjustments"
 > {
   table: ExportTable;
   outline: Pick<PlacedLog, "machine" | "geometry" | "log">;
@@ -79,6 +82,10 @@ const METHODS: Record<ExportLevel, string[]> = {
   ],
 };
 
+const ADJUSTED_METHOD =
+  "Readings are given with the adjustments below: a channel with a delay is read that many seconds later (the nearest record " +
+  "of the same pass), then each cleaning rule that is on leaves out readings, which are missing here and stay in the log.";
+
 /** Puts together what is known about an export. */
 export function describeExport(input: AboutInput): ExportAbout {
   const { table, outline } = input;
@@ -96,7 +103,8 @@ export function describeExport(input: AboutInput): ExportAbout {
     recipe: input.recipe,
     choice: input.choice,
     coordinates: "Longitude and latitude in degrees, WGS 84 (OGC:CRS84).",
-    method: METHODS[table.level],
+    adjustments: input.adjustments,
+    method: input.adjustments ? [...METHODS[table.level], ADJUSTED_METHOD] : METHODS[table.level],
     flags: FLAG_WORDS,
     notes: input.notes,
     columns: table.columns.map(({ name, shortName, unit, meaning }) => ({ name, shortName, unit, meaning })),

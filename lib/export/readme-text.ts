@@ -1,3 +1,4 @@
+import { CLEANING_CODES, ruleFacts } from "@/lib/cleaning/rule-catalogue";
 import type { ExportAbout } from "@/lib/export/about";
 import { sayContact } from "@/lib/ingest/columns/say-contact";
 
@@ -31,6 +32,7 @@ export function readmeText(
       Object.entries(about.flags).map(([code, words]) => `${code}: ${words}`),
     ),
     section("Method", [about.coordinates, ...about.method, ...choiceLines(about)]),
+    section("Adjustments", adjustmentLines(about)),
     section(
       "Notes on the original",
       about.notes.map((note) => `${oneLine(note.message)} (${note.count})`),
@@ -52,6 +54,20 @@ function recipeLines({ recipe }: ExportAbout): string[] {
   if (crs) lines.push(`Easting and northing are in ${oneLine(crs)}.`);
   if (contact) lines.push(`Ground contact is ${oneLine(sayContact(contact))}.`);
   return lines;
+}
+
+/** Delays and the rules that are on, with their numbers. */
+function adjustmentLines({ adjustments }: ExportAbout): string[] {
+  if (!adjustments) return [];
+  const { revision, delaysS, cleaning } = adjustments;
+  const delays = Object.entries(delaysS).map(([id, delay]) => `Delay of ${oneLine(id)}: ${delay} s.`);
+  const rules = CLEANING_CODES.filter((code) => cleaning[code].on).map((code) => {
+    const numbers = Object.entries(cleaning[code]).filter(([name]) => name !== "on");
+    const said = numbers.map(([name, value]) => `${name} ${value}`).join(", ");
+    const { label, words } = ruleFacts(code);
+    return `${code}${said ? ` (${said})` : ""}: ${label}. Leaves out readings that ${words}.`;
+  });
+  return [`Revision ${revision}.`, ...delays, ...rules];
 }
 
 function choiceLines({ choice }: ExportAbout): string[] {

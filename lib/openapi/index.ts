@@ -1,3 +1,4 @@
+import { cleaningOperations } from "@/lib/openapi/operations/cleaning";
 import { documentOperations } from "@/lib/openapi/operations/document";
 import { fieldOperations } from "@/lib/openapi/operations/fields";
 import { logOperations } from "@/lib/openapi/operations/logs";
@@ -15,6 +16,7 @@ export const OPERATIONS: readonly Operation[] = [
   ...logOperations,
   ...recipeOperations,
   ...readingOperations,
+  ...cleaningOperations,
   ...shareOperations,
   ...peopleOperations,
   ...documentOperations,

@@ -168,5 +168,6 @@ export const CleanedQuery = z.object({
   cleaned: z
     .enum(["true", "false", "1", "0"])
     .default("true")
-    .transform((text) => text === "true" || text === "1"),
+    .transform((text) => text === "true" || text === "1")
+    .describe("false: as it was logged, without cleaning rules and delays"),
 });

@@ -16,6 +16,7 @@ export const ExportQuery = z
     bundle: z.enum(["zip"]).optional().describe("csv: zipped, with README.txt and metadata.json beside the table"),
     channel: zones.channel.optional().describe("zones: the channel"),
     breaks: zones.breaks.optional().describe("zones: class edges in the channel's SI unit"),
+    cleaned: zones.cleaned.describe("false: readings as they were logged, without cleaning rules and delays"),
     minLengthM: zones.minLengthM.describe("zones: least length"),
   })
   .superRefine((query, context) => {

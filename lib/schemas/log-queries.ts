@@ -1,7 +1,11 @@
 import { z } from "zod";
+import { CleanedQuery } from "@/lib/schemas/cleaning";
 
 /** Query parameters of what is read from a log. */
 export const ChannelQuery = z.object({ channel: z.string().min(1).max(120) });
+
+/** The same, and whether with the log's adjustments. */
+export const CleanedChannelQuery = ChannelQuery.extend(CleanedQuery.shape);
 
 const numberList = (text: string) => text.split(",").map((part) => (part.trim() === "" ? NaN : Number(part)));
 
@@ -12,7 +16,7 @@ export const BboxText = z
   .refine((sides) => sides.length === 4 && sides.every(Number.isFinite), "needs west,south,east,north in degrees")
   .transform((sides) => sides as [number, number, number, number]);
 
-export const ZonesQuery = ChannelQuery.extend({
+export const ZonesQuery = CleanedChannelQuery.extend({
   breaks: z
     .string()
     .transform(numberList)
@@ -23,7 +27,7 @@ export const ZonesQuery = ChannelQuery.extend({
 
 export const SwathsQuery = z.object({ bbox: BboxText.optional() });
 
-export const PlaceQuery = z.object({
+export const PlaceQuery = CleanedQuery.extend({
   lon: z.coerce.number().min(-180).max(180),
   lat: z.coerce.number().min(-90).max(90),
 });

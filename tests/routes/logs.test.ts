@@ -247,7 +247,7 @@ describe("what cannot be had yet", () => {
     const path = `/api/v1/logs/${log.id}`;
     const status = async (ending: string, headers?: Record<string, string>) =>
       (await world.as("owner", { path: `${path}/${ending}`, headers })).status;
-    expect(await status("cleaning")).toBe(501);
+    expect(await status("cleaning")).toBe(409);
     expect(await status("frames?channel=margin")).toBe(501);
     expect(await status("verdict")).toBe(409);
     const arrow = { accept: "application/vnd.apache.arrow.stream" };

@@ -94,6 +94,9 @@ const BODIES: Record<string, unknown> = {
   "PATCH /api/v1/recipes/{recipeId}": { useVersion: 1 },
   "PATCH /api/v1/me": { unitSystem: "metric" },
   "PATCH /api/v1/logs/{logId}": { name: "Changed" },
+  "POST /api/v1/logs/{logId}/cleaning": { rules: {} },
+  "POST /api/v1/logs/{logId}/cleaning/preview": { rules: {} },
+  "POST /api/v1/logs/{logId}/cleaning/undo": {},
   "PUT /api/v1/logs/{logId}/mapping": { columns: [{ name: "a", channel: "longitude", unit: "deg" }], shape: "single" },
 };
 const FIXED: Record<string, string> = { pass: "1", channel: "downforce", z: "15", x: "7000", y: "12000" };

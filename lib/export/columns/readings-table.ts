@@ -1,6 +1,7 @@
 import { resolveChannel } from "@/lib/channels/resolve-channel";
 import { FLAGS, flagCodes } from "@/lib/cleaning/flags";
 import { channelColumn } from "@/lib/export/columns/name-channel-column";
+import { leftOutColumn } from "@/lib/export/columns/left-out-column";
 import { makeNamesUnique } from "@/lib/export/columns/make-names-unique";
 import {
   BATCH_ROWS,
@@ -49,6 +50,7 @@ export function readingsTable(outline: PlacedLog): ReadingsTable {
     ...motionColumns(),
     workingColumn(),
     flagsColumn(),
+    ...(outline.leftOut ? [leftOutColumn()] : []),
     ...antennaColumns(),
     ...channelIds(outline).map((id) => readingColumn(id, outline)),
   ];

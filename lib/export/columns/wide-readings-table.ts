@@ -1,4 +1,5 @@
 import { resolveChannel } from "@/lib/channels/resolve-channel";
+import { leftOutOfRecordColumn } from "@/lib/export/columns/left-out-column";
 import { makeNamesUnique } from "@/lib/export/columns/make-names-unique";
 import { channelColumn } from "@/lib/export/columns/name-channel-column";
 import {
@@ -27,6 +28,7 @@ export function wideReadingsTable(outline: PlacedLog): ReadingsTable {
     ...motionColumns(),
     workingColumn(),
     flagsColumn(),
+    ...(outline.leftOut ? [leftOutOfRecordColumn()] : []),
     ...antennaColumns(),
     ...channelIds(outline).flatMap((id) => channelColumns(id, outline)),
   ];

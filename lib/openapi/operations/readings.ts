@@ -1,9 +1,10 @@
 import { z } from "zod";
 import type { Method, Operation, OperationReply } from "@/lib/openapi/operation";
+import { CleanedQuery } from "@/lib/schemas/cleaning";
 import { CoverageAreas } from "@/lib/schemas/coverage";
 import { ExportQuery } from "@/lib/schemas/export";
 import { ListQuery } from "@/lib/schemas/listing";
-import { ChannelQuery, PlaceQuery, SwathsQuery, ZonesQuery } from "@/lib/schemas/log-queries";
+import { CleanedChannelQuery, PlaceQuery, SwathsQuery, ZonesQuery } from "@/lib/schemas/log-queries";
 import { SwathCollectionBody, ZoneCollectionBody } from "@/lib/schemas/log-shapes";
 import {
   CoverageBody,
@@ -19,7 +20,11 @@ import {
 const tag = "Readings";
 
 export const TileQuery = z.object({
-  v: z.string().optional().describe("The log's version: such an address may be cached for good"),
+  v: z
+    .string()
+    .optional()
+    .describe("Version and revision of the log, such as 2.1 (see tiles.json): such an address may be cached for good"),
+  cleaned: CleanedQuery.shape.cleaned,
   breaks: z.string().optional().describe("Rising class edges, for a coloured picture instead of values"),
   ramp: z.string().optional().describe("The colours of the classes"),
 });
@@ -62,7 +67,7 @@ export const readingOperations: Operation[] = [
     summary: "Readings of one pass",
     description:
       "JSON, or packed little-endian Float32, row after row of each record, by `Accept: application/octet-stream`.",
-    query: ChannelQuery,
+    query: CleanedChannelQuery,
     replies: [{ status: 200, description: "Readings", schema: PassReadings }],
     errors: ["conflict", "not_acceptable"],
   },
@@ -72,7 +77,7 @@ export const readingOperations: Operation[] = [
     tag,
     permission: "logs.read",
     summary: "A channel over the whole log, thinned for a first look",
-    query: ChannelQuery,
+    query: CleanedChannelQuery,
     replies: [{ status: 200, description: "The overview", schema: LogOverview }],
     errors: ["conflict"],
   },
@@ -82,7 +87,7 @@ export const readingOperations: Operation[] = [
     tag,
     permission: "logs.read",
     summary: "Statistics of every row, weighted by distance",
-    query: ChannelQuery,
+    query: CleanedChannelQuery,
     replies: [{ status: 200, description: "One item a row", schema: RowStatisticsBody }],
     errors: ["conflict"],
   },
@@ -117,6 +122,7 @@ export const readingOperations: Operation[] = [
     tag,
     permission: "logs.read",
     summary: "What the pass amounts to, in plain words with numbers",
+    query: CleanedQuery,
     replies: [{ status: 200, description: "The verdict and its findings", schema: VerdictBody }],
     errors: ["conflict"],
   },
@@ -158,6 +164,7 @@ export const readingOperations: Operation[] = [
     tag,
     permission: "logs.read",
     summary: "TileJSON 3 with the numbers that turn colours into values",
+    query: CleanedQuery,
     replies: [{ status: 200, description: "TileJSON", schema: TileJson }],
     errors: ["conflict"],
   },
@@ -190,6 +197,4 @@ export const readingOperations: Operation[] = [
     replies: [{ status: 200, description: "The file", contentType: "text/csv" }],
     errors: ["conflict", "too_many_requests"],
   },
-  notBuilt("GET", "cleaning", "Cleaning rules with their counts"),
-  notBuilt("POST", "cleaning", "Change the cleaning rules"),
 ];

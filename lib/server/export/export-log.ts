@@ -4,6 +4,7 @@ import { stat } from "node:fs/promises";
 import { withOrganisation } from "@/db/client";
 import { recordAudit } from "@/db/queries/audit";
 import type { LogRow } from "@/db/queries/logs";
+import { adjustPart, type KnownAdjustments } from "@/lib/adjustments/adjust-part";
 import { describeExport, type ExportAbout } from "@/lib/export/about";
 import { nameExport } from "@/lib/export/name-export";
 import type { ExportBatch, ExportTable, LogPart } from "@/lib/export/export-table";
@@ -15,6 +16,7 @@ import type { ExportQuery } from "@/lib/schemas/export";
 import type { LogColumns } from "@/lib/schemas/logs";
 import type { Scope } from "@/lib/scope";
 import type { Container } from "@/lib/server/create-container";
+import { loadKnownAdjustments } from "@/lib/server/adjustments/load-adjusted-log";
 import { arrowChunks } from "@/lib/server/export/arrow-chunks";
 import { toByteStream } from "@/lib/server/export/byte-stream";
 import { makeInFolder } from "@/lib/server/export/export-folder";
@@ -60,17 +62,18 @@ export async function exportLog(
   scope: Scope,
   { logId, query }: { logId: string; query: ExportQuery },
 ): Promise<ExportFile> {
-  const log = await getReadLog(scope, logId);
+  const log = await getReadLog(scope, { logId, cleaned: query.cleaned });
   const frame = await loadLogFrame(scope, log, channelsOfExport(query));
-  const outline = outlineOfFrame(frame);
+  const adjustments = query.level === "swaths" ? null : await loadKnownAdjustments(container, log);
+  const outline = { ...outlineOfFrame(frame), ...(adjustments?.leftOut ? { leftOut: adjustments.leftOut } : {}) };
   const source = chooseTable(outline, query);
   const madeOn = container.clock.now();
   const recipe = await withOrganisation(scope, (tx) => findRecipeOfLog(tx, scope, log));
   const job: Job = {
     query,
     table: source.table,
-    batches: batchesOf(source, readLogParts(scope, log, frame)),
-    about: aboutLog({ log, outline, source, query, madeOn, recipe }),
+    batches: batchesOf(source, readLogParts(scope, log, frame), adjustments),
+    about: aboutLog({ log, outline, adjustments, source, query, madeOn, recipe }),
     madeOn,
     dataDir: container.env.DATA_DIR,
     name: nameExport(log.name, query.level),
@@ -78,7 +81,16 @@ export async function exportLog(
   };
   const made = await makeFile(job);
   const { format, level, shape, channel } = query;
-  const detail = { name: log.name, version: log.version, format, level, shape, ...(channel ? { channel } : {}) };
+  const revision = adjustments ? { revision: log.adjustmentRevision } : {};
+  const detail = {
+    name: log.name,
+    version: log.version,
+    ...revision,
+    format,
+    level,
+    shape,
+    ...(channel ? { channel } : {}),
+  };
   try {
     await withOrganisation(scope, (tx) => recordAudit(tx, scope, { action: "log.export", subject: logId, detail }));
   } catch (error) {
@@ -92,19 +104,24 @@ export async function exportLog(
 const CELL_BYTES = 26;
 const ZIP_LIMIT = 3e9;
 
-async function* batchesOf(source: TableSource, parts: AsyncGenerator<LogPart>): AsyncGenerator<ExportBatch> {
-  for await (const part of parts) yield* source.batches(part);
+async function* batchesOf(
+  source: TableSource,
+  parts: AsyncGenerator<LogPart>,
+  adjustments: KnownAdjustments | null,
+): AsyncGenerator<ExportBatch> {
+  for await (const part of parts) yield* source.batches(adjustments ? adjustPart(part, adjustments) : part);
 }
 
 function aboutLog(input: {
   log: LogRow;
   outline: PlacedLog;
+  adjustments: KnownAdjustments | null;
   source: TableSource;
   query: ExportQuery;
   madeOn: Date;
   recipe: LogColumns["recipe"];
 }): ExportAbout {
-  const { log, outline, source, query, madeOn, recipe } = input;
+  const { log, outline, source, query, madeOn, recipe, adjustments } = input;
   const { level, shape, channel, breaks, minLengthM } = query;
   const { readings } = source;
   const names = query.format === "shapefile" ? "shortName" : "name";
@@ -124,6 +141,11 @@ function aboutLog(input: {
     source: { fileName: log.fileName, bytes: log.fileBytes, sha256: log.sha256 },
     recipe: log.mapping && { ...log.mapping, name: recipe?.name ?? null, version: recipe?.version ?? null },
     notes: log.notes,
+    adjustments: adjustments && {
+      revision: log.adjustmentRevision,
+      delaysS: adjustments.delaysS,
+      cleaning: adjustments.cleaning,
+    },
     choice: level === "zones" ? { channel, breaks, minLengthM: minLengthM ?? null } : null,
     readAgain: readings ? readAgainMapping({ table: readings, shape, channels: outline.log.channels, names }) : null,
   });

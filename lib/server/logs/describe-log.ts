@@ -33,6 +33,7 @@ export function describeLog(row: LogRow, scope: Scope): Log {
     fileBytes: row.fileBytes,
     sha256: row.sha256,
     version: row.version,
+    revision: row.adjustmentRevision,
     createdAt: row.createdAt.toISOString(),
     removable: mayRemove(row, scope),
   };

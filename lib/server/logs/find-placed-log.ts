@@ -5,38 +5,43 @@ import { resolveChannelOrReason, type ResolvedChannel } from "@/lib/channels/res
 import { AppError } from "@/lib/errors";
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import type { Scope } from "@/lib/scope";
+import { loadAdjustedLog, stateKey, type LogState } from "@/lib/server/adjustments/load-adjusted-log";
+import type { Container } from "@/lib/server/create-container";
 import { cachedForLog } from "@/lib/server/logs/log-cache";
-import { loadPlacedLog } from "@/lib/server/logs/load-placed-log";
+
+/** Which log, and whether with its adjustments (cleaning rules, delays) or as it was read. */
+export interface LogChoice {
+  logId: string;
+  /** True where left out. */
+  cleaned?: boolean;
+}
 
 /** A log that the caller may see and that has been read at least once. @throws AppError `not_found`, `conflict` */
-export async function getReadLog(scope: Scope, logId: string): Promise<LogRow> {
+export async function getReadLog(scope: Scope, { logId, cleaned = true }: LogChoice): Promise<LogRow> {
   const log = await withOrganisation(scope, (tx) => getLogOrThrow(tx, scope, logId));
-  if (log.version > 0) return log;
+  if (log.version > 0) return cleaned ? log : { ...log, adjustmentRevision: 0 };
   const reason = log.error ? ` ${log.error.message}` : "";
   throw new AppError("conflict", `This log has not been read yet.${reason}`, { detailCode: "log_not_ready" });
 }
 
 /** The same, on the ground, with the readings that the channel needs. */
 export async function findPlacedLog(
+  container: Container,
   scope: Scope,
-  logId: string,
-  channel: string | "all" | null,
+  input: LogChoice & { channel: string | "all" | null },
 ): Promise<{ log: LogRow; placed: PlacedLog }> {
-  const log = await getReadLog(scope, logId);
-  return { log, placed: await loadPlacedLog(log, channel) };
+  const log = await getReadLog(scope, input);
+  return { log, placed: await loadAdjustedLog(container, log, input.channel) };
 }
 
 /** A channel, logged or derived, of a log that was found. @throws AppError `unprocessable` where the log cannot give it */
-export async function loadChannel(
-  log: Pick<LogRow, "organisationId" | "id" | "version">,
-  channelId: string,
-): Promise<ResolvedChannel> {
-  return cachedForLog(`${log.id}:${log.version}:resolved:${channelId}`, async () => {
-    const resolved = resolveChannelOrReason(await loadPlacedLog(log, channelId), channelId);
+export async function loadChannel(container: Container, log: LogState, channelId: string): Promise<ResolvedChannel> {
+  return cachedForLog(`${stateKey(log)}:resolved:${channelId}`, async () => {
+    const resolved = resolveChannelOrReason(await loadAdjustedLog(container, log, channelId), channelId);
     if (!resolved.ok) {
       throw new AppError("unprocessable", resolved.error, { detailCode: "channel_not_available" });
     }
-    const isLogged = !/^(resistance|rowSpeed|deviation:.*)$/.test(channelId);
+    const isLogged = !/^(resistance|rowSpeed|flags|deviation:.*)$/.test(channelId);
     return { value: resolved.value, bytes: isLogged ? 1 : resolved.value.values.byteLength };
   });
 }

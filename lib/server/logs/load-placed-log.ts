@@ -10,7 +10,7 @@ import type { PlacedLog } from "@/lib/logs/placed-log";
 import { cachedForLog } from "@/lib/server/logs/log-cache";
 import { PlacedBody } from "@/lib/server/logs/placed-body";
 
-type LogVersion = Pick<LogRow, "organisationId" | "id" | "version">;
+export type LogVersion = Pick<LogRow, "organisationId" | "id" | "version">;
 
 /** A placed log whose readings are not loaded yet, and what channels there are. */
 interface LoadedBase {
@@ -19,7 +19,7 @@ interface LoadedBase {
 }
 
 /**
- * A log as it was placed, with the readings that `channel` needs (all of them for `"all"`, none for null). Both parts are
+ * A log as it was placed (without its adjustments), with the readings that `channel` needs (all of them for `"all"`, none for null). Both parts are
  * cached by version. The caller has found `log` under its own scope. @throws AppError `conflict` before the first version
  */
 export async function loadPlacedLog(log: LogVersion, channel: string | "all" | null): Promise<PlacedLog> {
@@ -39,7 +39,7 @@ export async function loadPlacedLog(log: LogVersion, channel: string | "all" | n
 
 /** The logged channels that a channel, logged or derived, is made from. */
 export function loggedChannels(channel: string | null): string[] {
-  if (channel === null || channel === "rowSpeed") return [];
+  if (channel === null || channel === "rowSpeed" || channel === "flags") return [];
   if (channel === "resistance") return ["downforce", "margin"];
   if (channel.startsWith("deviation:")) return loggedChannels(channel.slice("deviation:".length));
   return [channel];
@@ -102,7 +102,8 @@ async function loadReadings(
 ): Promise<{ value: LogChannel; bytes: number }> {
   const scope = { organisationId: log.organisationId };
   const runs = await readStoredRuns(scope, { logId: log.id, version: log.version, channels: [channel.id] });
-  const values = new Float32Array(records * channel.rows).fill(NaN);
+  // Shared with the thread that works out what cleaning rules take out, so that nothing is copied to it.
+  const values = new Float32Array(new SharedArrayBuffer(records * channel.rows * 4)).fill(NaN);
   const bytes = new Uint8Array(values.buffer);
   // Both ends are little-endian, as every machine this runs on.
   for (const run of runs) bytes.set(run.values, run.firstSeq * channel.rows * 4);

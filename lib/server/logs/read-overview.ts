@@ -1,8 +1,9 @@
 import "server-only";
 import type { LogOverview } from "@/lib/schemas/logs";
 import type { Scope } from "@/lib/scope";
+import { stateKey } from "@/lib/server/adjustments/load-adjusted-log";
 import type { Container } from "@/lib/server/create-container";
-import { findPlacedLog, loadChannel } from "@/lib/server/logs/find-placed-log";
+import { findPlacedLog, loadChannel, type LogChoice } from "@/lib/server/logs/find-placed-log";
 import { cachedForLog } from "@/lib/server/logs/log-cache";
 import { summariseLog } from "@/lib/tiles/summarise-log";
 import { weighValues } from "@/lib/tiles/weigh-values";
@@ -12,13 +13,13 @@ const COLUMNS = 1200;
 
 /** One channel of a whole log at a glance. @throws AppError `not_found`, `conflict`, `unprocessable` */
 export async function readOverview(
-  _container: Container,
+  container: Container,
   scope: Scope,
-  input: { logId: string; channel: string },
+  input: LogChoice & { channel: string },
 ): Promise<LogOverview> {
-  const { log, placed } = await findPlacedLog(scope, input.logId, null);
-  return cachedForLog(`${log.id}:${log.version}:overview:${input.channel}`, async () => {
-    const channel = await loadChannel(log, input.channel);
+  const { log, placed } = await findPlacedLog(container, scope, { ...input, channel: null });
+  return cachedForLog(`${stateKey(log)}:overview:${input.channel}`, async () => {
+    const channel = await loadChannel(container, log, input.channel);
     const { values, ...summary } = summariseLog(placed, channel, COLUMNS);
     const value: LogOverview = {
       ...summary,

@@ -9,6 +9,7 @@ import { findPlacedLog, loadChannel } from "@/lib/server/logs/find-placed-log";
 
 interface PassInput {
   logId: string;
+  cleaned?: boolean;
   pass: number;
   channel: string;
 }
@@ -19,11 +20,11 @@ interface FoundPass {
   channel: ResolvedChannel;
 }
 
-async function findPass(scope: Scope, input: PassInput): Promise<FoundPass> {
-  const { log, placed } = await findPlacedLog(scope, input.logId, null);
+async function findPass(container: Container, scope: Scope, input: PassInput): Promise<FoundPass> {
+  const { log, placed } = await findPlacedLog(container, scope, { ...input, channel: null });
   const pass = placed.passes.find((one) => one.pass === input.pass);
   if (!pass) throw new AppError("not_found", `This log has no pass ${input.pass}.`);
-  return { placed, pass, channel: await loadChannel(log, input.channel) };
+  return { placed, pass, channel: await loadChannel(container, log, input.channel) };
 }
 
 const orNull = (value: number) => (Number.isFinite(value) ? value : null);
@@ -59,8 +60,8 @@ function positions(placed: PlacedLog, { first, records }: Pass): [number, number
 }
 
 /** All readings of a pass in one channel, with where and how the implement stood at each record. */
-export async function readPass(_container: Container, scope: Scope, input: PassInput): Promise<PassReadings> {
-  const { placed, pass, channel } = await findPass(scope, input);
+export async function readPass(container: Container, scope: Scope, input: PassInput): Promise<PassReadings> {
+  const { placed, pass, channel } = await findPass(container, scope, input);
   const { geometry, log } = placed;
   const started = log.timeMs.find((time) => Number.isFinite(time)) ?? NaN;
   return {
@@ -87,11 +88,11 @@ export async function readPass(_container: Container, scope: Scope, input: PassI
 
 /** The same readings packed: little-endian Float32, record by record, row 1 first; NaN where nothing was logged. */
 export async function readPassPacked(
-  _container: Container,
+  container: Container,
   scope: Scope,
   input: PassInput,
 ): Promise<{ bytes: Uint8Array<ArrayBuffer>; records: number; rows: number; unit: string }> {
-  const { pass, channel } = await findPass(scope, input);
+  const { pass, channel } = await findPass(container, scope, input);
   const run = channel.values.slice(pass.first * channel.rows, (pass.first + pass.records) * channel.rows);
   return { bytes: new Uint8Array(run.buffer), records: pass.records, rows: channel.rows, unit: channel.unit };
 }

@@ -1,11 +1,13 @@
 import "server-only";
 import type { ResolvedChannel } from "@/lib/channels/resolve-channel";
+import { reasonsAt } from "@/lib/cleaning/reasons-at";
 import { flagCodes } from "@/lib/cleaning/flags";
 import { AppError } from "@/lib/errors";
 import type { ReadingAt } from "@/lib/schemas/logs";
 import type { Scope } from "@/lib/scope";
+import { loadLeftOut } from "@/lib/server/adjustments/load-adjusted-log";
 import type { Container } from "@/lib/server/create-container";
-import { findPlacedLog, loadChannel } from "@/lib/server/logs/find-placed-log";
+import { findPlacedLog, loadChannel, type LogChoice } from "@/lib/server/logs/find-placed-log";
 import { loadTileIndex } from "@/lib/server/tiles/load-tile-index";
 import { locateReading } from "@/lib/tiles/locate-reading";
 import { buildSwaths, type SwathCollection } from "@/lib/zones/swaths";
@@ -24,15 +26,15 @@ function valuesAt(channels: readonly ResolvedChannel[], record: number, row: num
 
 /** The reading under a place. @throws AppError `not_found` where no row went */
 export async function readAt(
-  _container: Container,
+  container: Container,
   scope: Scope,
-  input: { logId: string; lon: number; lat: number },
+  input: LogChoice & { lon: number; lat: number },
 ): Promise<ReadingAt> {
-  const { log, placed } = await findPlacedLog(scope, input.logId, null);
+  const { log, placed } = await findPlacedLog(container, scope, { ...input, channel: null });
   const found = locateReading(await loadTileIndex(log), input.lon, input.lat);
   if (!found) throw new AppError("not_found", "No row of this log went over that place.", { detailCode: "no_reading" });
   const { record, row } = found;
-  const channels = await Promise.all(log.channels.map(({ id }) => loadChannel(log, id)));
+  const channels = await Promise.all(log.channels.map(({ id }) => loadChannel(container, log, id)));
   const timeMs = placed.log.timeMs[record]!;
   return {
     pass: placed.passOf[record]!,
@@ -43,26 +45,27 @@ export async function readAt(
     speedMps: orNull(placed.speedMps[record]),
     values: valuesAt(channels, record, row),
     flags: flagCodes(placed.flags[record]!),
+    leftOut: reasonsAt(await loadLeftOut(container, log), { channels, record, row }),
   };
 }
 
 export type Bbox = [number, number, number, number];
 
 export async function readZones(
-  _container: Container,
+  container: Container,
   scope: Scope,
-  input: { logId: string; channel: string; breaks: number[]; bbox?: Bbox; minLengthM?: number },
+  input: LogChoice & { channel: string; breaks: number[]; bbox?: Bbox; minLengthM?: number },
 ): Promise<ZoneCollection> {
-  const { placed } = await findPlacedLog(scope, input.logId, input.channel);
+  const { placed } = await findPlacedLog(container, scope, input);
   const { breaks, bbox, minLengthM } = input;
   return buildZones(placed, input.channel, { breaks, bbox, minLengthM });
 }
 
 export async function readSwaths(
-  _container: Container,
+  container: Container,
   scope: Scope,
   input: { logId: string; bbox?: Bbox },
 ): Promise<SwathCollection> {
-  const { placed } = await findPlacedLog(scope, input.logId, null);
+  const { placed } = await findPlacedLog(container, scope, { ...input, channel: null });
   return buildSwaths(placed, { bbox: input.bbox });
 }

@@ -1,6 +1,5 @@
 import "server-only";
-import { withOrganisation, type Transaction } from "@/db/client";
-import { findLogResult } from "@/db/queries/log-results";
+import { withOrganisation } from "@/db/client";
 import { findLog, type LogRow } from "@/db/queries/logs";
 import { findOrganisationName } from "@/db/queries/organisations";
 import { findingsForReader } from "@/lib/findings/findings-for-reader";
@@ -10,6 +9,8 @@ import { ShareLayer } from "@/lib/schemas/shares";
 import type { Scope } from "@/lib/scope";
 import { moveToOrigin, type MoveGeometry } from "@/lib/sharing/move-to-origin";
 import { isChannelShared } from "@/lib/sharing/shared-channels";
+import { findAnswer, readAdjustedAnswer } from "@/lib/server/adjustments/read-adjusted-answer";
+import type { Container } from "@/lib/server/create-container";
 import { getFieldOrThrow } from "@/lib/server/fields/get-field-or-throw";
 import type { OpenedShare } from "@/lib/server/shares/open-share";
 
@@ -33,11 +34,6 @@ function describeSharedLog(log: LogRow, { layers, isBlurred }: Shown): SharedVie
   };
 }
 
-async function readResult(tx: Transaction, scope: Scope, log: LogRow | null, kind: string): Promise<unknown> {
-  if (!log || log.version === 0) return null;
-  return findLogResult(tx, scope, { logId: log.id, version: log.version, kind });
-}
-
 function verdictForReader(body: unknown, audience: string, move: MoveGeometry): VerdictBody | null {
   const verdict = VerdictBody.nullable().parse(body);
   if (!verdict) return null;
@@ -53,28 +49,30 @@ function verdictForReader(body: unknown, audience: string, move: MoveGeometry): 
   };
 }
 
-/** Everything the link shows, cut down to its layers, in one transaction of its organisation. */
-export async function readSharedView({ share, scope }: OpenedShare): Promise<SharedView> {
+/** Everything the link shows, cut down to its layers. */
+export async function readSharedView(container: Container, { share, scope }: OpenedShare): Promise<SharedView> {
   const { layers, blurLocation: isBlurred } = share;
   const has = (layer: string) => layers.includes(layer);
-  return withOrganisation(scope, async (tx) => {
-    const field = await getFieldOrThrow(tx, scope, share.fieldId);
-    const log = share.logId ? await findLog(tx, scope, share.logId) : null;
-    const move: MoveGeometry = isBlurred ? moveToOrigin(field.boundary) : (geometry) => geometry;
-    return {
-      audience: share.audience,
-      layers: ShareLayer.array().parse(layers),
-      expiresAt: share.expiresAt.toISOString(),
-      organisationName: await findOrganisationName(tx, scope),
-      fieldName: field.name,
-      blurLocation: isBlurred,
-      boundary: has("boundary") ? move(field.boundary) : null,
-      areaM2: has("boundary") ? field.areaM2 : null,
-      log: log ? describeSharedLog(log, { layers, isBlurred }) : null,
-      verdict: has("verdict")
-        ? verdictForReader(await readResult(tx, scope, log, "verdict"), share.audience, move)
-        : null,
-      coverage: has("coverage") ? CoverageBody.nullable().parse(await readResult(tx, scope, log, "coverage")) : null,
-    };
-  });
+  const { field, log, organisationName } = await withOrganisation(scope, async (tx) => ({
+    field: await getFieldOrThrow(tx, scope, share.fieldId),
+    log: share.logId ? await findLog(tx, scope, share.logId) : null,
+    organisationName: await findOrganisationName(tx, scope),
+  }));
+  const read = log && log.version > 0 ? log : null;
+  const verdict = read && has("verdict") ? await readAdjustedAnswer(container, read, "verdict") : null;
+  const coverage = read && has("coverage") ? await findAnswer({ ...read, adjustmentRevision: 0 }, "coverage") : null;
+  const move: MoveGeometry = isBlurred ? moveToOrigin(field.boundary) : (geometry) => geometry;
+  return {
+    audience: share.audience,
+    layers: ShareLayer.array().parse(layers),
+    expiresAt: share.expiresAt.toISOString(),
+    organisationName,
+    fieldName: field.name,
+    blurLocation: isBlurred,
+    boundary: has("boundary") ? move(field.boundary) : null,
+    areaM2: has("boundary") ? field.areaM2 : null,
+    log: log ? describeSharedLog(log, { layers, isBlurred }) : null,
+    verdict: verdictForReader(verdict, share.audience, move),
+    coverage: CoverageBody.nullable().parse(coverage),
+  };
 }

@@ -1,8 +1,9 @@
 import "server-only";
 import type { TileJson } from "@/lib/schemas/logs";
 import type { Scope } from "@/lib/scope";
+import { stateText } from "@/lib/server/adjustments/load-adjusted-log";
 import type { Container } from "@/lib/server/create-container";
-import { findPlacedLog, loadChannel } from "@/lib/server/logs/find-placed-log";
+import { findPlacedLog, loadChannel, type LogChoice } from "@/lib/server/logs/find-placed-log";
 import { loadTileIndex } from "@/lib/server/tiles/load-tile-index";
 import { TILE_SIZE } from "@/lib/server/tiles/read-tile";
 import { tileIndexBounds } from "@/lib/tiles/build-tile-index";
@@ -12,17 +13,18 @@ import { valueScale } from "@/lib/tiles/value-scale";
 export async function describeTiles(
   container: Container,
   scope: Scope,
-  input: { logId: string; channel: string; origin?: string },
+  input: LogChoice & { channel: string; origin?: string },
 ): Promise<TileJson> {
-  const { log, placed } = await findPlacedLog(scope, input.logId, null);
-  const channel = await loadChannel(log, input.channel);
+  const { log, placed } = await findPlacedLog(container, scope, { ...input, channel: null });
+  const channel = await loadChannel(container, log, input.channel);
   const scale = valueScale(channel);
   const bounds = tileIndexBounds(await loadTileIndex(log)) ?? [-180, -85, 180, 85];
+  const asLogged = input.cleaned === false ? "&cleaned=false" : "";
   const path = `/api/v1/logs/${log.id}/tiles/${encodeURIComponent(input.channel)}`;
   return {
     tilejson: "3.0.0",
     name: `${log.name}: ${input.channel}`,
-    tiles: [`${input.origin ?? container.env.baseUrl}${path}/{z}/{x}/{y}.png?v=${log.version}`],
+    tiles: [`${input.origin ?? container.env.baseUrl}${path}/{z}/{x}/{y}.png?v=${stateText(log)}${asLogged}`],
     minzoom: 8,
     maxzoom: 22,
     bounds: [...bounds],

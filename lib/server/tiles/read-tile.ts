@@ -5,6 +5,7 @@ import { AppError } from "@/lib/errors";
 import { areClassEdges } from "@/lib/legend/class-edges";
 import { isRampName, RAMP_NAMES, rampOf } from "@/lib/legend/ramps";
 import type { Scope } from "@/lib/scope";
+import { stateKey, stateText } from "@/lib/server/adjustments/load-adjusted-log";
 import type { Container } from "@/lib/server/create-container";
 import { recallAccess } from "@/lib/server/access/recent-access";
 import { getReadLog, loadChannel } from "@/lib/server/logs/find-placed-log";
@@ -24,8 +25,10 @@ export interface TileInput extends TileAddress {
   channel: string;
   /** Null for a value tile, else class edges of a picture. */
   classes: Breaks;
-  /** The version that the caller knows of; null where none was named. */
-  version: number | null;
+  /** The version and revision that the caller knows of, as `stateText` names them; null where none was named. */
+  version: string | null;
+  /** With the log's adjustments; true where left out. */
+  cleaned?: boolean;
 }
 
 /** `a,b,c` as rising class edges. @throws AppError `unprocessable` */
@@ -48,30 +51,30 @@ function checkTile(input: TileInput): void {
 
 /** One tile as PNG, cached by the log's version. `version` names the tile's content for good. */
 export async function readTile(
-  _container: Container,
+  container: Container,
   scope: Scope,
   input: TileInput,
-): Promise<{ png: Uint8Array<ArrayBuffer>; version: number }> {
+): Promise<{ png: Uint8Array<ArrayBuffer>; version: string }> {
   checkTile(input);
   const log = await recallLog(scope, input);
   const { z, x, y, classes } = input;
   const look = classes ? `${classes.breaks.join(",")}/${classes.ramp ?? ""}` : "values";
-  const key = `${log.id}:${log.version}:tile:${input.channel}/${z}/${x}/${y}/${look}`;
+  const key = `${stateKey(log)}:tile:${input.channel}/${z}/${x}/${y}/${look}`;
   const png = await cachedForLog(key, async () => {
-    const channel = await loadChannel(log, input.channel);
+    const channel = await loadChannel(container, log, input.channel);
     const index = await loadTileIndex(log);
     const pixels = rasteriseTile(index, channel, { z, x, y, size: TILE_SIZE });
     const value = await drawPng(pixels, input, channel);
     return { value, bytes: value.byteLength };
   });
-  return { png, version: log.version };
+  return { png, version: stateText(log) };
 }
 
 /** The log, looked up once in two seconds for all tiles of the version that a map shows; afresh for any other. */
-async function recallLog(scope: Scope, { logId, version }: TileInput): Promise<LogRow> {
-  const key = JSON.stringify(["log", scope.organisationId, scope.userId, scope.role, logId]);
-  const serves = (log: LogRow) => log.version === version;
-  return recallAccess(key, () => getReadLog(scope, logId), { serves });
+async function recallLog(scope: Scope, { logId, version, cleaned = true }: TileInput): Promise<LogRow> {
+  const key = JSON.stringify(["log", scope.organisationId, scope.userId, scope.role, logId, cleaned]);
+  const serves = (log: LogRow) => stateText(log) === version;
+  return recallAccess(key, () => getReadLog(scope, { logId, cleaned }), { serves });
 }
 
 async function drawPng(

@@ -1,5 +1,6 @@
 import "server-only";
 import { AppError } from "@/lib/errors";
+import { CleanedQuery } from "@/lib/schemas/cleaning";
 import { parseBreaks, type TileInput } from "@/lib/server/tiles/read-tile";
 
 interface TileParams {
@@ -11,6 +12,14 @@ interface TileParams {
   y: string;
 }
 
+/** `?cleaned=` of a tile. @throws AppError `unprocessable` */
+function parseCleaned(url: URL): { cleaned: boolean } {
+  const parsed = CleanedQuery.safeParse({ cleaned: url.searchParams.get("cleaned") ?? undefined });
+  if (parsed.success) return parsed.data;
+  const message = "is true or false";
+  throw new AppError("unprocessable", `cleaned: ${message}.`, { places: [{ path: "cleaned", message }] });
+}
+
 /** A tile's address as numbers. @throws AppError `not_found`, `unprocessable` */
 export function parseTileInput({ logId, channel, z, x, y }: TileParams, url: URL): TileInput {
   const row = /^(\d{1,8})\.png$/.exec(y)?.[1];
@@ -19,13 +28,17 @@ export function parseTileInput({ logId, channel, z, x, y }: TileParams, url: URL
   }
   const breaks = parseBreaks(url.searchParams.get("breaks"));
   const classes = breaks ? { breaks, ramp: url.searchParams.get("ramp") } : null;
-  const version = Number(url.searchParams.get("v") ?? NaN) || null;
-  return { logId, channel: decodeURIComponent(channel), z: Number(z), x: Number(x), y: Number(row), classes, version };
+  const { cleaned } = parseCleaned(url);
+  const place = { z: Number(z), x: Number(x), y: Number(row) };
+  const given = url.searchParams.get("v");
+  // A version alone names the log as it was read.
+  const version = given && /^\d+$/.test(given) ? `${given}.0` : given;
+  return { logId, channel: decodeURIComponent(channel), ...place, classes, version, cleaned };
 }
 
 /** The tile, or 304 where the caller has it. Under `?v=` of this very version it may be kept for good. */
 export function tileResponse(
-  tile: { png: Uint8Array<ArrayBuffer>; version: number },
+  tile: { png: Uint8Array<ArrayBuffer>; version: string },
   asked: { input: TileInput; request: Request; url: URL },
 ): Response {
   const { z, x, y, channel, classes } = asked.input;

@@ -47,6 +47,7 @@ export function aboutOf(described: Described): ExportAbout {
     log: { id: "log_one", name: "East quarter", kind: "seeding", version: 1, startedAt: null, endedAt: null },
     source: { fileName: "east.csv", bytes: 1000, sha256: "ab".repeat(32) },
     recipe: null,
+    adjustments: null,
     notes: [],
     choice: null,
   });

@@ -8,7 +8,7 @@ import { readSharedView } from "@/lib/server/shares/read-shared-view";
 export const GET = withPublic<"token">(async ({ container, params, request }) => {
   const opened = await openSharedRequest(request, params.token);
   await countOpening(container, opened.share);
-  return reply(SharedView, await readSharedView(opened));
+  return reply(SharedView, await readSharedView(container, opened));
 });
 
 export {

@@ -1,12 +1,16 @@
+import { parseBody } from "@/app/_server/parse-body";
+import { reply } from "@/app/_server/reply";
 import { withScope } from "@/app/_server/with-scope";
-import { AppError } from "@/lib/errors";
-import { getLog } from "@/lib/server/logs/read-logs";
+import { Cleaning, CleaningChange } from "@/lib/schemas/cleaning";
+import { changeCleaning, readCleaning } from "@/lib/server/adjustments/read-cleaning";
 
-const refuse = withScope<"logId">("logs.read", async ({ container, scope, params }) => {
-  await getLog(container, scope, params.logId);
-  throw new AppError("not_implemented", "Cleaning rules of a log are not built yet.");
+export const GET = withScope<"logId">("logs.read", async ({ container, scope, params }) =>
+  reply(Cleaning, await readCleaning(container, scope, params.logId)),
+);
+
+export const POST = withScope<"logId">("logs.clean", async ({ container, scope, params, request }) => {
+  const body = await parseBody(CleaningChange, request);
+  return reply(Cleaning, await changeCleaning(container, scope, { logId: params.logId, ...body }));
 });
-
-export { refuse as GET, refuse as POST };
 
 export { refuseMethod as PUT, refuseMethod as PATCH, refuseMethod as DELETE } from "@/app/_server/refuse-method";

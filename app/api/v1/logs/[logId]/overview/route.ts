@@ -1,13 +1,13 @@
 import { parseQuery } from "@/app/_server/parse-body";
 import { reply } from "@/app/_server/reply";
 import { withScope } from "@/app/_server/with-scope";
-import { ChannelQuery } from "@/lib/schemas/log-queries";
+import { CleanedChannelQuery } from "@/lib/schemas/log-queries";
 import { LogOverview } from "@/lib/schemas/logs";
 import { readOverview } from "@/lib/server/logs/read-overview";
 
 export const GET = withScope<"logId">("logs.read", async ({ container, scope, params, url }) => {
-  const { channel } = parseQuery(ChannelQuery, url);
-  return reply(LogOverview, await readOverview(container, scope, { logId: params.logId, channel }));
+  const query = parseQuery(CleanedChannelQuery, url);
+  return reply(LogOverview, await readOverview(container, scope, { logId: params.logId, ...query }));
 });
 
 export {
