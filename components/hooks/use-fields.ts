@@ -2,20 +2,19 @@
 
 import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import { queryKeys } from "@/components/hooks/query-keys";
-import {
-  changeField,
-  createField,
-  deleteField,
-  getField,
-  listFields,
-  putBoundary,
-  putBoundaryFile,
-} from "@/lib/api/client";
+import { usePages } from "@/components/hooks/use-pages";
+import { changeField, createField, deleteField, getField, putBoundary, putBoundaryFile } from "@/lib/api/client";
+import { fieldPage, listAll } from "@/lib/api/list-pages";
 import type { FieldInput, FieldPatch } from "@/lib/schemas/fields";
 
-/** All fields the person may see. */
+/** All fields the person may see, for choosing one. */
 export function useFields() {
-  return useQuery({ queryKey: queryKeys.fields, queryFn: listFields });
+  return useQuery({ queryKey: queryKeys.fields, queryFn: () => listAll(fieldPage) });
+}
+
+/** The same a page at a time, for looking at them. */
+export function useFieldPages() {
+  return usePages({ queryKey: queryKeys.fields, load: fieldPage });
 }
 
 export function useField(fieldId: string | undefined) {
@@ -68,6 +67,11 @@ export function useDeleteField() {
   const client = useQueryClient();
   return useMutation({
     mutationFn: (fieldId: string) => deleteField(fieldId, true),
-    onSuccess: () => client.invalidateQueries({ queryKey: queryKeys.fields, exact: true }),
+    // Not what is asked under the deleted field itself: that would only be refused.
+    onSuccess: () =>
+      Promise.all([
+        client.invalidateQueries({ queryKey: queryKeys.fields, exact: true }),
+        client.invalidateQueries({ queryKey: [...queryKeys.fields, "pages"], exact: true }),
+      ]),
   });
 }

@@ -2,6 +2,7 @@
 
 import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import { queryKeys } from "@/components/hooks/query-keys";
+import { usePages } from "@/components/hooks/use-pages";
 import {
   cancelLog,
   changeLog,
@@ -9,20 +10,31 @@ import {
   getColumns,
   getLog,
   getVerdict,
-  listLogs,
   putMapping,
   retryLog,
 } from "@/lib/api/client";
+import { listAll, logPage } from "@/lib/api/list-pages";
+import type { Log } from "@/lib/schemas/logs";
 import type { LogMapping } from "@/lib/ingest/mapping";
 import { isWorking } from "@/components/upload/log-state";
 
-/** The logs of one field; asked again every two seconds while any is being worked on. */
-export function useLogs(fieldId: string, limit = 500) {
+/** While a log is being worked on, its list is asked for again every two seconds. */
+function askAgain(logs: readonly Log[]): number | false {
+  return logs.some((log) => isWorking(log.status)) ? 2_000 : false;
+}
+
+/** All logs of one field, for choosing one. */
+export function useLogs(fieldId: string) {
   return useQuery({
-    queryKey: [...queryKeys.logs(fieldId), limit],
-    queryFn: () => listLogs(fieldId, limit),
-    refetchInterval: (query) => (query.state.data?.items.some((log) => isWorking(log.status)) ? 2_000 : false),
+    queryKey: queryKeys.logs(fieldId),
+    queryFn: () => listAll(logPage(fieldId)),
+    refetchInterval: (query) => askAgain(query.state.data?.items ?? []),
   });
+}
+
+/** The same a page at a time, for looking at them. */
+export function useLogPages(fieldId: string) {
+  return usePages({ queryKey: queryKeys.logs(fieldId), load: logPage(fieldId), askAgain });
 }
 
 export function useLog(logId: string) {

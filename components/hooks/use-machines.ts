@@ -2,11 +2,18 @@
 
 import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import { queryKeys } from "@/components/hooks/query-keys";
-import { changeMachine, createMachine, deleteMachine, listMachines } from "@/lib/api/client";
+import { usePages } from "@/components/hooks/use-pages";
+import { changeMachine, createMachine, deleteMachine } from "@/lib/api/client";
+import { listAll, machinePage } from "@/lib/api/list-pages";
 import type { Machine } from "@/lib/machines/machine";
 
 export function useMachines(enabled = true) {
-  return useQuery({ queryKey: queryKeys.machines, queryFn: listMachines, enabled });
+  return useQuery({ queryKey: queryKeys.machines, queryFn: () => listAll(machinePage), enabled });
+}
+
+/** The same a page at a time, for looking at them. */
+export function useMachinePages() {
+  return usePages({ queryKey: queryKeys.machines, load: machinePage });
 }
 
 /** The optional values a form has emptied must be taken away, not left as they were. */

@@ -3,20 +3,13 @@
 import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import type { z } from "zod";
 import { queryKeys } from "@/components/hooks/query-keys";
-import {
-  addMember,
-  changeMember,
-  createToken,
-  listAudit,
-  listMembers,
-  listTokens,
-  removeMember,
-  revokeToken,
-} from "@/lib/api/client";
+import { usePages } from "@/components/hooks/use-pages";
+import { addMember, changeMember, createToken, listTokens, removeMember, revokeToken } from "@/lib/api/client";
+import { auditPage, memberPage } from "@/lib/api/list-pages";
 import type { MemberPatch } from "@/lib/schemas/people";
 
-export function useMembers() {
-  return useQuery({ queryKey: queryKeys.members, queryFn: listMembers });
+export function useMemberPages() {
+  return usePages({ queryKey: queryKeys.members, load: memberPage });
 }
 
 export function useMemberActions() {
@@ -33,8 +26,8 @@ export function useMemberActions() {
   };
 }
 
-export function useAudit() {
-  return useQuery({ queryKey: queryKeys.audit, queryFn: listAudit });
+export function useAuditPages() {
+  return usePages({ queryKey: queryKeys.audit, load: auditPage });
 }
 
 export function useTokens() {

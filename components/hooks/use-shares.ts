@@ -1,13 +1,15 @@
 "use client";
 
-import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
+import { useMutation, useQueryClient } from "@tanstack/react-query";
 import type { z } from "zod";
 import { queryKeys } from "@/components/hooks/query-keys";
-import { createShare, listShares, revokeShare } from "@/lib/api/client";
+import { usePages } from "@/components/hooks/use-pages";
+import { createShare, revokeShare } from "@/lib/api/client";
+import { sharePage } from "@/lib/api/list-pages";
 import type { ShareInput } from "@/lib/schemas/shares";
 
-export function useShares(fieldId: string) {
-  return useQuery({ queryKey: queryKeys.shares(fieldId), queryFn: () => listShares(fieldId) });
+export function useSharePages(fieldId: string) {
+  return usePages({ queryKey: queryKeys.shares(fieldId), load: sharePage(fieldId) });
 }
 
 export function useShareActions(fieldId: string) {

@@ -2,7 +2,7 @@
 
 import Link from "next/link";
 import { useMemo } from "react";
-import { useDeleteMachine, useMachines } from "@/components/hooks/use-machines";
+import { useDeleteMachine, useMachinePages } from "@/components/hooks/use-machines";
 import { Button, buttonClass } from "@/components/ui/button";
 import { DataTable, type DataColumn } from "@/components/ui/data-table";
 import { ConfirmDialog } from "@/components/ui/dialog";
@@ -22,7 +22,7 @@ function widthM(machine: MachineReply): number {
 }
 
 export function MachinesPage({ slug, mayWrite }: { slug: string; mayWrite: boolean }) {
-  const machines = useMachines();
+  const machines = useMachinePages();
   const remove = useDeleteMachine();
   const { parts } = useUnits();
   const columns = useMemo<DataColumn<MachineReply>[]>(() => {
@@ -69,13 +69,13 @@ export function MachinesPage({ slug, mayWrite }: { slug: string; mayWrite: boole
     ];
   }, [parts, slug]);
   if (machines.isPending) return <Loading what="the machines" />;
-  if (machines.isError)
+  if (!machines.items)
     return (
       <Notice state="act" urgent>
         {describeFailure(machines.error)}
       </Notice>
     );
-  if (machines.data.items.length === 0) return <NoMachines slug={slug} mayWrite={mayWrite} />;
+  if (machines.items.length === 0) return <NoMachines slug={slug} mayWrite={mayWrite} />;
   return (
     <div className="space-y-3">
       {remove.error ? (
@@ -85,7 +85,8 @@ export function MachinesPage({ slug, mayWrite }: { slug: string; mayWrite: boole
       ) : null}
       <DataTable
         caption="Machines of this organisation"
-        rows={machines.data.items}
+        rows={machines.items}
+        more={machines.more}
         columns={columns}
         rowId={(machine) => machine.id}
         fileName="machines"

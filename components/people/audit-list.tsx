@@ -1,7 +1,7 @@
 "use client";
 
 import { useMemo } from "react";
-import { useAudit } from "@/components/hooks/use-people";
+import { useAuditPages } from "@/components/hooks/use-people";
 import { DataTable, type DataColumn } from "@/components/ui/data-table";
 import { formatMoment } from "@/components/ui/format-date";
 import { Loading } from "@/components/ui/loading";
@@ -39,7 +39,7 @@ export function actionWords(action: string): string {
 
 /** Who changed what, and when. For owners. */
 export function AuditList() {
-  const audit = useAudit();
+  const audit = useAuditPages();
   const columns = useMemo<DataColumn<Entry>[]>(
     () => [
       { id: "at", header: "When", value: (entry) => entry.at, cell: (entry) => formatMoment(entry.at) },
@@ -51,7 +51,7 @@ export function AuditList() {
     [],
   );
   if (audit.isPending) return <Loading what="the record of changes" />;
-  if (audit.isError)
+  if (!audit.items)
     return (
       <Notice state="act" urgent>
         {describeFailure(audit.error)}
@@ -60,7 +60,8 @@ export function AuditList() {
   return (
     <DataTable
       caption="Changes, newest first"
-      rows={audit.data.items}
+      rows={audit.items}
+      more={audit.more}
       columns={columns}
       rowId={(entry) => entry.id}
       fileName="audit"

@@ -2,7 +2,7 @@
 
 import { useMemo, useState } from "react";
 import { useFields } from "@/components/hooks/use-fields";
-import { useMemberActions, useMembers } from "@/components/hooks/use-people";
+import { useMemberActions, useMemberPages } from "@/components/hooks/use-people";
 import { AddPerson } from "@/components/people/add-person";
 import { FieldGrants } from "@/components/people/field-grants";
 import { RoleSelect } from "@/components/people/role-select";
@@ -22,7 +22,7 @@ export interface PeoplePageProps {
 
 /** Who belongs to the organisation, as what, and which fields were given to them. */
 export function PeoplePage({ userId, mayWrite }: PeoplePageProps) {
-  const members = useMembers();
+  const members = useMemberPages();
   const fields = useFields();
   const actions = useMemberActions();
   const [grantsOf, setGrantsOf] = useState<Member | null>(null);
@@ -63,7 +63,7 @@ export function PeoplePage({ userId, mayWrite }: PeoplePageProps) {
     ];
   }, [change, fields.data, mayWrite, userId]);
   if (members.isPending) return <Loading what="the people" />;
-  if (members.isError)
+  if (!members.items)
     return (
       <Notice state="act" urgent>
         {describeFailure(members.error)}
@@ -80,7 +80,8 @@ export function PeoplePage({ userId, mayWrite }: PeoplePageProps) {
       ) : null}
       <DataTable
         caption="People of this organisation"
-        rows={members.data.items}
+        rows={members.items}
+        more={members.more}
         columns={columns}
         rowId={(member) => member.id}
         fileName="people"

@@ -3,7 +3,7 @@
 import { useState } from "react";
 import { useField } from "@/components/hooks/use-fields";
 import { useLogs } from "@/components/hooks/use-logs";
-import { useShareActions, useShares } from "@/components/hooks/use-shares";
+import { useShareActions, useSharePages } from "@/components/hooks/use-shares";
 import { LinkMade } from "@/components/sharing/link-made";
 import { NewShare } from "@/components/sharing/new-share";
 import { ShareTable } from "@/components/sharing/share-table";
@@ -17,13 +17,13 @@ import { describeFailure } from "@/lib/api/api-problem";
 export function ShareChapter({ fieldId }: { fieldId: string }) {
   const field = useField(fieldId);
   const logs = useLogs(fieldId);
-  const shares = useShares(fieldId);
+  const shares = useSharePages(fieldId);
   const actions = useShareActions(fieldId);
   const [making, setMaking] = useState(false);
   const made = actions.create.data;
   if (shares.isPending || logs.isPending || field.isPending) return <Loading what="the links" />;
   const failed = shares.error ?? logs.error ?? field.error;
-  if (failed || !logs.data || !shares.data || !field.data) {
+  if (failed || !logs.data || !shares.items || !field.data) {
     return (
       <Notice state="act" urgent>
         {describeFailure(failed)}
@@ -52,8 +52,8 @@ export function ShareChapter({ fieldId }: { fieldId: string }) {
           {describeFailure(actions.revoke.error)}
         </Notice>
       ) : null}
-      {shares.data.items.length > 0 ? (
-        <ShareTable shares={shares.data.items} onRevoke={(shareId) => actions.revoke.mutate(shareId)} />
+      {shares.items.length > 0 ? (
+        <ShareTable shares={shares.items} more={shares.more} onRevoke={(shareId) => actions.revoke.mutate(shareId)} />
       ) : made || making ? null : (
         <EmptyState title="Nobody has a link yet">
           <p>

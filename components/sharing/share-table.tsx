@@ -1,6 +1,7 @@
 "use client";
 
 import { useMemo } from "react";
+import type { MorePages } from "@/components/hooks/use-pages";
 import { AUDIENCES, describeShareState, LAYER_WORDS } from "@/components/sharing/share-words";
 import { Button } from "@/components/ui/button";
 import { DataTable, type DataColumn } from "@/components/ui/data-table";
@@ -19,8 +20,14 @@ function layerWords(share: Share): string {
     .join(", ");
 }
 
+export interface ShareTableProps {
+  shares: Share[];
+  onRevoke: (shareId: string) => void;
+  more?: MorePages;
+}
+
 /** The links made for a field: who can look, for how long, whether they did. */
-export function ShareTable({ shares, onRevoke }: { shares: Share[]; onRevoke: (shareId: string) => void }) {
+export function ShareTable({ shares, onRevoke, more }: ShareTableProps) {
   const columns = useMemo<DataColumn<Share>[]>(
     () => [
       {
@@ -64,6 +71,7 @@ export function ShareTable({ shares, onRevoke }: { shares: Share[]; onRevoke: (s
       rowId={(share) => share.id}
       fileName="shares"
       initialSort={{ id: "made", desc: true }}
+      more={more}
       actions={(share) =>
         share.state === "open" ? (
           <ConfirmDialog

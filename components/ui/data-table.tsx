@@ -56,6 +56,8 @@ export interface DataTableProps<Row> {
   initialSort?: { id: string; desc: boolean };
   /** The first column stays in sight where the table scrolls sideways. */
   stickyFirst?: boolean;
+  /** The rest of a list that comes a page at a time. */
+  more?: { hasMore: boolean; isLoading: boolean; load: () => void };
 }
 
 /** A table that sorts, filters and leaves as a CSV file. On a phone each row becomes a card of label and value. */
@@ -138,6 +140,21 @@ export function DataTable<Row extends object>(props: DataTableProps<Row>) {
           {filter ? `Nothing here contains “${filter}”.` : (props.nothingWords ?? "Nothing here yet.")}
         </p>
       ) : null}
+      {props.more?.hasMore ? <ShowMore count={rows.length} more={props.more} /> : null}
+    </div>
+  );
+}
+
+/** There is more than was asked for; what finding, sorting and the file go by is said. */
+function ShowMore({ count, more }: { count: number; more: NonNullable<DataTableProps<object>["more"]> }) {
+  return (
+    <div className="flex flex-wrap items-center gap-3">
+      <Button onClick={more.load} disabled={more.isLoading}>
+        {more.isLoading ? "Asking for more…" : "Show more"}
+      </Button>
+      <p className="text-table text-ink-soft" role="status">
+        The first {count} are here. Finding, sorting and the CSV file go by these.
+      </p>
     </div>
   );
 }

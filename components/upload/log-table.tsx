@@ -5,6 +5,7 @@ import { useMemo } from "react";
 import { ExportMenu } from "@/components/export/export-menu";
 import { useLogActions } from "@/components/hooks/use-logs";
 import { useMachines } from "@/components/hooks/use-machines";
+import type { MorePages } from "@/components/hooks/use-pages";
 import { buttonClass } from "@/components/ui/button";
 import { DataTable, type DataColumn } from "@/components/ui/data-table";
 import { formatBytes, formatDay, formatMoment } from "@/components/ui/format-date";
@@ -25,10 +26,11 @@ export interface LogTableProps {
   /** `/org/fields/fld_…`. */
   fieldPath: string;
   role: Role;
+  more?: MorePages;
 }
 
 /** The logs of a field, newest first. */
-export function LogTable({ logs, fieldId, fieldPath, role }: LogTableProps) {
+export function LogTable({ logs, fieldId, fieldPath, role, more }: LogTableProps) {
   const machines = useMachines(can(role, "machines.read"));
   const actions = useLogActions(fieldId);
   const failure = actions.cancel.error ?? actions.retry.error ?? actions.remove.error;
@@ -85,6 +87,7 @@ export function LogTable({ logs, fieldId, fieldPath, role }: LogTableProps) {
         rowId={(log) => log.id}
         fileName="logs"
         initialSort={{ id: "taken", desc: true }}
+        more={more}
         actions={(log) => (
           <>
             <Link href={logHref(log, fieldPath)} className={buttonClass("plain")}>

@@ -1,6 +1,6 @@
 "use client";
 
-import { useLogs } from "@/components/hooks/use-logs";
+import { useLogPages } from "@/components/hooks/use-logs";
 import { EmptyState } from "@/components/ui/empty-state";
 import { Loading } from "@/components/ui/loading";
 import { Notice } from "@/components/ui/notice";
@@ -23,7 +23,7 @@ export function lastSeedingMachine(logs: readonly Log[]): string | null {
 }
 
 export function LogsPage({ fieldId, fieldPath, role, exampleHref }: LogsPageProps) {
-  const logs = useLogs(fieldId);
+  const logs = useLogPages(fieldId);
   return (
     <div className="space-y-8">
       {can(role, "logs.upload") ? (
@@ -31,16 +31,16 @@ export function LogsPage({ fieldId, fieldPath, role, exampleHref }: LogsPageProp
           fieldId={fieldId}
           logsPath={`${fieldPath}/logs`}
           exampleHref={exampleHref}
-          lastMachineId={lastSeedingMachine(logs.data?.items ?? [])}
+          lastMachineId={lastSeedingMachine(logs.items ?? [])}
         />
       ) : null}
       {logs.isPending ? <Loading what="the logs" /> : null}
-      {logs.isError ? (
+      {logs.error ? (
         <Notice state="act" urgent>
           {describeFailure(logs.error)}
         </Notice>
       ) : null}
-      {logs.data && logs.data.items.length === 0 ? (
+      {logs.items?.length === 0 ? (
         <EmptyState title="No log in this field yet">
           <p>
             A log is the file the drill or the combine wrote while it worked: where it was, several times a second, and
@@ -48,8 +48,8 @@ export function LogsPage({ fieldId, fieldPath, role, exampleHref }: LogsPageProp
           </p>
         </EmptyState>
       ) : null}
-      {logs.data && logs.data.items.length > 0 ? (
-        <LogTable logs={logs.data.items} fieldId={fieldId} fieldPath={fieldPath} role={role} />
+      {logs.items && logs.items.length > 0 ? (
+        <LogTable logs={logs.items} more={logs.more} fieldId={fieldId} fieldPath={fieldPath} role={role} />
       ) : null}
     </div>
   );

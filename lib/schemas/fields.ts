@@ -1,6 +1,7 @@
 import { z } from "zod";
 import { Boundary } from "@/lib/schemas/geometry";
 import { Id, Instant, listOf } from "@/lib/schemas/listing";
+import { LogStatus } from "@/lib/schemas/logs";
 import { plainText } from "@/lib/schemas/plain-text";
 
 const shortText = plainText(120);
@@ -16,6 +17,19 @@ export type FieldInput = z.infer<typeof FieldInput>;
 export const FieldPatch = FieldInput.partial();
 export type FieldPatch = z.infer<typeof FieldPatch>;
 
+/** The log that speaks for a field: the newest seeding log that was read, else the newest that was read, else the newest. */
+export const NewestLog = z.object({
+  id: Id,
+  name: z.string(),
+  kind: z.enum(["seeding", "harvest", "other"]),
+  status: LogStatus,
+  /** Its readings lie outside the field's boundary. */
+  isElsewhere: z.boolean(),
+  /** The gravest finding of its verdict; null where there is none, or it is not worked out yet. */
+  severity: z.enum(["ok", "look", "act"]).nullable(),
+});
+export type NewestLog = z.infer<typeof NewestLog>;
+
 export const Field = z.object({
   id: Id,
   name: z.string(),
@@ -26,6 +40,9 @@ export const Field = z.object({
   boundary: Boundary.nullable(),
   logCount: z.number().int(),
   lastLogAt: Instant.nullable(),
+  newestLog: NewestLog.nullable(),
+  /** Logs that wait for a person: not mapped yet, or not readable. */
+  waitingLogs: z.number().int(),
   createdAt: Instant,
   updatedAt: Instant,
 });

@@ -31,6 +31,7 @@ describe("fields", () => {
     // Hand-worked: 0.01° of latitude (110 993.9 m/° at 38.505°) times 0.01° of longitude (87 233.2 m/°), WGS 84 series.
     expect(Number(field.areaM2) / (1109.939 * 872.332)).toBeCloseTo(1, 4);
     expect(field).toMatchObject({ farm: "Larkspur Flats", landowner: null, boundary: SQUARE, logCount: 0 });
+    expect(field).toMatchObject({ newestLog: null, waitingLogs: 0 });
   });
 
   it("refuses a boundary that crosses itself and names the place", async () => {

@@ -7,8 +7,7 @@ import type { Field, FieldInput } from "@/lib/schemas/fields";
 import type { Scope } from "@/lib/scope";
 import type { Container } from "@/lib/server/container";
 import { checkBoundary } from "@/lib/server/fields/check-boundary";
-import { describeField } from "@/lib/server/fields/describe-field";
-import { getFieldOrThrow } from "@/lib/server/fields/get-field-or-throw";
+import { readFieldIn } from "@/lib/server/fields/read-fields";
 
 export async function createField(_container: Container, scope: Scope, input: FieldInput): Promise<Field> {
   const area = input.boundary ? checkBoundary(input.boundary) : { boundary: null, areaM2: null };
@@ -17,6 +16,6 @@ export async function createField(_container: Container, scope: Scope, input: Fi
     const { name, farm = null, landowner = null } = input;
     await insertField(tx, scope, { id, name, farm, landowner, ...area });
     await recordAudit(tx, scope, { action: "field.create", subject: id, detail: { name } });
-    return describeField(await getFieldOrThrow(tx, scope, id));
+    return readFieldIn(tx, scope, id);
   });
 }

@@ -1,6 +1,7 @@
 import "server-only";
-import { withOrganisation } from "@/db/client";
+import { withOrganisation, type Transaction } from "@/db/client";
 import { listFields as listFieldRows } from "@/db/queries/fields";
+import { listNewestLogs } from "@/db/queries/newest-logs";
 import type { Field } from "@/lib/schemas/fields";
 import type { ListQuery } from "@/lib/schemas/listing";
 import type { Scope } from "@/lib/scope";
@@ -13,10 +14,25 @@ export async function listFields(
   scope: Scope,
   query: ListQuery,
 ): Promise<{ items: Field[]; nextCursor: string | null }> {
-  const { rows, nextCursor } = await withOrganisation(scope, (tx) => listFieldRows(tx, scope, query));
-  return { items: rows.map(describeField), nextCursor };
+  return withOrganisation(scope, async (tx) => {
+    const { rows, nextCursor } = await listFieldRows(tx, scope, query);
+    const newest = await listNewestLogs(
+      tx,
+      scope,
+      rows.map((row) => row.id),
+    );
+    const byField = new Map(newest.map((log) => [log.fieldId, log]));
+    return { items: rows.map((row) => describeField(row, byField.get(row.id))), nextCursor };
+  });
+}
+
+/** One field inside a transaction that is under way. @throws AppError `not_found` */
+export async function readFieldIn(tx: Transaction, scope: Scope, fieldId: string): Promise<Field> {
+  const row = await getFieldOrThrow(tx, scope, fieldId);
+  const [newest] = await listNewestLogs(tx, scope, [fieldId]);
+  return describeField(row, newest);
 }
 
 export async function readField(_container: Container, scope: Scope, fieldId: string): Promise<Field> {
-  return describeField(await withOrganisation(scope, (tx) => getFieldOrThrow(tx, scope, fieldId)));
+  return withOrganisation(scope, (tx) => readFieldIn(tx, scope, fieldId));
 }

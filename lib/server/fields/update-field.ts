@@ -7,8 +7,8 @@ import type { Field, FieldPatch } from "@/lib/schemas/fields";
 import type { Scope } from "@/lib/scope";
 import type { Container } from "@/lib/server/container";
 import { checkBoundary } from "@/lib/server/fields/check-boundary";
-import { describeField } from "@/lib/server/fields/describe-field";
 import { getFieldOrThrow } from "@/lib/server/fields/get-field-or-throw";
+import { readFieldIn } from "@/lib/server/fields/read-fields";
 
 function toChanges({ boundary, ...words }: FieldPatch): Partial<FieldValues> {
   if (boundary === undefined) return words;
@@ -38,6 +38,6 @@ export async function updateField(
       subject: id,
       detail: { name: known.name, ...describeFieldChanges(known, changes) },
     });
-    return describeField(await getFieldOrThrow(tx, scope, id));
+    return readFieldIn(tx, scope, id);
   });
 }
