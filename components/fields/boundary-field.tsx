@@ -60,7 +60,7 @@ export function BoundaryField({ onChange, error }: BoundaryFieldProps) {
         words={chosen.fileName ?? "Choose a boundary file"}
         hint="GeoJSON, KML or a zipped shapefile"
         accept={KINDS}
-        onFile={(file) => void takeFile(file)}
+        onFiles={([file]) => void (file && takeFile(file))}
       />
       {pasting ? (
         <TextArea

@@ -5,7 +5,7 @@ import { useRouter } from "next/navigation";
 import { useMemo, useState } from "react";
 import { BoundarySketch } from "@/components/fields/boundary-sketch";
 import { FieldVerdictState } from "@/components/fields/field-verdict-state";
-import { keepDroppedFile } from "@/components/upload/dropped-file";
+import { keepDroppedFiles } from "@/components/upload/dropped-files";
 import { buttonClass } from "@/components/ui/button";
 import { classNames } from "@/components/ui/class-names";
 import { DataTable, type DataColumn } from "@/components/ui/data-table";
@@ -91,9 +91,9 @@ function FieldName({ slug, field, mayUpload }: { slug: string; field: Field; may
       onDragLeave={() => setOver(false)}
       onDrop={(event) => {
         event.preventDefault();
-        const file = event.dataTransfer.files[0];
-        if (!file || !mayUpload) return;
-        keepDroppedFile(field.id, file);
+        const files = [...event.dataTransfer.files];
+        if (files.length === 0 || !mayUpload) return;
+        keepDroppedFiles(field.id, files);
         router.push(`${root}/logs`);
       }}
     >

@@ -1,7 +1,8 @@
 "use client";
 
 import { useQueryClient } from "@tanstack/react-query";
-import { useEffect, useRef, useState } from "react";
+import { useRef, useState } from "react";
+import { useAskBeforeLeaving } from "@/components/hooks/use-ask-before-leaving";
 import { queryKeys } from "@/components/hooks/query-keys";
 import { forgetSending, noteSending } from "@/components/upload/lost-upload";
 import { sameBytesLogId, uploadLog, UploadStopped } from "@/lib/api/upload-log";
@@ -15,25 +16,18 @@ export type UploadState =
 
 export interface LogUploadRun {
   state: UploadState;
-  send: (file: File, machineId: string | null, again?: boolean) => void;
+  send: (files: readonly File[], machineId: string | null, again?: boolean) => void;
   stop: () => void;
   reset: () => void;
 }
 
-/** One upload at a time to one field. `onTaken` gets the id of the new log. */
+/** One upload at a time to one field: one file, or the parts of one log. `onTaken` gets the id of the new log. */
 export function useLogUpload(fieldId: string, onTaken: (logId: string) => void): LogUploadRun {
   const client = useQueryClient();
   const [state, setState] = useState<UploadState>({ step: "idle" });
   const running = useRef<AbortController | null>(null);
 
-  const isSending = state.step === "sending";
-  useEffect(() => {
-    if (!isSending) return;
-    // The browser asks in its own words whether to leave.
-    const ask = (event: BeforeUnloadEvent) => event.preventDefault();
-    window.addEventListener("beforeunload", ask);
-    return () => window.removeEventListener("beforeunload", ask);
-  }, [isSending]);
+  useAskBeforeLeaving(state.step === "sending");
 
   const fail = (error: unknown) => {
     forgetSending(fieldId);
@@ -42,13 +36,13 @@ export function useLogUpload(fieldId: string, onTaken: (logId: string) => void):
     else if (firstLogId) setState({ step: "same-bytes", firstLogId });
     else setState({ step: "failed", error });
   };
-  const send = (file: File, machineId: string | null, again = false) => {
+  const send = (files: readonly File[], machineId: string | null, again = false) => {
     const controller = new AbortController();
     running.current = controller;
     setState({ step: "sending", share: 0 });
-    noteSending(fieldId, file.name);
+    noteSending(fieldId, files[0]?.name ?? "");
     const onProgress = (share: number) => setState({ step: "sending", share });
-    uploadLog({ fieldId, file, machineId, again, onProgress, signal: controller.signal }).then((accepted) => {
+    uploadLog({ fieldId, files, machineId, again, onProgress, signal: controller.signal }).then((accepted) => {
       forgetSending(fieldId);
       void client.invalidateQueries({ queryKey: queryKeys.logs(fieldId) });
       onTaken(accepted.id);

@@ -12,23 +12,27 @@ export interface DropZoneProps {
   hint: string;
   /** File endings for the picker. */
   accept: string;
-  onFile: (file: File) => void;
+  /** At least one; never more than one without `multiple`. */
+  onFiles: (files: File[]) => void;
+  multiple?: boolean;
   /** A file let go anywhere on the page counts, not only on the zone. */
   wholePage?: boolean;
   disabled?: boolean;
 }
 
-function fileOf(transfer: DataTransfer | null): File | null {
-  return transfer?.files[0] ?? null;
+/** Calls `onFiles` with what was given, if anything was: all of it, or the first. */
+function handOver(given: FileList | null | undefined, multiple: boolean, onFiles: (files: File[]) => void): void {
+  const files = [...(given ?? [])].slice(0, multiple ? undefined : 1);
+  if (files.length > 0) onFiles(files);
 }
 
 /** Follows a file dragged over the page. The counter is needed because every child reports its own enter and leave. */
-function usePageDrop(enabled: boolean, onFile: (file: File) => void): boolean {
+function usePageDrop(enabled: boolean, onDrop: (files: FileList | undefined) => void): boolean {
   const [over, setOver] = useState(false);
-  const latest = useRef(onFile);
+  const latest = useRef(onDrop);
   useEffect(() => {
-    latest.current = onFile;
-  }, [onFile]);
+    latest.current = onDrop;
+  }, [onDrop]);
   useEffect(() => {
     if (!enabled) return;
     let depth = 0;
@@ -44,8 +48,7 @@ function usePageDrop(enabled: boolean, onFile: (file: File) => void): boolean {
       event.preventDefault();
       depth = 0;
       setOver(false);
-      const file = fileOf(event.dataTransfer);
-      if (file) latest.current(file);
+      latest.current(event.dataTransfer?.files);
     };
     const listeners = { dragenter: move(1), dragleave: move(-1), dragover: move(0), drop };
     for (const [name, listener] of Object.entries(listeners)) window.addEventListener(name as "drop", listener);
@@ -62,20 +65,20 @@ export function DropZone({
   dropWords,
   hint,
   accept,
-  onFile,
+  onFiles,
+  multiple = false,
   wholePage = false,
   disabled = false,
 }: DropZoneProps) {
   const input = useRef<HTMLInputElement>(null);
-  const over = usePageDrop(wholePage && !disabled, onFile);
+  const over = usePageDrop(wholePage && !disabled, (files) => handOver(files, multiple, onFiles));
   return (
     <div
       onDragOver={(event) => event.preventDefault()}
       onDrop={(event) => {
         event.preventDefault();
-        const file = fileOf(event.dataTransfer);
         // With `wholePage` the window hears the same drop.
-        if (file && !wholePage && !disabled) onFile(file);
+        if (!wholePage && !disabled) handOver(event.dataTransfer.files, multiple, onFiles);
       }}
     >
       <button
@@ -98,14 +101,15 @@ export function DropZone({
         ref={input}
         type="file"
         accept={accept}
+        multiple={multiple}
         aria-label={words}
         className="sr-only"
         tabIndex={-1}
         onChange={(event) => {
-          const file = event.target.files?.[0];
+          const input = event.target;
+          handOver(input.files, multiple, onFiles);
           // Cleared, so that choosing the same file twice asks twice.
-          event.target.value = "";
-          if (file) onFile(file);
+          input.value = "";
         }}
       />
     </div>

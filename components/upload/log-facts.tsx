@@ -39,12 +39,42 @@ export function LogFacts({ log }: { log: Log }) {
           </div>
         ))}
       </dl>
+      <FileFacts log={log} />
       {log.notes.filter(isSaidHere).map((note) => (
-        <Notice key={note.code} state="look">
+        <Notice key={`${note.code} ${note.file ?? ""} ${note.message}`} state="look">
           {note.message}
           {note.firstLine === undefined ? null : <span className="tabular"> First at line {note.firstLine}.</span>}
         </Notice>
       ))}
+    </div>
+  );
+}
+
+/** The files of a log that came in several, each to be had back. */
+function FileFacts({ log }: { log: Log }) {
+  const files = log.files ?? [];
+  if (files.length < 2) return null;
+  return (
+    <div className="space-y-1">
+      <h2 className="text-table text-ink-soft">Files of this log, as they were sent</h2>
+      <ul className="tabular divide-y divide-rule border-y border-rule text-table">
+        {files.map((file) => (
+          <li key={file.sha256} className="flex flex-wrap items-center justify-between gap-x-4 py-1">
+            <a
+              href={`/api/v1/logs/${log.id}/original?sha256=${file.sha256}`}
+              download={file.name}
+              className="inline-flex min-h-11 items-center break-all md:min-h-8"
+            >
+              {file.name}
+            </a>
+            <span className="text-ink-soft">
+              {formatBytes(file.bytes)}
+              {file.records === null ? null : `, ${formatCount(file.records)} records`}
+              {file.copies.length > 0 ? `, sent ${file.copies.length + 1} times` : null}
+            </span>
+          </li>
+        ))}
+      </ul>
     </div>
   );
 }

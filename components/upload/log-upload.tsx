@@ -1,17 +1,15 @@
 "use client";
 
-import { useRouter } from "next/navigation";
 import { useState, useSyncExternalStore } from "react";
-import { useLogUpload } from "@/components/hooks/use-log-upload";
 import { useMachines } from "@/components/hooks/use-machines";
-import { formatBytes } from "@/components/ui/format-date";
 import { Notice } from "@/components/ui/notice";
 import { DropZone } from "@/components/upload/drop-zone";
-import { takeDroppedFile } from "@/components/upload/dropped-file";
+import { takeDroppedFiles } from "@/components/upload/dropped-files";
 import { LOG_FILE_KINDS } from "@/components/upload/log-state";
 import { findLostUpload, forgetSending } from "@/components/upload/lost-upload";
 import { MachineChoice } from "@/components/upload/machine-choice";
-import { UploadButtons, UploadWords } from "@/components/upload/upload-words";
+import { OneLog } from "@/components/upload/one-log";
+import { SeveralFiles } from "@/components/upload/several-files";
 
 export interface LogUploadProps {
   fieldId: string;
@@ -23,42 +21,30 @@ export interface LogUploadProps {
   lastMachineId?: string | null;
 }
 
-/** Choose or drop a file, say which machine made it, watch it leave. */
+/** Choose or drop files, say which machine made them and whether they are one log, watch them leave. */
 export function LogUpload({ fieldId, logsPath, exampleHref, lastMachineId = null }: LogUploadProps) {
-  const router = useRouter();
   const machines = useMachines().data?.items ?? [];
-  const [file, setFile] = useState<File | null>(() => takeDroppedFile(fieldId));
+  const [files, setFiles] = useState<File[]>(() => takeDroppedFiles(fieldId));
   const [chosen, setChosen] = useState<string | null>(null);
-  const upload = useLogUpload(fieldId, (logId) => router.push(`${logsPath}/${logId}`));
-  const { state } = upload;
   // Until the person says otherwise: as last time, if that machine is still there.
   const machineId = chosen ?? machines.find((machine) => machine.id === lastMachineId)?.id ?? "";
 
-  const choose = (next: File | null) => {
+  const choose = (next: File[]) => {
     forgetSending(fieldId);
-    upload.reset();
-    setFile(next);
+    setFiles(next);
   };
-  if (!file) return <FileChoice fieldId={fieldId} exampleHref={exampleHref} onFile={choose} />;
+  if (files.length === 0) return <FileChoice fieldId={fieldId} exampleHref={exampleHref} onFiles={choose} />;
+  const machineChoice = (
+    <MachineChoice machines={machines} value={machineId} onChange={setChosen} lastMachineId={lastMachineId} />
+  );
+  const shared = { fieldId, logsPath, machineId: machineId || null, machineChoice, onAnother: () => choose([]) };
   return (
     <section aria-label="Take in a log" className="sheet max-w-2xl space-y-4 p-4">
-      <p className="break-words">
-        <span className="font-semibold">{file.name}</span>{" "}
-        <span className="whitespace-nowrap text-ink-soft">{formatBytes(file.size)}</span>
-      </p>
-      {state.step === "sending" ? null : (
-        <MachineChoice machines={machines} value={machineId} onChange={setChosen} lastMachineId={lastMachineId} />
+      {files.length === 1 ? (
+        <OneLog files={files} {...shared} />
+      ) : (
+        <SeveralFiles files={files} onFiles={choose} {...shared} />
       )}
-      <UploadWords state={state} />
-      <div className="flex flex-wrap gap-2">
-        <UploadButtons
-          state={state}
-          logsPath={logsPath}
-          onSend={() => upload.send(file, machineId || null, state.step === "same-bytes")}
-          onStop={upload.stop}
-          onAnother={() => choose(null)}
-        />
-      </div>
     </section>
   );
 }
@@ -68,10 +54,10 @@ const NEVER = () => () => undefined;
 interface FileChoiceProps {
   fieldId: string;
   exampleHref: string | null;
-  onFile: (file: File) => void;
+  onFiles: (files: File[]) => void;
 }
 
-function FileChoice({ fieldId, exampleHref, onFile }: FileChoiceProps) {
+function FileChoice({ fieldId, exampleHref, onFiles }: FileChoiceProps) {
   const lost = useSyncExternalStore(
     NEVER,
     () => findLostUpload(fieldId),
@@ -87,10 +73,11 @@ function FileChoice({ fieldId, exampleHref, onFile }: FileChoiceProps) {
       <DropZone
         words="Choose a log file"
         dropWords=", or drop it anywhere on this page"
-        hint="CSV, GeoJSON, a zipped shapefile or zipped ISO 11783-10 task data; .gz is fine"
+        hint="CSV, GeoJSON, a zipped shapefile or zipped ISO 11783-10 task data; .gz is fine, and several files at once"
         accept={LOG_FILE_KINDS}
         wholePage
-        onFile={onFile}
+        multiple
+        onFiles={onFiles}
       />
       {exampleHref ? (
         <p className="text-table text-ink-soft">

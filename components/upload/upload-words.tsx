@@ -6,7 +6,8 @@ import { ProgressBar } from "@/components/ui/progress-bar";
 import { ApiProblem, describeFailure } from "@/lib/api/api-problem";
 
 /** How the sending stands, in words. */
-export function UploadWords({ state }: { state: UploadState }) {
+export function UploadWords({ state, parts = 1 }: { state: UploadState; parts?: number }) {
+  const isOne = parts === 1;
   if (state.step === "sending") {
     const percent = Math.round(state.share * 100);
     return (
@@ -22,14 +23,15 @@ export function UploadWords({ state }: { state: UploadState }) {
   }
   if (state.step === "same-bytes") {
     return (
-      <Notice state="look" urgent title="This file is already in this field.">
-        Open the log that was made of it, or take the file in a second time.
+      <Notice state="look" urgent title={`${isOne ? "This file is" : "These files are"} already in this field.`}>
+        Open the log that was made of {isOne ? "it" : "them"}, or take {isOne ? "the file" : "the files"} in a second
+        time.
       </Notice>
     );
   }
   if (state.step === "failed") {
     return (
-      <Notice state="act" urgent title="The file was not taken in">
+      <Notice state="act" urgent title={isOne ? "The file was not taken in" : "The files were not taken in"}>
         {describeFailure(state.error)}
       </Notice>
     );

@@ -74,8 +74,10 @@ export const listPasses = (logId: string) => requestJson(PassList, `${ROOT}/logs
 /** Addresses the browser opens itself. */
 export const logEventsPath = (logId: string) => `${ROOT}/logs/${logId}/events`;
 export const logOriginalPath = (logId: string) => `${ROOT}/logs/${logId}/original`;
-export const logUploadPath = (fieldId: string, again: boolean) =>
-  `${ROOT}/fields/${fieldId}/logs${again ? "?again=1" : ""}`;
+export function logUploadPath(fieldId: string, { again, together }: { again: boolean; together: boolean }): string {
+  const query = [...(again ? ["again=1"] : []), ...(together ? ["together=1"] : [])].join("&");
+  return `${ROOT}/fields/${fieldId}/logs${query ? `?${query}` : ""}`;
+}
 
 /** Shares. */
 export const listShares = (fieldId: string) => requestJson(ShareList, `${ROOT}/fields/${fieldId}/shares?${PAGE}`);

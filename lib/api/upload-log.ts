@@ -6,7 +6,8 @@ import type { z } from "zod";
 
 export interface LogUpload {
   fieldId: string;
-  file: File;
+  /** One, or the parts of one log. */
+  files: readonly File[];
   machineId: string | null;
   /** Take it in although the same bytes are in this field already. */
   again?: boolean;
@@ -19,17 +20,20 @@ export interface LogUpload {
 export class UploadStopped extends Error {}
 
 /**
- * Sends a log file. XMLHttpRequest and not fetch, because only it tells how much has been sent.
+ * Sends the file or files of a log. XMLHttpRequest and not fetch, because only it tells how much has been sent.
  * @throws ApiProblem when the server refuses; UploadStopped when the person stops it; TypeError when the line breaks.
  */
 export function uploadLog(upload: LogUpload): Promise<z.infer<typeof LogAccepted>> {
   const form = new FormData();
   // Fields before the file: a server that streams the body knows the machine before the bytes arrive.
   if (upload.machineId) form.set("machineId", upload.machineId);
-  form.set("file", upload.file, upload.file.name);
+  for (const file of upload.files) form.append("file", file, file.name);
   return new Promise((resolve, reject) => {
     const request = new XMLHttpRequest();
-    request.open("POST", logUploadPath(upload.fieldId, upload.again ?? false));
+    request.open(
+      "POST",
+      logUploadPath(upload.fieldId, { again: upload.again ?? false, together: upload.files.length > 1 }),
+    );
     request.setRequestHeader("accept", "application/json");
     request.upload.addEventListener("progress", (event) => {
       if (event.lengthComputable && event.total > 0) upload.onProgress(event.loaded / event.total);

@@ -33,15 +33,15 @@ class FakeRequest extends EventTarget {
 
 afterEach(() => vi.unstubAllGlobals());
 
-function begin(again = false) {
+function begin(again = false, names = ["pass.csv"]) {
   vi.stubGlobal("XMLHttpRequest", FakeRequest);
   const controller = new AbortController();
   const shares: number[] = [];
-  const file = new File(["a,b"], "pass.csv");
+  const files = names.map((name) => new File(["a,b"], name));
   const onProgress = (share: number) => shares.push(share);
   const sending = uploadLog({
     fieldId: "fld_1",
-    file,
+    files,
     machineId: "mac_1",
     again,
     onProgress,
@@ -49,6 +49,16 @@ function begin(again = false) {
   });
   return { sending, controller, shares, request: FakeRequest.last };
 }
+
+describe("sending a log in parts", () => {
+  it("puts all of them into one form and says that they belong together", async () => {
+    const { request, sending } = begin(true, ["a.csv", "b.csv"]);
+    expect(request.path).toBe("/api/v1/fields/fld_1/logs?again=1&together=1");
+    expect(request.body?.getAll("file").map((file) => (file as File).name)).toEqual(["a.csv", "b.csv"]);
+    request.answer(202, { id: "log_1", status: "queued" });
+    await sending;
+  });
+});
 
 describe("sending a log", () => {
   it("tells how much has left, and gives the id of the log", async () => {
