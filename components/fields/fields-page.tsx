@@ -2,7 +2,7 @@
 
 import Link from "next/link";
 import { FieldsTable } from "@/components/fields/fields-table";
-import { useFields } from "@/components/hooks/use-fields";
+import { useFieldPages } from "@/components/hooks/use-fields";
 import { buttonClass } from "@/components/ui/button";
 import { EmptyState } from "@/components/ui/empty-state";
 import { Loading } from "@/components/ui/loading";
@@ -11,16 +11,16 @@ import { can, type Role } from "@/lib/access/permissions";
 import { describeFailure } from "@/lib/api/api-problem";
 
 export function FieldsPage({ slug, role }: { slug: string; role: Role }) {
-  const fields = useFields();
+  const fields = useFieldPages();
   if (fields.isPending) return <Loading what="the fields" />;
-  if (fields.isError)
+  if (!fields.items)
     return (
       <Notice state="act" urgent>
         {describeFailure(fields.error)}
       </Notice>
     );
-  if (fields.data.items.length === 0) return <NoFields slug={slug} role={role} />;
-  return <FieldsTable slug={slug} fields={fields.data.items} mayUpload={can(role, "logs.upload")} />;
+  if (fields.items.length === 0) return <NoFields slug={slug} role={role} />;
+  return <FieldsTable slug={slug} fields={fields.items} mayUpload={can(role, "logs.upload")} more={fields.more} />;
 }
 
 function NoFields({ slug, role }: { slug: string; role: Role }) {

@@ -4,7 +4,8 @@ import Link from "next/link";
 import { useRouter } from "next/navigation";
 import { useMemo, useState } from "react";
 import { BoundarySketch } from "@/components/fields/boundary-sketch";
-import { FieldVerdictState } from "@/components/fields/field-verdict-state";
+import type { MorePages } from "@/components/hooks/use-pages";
+import { FieldVerdictState, fieldVerdictWords } from "@/components/fields/field-verdict-state";
 import { keepDroppedFiles } from "@/components/upload/dropped-files";
 import { buttonClass } from "@/components/ui/button";
 import { classNames } from "@/components/ui/class-names";
@@ -18,10 +19,11 @@ export interface FieldsTableProps {
   slug: string;
   fields: Field[];
   mayUpload: boolean;
+  more?: MorePages;
 }
 
 /** The fields of the organisation. A log file let go on a row goes to that field's upload. */
-export function FieldsTable({ slug, fields, mayUpload }: FieldsTableProps) {
+export function FieldsTable({ slug, fields, mayUpload, more }: FieldsTableProps) {
   const { areaUnit, fromSquareMetres } = useUnits();
   const columns = useMemo<DataColumn<Field>[]>(
     () => [
@@ -49,8 +51,8 @@ export function FieldsTable({ slug, fields, mayUpload }: FieldsTableProps) {
       {
         id: "verdict",
         header: "Newest log says",
-        value: () => undefined,
-        cell: (field) => <FieldVerdictState fieldId={field.id} logCount={field.logCount} mayUpload={mayUpload} />,
+        value: (field) => fieldVerdictWords(field).word,
+        cell: (field) => <FieldVerdictState field={field} mayUpload={mayUpload} />,
       },
     ],
     [areaUnit, fromSquareMetres, mayUpload, slug],
@@ -63,6 +65,7 @@ export function FieldsTable({ slug, fields, mayUpload }: FieldsTableProps) {
       rowId={(field) => field.id}
       fileName="fields"
       initialSort={{ id: "name", desc: false }}
+      more={more}
       actions={(field) => (
         <Link href={`/${slug}/fields/${field.id}/logs`} className={buttonClass("quiet")}>
           Logs
