@@ -12,11 +12,24 @@ import type { z } from "zod";
 
 type Entry = z.infer<typeof AuditListBody>["items"][number];
 
-/** `name: East quarter, logs: 2`. */
-function detailWords(detail: Record<string, unknown>): string {
-  return Object.entries(detail)
-    .map(([key, value]) => `${key}: ${typeof value === "string" ? value : JSON.stringify(value)}`)
-    .join(", ");
+function valueWords(value: unknown): string {
+  if (value === null || value === undefined || value === "") return "nothing";
+  return typeof value === "string" ? value : JSON.stringify(value);
+}
+
+function asRecord(value: unknown): Record<string, unknown> {
+  return typeof value === "object" && value !== null ? { ...value } : {};
+}
+
+/** `name: East quarter, logs: 2`; of a change, what was there and what is there now: `farm: nothing → Larkspur Flats`. */
+export function detailWords(detail: Record<string, unknown>): string {
+  const { before, after, changed, ...rest } = detail;
+  const [was, is] = [asRecord(before), asRecord(after)];
+  const keys = Array.isArray(changed) ? changed.map(String) : [];
+  const changes = keys.map((key) =>
+    key in is ? `${key}: ${valueWords(was[key])} → ${valueWords(is[key])}` : `${key} changed`,
+  );
+  return [...Object.entries(rest).map(([key, value]) => `${key}: ${valueWords(value)}`), ...changes].join(", ");
 }
 
 const VERBS: Record<string, string> = {

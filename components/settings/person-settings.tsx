@@ -10,7 +10,7 @@ import { TextField } from "@/components/ui/form-field";
 import { Notice } from "@/components/ui/notice";
 import { UnitSwitch } from "@/components/units/unit-switch";
 import { describeFailure } from "@/lib/api/api-problem";
-import { changeMe, changePassword } from "@/lib/api/client";
+import { changeMe, changePassword, signOutEverywhere } from "@/lib/api/client";
 
 const NameShape = z.object({
   name: z.string().trim().min(1, "Say what you are called.").max(120, "At most 120 characters."),
@@ -112,6 +112,32 @@ export function PasswordSettings() {
           </span>
         </div>
       </form>
+    </section>
+  );
+}
+
+/** For a cookie that may have been left on a machine of somebody else's. */
+export function SessionSettings() {
+  const end = useMutation({ mutationFn: signOutEverywhere });
+  return (
+    <section className="space-y-3">
+      <h2 className="text-section">Signed in elsewhere</h2>
+      <p className="text-ink-soft">
+        Ends every sign-in but this one, on every device, at once. Personal tokens go on; withdraw them below.
+      </p>
+      {end.error ? (
+        <Notice state="act" urgent>
+          {describeFailure(end.error)}
+        </Notice>
+      ) : null}
+      <div className="flex items-center gap-3">
+        <Button disabled={end.isPending} onClick={() => end.mutate()}>
+          Sign out everywhere else
+        </Button>
+        <span role="status" className="text-ink-soft">
+          {end.isSuccess ? "Done. Only this device is signed in." : ""}
+        </span>
+      </div>
     </section>
   );
 }

@@ -1,7 +1,7 @@
 import type { Metadata } from "next";
 import Link from "next/link";
 import { requireScope } from "@/app/_server/require-scope";
-import { PasswordSettings, PersonSettings } from "@/components/settings/person-settings";
+import { PasswordSettings, PersonSettings, SessionSettings } from "@/components/settings/person-settings";
 import { TokenSettings } from "@/components/settings/token-settings";
 import { PageBody } from "@/components/ui/page-body";
 import { PageHeading } from "@/components/ui/page-heading";
@@ -18,6 +18,7 @@ export default async function SettingsRoute({ params }: { params: Promise<{ org:
       <div className="max-w-3xl space-y-10">
         <PersonSettings name={user.name} />
         <PasswordSettings />
+        <SessionSettings />
         <TokenSettings role={scope.role} />
         {can(scope.role, "recipes.read") ? (
           <section className="space-y-1">
