@@ -1,4 +1,6 @@
 import type { MultiPolygon, Polygon, Position } from "geojson";
+import { longitudeNear } from "@/lib/geo/cut-at-antimeridian";
+import { boundsOfGeometry } from "@/lib/map-state/geometry-bounds";
 
 const SIZE = 100;
 const MARGIN = 4;
@@ -9,16 +11,13 @@ function ringsOf(boundary: Polygon | MultiPolygon): Position[][] {
 
 /** Puts positions into a 100 by 100 box, north up, true to shape (longitude shrunk by the cosine of latitude). */
 function createPlacer(points: Position[]): (point: Position) => string {
-  const longitudes = points.map((point) => point[0] ?? NaN);
-  const latitudes = points.map((point) => point[1] ?? NaN);
-  const [west, east] = [Math.min(...longitudes), Math.max(...longitudes)];
-  const [south, north] = [Math.min(...latitudes), Math.max(...latitudes)];
+  const [west, south, east, north] = boundsOfGeometry({ coordinates: points }) ?? [0, 0, 0, 0];
   const shrink = Math.cos((((south + north) / 2) * Math.PI) / 180);
   const [width, height] = [(east - west) * shrink, north - south];
   const scale = (SIZE - 2 * MARGIN) / Math.max(width, height, 1e-9);
   const [left, top] = [(SIZE - width * scale) / 2, (SIZE - height * scale) / 2];
   return (point) => {
-    const x = left + ((point[0] ?? NaN) - west) * shrink * scale;
+    const x = left + (longitudeNear(point[0] ?? NaN, (west + east) / 2) - west) * shrink * scale;
     const y = top + (north - (point[1] ?? NaN)) * scale;
     return `${x.toFixed(2)} ${y.toFixed(2)}`;
   };

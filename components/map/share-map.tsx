@@ -16,7 +16,7 @@ import { classOf } from "@/lib/legend/class-edges";
 import { presetsFor, proposeEdges } from "@/lib/legend/propose-edges";
 import { classColours, rampOf } from "@/lib/legend/ramps";
 import type { Bounds } from "@/lib/map-state/field-book-store";
-import { boundsOfGeometry } from "@/lib/map-state/geometry-bounds";
+import { boundsOfGeometry, unwrapBounds } from "@/lib/map-state/geometry-bounds";
 import { TileJson } from "@/lib/schemas/logs";
 import { displayUnit } from "@/lib/units/display-unit";
 import { formatNumber } from "@/lib/units/format-quantity";
@@ -45,7 +45,7 @@ export function ShareMap({ token, fieldName, channel, boundary, bbox, places = N
     queryFn: () => requestJson(TileJson, path),
     staleTime: Infinity,
   });
-  const [bounds] = useState<Bounds>(() => boundsOfGeometry(boundary) ?? unwrap(bbox));
+  const [bounds] = useState<Bounds>(() => boundsOfGeometry(boundary) ?? unwrapBounds(bbox));
   const classes = useMemo(
     () => (tileJson ? classesOf(tileJson, displayUnit(tileJson.encoding.unit, system, channel).factor) : null),
     [tileJson, system, channel],
@@ -93,10 +93,6 @@ export function ShareMap({ token, fieldName, channel, boundary, bbox, places = N
       </figcaption>
     </figure>
   );
-}
-
-function unwrap([west, south, east, north]: Bounds): Bounds {
-  return [west, south, east < west ? east + 360 : east, north];
 }
 
 interface ShareClasses {

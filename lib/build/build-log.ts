@@ -5,7 +5,7 @@ import { measureMotion, type Motion } from "@/lib/build/log-motion";
 import { flagNotes, flagRecords, workingRecords } from "@/lib/cleaning/flag-records";
 import { FLAGS } from "@/lib/cleaning/flags";
 import { markImpossibleSteps } from "@/lib/cleaning/position-steps";
-import type { LocalPlane } from "@/lib/geo/local-plane";
+import { boundaryInPlane } from "@/lib/geo/boundary-in-plane";
 import type { LogNote, MachineLog } from "@/lib/logs/machine-log";
 import type { Pass, PlacedLog } from "@/lib/logs/placed-log";
 import type { Seeder } from "@/lib/machines/machine";
@@ -59,7 +59,7 @@ export function buildLog(
   const passes = describePasses({ ranges, works, timeMs: log.timeMs, headingDeg: line.headingDeg, ...along });
   const guessed = machine ? null : guessRowGeometry({ log, passes, ...along, workingWidthM: options.workingWidthM });
   const geometry = guessed?.geometry ?? machineRowGeometry(machine as Seeder);
-  const boundaryRings = options.boundary ? ringsInPlane(options.boundary, antenna.plane) : null;
+  const boundaryRings = options.boundary ? boundaryInPlane(options.boundary, antenna.plane) : null;
   labelHeadlands({ passes, ...along, implementWidthM: implementWidthM(geometry), boundaryRings });
   addFlags(ground.flags, { turning, line, passes });
   options.onProgress?.(0.9);
@@ -176,9 +176,4 @@ function implementSpeed(motion: Motion, line: RowLine, log: MachineLog): Float32
     { eastM: line.originEastM, northM: line.originNorthM },
   );
   return own.speedMps.map((speed, i) => (Number.isFinite(speed) ? speed : motion.speedMps[i]!));
-}
-
-function ringsInPlane(boundary: Polygon | MultiPolygon, plane: LocalPlane): [number, number][][] {
-  const polygons = boundary.type === "Polygon" ? [boundary.coordinates] : boundary.coordinates;
-  return polygons.flat().map((ring) => ring.map((corner) => plane.toPlane(corner[0] ?? NaN, corner[1] ?? NaN)));
 }

@@ -3,6 +3,7 @@ import type { MultiPolygon, Polygon, Position } from "geojson";
 import type { BitGrid } from "@/lib/coverage/bit-grid";
 import { connectRuns, type CellRun } from "@/lib/coverage/cell-runs";
 import { doubledArea, outlineCells } from "@/lib/coverage/outline-cells";
+import { cutAtAntimeridian } from "@/lib/geo/cut-at-antimeridian";
 import { RADIANS_PER_DEGREE } from "@/lib/geo/circular-mean";
 import type { LocalPlane } from "@/lib/geo/local-plane";
 
@@ -20,9 +21,10 @@ const TOLERANCES_CELLS = [1.5, 0.75];
  * within a cell and a half (turf's Douglas and Peucker); less where that would make it cross itself or vanish.
  */
 export function shapeCells(runs: readonly CellRun[], frame: ShapeFrame): Polygon | MultiPolygon {
-  const polygons = connectRuns(runs, { sidesOnly: true }).map((part) => {
+  const polygons = connectRuns(runs, { sidesOnly: true }).flatMap((part) => {
     const rings = outlineCells(part).sort((a, b) => doubledArea(b) - doubledArea(a));
-    return straighten(rings).map((ring) => ring.map((corner) => toDegrees(corner, frame)));
+    const shape = cutAtAntimeridian(straighten(rings).map((ring) => ring.map((corner) => toDegrees(corner, frame))));
+    return shape.type === "Polygon" ? [shape.coordinates] : shape.coordinates;
   });
   return polygons.length === 1
     ? { type: "Polygon", coordinates: polygons[0]! }

@@ -1,4 +1,5 @@
 import type { FindingPlace } from "@/lib/findings/finding";
+import { cutLineAtAntimeridian } from "@/lib/geo/cut-at-antimeridian";
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import { rowLonLat } from "@/lib/rows/row-position";
 
@@ -30,7 +31,7 @@ export function stretchPlace(
   span: { firstRecord: number; lastRecord: number } | null,
 ): FindingPlace | null {
   const line = span && rowLine(placed, row, span);
-  return line ? { type: "LineString", coordinates: line } : null;
+  return line ? linesPlace([line]) : null;
 }
 
 /** Of many stretches so many are drawn, the longest first, each with few corners: a map shows no more. */
@@ -48,7 +49,7 @@ export function stretchesPlace(
     const line = rowLine(placed, row, { ...span, maxCorners: MAX_STRETCH_CORNERS });
     return line ? [line] : [];
   });
-  return lines.length > 0 ? { type: "MultiLineString", coordinates: lines } : null;
+  return lines.length > 0 ? { type: "MultiLineString", coordinates: lines.flatMap(cutLine) } : null;
 }
 
 /** Where a row ran over the whole log: one line a pass. */
@@ -57,5 +58,17 @@ export function wholeRowPlace(placed: PlacedLog, row: number): FindingPlace | nu
     const line = rowLine(placed, row, { firstRecord: pass.first, lastRecord: pass.first + pass.records - 1 });
     return line ? [line] : [];
   });
-  return lines.length > 0 ? { type: "MultiLineString", coordinates: lines } : null;
+  return lines.length > 0 ? { type: "MultiLineString", coordinates: lines.flatMap(cutLine) } : null;
+}
+
+function linesPlace(lines: [number, number][][]): FindingPlace {
+  const [only, ...others] = lines.flatMap(cutLine);
+  return others.length === 0 && only
+    ? { type: "LineString", coordinates: only }
+    : { type: "MultiLineString", coordinates: only ? [only, ...others] : [] };
+}
+
+/** As RFC 7946 3.1.9 wants it. */
+function cutLine(line: [number, number][]): [number, number][][] {
+  return cutLineAtAntimeridian(line) as [number, number][][];
 }

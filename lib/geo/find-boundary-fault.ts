@@ -1,5 +1,6 @@
 import { kinks } from "@turf/turf";
 import type { Position } from "geojson";
+import { longitudeNear, unwrapPositions } from "@/lib/geo/cut-at-antimeridian";
 import type { Boundary } from "@/lib/schemas/geometry";
 
 /** Every edge of a ring meets every other: 8 000 corners take about a second, and nothing else runs meanwhile. */
@@ -18,7 +19,8 @@ function dropRepeated(ring: Position[]): Position[] {
 }
 
 function findRingFault(ring: Position[]): string | null {
-  const corners = dropRepeated(ring);
+  // Crossing the antimeridian is no crossing of the ring's own.
+  const corners = dropRepeated(unwrapPositions(ring));
   if (corners.length < 4) return "has fewer than three different corners";
   if (corners.length > MOST_RING_CORNERS) {
     return `has ${corners.length} corners; at most ${MOST_RING_CORNERS} are taken`;
@@ -26,7 +28,7 @@ function findRingFault(ring: Position[]): string | null {
   const [first] = kinks({ type: "Polygon", coordinates: [corners] }).features;
   if (!first) return null;
   const [longitude = NaN, latitude = NaN] = first.geometry.coordinates;
-  return `crosses itself at longitude ${longitude.toFixed(6)}, latitude ${latitude.toFixed(6)}`;
+  return `crosses itself at longitude ${longitudeNear(longitude, 0).toFixed(6)}, latitude ${latitude.toFixed(6)}`;
 }
 
 /**

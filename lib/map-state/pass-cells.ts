@@ -1,3 +1,4 @@
+import { longitudeNear } from "@/lib/geo/cut-at-antimeridian";
 import type { Position } from "geojson";
 import type { PassTrack } from "@/lib/map-state/pass-track";
 import { worldPerMetre } from "@/lib/tiles/tile-address";
@@ -106,10 +107,11 @@ export function locateInPass(
   const reach = Math.max(Math.abs(left), Math.abs(right)) + Math.max(0, ...track.rowForwardM.map(Math.abs)) + 10;
   for (let record = track.records - 1; record >= 0; record -= 1) {
     const north = (latitude - track.latitude[record]!) * perDegreeNorth;
-    const east = (longitude - track.longitude[record]!) * perDegreeEast;
+    const x = longitudeNear(longitude, track.longitude[record]!);
+    const east = (x - track.longitude[record]!) * perDegreeEast;
     if (Math.abs(north) > reach || Math.abs(east) > reach) continue;
     for (let row = 1; row <= track.rowOffsetM.length; row += 1) {
-      if (ringHolds(cellRing(track, record, row), longitude, latitude)) return { record, row };
+      if (ringHolds(cellRing(track, record, row), x, latitude)) return { record, row };
     }
   }
   return null;

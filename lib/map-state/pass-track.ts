@@ -1,3 +1,4 @@
+import { unwrapPositions } from "@/lib/geo/cut-at-antimeridian";
 import type { PassReadings } from "@/lib/schemas/logs";
 
 /** The readings of one pass laid out for drawing and hit tests. Per record unless named per row; NaN is missing. */
@@ -50,7 +51,8 @@ export function createPassTrack(readings: PassReadings): PassTrack {
     timesS: Float64Array.from(readings.timesS, NUMBER_OR_NAN),
     endsM,
     lengthM: endsM[records - 1] ?? 0,
-    longitude: Float64Array.from(readings.positions, ([longitude]) => longitude),
+    // Across the antimeridian longitudes run on, so that lines and cells do not cross the whole map.
+    longitude: Float64Array.from(unwrapPositions(readings.positions), ([longitude = NaN]) => longitude),
     latitude: Float64Array.from(readings.positions, ([, latitude]) => latitude),
     headingDeg: Float64Array.from({ length: records }, (_, i) => NUMBER_OR_NAN(readings.headingsDeg?.[i])),
     speedMps: Float64Array.from({ length: records }, (_, i) => NUMBER_OR_NAN(readings.speedsMps?.[i])),

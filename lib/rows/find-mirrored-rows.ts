@@ -1,4 +1,5 @@
 import type { MultiPolygon, Polygon } from "geojson";
+import { boundaryInPlane } from "@/lib/geo/boundary-in-plane";
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import { fitSlope, intoFrame } from "@/lib/rows/edge-slope";
 import { boundarySlope, neighbourSlope, workedSlope, type PassEnd } from "@/lib/rows/expected-slopes";
@@ -42,7 +43,7 @@ export function findMirroredRows(placed: PlacedLog, boundary: Polygon | MultiPol
     return cannotTell(`Left and right cannot be told apart with fewer than ${FEWEST_ROWS} rows logged one by one.`);
   }
   const edges = findRowEdges(placed).filter((edge) => edge.eastM.length >= FEWEST_ROWS);
-  const votes = countVotes(placed, edges, boundary ? ringsOf(placed, boundary) : []);
+  const votes = countVotes(placed, edges, boundary ? boundaryInPlane(boundary, placed.plane) : []);
   return judge(votes);
 }
 
@@ -116,9 +117,4 @@ function judge({ staggered, agreeing, opposing }: Votes): MirroredRows {
 
 function cannotTell(reason: string): MirroredRows {
   return { state: "cannot-tell", evidence: { runs: 0, agreeing: 0, opposing: 0 }, reason };
-}
-
-function ringsOf(placed: PlacedLog, boundary: Polygon | MultiPolygon): [number, number][][] {
-  const polygons = boundary.type === "Polygon" ? [boundary.coordinates] : boundary.coordinates;
-  return polygons.flat().map((ring) => ring.map((corner) => placed.plane.toPlane(corner[0] ?? NaN, corner[1] ?? NaN)));
 }

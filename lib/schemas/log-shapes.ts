@@ -8,7 +8,8 @@ export const ZoneCollectionBody = z.object({
   features: z.array(
     z.object({
       type: z.literal("Feature"),
-      geometry: PolygonSchema,
+      /** Several parts only across the antimeridian. */
+      geometry: z.union([PolygonSchema, MultiPolygonSchema]),
       properties: z.object({
         row: z.number().int(),
         pass: z.number().int(),

@@ -1,14 +1,17 @@
 import type { PlacedLog } from "@/lib/logs/placed-log";
+import { longitudeNear, unwrapPositions } from "@/lib/geo/cut-at-antimeridian";
 import type { PassStep } from "@/lib/rows/pass-members";
 
-/** West, south, east, north in degrees. */
+/** West, south, east, north in degrees; west > east across the antimeridian (RFC 7946 5.2). */
 export type Bbox = readonly [number, number, number, number];
 
 /** True where a ring's own box meets the window. */
 export function ringMeets(ring: readonly (readonly number[])[], [west, south, east, north]: Bbox): boolean {
-  const lons = ring.map((corner) => corner[0]!);
+  const eastOn = east < west ? east + 360 : east;
+  const first = longitudeNear(ring[0]?.[0] ?? NaN, (west + eastOn) / 2);
+  const lons = unwrapPositions(ring as number[][], first).map((corner) => corner[0]!);
   const lats = ring.map((corner) => corner[1]!);
-  const apartEast = Math.max(...lons) < west || Math.min(...lons) > east;
+  const apartEast = Math.max(...lons) < west || Math.min(...lons) > eastOn;
   const apartNorth = Math.max(...lats) < south || Math.min(...lats) > north;
   return !(apartEast || apartNorth);
 }

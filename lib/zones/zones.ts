@@ -1,6 +1,7 @@
-import type { Feature, FeatureCollection, Polygon } from "geojson";
+import type { Feature, FeatureCollection, MultiPolygon, Polygon, Position } from "geojson";
 import { resolveChannelOrReason } from "@/lib/channels/resolve-channel";
 import { AppError } from "@/lib/errors";
+import { cutAtAntimeridian } from "@/lib/geo/cut-at-antimeridian";
 import type { Pass, PlacedLog } from "@/lib/logs/placed-log";
 import { passSteps } from "@/lib/rows/pass-members";
 import { rowDistances } from "@/lib/rows/row-distances";
@@ -35,7 +36,7 @@ export interface ZoneOptions {
   distances?: Float32Array;
 }
 
-export type ZoneCollection = FeatureCollection<Polygon, ZoneProperties>;
+export type ZoneCollection = FeatureCollection<Polygon | MultiPolygon, ZoneProperties>;
 
 export const DEFAULT_ZONE_LENGTH_M = 5;
 
@@ -76,37 +77,44 @@ function passZones(source: TrackSource, pass: Pass, { bbox, ...runOptions }: Run
   return rowTracks(source, pass, steps).flatMap((track) =>
     classRuns(track, runOptions)
       .filter((run) => run.last >= near.first && run.first <= near.last)
-      .map((run) => zoneFeature({ placed, outline }, track, run))
-      .filter((zone) => !bbox || ringMeets(zone.geometry.coordinates[0]!, bbox)),
+      .map((run) => ({ run, ring: zoneRing({ placed, outline }, track, run) }))
+      .filter(({ ring }) => !bbox || ringMeets(ring, bbox))
+      .map(({ run, ring }) => zoneFeature({ placed, outline }, track, { run, ring })),
   );
 }
 
 /** A cell reaches back to the record before; no pass has a longer step than this. */
 const LONGEST_STEP_M = 20;
 
-type Zone = Feature<Polygon, ZoneProperties>;
+type Zone = Feature<Polygon | MultiPolygon, ZoneProperties>;
 
-function zoneFeature(
-  { placed, outline }: { placed: PlacedLog; outline: PassOutline },
-  track: RowTrack,
-  run: ClassRun,
-): Zone {
+interface DrawnLog {
+  placed: PlacedLog;
+  outline: PassOutline;
+}
+
+function zoneRing({ placed, outline }: DrawnLog, track: RowTrack, run: ClassRun): Position[] {
   const { offsetM, forwardM, widthM } = placed.geometry;
   const row = track.row - 1;
   const half = widthM[row]! / 2;
   const strip = { leftM: offsetM[row]! - half, rightM: offsetM[row]! + half, forwardM: forwardM[row]! };
+  return stripRing(placed, outline, { strip, first: run.first, last: run.last });
+}
+
+function zoneFeature(
+  { placed, outline }: DrawnLog,
+  track: RowTrack,
+  { run, ring }: { run: ClassRun; ring: Position[] },
+): Zone {
   return {
     type: "Feature",
-    geometry: {
-      type: "Polygon",
-      coordinates: [stripRing(placed, outline, { strip, first: run.first, last: run.last })],
-    },
+    geometry: cutAtAntimeridian([ring]),
     properties: {
       row: track.row,
       pass: track.pass.pass,
       class: run.class,
       ...readNumbers(track, run),
-      areaM2: run.lengthM * widthM[row]!,
+      areaM2: run.lengthM * placed.geometry.widthM[track.row - 1]!,
       startS: secondsAt(placed, outline.steps[run.first]!.record),
       endS: secondsAt(placed, outline.steps[run.last]!.record),
     },
