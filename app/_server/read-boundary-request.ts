@@ -26,8 +26,11 @@ async function fileOfForm(request: Request): Promise<Uint8Array> {
   });
 }
 
-/** The boundary of a request: a JSON geometry or feature, or a file in a multipart body (GeoJSON, KML, zipped shapefile). */
-export async function readBoundaryRequest(request: Request): Promise<Boundary> {
+/**
+ * The boundary of a request: a JSON geometry or feature, or a file in a multipart body (GeoJSON, KML, GPX, zipped
+ * shapefile); with what was done to it on the way, in plain sentences.
+ */
+export async function readBoundaryRequest(request: Request): Promise<{ boundary: Boundary; notes: string[] }> {
   const isForm = /^multipart\/form-data/i.test(request.headers.get("content-type") ?? "");
   const bytes = isForm ? await fileOfForm(request) : await readBody(request);
   const read = readBoundaryFile(bytes);
@@ -36,5 +39,5 @@ export async function readBoundaryRequest(request: Request): Promise<Boundary> {
     const code = isMalformedBody ? "bad_request" : CODES[read.error.code];
     throw new AppError(code, read.error.message, { detailCode: read.error.code });
   }
-  return Boundary.parse(read.value);
+  return { boundary: Boundary.parse(read.value.boundary), notes: read.value.notes };
 }

@@ -2,7 +2,7 @@
 
 import { useState } from "react";
 import { BoundarySketch } from "@/components/fields/boundary-sketch";
-import { readBoundaryText, type ReadBoundary } from "@/components/fields/read-boundary-text";
+import { readBoundaryBytes, readBoundaryText, type ReadBoundary } from "@/components/fields/read-boundary-text";
 import type { BoundaryChange } from "@/components/hooks/use-fields";
 import { Button } from "@/components/ui/button";
 import { TextArea } from "@/components/ui/form-field";
@@ -10,11 +10,11 @@ import { Notice } from "@/components/ui/notice";
 import { Quantity } from "@/components/units/quantity";
 import { DropZone } from "@/components/upload/drop-zone";
 
-const KINDS = ".geojson,.json,.kml,.zip";
+const KINDS = ".geojson,.json,.kml,.gpx,.zip";
 
 interface Chosen {
   change: BoundaryChange;
-  /** Known at once for GeoJSON; other kinds are read by the server when saved. */
+  /** As the server will read it when saved. */
   read: ReadBoundary | null;
   fileName: string | null;
 }
@@ -38,15 +38,17 @@ export function BoundaryField({ onChange, error }: BoundaryFieldProps) {
     setProblem(trouble);
     onChange(next.change, trouble !== null);
   };
-  const takeText = (text: string, fileName: string | null) => {
+  const takeText = (text: string) => {
     if (text.trim() === "") return choose(NOTHING, null);
     const result = readBoundaryText(text);
     if (!result.ok) return choose(NOTHING, result.error);
-    choose({ change: { kind: "geometry", geometry: result.value.geometry }, read: result.value, fileName }, null);
+    const { geometry } = result.value;
+    choose({ change: { kind: "geometry", geometry }, read: result.value, fileName: null }, null);
   };
   const takeFile = async (file: File) => {
-    if (/\.(geo)?json$/i.test(file.name)) takeText(await file.text(), file.name);
-    else choose({ change: { kind: "file", file }, read: null, fileName: file.name }, null);
+    const result = await readBoundaryBytes(new Uint8Array(await file.arrayBuffer()));
+    if (!result.ok) return choose(NOTHING, result.error);
+    choose({ change: { kind: "file", file }, read: result.value, fileName: file.name }, null);
   };
 
   return (
@@ -58,7 +60,7 @@ export function BoundaryField({ onChange, error }: BoundaryFieldProps) {
       </p>
       <DropZone
         words={chosen.fileName ?? "Choose a boundary file"}
-        hint="GeoJSON, KML or a zipped shapefile"
+        hint="GeoJSON, KML, a zipped shapefile, or a GPX track driven or walked round the field"
         accept={KINDS}
         onFiles={([file]) => void (file && takeFile(file))}
       />
@@ -68,7 +70,7 @@ export function BoundaryField({ onChange, error }: BoundaryFieldProps) {
           rows={6}
           spellCheck={false}
           hint="A Polygon or MultiPolygon, positions as [longitude, latitude] in degrees."
-          onChange={(event) => takeText(event.target.value, null)}
+          onChange={(event) => takeText(event.target.value)}
         />
       ) : (
         <Button kind="quiet" className="-ml-3" onClick={() => setPasting(true)}>
@@ -85,9 +87,11 @@ export function BoundaryField({ onChange, error }: BoundaryFieldProps) {
             </p>
           </div>
         ) : null}
-        {chosen.change.kind === "file" ? (
-          <p className="text-table text-ink-soft">The outline and the area are worked out when you save.</p>
-        ) : null}
+        {chosen.read?.notes.map((note) => (
+          <Notice key={note} state="look">
+            {note}
+          </Notice>
+        ))}
       </div>
     </fieldset>
   );

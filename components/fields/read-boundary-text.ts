@@ -1,12 +1,15 @@
 import type { MultiPolygon, Polygon } from "geojson";
 import { findBoundaryFault } from "@/lib/geo/find-boundary-fault";
 import { geodesicAreaM2 } from "@/lib/geo/geodesic-area";
+import { mergeOverlappingParts, sayOverlap } from "@/lib/geo/merge-overlapping-parts";
 import { fail, succeed, type Result } from "@/lib/result";
 import { Boundary } from "@/lib/schemas/geometry";
 
 export interface ReadBoundary {
   geometry: Polygon | MultiPolygon;
   areaM2: number;
+  /** What was done to what was given, in plain sentences. */
+  notes: string[];
 }
 
 /** Every polygon in a GeoJSON value: a geometry, a Feature, a collection of either. */
@@ -47,8 +50,25 @@ export function readBoundaryText(text: string): Result<ReadBoundary, string> {
       return fail(`This polygon cannot be a boundary: ${parsed.error.issues[0]?.message ?? "bad ring"}.`);
     parts.push(parsed.data);
   }
-  const geometry = joinPolygons(parts);
-  const fault = findBoundaryFault(geometry);
+  return finishBoundary(joinPolygons(parts));
+}
+
+/** Parts that overlap made one, as the server does, with the area that the field will have. */
+function finishBoundary(given: Polygon | MultiPolygon, notes: readonly string[] = []): Result<ReadBoundary, string> {
+  const fault = findBoundaryFault(given);
   if (fault) return fail(`The boundary’s ${fault.place} ${fault.message}.`);
-  return succeed({ geometry, areaM2: geodesicAreaM2(geometry) });
+  const { boundary, overlapM2 } = mergeOverlappingParts(given);
+  const said = overlapM2 === 0 ? [...notes] : [...notes, sayOverlap(overlapM2)];
+  return succeed({ geometry: boundary, areaM2: geodesicAreaM2(boundary), notes: said });
+}
+
+/** A boundary file of any kind to a boundary and its area, or words that say what is wrong. The readers load when needed. */
+export async function readBoundaryBytes(bytes: Uint8Array): Promise<Result<ReadBoundary, string>> {
+  const { readBoundaryFile } = await import("@/lib/fields/read-boundary-file");
+  const read = readBoundaryFile(bytes);
+  if (!read.ok) return fail(read.error.message);
+  const parsed = Boundary.safeParse(read.value.boundary);
+  if (!parsed.success)
+    return fail(`This polygon cannot be a boundary: ${parsed.error.issues[0]?.message ?? "bad ring"}.`);
+  return finishBoundary(parsed.data, read.value.notes);
 }

@@ -1,7 +1,8 @@
 import { BoundaryFileFailure, type BoundaryFileError } from "@/lib/fields/boundary-file-error";
 import { collectPolygons } from "@/lib/fields/collect-polygons";
+import type { ClosedTracks } from "@/lib/fields/close-tracks";
 import { readBoundaryShapefile } from "@/lib/fields/read-boundary-shapefile";
-import { readKml } from "@/lib/fields/read-kml";
+import { readPlaceXml } from "@/lib/fields/read-place-xml";
 import { fail, succeed, type Result } from "@/lib/result";
 
 /** Not yet checked against `Boundary`: that names the position that breaks a rule. */
@@ -28,13 +29,16 @@ function parseGeoJson(text: string): unknown {
   }
 }
 
-function parseFile(bytes: Uint8Array): unknown {
+function parseFile(bytes: Uint8Array): ClosedTracks {
   if (bytes.length === 0) throw new BoundaryFileFailure("empty-file", "The file is empty.");
-  if (isZip(bytes)) return readBoundaryShapefile(bytes);
+  if (isZip(bytes)) return { places: readBoundaryShapefile(bytes), notes: [] };
   const text = decodeText(bytes);
-  if (text.startsWith("{")) return parseGeoJson(text);
-  if (text.startsWith("<")) return readKml(text);
-  throw new BoundaryFileFailure("unknown-file-kind", "A boundary is GeoJSON, KML or a zipped shapefile; this is none.");
+  if (text.startsWith("{")) return { places: parseGeoJson(text), notes: [] };
+  if (text.startsWith("<")) return readPlaceXml(text);
+  throw new BoundaryFileFailure(
+    "unknown-file-kind",
+    "A boundary is GeoJSON, KML, GPX or a zipped shapefile; this is none.",
+  );
 }
 
 /** One polygon stays one; several become one boundary of several parts. @throws BoundaryFileFailure without any */
@@ -50,10 +54,17 @@ export function toRawBoundary(value: unknown): RawBoundary {
     : { type: "MultiPolygon", coordinates: polygons };
 }
 
-/** The polygons of a GeoJSON, KML or zipped shapefile, told apart by their bytes and not by a name. */
-export function readBoundaryFile(bytes: Uint8Array): Result<RawBoundary, BoundaryFileError> {
+export interface BoundaryFile {
+  boundary: RawBoundary;
+  /** What was done to what the file holds, in plain sentences. */
+  notes: string[];
+}
+
+/** The polygons of a GeoJSON, KML, GPX or zipped shapefile, told apart by their bytes and not by a name. */
+export function readBoundaryFile(bytes: Uint8Array): Result<BoundaryFile, BoundaryFileError> {
   try {
-    return succeed(toRawBoundary(parseFile(bytes)));
+    const { places, notes } = parseFile(bytes);
+    return succeed({ boundary: toRawBoundary(places), notes });
   } catch (error) {
     if (error instanceof BoundaryFileFailure) return fail(error.error);
     throw error;

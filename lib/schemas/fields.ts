@@ -48,3 +48,5 @@ export const Field = z.object({
 });
 export type Field = z.infer<typeof Field>;
 export const FieldList = listOf(Field);
+/** With what was done to the boundary that was sent: ends joined, ground in two parts counted once. */
+export const FieldWithNotes = Field.extend({ notes: z.array(z.string()) });

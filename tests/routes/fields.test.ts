@@ -134,6 +134,10 @@ describe("deleting a field that holds logs", () => {
                '{"records":0,"rows":0,"readings":0,"flagged":0,"rejected":0,"passes":0}', 'a.csv', 1, 'aa11', 'failed')`,
       [id],
     );
+    await adminDb().$client.query(
+      `insert into log_files (organisation_id, log_id, part, file_name, file_bytes, sha256)
+       values ('org_larkspurflats', 'log_forced', 0, 'a.csv', 1, 'aa11')`,
+    );
     const share = {
       audience: "public",
       layers: ["boundary"],
@@ -167,6 +171,32 @@ describe("boundary files", () => {
   it("takes GeoJSON, whatever wraps the polygon", async () => {
     const collection = { type: "FeatureCollection", features: [{ type: "Feature", properties: {}, geometry: SQUARE }] };
     expect(await put(JSON.stringify(collection), "field.geojson", 200)).toMatchObject({ boundary: SQUARE });
+  });
+
+  it("takes a GPX track that goes round, and says how far its ends lay apart", async () => {
+    const points = [...SQUARE.coordinates[0]!.slice(0, 4), [-98.01, 38.5002]];
+    const track = points.map(([lon, lat]) => `<trkpt lat="${lat}" lon="${lon}"><ele>420</ele></trkpt>`).join("");
+    const text = `<gpx xmlns="http://www.topografix.com/GPX/1/1"><trk><trkseg>${track}</trkseg></trk></gpx>`;
+    const field = (await put(kml(text), "edge.gpx", 200)) as {
+      notes: string[];
+      boundary: { coordinates: unknown[][] };
+    };
+    expect(field.notes).toEqual([expect.stringMatching(/^The ends of track 1 lay 22 m apart/)]);
+    expect(field.boundary.coordinates[0]).toHaveLength(6);
+    const way = text.replace(/<trkpt lat="38.5002".*?<\/trkpt>/, "");
+    expect(await put(kml(way.replace(/(<trkpt.*?<\/trkpt>){1}/, "")), "way.gpx", 422)).toMatchObject({
+      code: "no-polygon",
+    });
+  });
+
+  it("counts ground that lies in two parts once, and says so", async () => {
+    const shifted = SQUARE.coordinates.map((ring) => ring.map(([lon = 0, lat = 0]) => [lon + 0.005, lat]));
+    const both = { type: "MultiPolygon", coordinates: [SQUARE.coordinates, shifted] };
+    const one = (await put(JSON.stringify(SQUARE), "one.geojson", 200)) as { areaM2: number; notes: string[] };
+    const two = (await put(JSON.stringify(both), "two.geojson", 200)) as { areaM2: number; notes: string[] };
+    expect(one.notes).toEqual([]);
+    expect(two.areaM2 / one.areaM2).toBeCloseTo(1.5, 6);
+    expect(two.notes).toEqual([expect.stringMatching(/^Parts of the boundary overlap by \d{3},\d{3} m2/)]);
   });
 
   it("takes KML and drops its heights", async () => {

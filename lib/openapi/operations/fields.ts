@@ -1,5 +1,5 @@
 import type { Operation } from "@/lib/openapi/operation";
-import { Field, FieldInput, FieldList, FieldPatch } from "@/lib/schemas/fields";
+import { Field, FieldWithNotes, FieldInput, FieldList, FieldPatch } from "@/lib/schemas/fields";
 import { Boundary } from "@/lib/schemas/geometry";
 import { ForceQuery, ListQuery } from "@/lib/schemas/listing";
 
@@ -62,10 +62,14 @@ export const fieldOperations: Operation[] = [
     summary: "Set the boundary",
     description:
       "As JSON (geometry, feature or collection; its polygons become one boundary), or as a file in a multipart body. " +
-      "A ring that crosses itself is refused with the place of the crossing. `areaM2` is the area on the WGS 84 ellipsoid.",
+      "A ring that crosses itself is refused with the place of the crossing; ground that lies in two parts counts once. " +
+      "Tracks and routes of a GPX that come back to within a tenth of their length are closed. `areaM2` is the area on the " +
+      "WGS 84 ellipsoid; `notes` says what was done on the way.",
     body: Boundary,
-    form: { file: { kind: "file", required: true, description: "GeoJSON, KML or zipped shapefile, at most 5 MB" } },
-    replies: [{ status: 200, description: "The field with its new area", schema: Field }],
+    form: {
+      file: { kind: "file", required: true, description: "GeoJSON, KML, GPX or zipped shapefile, at most 5 MB" },
+    },
+    replies: [{ status: 200, description: "The field with its new area", schema: FieldWithNotes }],
     errors: ["unsupported_file", "too_large"],
   },
 ];

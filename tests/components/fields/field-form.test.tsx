@@ -48,4 +48,26 @@ describe("a field's boundary", () => {
     await vi.waitFor(() => expect(onSave).toHaveBeenCalledOnce());
     expect(onSave.mock.calls[0]?.[1]).toMatchObject({ kind: "geometry" });
   });
+
+  it("from a GPX track shows its outline, its area and how far it was open before it is saved", async () => {
+    const onSave = vi.fn();
+    render(
+      <UnitsProvider start="metric" keep={false}>
+        <FieldForm
+          start={{ name: "East quarter", farm: null, landowner: null }}
+          {...{ saveWords: "Make the field", pending: false, failure: null, onSave }}
+        />
+      </UnitsProvider>,
+    );
+    const points = [a, b, c, d].map((at) => `<trkpt lon="${at?.[0]}" lat="${at?.[1]}"/>`).join("");
+    const near = '<trkpt lon="-98.6" lat="38.40005"/>';
+    const text = `<gpx xmlns="http://www.topografix.com/GPX/1/1"><trk><trkseg>${points}${near}</trkseg></trk></gpx>`;
+    const file = new File([text], "edge.gpx");
+    file.arrayBuffer = async () => new TextEncoder().encode(text).buffer;
+    await userEvent.upload(screen.getByLabelText("Choose a boundary file"), file);
+    expect(await screen.findByText(/ends of track 1 lay 5\.\d m apart/)).toBeInTheDocument();
+    expect(screen.getByRole("img", { name: "Outline of the boundary" })).toBeInTheDocument();
+    await userEvent.click(screen.getByRole("button", { name: "Make the field" }));
+    await vi.waitFor(() => expect(onSave.mock.calls[0]?.[1]).toMatchObject({ kind: "file", file }));
+  });
 });

@@ -46,7 +46,7 @@ function errorOf(bytes: Uint8Array): string {
 describe("a zipped shapefile", () => {
   it("gives its polygon", () => {
     const read = readBoundaryFile(zipSync({ "field/edge.shp": makeShp(SQUARE) }));
-    expect(read).toEqual({ ok: true, value: { type: "Polygon", coordinates: [SQUARE] } });
+    expect(read).toEqual({ ok: true, value: { boundary: { type: "Polygon", coordinates: [SQUARE] }, notes: [] } });
   });
 
   it("is brought to degrees by its .prj", () => {
@@ -58,7 +58,7 @@ describe("a zipped shapefile", () => {
       'PARAMETER["false_easting",500000],PARAMETER["false_northing",0],UNIT["metre",1]]';
     const planar = SQUARE.map((position) => proj4(utm, position as [number, number]));
     const read = readBoundaryFile(zipSync({ "edge.shp": makeShp(planar), "edge.prj": bytesOf(wkt) }));
-    const [ring] = (read.ok ? read.value.coordinates : []) as number[][][];
+    const [ring] = (read.ok ? read.value.boundary.coordinates : []) as number[][][];
     ring!.forEach((position, i) => {
       expect(position[0]).toBeCloseTo(SQUARE[i]![0]!, 8);
       expect(position[1]).toBeCloseTo(SQUARE[i]![1]!, 8);
@@ -99,15 +99,63 @@ describe("several polygons", () => {
       ],
     };
     const read = readBoundaryFile(bytesOf(JSON.stringify(file)));
-    expect(read).toEqual({ ok: true, value: { type: "MultiPolygon", coordinates: [[SQUARE], [far]] } });
+    const boundary = { type: "MultiPolygon", coordinates: [[SQUARE], [far]] };
+    expect(read).toEqual({ ok: true, value: { boundary, notes: [] } });
   });
 });
 
 describe("KML", () => {
   it("is told from other XML, and refused with a document type in any case or spacing", () => {
-    expect(errorOf(bytesOf("<gpx></gpx>"))).toContain("not <kml>");
+    expect(errorOf(bytesOf("<osm></osm>"))).toContain("neither KML nor GPX: its outermost element is <osm>");
     for (const head of ["<!DOCTYPE kml>", "<! doctype kml>", '<!ENTITY a "b">']) {
       expect(errorOf(bytesOf(`<?xml version="1.0"?>${head}<kml></kml>`))).toContain("file-unsafe");
     }
+  });
+});
+
+/** A GPX 1.1 document (Topografix schema: lat and lon in degrees as attributes). */
+function gpxOf(...tracks: { name?: string; route?: boolean; segments: number[][][] }[]): Uint8Array {
+  const points = (tag: string, line: number[][]) =>
+    line.map(([lon, lat]) => `<${tag} lat="${lat}" lon="${lon}"><ele>520</ele></${tag}>`).join("");
+  const body = tracks.map(({ name, route, segments }) => {
+    const named = name ? `<name>${name}</name>` : "";
+    if (route) return `<rte>${named}${points("rtept", segments.flat())}</rte>`;
+    return `<trk>${named}${segments.map((line) => `<trkseg>${points("trkpt", line)}</trkseg>`).join("")}</trk>`;
+  });
+  return bytesOf(
+    `<?xml version="1.0"?><gpx version="1.1" xmlns="http://www.topografix.com/GPX/1/1">${body.join("")}</gpx>`,
+  );
+}
+
+describe("GPX", () => {
+  const corners = SQUARE.slice(0, 4);
+
+  it("gives the polygon of a track or a route that comes back to its start", () => {
+    for (const route of [false, true]) {
+      const read = readBoundaryFile(gpxOf({ name: "Edge", route, segments: [SQUARE] }));
+      expect(read).toEqual({ ok: true, value: { boundary: { type: "Polygon", coordinates: [SQUARE] }, notes: [] } });
+    }
+  });
+
+  it("joins the ends of one that nearly does, over its segments, and says how far open it was", () => {
+    // 0.0003 degrees of longitude at 38.5 N, hand-worked on a sphere: 6378 km x 0.0003 x pi / 180 x cos(38.5) = 26.1 m.
+    const open = [...corners, [-98.0097, 38.5]];
+    const read = readBoundaryFile(gpxOf({ name: "Edge", segments: [open.slice(0, 2), open.slice(2)] }));
+    expect(read).toMatchObject({ ok: true, value: { boundary: { type: "Polygon" } } });
+    expect(read.ok && read.value.boundary.coordinates).toEqual([[...open, open[0]]]);
+    expect(read.ok && read.value.notes).toEqual([
+      'The ends of "Edge" lay 26 m apart and were joined by a straight line.',
+    ]);
+  });
+
+  it("is refused where no track goes round, with how far it is open, and passes over ways beside one that does", () => {
+    const way = { name: "Way to the field", segments: [corners.slice(0, 3)] };
+    expect(errorOf(gpxOf(way))).toMatch(
+      /no-polygon: No track goes round a field: "Way to the field" ends 14\d\d m from/,
+    );
+    expect(errorOf(gpxOf())).toContain("no track or route of three or more points");
+    const read = readBoundaryFile(gpxOf(way, { segments: [SQUARE] }));
+    expect(read.ok && read.value.notes).toHaveLength(1);
+    expect(read.ok && read.value.notes[0]).toContain('"Way to the field" was left out');
   });
 });

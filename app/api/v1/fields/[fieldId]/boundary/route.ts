@@ -1,12 +1,14 @@
 import { readBoundaryRequest } from "@/app/_server/read-boundary-request";
 import { reply } from "@/app/_server/reply";
 import { withScope } from "@/app/_server/with-scope";
-import { Field } from "@/lib/schemas/fields";
+import { FieldWithNotes } from "@/lib/schemas/fields";
+import { noteOverlap } from "@/lib/server/fields/check-boundary";
 import { updateField } from "@/lib/server/fields/update-field";
 
 export const PUT = withScope<"fieldId">("fields.write", async ({ container, scope, params, request }) => {
-  const boundary = await readBoundaryRequest(request);
-  return reply(Field, await updateField(container, scope, { fieldId: params.fieldId, patch: { boundary } }));
+  const { boundary, notes } = await readBoundaryRequest(request);
+  const field = await updateField(container, scope, { fieldId: params.fieldId, patch: { boundary } });
+  return reply(FieldWithNotes, { ...field, notes: [...notes, ...noteOverlap(boundary)] });
 });
 
 export {
