@@ -6,16 +6,7 @@ import { median } from "@/lib/statistics/median";
 import { middleReadings, type MiddleReadings } from "@/lib/statistics/middle-readings";
 import { scoreRows, Z_LIMIT, type RowScores } from "@/lib/statistics/row-deviation";
 import { rowReason } from "@/lib/statistics/row-reason";
-import { deviationSeries, emptySeries, mapRowSeries, type RowSeries } from "@/lib/statistics/row-series";
-import {
-  atLimitFromN,
-  contactLostShare,
-  distanceShare,
-  longestStretch,
-  underTargetBelowN,
-} from "@/lib/statistics/row-shares";
-import { selectQuantiles } from "@/lib/statistics/select-quantiles";
-import { weightedMoments } from "@/lib/statistics/weighted-moments";
+import { rowFigures, type RowFigures } from "@/lib/statistics/row-figures";
 
 /** What one row did over a log. Every mean, sd, quantile and share is weighted by the distance the row travelled. */
 export interface RowStatisticsItem {
@@ -80,14 +71,10 @@ export function rowStatistics(
  */
 export function describeRows(placed: PlacedLog, channel: ResolvedChannel, distances: Float32Array): RowStatistics {
   const middles = channel.perRow ? middleReadings(channel.values, channel.rows) : null;
-  const room = emptySeries(placed.log.records);
-  const found = mapRowSeries(placed, channel, distances, (series, row) => ({
-    ...describeRow(placed, channel, { series, row }),
-    typicalDeviation: middles ? medianOf(deviationSeries(series, middles, room)) : NaN,
-  }));
-  const described = found.map(({ typicalDeviation: _, ...item }) => item);
+  const figures = rowFigures(placed, channel, { distances, middles });
+  const described = figures.map(describeFigures);
   const scores = scoreRows(
-    found.map((item) => item.typicalDeviation),
+    figures.map((one) => one.typicalDeviation),
     { maxTrackRows: Math.max(2, Math.floor(WHEEL_WIDTH_M / placed.geometry.widthM[0]!)) },
   );
   const medianOfRows = median(described.map((item) => item.p50 ?? NaN));
@@ -110,47 +97,30 @@ function isFlagged(scores: RowScores, row: number, medianOfRows: number): boolea
   return z !== null && Math.abs(z) > Z_LIMIT && large;
 }
 
-function medianOf({ values, weightsM }: RowSeries): number {
-  return selectQuantiles(values, weightsM, [0.5]).quantiles[0] ?? NaN;
-}
-
 /** A tractor's wheel or belt is at most about this wide. Common practice, no source. */
 const WHEEL_WIDTH_M = 1;
 
 type Described = Omit<RowStatisticsItem, "deviationZ" | "flagged" | "reason">;
 
-function describeRow(
-  placed: PlacedLog,
-  channel: ResolvedChannel,
-  { series, row }: { series: RowSeries; row: number },
-): Described {
-  const { min, max, weight, quantiles } = selectQuantiles(
-    series.values,
-    series.weightsM,
-    [0.05, 0.25, 0.5, 0.75, 0.95],
-  );
-  const { mean, sd } = weightedMoments(series.values, series.weightsM);
+function describeFigures({ quantiles, typicalDeviation: _, ...figures }: RowFigures, index: number): Described {
   const at = (k: number) => finiteOrNull(quantiles[k] ?? NaN);
-  const under = underTargetBelowN(placed, channel);
-  const limit = atLimitFromN(placed, channel);
-  const isUnder = (value: number) => under !== null && value < under;
   return {
-    row,
-    n: series.values.length,
-    distanceM: weight,
-    mean: finiteOrNull(mean),
-    sd: finiteOrNull(sd),
-    min: finiteOrNull(min),
+    row: index + 1,
+    n: figures.n,
+    distanceM: figures.distanceM,
+    mean: finiteOrNull(figures.mean),
+    sd: finiteOrNull(figures.sd),
+    min: finiteOrNull(figures.min),
     p05: at(0),
     p25: at(1),
     p50: at(2),
     p75: at(3),
     p95: at(4),
-    max: finiteOrNull(max),
-    shareUnderTarget: under === null ? null : distanceShare(series, isUnder),
-    shareAtLimit: limit === null ? null : distanceShare(series, (value) => value >= limit),
-    shareContactLost: contactLostShare(series, channel),
-    longestUnderTargetM: under === null ? null : (longestStretch(placed, series, isUnder)?.lengthM ?? 0),
+    max: finiteOrNull(figures.max),
+    shareUnderTarget: figures.shareUnderTarget,
+    shareAtLimit: figures.shareAtLimit,
+    shareContactLost: figures.shareContactLost,
+    longestUnderTargetM: figures.longestUnderTargetM,
   };
 }
 

@@ -11,9 +11,10 @@ export interface WeightedSummary {
   quantiles: number[];
 }
 
-const BUCKETS = 4096;
+/** Steps from least to most. */
+export const BUCKETS = 4096;
 /** Bucket of a reading that counts for nothing. */
-const NOWHERE = BUCKETS;
+export const NOWHERE = BUCKETS;
 
 /**
  * Weighted quantiles by the midpoint definition without sorting everything: readings are counted into 4096 even steps from
@@ -23,17 +24,33 @@ const NOWHERE = BUCKETS;
 export function selectQuantiles(values: Float32Array, weights: Float32Array, ps: readonly number[]): WeightedSummary {
   const { min, max } = rangeOf(values);
   const counted = countBuckets(values, weights, min, max);
+  return { min, max, ...selectAmong(values, weights, counted, ps) };
+}
+
+/** Weighted quantiles of readings that are counted into steps already. */
+// kernel: a thin front of the hot loops below
+export function selectAmong(
+  values: Float32Array,
+  weights: Float32Array,
+  counted: Counted,
+  ps: readonly number[],
+): Pick<WeightedSummary, "weight" | "quantiles"> {
   const { bucketOf, sums } = counted;
   let weight = 0;
   for (const sum of sums) weight += sum;
-  if (!(weight > 0)) return { min, max, weight, quantiles: ps.map(() => NaN) };
+  if (!(weight > 0)) return { weight, quantiles: ps.map(() => NaN) };
   const places = ps.map((p) => findPlace(sums, p * weight));
   const steps = describeSteps(values, weights, bucketOf, places);
   const isPlain = ({ low, bucket, high }: Place) => ![low, bucket, high].some((step) => steps.mixed[step] === 1);
   const quantiles = places.map((place) =>
     isPlain(place) ? valueBetween(steps, sums, place) : valueAmong(values, weights, counted, place),
   );
-  return { min, max, weight, quantiles };
+  return { weight, quantiles };
+}
+
+/** The value where the running weight reaches `target`, of steps that hold one value each. */
+export function valueAt(steps: Steps, sums: Float64Array, target: number): number {
+  return valueBetween(steps, sums, findPlace(sums, target));
 }
 
 /** Where a quantile lies: its step, the nearest steps below and above that hold anything, its weight and that below the step. */
@@ -46,7 +63,7 @@ interface Place {
 }
 
 /** What tells whether a step holds one value; known of the steps about the quantiles. */
-interface Steps {
+export interface Steps {
   /** 1 where the step holds several values. */
   mixed: Uint8Array;
   /** The step's first value, and the weights of its first and last reading. */
@@ -66,7 +83,8 @@ function rangeOf(values: Float32Array): { min: number; max: number } {
   return max < min ? { min: NaN, max: NaN } : { min, max };
 }
 
-interface Counted {
+/** Readings counted into steps. */
+export interface Counted {
   /** Step of every reading. */
   bucketOf: Uint16Array;
   /** Weight in every step. */
