@@ -43,17 +43,12 @@ export function CoveragePanel() {
           <CoverageTable lines={lines} />
           <LayerSwitches />
           <p className="pb-2 text-table text-ink-soft">
-            Measured on a grid of {formatCell(coverage.data.resolutionM)}.
+            Measured on a grid of {format(coverage.data.resolutionM, "m", "rowSpacing")}.
           </p>
         </>
       ) : null}
     </details>
   );
-}
-
-/** A length of the grid, to the centimetre in either system of units. */
-function formatCell(resolutionM: number): string {
-  return formatQuantity(resolutionM, "m", "metric", { decimals: 2 }).text;
 }
 
 function CoverageTable({ lines }: { lines: CoverageLine[] }) {
@@ -63,8 +58,7 @@ function CoverageTable({ lines }: { lines: CoverageLine[] }) {
       <thead className="sr-only">
         <tr>
           <th scope="col">What</th>
-          <th scope="col">Area</th>
-          <th scope="col">Share</th>
+          <th scope="col">Area and share</th>
           <th scope="col">Map</th>
         </tr>
       </thead>
@@ -77,8 +71,8 @@ function CoverageTable({ lines }: { lines: CoverageLine[] }) {
             </th>
             <td className="px-2 py-1.5 text-right align-top">
               <Quantity value={line.areaM2} unit="m2" />
+              <span className="block whitespace-nowrap text-ink-soft">{shareWords(line)}</span>
             </td>
-            <td className="py-1.5 text-right align-top text-ink-soft">{shareWords(line)}</td>
             <td className="py-0.5 pl-2 text-right align-top">
               {line.layer && line.areaM2 > 0 ? <LayerButton layer={line.layer} name={line.words} /> : null}
             </td>

@@ -40,7 +40,7 @@ export function FieldBook({ fieldId, logsHref, basemap, role }: FieldBookProps) 
   if (!log) return <NoLogYet logs={logs.data.items} logsHref={logsHref} />;
   return (
     <OpenLog
-      key={`${log.id} ${log.version}`}
+      key={`${log.id} ${log.version} ${log.revision ?? 0}`}
       field={field.data}
       log={log}
       logsHref={logsHref}
@@ -80,7 +80,7 @@ function OpenLog({ field, log, logsHref, basemap, picker }: OpenLogProps) {
         edges: edges && channel === start.channel ? { [channel]: edges } : {},
       }),
       log,
-      logVersion: { logId: log.id, version: log.version },
+      logVersion: { logId: log.id, version: log.version, revision: log.revision },
     };
   });
   useAddress(book.store, log.id);

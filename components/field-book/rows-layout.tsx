@@ -1,6 +1,8 @@
 "use client";
 
 import { useEffect, useState, type ReactNode } from "react";
+import { CleanedSwitch } from "@/components/cleaning/cleaned-switch";
+import { CleaningLink } from "@/components/cleaning/cleaning-link";
 import { CoveragePanel } from "@/components/coverage/coverage-panel";
 import { ChannelSwitch } from "@/components/field-book/channel-switch";
 import { useBook, useBookState, useLogVersion } from "@/components/field-book/field-book-context";
@@ -8,6 +10,7 @@ import { FieldStrip } from "@/components/field-book/field-strip";
 import { Legend } from "@/components/field-book/legend";
 import { LineUp } from "@/components/field-book/line-up";
 import { LineUpTable } from "@/components/field-book/line-up-table";
+import { openingBounds } from "@/components/field-book/opening-bounds";
 import { PassHeading } from "@/components/field-book/pass-heading";
 import { RowMap } from "@/components/field-book/row-map";
 import { UnrolledPass } from "@/components/field-book/unrolled-pass";
@@ -23,9 +26,8 @@ import { useWideScreen } from "@/components/field-book/use-wide-screen";
 import { VerdictPanel } from "@/components/field-book/verdict-panel";
 import type { BasemapConfig } from "@/components/map/basemap-config";
 import type { Bounds } from "@/lib/map-state/field-book-store";
-import { boundsOfGeometry } from "@/lib/map-state/geometry-bounds";
 import type { Field } from "@/lib/schemas/fields";
-import type { Log, PassBody } from "@/lib/schemas/logs";
+import type { PassBody } from "@/lib/schemas/logs";
 
 export interface RowsLayoutProps {
   field: Field;
@@ -47,9 +49,12 @@ export function RowsLayout({ field, basemap, picker, logsHref }: RowsLayoutProps
   return (
     <div className={WIDE_FRAME}>
       <div className="relative grid min-h-0 min-w-0 grid-rows-[auto_minmax(0,1fr)_auto_minmax(13rem,34%)]">
-        <div className="flex items-center justify-between gap-4 border-b border-rule px-4 py-2">
-          <ChannelSwitch />
-          {picker}
+        <div className="border-b border-rule px-4 py-2">
+          <div className="flex items-center justify-between gap-4">
+            <ChannelSwitch />
+            {picker}
+          </div>
+          <CleanedSwitch />
         </div>
         <div className="min-h-0 border-b border-rule">{parts.map}</div>
         <div className="border-b border-rule px-4 py-2">{parts.legend}</div>
@@ -81,6 +86,7 @@ function NarrowRows({ parts, picker }: { parts: Parts; picker: ReactNode }) {
       <div className="space-y-2 px-4 py-3">
         {picker}
         <ChannelSwitch />
+        <CleanedSwitch />
       </div>
       <div className="h-[26rem]">{parts.map}</div>
       <div className="px-4 py-3">{parts.legend}</div>
@@ -137,7 +143,12 @@ function useParts({ field, basemap, wide, logsHref }: PartsOptions) {
         openFirst={wide}
       />
     ),
-    coverage: <CoveragePanel />,
+    coverage: (
+      <>
+        <CoveragePanel />
+        <CleaningLink logsHref={logsHref} />
+      </>
+    ),
     lineUp: <LineUp statistics={statistics} classes={classes} onTable={() => setAsTable(true)} />,
     table: asTable && statistics ? <LineUpTable statistics={statistics} onClose={() => setAsTable(false)} /> : null,
     passHeading: <PassHeading passes={passes} />,
@@ -172,13 +183,6 @@ function openingPass(passes: readonly PassBody[]): number | undefined {
   const inside = passes.filter((pass) => !pass.headland);
   const byLength = (inside.length > 0 ? inside : [...passes]).toSorted((a, b) => b.lengthM - a.lengthM);
   return byLength[0]?.pass;
-}
-
-/** The boundary, or what the log covers. */
-function openingBounds(field: Field, log: Log): Bounds {
-  const [west, south, east, north] = log.bbox ?? [-180, -60, 180, 75];
-  // Across the antimeridian east runs on past 180.
-  return boundsOfGeometry(field.boundary) ?? [west, south, east < west ? east + 360 : east, north];
 }
 
 /** The page's frame while nothing is known yet: same places, nothing jumps. */

@@ -70,8 +70,9 @@ export function useOverview(log: LogVersion, channel: string) {
   });
 }
 
-export function useTileJson(log: LogVersion, channel: string) {
+export function useTileJson(log: LogVersion, channel: string, isWanted = true) {
   return useQuery({
+    enabled: isWanted,
     queryKey: logVersionKey(log, "tiles", channel),
     queryFn: () => fetchTileJson(log, channel),
     ...FOREVER,

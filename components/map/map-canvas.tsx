@@ -2,7 +2,7 @@
 
 import "maplibre-gl/dist/maplibre-gl.css";
 import type { Map as MapLibreMap } from "maplibre-gl";
-import { useEffect, useRef, useState, type ReactNode } from "react";
+import { useEffect, useId, useRef, useState, type ReactNode } from "react";
 import { chooseStyle } from "@/components/map/base-style";
 import type { BasemapConfig } from "@/components/map/basemap-config";
 import { loadMapLibre } from "@/components/map/load-maplibre";
@@ -13,6 +13,8 @@ import type { Bounds, MapView } from "@/lib/map-state/field-book-store";
 
 export interface MapCanvasProps {
   basemap: BasemapConfig;
+  /** What it is called where there are several. */
+  label?: string;
   /** Where the map opens; it never moves by itself afterwards. */
   bounds: Bounds;
   view?: MapView | null;
@@ -31,7 +33,8 @@ const FIT_PADDING_PX = 28;
 
 /** A map with our ground, buttons and keys. What lies on it is drawn by whoever gets it through `onMap`. */
 export function MapCanvas(props: MapCanvasProps) {
-  const { bounds, description, children } = props;
+  const { bounds, description, label = "Map", children } = props;
+  const wordsId = useId();
   const container = useRef<HTMLDivElement>(null);
   const [map, setMap] = useState<MapLibreMap | null>(null);
   const [trouble, setTrouble] = useState(false);
@@ -62,9 +65,9 @@ export function MapCanvas(props: MapCanvasProps) {
   return (
     <div className="relative h-full min-h-0 overflow-hidden bg-sheet">
       <div className="absolute inset-0">
-        <div ref={container} role="region" aria-label="Map" aria-describedby="map-words" className="size-full" />
+        <div ref={container} role="region" aria-label={label} aria-describedby={wordsId} className="size-full" />
       </div>
-      <p id="map-words" className="sr-only">
+      <p id={wordsId} className="sr-only">
         {description}
       </p>
       {trouble ? (

@@ -109,6 +109,9 @@ function Outcome({ log, fieldId, fieldPath, role }: OutcomeProps) {
               What the columns mean
             </Link>
           ) : null}
+          <Link href={`${fieldPath}/logs/${log.id}/cleaning`} className={buttonClass("quiet")}>
+            Cleaning rules
+          </Link>
         </p>
       </div>
     );
