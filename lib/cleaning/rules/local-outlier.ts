@@ -8,13 +8,16 @@ import { selectRank } from "@/lib/statistics/middle-readings";
 const MAD_TO_SD = 1.4826;
 /** Fewer readings than this say nothing about what is usual. */
 const FEWEST = 5;
+/** Where no other row confirms it, at least so many neighbours are asked: the spread of a few is often far too small. */
+const ALONE = 30;
 /** 0 and 1 are both usual for these: what stands alone there is the very event that they log. */
 const NOT_JUDGED: ReadonlySet<ChannelId> = new Set<ChannelId>(["contact", "working"]);
 
 /**
  * Readings more than `maxSpreads` robust standard deviations (1.4826 MAD about the median, at least one step of the channel)
  * off both the readings of the same row within `withinM` along its pass and those of the other rows at the same record. A
- * channel logged once for the whole machine has no other rows: the first alone decides. Not judged: contact, yes/no channels.
+ * channel logged once for the whole machine has no other rows: the first alone decides, on the 30 nearest readings at least.
+ * Not judged: contact, yes/no channels.
  */
 export function findLocalOutliers({ placed, alongM }: RuleInput, rule: CleaningRule<"local-outlier">): RuleMask {
   const channels = new Map<ChannelId, Uint8Array>();
@@ -112,8 +115,11 @@ function confirm(channel: LogChannel, { members, alongM, rule, suspects, marks }
       const reading = values[members[other]! * rows + row]!;
       if (reading === reading) room[n++] = reading;
     };
-    for (let k = member - 1; k >= 0 && here - alongM[members[k]!]! <= rule.withinM; k--) take(k);
-    for (let k = member + 1; k < members.length && alongM[members[k]!]! - here <= rule.withinM; k++) take(k);
+    const reach = rows > 1 ? 0 : ALONE / 2;
+    const isNear = (k: number) =>
+      Math.abs(k - member) <= reach || Math.abs(alongM[members[k]!]! - here) <= rule.withinM;
+    for (let k = member - 1; k >= 0 && isNear(k); k--) take(k);
+    for (let k = member + 1; k < members.length && isNear(k); k++) take(k);
     if (n < FEWEST) continue;
     const middle = medianOf(room, n);
     for (let i = 0; i < n; i++) room[i] = Math.abs(room[i]! - middle);

@@ -29,7 +29,7 @@ export function findOverlaps({ placed }: RuleInput, rule: CleaningRule<"overlap"
   const whole = new Uint8Array(placed.log.records);
   const frame: CellFrame = { groups: groupRows(placed.geometry), xAxisDeg: NORTH_UP };
   const bounds = cellBounds(placed, frame);
-  if (!bounds) return { cells, whole };
+  if (!bounds) return {};
   const grid = createBitGrid(bounds, Math.min(...placed.geometry.widthM) / CELLS_PER_SPACING, MAX_CELLS);
   const waiting: Pass[] = [];
   const inOrder = [...placed.passes].sort((a, b) => a.pass - b.pass);
@@ -43,7 +43,8 @@ export function findOverlaps({ placed }: RuleInput, rule: CleaningRule<"overlap"
     if (isWorked) markPass(placed, pass, { grid, minShare: rule.minShareFraction, cells, whole });
     waiting.push(pass);
   }
-  return { cells, whole };
+  const has = (perRow: boolean) => placed.log.channels.some((channel) => channel.perRow === perRow);
+  return { ...(has(true) ? { cells } : {}), ...(has(false) ? { whole } : {}) };
 }
 
 function endedBefore(earlier: Pass, later: Pass, minApartS: number): boolean {

@@ -5,10 +5,10 @@ import { listAdjustments } from "@/db/queries/adjustments";
 import type { LogRow } from "@/db/queries/logs";
 import type { Adjustments } from "@/lib/adjustments/adjustments";
 import { changeRules, type RuleFault } from "@/lib/cleaning/change-rules";
-import type { CleaningRules } from "@/lib/cleaning/rule-catalogue";
+import { ruleFacts, type CleaningRules } from "@/lib/cleaning/rule-catalogue";
 import { AppError } from "@/lib/errors";
 import { packPlacedLog } from "@/lib/logs/packed-placed-log";
-import { CleaningPreview, type Cleaning, type CleaningRulesChange } from "@/lib/schemas/cleaning";
+import { CleaningPreview, type Cleaning, type CleaningItem, type CleaningRulesChange } from "@/lib/schemas/cleaning";
 import type { Scope } from "@/lib/scope";
 import { askCleaningThread } from "@/lib/server/adjustments/ask-cleaning-thread";
 import { findRevision, reviseAdjustments, revertAdjustments } from "@/lib/server/adjustments/revise-adjustments";
@@ -83,10 +83,16 @@ async function countKept(
 ): Promise<CleaningPreview> {
   const key = { logId: log.id, version: log.version, kind: `cleaning#${revision}` };
   const kept = CleaningPreview.safeParse(await withOrganisation(log, (tx) => findLogResult(tx, log, key)));
-  if (kept.success) return kept.data;
+  // Counts are kept, words are those of today.
+  if (kept.success) return { ...kept.data, items: kept.data.items.map(wordAnew) };
   const counted = await countAdjusted(container, log, adjustments);
   await withOrganisation(log, (tx) => saveLogResult(tx, log, { ...key, body: counted }));
   return counted;
+}
+
+function wordAnew(item: CleaningItem): CleaningItem {
+  const { label, words, fixed } = ruleFacts(item.code);
+  return { ...item, label, words, fixed };
 }
 
 async function countAdjusted(

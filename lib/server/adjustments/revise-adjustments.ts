@@ -11,11 +11,12 @@ import { changeLog } from "@/db/queries/logs";
 import { isAsRead, noAdjustments, type Adjustments } from "@/lib/adjustments/adjustments";
 import { AppError } from "@/lib/errors";
 import type { Scope } from "@/lib/scope";
+import { settleLookNotes } from "@/lib/server/alignment/settle-look-notes";
 import { getLogForChange } from "@/lib/server/logs/change-log";
 
 export interface AdjustmentsChange {
-  /** Takes the place of all delays; left out to keep those in force. */
-  delaysS?: Adjustments["delaysS"];
+  /** Delays to take the place of those in force; left out to keep them. */
+  delaysS?: (now: Adjustments["delaysS"]) => Adjustments["delaysS"];
   /** Rules to take the place of those in force; left out to keep them. */
   cleaning?: (now: Adjustments["cleaning"]) => Adjustments["cleaning"];
   note?: string;
@@ -55,7 +56,7 @@ export async function reviseAdjustments(scope: Scope, logId: string, change: Adj
   return withOrganisation(scope, async (tx) => {
     await getLogForChange(tx, scope, logId);
     const now = await findRevision(tx, scope, logId);
-    const delaysS = withoutNothing(change.delaysS ?? now.delaysS);
+    const delaysS = withoutNothing(change.delaysS ? change.delaysS(now.delaysS) : now.delaysS);
     const cleaning = change.cleaning ? change.cleaning(now.cleaning) : now.cleaning;
     if (isSame(now, { delaysS, cleaning })) return now;
     return keepRevision(tx, scope, { logId, now, next: { delaysS, cleaning }, note: change.note, revertedTo: null });
@@ -103,6 +104,7 @@ async function keepRevision(tx: Transaction, scope: Scope, input: NewRevision): 
   const kept = { ...next, revision, isAsRead: isAsRead(next) };
   await insertAdjustments(tx, scope, { logId, ...kept, note: note || null, revertedTo });
   await changeLog(tx, scope, logId, { adjustmentRevision: kept.isAsRead ? AS_READ : revision });
+  await settleLookNotes(tx, scope, logId);
   const detail = { revision, ...(revertedTo === null ? {} : { revertedTo }), changes: changesOf(now, next) };
   await recordAudit(tx, scope, { action: "log.adjust", subject: logId, detail });
   return kept;

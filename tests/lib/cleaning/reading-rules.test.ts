@@ -37,13 +37,12 @@ describe("a stuck sensor", () => {
   });
 
   it("is none after 20, nor with a larger number", () => {
-    const value = 9;
-    const marks = placedWith((record, row) =>
-      row === 3 && record >= 15 && record < 35
-        ? 500 + value
-        : lively(record, row) + (row === 5 && record === 3 ? 200 : 0),
-    );
-    expect(taken(maskOf(marks, "sensor-stuck").channels!.get("margin"))).toEqual([]);
+    // Row 5 reads more than row 3 once, so that row 3 does not stand at the end of the channel's range.
+    const still = placedWith((record, row) => {
+      if (row === 3 && record >= 15 && record < 35) return 509;
+      return row === 5 && record === 3 ? 700 : lively(record, row);
+    });
+    expect(taken(maskOf(still, "sensor-stuck").channels!.get("margin"))).toEqual([]);
     expect(taken(maskOf(stuck(15, 21), "sensor-stuck", { unchangedRecords: 25 }).channels!.get("margin"))).toEqual([]);
   });
 
@@ -158,9 +157,8 @@ describe("ground worked before", () => {
 
   it("is none where 40 % of a row overlaps, and all where everything does", () => {
     expect(taken(maskOf(both(0.9, 30), "overlap").cells)).toEqual([]);
-    const { cells, whole } = maskOf(both(0, 30), "overlap");
+    const { cells } = maskOf(both(0, 30), "overlap");
     expect(taken(cells).length).toBeGreaterThanOrEqual(59 * 4);
-    expect(taken(whole).length).toBeGreaterThanOrEqual(59);
     expect(taken(cells).every((at) => at >= 60 * 4)).toBe(true);
   });
 
