@@ -1,7 +1,6 @@
 "use client";
 
 import { useMutation } from "@tanstack/react-query";
-import { useRouter } from "next/navigation";
 import { useState } from "react";
 import { Button } from "@/components/ui/button";
 import { TextField } from "@/components/ui/form-field";
@@ -18,11 +17,11 @@ function failureWords(error: unknown): string | undefined {
 
 /** Asked before a share with a passcode shows anything. */
 export function PasscodeForm({ token }: { token: string }) {
-  const router = useRouter();
   const [passcode, setPasscode] = useState("");
   const open = useMutation({
     mutationFn: () => openWithPasscode(token, passcode),
-    onSuccess: () => router.refresh(),
+    // The whole page anew: it was refused as a whole, and a refresh stays inside the refusal.
+    onSuccess: () => window.location.reload(),
   });
   return (
     <form

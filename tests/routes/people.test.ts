@@ -213,6 +213,22 @@ describe("me", () => {
   });
 });
 
+describe("sessions", () => {
+  it("end everywhere but where that was asked, and leave an entry", async () => {
+    const elsewhere = await sessionCookieOf("researcher@larkspur.example", world.container);
+    const call = { method: "DELETE", path: "/api/v1/me/sessions" };
+    const response = await world.as("researcher", call);
+    expect(response.status).toBe(204);
+    const [renewed] = response.headers.getSetCookie();
+    await world.read("researcher", { path: "/api/v1/me", cookie: elsewhere, expect: 401 });
+    await world.read("researcher", { path: "/api/v1/me", expect: 401 });
+    world.keepCookie("researcher", response);
+    await world.read("researcher", { path: "/api/v1/me", cookie: renewed!.split(";")[0]!, expect: 200 });
+    const audit = await world.read("owner", { path: "/api/v1/audit?limit=1" });
+    expect(audit.items).toMatchObject([{ action: "session.end", userName: expect.any(String) }]);
+  });
+});
+
 describe("audit", () => {
   it("has an entry for every change, newest first, and none of its secrets", async () => {
     const before = Date.now();
@@ -227,6 +243,31 @@ describe("audit", () => {
     expect(Date.parse(entries[0]!.at)).toBeGreaterThanOrEqual(before);
     const { rows } = await adminDb().$client.query("select * from audit_entries");
     expect(JSON.stringify(rows)).not.toMatch(/cbk_|argon2|password":/);
+  });
+
+  it("keeps what was there, what is there now, and the name the thing had", async () => {
+    const body = { name: "Old name", farm: "Larkspur Flats" };
+    const { id } = await world.read("owner", { method: "POST", path: "/api/v1/fields", body });
+    const path = `/api/v1/fields/${String(id)}`;
+    await world.read("owner", { method: "PATCH", path, body: { name: "New name", farm: "Larkspur Flats" } });
+    const machine = { kind: "combine", name: "Header", headerWidthM: 6.096, headerRows: 8 };
+    const made = await world.read("owner", { method: "POST", path: "/api/v1/machines", body: machine });
+    const machinePath = `/api/v1/machines/${String(made.id)}`;
+    await world.read("owner", { method: "PATCH", path: machinePath, body: { headerWidthM: 9.144, headerRows: null } });
+    const audit = await world.read("owner", { path: "/api/v1/audit?limit=4" });
+    const detailOf = (action: string) =>
+      (audit.items as { action: string; detail: unknown }[]).find((entry) => entry.action === action)?.detail;
+    expect(detailOf("field.update")).toEqual({
+      name: "Old name",
+      changed: ["name"],
+      before: { name: "Old name" },
+      after: { name: "New name" },
+    });
+    expect(detailOf("machine.update")).toMatchObject({
+      name: "Header",
+      before: { headerWidthM: 6.096, headerRows: 8 },
+      after: { headerWidthM: 9.144, headerRows: null },
+    });
   });
 
   it("pages without losing or repeating an entry", async () => {
