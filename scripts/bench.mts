@@ -58,7 +58,10 @@ async function finish(code: number): Promise<never> {
 for (const signal of ["SIGINT", "SIGTERM", "SIGHUP"] as const) process.on(signal, () => void finish(1));
 
 async function open(): Promise<(rowCount: number) => Promise<BenchContext>> {
-  const server = await startTestServer({ seed: false });
+  const server = await startTestServer({
+    seed: false,
+    environment: { S3_ENDPOINT: "", FILES_DIR: resolve(FOLDER, "files") },
+  });
   servers.push(server);
   const database = new Client({ connectionString: server.databaseAdminUrl });
   await database.connect();

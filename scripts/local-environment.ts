@@ -56,16 +56,21 @@ async function databaseVariables(
   };
 }
 
+/** A server on a folder is started where one is asked for, and where an earlier start left uploads in its way of keeping them. */
+function needsStoreServer(dataDir: string): boolean {
+  if (process.env.S3_ENDPOINT) return false;
+  return Boolean(process.env.FAKE_S3_PORT) || existsSync(join(dataDir, "objects"));
+}
+
 /** Settings of the fakes, for those of the two services that no variable names. */
-async function fakeVariables(): Promise<Record<string, string>> {
-  const s3Port = await choosePort("FAKE_S3_PORT", 9100);
+async function fakeVariables(dataDir: string): Promise<Record<string, string>> {
+  const s3Port = needsStoreServer(dataDir) ? await choosePort("FAKE_S3_PORT", 9100) : null;
   const smtpPort = await choosePort("FAKE_SMTP_PORT", 9300);
   const mailPort = await choosePort("FAKE_MAIL_PORT", 9500);
   return {
-    FAKE_S3_PORT: String(s3Port),
+    ...(s3Port ? { FAKE_S3_PORT: String(s3Port), S3_ENDPOINT: `http://127.0.0.1:${s3Port}` } : {}),
     FAKE_SMTP_PORT: String(smtpPort),
     FAKE_MAIL_PORT: String(mailPort),
-    S3_ENDPOINT: process.env.S3_ENDPOINT || `http://127.0.0.1:${s3Port}`,
     SMTP_URL: process.env.SMTP_URL || `smtp://127.0.0.1:${smtpPort}?ignoreTLS=true`,
   };
 }
@@ -82,7 +87,7 @@ export async function prepareLocalEnvironment(input: {
   mkdirSync(dataDir, { recursive: true });
   const { cluster, variables } = await databaseVariables(dataDir, input.purpose, input.database ?? "coulterbook");
   const needsFakes = input.purpose === "test" || !(process.env.S3_ENDPOINT && process.env.SMTP_URL);
-  const fakes: Record<string, string> = needsFakes ? await fakeVariables() : {};
+  const fakes: Record<string, string> = needsFakes ? await fakeVariables(dataDir) : {};
   const port = input.purpose === "test" ? await choosePort("", 4300) : await choosePort("PORT", 3000);
   const baseUrl = (input.purpose === "local" && process.env.BASE_URL) || `http://127.0.0.1:${port}`;
   const secret = process.env.AUTH_SECRET
@@ -107,6 +112,7 @@ export async function prepareLocalEnvironment(input: {
       PORT: String(port),
       BASE_URL: baseUrl,
       DATA_DIR: dataDir,
+      FILES_DIR: process.env.FILES_DIR ?? join(dataDir, "files"),
     },
   };
 }

@@ -4,7 +4,7 @@ import type { Mailer } from "@/lib/ports/mailer";
 import type { ObjectStorage } from "@/lib/ports/object-storage";
 import { PostgresQueue } from "@/lib/server/adapters/jobs/postgres-queue";
 import { SmtpMailer } from "@/lib/server/adapters/mail/smtp-mailer";
-import { S3Storage } from "@/lib/server/adapters/storage/s3-storage";
+import { openStorage, storageSettings } from "@/lib/server/adapters/storage/open-storage";
 import type { Environment } from "@/lib/server/env";
 
 /** Everything with a side effect that a service may use. */
@@ -20,7 +20,7 @@ export interface Container {
 export function createContainer(env: Environment): Container {
   return {
     env,
-    storage: new S3Storage(env),
+    storage: openStorage(storageSettings(env)),
     mailer: new SmtpMailer(env),
     queue: new PostgresQueue(env),
     clock: { now: () => new Date() },

@@ -18,7 +18,10 @@ const EnvSchema = z.object({
   /** Set by the local start when it made the secret itself. */
   AUTH_SECRET_IS_LOCAL: flag,
   DEMO: z.enum(["0", "1", ""]).default(""),
-  S3_ENDPOINT: z.string().min(1),
+  /** Folder for files, where no object store is named. */
+  FILES_DIR: z.string().default(""),
+  /** The object store; it comes before the folder. */
+  S3_ENDPOINT: z.string().default(""),
   S3_BUCKET: z.string().min(3).default("coulterbook"),
   S3_ACCESS_KEY: z.string().min(1).default("S3RVER"),
   S3_SECRET_KEY: z.string().min(1).default("S3RVER"),
@@ -51,6 +54,9 @@ export function parseEnv(source: Record<string, string | undefined>): Environmen
     throw new Error(`The environment is not complete. ${faults.join("; ")}. See .env.example`);
   }
   const values = parsed.data;
+  if (!values.S3_ENDPOINT && !values.FILES_DIR) {
+    throw new Error("The environment is not complete. Name S3_ENDPOINT or FILES_DIR. See .env.example");
+  }
   const isProduction = values.NODE_ENV === "production" && !values.AUTH_SECRET_IS_LOCAL;
   return {
     ...values,

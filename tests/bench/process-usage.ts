@@ -39,7 +39,7 @@ function commandOf(pid: number): string {
 
 /** Patterns of the command lines of what one upload keeps busy. */
 const WATCHED = {
-  web: /next-server|next start|next\/dist\/bin\/next/,
+  web: /web\.mjs/,
   worker: /worker\.mjs/,
   store: /fakes\.mjs/,
   postgres: /postgres.*bench-postgres/,

@@ -3,6 +3,7 @@ import { Worker } from "node:worker_threads";
 import type { IngestError } from "@/lib/ingest/ingest-error";
 import type { Inspection } from "@/lib/ingest/log-format";
 import type { Result } from "@/lib/result";
+import { storageSettings } from "@/lib/server/adapters/storage/open-storage";
 import type { Environment } from "@/lib/server/env";
 import type { PackedPlacedLog } from "@/lib/logs/packed-placed-log";
 import type { BuiltAnswers } from "@/lib/server/logs/built-answers";
@@ -27,9 +28,8 @@ export class LogThread {
   private isUsable = true;
 
   constructor(private readonly env: Environment) {
-    const { S3_ENDPOINT, S3_BUCKET, S3_ACCESS_KEY, S3_SECRET_KEY, S3_REGION } = env;
     this.worker = new Worker(resolve(env.BUILD_DIR, "read-log-thread.mjs"), {
-      workerData: { env: { S3_ENDPOINT, S3_BUCKET, S3_ACCESS_KEY, S3_SECRET_KEY, S3_REGION } },
+      workerData: { storage: storageSettings(env) },
       resourceLimits: { maxOldGenerationSizeMb: env.WORKER_MEMORY_MIB },
       execArgv: [],
     });

@@ -5,14 +5,13 @@ import type { ByteSource } from "@/lib/ingest/byte-source";
 import { inspectParts, readParts } from "@/lib/ingest/read-parts";
 import { fail, succeed } from "@/lib/result";
 import { packPlacedLog } from "@/lib/logs/packed-placed-log";
-import { S3Storage } from "@/lib/server/adapters/storage/s3-storage";
-import type { Environment } from "@/lib/server/env";
+import { openStorage, type StorageSettings } from "@/lib/server/adapters/storage/open-storage";
 import { buildAnswers, placeLog } from "@/lib/server/logs/build-answers";
 import { storedSource } from "@/lib/server/logs/log-file";
 import { LogFailure } from "@/lib/server/logs/log-failure";
 import type { ThreadMessage, ThreadTask } from "@/lib/server/logs/thread-messages";
 
-const storage = new S3Storage((workerData as { env: Environment }).env);
+const storage = openStorage((workerData as { storage: StorageSettings }).storage);
 
 function say(message: ThreadMessage): void {
   parentPort?.postMessage(message);

@@ -1,33 +1,38 @@
 import { Readable } from "node:stream";
-import {
-  CopyObjectCommand,
-  DeleteObjectCommand,
-  GetObjectCommand,
-  HeadBucketCommand,
-  HeadObjectCommand,
-  ListObjectsV2Command,
-  S3Client,
-  S3ServiceException,
-} from "@aws-sdk/client-s3";
-import { Upload } from "@aws-sdk/lib-storage";
+import type { S3Client } from "@aws-sdk/client-s3";
 import { AppError } from "@/lib/errors";
 import type { ObjectRange, ObjectStorage } from "@/lib/ports/object-storage";
 import type { Environment } from "@/lib/server/env";
 
 const PART_BYTES = 8 * 1024 * 1024;
 
+type Sdk = typeof import("@aws-sdk/client-s3");
+
 function isMissing(error: unknown): boolean {
-  return error instanceof S3ServiceException && (error.name === "NoSuchKey" || error.$metadata.httpStatusCode === 404);
+  if (!(error instanceof Error)) return false;
+  const { $metadata } = error as Error & { $metadata?: { httpStatusCode?: number } };
+  return error.name === "NoSuchKey" || $metadata?.httpStatusCode === 404;
 }
+
+type S3Settings = Pick<Environment, "S3_ENDPOINT" | "S3_BUCKET" | "S3_ACCESS_KEY" | "S3_SECRET_KEY" | "S3_REGION">;
 
 /** Any object store that speaks S3. */
 export class S3Storage implements ObjectStorage {
-  private readonly client: S3Client;
   private readonly bucket: string;
+  private opened: Promise<{ sdk: Sdk; client: S3Client }> | undefined;
 
-  constructor(env: Pick<Environment, "S3_ENDPOINT" | "S3_BUCKET" | "S3_ACCESS_KEY" | "S3_SECRET_KEY" | "S3_REGION">) {
+  constructor(private readonly env: S3Settings) {
     this.bucket = env.S3_BUCKET;
-    this.client = new S3Client({
+  }
+
+  /** The SDK takes some 40 MB of memory: it is loaded by those who use it. */
+  private open(): Promise<{ sdk: Sdk; client: S3Client }> {
+    return (this.opened ??= import("@aws-sdk/client-s3").then((sdk) => ({ sdk, client: this.createClient(sdk) })));
+  }
+
+  private createClient(sdk: Sdk): S3Client {
+    const { env } = this;
+    return new sdk.S3Client({
       endpoint: env.S3_ENDPOINT,
       region: env.S3_REGION,
       forcePathStyle: true,
@@ -51,8 +56,10 @@ export class S3Storage implements ObjectStorage {
         yield chunk;
       }
     }
+    const { client } = await this.open();
+    const { Upload } = await import("@aws-sdk/lib-storage");
     const upload = new Upload({
-      client: this.client,
+      client,
       params: {
         Bucket: this.bucket,
         Key: key,
@@ -73,7 +80,7 @@ export class S3Storage implements ObjectStorage {
   }
 
   async *get(key: string, range?: ObjectRange): AsyncIterable<Uint8Array> {
-    const stream = await this.open(key, range);
+    const stream = await this.openObject(key, range);
     try {
       for await (const chunk of stream) yield chunk as Uint8Array;
     } finally {
@@ -81,10 +88,11 @@ export class S3Storage implements ObjectStorage {
     }
   }
 
-  private async open(key: string, range?: ObjectRange): Promise<Readable> {
+  private async openObject(key: string, range?: ObjectRange): Promise<Readable> {
+    const { sdk, client } = await this.open();
     try {
-      const found = await this.client.send(
-        new GetObjectCommand({
+      const found = await client.send(
+        new sdk.GetObjectCommand({
           Bucket: this.bucket,
           Key: key,
           Range: range ? `bytes=${range.start}-${range.end}` : undefined,
@@ -98,8 +106,9 @@ export class S3Storage implements ObjectStorage {
   }
 
   async head(key: string): Promise<{ bytes: number } | null> {
+    const { sdk, client } = await this.open();
     try {
-      const found = await this.client.send(new HeadObjectCommand({ Bucket: this.bucket, Key: key }));
+      const found = await client.send(new sdk.HeadObjectCommand({ Bucket: this.bucket, Key: key }));
       return { bytes: found.ContentLength ?? 0 };
     } catch (error) {
       if (isMissing(error)) return null;
@@ -108,19 +117,22 @@ export class S3Storage implements ObjectStorage {
   }
 
   async copy(from: string, to: string): Promise<void> {
+    const { sdk, client } = await this.open();
     const source = `${this.bucket}/${from.split("/").map(encodeURIComponent).join("/")}`;
-    await this.client.send(new CopyObjectCommand({ Bucket: this.bucket, Key: to, CopySource: source }));
+    await client.send(new sdk.CopyObjectCommand({ Bucket: this.bucket, Key: to, CopySource: source }));
   }
 
   async delete(key: string): Promise<void> {
-    await this.client.send(new DeleteObjectCommand({ Bucket: this.bucket, Key: key }));
+    const { sdk, client } = await this.open();
+    await client.send(new sdk.DeleteObjectCommand({ Bucket: this.bucket, Key: key }));
   }
 
   async *list(prefix: string): AsyncIterable<{ key: string; bytes: number; modifiedAt: Date | null }> {
+    const { sdk, client } = await this.open();
     let next: string | undefined;
     do {
-      const page = await this.client.send(
-        new ListObjectsV2Command({ Bucket: this.bucket, Prefix: prefix, ContinuationToken: next }),
+      const page = await client.send(
+        new sdk.ListObjectsV2Command({ Bucket: this.bucket, Prefix: prefix, ContinuationToken: next }),
       );
       for (const entry of page.Contents ?? []) {
         if (entry.Key) yield { key: entry.Key, bytes: entry.Size ?? 0, modifiedAt: entry.LastModified ?? null };
@@ -130,6 +142,7 @@ export class S3Storage implements ObjectStorage {
   }
 
   async ping(): Promise<void> {
-    await this.client.send(new HeadBucketCommand({ Bucket: this.bucket }));
+    const { sdk, client } = await this.open();
+    await client.send(new sdk.HeadBucketCommand({ Bucket: this.bucket }));
   }
 }
