@@ -7,6 +7,7 @@ import { IngestFailure, ingestError, stopReading, type IngestError } from "@/lib
 import type { InspectOptions, Inspection, LogFormat, ReadLog, ReadOptions } from "@/lib/ingest/log-format";
 import type { LogMapping } from "@/lib/ingest/mapping";
 import { isGzip, openText } from "@/lib/ingest/open-text";
+import { turnRows } from "@/lib/ingest/records/turn-rows";
 import { fail, succeed, type Result } from "@/lib/result";
 
 export const LOG_FORMATS: readonly LogFormat[] = [zipFormat, geojsonFormat, csvFormat];
@@ -33,7 +34,11 @@ export async function readLog(
   mapping: LogMapping,
   options: ReadOptions = {},
 ): Promise<Result<ReadLog, IngestError>> {
-  return guard(source, async () => (await findFormat(source)).read(source, mapping, options));
+  return guard(source, async () => {
+    const read = await (await findFormat(source)).read(source, mapping, options);
+    if (mapping.rowsFromRight) turnRows(read.log);
+    return read;
+  });
 }
 
 async function findFormat(source: ByteSource): Promise<LogFormat> {

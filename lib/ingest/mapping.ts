@@ -56,6 +56,8 @@ export const LogMapping = z.object({
   layer: z.string().min(1).max(500).optional(),
   /** How ground contact is defined in this log, as a person said. */
   contact: ContactDefinition.optional(),
+  /** True where the file counts its rows from the right: they are turned round, so that row 1 is leftmost looking forward. */
+  rowsFromRight: z.boolean().optional(),
   /** Name under which to keep this mapping as a recipe. */
   save: plainText(120).min(1).optional(),
 });

@@ -71,6 +71,28 @@ describe("a mapping with a machine", () => {
   });
 });
 
+describe("a mapping with rows counted from the right", () => {
+  it("turns the rows round in a new version, and back in the next", async () => {
+    const { log, path, mapping, put } = await lookedAt();
+    const worker = await world.startWorker();
+    const margins = async () => {
+      await world.settle(log.id);
+      const readings = await world.read("owner", { path: `${path}/passes/1/readings?channel=margin` });
+      return readings.values as (number | null)[][];
+    };
+    await put(mapping);
+    const before = await margins();
+    expect(before[0]).not.toEqual(before[7]);
+    await put({ ...mapping, rowsFromRight: true });
+    expect(await margins()).toEqual(before.toReversed());
+    expect(await world.getLog(log.id)).toMatchObject({ version: 2 });
+    await put(mapping);
+    expect(await margins()).toEqual(before);
+    await worker.stop();
+    expect((await put({ ...mapping, rowsFromRight: "yes" })).status).toBe(422);
+  });
+});
+
 describe("a mapping for a log on its way", () => {
   it("replaces the one of a log that waits for its turn, which is then read once", async () => {
     const { log, mapping, put } = await lookedAt();
