@@ -40,6 +40,8 @@ export interface InspectedLayer {
   crsCandidates?: CrsCandidate[];
   device?: LoggedDevice;
   columns: FoundColumn[];
+  /** Others of the list taken together: a choice, but no further log. */
+  isJoined?: boolean;
 }
 
 /** What an inspection says of the logs in a file: the longest first, all of them named where there are several. */
@@ -54,8 +56,9 @@ export function describeLayers(
   const one = { shape: first?.shape ?? "single", columns: first?.columns ?? [], ...crs, ...candidates };
   if (layers.length < 2) return { ...one, notes: [] };
   const unlisted = left === 0 ? "" : ` The ${left} shortest are not listed: there are too many columns.`;
-  const message = `The file holds ${inspected.length} logs; choose which to read. The columns shown are those of "${first?.label ?? ""}", the longest.${unlisted}`;
-  return { ...one, layers, notes: [{ code: "several-layers", count: inspected.length, message }] };
+  const count = inspected.filter(({ isJoined }) => !isJoined).length;
+  const message = `The file holds ${count} logs; choose which to read. The columns shown are those of "${first?.label ?? ""}", the longest.${unlisted}`;
+  return { ...one, layers, notes: [{ code: "several-layers", count, message }] };
 }
 
 /** The first, and as many more as the list may hold. Without what only the inspecting format needs. */

@@ -1,12 +1,13 @@
 import { chooseLayer, describeLayers, type InspectedLayer } from "@/lib/ingest/columns/choose-layer";
 import { describeFoundColumns } from "@/lib/ingest/columns/describe-found-columns";
-import { holdsTaskData, openTaskData } from "@/lib/ingest/formats/task-data/open-task-data";
+import { holdsTaskData, openTaskData, type TimeLogFiles } from "@/lib/ingest/formats/task-data/open-task-data";
 import { hasFix, openTimeLog, TIME_FIELD, type TimeLog } from "@/lib/ingest/formats/task-data/open-time-log";
 import { noteTimeLog } from "@/lib/ingest/formats/task-data/note-time-log";
 import { readValue } from "@/lib/ingest/formats/task-data/read-value";
+import { groupByTask, isGroupId } from "@/lib/ingest/formats/task-data/task-groups";
 import { countRecords, scanTimeLog, type TimeRecord } from "@/lib/ingest/formats/task-data/scan-time-log";
 import type { ZipArchive } from "@/lib/ingest/formats/zip/open-zip";
-import { stopReading } from "@/lib/ingest/ingest-error";
+import { IngestFailure, stopReading } from "@/lib/ingest/ingest-error";
 import {
   READ_LIMITS,
   type ArchivedFormat,
@@ -16,6 +17,7 @@ import {
   type ReadOptions,
 } from "@/lib/ingest/log-format";
 import type { LogMapping } from "@/lib/ingest/mapping";
+import { joinLogs } from "@/lib/ingest/records/join-logs";
 import { createZoneClock } from "@/lib/ingest/records/local-time";
 import { NoteBook } from "@/lib/ingest/records/note-book";
 import { buildReadPlan, CELL, type ReadPlan } from "@/lib/ingest/records/read-plan";
@@ -36,7 +38,7 @@ async function inspectTaskData(archive: ZipArchive, options: InspectOptions): Pr
   const { logs, absent } = await openTaskData(archive);
   const notes = new NoteBook();
   notes.set("absent-time-logs", absent.length);
-  const inspected: (InspectedLayer & { log: TimeLog; sampled: number; notes: NoteBook })[] = [];
+  const inspected: InspectedTimeLog[] = [];
   for (const files of logs) {
     const log = await openTimeLog(archive, files);
     if (log.names.length > READ_LIMITS.columns) stopTooWide(log);
@@ -46,8 +48,9 @@ async function inspectTaskData(archive: ZipArchive, options: InspectOptions): Pr
   if (withReadings.length === 0) {
     stopReading("no-readings", `The time logs in "${archive.name}" hold no whole record. Export the task data again.`);
   }
-  const { notes: layerNotes, ...described } = describeLayers(withReadings.map(({ log: _log, ...layer }) => layer));
-  const first = withReadings.find(({ id }) => id === (described.layers?.[0]?.id ?? id));
+  const offered = [...joinTasks(withReadings, logs), ...withReadings];
+  const { notes: layerNotes, ...described } = describeLayers(offered.map(({ log: _log, ...layer }) => layer));
+  const first = offered.find(({ id }) => id === (described.layers?.[0]?.id ?? id));
   const device = first?.log.device ?? null;
   return {
     format: "iso11783",
@@ -58,6 +61,24 @@ async function inspectTaskData(archive: ZipArchive, options: InspectOptions): Pr
   };
 }
 
+/** All time logs of a task as one more choice, described by the longest of them. */
+function joinTasks(inspected: readonly InspectedTimeLog[], files: readonly TimeLogFiles[]): InspectedTimeLog[] {
+  const named = inspected.flatMap((layer) => {
+    const own = files.find(({ id }) => id === layer.id);
+    return own ? [{ ...layer, names: layer.log.names, device: layer.log.device, ...pickTask(own) }] : [];
+  });
+  return groupByTask(named).flatMap(({ id, label, logs }) => {
+    const longest = logs.reduce((best, log) => (log.records > best.records ? log : best));
+    const records = logs.reduce((sum, log) => sum + log.records, 0);
+    const layer = inspected.find((candidate) => candidate.id === longest.id);
+    return layer ? [{ ...layer, id, label, records, isJoined: true }] : [];
+  });
+}
+
+function pickTask({ task, taskLabel }: TimeLogFiles): Pick<TimeLogFiles, "task" | "taskLabel"> {
+  return { task, taskLabel };
+}
+
 function stopTooWide({ label, names }: TimeLog): never {
   stopReading(
     "too-many-columns",
@@ -65,10 +86,9 @@ function stopTooWide({ label, names }: TimeLog): never {
   );
 }
 
-function inspectTimeLog(
-  log: TimeLog,
-  options: InspectOptions,
-): InspectedLayer & { log: TimeLog; sampled: number; notes: NoteBook } {
+type InspectedTimeLog = InspectedLayer & { log: TimeLog; sampled: number; notes: NoteBook };
+
+function inspectTimeLog(log: TimeLog, options: InspectOptions): InspectedTimeLog {
   const records = countRecords(log.bytes, log.header);
   const stride = Math.max(1, Math.ceil(records / SAMPLE_RECORDS));
   const cells: string[][] = log.names.map(() => []);
@@ -108,14 +128,50 @@ function numberText(value: number): string {
 
 async function readTaskData(archive: ZipArchive, mapping: LogMapping, options: ReadOptions): Promise<ReadLog> {
   const { logs } = await openTaskData(archive);
+  if (isGroupId(mapping.layer)) return readGroup({ archive, logs, mapping, options }, mapping.layer);
   const log = await openTimeLog(archive, chooseLayer(logs, mapping.layer, archive.name));
+  return readTimeLog(archive.name, log, mapping, options);
+}
+
+interface GroupInput {
+  archive: ZipArchive;
+  logs: TimeLogFiles[];
+  mapping: LogMapping;
+  options: ReadOptions;
+}
+
+/** All time logs of a task as one, in the order of their times. */
+async function readGroup({ archive, logs, mapping, options }: GroupInput, layer: string): Promise<ReadLog> {
+  const opened = [];
+  for (const files of logs) {
+    const log = await openTimeLog(archive, files);
+    if (countRecords(log.bytes, log.header) > 0) opened.push({ ...log, ...pickTask(files) });
+  }
+  const group = chooseLayer(groupByTask(opened), layer, archive.name);
+  const read = group.logs.map((log) => readTimeLog(archive.name, log, mapping, options));
+  const joined = joinLogs(read.map((part) => part.log));
+  if (!joined.ok) throw new IngestFailure(joined.error);
+  const message = `The log was read from ${read.length} time logs of one task.`;
+  const notes = group.logs.flatMap(({ label }, index) =>
+    (read[index]?.notes ?? []).map((note) => ({ ...note, file: label, message: `${label}: ${note.message}` })),
+  );
+  const { device } = group.logs[0] ?? {};
+  return {
+    log: joined.value.log,
+    notes: [{ code: "parts-joined", count: read.length, message }, ...joined.value.notes, ...notes],
+    ...(device ? { device } : {}),
+  };
+}
+
+// kernel: whose bytes, the opened log, what its columns mean, and how to read
+function readTimeLog(archiveName: string, log: TimeLog, mapping: LogMapping, options: ReadOptions): ReadLog {
   const plan = buildReadPlan(mapping, log.names);
   const expectedLines = countRecords(log.bytes, log.header);
   const collector = new RecordCollector(planClock(plan), { expectedLines, place: "record" });
   const take = prepareTaking(log, collector, readClock(mapping, plan));
   const outcome = scanTimeLog(log.bytes, log.header, (record) => {
     if (record.number % 4096 === 0 && options.signal?.aborted) {
-      stopReading("cancelled", `Reading "${archive.name}" was cancelled.`);
+      stopReading("cancelled", `Reading "${archiveName}" was cancelled.`);
     }
     take(record);
     collector.commit(record.number);

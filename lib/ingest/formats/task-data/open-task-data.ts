@@ -11,6 +11,9 @@ export interface TimeLogFiles {
   /** `TSK-1/TLG00001`, with the folder before it where the archive holds several. */
   id: string;
   label: string;
+  /** The task it belongs to, and what that is called. */
+  task: string;
+  taskLabel: string;
   header: ZipEntry;
   binary: ZipEntry;
   elements: Map<string, DeviceElement>;
@@ -38,7 +41,7 @@ export async function openTaskData(archive: ZipArchive): Promise<TaskData> {
     const folder = main.name.slice(0, main.name.length - "taskdata.xml".length);
     const part = await openFolder(archive, main, folder);
     const prefix = mains.length > 1 ? folder : "";
-    found.logs.push(...part.logs.map((log) => ({ ...log, id: prefix + log.id, label: prefix + log.label })));
+    found.logs.push(...part.logs.map((log) => withPrefix(log, prefix)));
     found.absent.push(...part.absent);
   }
   if (found.logs.length === 0) {
@@ -58,6 +61,11 @@ export async function openTaskData(archive: ZipArchive): Promise<TaskData> {
     );
   }
   return found;
+}
+
+function withPrefix(log: TimeLogFiles, prefix: string): TimeLogFiles {
+  const { id, label, task, taskLabel } = log;
+  return { ...log, id: prefix + id, label: prefix + label, task: prefix + task, taskLabel: prefix + taskLabel };
 }
 
 async function openFolder(archive: ZipArchive, main: ZipEntry, folder: string): Promise<TaskData> {
@@ -83,9 +91,10 @@ async function openFolder(archive: ZipArchive, main: ZipEntry, folder: string): 
   return found;
 }
 
-function nameLog(task: Element, fileName: string): { id: string; label: string } {
+function nameLog(task: Element, fileName: string): Pick<TimeLogFiles, "id" | "label" | "task" | "taskLabel"> {
   const taskId = attributeOf(task, "A") ?? "task";
-  return { id: `${taskId}/${fileName}`, label: `${attributeOf(task, "B") ?? taskId}, ${fileName}` };
+  const taskLabel = attributeOf(task, "B") ?? taskId;
+  return { id: `${taskId}/${fileName}`, label: `${taskLabel}, ${fileName}`, task: taskId, taskLabel };
 }
 
 export async function unpackXml(archive: ZipArchive, entry: ZipEntry): Promise<Uint8Array> {

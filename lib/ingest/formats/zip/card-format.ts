@@ -11,6 +11,8 @@ import { fail, succeed, type Result } from "@/lib/result";
 
 const TEXT_LOG = /\.(?:csv|tsv|txt|geojson|geojsons|json)(?:\.gz)?$/i;
 const HIDDEN = /(?:^|\/)(?:__MACOSX(?:\/|$)|\.)/;
+/** Texts that lie beside data in most archives. */
+const ABOUT = /(?:^|\/)(?:read[ _-]?me|licen[cs]e|copying|about)[^/]*\.txt$/i;
 const HEAD_BYTES = 65_536;
 const TEXT_FORMATS: readonly LogFormat[] = [geojsonFormat, csvFormat];
 
@@ -34,7 +36,7 @@ const TEXT_PARTS: PartReader = {
 };
 
 function isLog({ name, unpackedBytes }: ZipEntry): boolean {
-  return unpackedBytes > 0 && TEXT_LOG.test(name) && !HIDDEN.test(name);
+  return unpackedBytes > 0 && TEXT_LOG.test(name) && !HIDDEN.test(name) && !ABOUT.test(name);
 }
 
 /** The parts in the order of their names. A .txt beside other logs is a description, not a part. */

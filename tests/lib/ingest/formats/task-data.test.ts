@@ -1,5 +1,5 @@
 import { ISOXMLManager, type ExtendedTimeLog, type Task } from "isoxml";
-import { unzipSync } from "fflate";
+import { unzipSync, zipSync } from "fflate";
 import { describe, expect, it } from "vitest";
 import { inspectLog, readLog } from "@/lib/ingest";
 import { bytesSource } from "@/lib/ingest/byte-source";
@@ -35,6 +35,24 @@ const MAIN =
   '<ISO11783_TaskData VersionMajor="4" VersionMinor="3"><DVC A="DVC-1" B="Larkspur drill"><DET A="DET-1" B="1" C="1" D="Drill" E="0" F="0"/></DVC><TSK A="TSK-1" B="East quarter"><TLG A="TLG00001" C="1"/></TSK></ISO11783_TaskData>';
 const small = (binary: Uint8Array, header = HEADER, main = MAIN) =>
   zipOf({ "TASKDATA/TASKDATA.XML": main, "TASKDATA/TLG00001.XML": header, "TASKDATA/TLG00001.BIN": binary });
+
+/** Some of a log's records. */
+function recordsOf(log: MachineLog, from: number, to: number): MachineLog {
+  const cut = <T extends { slice(from: number, to: number): T }>(values: T | null) => values && values.slice(from, to);
+  return {
+    ...log,
+    records: to - from,
+    timeMs: log.timeMs.slice(from, to),
+    longitude: log.longitude.slice(from, to),
+    latitude: log.latitude.slice(from, to),
+    headingDeg: cut(log.headingDeg),
+    speedMps: cut(log.speedMps),
+    working: cut(log.working),
+    loggedPass: cut(log.loggedPass),
+    sourceLine: log.sourceLine.slice(from, to),
+    channels: log.channels.map((one) => ({ ...one, values: one.values.slice(from * one.rows, to * one.rows) })),
+  };
+}
 
 const valuesOf = (log: MachineLog, id: string) => [
   ...(log.channels.find((channel) => channel.id === id)?.values ?? []),
@@ -238,6 +256,43 @@ describe("a simulated log as task data", () => {
     expect((await errorOf(source(zip), mapping))?.code).toBe("several-layers");
     expect((await errorOf(source(zip), { ...mapping, layer: "TSK-9/TLG00001" }))?.code).toBe("unknown-layer");
     expect((await mustRead(source(zip), { ...mapping, layer: "TSK-1/TLG00001" })).log.records).toBe(40);
+  });
+
+  it("of one task in several time logs is offered whole, and read as the uncut log", async () => {
+    const cut = 100;
+    const tasks = writeTaskDataZip(
+      [
+        { designator: "East", log: recordsOf(simulated, cut, simulated.records) },
+        { designator: "East", log: recordsOf(simulated, 0, cut) },
+        { designator: "West", log: recordsOf(simulated, 0, 40) },
+      ],
+      GEOMETRY,
+    );
+    // As a controller that was switched off and on writes it: the second time log under the first task.
+    const files = unzipSync(tasks);
+    const main = Object.keys(files).find((name) => /taskdata\.xml$/i.test(name)) ?? "";
+    const xml = new TextDecoder().decode(files[main]);
+    const [, moved = ""] = /(<TLG\b[^>]*TLG00002[^>]*\/>)/.exec(xml) ?? [];
+    const joined = xml.replace(moved, "").replace(/(<TLG\b[^>]*TLG00001[^>]*\/>)/, `$1${moved}`);
+    const zip = zipSync({ ...files, [main]: new TextEncoder().encode(joined) });
+    const inspection = await mustInspect(source(zip));
+    expect(inspection.layers?.map(({ id, label, records }) => [id, label, records])).toEqual([
+      ["TSK-1/*", "All of East, 2 time logs", simulated.records],
+      ["TSK-1/TLG00001", "East, TLG00001", simulated.records - cut],
+      ["TSK-1/TLG00002", "East, TLG00002", cut],
+      ["TSK-3/TLG00003", "West, TLG00003", 40],
+    ]);
+    expect(inspection.notes[0]).toMatchObject({ code: "several-layers", count: 3 });
+    const mapping = { ...proposeMapping(inspection).mapping, ...CHICAGO };
+    const whole = await mustRead(source(zip), { ...mapping, layer: "TSK-1/*" });
+    const once = await mustRead(source(written()), { ...mapping, layer: undefined });
+    expect(whole.log.timeMs).toEqual(once.log.timeMs);
+    expect(whole.log.channels.map(({ id, values }) => [id, [...values]])).toEqual(
+      once.log.channels.map(({ id, values }) => [id, [...values]]),
+    );
+    expect(whole.device).toEqual(once.device);
+    expect(whole.notes.map(({ code }) => code)).toContain("parts-joined");
+    expect((await errorOf(source(zip), { ...mapping, layer: "TSK-3/*" }))?.code).toBe("unknown-layer");
   });
 
   it("holds the same records for a second reader", async () => {
