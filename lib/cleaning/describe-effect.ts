@@ -5,18 +5,31 @@ import type { ChannelSummary, CleaningEffect } from "@/lib/schemas/cleaning";
 import { underTargetBelowN } from "@/lib/statistics/row-shares";
 import { selectQuantiles } from "@/lib/statistics/select-quantiles";
 
-/** What cleaning and delays make of every channel, opener resistance among them: all rows together. */
-export function describeEffect(asLogged: PlacedLog, cleaned: PlacedLog): CleaningEffect[] {
-  const distances = rowDistances(asLogged);
-  const ids = [...asLogged.log.channels.map((channel) => channel.id), "resistance"];
+/** A channel with all its rows together. */
+export interface SummarisedChannel {
+  channel: string;
+  unit: string;
+  summary: ChannelSummary;
+}
+
+/** Every channel of a log, opener resistance among them where the log can give it. */
+export function summariseChannels(placed: PlacedLog): SummarisedChannel[] {
+  const distances = rowDistances(placed);
+  const ids = [...placed.log.channels.map((channel) => channel.id), "resistance"];
   return ids.flatMap((id) => {
-    const before = resolveChannel(asLogged, id);
-    if (!before) return [];
-    const summary = summarise(asLogged, before, distances);
-    const isSame = asLogged === cleaned;
-    const after = isSame ? null : resolveChannel(cleaned, id);
-    const then = after ? summarise(cleaned, after, distances) : summary;
-    return [{ channel: id, unit: before.unit, asLogged: summary, cleaned: then }];
+    const channel = resolveChannel(placed, id);
+    return channel ? [{ channel: id, unit: channel.unit, summary: summarise(placed, channel, distances) }] : [];
+  });
+}
+
+/** What cleaning and delays make of every channel. */
+export function describeEffect(
+  asLogged: readonly SummarisedChannel[],
+  cleaned: readonly SummarisedChannel[],
+): CleaningEffect[] {
+  return asLogged.flatMap(({ channel, unit, summary }) => {
+    const then = cleaned.find((one) => one.channel === channel);
+    return then ? [{ channel, unit, asLogged: summary, cleaned: then.summary }] : [];
   });
 }
 

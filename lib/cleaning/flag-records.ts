@@ -63,6 +63,7 @@ const FLAG_SENTENCES: Record<FlagCode, string> = {
     "come before the trailed machine had run three drawbar lengths straight on: row places are less sure",
   "time-backwards": "have a time before that of the record before",
   "jack-knife": "have the drawbar more than 70 degrees off the course: row places are not to be trusted",
+  reversing: "were logged while the machine ran backwards; a trailed machine's row places are a guess there",
 };
 
 /** One note for each reason code that occurs, with its count and the first line of the file. */

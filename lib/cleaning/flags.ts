@@ -10,6 +10,7 @@ export const FLAGS = {
   "hitch-unsettled": 1 << 7,
   "time-backwards": 1 << 8,
   "jack-knife": 1 << 9,
+  reversing: 1 << 10,
 } as const;
 export type FlagCode = keyof typeof FLAGS;
 
