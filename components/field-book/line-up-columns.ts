@@ -1,3 +1,4 @@
+import { sayReason } from "@/components/field-book/say-reason";
 import type { DataColumn } from "@/components/ui/data-table";
 import type { RowStatisticsBody, RowStatisticsItem } from "@/lib/schemas/logs";
 import { displayUnit, type UnitSystem } from "@/lib/units/display-unit";
@@ -46,11 +47,13 @@ export function lineUpColumns(
   const numbers = filled.map(({ field, header, unit: own }) =>
     numberColumn({ field, header, unit: own ?? unit, channel, system }),
   );
+  const why = ({ reason }: RowStatisticsItem) =>
+    reason === null ? undefined : sayReason(reason, { unit, channel, system });
   return [
     { id: "row", header: "Row", value: (item) => item.row, numeric: true },
     { id: "flagged", header: "Stands out", value: (item) => (item.flagged ? "yes" : "no") },
     ...(items.some((item) => item.reason !== null)
-      ? [{ id: "reason", header: "Why", value: (item: RowStatisticsItem) => item.reason ?? undefined }]
+      ? [{ id: "reason", header: "Why", value: (item: RowStatisticsItem) => why(item) }]
       : []),
     ...numbers,
   ];

@@ -17,6 +17,11 @@ export function useSeeFinding(): (finding: Finding) => void {
     if (row != null && row !== state.row) state.chooseRow(row);
     state.showPlace(place);
     if (bounds) state.askToFrame(bounds);
+    // On a page that scrolls, the map may be out of sight; where it is in sight, nothing moves.
+    if (place)
+      document
+        .querySelector('[role="region"][aria-label="Map"]')
+        ?.scrollIntoView({ block: "nearest", behavior: "smooth" });
     const middle = middleOfPlace(place);
     const turn = (latest.current += 1);
     // A row followed over the whole log lies on every pass: the one unrolled shows it already.

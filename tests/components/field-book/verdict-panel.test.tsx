@@ -82,6 +82,18 @@ describe("the verdict", () => {
     expect(store.getState().frame?.wish).toBe(2);
   });
 
+  it("brings the map into sight", async () => {
+    const region = document.createElement("div");
+    region.setAttribute("role", "region");
+    region.setAttribute("aria-label", "Map");
+    region.scrollIntoView = vi.fn();
+    document.body.append(region);
+    renderInBook(<VerdictPanel verdict={VERDICT} rows={8} trouble={false} {...PLACE} />);
+    await userEvent.click(screen.getByRole("button", { name: "See it: row 5" }));
+    expect(region.scrollIntoView).toHaveBeenCalledTimes(1);
+    region.remove();
+  });
+
   it("says that it is not known which rows were under target, and the way to the machine", () => {
     const unjudged = { ...VERDICT, rowsUnderTarget: [], findings: [], known: { underTarget: false, atLimit: false } };
     renderInBook(<VerdictPanel verdict={unjudged} rows={8} trouble={false} {...PLACE} />);
