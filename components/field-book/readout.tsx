@@ -45,7 +45,8 @@ export function Readout({ spoken }: { spoken: boolean }) {
   );
 }
 
-function ReadingWords({ cursor }: { cursor: Cursor }) {
+/** Row, value, speed, time and place of a reading, as parts of a line. */
+export function ReadingWords({ cursor }: { cursor: Cursor }) {
   const logVersion = useLogVersion();
   const channel = useBookState((state) => state.channel);
   const { data: track } = useQuery(trackQuery(logVersion, channel, cursor.pass));

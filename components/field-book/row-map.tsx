@@ -6,6 +6,7 @@ import { useGroundOverlays } from "@/components/coverage/use-ground-overlays";
 import { CellMark } from "@/components/field-book/cell-mark";
 import { useBook, useBookState } from "@/components/field-book/field-book-context";
 import type { Classes } from "@/components/field-book/use-classes";
+import { TapSheet } from "@/components/field-book/tap-sheet";
 import { useMapGround } from "@/components/field-book/use-map-ground";
 import { useMapMarks } from "@/components/field-book/use-map-marks";
 import { useMapPointer } from "@/components/field-book/use-map-pointer";
@@ -47,6 +48,7 @@ export function RowMap({ basemap, bounds, boundary, classes, track, gentle }: Ro
       gentle={gentle}
     >
       {map ? <CellMark map={map} /> : null}
+      {gentle ? <TapSheet /> : null}
     </MapCanvas>
   );
 }
