@@ -12,6 +12,7 @@ export const DELAY_REFUSALS = [
   "nothing-varies",
   "flat",
   "at-the-edge",
+  "mirrored",
   "two-answers",
   "too-wide",
 ] as const;
