@@ -14,7 +14,7 @@ export function TapSheet() {
     <div
       role="status"
       data-testid="tap-sheet"
-      className="no-print fixed inset-x-0 bottom-14 z-20 flex items-start justify-between gap-2 border-t border-rule bg-sheet py-1 pl-4 pr-1 shadow-[0_-4px_16px_rgb(30_36_48/0.12)]"
+      className="no-print fixed inset-x-0 bottom-14 z-20 md:bottom-0 md:left-[5.5rem] flex items-start justify-between gap-2 border-t border-rule bg-sheet py-1 pl-4 pr-1 shadow-[0_-4px_16px_rgb(30_36_48/0.12)]"
     >
       <p className="flex min-w-0 flex-1 flex-wrap gap-x-4 py-2 text-table text-ink-soft">
         <ReadingWords cursor={cursor} />
