@@ -20,6 +20,7 @@ const FLAG_WORDS: Record<FlagCode, string> = {
   "hitch-unsettled": "hitch not yet settled",
   "time-backwards": "time runs backwards",
   "jack-knife": "hitch bent too far",
+  reversing: "running backwards",
 };
 
 /** One line that always stands in the same place and names the reading pointed at. */

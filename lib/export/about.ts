@@ -57,6 +57,7 @@ const FLAG_WORDS: Record<FlagCode, string> = {
   "hitch-unsettled": "The trailed machine's heading was not known yet.",
   "time-backwards": "Earlier than the record before.",
   "jack-knife": "The angle at the hitch was past what can be worked out.",
+  reversing: "The machine ran backwards; a trailed machine's row places are a guess there.",
 };
 
 const PLACE_METHOD =
