@@ -27,7 +27,7 @@ export function resolveChannelOrReason(placed: PlacedLog, channelId: string): Re
 function flagsChannel(placed: PlacedLog): ResolvedChannel {
   const { rows } = placed.geometry;
   const values = leftOutNumbers(placed.leftOut ?? null, { records: placed.log.records, rows });
-  return { id: "flags", unit: "1", rows, perRow: true, values, resolution: 1, censoredShare: null };
+  return { id: "flags", unit: "1", rows, perRow: true, values, resolution: 1, censoredShare: null, isCode: true };
 }
 
 /** The same, null where the log cannot give it. */

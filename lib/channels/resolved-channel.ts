@@ -14,4 +14,6 @@ export interface ResolvedChannel {
    * null where nothing is censored by nature.
    */
   censoredShare: number | null;
+  /** Values are names, not amounts: nothing may be averaged. */
+  isCode?: boolean;
 }

@@ -15,13 +15,16 @@ export interface AccumulateOptions {
   lengthM: number;
   weights: Float64Array;
   sums: Float64Array;
+  /** Keeps the least value of a pixel instead of adding up. */
+  keepsLeast: boolean;
 }
 
 /**
  * Shares a reading out over the pixels its cell covers, in proportion to the part of the cell in each. A cell smaller than
  * the spacing counts wholly for the pixel its middle lies in.
  */
-export function accumulateCell({ canvas, corners, value, lengthM, weights, sums }: AccumulateOptions): void {
+export function accumulateCell(options: AccumulateOptions): void {
+  const { canvas, corners, value, lengthM, weights, sums, keepsLeast } = options;
   const { pixelsPerWorld: scale, left, top, size } = canvas;
   // Whole-zoom pixel numbers until after the floor: neighbouring tiles then place each sample alike.
   const ax = corners[0]! * scale;
@@ -43,8 +46,14 @@ export function accumulateCell({ canvas, corners, value, lengthM, weights, sums 
       const column = Math.floor(ax + u * acrossX + v * alongX + u * v * twistX) - left;
       const row = Math.floor(ay + u * acrossY + v * alongY + u * v * twistY) - top;
       if (column < 0 || row < 0 || column >= size || row >= size) continue;
-      weights[row * size + column]! += weight;
-      sums[row * size + column]! += weight * value;
+      const at = row * size + column;
+      if (keepsLeast) {
+        if (weights[at] === 0 || value < sums[at]!) sums[at] = value;
+        weights[at] = 1;
+      } else {
+        weights[at]! += weight;
+        sums[at]! += weight * value;
+      }
     }
   }
 }

@@ -5,7 +5,10 @@ import { CHUNK_RECORDS, type TileIndex, writeCellCorners } from "@/lib/tiles/til
 import type { TileAddress } from "@/lib/tiles/tile-address";
 
 /** What drawing needs of a channel, logged or derived. */
-export type DrawnChannel = Pick<LogChannel, "rows" | "perRow" | "values">;
+export type DrawnChannel = Pick<LogChannel, "rows" | "perRow" | "values"> & {
+  /** Values are names, not amounts: far out a pixel carries the least of those it covers, never a mean. */
+  isCode?: boolean;
+};
 
 export interface TileRequest extends TileAddress {
   /** Pixels along a side. */
@@ -48,7 +51,7 @@ export function rasteriseTile(index: TileIndex, channel: DrawnChannel, request: 
     const canvas: TileCanvas = { size, pixelsPerWorld: 2 ** z * size, left: x * size, top: y * size, values };
     if (weights && sums)
       forEachCell(index, channel, canvas, (corners, value, lengthM) =>
-        accumulateCell({ canvas, corners, value, lengthM, weights, sums }),
+        accumulateCell({ canvas, corners, value, lengthM, weights, sums, keepsLeast: channel.isCode === true }),
       );
     else forEachCell(index, channel, canvas, (corners, value) => fillCell(canvas, corners, value));
   }

@@ -160,6 +160,19 @@ describe("far zooms", () => {
     expect(checked.worst).toBeLessThan(0.001);
   });
 
+  it("never show a mean of codes: a pixel carries the least code of what it covers", () => {
+    const value = (_pass: number, record: number, row: number) => ((record + row) % 2 === 0 ? 5 : 11);
+    const { placed, channel } = placeStraightPasses({ ...FINE, value });
+    const index = buildTileIndex(placed);
+    const [longitude, latitude] = placed.plane.toDegrees(120, -6);
+    const tile = tileAt(longitude, latitude, 13);
+    const drawn = (isCode: boolean) =>
+      new Set(rasteriseTile(index, { ...channel, isCode }, { ...tile, size: 512 }).filter((pixel) => pixel === pixel));
+    expect([...drawn(true)]).toEqual([5]);
+    // What would be shown if the codes were amounts: rules that took nothing out.
+    expect([...drawn(false)].some((mean) => mean > 5 && mean < 11)).toBe(true);
+  });
+
   it("leave no hole inside the ground worked", () => {
     for (const headingDeg of [0, 17, 45, 71]) {
       const { placed, channel } = placeStraightPasses({ ...FINE, headingDeg, passes: 12 });
