@@ -2,7 +2,7 @@ import type { MultiPolygon, Polygon } from "geojson";
 import { describePasses } from "@/lib/build/describe-passes";
 import { placeAntenna, type AntennaPositions } from "@/lib/build/log-plane";
 import { measureMotion, type Motion } from "@/lib/build/log-motion";
-import { flagNotes, flagRecords, workingRecords } from "@/lib/cleaning/flag-records";
+import { flagNotes, flagRecords, STANDING_STILL_MPS, workingRecords } from "@/lib/cleaning/flag-records";
 import { FLAGS } from "@/lib/cleaning/flags";
 import { markImpossibleSteps } from "@/lib/cleaning/position-steps";
 import { boundaryInPlane } from "@/lib/geo/boundary-in-plane";
@@ -102,12 +102,15 @@ function trackOnGround(log: MachineLog, antenna: AntennaPositions, machine: Seed
   jumps.forEach((jump, i) => {
     if (jump === 1) antenna.eastM[i] = antenna.northM[i] = NaN;
   });
-  const motion = measureMotion(log, antenna);
   const working = workingRecords(log);
+  const motion = measureMotion(log, antenna, working);
   const flags = flagRecords(log, motion.speedMps, working).map((bits, i) =>
     jumps[i] === 1 ? bits | FLAGS["impossible-step"] : bits,
   );
-  const line = placeRows({ ...antenna, headingDeg: motion.headingDeg, breaks: motion.breaks }, machine);
+  motion.backwards.forEach((back, i) => {
+    if (back === 1 && !(motion.speedMps[i]! < STANDING_STILL_MPS)) flags[i]! |= FLAGS.reversing;
+  });
+  const line = placeRows({ ...antenna, ...motion }, machine);
   const works = working.map((value, i) => (value === 1 && Number.isFinite(line.originEastM[i]!) ? 1 : 0));
   const { headingDeg } = motion;
   const { timeMs, speedMps, loggedPass } = log;

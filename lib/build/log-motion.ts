@@ -1,4 +1,5 @@
-import { circularMean, turnDegrees } from "@/lib/geo/circular-mean";
+import { findReversing } from "@/lib/build/find-reversing";
+import { circularMean, turnDegrees, wrapDegrees } from "@/lib/geo/circular-mean";
 import { HOLD_HEADING_BELOW_MPS, headingFromTrack, holdLast } from "@/lib/geo/heading-from-track";
 import { medianStepSeconds } from "@/lib/cleaning/position-steps";
 import type { LogNote, MachineLog } from "@/lib/logs/machine-log";
@@ -10,6 +11,8 @@ export interface Motion {
   speedMps: Float32Array;
   /** 1 where the track does not continue from the last record with a position. */
   breaks: Uint8Array;
+  /** 1 where the machine runs backwards; its heading is that of its front all the same. */
+  backwards: Uint8Array;
   notes: LogNote[];
 }
 
@@ -23,20 +26,60 @@ const TRACK_GAP_S = 10;
 /** A logged heading further than this from the track on the whole is not a heading of this machine. */
 const HEADING_DISAGREES_DEG = 30;
 
-/** Heading and speed of the antenna: as logged where the log has them, from the track elsewhere. */
-export function measureMotion(log: MachineLog, positions: Positions): Motion {
+/** Heading (of the machine's front) and speed of the antenna: as logged where the log has them, from the track elsewhere. */
+export function measureMotion(log: MachineLog, positions: Positions, works?: Uint8Array): Motion {
   const breaks = trackBreaks(log, positions);
   const speedMps = fillSpeed(log, positions, breaks);
-  const course = headingFromTrack({ ...positions, speedMps, breaks });
+  const reversing = findReversing({ ...positions, speedMps, timeMs: log.timeMs, works: works ?? [], breaks });
+  const { backwards, cusps } = reversing;
+  const stretches = breaks.map((isBreak, i) => (isBreak === 1 || cusps[i] === 1 ? 1 : 0));
+  const course = headingFromTrack({ ...positions, speedMps, breaks: stretches });
+  const front = frontOf(course, { ...positions, speedMps, backwards });
   const notes: LogNote[] = [];
   const logged = log.headingDeg && checkHeading(log, { course, speedMps, notes }) ? log.headingDeg : null;
-  if (!logged) return { headingDeg: fillStart(course), speedMps, breaks, notes };
+  if (!logged) return { headingDeg: fillStart(front), speedMps, breaks, backwards, notes };
+  const opposed = Uint8Array.from(logged, (heading, i) =>
+    opposes(heading, course[i]!) && speedMps[i]! > MOVING_MPS ? 1 : 0,
+  );
+  // A receiver that logs its course flips with it; one that logs the machine's heading does not.
+  const isCourse = backwards.some(
+    (back, i) => back === 1 && !opposes(logged[i]!, course[i]!) && speedMps[i]! > MOVING_MPS,
+  );
   const headingDeg = Float32Array.from(logged, (heading, i) => {
     if (speedMps[i]! < HOLD_HEADING_BELOW_MPS) return NaN;
-    return Number.isFinite(heading) ? heading : course[i]!;
+    if (!Number.isFinite(heading)) return front[i]!;
+    return isCourse && backwards[i] === 1 ? wrapDegrees(heading + 180) : heading;
   });
   holdLast(headingDeg);
-  return { headingDeg: fillStart(headingDeg), speedMps, breaks, notes };
+  const either = isCourse ? backwards : backwards.map((back, i) => back | longOpposed(opposed, i));
+  return { headingDeg: fillStart(headingDeg), speedMps, breaks, backwards: either, notes };
+}
+
+/** The way the machine's front points where it moves along a course; held where it stands. */
+function frontOf(
+  course: Float32Array,
+  { eastM, speedMps, backwards }: Pick<Motion, "speedMps" | "backwards"> & Positions,
+): Float32Array {
+  const front = course.map((heading, i) => {
+    if (speedMps[i]! < HOLD_HEADING_BELOW_MPS || !Number.isFinite(eastM[i]!)) return NaN;
+    return backwards[i] === 1 ? wrapDegrees(heading + 180) : heading;
+  });
+  holdLast(front);
+  return front;
+}
+
+/** From this speed on a course from positions is sure. */
+const MOVING_MPS = 2 * HOLD_HEADING_BELOW_MPS;
+/** A machine whose heading and course stand further apart than this runs backwards. */
+const OPPOSED_DEG = 120;
+
+function opposes(headingDeg: number, courseDeg: number): boolean {
+  return Math.abs(turnDegrees(headingDeg, courseDeg)) > OPPOSED_DEG;
+}
+
+/** 1 where a record and one beside it oppose the course: a single one is a flaw of the log. */
+function longOpposed(opposed: Uint8Array, i: number): number {
+  return opposed[i] === 1 && (opposed[i - 1] === 1 || opposed[i + 1] === 1) ? 1 : 0;
 }
 
 /** Records before the first known heading take that one, so that a log does not lose its first metres. */

@@ -8,6 +8,8 @@ export interface AntennaTrack {
   northM: Float64Array;
   headingDeg: Float32Array;
   breaks: Uint8Array;
+  /** 1 where the machine runs backwards. */
+  backwards?: Uint8Array;
 }
 
 export interface RowLine {
@@ -33,9 +35,15 @@ export function placeRows(track: AntennaTrack, machine: Seeder | null): RowLine 
     northM: hitch.originNorthM,
     headingDeg: track.headingDeg,
     breaks: track.breaks,
+    backwards: track.backwards,
   };
   const trailed = trailHitch(path, drawbarM);
-  const behindHitch = { ...path, eastM: hitch.originEastM, northM: hitch.originNorthM, headingDeg: trailed.headingDeg };
+  const behindHitch = {
+    ...track,
+    eastM: hitch.originEastM,
+    northM: hitch.originNorthM,
+    headingDeg: trailed.headingDeg,
+  };
   return {
     ...behindAntenna(behindHitch, hitchToRowsM, 0),
     unsettled: trailed.unsettled,

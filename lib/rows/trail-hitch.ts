@@ -8,6 +8,8 @@ export interface HitchPath {
   headingDeg: ArrayLike<number>;
   /** 1 where the path does not continue from the record before. */
   breaks: ArrayLike<number>;
+  /** 1 where the towing machine runs backwards. */
+  backwards?: ArrayLike<number>;
 }
 
 export interface TrailedHeading {
@@ -30,7 +32,7 @@ export function relaxHitchAngleDeg(angleDeg: number, stepM: number, lengthM: num
 /**
  * Heading of a one-axle trailed implement whose wheels follow `lengthM` behind the hitch pin (tractrix; wheels roll and do
  * not slip sideways), exact for a hitch path of straight steps. Each stretch starts in line with the towing machine.
- * Reversing is not modelled.
+ * Running backwards has no such answer (any angle grows): the heading is held, and unsettled until three lengths after it.
  */
 export function trailHitch(path: HitchPath, lengthM: number): TrailedHeading {
   const records = path.eastM.length;
@@ -46,6 +48,7 @@ export function trailHitch(path: HitchPath, lengthM: number): TrailedHeading {
     if (path.breaks[i] === 1) [before, travelledM] = [-1, 0];
     if (Number.isFinite(path.eastM[i]!)) {
       if (before < 0) theta = path.headingDeg[i]!;
+      else if (path.backwards?.[i] === 1) travelledM = 0;
       else {
         const east = path.eastM[i]! - path.eastM[before]!;
         const north = path.northM[i]! - path.northM[before]!;
