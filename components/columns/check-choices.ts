@@ -16,6 +16,8 @@ export interface ChoiceCheck {
 }
 
 export interface ChoiceExtras {
+  /** Columns whose times name no offset from UTC. */
+  zoneless?: readonly string[];
   contact?: ContactDefinition | null;
   crs: string;
   timeZone: string;
@@ -84,9 +86,12 @@ export function checkChoices(choices: Choices, shape: LogShape, extras: ChoiceEx
     const problem = choice.seen ? problemOf(choice, shape) : null;
     if (problem) problems[name] = problem;
   }
-  const needsTimeZone = entries.some(([, choice]) => choice.use === "channel" && choice.unit === "local");
+  const times = entries.filter(([, choice]) => choice.use === "channel" && choice.channel === "time");
+  const isLocal = times.some(([, choice]) => choice.unit === "local");
+  const needsTimeZone =
+    isLocal || times.some(([name, choice]) => choice.unit === "iso8601" && extras.zoneless?.includes(name));
   const general = findGeneral(choices, shape, extras);
-  if (needsTimeZone && extras.timeZone.trim() === "")
+  if (isLocal && extras.timeZone.trim() === "")
     general.push("Local times need their time zone, such as America/Chicago.");
   const asksContact = readsAs(choices, "contact");
   if (asksContact && extras.contact && !ContactDefinition.safeParse(extras.contact).success) {

@@ -3,7 +3,7 @@
 import { useMemo, useState } from "react";
 import { buildMapping } from "@/components/columns/build-mapping";
 import { checkChoices } from "@/components/columns/check-choices";
-import { startLayout } from "@/components/columns/column-choice";
+import { startLayout, type FoundColumn } from "@/components/columns/column-choice";
 import { ColumnLine } from "@/components/columns/column-line";
 import { columnSections } from "@/components/columns/column-sections";
 import { ConfirmBar } from "@/components/columns/confirm-bar";
@@ -13,10 +13,12 @@ import { groupColumns } from "@/components/columns/group-columns";
 import { LayerPicker, viewLayer } from "@/components/columns/layer-picker";
 import { MappingExtras, type Extras } from "@/components/columns/mapping-extras";
 import { changeColumns, changeShape } from "@/components/columns/number-rows";
+import { SpokenRecord } from "@/components/columns/spoken-record";
 import { ShapeChoice } from "@/components/columns/shape-choice";
 import { Notice } from "@/components/ui/notice";
 import { ApiProblem } from "@/lib/api/api-problem";
 import { LogMapping } from "@/lib/ingest/mapping";
+import { parseIsoTime } from "@/lib/ingest/records/parse-time";
 import type { Log, LogColumns } from "@/lib/schemas/logs";
 import type { MachineReply } from "@/lib/schemas/machines";
 
@@ -59,6 +61,11 @@ function startLayer({ mapping, layers }: LogColumns): string | null {
   return (inForce.success ? inForce.data.layer : undefined) ?? layers?.[0]?.id ?? null;
 }
 
+/** Times as ISO texts that name no offset from UTC. */
+function hasZonelessTimes({ sample }: FoundColumn): boolean {
+  return sample.some((text) => parseIsoTime(text)?.zoned === false);
+}
+
 function linkLayer(href: string, layer: string | null): string {
   return layer === null ? href : `${href}&layer=${encodeURIComponent(layer)}`;
 }
@@ -94,7 +101,9 @@ function LayerForm({
   const [extras, setExtras] = useState(() => startExtras(found, machineId));
   const isConfirmed = found.mapping !== null;
   const sections = useMemo(() => columnSections(groupColumns(found.columns), isConfirmed), [found, isConfirmed]);
-  const check = checkChoices(choices, shape, extras);
+  const zoneless = useMemo(() => found.columns.filter(hasZonelessTimes).map(({ name }) => name), [found]);
+  const check = checkChoices(choices, shape, { ...extras, zoneless });
+  const timeZone = check.needsTimeZone ? extras.timeZone : "";
   const problems = { ...refusedColumns(failure), ...check.problems };
   const change: ChangeChoices = (names, patch) => setLayout((before) => changeColumns(before, names, patch));
 
@@ -104,7 +113,7 @@ function LayerForm({
       className="space-y-8"
       onSubmit={(event) => {
         event.preventDefault();
-        onSave(buildMapping(choices, shape, { ...extras, layer }), extras.machineId || null);
+        onSave(buildMapping(choices, shape, { ...extras, timeZone, layer }), extras.machineId || null);
       }}
     >
       {found.recipe ? (
@@ -160,6 +169,7 @@ function LayerForm({
             })}
           </section>
         ))}
+        <SpokenRecord found={found} choices={choices} timeZone={timeZone} />
         <section className="space-y-3">
           <h2 className="text-section">And besides</h2>
           <MappingExtras

@@ -7,8 +7,8 @@ import type { LogColumns } from "@/lib/schemas/logs";
 export function viewLayer(found: LogColumns, layerId: string | null): LogColumns {
   const layer = found.layers?.find((candidate) => candidate.id === layerId);
   if (!layer) return found;
-  const { shape, columns, crs, crsCandidates, device } = layer;
-  return { ...found, shape, columns, crs, crsCandidates, device };
+  const { shape, columns, crs, crsCandidates, device, example } = layer;
+  return { ...found, shape, columns, crs, crsCandidates, device, example };
 }
 
 export interface LayerPickerProps {

@@ -58,8 +58,8 @@ export function MappingExtras({
       {needsTimeZone ? (
         <div>
           <TextField
-            label="Time zone of the local times"
-            hint="Such as America/Chicago. Daylight saving is taken into account."
+            label="Time zone of the log's clock"
+            hint="Such as America/Chicago, or UTC. Daylight saving is taken into account."
             list={zonesId}
             value={extras.timeZone}
             onChange={(event) => onChange({ timeZone: event.target.value })}

@@ -129,6 +129,16 @@ export function MeaningEditor({ of, choice, onChange, withRow, ownName }: Meanin
       {choice.channel === "longitude" || choice.channel === "latitude" ? (
         <DegreesField choice={choice} onChange={onChange} />
       ) : null}
+      {choice.use === "channel" && choice.channel === "contact" ? (
+        <SelectField
+          label="Counts"
+          value={choice.format}
+          onChange={(event) => onChange({ format: event.target.value })}
+        >
+          <option value="">contact kept</option>
+          <option value="lost">contact lost</option>
+        </SelectField>
+      ) : null}
       {choice.use === "channel" && choice.unit && getUnit(choice.unit).quantity !== "clock" ? (
         <TextField
           label="Counts as missing"

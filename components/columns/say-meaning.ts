@@ -11,7 +11,7 @@ export function unitSign(unit: UnitId): string {
 }
 
 /** What the choice comes to as an entry of a mapping; null for "left out". */
-function meaningOf(choice: ColumnChoice): ColumnMeaning | null {
+export function meaningOf(choice: ColumnChoice): ColumnMeaning | null {
   if (choice.use !== "channel" || choice.channel === null) return null;
   const format = choice.format.trim();
   const missing = readMissing(choice.missing) ?? [];

@@ -53,6 +53,7 @@ export interface LogLayer {
   crs?: string;
   crsCandidates?: CrsCandidate[];
   device?: LoggedDevice;
+  example?: string[];
   columns: FoundColumn[];
 }
 
@@ -90,6 +91,8 @@ export interface Inspection {
   /** Where the file holds several logs: all of them. `columns` are those of the first. */
   layers?: LogLayer[];
   device?: LoggedDevice;
+  /** Cells of one record as they stand in the file, in the order of the columns: the first that lacks fewest. */
+  example?: string[];
   columns: FoundColumn[];
   recordsSampled: number;
   notes: LogNote[];

@@ -20,7 +20,7 @@ export const MappedColumn = z.object({
   /** Row the column belongs to, 1 = leftmost looking forward. Wide files only. */
   row: z.number().int().min(1).max(1024).optional(),
   unit: z.enum(UNIT_IDS),
-  /** `local`: the pattern of the time, such as `dd/MM/yyyy HH:mm:ss`; `bu/ac`: the bushel weight, `56 lb`; `row`: `from 0`. */
+  /** `local`: the pattern of the time, such as `dd/MM/yyyy HH:mm:ss`; `bu/ac`: the bushel weight, `56 lb`; `row`: `from 0`; `contact`: `lost`. */
   format: z.string().trim().min(1).max(80).optional(),
   /** Values, in the column's own unit, that stand for "nothing here", such as -999. */
   missing: z.array(z.number().finite()).max(16).optional(),

@@ -145,6 +145,7 @@ export const LogLayerBody = z.object({
   crs: z.string().optional(),
   crsCandidates: z.array(CrsCandidateBody).optional(),
   device: LoggedDeviceBody.optional(),
+  example: z.array(z.string()).optional(),
   columns: z.array(FoundColumnBody),
 });
 export const LogColumns = z.object({
@@ -159,6 +160,9 @@ export const LogColumns = z.object({
   layers: z.array(LogLayerBody).optional(),
   /** The machine by the file's own description, where it has one. */
   device: LoggedDeviceBody.optional(),
+  /** Cells of one record as they stand in the file, in the order of the columns: for reading it out. */
+  example: z.array(z.string()).optional(),
+  decimalComma: z.boolean().optional(),
   notes: z.array(LogNoteBody),
   /** The mapping in force, once a person or a recipe gave one. */
   mapping: z.unknown().nullable(),

@@ -39,6 +39,7 @@ export interface InspectedLayer {
   crs?: string;
   crsCandidates?: CrsCandidate[];
   device?: LoggedDevice;
+  example?: string[];
   columns: FoundColumn[];
   /** Others of the list taken together: a choice, but no further log. */
   isJoined?: boolean;
@@ -47,13 +48,14 @@ export interface InspectedLayer {
 /** What an inspection says of the logs in a file: the longest first, all of them named where there are several. */
 export function describeLayers(
   inspected: readonly InspectedLayer[],
-): Pick<Inspection, "shape" | "columns" | "layers" | "crs" | "crsCandidates"> & { notes: LogNote[] } {
+): Pick<Inspection, "shape" | "columns" | "layers" | "crs" | "crsCandidates" | "example"> & { notes: LogNote[] } {
   const layers = keepListed([...inspected].sort((a, b) => b.records - a.records));
   const left = inspected.length - layers.length;
   const [first] = layers;
   const crs = first?.crs === undefined ? {} : { crs: first.crs };
   const candidates = first?.crsCandidates ? { crsCandidates: first.crsCandidates } : {};
-  const one = { shape: first?.shape ?? "single", columns: first?.columns ?? [], ...crs, ...candidates };
+  const example = first?.example ? { example: first.example } : {};
+  const one = { shape: first?.shape ?? "single", columns: first?.columns ?? [], ...crs, ...candidates, ...example };
   if (layers.length < 2) return { ...one, notes: [] };
   const unlisted = left === 0 ? "" : ` The ${left} shortest are not listed: there are too many columns.`;
   const count = inspected.filter(({ isJoined }) => !isJoined).length;
@@ -66,7 +68,7 @@ function keepListed(inspected: readonly InspectedLayer[]): LogLayer[] {
   let columns = 0;
   return inspected
     .filter((layer, index) => (columns += layer.columns.length) <= READ_LIMITS.listedColumns || index === 0)
-    .map(({ id, label, records, shape, crs, crsCandidates, device, columns: own }) => ({
+    .map(({ id, label, records, shape, crs, crsCandidates, device, example, columns: own }) => ({
       id,
       label,
       records,
@@ -74,6 +76,7 @@ function keepListed(inspected: readonly InspectedLayer[]): LogLayer[] {
       ...(crs === undefined ? {} : { crs }),
       ...(crsCandidates === undefined ? {} : { crsCandidates }),
       ...(device === undefined ? {} : { device }),
+      ...(example === undefined ? {} : { example }),
       columns: own,
     }));
 }

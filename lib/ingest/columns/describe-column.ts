@@ -30,9 +30,10 @@ export function describeColumn(
   if (unit.quantity === "number") return `${name} is ${what}${countWords(meaning)}${quote(column.sample[0])}.`;
   if (unit.quantity === "clock")
     return `${name} is ${what} as ${unit.words}${patternWords(meaning)}${quote(column.sample[0])}.`;
+  const lost = meaning.channel === "contact" && meaning.format === "lost" ? ", counted where it was lost" : "";
   const isFromStart = meaning.channel === "time" ? " from the start of the log" : "";
   const aside = unit.quantity === "pressure" && isForceChannel(meaning) ? " (a pressure, never shown as a force)" : "";
-  return `${name} is ${what} in ${unit.words}${isFromStart}${aside}${exampleWords(column, { ...meaning, unit: meaning.unit }, options)}${missingWords(meaning)}.`;
+  return `${name} is ${what} in ${unit.words}${lost}${isFromStart}${aside}${exampleWords(column, { ...meaning, unit: meaning.unit }, options)}${missingWords(meaning)}.`;
 }
 
 function missingWords({ missing }: ColumnMeaning): string {

@@ -31,7 +31,10 @@ export function guessColumns(
   if (known.length > 0) proposals.forEach((proposal, index) => doubtGuess(known[index] ? null : proposal));
   keepBestOfEach(proposals);
   dropLoneWeek(proposals);
-  if (known.length === 0) settleRows(proposals);
+  if (known.length === 0) {
+    settleRows(proposals);
+    freeLoneRow(proposals);
+  }
   return { proposals, shape: guessShape(proposals) };
 }
 
@@ -142,8 +145,17 @@ function settleRows(proposals: (ColumnProposal | null)[]): void {
   }
 }
 
+/** A number 1 on one column alone tells no rows apart: it is the whole machine's. */
+function freeLoneRow(proposals: readonly (ColumnProposal | null)[]): void {
+  const rowed = proposals.filter((proposal) => proposal?.row !== undefined);
+  const [lone] = rowed;
+  if (!lone || rowed.length > 1 || lone.row !== 1) return;
+  delete lone.row;
+  lone.reason += "; no other column has a row, so it is taken for the whole machine's";
+}
+
 function guessShape(proposals: readonly (ColumnProposal | null)[]): LogShape {
   const rowed = proposals.filter((proposal) => proposal?.row !== undefined);
-  if (rowed.length > 1) return "wide";
+  if (rowed.length > 0) return "wide";
   return proposals.some((proposal) => proposal?.channel === "row") ? "long" : "single";
 }

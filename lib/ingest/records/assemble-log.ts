@@ -32,6 +32,7 @@ function assembleChannel(collector: RecordCollector, store: ChannelStore): LogCh
   const { id, unit, perRow } = store.plan;
   const rows = collector.widthOf(store.plan);
   const values = collector.takeValues(store);
+  if (store.plan.isLost) for (let i = 0; i < values.length; i++) values[i] = 1 - (values[i] ?? NaN);
   return { id, unit, rows, perRow, values, resolution: measureResolution(values, commonFactor(store)) };
 }
 

@@ -26,6 +26,8 @@ export interface ChannelPlan {
   /** Place in the line of each row's value (one entry where not per row); `columnCount` (always NaN) for a missing row. */
   fields: Int32Array;
   factors: Float64Array;
+  /** The file gives the share of contact lost: what is kept is the rest of one. */
+  isLost: boolean;
 }
 
 export interface PositionPlan {
@@ -259,8 +261,25 @@ function planChannels(
       fields[slot] = column.field;
       factors[slot] = columnFactor(column);
     }
-    return { id, unit, perRow, fields, factors };
+    return { id, unit, perRow, fields, factors, isLost: countsLost(id, columns) };
   });
+}
+
+/** Whether contact is given as the share lost; all of its columns must say the same. */
+function countsLost(id: ChannelId, columns: readonly PlacedColumn[]): boolean {
+  if (id !== "contact") return false;
+  const isLost = columns.map(({ format }) => /^lost$/i.test(format ?? ""));
+  const odd = columns.find(
+    ({ format }, index) => (format !== undefined && !isLost[index]) || isLost[index] !== isLost[0],
+  );
+  if (odd) {
+    stopReading(
+      "mapping-invalid",
+      `Column '${odd.name}' is ground contact with the format "${odd.format ?? ""}". Write "lost" on all columns of it where they count lost contact, or nothing on any.`,
+      { column: odd.name },
+    );
+  }
+  return isLost[0] ?? false;
 }
 
 function checkRows(columns: readonly PlacedColumn[], shape: LogShape, perRow: boolean): void {

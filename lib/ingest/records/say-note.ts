@@ -67,8 +67,25 @@ const SENTENCES: Record<string, (say: Say) => string> = {
     `The ${say.column ?? ""} is a pressure. It is kept as one and never shown as a force, because that needs the cylinder area and the linkage.`,
   "contact-definition": () =>
     "Ground contact is the share of time a gauge wheel carried load in some logs, and a yes or no at the moment of the record in others. The file does not say which: ask whoever set up the machine, and compare logs only of one kind.",
-  "newtons-like-kilograms": () =>
-    "The downforce is said to be in newtons, but its values would be little for newtons and are usual for kilograms-force. Check the unit: one kilogram-force is 9.8 N.",
+  "newtons-like-kilograms": (say) =>
+    `The ${say.column ?? ""} is said to be in newtons, but its values would be little for newtons and are usual for kilograms-force or pounds-force. Check the unit and change it if need be: one kilogram-force is 9.8 N, one pound-force 4.4 N.`,
+  "steady-in-sample": (say) =>
+    `The ${say.column ?? ""} has the same value in all the records looked at: a sensor may be stuck, not connected or switched on later. Leave the column out if it measures nothing.`,
+  "row-steady": (say) =>
+    `The ${say.column ?? ""} never changes in the records looked at while other rows do: its sensor may be stuck. Leave that column out if so.`,
+  "margin-above-force": () =>
+    "The margin lies above the downforce by more than a row unit weighs, which cannot be: the two may be swapped, or one is in another unit. Change what the columns are, or their unit.",
+  "contact-reversed": () =>
+    "Ground contact is 0 where the gauge wheel carried load and full where it did not: the column seems to count lost contact, and is proposed so. Change it under “Counts” if that is wrong.",
+  "contact-contradicts": () =>
+    "Ground contact and the load left on the gauge wheel contradict each other in many records: contact is lost while load is left, or the other way round. Check what both columns are, and how contact is defined.",
+  "speed-disagrees": (say) =>
+    `The ground speed does not agree with the distance between positions. ${say.column ?? ""} Check its unit.`.replace(
+      "  ",
+      " ",
+    ),
+  "time-names-no-zone": () =>
+    "Times name no offset from UTC. Say in which time zone the clock ran; without one they are read as UTC.",
   "gps-week-short": () =>
     'The GPS weeks are below 1024. Some receivers begin again at 0 each 1024 weeks: if the dates come out decades too early, give that column the format "from 1024" or "from 2048".',
   "degrees-minutes": () =>

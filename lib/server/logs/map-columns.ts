@@ -56,6 +56,8 @@ export async function getColumns(_container: Container, scope: Scope, logId: str
       crsCandidates: found.crsCandidates,
       layers: found.layers?.map(({ device, ...layer }) => ({ ...layer, device: describeDevice(device) })),
       device: describeDevice(found.device),
+      example: found.example,
+      decimalComma: found.decimalComma,
       notes: found.notes,
       mapping: log.mapping,
       recipe,

@@ -221,6 +221,16 @@ describe("ground contact", () => {
     });
   });
 
+  it("can be counted as lost", async () => {
+    const { onSave, user } = show(makeFound([contactColumn]));
+    const card = screen.getByRole("article", { name: "Column GW_01" });
+    await user.click(within(card).getByRole("button", { name: "Change" }));
+    await user.selectOptions(within(card).getByLabelText("Counts"), "lost");
+    expect(card).toHaveTextContent("counted where it was lost");
+    await user.click(screen.getByRole("button", { name: "Read the log" }));
+    expect(onSave.mock.calls[0]?.[0].columns.at(-1)).toMatchObject({ channel: "contact", format: "lost" });
+  });
+
   it("stays unsaid where nobody says it, and is not asked of other files", async () => {
     const { onSave, user } = show(makeFound([contactColumn]));
     await user.click(screen.getByRole("button", { name: "Read the log" }));
@@ -236,6 +246,31 @@ describe("ground contact", () => {
     await user.type(screen.getByLabelText("Load from which it counts as contact"), "much");
     expect(screen.getByRole("button", { name: "Read the log" })).toBeDisabled();
     expect(screen.getByText(/write the load and the time as numbers/)).toBeInTheDocument();
+  });
+});
+
+describe("times that name no offset", () => {
+  const stamped = (text: string) => makeFound([makeColumn("TIME", { channel: "time", unit: "iso8601" }, [text])]);
+
+  it("ask for the zone of the log's clock, and send it", async () => {
+    const { onSave, user } = show(stamped("2026-09-24T14:05:00"));
+    const zone = screen.getByLabelText("Time zone of the log's clock");
+    await user.clear(zone);
+    await user.type(zone, "America/Chicago");
+    await user.click(screen.getByRole("button", { name: "Read the log" }));
+    expect(onSave.mock.calls[0]?.[0].timeZone).toBe("America/Chicago");
+  });
+
+  it("are read as UTC where nobody names one; a zone nobody was asked for is never sent", async () => {
+    const { onSave, user } = show(stamped("2026-09-24T14:05:00"));
+    await user.clear(screen.getByLabelText("Time zone of the log's clock"));
+    await user.click(screen.getByRole("button", { name: "Read the log" }));
+    expect(onSave.mock.calls[0]?.[0]).not.toHaveProperty("timeZone");
+    cleanup();
+    const zoned = show(stamped("2026-09-24T14:05:00Z"));
+    expect(screen.queryByLabelText("Time zone of the log's clock")).not.toBeInTheDocument();
+    await zoned.user.click(screen.getByRole("button", { name: "Read the log" }));
+    expect(zoned.onSave.mock.calls[0]?.[0]).not.toHaveProperty("timeZone");
   });
 });
 

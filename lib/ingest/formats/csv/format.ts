@@ -89,6 +89,7 @@ async function inspectCsv(source: ByteSource, options: InspectOptions): Promise<
     decimalComma: dialect.decimalComma,
     encoding: encoding.encoding,
     ...(found.crsCandidates ? { crsCandidates: found.crsCandidates } : {}),
+    ...(found.example ? { example: found.example } : {}),
     columns: found.columns,
     recordsSampled: rows.length,
     notes: notes.list("line"),

@@ -93,6 +93,7 @@ async function inspectGeojson(source: ByteSource, options: InspectOptions): Prom
     encoding: "utf-8",
     ...(crs === undefined ? {} : { crs }),
     ...(found.crsCandidates ? { crsCandidates: found.crsCandidates } : {}),
+    ...(found.example ? { example: found.example } : {}),
     columns: found.columns,
     recordsSampled: features.length,
     notes: notes.list("feature"),
