@@ -47,7 +47,8 @@ export function useMapMarks(map: MapLibreMap | null, track: PassTrack | undefine
   useEffect(() => {
     if (!map) return;
     const keep = () => {
-      const { lng, lat } = map.getCenter();
+      // Past the antimeridian the map counts on; an address holds a longitude within 180.
+      const { lng, lat } = map.getCenter().wrap();
       store.getState().setView({ longitude: lng, latitude: lat, zoom: map.getZoom() });
     };
     map.on("moveend", keep);

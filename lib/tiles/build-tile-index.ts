@@ -30,6 +30,12 @@ export function tileIndexBounds(index: TileIndex): TileBounds | null {
   return [wrapLongitude(west), south, wrapLongitude(east), north];
 }
 
+/** The same for TileJSON, whose west may not lie east of its east: across the antimeridian the whole width of the map. */
+export function tileJsonBounds(index: TileIndex): TileBounds {
+  const [west, south, east, north] = tileIndexBounds(index) ?? [-180, -85, 180, 85];
+  return west > east ? [-180, south, 180, north] : [west, south, east, north];
+}
+
 function wrapLongitude(longitude: number): number {
   return ((((longitude + 180) % 360) + 360) % 360) - 180;
 }

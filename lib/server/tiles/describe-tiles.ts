@@ -6,7 +6,7 @@ import type { Container } from "@/lib/server/create-container";
 import { findPlacedLog, loadChannel, type LogChoice } from "@/lib/server/logs/find-placed-log";
 import { loadTileIndex } from "@/lib/server/tiles/load-tile-index";
 import { TILE_SIZE } from "@/lib/server/tiles/read-tile";
-import { tileIndexBounds } from "@/lib/tiles/build-tile-index";
+import { tileJsonBounds } from "@/lib/tiles/build-tile-index";
 import { valueScale } from "@/lib/tiles/value-scale";
 
 /** TileJSON 3 of a channel's value tiles, with the numbers that turn colours into values. */
@@ -18,7 +18,7 @@ export async function describeTiles(
   const { log, placed } = await findPlacedLog(container, scope, { ...input, channel: null });
   const channel = await loadChannel(container, log, input.channel);
   const scale = valueScale(channel);
-  const bounds = tileIndexBounds(await loadTileIndex(log)) ?? [-180, -85, 180, 85];
+  const bounds = tileJsonBounds(await loadTileIndex(log));
   const asLogged = input.cleaned === false ? "&cleaned=false" : "";
   const path = `/api/v1/logs/${log.id}/tiles/${encodeURIComponent(input.channel)}`;
   return {

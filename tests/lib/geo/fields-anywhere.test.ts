@@ -23,7 +23,7 @@ import { fieldBoundary } from "@/lib/simulator/field-ring";
 import { simulateSeedingLog } from "@/lib/simulator/simulate-seeding-log";
 import type { SimulationInput } from "@/lib/simulator/simulation-options";
 import { rowStatistics } from "@/lib/statistics/row-statistics";
-import { buildTileIndex, tileIndexBounds } from "@/lib/tiles/build-tile-index";
+import { buildTileIndex, tileIndexBounds, tileJsonBounds } from "@/lib/tiles/build-tile-index";
 import { locateReading } from "@/lib/tiles/locate-reading";
 import { rasteriseTile } from "@/lib/tiles/rasterise-tile";
 import { tileAt } from "@/lib/tiles/tile-address";
@@ -173,6 +173,9 @@ describe.each(PLACES)("a field at %s", (_name, origin) => {
     expect(compared).toBeGreaterThan(10);
     const [west, , east] = tileIndexBounds(index)!;
     expect(unwrapBounds([west, 0, east, 0])[2] - west).toBeLessThan(0.02);
+    const told = tileJsonBounds(index);
+    expect(told[0]).toBeLessThan(told[2]);
+    expect(told[2] - told[0] < 0.02).toBe(west < east);
   });
 });
 
