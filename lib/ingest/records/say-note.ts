@@ -47,6 +47,8 @@ const SENTENCES: Record<string, (say: Say) => string> = {
     `${say.n("feature", "features")} had no geometry and cannot be placed on the map.${say.first}`,
   "part-count-mismatch": (say) =>
     `The .shp and .dbf parts disagree by ${say.records}; only the records found in both were read.`,
+  "unknown-code-page": () =>
+    "The .cpg names a code page that is not known here; names and texts were read as Windows-1252. Where letters look wrong, export the log with UTF-8.",
   "cut-short": () => "The .shp ends before the length it states: it was cut short on the way.",
   "shapes-without-table": (say) =>
     `${say.n(".shp file has", ".shp files have")} no .dbf beside ${say.count === 1 ? "it" : "them"} and ${say.count === 1 ? "was" : "were"} left out.`,

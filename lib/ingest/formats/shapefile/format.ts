@@ -3,7 +3,13 @@ import { describeFoundColumns } from "@/lib/ingest/columns/describe-found-column
 import { nameColumns } from "@/lib/ingest/columns/name-columns";
 import { POINT_DEGREES, POINT_PLANE } from "@/lib/ingest/formats/point-columns";
 import { groupParts, holdsShapefile, type ShapefileParts } from "@/lib/ingest/formats/shapefile/group-parts";
-import { isDeleted, openDbf, readCellText, readCodePage, type DbfTable } from "@/lib/ingest/formats/shapefile/read-dbf";
+import {
+  isDeleted,
+  openDbf,
+  readCellText,
+  chooseEncoding,
+  type DbfTable,
+} from "@/lib/ingest/formats/shapefile/read-dbf";
 import { readShp, type ShapePoints } from "@/lib/ingest/formats/shapefile/read-shp";
 import type { ZipEntry } from "@/lib/ingest/formats/zip/list-entries";
 import { unpackEntry, type ZipArchive } from "@/lib/ingest/formats/zip/open-zip";
@@ -54,10 +60,12 @@ async function openLayer(archive: ZipArchive, parts: ShapefileParts, maxBytes = 
   const readText = async (entry: ZipEntry | null) =>
     entry ? new TextDecoder().decode(await unpackEntry(archive, entry, TEXT_BYTES)) : null;
   const points = readShp(await unpackEntry(archive, shp, maxBytes), shp.name);
-  const encoding = readCodePage((await readText(cpg)) ?? "");
-  const table = openDbf(await unpackEntry(archive, dbf, maxBytes), dbf.name, encoding);
+  const tableBytes = await unpackEntry(archive, dbf, maxBytes);
+  const { encoding, isGuessed } = chooseEncoding(tableBytes, await readText(cpg));
+  const table = openDbf(tableBytes, dbf.name, encoding);
   const records = Math.min(points.x.length, table.records);
   const notes = new NoteBook();
+  if (isGuessed) notes.add("unknown-code-page");
   if (maxBytes === Infinity) {
     notes.set("part-count-mismatch", Math.max(points.x.length, table.stated, table.records) - records);
     if (points.isCutShort) notes.add("cut-short", points.x.length);

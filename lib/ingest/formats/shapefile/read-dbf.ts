@@ -30,7 +30,7 @@ export function openDbf(bytes: Uint8Array, name: string, encoding: string): DbfT
   const stated = view.getUint32(4, true);
   const firstByte = view.getUint16(8, true);
   const recordBytes = view.getUint16(10, true);
-  const decoder = createDecoder(encoding);
+  const decoder = new TextDecoder(encoding);
   const fields: DbfField[] = [];
   let offset = 1;
   for (
@@ -55,22 +55,76 @@ function stopDamaged(name: string, why: string): never {
   stopReading("shapefile-damaged", `"${name}" is no readable dBase table: ${why}. Export the log again.`);
 }
 
-/** Encoding named by the .cpg; Windows-1252 for anything unknown, which is what these files mostly are. */
-function createDecoder(encoding: string): TextDecoder {
+const FALLBACK = "windows-1252";
+
+/** A label that TextDecoder knows; null for any other. */
+function knownLabel(label: string): string | null {
   try {
-    return new TextDecoder(encoding);
+    return new TextDecoder(label).encoding;
   } catch {
-    return new TextDecoder("windows-1252");
+    return null;
   }
 }
 
-/** Label of a .cpg part (`UTF-8`, `1252`, `ISO 88591`) as TextDecoder knows it. */
-export function readCodePage(text: string): string {
+/** Label of a .cpg part (`UTF-8`, `1252`, `ANSI 1250`, `OEM 866`, `ISO 88591`) as TextDecoder knows it; null for a page it does not. */
+export function readCodePage(text: string): string | null {
   const label = text.trim().toLowerCase();
-  if (/^(?:ansi )?125\d$/.test(label)) return `windows-${label.slice(-4)}`;
-  const iso = /^iso[ _-]?8859[ _-]?(\d{1,2})$/.exec(label);
-  return iso ? `iso-8859-${iso[1] ?? "1"}` : label || "utf-8";
+  const page = /^(?:ansi|oem|cp|windows|ibm|dos)?[ _-]?(\d{3,5})$/.exec(label)?.[1];
+  if (page === "65001") return "utf-8";
+  if (page?.startsWith("125")) return knownLabel(`windows-${page}`);
+  if (page !== undefined && !page.startsWith("8859")) return knownLabel(`cp${page}`);
+  const iso = /^(?:iso[ _-]?)?8859[ _-]?(\d{1,2})$/.exec(label);
+  return knownLabel(iso ? `iso-8859-${iso[1] ?? "1"}` : label);
 }
+
+/** Language drivers of dBase headers (byte 29) whose code pages TextDecoder knows. From the published list of such drivers. */
+const LANGUAGE_DRIVERS: Record<number, string> = {
+  0x03: "windows-1252",
+  0x57: "windows-1252",
+  0x59: "windows-1252",
+  0x26: "ibm866",
+  0x65: "ibm866",
+  0xc8: "windows-1250",
+  0xc9: "windows-1251",
+  0xca: "windows-1254",
+  0xcb: "windows-1253",
+  0xcc: "windows-1257",
+};
+const LANGUAGE_DRIVER_AT = 29;
+
+/**
+ * In which encoding a table's texts are: by its .cpg, else by its language driver, else UTF-8 where its field names are
+ * that, else Windows-1252, which is what these files mostly are. `isGuessed` where a .cpg names a page not known here.
+ */
+export function chooseEncoding(dbf: Uint8Array, cpg: string | null): { encoding: string; isGuessed: boolean } {
+  if (cpg !== null && cpg.trim() !== "") {
+    const named = readCodePage(cpg);
+    return { encoding: named ?? FALLBACK, isGuessed: named === null };
+  }
+  const driver = LANGUAGE_DRIVERS[dbf[LANGUAGE_DRIVER_AT] ?? 0];
+  if (driver !== undefined) return { encoding: driver, isGuessed: false };
+  return { encoding: isUtf8(dbf) ? "utf-8" : FALLBACK, isGuessed: false };
+}
+
+/** Whether the table could be UTF-8, by its field names and its first 64 kB of records. */
+function isUtf8(dbf: Uint8Array): boolean {
+  const view = new DataView(dbf.buffer, dbf.byteOffset, dbf.byteLength);
+  if (dbf.length < DESCRIPTOR_BYTES + 1) return true;
+  const firstByte = view.getUint16(8, true);
+  const decoder = new TextDecoder("utf-8", { fatal: true });
+  try {
+    for (let at = DESCRIPTOR_BYTES; at + DESCRIPTOR_BYTES <= Math.min(firstByte, dbf.length); at += DESCRIPTOR_BYTES) {
+      if (dbf[at] === END_OF_FIELDS) break;
+      decoder.decode(dbf.subarray(at, at + 11));
+    }
+    decoder.decode(dbf.subarray(firstByte, firstByte + TEXT_BYTES), { stream: true });
+    return true;
+  } catch {
+    return false;
+  }
+}
+
+const TEXT_BYTES = 65_536;
 
 export function isDeleted(table: DbfTable, record: number): boolean {
   return table.bytes[table.firstByte + record * table.recordBytes] === 42;

@@ -126,6 +126,32 @@ describe("wide files", () => {
   });
 });
 
+describe("a file of thousands of columns", () => {
+  const names = Array.from({ length: 1000 }, (_, i) => `DF_${i + 1}_N`);
+  const others = Array.from({ length: 4000 }, (_, i) => `AUX ${i}`);
+  const header = ["t_s", "lon", "lat", ...names, ...others].join(",");
+  const line = (i: number) =>
+    [
+      i,
+      (-98.61 + i / 1e5).toFixed(5),
+      38.41,
+      ...names.map((_, k) => 500 + ((i * 7 + k) % 300)),
+      ...others.map(() => 1),
+    ].join(",");
+  const text = `${header}\n${Array.from({ length: 120 }, (_, i) => line(i)).join("\n")}\n`;
+
+  it("is inspected with every column and read whole", async () => {
+    const inspection = await mustInspect(textSource(text));
+    expect(inspection.columns).toHaveLength(5003);
+    expect(inspection).toMatchObject({ shape: "wide" });
+    expect(inspection.example).toHaveLength(5003);
+    expect(inspection.columns[1002]?.proposal).toMatchObject({ channel: "downforce", row: 1000, unit: "N" });
+    const { log } = await readAsProposed(textSource(text));
+    expect([log.records, log.rows]).toEqual([120, 1000]);
+    expect(log.channels[0]?.values[119 * 1000 + 999]).toBe(500 + ((119 * 7 + 999) % 300));
+  });
+});
+
 describe("notes on what was left out or looks odd", () => {
   it("rejects ragged lines with their place", async () => {
     const { log, notes } = await mustRead(

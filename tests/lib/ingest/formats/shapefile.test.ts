@@ -115,6 +115,49 @@ describe("zipped point shapefile", () => {
     expect(notes).toMatchObject([{ code: "deleted-records", count: 1, firstLine: 2 }]);
   });
 
+  // Bytes of the code pages as Python 3.11's codecs give them: "Pří".encode("cp1250"), "Поле".encode("cp866"), "ě".encode("utf-8").
+  it.each([
+    ["cp1250", [0x50, 0xf8, 0xed], "Pří"],
+    ["1250", [0x50, 0xf8, 0xed], "Pří"],
+    ["ANSI 1250", [0x50, 0xf8, 0xed], "Pří"],
+    ["866", [0x8f, 0xae, 0xab, 0xa5], "Поле"],
+    ["OEM 866", [0x8f, 0xae, 0xab, 0xa5], "Поле"],
+    ["ISO 8859-2", [0xec], "ě"],
+    ["ISO 88592", [0xec], "ě"],
+    ["88592", [0xec], "ě"],
+    ["UTF-8", [0xc4, 0x9b], "ě"],
+    ["65001", [0xc4, 0x9b], "ě"],
+  ])("reads names and texts by a .cpg of %s", async (cpg, bytes, text) => {
+    const raw = String.fromCharCode(...bytes);
+    const named: DbfColumn[] = [
+      { ...(COLUMNS[1] as DbfColumn), name: `N_${raw}` },
+      { name: "NOTE", type: "C", length: 12, cells: [raw, raw, raw] },
+    ];
+    const inspection = await mustInspect(source(layer({ "drill/log.dbf": makeDbf(named), "drill/log.cpg": cpg })));
+    expect(inspection.columns[2]?.name).toBe(`N_${text}`);
+    expect(inspection.columns[3]?.sample[0]).toBe(text);
+    expect(inspection.notes.map((note) => note.code)).not.toContain("unknown-code-page");
+  });
+
+  it("without a .cpg goes by the language driver, else by whether the texts are UTF-8", async () => {
+    const names = async (raw: string, driver = 0) => {
+      const dbf = makeDbf([{ ...(COLUMNS[1] as DbfColumn), name: raw }]);
+      dbf[29] = driver;
+      return (await mustInspect(source(layer({ "drill/log.dbf": dbf })))).columns[2]?.name;
+    };
+    expect(await names("\u008f\u00ae", 0x65)).toBe("По");
+    expect(await names("P\u00f8", 0xc8)).toBe("Př");
+    expect(await names("D\u00e9bit")).toBe("Débit");
+    expect(await names("D\u00c3\u00a9bit")).toBe("Débit");
+  });
+
+  it("says when a .cpg names a page it does not know", async () => {
+    const inspection = await mustInspect(source(layer({ "drill/log.cpg": "OEM 437" })));
+    expect(inspection.notes.map((note) => note.code)).toContain("unknown-code-page");
+    const { log } = await readAsProposed(source(layer({ "drill/log.cpg": "OEM 437" })));
+    expect(log.records).toBe(3);
+  });
+
   it("reads names in the encoding of the .cpg", async () => {
     const named = [{ ...(COLUMNS[1] as DbfColumn), name: "D\u00e9bit_N" }];
     const files = layer({ "drill/log.dbf": makeDbf(named), "drill/log.cpg": "1252" });
