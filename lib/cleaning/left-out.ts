@@ -96,18 +96,21 @@ export function copyShared(values: Float32Array): Float32Array {
 export function leftOutNumbers(out: LeftOut | null, size: { records: number; rows: number }): Float32Array {
   const numbers = new Float32Array(size.records * size.rows).fill(NaN);
   if (!out) return numbers;
-  for (let record = 0; record < size.records; record++) {
-    const ofRecord = out.records?.[record] ?? 0;
-    for (let row = 0; row < size.rows; row++) {
-      const place = record * size.rows + row;
-      let number = firstOf(ofRecord, out.rows === size.rows ? (out.cells?.[place] ?? 0) : 0);
-      if (!out.cells) number = firstOf(number, out.whole?.[record] ?? 0);
-      for (const marks of out.channels.values()) {
-        const isPerRow = marks.length === numbers.length;
-        number = firstOf(number, marks[isPerRow ? place : record] ?? 0);
-      }
-      if (number > 0) numbers[place] = number;
-    }
+  for (const marks of [out.records, out.cells, out.whole, ...out.channels.values()]) {
+    if (marks) addNumbers(numbers, marks, size.rows);
   }
   return numbers;
+}
+
+/** `marks` has one entry a reading, or one a record that holds for all its rows. */
+// kernel: walks every reading
+function addNumbers(numbers: Float32Array, marks: Uint8Array, rows: number): void {
+  const places = marks.length === numbers.length ? 1 : rows;
+  for (let at = 0; at < marks.length; at++) {
+    const number = marks[at]!;
+    if (number === 0) continue;
+    for (let place = at * places; place < (at + 1) * places; place++) {
+      if (!(numbers[place]! <= number)) numbers[place] = number;
+    }
+  }
 }
