@@ -59,17 +59,31 @@ function figuresByTally(
 ): RowFigures[] | null {
   const found = mapRowTallies(placed, channel, given, (tally) => figuresOfTally(placed, channel, tally));
   const under = underTargetBelowN(placed, channel);
-  if (!found || under === null) return found;
-  // The order along the pass is no matter of a tally.
-  const stretches = mapRowSeries(placed, channel, given.distances, (series) => longestUnderM(placed, series, under));
-  return found.map((figures, row) => ({ ...figures, longestUnderTargetM: stretches[row]! }));
+  if (!found) return null;
+  if (under === null && found.every(isComplete)) return found;
+  const room = emptySeries(placed.log.records);
+  return mapRowSeries(placed, channel, given.distances, (series, row) => {
+    const figures = found[row - 1]!;
+    return {
+      ...figures,
+      // The order along the pass is no matter of a tally.
+      longestUnderTargetM: under === null ? null : longestUnderM(placed, series, under),
+      typicalDeviation: figures.typicalDeviation ?? medianOf(deviationSeries(series, given.middles, room)),
+    };
+  });
+}
+
+type TalliedFigures = Omit<RowFigures, "typicalDeviation"> & { typicalDeviation: number | null };
+
+function isComplete(figures: TalliedFigures): figures is RowFigures {
+  return figures.typicalDeviation !== null;
 }
 
 function longestUnderM(placed: PlacedLog, series: RowSeries, under: number): number {
   return longestStretch(placed, series, (value) => value < under)?.lengthM ?? 0;
 }
 
-function figuresOfTally(placed: PlacedLog, channel: ResolvedChannel, tally: RowTally): RowFigures {
+function figuresOfTally(placed: PlacedLog, channel: ResolvedChannel, tally: RowTally): TalliedFigures {
   const under = underTargetBelowN(placed, channel);
   const limit = atLimitFromN(placed, channel);
   return {

@@ -54,7 +54,7 @@ export function valueAt(steps: Steps, sums: Float64Array, target: number): numbe
 }
 
 /** Where a quantile lies: its step, the nearest steps below and above that hold anything, its weight and that below the step. */
-interface Place {
+export interface Place {
   low: number;
   bucket: number;
   high: number;
@@ -110,7 +110,8 @@ function countBuckets(values: Float32Array, weights: Float32Array, min: number, 
   return { bucketOf, sums };
 }
 
-function findPlace(sums: Float64Array, target: number): Place {
+/** Where the running weight reaches `target`. */
+export function findPlace(sums: Float64Array, target: number): Place {
   let bucket = 0;
   let below = 0;
   while (bucket < BUCKETS - 1 && below + sums[bucket]! < target) below += sums[bucket++]!;
@@ -157,7 +158,7 @@ function describeSteps(
  * The value at the target weight where its step and the two beside it hold one value each: that value from the middle of its
  * first reading to the middle of its last, a straight line to the neighbour's beyond.
  */
-function valueBetween({ values, firsts, lasts }: Steps, sums: Float64Array, place: Place): number {
+export function valueBetween({ values, firsts, lasts }: Steps, sums: Float64Array, place: Place): number {
   const { low, bucket, high } = place;
   const within = place.target - place.below;
   const value = values[bucket]!;

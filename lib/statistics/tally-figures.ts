@@ -13,16 +13,13 @@ export interface TallyFigures {
 }
 
 /** Number, distance, mean, spread, extremes and quantiles of a tallied row. Every figure but `n` is NaN (0 for the distance) without a reading. */
-export function describeTally({ steps, counts, sums }: RowTally, ps: readonly number[]): TallyFigures {
-  let [n, distanceM, sum, squares, min, max] = [0, 0, 0, 0, NaN, NaN];
+export function describeTally(tally: RowTally, ps: readonly number[]): TallyFigures {
+  const { steps, sums, n, min, max } = tally;
+  let [distanceM, sum, squares] = [0, 0, 0];
   for (let step = 0; step < BUCKETS; step++) {
-    if (counts[step] === 0) continue;
-    const value = steps.values[step]!;
-    if (n === 0) min = value;
-    max = value;
-    n += counts[step]!;
+    if (!(sums[step]! > 0)) continue;
     distanceM += sums[step]!;
-    sum += sums[step]! * value;
+    sum += sums[step]! * steps.values[step]!;
   }
   const mean = sum / distanceM;
   for (let step = 0; step < BUCKETS; step++) {

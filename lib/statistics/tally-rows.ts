@@ -1,23 +1,31 @@
 import type { ResolvedChannel } from "@/lib/channels/resolved-channel";
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import type { MiddleReadings } from "@/lib/statistics/middle-readings";
-import { BUCKETS, NOWHERE, selectAmong, type Counted, type Steps } from "@/lib/statistics/select-quantiles";
+import { BUCKETS, findPlace, valueBetween, type Steps } from "@/lib/statistics/select-quantiles";
 
 /** Of one row: how much ground each value of the channel stands for. A log's readings are multiples of its own rounding. */
 export interface RowTally {
-  /** One entry a value, ascending; steps without a reading are left as 0. */
+  /** One entry a value, ascending; `sums` is 0 where no reading has weight. */
   steps: Steps;
-  counts: Uint32Array;
+  /** Distance that each value stands for. */
   sums: Float64Array;
-  /** Weighted median of the row's deviations from the other rows; NaN without any. */
-  typicalDeviation: number;
+  /** All readings, also those that stand for no distance, and the least and the greatest of them; NaN without any. */
+  n: number;
+  min: number;
+  max: number;
+  /** Weighted median of the row's deviations from the other rows; NaN without any, null where it cannot be told from tallies. */
+  typicalDeviation: number | null;
 }
 
 const ROWS_AT_ONCE = 8;
 /** Deviations are halves of the log's rounding; those beyond so many count as that many. */
-const DEVIATION_STEPS = BUCKETS / 2;
+const MOST_DEVIATION = BUCKETS / 2 - 1;
+const LAST_DEVIATION = 2 * MOST_DEVIATION;
 
-/** How values become places in a tally; null where they are too many or no multiples of a step. */
+/** Single precision blurs the steps of a log; values that differ by less than this share of a step are one value. */
+const BLUR = 1e-3;
+
+/** How values become places in a tally. */
 interface Scale {
   min: number;
   perUnit: number;
@@ -36,17 +44,19 @@ export function mapRowTallies<T>(
 ): T[] | null {
   const scale = scaleOf(channel);
   if (!scale || channel.rows !== placed.geometry.rows) return null;
+  const room = { readings: createTallies(), deviations: createTallies(), besides: new Float64Array(3 * ROWS_AT_ONCE) };
   const members = membersOf(placed);
-  const room = createRoom(members.length);
   const made: T[] = [];
   for (let first = 0; first < channel.rows; first += ROWS_AT_ONCE) {
     const count = Math.min(ROWS_AT_ONCE, channel.rows - first);
-    if (!tallyBlock(channel, given, { scale, members, room, first, count })) return null;
-    for (let k = 0; k < count; k++) made.push(describe(tallyOf(room, members.length, k), first + k + 1));
+    tallyBlock(channel, given, { scale, members, room, first, count });
+    if (room.readings.isMixed) return null;
+    for (let k = 0; k < count; k++) made.push(describe(tallyOf(room, k, members.length), first + k + 1));
   }
   return made;
 }
 
+// kernel: hot loop over every reading
 function scaleOf({ values, resolution }: ResolvedChannel): Scale | null {
   let min = Infinity;
   let max = -Infinity;
@@ -66,31 +76,33 @@ function membersOf({ passOf }: PlacedLog): Int32Array {
   return members.subarray(0, n);
 }
 
-interface Room {
-  counts: Uint32Array;
+/** Tallies of several rows side by side. */
+interface Tallies {
   sums: Float64Array;
-  values: Float32Array;
   firsts: Float32Array;
   lasts: Float32Array;
-  deviations: Float32Array;
-  weights: Float32Array;
-  bucketOf: Uint16Array;
-  deviationSums: Float64Array;
+  /** Value of each step, the same for all rows; NaN while there is none. */
+  values: Float32Array;
+  /** Whether two values fell on one step. */
+  isMixed: boolean;
 }
 
-function createRoom(members: number): Room {
-  const steps = ROWS_AT_ONCE * BUCKETS;
+function createTallies(): Tallies {
+  const size = ROWS_AT_ONCE * BUCKETS;
   return {
-    counts: new Uint32Array(steps),
-    sums: new Float64Array(steps),
-    values: new Float32Array(steps),
-    firsts: new Float32Array(steps),
-    lasts: new Float32Array(steps),
-    deviations: new Float32Array(ROWS_AT_ONCE * members),
-    weights: new Float32Array(ROWS_AT_ONCE * members),
-    bucketOf: new Uint16Array(ROWS_AT_ONCE * members),
-    deviationSums: new Float64Array(steps),
+    sums: new Float64Array(size),
+    firsts: new Float32Array(size),
+    lasts: new Float32Array(size),
+    values: new Float32Array(BUCKETS).fill(NaN),
+    isMixed: false,
   };
+}
+
+interface Room {
+  readings: Tallies;
+  deviations: Tallies;
+  /** Of each row: records without a reading, and the least and the greatest reading that stands for no distance. */
+  besides: Float64Array;
 }
 
 interface Block {
@@ -101,76 +113,115 @@ interface Block {
   count: number;
 }
 
-/** kernel: one walk over a block of rows. False where two values fall on one step, or a value beside the scale. */
+/** kernel: one walk over a block of rows, hot over every reading. */
 function tallyBlock(
   channel: ResolvedChannel,
   { distances, middles }: { distances: Float32Array; middles: MiddleReadings },
   { scale, members, room, first, count }: Block,
-): boolean {
-  const { counts, sums, values, firsts, lasts, deviations, weights, bucketOf, deviationSums } = room;
-  counts.fill(0);
+): void {
+  const { sums, firsts, lasts, values } = room.readings;
+  const { besides } = room;
+  const { sums: otherSums, firsts: otherFirsts, lasts: otherLasts, values: otherValues } = room.deviations;
   sums.fill(0);
-  deviationSums.fill(0);
+  otherSums.fill(0);
+  for (let k = 0; k < besides.length; k++) besides[k] = k % 3 === 0 ? 0 : NaN;
   const readings = channel.values;
   const { medians } = middles;
   const { min, perUnit } = scale;
-  const { length } = members;
+  const blur = BLUR / perUnit;
+  const stride = channel.rows;
   let mixed = 0;
-  for (let i = 0; i < length; i++) {
+  let otherMixed = 0;
+  for (let i = 0; i < members.length; i++) {
     const record = members[i]!;
-    const from = record * channel.rows + first;
+    const from = record * stride + first;
     const at = medians[4 * record]!;
-    for (let k = 0, place = i, base = 0; k < count; k++, place += length, base += BUCKETS) {
+    for (let k = 0; k < count; k++) {
       const value = readings[from + k]!;
       const weight = distances[from + k]!;
-      const step = base + (((value - min) * perUnit + 0.5) | 0);
-      if (value !== value) {
-        bucketOf[place] = NOWHERE;
+      if (!(weight > 0) || value !== value) {
+        noteBesides(besides, k, value);
         continue;
       }
-      if (counts[step] === 0) {
-        values[step] = value;
-        firsts[step] = 0;
+      const step = ((value - min) * perUnit + 0.5) | 0;
+      const known = values[step]!;
+      if (known !== value) {
+        if (known !== known) values[step] = value;
+        else if (Math.abs(known - value) > blur) mixed = 1;
       }
-      mixed |= +(values[step] !== value);
-      counts[step]!++;
-      const deviation = value - medians[4 * record + 1 + +(value >= at) + +(value > at)]!;
-      if (!(weight > 0)) {
-        bucketOf[place] = NOWHERE;
-        continue;
+      const place = k * BUCKETS + step;
+      const sum = sums[place]!;
+      if (sum === 0) firsts[place] = weight;
+      lasts[place] = weight;
+      sums[place] = sum + weight;
+      const deviation = Math.fround(value - medians[4 * record + 1 + +(value >= at) + +(value > at)]!);
+      if (deviation !== deviation) continue;
+      const halves = Math.max(-MOST_DEVIATION, Math.min(MOST_DEVIATION, deviation * 2 * perUnit));
+      const other = (halves + (MOST_DEVIATION + 0.5)) | 0;
+      const otherKnown = otherValues[other]!;
+      if (otherKnown !== deviation) {
+        if (otherKnown !== otherKnown) otherValues[other] = deviation;
+        else if (Math.abs(otherKnown - deviation) > blur && other > 0 && other < LAST_DEVIATION) otherMixed = 1;
       }
-      if (firsts[step] === 0) firsts[step] = weight;
-      lasts[step] = weight;
-      sums[step]! += weight;
-      deviations[place] = deviation;
-      weights[place] = weight;
-      const steps = deviation * 2 * perUnit + DEVIATION_STEPS + 0.25;
-      const bucket = deviation === deviation ? (steps > 0 ? (steps < BUCKETS ? steps | 0 : BUCKETS - 1) : 0) : NOWHERE;
-      bucketOf[place] = bucket;
-      if (bucket !== NOWHERE) deviationSums[base + bucket]! += weight;
+      const otherPlace = k * BUCKETS + other;
+      const otherSum = otherSums[otherPlace]!;
+      if (otherSum === 0) otherFirsts[otherPlace] = weight;
+      otherLasts[otherPlace] = weight;
+      otherSums[otherPlace] = otherSum + weight;
     }
   }
-  return mixed === 0;
+  room.readings.isMixed ||= mixed === 1;
+  room.deviations.isMixed ||= otherMixed === 1;
 }
 
-function tallyOf(room: Room, members: number, k: number): RowTally {
-  const steps = <T extends { subarray(from: number, end: number): T }>(all: T) =>
-    all.subarray(k * BUCKETS, (k + 1) * BUCKETS);
-  const series = <T extends { subarray(from: number, end: number): T }>(all: T) =>
-    all.subarray(k * members, (k + 1) * members);
-  const counted: Counted = { bucketOf: series(room.bucketOf), sums: steps(room.deviationSums) };
-  const { quantiles } = selectAmong(series(room.deviations), series(room.weights), counted, [0.5]);
-  return {
-    steps: {
-      values: steps(room.values),
-      firsts: steps(room.firsts),
-      lasts: steps(room.lasts),
-      mixed: NO_STEP_IS_MIXED,
-    },
-    counts: steps(room.counts),
-    sums: steps(room.sums),
-    typicalDeviation: quantiles[0] ?? NaN,
-  };
+/** A record without a reading of the row, or a reading that stands for no distance: both are rare. */
+// kernel: hot, so positional
+function noteBesides(besides: Float64Array, k: number, value: number): void {
+  const missing = 3 * k;
+  if (value !== value) {
+    besides[missing]!++;
+    return;
+  }
+  if (!(value >= besides[missing + 1]!)) besides[missing + 1] = value;
+  if (!(value <= besides[missing + 2]!)) besides[missing + 2] = value;
 }
 
 const NO_STEP_IS_MIXED = new Uint8Array(BUCKETS);
+
+function stepsOf({ firsts, lasts, values }: Tallies, k: number): Steps {
+  const of = (all: Float32Array) => all.subarray(k * BUCKETS, (k + 1) * BUCKETS);
+  return { firsts: of(firsts), lasts: of(lasts), values, mixed: NO_STEP_IS_MIXED };
+}
+
+function sumsOf({ sums }: Tallies, k: number): Float64Array {
+  return sums.subarray(k * BUCKETS, (k + 1) * BUCKETS);
+}
+
+function tallyOf({ readings, deviations, besides }: Room, k: number, records: number): RowTally {
+  const steps = stepsOf(readings, k);
+  const sums = sumsOf(readings, k);
+  const least = sums.findIndex((sum) => sum > 0);
+  const greatest = sums.findLastIndex((sum) => sum > 0);
+  const among = [steps.values[least], steps.values[greatest], besides[3 * k + 1], besides[3 * k + 2]];
+  const known = among.filter((value): value is number => value !== undefined && !Number.isNaN(value));
+  return {
+    steps,
+    sums,
+    n: records - besides[3 * k]!,
+    min: known.length > 0 ? Math.min(...known) : NaN,
+    max: known.length > 0 ? Math.max(...known) : NaN,
+    typicalDeviation: medianDeviation(deviations, k),
+  };
+}
+
+/** Null where a step at the median holds several values: they would have to be sorted. */
+function medianDeviation(deviations: Tallies, k: number): number | null {
+  const sums = sumsOf(deviations, k);
+  const total = sums.reduce((sum, one) => sum + one, 0);
+  if (!(total > 0)) return NaN;
+  const place = findPlace(sums, 0.5 * total);
+  const isAtAnEnd =
+    place.low === 0 || place.bucket === 0 || place.bucket === LAST_DEVIATION || place.high === LAST_DEVIATION;
+  if (deviations.isMixed || isAtAnEnd) return null;
+  return valueBetween(stepsOf(deviations, k), sums, place);
+}
