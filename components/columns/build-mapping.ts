@@ -24,7 +24,12 @@ function mappedColumns(choices: Choices): MappedColumn[] {
 export function buildMapping(
   choices: Choices,
   shape: LogShape,
-  extras: ChoiceExtras & { save: string; layer?: string | null; contact?: ContactDefinition | null },
+  extras: ChoiceExtras & {
+    save: string;
+    layer?: string | null;
+    contact?: ContactDefinition | null;
+    rowsFromRight?: boolean;
+  },
 ): LogMapping {
   const [crs, timeZone, save] = [extras.crs.trim(), extras.timeZone.trim(), extras.save.trim()];
   const columns = mappedColumns(choices);
@@ -36,6 +41,7 @@ export function buildMapping(
     ...(timeZone ? { timeZone } : {}),
     ...(extras.layer ? { layer: extras.layer } : {}),
     ...(extras.contact && hasContact ? { contact: extras.contact } : {}),
+    ...(extras.rowsFromRight && shape !== "single" ? { rowsFromRight: true } : {}),
     ...(save ? { save } : {}),
   };
 }

@@ -13,6 +13,8 @@ export interface ChoiceCheck {
   needsTimeZone: boolean;
   /** Some column is ground contact: how it is defined must be asked, since files do not say. */
   asksContact: boolean;
+  /** Readings row by row: from which side they are counted can be said. */
+  asksRowOrder: boolean;
 }
 
 export interface ChoiceExtras {
@@ -21,6 +23,10 @@ export interface ChoiceExtras {
   contact?: ContactDefinition | null;
   crs: string;
   timeZone: string;
+}
+
+function isRowReading({ use, channel }: ColumnChoice): boolean {
+  return use === "channel" && channel !== null && isRowable(channel);
 }
 
 function readsAs(choices: Choices, channel: string): boolean {
@@ -104,5 +110,6 @@ export function checkChoices(choices: Choices, shape: LogShape, extras: ChoiceEx
     needsCrs: readsAs(choices, "easting") || readsAs(choices, "northing"),
     needsTimeZone,
     asksContact,
+    asksRowOrder: shape !== "single" && entries.some(([, choice]) => isRowReading(choice)),
   };
 }

@@ -46,6 +46,7 @@ function startExtras(found: LogColumns, machineId: string | null): Extras {
     save: "",
     machineId: machineId ?? "",
     contact: mapping?.contact ?? null,
+    rowsFromRight: mapping?.rowsFromRight ?? false,
   };
 }
 
@@ -178,6 +179,7 @@ function LayerForm({
             needsCrs={check.needsCrs}
             needsTimeZone={check.needsTimeZone}
             asksContact={check.asksContact}
+            asksRowOrder={check.asksRowOrder}
             crsCandidates={found.crsCandidates ?? []}
             machines={machines}
           />

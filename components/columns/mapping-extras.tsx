@@ -15,6 +15,8 @@ export interface Extras {
   machineId: string;
   /** How this log defines ground contact; null where nobody said. */
   contact: ContactDefinition | null;
+  /** The file counts its rows from the right. */
+  rowsFromRight: boolean;
 }
 
 export interface MappingExtrasProps {
@@ -23,6 +25,7 @@ export interface MappingExtrasProps {
   needsCrs: boolean;
   needsTimeZone: boolean;
   asksContact: boolean;
+  asksRowOrder: boolean;
   /** Systems that put the log near the field, where the file does not name one. */
   crsCandidates: CrsCandidate[];
   machines: MachineReply[];
@@ -35,6 +38,7 @@ export function MappingExtras({
   needsCrs,
   needsTimeZone,
   asksContact,
+  asksRowOrder,
   crsCandidates,
   machines,
 }: MappingExtrasProps) {
@@ -55,6 +59,17 @@ export function MappingExtras({
           </option>
         ))}
       </SelectField>
+      {asksRowOrder ? (
+        <SelectField
+          label="Row 1 of this file"
+          hint="Looking forward. A log that counts from the right is turned round, so that its left is the field's left."
+          value={extras.rowsFromRight ? "right" : "left"}
+          onChange={(event) => onChange({ rowsFromRight: event.target.value === "right" })}
+        >
+          <option value="left">is the leftmost row</option>
+          <option value="right">is the rightmost row</option>
+        </SelectField>
+      ) : null}
       {needsTimeZone ? (
         <div>
           <TextField

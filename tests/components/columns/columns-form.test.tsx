@@ -95,6 +95,20 @@ describe("what the file leaves open", () => {
     expect(onSave.mock.calls[0]?.[0].columns).toHaveLength(4);
   });
 
+  it("turns rows round that are counted from the right, and keeps that when the meanings are sent again", async () => {
+    const { onSave, user } = show(makeFound());
+    await user.selectOptions(screen.getByLabelText("Row 1 of this file"), "is the rightmost row");
+    await user.click(screen.getByRole("button", { name: "Read the log" }));
+    const sent = onSave.mock.calls[0]?.[0];
+    expect(sent).toMatchObject({ rowsFromRight: true });
+    cleanup();
+    const again = show({ ...makeFound(), mapping: sent });
+    expect(screen.getByLabelText("Row 1 of this file")).toHaveDisplayValue("is the rightmost row");
+    await again.user.selectOptions(screen.getByLabelText("Row 1 of this file"), "is the leftmost row");
+    await again.user.click(screen.getByRole("button", { name: /^Read the log/ }));
+    expect(again.onSave.mock.calls[0]?.[0]).not.toHaveProperty("rowsFromRight");
+  });
+
   it("does not ask for a log where there is one", () => {
     show(makeFound());
     expect(screen.queryByLabelText("Log to read")).not.toBeInTheDocument();

@@ -9,7 +9,8 @@ describe("what stands in the way of reading", () => {
     [{ A: "Choose the unit." }, "1 column lacks a right answer."],
     [{ A: "Choose the unit.", B: "Choose the unit." }, "2 columns lack a right answer."],
   ])("is counted as answers, not as wrong columns: %o", (problems, words) => {
-    const check = { waiting: [], general: [], needsCrs: false, needsTimeZone: false, asksContact: false, problems };
+    const asks = { needsCrs: false, needsTimeZone: false, asksContact: false, asksRowOrder: false };
+    const check = { waiting: [], general: [], ...asks, problems };
     render(<ConfirmBar check={check} pending={false} failure={null} />);
     expect(screen.getByText(words)).toBeInTheDocument();
     expect(screen.getByRole("button", { name: "Read the log" })).toBeDisabled();
