@@ -12,7 +12,7 @@ const ROWS = 11;
 const RECORDS = 90;
 const machine = { ...makeSeeder(), rowCount: ROWS, targetMarginN: 300, marginDeadbandN: 20, maxDownforceN: 1200 };
 
-/** Readings in steps of the log's own rounding, some missing, some far off. */
+/** Single precision blurs such steps by some millionths. Readings in steps of the log's own rounding, some missing, some far off. */
 const readings = fc.record({
   step: fc.constantFrom(1, 0.5, 10, 4.4482216152605),
   cells: fc.array(
@@ -59,7 +59,7 @@ function expectAlike(tally: RowFigures, series: RowFigures): void {
     const pairs = Array.isArray(value) ? value.map((one, k) => [(found as number[])[k], one]) : [[found, value]];
     for (const [ours, theirs] of pairs) {
       if (theirs === null || Number.isNaN(theirs)) expect(ours, name).toEqual(theirs);
-      else expect(ours, name).toBeCloseTo(theirs as number, 6);
+      else expect(ours, name).toBeCloseTo(theirs as number, 4);
     }
   }
 }
@@ -72,7 +72,7 @@ describe("rowFigures", () => {
         expect(tallied).toBe(ROWS);
         series.forEach((one, row) => expectAlike(tally[row]!, one));
       }),
-      { seed: 3, numRuns: 60 },
+      { seed: 3, numRuns: 60, endOnFailure: true },
     );
   });
 
