@@ -5,6 +5,7 @@ import { build } from "esbuild";
 const ENTRIES: Record<string, string> = {
   worker: "lib/server/worker/main.ts",
   "read-log-thread": "lib/server/logs/read-log-thread.ts",
+  "look-thread": "lib/server/alignment/look-thread.ts",
   "cleaning-thread": "lib/server/adjustments/cleaning-thread.ts",
   fakes: "lib/server/fakes/main.ts",
   web: "scripts/web-main.ts",

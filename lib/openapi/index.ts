@@ -1,3 +1,4 @@
+import { alignmentOperations } from "@/lib/openapi/operations/alignment";
 import { cleaningOperations } from "@/lib/openapi/operations/cleaning";
 import { documentOperations } from "@/lib/openapi/operations/document";
 import { fieldOperations } from "@/lib/openapi/operations/fields";
@@ -17,6 +18,7 @@ export const OPERATIONS: readonly Operation[] = [
   ...recipeOperations,
   ...readingOperations,
   ...cleaningOperations,
+  ...alignmentOperations,
   ...shareOperations,
   ...peopleOperations,
   ...documentOperations,

@@ -1,6 +1,8 @@
 /** Work the worker knows, and what each needs to be told. */
 export interface JobPayloads {
   "read-log": { organisationId: string; logId: string };
+  /** The second look at a log that is ready. */
+  "look-closer": { organisationId: string; logId: string };
 }
 export type JobName = keyof JobPayloads;
 

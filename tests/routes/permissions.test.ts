@@ -97,6 +97,8 @@ const BODIES: Record<string, unknown> = {
   "POST /api/v1/logs/{logId}/cleaning": { rules: {} },
   "POST /api/v1/logs/{logId}/cleaning/preview": { rules: {} },
   "POST /api/v1/logs/{logId}/cleaning/undo": {},
+  "POST /api/v1/logs/{logId}/delays": {},
+  "PUT /api/v1/logs/{logId}/delays": { delaysS: { margin: 1.5 } },
   "PUT /api/v1/logs/{logId}/mapping": { columns: [{ name: "a", channel: "longitude", unit: "deg" }], shape: "single" },
 };
 const FIXED: Record<string, string> = { pass: "1", channel: "downforce", z: "15", x: "7000", y: "12000" };

@@ -11,6 +11,7 @@ import { changeLog } from "@/db/queries/logs";
 import { isAsRead, noAdjustments, type Adjustments } from "@/lib/adjustments/adjustments";
 import { AppError } from "@/lib/errors";
 import type { Scope } from "@/lib/scope";
+import { settleLookNotes } from "@/lib/server/alignment/settle-look-notes";
 import { getLogForChange } from "@/lib/server/logs/change-log";
 
 export interface AdjustmentsChange {
@@ -103,6 +104,7 @@ async function keepRevision(tx: Transaction, scope: Scope, input: NewRevision): 
   const kept = { ...next, revision, isAsRead: isAsRead(next) };
   await insertAdjustments(tx, scope, { logId, ...kept, note: note || null, revertedTo });
   await changeLog(tx, scope, logId, { adjustmentRevision: kept.isAsRead ? AS_READ : revision });
+  await settleLookNotes(tx, scope, logId);
   const detail = { revision, ...(revertedTo === null ? {} : { revertedTo }), changes: changesOf(now, next) };
   await recordAudit(tx, scope, { action: "log.adjust", subject: logId, detail });
   return kept;

@@ -8,6 +8,7 @@ export const WAKE_CHANNEL = "coulterbook_jobs";
 /** Queues, and how each behaves. `short`: one waiting job a key. */
 export const JOB_QUEUES = {
   "read-log": { policy: "short", retryLimit: 2, retryDelay: 1, expireInSeconds: 3600 },
+  "look-closer": { policy: "short", retryLimit: 2, retryDelay: 1, expireInSeconds: 3600 },
 } as const satisfies Record<JobName, object>;
 
 /** Opens pg-boss; `supervise` where jobs are worked on. */
