@@ -2,7 +2,7 @@
 
 import type { Map as MapLibreMap } from "maplibre-gl";
 import { useEffect, useState } from "react";
-import { hideReasons, showReasons } from "@/components/cleaning/reason-layer";
+import { hideReasons, registerReasonTiles, showReasons } from "@/components/cleaning/reason-layer";
 import { useBook, useBookState } from "@/components/field-book/field-book-context";
 import type { Classes } from "@/components/field-book/use-classes";
 import { useTileJson } from "@/components/field-book/use-log-data";
@@ -43,8 +43,12 @@ export function CompareMap({ title, cleaned, basemap, bounds, boundary, classes,
   const reasonTiles = reasons.data;
   useEffect(() => {
     if (!map || !reasonTiles || !cleaned) return;
-    void showReasons(map, reasonTiles);
+    let isGone = false;
+    void registerReasonTiles().then(() => {
+      if (!isGone) showReasons(map, reasonTiles);
+    });
     return () => {
+      isGone = true;
       if (map.getCanvas().isConnected) hideReasons(map);
     };
   }, [map, reasonTiles, cleaned]);

@@ -39,7 +39,8 @@ async function paintTile(text: string, signal: AbortSignal): Promise<ImageBitmap
 
 let isRegistered = false;
 
-async function registerProtocol(): Promise<void> {
+/** To be waited for before tiles of reasons are shown. */
+export async function registerReasonTiles(): Promise<void> {
   if (isRegistered) return;
   const { addProtocol } = await loadMapLibre();
   addProtocol(PROTOCOL, async ({ url }, controller) => ({ data: await paintTile(url, controller.signal) }));
@@ -47,8 +48,7 @@ async function registerProtocol(): Promise<void> {
 }
 
 /** Shows where readings were left out, each in the pattern of its rule, over the values. */
-export async function showReasons(map: MapLibreMap, tileJson: TileJson): Promise<void> {
-  await registerProtocol();
+export function showReasons(map: MapLibreMap, tileJson: TileJson): void {
   hideReasons(map);
   map.addSource(SOURCE, {
     type: "raster",
