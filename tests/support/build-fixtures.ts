@@ -1,3 +1,4 @@
+import { strToU8, zipSync } from "fflate";
 import { keepFirstRecords } from "@/lib/simulator/benchmark-log";
 import { layOutRows } from "@/lib/simulator/row-layout";
 import type { SimulatedLog } from "@/lib/simulator/simulate-seeding-log";
@@ -50,6 +51,12 @@ export function buildFixtures(): Fixture[] {
       "semicolons, decimal commas, byte-order mark, CRLF, unix seconds, decanewtons, centimetres, km/h",
     ),
     good("csv/long-newtons", "input.csv", writeLongCsv(log, { naming: "short" }), "one line a record and row"),
+    good(
+      "csv/card-of-parts",
+      "input.zip",
+      zipParts(writeWideCsv(log)),
+      "zip of three CSV parts, named in another order than they were logged, one of them twice, and an empty one",
+    ),
     good("geojson/points", "input.geojson", writeGeoJson(log, POUNDS), "one point feature a record"),
     good(
       "shapefile/points",
@@ -78,6 +85,20 @@ export function buildFixtures(): Fixture[] {
     harvestFixture(),
     ...buildBadFixtures(log),
   ];
+}
+
+/** As a card copied by hand holds them: parts by name in no order, a copy, and one begun when nothing was logged. */
+function zipParts(text: string): Uint8Array {
+  const [header = "", ...lines] = text.trimEnd().split("\n");
+  const part = (from: number, to?: number) => strToU8(`${[header, ...lines.slice(from, to)].join("\n")}\n`);
+  const files = {
+    "CARD/a.csv": part(100, 180),
+    "CARD/b.csv": part(0, 100),
+    "CARD/b (copy).csv": part(0, 100),
+    "CARD/c.csv": part(180),
+    "CARD/d.csv": strToU8(`${header}\n`),
+  };
+  return zipSync(files, { mtime: new Date(1980, 0, 1) });
 }
 
 function rowsOf({ truth }: SimulatedLog): { rowOffsetsM: Float64Array; rowForwardM: Float64Array; rowWidthM: number } {
