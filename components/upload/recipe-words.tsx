@@ -21,7 +21,7 @@ function NamedRecipe({ logId, columnsHref }: { logId: string; columnsHref: strin
   if (!recipe) return null;
   return (
     <p className="text-ink-soft">
-      Read with the recipe “{recipe.name}”.{" "}
+      Read with the recipe “{recipe.name}”, version {recipe.version}.{" "}
       {columnsHref === null ? null : (
         <Link href={columnsHref} className="inline-flex min-h-11 items-center text-slate underline md:min-h-6">
           Change what the columns mean
