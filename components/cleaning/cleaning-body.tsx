@@ -5,6 +5,7 @@ import { changedCodes, changeRule, checkDraft, nameRules, ruleOf } from "@/compo
 import { CleaningTotals } from "@/components/cleaning/cleaning-totals";
 import { CompareMaps } from "@/components/cleaning/compare-maps";
 import { leftOutShare, shareWords } from "@/components/cleaning/count-words";
+import { DelaySection } from "@/components/cleaning/delay-section";
 import { EffectTable } from "@/components/cleaning/effect-table";
 import { RevisionList } from "@/components/cleaning/revision-list";
 import { RuleLine } from "@/components/cleaning/rule-line";
@@ -119,6 +120,7 @@ export function CleaningBody({ field, log, cleaning, role, basemap }: CleaningBo
       {log.bbox === null ? null : (
         <CompareMaps field={field} log={log} cleaning={cleaning} basemap={basemap} isDraft={isDraft} />
       )}
+      <DelaySection logId={log.id} mayChange={mayChange} />
       <RevisionList
         history={cleaning.history}
         revision={cleaning.revision}
