@@ -20,6 +20,8 @@ export const DELAY_SETTINGS = {
   flatAbove: 0.9,
   /** Also where the dip of J is less than this many standard deviations of J's own unsteadiness from delay to delay. */
   leastDipSds: 5,
+  /** Not asked of a dip as sharp as this: chance makes none, and on banded ground J itself swings from delay to delay. */
+  surelyNoChance: 0.4,
   /** Refused where another dip, at least this far off, is nearly as deep. */
   otherDipFromS: 1.5,
   otherDipShare: 0.8,

@@ -1,7 +1,10 @@
 import type { ChannelDelay } from "@/lib/schemas/alignment";
 
-/** A shorter delay that remains is not worth a note, nor a shorter distance. */
-const WORTH_TELLING = { delayS: 0.5, distanceM: 0.5 };
+/**
+ * A shorter delay that remains is not worth a note, nor a shorter distance: a controlled force answers the ground up to
+ * about so late without any fault of the log.
+ */
+const WORTH_TELLING = { delayS: 0.8, distanceM: 0.5 };
 
 interface LookNote {
   code: string;

@@ -76,7 +76,8 @@ function scanShare(prepared: PreparedTracks, lanes: Lane[][], share: number): Sc
 
 /** What speaks against the scan's answer; null for nothing. */
 export function judgeScan(scan: Scan): DelayRefusal | null {
-  if (1 - scan.sharpness > SET.flatAbove || dipInSds(scan) < SET.leastDipSds) return "flat";
+  const isChance = scan.sharpness < SET.surelyNoChance && dipInSds(scan) < SET.leastDipSds;
+  if (1 - scan.sharpness > SET.flatAbove || isChance) return "flat";
   if (!scan.isInside) return "at-the-edge";
   if (isMirrored(scan)) return "mirrored";
   return hasOtherDip(scan) ? "two-answers" : null;
