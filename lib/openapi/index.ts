@@ -4,6 +4,7 @@ import { documentOperations } from "@/lib/openapi/operations/document";
 import { fieldOperations } from "@/lib/openapi/operations/fields";
 import { logOperations } from "@/lib/openapi/operations/logs";
 import { machineOperations } from "@/lib/openapi/operations/machines";
+import { passFigureOperations } from "@/lib/openapi/operations/pass-figures";
 import { peopleOperations } from "@/lib/openapi/operations/people";
 import { readingOperations } from "@/lib/openapi/operations/readings";
 import { recipeOperations } from "@/lib/openapi/operations/recipes";
@@ -17,6 +18,7 @@ export const OPERATIONS: readonly Operation[] = [
   ...logOperations,
   ...recipeOperations,
   ...readingOperations,
+  ...passFigureOperations,
   ...cleaningOperations,
   ...alignmentOperations,
   ...shareOperations,
