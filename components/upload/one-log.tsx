@@ -14,11 +14,13 @@ export interface OneLogProps {
   files: readonly File[];
   machineId: string | null;
   machineChoice: ReactNode;
+  /** Shown until the files are on their way. */
+  choices?: ReactNode;
   onAnother: () => void;
 }
 
 /** One log on its way, in a file or in several. */
-export function OneLog({ fieldId, logsPath, files, machineId, machineChoice, onAnother }: OneLogProps) {
+export function OneLog({ fieldId, logsPath, files, machineId, machineChoice, choices, onAnother }: OneLogProps) {
   const router = useRouter();
   const { state, send, stop } = useLogUpload(fieldId, (logId) => router.push(`${logsPath}/${logId}`));
   const [only] = files;
@@ -33,6 +35,7 @@ export function OneLog({ fieldId, logsPath, files, machineId, machineChoice, onA
       ) : isSending ? (
         <ChosenFiles files={files} states={partStates(files, state.share)} logsPath={logsPath} />
       ) : null}
+      {isSending ? null : choices}
       {isSending ? null : machineChoice}
       <UploadWords state={state} parts={files.length} />
       <div className="flex flex-wrap gap-2">

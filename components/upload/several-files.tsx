@@ -20,7 +20,7 @@ export function SeveralFiles({ files, onFiles, ...shared }: SeveralFilesProps) {
   const together = said ?? proposal?.together ?? null;
   const isUnderWay = uploads.states.length > 0;
   const remove = (file: File) => onFiles(files.filter((other) => other !== file));
-  return (
+  const choices = (
     <>
       <ChosenFiles
         files={files}
@@ -29,7 +29,12 @@ export function SeveralFiles({ files, onFiles, ...shared }: SeveralFilesProps) {
         onRemove={isUnderWay ? undefined : remove}
       />
       {isUnderWay ? null : <GroupingChoice proposal={proposal} together={together} onChange={setSaid} />}
-      {together ? <OneLog files={files} {...shared} /> : null}
+    </>
+  );
+  if (together) return <OneLog files={files} {...shared} choices={choices} />;
+  return (
+    <>
+      {choices}
       {together === false ? <SeparateLogs files={files} uploads={uploads} {...shared} /> : null}
     </>
   );

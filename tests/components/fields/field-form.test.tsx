@@ -1,10 +1,14 @@
 import { cleanup, fireEvent, render, screen } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
-import { afterEach, describe, expect, it, vi } from "vitest";
+import { afterEach, beforeAll, describe, expect, it, vi } from "vitest";
 import { FieldForm } from "@/components/fields/field-form";
 import { UnitsProvider } from "@/components/units/use-units";
 import { ApiProblem } from "@/lib/api/api-problem";
 
+// The readers of files load when needed; that takes longer than a query waits.
+beforeAll(async () => {
+  await import("@/lib/fields/read-boundary-file");
+});
 afterEach(cleanup);
 
 const SQUARE = [

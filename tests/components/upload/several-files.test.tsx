@@ -1,7 +1,7 @@
 import { QueryClient, QueryClientProvider } from "@tanstack/react-query";
 import { cleanup, render, screen, within } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
-import { afterEach, beforeEach, describe, expect, it, vi } from "vitest";
+import { afterEach, beforeAll, beforeEach, describe, expect, it, vi } from "vitest";
 import { queryKeys } from "@/components/hooks/query-keys";
 import { partStates } from "@/components/upload/chosen-files";
 import { LogFacts } from "@/components/upload/log-facts";
@@ -19,6 +19,10 @@ vi.mock("@/lib/api/upload-log", async (original) => ({
   uploadLog: (upload: UploadLog.LogUpload) => sending.answer(upload),
 }));
 
+// The readers load when files are looked at; that takes longer than a query waits.
+beforeAll(async () => {
+  await import("@/lib/ingest/propose-grouping");
+});
 beforeEach(() => {
   sending.answer.mockReset();
   push.mockReset();
@@ -53,13 +57,17 @@ async function choose(files: File[]): Promise<void> {
 
 describe("several files chosen at once", () => {
   it("that follow each other are proposed as one log, with the reason, and leave in one form", async () => {
-    sending.answer.mockResolvedValue({ id: "log_joined" });
+    let settle: (accepted: { id: string }) => void = () => undefined;
+    sending.answer.mockReturnValue(new Promise((resolve) => (settle = resolve)));
     await choose(PARTS);
     expect(await screen.findByText(/same columns and follow each other/)).toBeInTheDocument();
     expect(screen.getByRole("radio", { name: "One log in parts" })).toBeChecked();
     await userEvent.click(screen.getByRole("button", { name: "Take it in" }));
     expect(sending.answer).toHaveBeenCalledTimes(1);
     expect(sending.answer.mock.calls[0]?.[0].files.map((file) => file.name)).toEqual(["part-1.csv", "part-2.csv"]);
+    expect(screen.getAllByRole("list", { name: "Chosen files" })).toHaveLength(1);
+    expect(screen.queryByRole("radio")).toBeNull();
+    settle({ id: "log_joined" });
     await vi.waitFor(() => expect(push).toHaveBeenCalledWith("/larkspur/fields/fld_1/logs/log_joined"));
   });
 
