@@ -1,13 +1,12 @@
 import { GeoJSONVT } from "@maplibre/geojson-vt";
 import { fromGeojsonVt } from "@maplibre/vt-pbf";
 import type { Feature, Polygon } from "geojson";
-import sharp from "sharp";
 import { buildLog } from "@/lib/build/build-log";
 import type { PlacedLog } from "@/lib/logs/placed-log";
+import { drawValueTile } from "@/lib/server/tiles/draw-tile";
 import { createBenchmarkLog } from "@/lib/simulator/benchmark-log";
 import { pairedRatio, printRatio } from "@/tests/bench/ratios";
 import { buildTileIndex, tileIndexBounds } from "@/lib/tiles/build-tile-index";
-import { encodeValueTile } from "@/lib/tiles/encode-value-tile";
 import { rasteriseTile } from "@/lib/tiles/rasterise-tile";
 import { fromWorld, tileAt } from "@/lib/tiles/tile-address";
 import { writeCellCorners, type TileIndex } from "@/lib/tiles/tile-index";
@@ -61,8 +60,7 @@ export async function measureTiles(rounds: number): Promise<void> {
   const vectorIndexing = await timed(() => new GeoJSONVT(collection, VECTOR));
   const drawValue = async () => {
     const pixels = rasteriseTile(index, channel, { ...address, size: 512 });
-    const raw = { width: 512, height: 512, channels: 3 as const };
-    return sharp(encodeValueTile(pixels, scale), { raw }).png({ compressionLevel: 6, effort: 1 }).toBuffer();
+    return drawValueTile(pixels, scale);
   };
   const pairs: { ours: number; base: number }[] = [];
   let sizes = { ours: 0, base: 1 };

@@ -4,8 +4,8 @@ import type { Scope } from "@/lib/scope";
 import { stateText } from "@/lib/server/adjustments/load-adjusted-log";
 import type { Container } from "@/lib/server/create-container";
 import { findPlacedLog, loadChannel, type LogChoice } from "@/lib/server/logs/find-placed-log";
+import { TILE_SIZE } from "@/lib/server/tiles/draw-tile";
 import { loadTileIndex } from "@/lib/server/tiles/load-tile-index";
-import { TILE_SIZE } from "@/lib/server/tiles/read-tile";
 import { tileJsonBounds } from "@/lib/tiles/build-tile-index";
 import { valueScale } from "@/lib/tiles/value-scale";
 

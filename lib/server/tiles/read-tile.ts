@@ -1,23 +1,20 @@
 import "server-only";
-import sharp from "sharp";
 import type { LogRow } from "@/db/queries/logs";
 import { AppError } from "@/lib/errors";
 import { areClassEdges } from "@/lib/legend/class-edges";
-import { isRampName, RAMP_NAMES, rampOf } from "@/lib/legend/ramps";
+import { classColours, isRampName, RAMP_NAMES, rampOf } from "@/lib/legend/ramps";
 import type { Scope } from "@/lib/scope";
 import { stateKey, stateText } from "@/lib/server/adjustments/load-adjusted-log";
 import type { Container } from "@/lib/server/create-container";
 import { recallAccess } from "@/lib/server/access/recent-access";
 import { getReadLog, loadChannel } from "@/lib/server/logs/find-placed-log";
 import { cachedForLog } from "@/lib/server/logs/log-cache";
+import { drawPaletteTile, drawValueTile, TILE_SIZE } from "@/lib/server/tiles/draw-tile";
 import { loadTileIndex } from "@/lib/server/tiles/load-tile-index";
-import { encodePaletteTile } from "@/lib/tiles/encode-palette-tile";
-import { encodeValueTile } from "@/lib/tiles/encode-value-tile";
 import { rasteriseTile } from "@/lib/tiles/rasterise-tile";
 import { isTileAddress, type TileAddress } from "@/lib/tiles/tile-address";
 import { valueScale } from "@/lib/tiles/value-scale";
 
-export const TILE_SIZE = 512;
 type Breaks = { breaks: number[]; ramp: string | null } | null;
 
 export interface TileInput extends TileAddress {
@@ -82,11 +79,7 @@ async function drawPng(
   { classes, channel: channelId }: TileInput,
   channel: Parameters<typeof valueScale>[0],
 ): Promise<Uint8Array<ArrayBuffer>> {
-  const ramp = classes?.ramp && isRampName(classes.ramp) ? classes.ramp : rampOf(channelId);
-  const bytes = classes
-    ? encodePaletteTile(pixels, classes.breaks, ramp)
-    : encodeValueTile(pixels, valueScale(channel));
-  const channels = classes ? 4 : 3;
-  const image = sharp(bytes, { raw: { width: TILE_SIZE, height: TILE_SIZE, channels } });
-  return Uint8Array.from(await image.png({ compressionLevel: 6, palette: classes !== null, effort: 1 }).toBuffer());
+  if (!classes) return drawValueTile(pixels, valueScale(channel));
+  const ramp = classes.ramp && isRampName(classes.ramp) ? classes.ramp : rampOf(channelId);
+  return drawPaletteTile(pixels, classes.breaks, classColours(ramp, classes.breaks.length + 1));
 }
