@@ -3,7 +3,7 @@
 import type { Map as MapLibreMap } from "maplibre-gl";
 import { useEffect, useState } from "react";
 import { CompareMap } from "@/components/cleaning/compare-map";
-import { lockMaps } from "@/components/cleaning/lock-maps";
+import { lockMaps } from "@/components/map/lock-maps";
 import { ReasonLegend } from "@/components/cleaning/reason-legend";
 import { channelsOf, ChannelSwitch } from "@/components/field-book/channel-switch";
 import { FieldBookProvider, useBook, useBookState } from "@/components/field-book/field-book-context";
