@@ -2,7 +2,7 @@ import type { ChannelId } from "@/lib/logs/channel";
 
 /** SI units that a channel is kept in. `fraction` is 0..1; `1` is a bare number whose unit nobody stated. */
 export type SiUnit =
-  "N" | "m" | "m/s" | "s" | "deg" | "fraction" | "boolean" | "1" | "1/m2" | "kg/m2" | "kg/s" | "kg" | "Pa";
+  "N" | "m" | "m2" | "m/s" | "s" | "deg" | "fraction" | "boolean" | "1" | "1/m2" | "kg/m2" | "kg/s" | "kg" | "Pa";
 
 /** One measured channel. `values` is row-major by record: `values[record * rows + (row - 1)]`; NaN where nothing was logged. */
 export interface LogChannel {

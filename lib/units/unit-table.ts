@@ -4,6 +4,7 @@ import type { SiUnit } from "@/lib/logs/machine-log";
 export type Quantity =
   | "force"
   | "length"
+  | "area"
   | "speed"
   | "angle"
   | "duration"
@@ -47,6 +48,7 @@ export const UNITS = {
   mm: { quantity: "length", si: "m", factor: 0.001, words: "millimetres" },
   in: { quantity: "length", si: "m", factor: INCH_M, words: "inches" },
   ft: { quantity: "length", si: "m", factor: 0.3048, words: "feet" },
+  m2: { quantity: "area", si: "m2", factor: 1, words: "square metres" },
   "m/s": { quantity: "speed", si: "m/s", factor: 1, words: "metres per second" },
   "km/h": { quantity: "speed", si: "m/s", factor: 1 / 3.6, words: "kilometres per hour" },
   mph: { quantity: "speed", si: "m/s", factor: 0.44704, words: "miles per hour" },

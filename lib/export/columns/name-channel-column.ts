@@ -6,6 +6,7 @@ import type { ExportColumn } from "@/lib/export/export-table";
 const UNIT_ENDINGS: Record<SiUnit, { ending: string; words: string }> = {
   N: { ending: "N", words: "N" },
   m: { ending: "M", words: "m" },
+  m2: { ending: "M2", words: "m2" },
   "m/s": { ending: "Mps", words: "m/s" },
   s: { ending: "S", words: "s" },
   deg: { ending: "Deg", words: "degrees" },

@@ -11,6 +11,8 @@ interface NameRule {
 
 /** Words of headers, most telling first: the first rule that fits is taken. Words of the trade only. */
 const ENGLISH: readonly NameRule[] = [
+  // Ours, of a file whose records are areas.
+  { channel: "other:area of its shape", words: ["area of its shape"], weight: 0.95 },
   { channel: "longitude", words: ["longitude", "lon", "long", "lng"], weight: 0.95 },
   { channel: "latitude", words: ["latitude", "lat"], weight: 0.95 },
   { channel: "easting", words: ["easting", "east", "utm e", "utm x", "point x"], weight: 0.9 },

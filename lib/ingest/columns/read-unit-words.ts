@@ -16,6 +16,7 @@ const SPELLINGS: Record<UnitWord, readonly string[]> = {
   mm: ["mm", "millimetre", "millimetres", "millimeter", "millimeters"],
   in: ["in", "inch", "inches", '"'],
   ft: ["ft", "feet", "foot"],
+  m2: ["m²", "sqm", "squaremetres", "squaremeters"],
   "m/s": ["m/s", "mps", "m_s", "ms-1", "m.s-1", "metrespersecond"],
   "km/h": ["km/h", "kmh", "kph", "km_h", "kmph", "km/hr", "kilometresperhour"],
   mph: ["mph", "mi/h", "mi/hr", "milesperhour"],

@@ -22,8 +22,13 @@ export function meanOfPoints(flat: ArrayLike<number>): Centre {
  * Sums are taken from the first corner on: far from the origin the products would lose all digits.
  */
 export function centreOfRings(rings: readonly ArrayLike<number>[]): Centre {
+  return measureRings(rings).centre;
+}
+
+/** The same, with the area in square units of the coordinates (square degrees count as such: see `squareMetres`). */
+export function measureRings(rings: readonly ArrayLike<number>[]): { centre: Centre; area: number } {
   const first = rings[0];
-  if (!first || first.length < 2) return NOWHERE;
+  if (!first || first.length < 2) return { centre: NOWHERE, area: NaN };
   const originX = first[0] ?? NaN;
   const originY = first[1] ?? NaN;
   let [area, momentX, momentY] = [0, 0, 0];
@@ -41,8 +46,9 @@ export function centreOfRings(rings: readonly ArrayLike<number>[]): Centre {
       momentY += (y0 + y1) * cross;
     }
   }
-  if (area === 0) return meanOfPoints(first);
-  return [backOverSeam(originX + momentX / (3 * area)), originY + momentY / (3 * area)];
+  if (area === 0) return { centre: meanOfPoints(first), area: 0 };
+  const centre: Centre = [backOverSeam(originX + momentX / (3 * area)), originY + momentY / (3 * area)];
+  return { centre, area: Math.abs(area) / 2 };
 }
 
 /** The place halfway along a line. */

@@ -4,7 +4,7 @@ import { nameColumns } from "@/lib/ingest/columns/name-columns";
 import { collectPaths, readProperty, type PropertyPath } from "@/lib/ingest/formats/geojson/flatten-properties";
 import { FlatFeatureReader } from "@/lib/ingest/formats/geojson/scan-flat-feature";
 import { parsePoint, readFeatureBytes, type PointFeature } from "@/lib/ingest/formats/geojson/read-features";
-import { POINT_DEGREES, POINT_PLANE } from "@/lib/ingest/formats/point-columns";
+import { POINT_DEGREES, POINT_PLANE, SHAPE_AREA } from "@/lib/ingest/formats/point-columns";
 import { stopReading } from "@/lib/ingest/ingest-error";
 import {
   READ_LIMITS,
@@ -18,7 +18,9 @@ import type { LogMapping } from "@/lib/ingest/mapping";
 import { openText } from "@/lib/ingest/open-text";
 import { NoteBook } from "@/lib/ingest/records/note-book";
 import { CELL, buildReadPlan } from "@/lib/ingest/records/read-plan";
+import { createToDegrees } from "@/lib/ingest/records/project-position";
 import { RecordCollector } from "@/lib/ingest/records/record-collector";
+import { squareMetres } from "@/lib/ingest/records/square-metres";
 
 const SAMPLE_FEATURES = 500;
 const HEAD_BYTES = 65_536;
@@ -39,6 +41,8 @@ interface FeatureLayout {
   /** Paths of the columns after the two of the geometry. */
   paths: PropertyPath[];
   crs: string | undefined;
+  /** What a feature's area covers, m2; null where none of the first features is an area. */
+  areaOf: ((feature: PointFeature) => number) | null;
 }
 
 /** Columns of the file by its first features: longitude and latitude of the point, then the properties. */
@@ -60,7 +64,18 @@ async function learnLayout(source: ByteSource): Promise<FeatureLayout> {
     );
   }
   const point = crs === undefined ? POINT_DEGREES : POINT_PLANE;
-  return { features, names: nameColumns([point.x, point.y, ...paths.map((path) => path.name)]), paths, crs };
+  const areaOf = features.some(({ madeFrom }) => madeFrom === "area") ? measureAreas(crs) : null;
+  const names = nameColumns([point.x, point.y, ...paths.map(({ name }) => name), ...(areaOf ? [SHAPE_AREA] : [])]);
+  return { features, names, paths, crs, areaOf };
+}
+
+/** Coordinates that are no degrees, in a system nobody named, are taken for metres. */
+function measureAreas(crs: string | undefined): (feature: PointFeature) => number {
+  const toDegrees = crs === undefined ? null : createToDegrees(crs);
+  return (feature) => {
+    const isPlane = Math.abs(feature.x) > 180 || Math.abs(feature.y) > 90;
+    return isPlane && !toDegrees ? feature.area : squareMetres(feature, toDegrees);
+  };
 }
 
 /** The system named by a `crs` member of the 2008 GeoJSON draft (RFC 7946 dropped it) where it is not WGS 84. */
@@ -70,12 +85,13 @@ function readNamedCrs(head: string): string | undefined {
 }
 
 async function inspectGeojson(source: ByteSource, options: InspectOptions): Promise<Inspection> {
-  const { features, names, paths, crs } = await learnLayout(openText(source, options));
+  const { features, names, paths, crs, areaOf } = await learnLayout(openText(source, options));
   const notes = new NoteBook();
   for (const feature of features) noteGeometry(feature, notes);
   const cells = (field: number): string[] => {
     if (field < 2) return features.map((feature) => coordinateText(field === 0 ? feature.x : feature.y));
     const path = paths[field - 2];
+    if (!path && areaOf) return features.map((feature) => coordinateText(areaOf(feature)));
     return path ? features.map((feature) => readProperty(feature.properties, path)) : [];
   };
   const found = describeFoundColumns({
@@ -122,7 +138,7 @@ async function readGeojson(source: ByteSource, mapping: LogMapping, options: Rea
   });
   const hasLists = layout.paths.some((path) => path.place !== null);
   const flat = hasLists ? null : new FlatFeatureReader(collector, layout.paths);
-  const takeFeature = prepareTaking(collector, layout.paths);
+  const takeFeature = prepareTaking(collector, layout);
   for await (const block of readFeatureBytes(opened)) {
     for (const feature of block) {
       // A feature of the common kind fills the line by itself; any other goes through JSON.parse.
@@ -134,13 +150,19 @@ async function readGeojson(source: ByteSource, mapping: LogMapping, options: Rea
 }
 
 /** Fills the collector's line from a parsed feature. */
-function prepareTaking(collector: RecordCollector, paths: readonly PropertyPath[]): (feature: PointFeature) => void {
+function prepareTaking(
+  collector: RecordCollector,
+  { paths, areaOf }: Pick<FeatureLayout, "paths" | "areaOf">,
+): (feature: PointFeature) => void {
   const { kinds } = collector.plan;
+  const areaField = paths.length + 2;
+  const wantsArea = areaOf !== null && kinds[areaField] !== CELL.skip;
   const used = paths.flatMap((path, index) => (kinds[index + 2] === CELL.skip ? [] : [{ path, field: index + 2 }]));
   return (feature) => {
     const { x, y, number, properties } = feature;
     collector.line[0] = x;
     collector.line[1] = y;
+    if (wantsArea) collector.line[areaField] = areaOf(feature);
     noteGeometry(feature, collector.notes);
     for (const { path, field } of used) collector.takeText(field, readProperty(properties, path), number);
   };

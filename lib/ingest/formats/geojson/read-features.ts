@@ -1,7 +1,7 @@
 import { readHead, type ByteSource } from "@/lib/ingest/byte-source";
 import { FeatureSplitter } from "@/lib/ingest/formats/geojson/split-features";
 import { stopReading } from "@/lib/ingest/ingest-error";
-import { centreOfRings, meanOfPoints, midpointOfLine, type Centre } from "@/lib/ingest/records/shape-centre";
+import { measureRings, meanOfPoints, midpointOfLine, type Centre } from "@/lib/ingest/records/shape-centre";
 
 /** A point feature: longitude and latitude as they stand (RFC 7946 order), NaN without a geometry. */
 export interface PointFeature {
@@ -9,6 +9,8 @@ export interface PointFeature {
   number: number;
   x: number;
   y: number;
+  /** Of an area: what it covers, in square units of the coordinates; NaN for other shapes. */
+  area: number;
   hasGeometry: boolean;
   /** What the position was made from, where the geometry is no single point. */
   madeFrom: "points" | "line" | "area" | null;
@@ -103,7 +105,7 @@ function toPoint(feature: unknown, number: number): PointFeature {
   const record = isObject(feature) ? feature : {};
   const properties = isObject(record.properties) ? record.properties : {};
   if (!isObject(record.geometry)) {
-    return { number, x: NaN, y: NaN, hasGeometry: false, madeFrom: null, properties };
+    return { number, x: NaN, y: NaN, area: NaN, hasGeometry: false, madeFrom: null, properties };
   }
   const { type, coordinates } = record.geometry;
   const placed = typeof type === "string" ? PLACES[type] : undefined;
@@ -114,32 +116,34 @@ function toPoint(feature: unknown, number: number): PointFeature {
       { line: number },
     );
   }
-  const [x, y] = placed.centre(coordinates);
-  return { number, x, y, hasGeometry: true, madeFrom: placed.madeFrom, properties };
+  const { centre, area } = placed.place(coordinates);
+  return { number, x: centre[0], y: centre[1], area, hasGeometry: true, madeFrom: placed.madeFrom, properties };
 }
 
 interface Place {
   madeFrom: PointFeature["madeFrom"];
-  centre(coordinates: readonly unknown[]): Centre;
+  place(coordinates: readonly unknown[]): { centre: Centre; area: number };
 }
 
+const withoutArea = (centre: Centre) => ({ centre, area: NaN });
+
 const PLACES: Record<string, Place | undefined> = {
-  Point: { madeFrom: null, centre: ([x, y]) => [asNumber(x), asNumber(y)] },
-  MultiPoint: { madeFrom: "points", centre: (points) => meanOfPoints(flatten(points)) },
-  LineString: { madeFrom: "line", centre: (points) => midpointOfLine(flatten(points)) },
+  Point: { madeFrom: null, place: ([x, y]) => withoutArea([asNumber(x), asNumber(y)]) },
+  MultiPoint: { madeFrom: "points", place: (points) => withoutArea(meanOfPoints(flatten(points))) },
+  LineString: { madeFrom: "line", place: (points) => withoutArea(midpointOfLine(flatten(points))) },
   MultiLineString: {
     madeFrom: "line",
-    centre: (lines) =>
-      midpointOfLine(
-        asLists(lines)
-          .map(flatten)
-          .reduce((a, b) => (b.length > a.length ? b : a), []),
-      ),
+    place: (lines) => {
+      const longest = asLists(lines)
+        .map(flatten)
+        .reduce((a, b) => (b.length > a.length ? b : a), []);
+      return withoutArea(midpointOfLine(longest));
+    },
   },
-  Polygon: { madeFrom: "area", centre: (rings) => centreOfRings(asLists(rings).map(flatten)) },
+  Polygon: { madeFrom: "area", place: (rings) => measureRings(asLists(rings).map(flatten)) },
   MultiPolygon: {
     madeFrom: "area",
-    centre: (areas) => centreOfRings(asLists(areas).flatMap((rings) => asLists(rings).map(flatten))),
+    place: (areas) => measureRings(asLists(areas).flatMap((rings) => asLists(rings).map(flatten))),
   },
 };
 

@@ -1,7 +1,7 @@
 import { chooseLayer, describeLayers, type InspectedLayer } from "@/lib/ingest/columns/choose-layer";
 import { describeFoundColumns } from "@/lib/ingest/columns/describe-found-columns";
 import { nameColumns } from "@/lib/ingest/columns/name-columns";
-import { POINT_DEGREES, POINT_PLANE } from "@/lib/ingest/formats/point-columns";
+import { POINT_DEGREES, POINT_PLANE, SHAPE_AREA } from "@/lib/ingest/formats/point-columns";
 import { groupParts, holdsShapefile, type ShapefileParts } from "@/lib/ingest/formats/shapefile/group-parts";
 import {
   isDeleted,
@@ -28,6 +28,7 @@ import { createToDegrees, lacksDatumShift, type ToDegrees } from "@/lib/ingest/r
 import { readNumberBytes } from "@/lib/ingest/records/read-number-bytes";
 import { CELL, buildReadPlan } from "@/lib/ingest/records/read-plan";
 import { RecordCollector } from "@/lib/ingest/records/record-collector";
+import { squareMetres } from "@/lib/ingest/records/square-metres";
 
 const SAMPLE_RECORDS = 600;
 /** Of each part, for a look: the header of 20,000 fields and some records. */
@@ -51,6 +52,7 @@ interface Layer {
   names: string[];
   /** From the coordinates to degrees by the .prj; null where they are degrees, or nobody said what they are. */
   toDegrees: ToDegrees | null;
+  isDegrees: boolean;
   notes: NoteBook;
 }
 
@@ -73,8 +75,9 @@ async function openLayer(archive: ZipArchive, parts: ShapefileParts, maxBytes = 
   if (points.kind !== "point") notes.add(SHAPE_NOTES[points.kind]);
   const { toDegrees, isDegrees } = judgeProjection(await readText(prj), points, { name: archive.name, notes });
   const point = isDegrees ? POINT_DEGREES : POINT_PLANE;
-  const names = nameColumns([point.x, point.y, ...table.fields.map((field) => field.name)]);
-  return { points, table, records, names, toDegrees, notes };
+  const ofShape = points.area ? [SHAPE_AREA] : [];
+  const names = nameColumns([point.x, point.y, ...table.fields.map((field) => field.name), ...ofShape]);
+  return { points, table, records, names, toDegrees, isDegrees, notes };
 }
 
 const SHAPE_NOTES = { points: "several-points", line: "line-midpoints", area: "area-centres" } as const;
@@ -104,6 +107,13 @@ function pointOf({ points, toDegrees }: Layer, record: number): [x: number, y: n
   const x = points.x[record] ?? NaN;
   const y = points.y[record] ?? NaN;
   return toDegrees ? toDegrees(x, y) : [x, y];
+}
+
+/** What a record's area covers; coordinates of an unknown plane are taken for metres. NaN for other shapes. */
+function areaOf({ points, toDegrees, isDegrees }: Layer, record: number): number {
+  const area = points.area?.[record] ?? NaN;
+  const flat = { area, x: points.x[record] ?? NaN, y: points.y[record] ?? NaN };
+  return isDegrees ? squareMetres(flat, toDegrees) : area;
 }
 
 async function inspectShapefile(archive: ZipArchive, options: InspectOptions): Promise<Inspection> {
@@ -140,6 +150,7 @@ function inspectLayer(layer: Layer & ShapefileParts, options: InspectOptions): I
   const cells = (field: number): string[] => {
     if (field < 2) return sampled.map((record) => coordinateText(pointOf(layer, record)[field]));
     const column = table.fields[field - 2];
+    if (!column && layer.points.area) return sampled.map((record) => coordinateText(areaOf(layer, record)));
     return column ? sampled.map((record) => readCellText(table, record, column)) : [];
   };
   const found = describeFoundColumns({ names, units: null, cells, decimalComma: false, near: options.near, notes });
@@ -160,6 +171,8 @@ async function readShapefile(archive: ZipArchive, mapping: LogMapping, options: 
     const kind = plan.kinds[index + 2] ?? CELL.skip;
     return kind === CELL.skip ? [] : [{ column, field: index + 2, kind }];
   });
+  const areaField = table.fields.length + 2;
+  const wantsArea = layer.points.area !== null && plan.kinds[areaField] !== CELL.skip;
   for (let record = 0; record < records; record++) {
     if (record % 4096 === 0 && options.signal?.aborted) {
       stopReading("cancelled", `Reading "${archive.name}" was cancelled.`);
@@ -171,6 +184,7 @@ async function readShapefile(archive: ZipArchive, mapping: LogMapping, options: 
     const [x, y] = pointOf(layer, record);
     collector.line[0] = x;
     collector.line[1] = y;
+    if (wantsArea) collector.line[areaField] = areaOf(layer, record);
     const recordStart = table.firstByte + record * table.recordBytes;
     for (const { column, field, kind } of used) {
       const start = recordStart + column.offset;

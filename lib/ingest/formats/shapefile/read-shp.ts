@@ -1,5 +1,5 @@
 import { stopReading } from "@/lib/ingest/ingest-error";
-import { centreOfRings, meanOfPoints, midpointOfLine, type Centre } from "@/lib/ingest/records/shape-centre";
+import { measureRings, meanOfPoints, midpointOfLine, type Centre } from "@/lib/ingest/records/shape-centre";
 
 /** What a record's shape is, and so where its reading stands: at the point, the centre of the area, halfway along the line. */
 export type ShapeKind = "point" | "points" | "line" | "area";
@@ -9,6 +9,8 @@ export interface ShapePoints {
   kind: ShapeKind;
   x: Float64Array;
   y: Float64Array;
+  /** Of areas: what each covers, in square units of the coordinates; null for other shapes. */
+  area: Float64Array | null;
   /** The file ends before the length its header states. */
   isCutShort: boolean;
 }
@@ -52,18 +54,20 @@ export function readShp(bytes: Uint8Array, name: string): ShapePoints {
   const capacity = Math.ceil((bytes.length - HEADER_BYTES) / 12);
   const x = new Float64Array(capacity);
   const y = new Float64Array(capacity);
-  const { count, end } = readShapes(view, { x, y, kind }, name);
+  const area = kind === "area" ? new Float64Array(capacity) : null;
+  const { count, end } = readShapes(view, { x, y, area, kind }, name);
   return {
     kind,
     x: x.subarray(0, count),
     y: y.subarray(0, count),
+    area: area ? area.subarray(0, count) : null,
     isCutShort: end < statedBytes || bytes.length < statedBytes,
   };
 }
 
 function readShapes(
   view: DataView,
-  shapes: { x: Float64Array; y: Float64Array; kind: ShapeKind },
+  shapes: Pick<ShapePoints, "x" | "y" | "area" | "kind">,
   name: string,
 ): { count: number; end: number } {
   let at = HEADER_BYTES;
@@ -73,16 +77,18 @@ function readShapes(
     const next = at + 8 + contentBytes;
     if (contentBytes < 4 || next > view.byteLength) break;
     const type = view.getInt32(at + 8, true);
+    if (shapes.area) shapes.area[count] = NaN;
     if (type === 0) shapes.x[count] = shapes.y[count] = NaN;
     else if (KINDS[type] !== shapes.kind) stopAtRecord(name, count, `is of another type (${type}) than the file`);
     else if (shapes.kind === "point" && contentBytes >= 20) {
       shapes.x[count] = view.getFloat64(at + 12, true);
       shapes.y[count] = view.getFloat64(at + 20, true);
     } else {
-      const [x, y] =
-        readCentre(view, { at: at + 8, end: next, kind: shapes.kind }) ?? stopAtRecord(name, count, DAMAGED);
-      shapes.x[count] = x;
-      shapes.y[count] = y;
+      const { centre, area } =
+        readPlace(view, { at: at + 8, end: next, kind: shapes.kind }) ?? stopAtRecord(name, count, DAMAGED);
+      shapes.x[count] = centre[0];
+      shapes.y[count] = centre[1];
+      if (shapes.area) shapes.area[count] = area;
     }
     count++;
     at = next;
@@ -100,8 +106,11 @@ function stopAtRecord(name: string, count: number, why: string): never {
 
 const BOX_END = 36;
 
-/** Centre of a shape of several points: type, box, counts, starts of the parts (not for multipoints), points. Null when damaged. */
-function readCentre(view: DataView, { at, end, kind }: { at: number; end: number; kind: ShapeKind }): Centre | null {
+/** Centre and area of a shape of several points: type, box, counts, starts of the parts (not for multipoints), points. Null when damaged. */
+function readPlace(
+  view: DataView,
+  { at, end, kind }: { at: number; end: number; kind: ShapeKind },
+): { centre: Centre; area: number } | null {
   if (kind === "point" || at + BOX_END + 8 > end) return null;
   const parts = kind === "points" ? 0 : view.getInt32(at + BOX_END, true);
   const countAt = kind === "points" ? at + BOX_END : at + BOX_END + 4;
@@ -110,11 +119,11 @@ function readCentre(view: DataView, { at, end, kind }: { at: number; end: number
   const pointsAt = partsAt + 4 * parts;
   if (parts < 0 || points < 0 || pointsAt + 16 * points > end) return null;
   const flat = Float64Array.from({ length: points * 2 }, (_, i) => view.getFloat64(pointsAt + 8 * i, true));
-  if (kind === "points") return meanOfPoints(flat);
+  if (kind === "points") return { centre: meanOfPoints(flat), area: NaN };
   const starts = Array.from({ length: parts }, (_, i) => view.getInt32(partsAt + 4 * i, true));
   if (starts.some((start, i) => start < 0 || start > points || start < (starts[i - 1] ?? 0))) return null;
   const pieces = starts.map((start, i) => flat.subarray(2 * start, 2 * (starts[i + 1] ?? points)));
-  if (kind === "area") return centreOfRings(pieces);
+  if (kind === "area") return measureRings(pieces);
   const longest = pieces.reduce((a, b) => (b.length > a.length ? b : a), new Float64Array(0));
-  return midpointOfLine(longest);
+  return { centre: midpointOfLine(longest), area: NaN };
 }
