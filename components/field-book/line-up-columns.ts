@@ -5,7 +5,7 @@ import { displayUnit, type UnitSystem } from "@/lib/units/display-unit";
 import { formatQuantity, type FormattedQuantity } from "@/lib/units/format-quantity";
 
 type NumberField = {
-  [Key in keyof RowStatisticsItem]: RowStatisticsItem[Key] extends number | null ? Key : never;
+  [Key in keyof RowStatisticsItem]-?: RowStatisticsItem[Key] extends number | null | undefined ? Key : never;
 }[keyof RowStatisticsItem];
 
 interface FieldColumn {
@@ -31,6 +31,7 @@ const FIELDS: FieldColumn[] = [
   { field: "shareAtLimit", header: "At the limit, of distance", unit: "fraction" },
   { field: "shareContactLost", header: "Contact lost, of distance", unit: "fraction" },
   { field: "longestUnderTargetM", header: "Longest run under target", unit: "m" },
+  { field: "deviation", header: "Typical difference from other rows" },
   { field: "deviationZ", header: "Difference from other rows, z", unit: "1" },
 ];
 
@@ -43,7 +44,7 @@ export function lineUpColumns(
   system: UnitSystem,
 ): DataColumn<RowStatisticsItem>[] {
   // What no row has, such as a share at the limit of a margin, would be a column of dashes.
-  const filled = FIELDS.filter(({ field }) => items.length === 0 || items.some((item) => item[field] !== null));
+  const filled = FIELDS.filter(({ field }) => items.length === 0 || items.some((item) => (item[field] ?? null) !== null));
   const numbers = filled.map(({ field, header, unit: own }) =>
     numberColumn({ field, header, unit: own ?? unit, channel, system }),
   );
@@ -78,10 +79,10 @@ function numberColumn({ field, header, unit, channel, system }: NumberColumnOpti
     numeric: true,
     wideOnly: !ON_PHONE.includes(field),
     value: (item) => {
-      const value = item[field];
+      const value = item[field] ?? null;
       return value === null ? undefined : Number((value / factor).toPrecision(7));
     },
-    cell: (item) => bareNumber(formatQuantity(item[field], unit, system, options)),
+    cell: (item) => bareNumber(formatQuantity(item[field] ?? null, unit, system, options)),
   };
 }
 

@@ -223,12 +223,22 @@ export const RowStatisticsItem = z.object({
   shareAtLimit: NullableNumber,
   shareContactLost: NullableNumber,
   longestUnderTargetM: NullableNumber,
+  /** Typical difference from the other rows less the median over rows, in the channel's unit; versions of earlier builds do not say. */
+  deviation: NullableNumber.optional(),
   deviationZ: NullableNumber,
   flagged: z.boolean(),
   reason: z.string().nullable(),
 });
 export type RowStatisticsItem = z.infer<typeof RowStatisticsItem>;
-export const RowStatisticsBody = z.object({ channel: z.string(), unit: z.string(), items: z.array(RowStatisticsItem) });
+export const RowStatisticsBody = z.object({
+  channel: z.string(),
+  unit: z.string(),
+  items: z.array(RowStatisticsItem),
+  /** Rows compared among themselves because both sides of the machine stand out alike; versions of earlier builds do not say. */
+  wheelTrackRows: z.array(z.number().int()).optional(),
+  /** Median over rows of their medians: a row is flagged only where it is 5 % of this away. */
+  medianOfRows: NullableNumber.optional(),
+});
 export type RowStatisticsBody = z.infer<typeof RowStatisticsBody>;
 
 export const CoverageBody = z.object({

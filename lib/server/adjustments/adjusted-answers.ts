@@ -3,6 +3,7 @@ import { passVerdict } from "@/lib/findings/pass-verdict";
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import { rowDistances } from "@/lib/rows/row-distances";
 import { describeRows, type RowStatistics } from "@/lib/statistics/row-statistics";
+import { rowStatisticsBody } from "@/lib/statistics/row-statistics-body";
 
 /** The answers of a log that its adjustments change: rows of every channel, and the verdict. Passes and coverage stay. */
 export function adjustedAnswers(placed: PlacedLog): { kind: string; body: unknown }[] {
@@ -14,7 +15,7 @@ export function adjustedAnswers(placed: PlacedLog): { kind: string; body: unknow
     if (!channel) return [];
     const known = describeRows(placed, channel, distances);
     statistics.set(id, known);
-    return [{ kind: `rows:${id}`, body: { channel: id, unit: known.unit, items: known.items } }];
+    return [{ kind: `rows:${id}`, body: rowStatisticsBody(known) }];
   });
   return [...rows, { kind: "verdict", body: passVerdict(placed, { distances, statistics }) }];
 }

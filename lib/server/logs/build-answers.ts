@@ -12,6 +12,7 @@ import type { BuiltAnswers } from "@/lib/server/logs/built-answers";
 import { describePassBodies, describePlacedLog } from "@/lib/server/logs/describe-placed-log";
 import { LogFailure } from "@/lib/server/logs/log-failure";
 import { describeRows, type RowStatistics } from "@/lib/statistics/row-statistics";
+import { rowStatisticsBody } from "@/lib/statistics/row-statistics-body";
 
 /** Said while the work goes on; `progress` is the share of the whole log that is done. */
 export type TellProgress = (stage: string, progress: number) => void;
@@ -48,7 +49,7 @@ export function buildAnswers(
     tell("Working out what each row did", 0.55 + (0.2 * order) / channels.length);
     const known = describeRows(placed, channel, distances);
     statistics.set(channel.id, known);
-    results.push({ kind: `rows:${channel.id}`, body: { channel: channel.id, unit: known.unit, items: known.items } });
+    results.push({ kind: `rows:${channel.id}`, body: rowStatisticsBody(known) });
   });
   tell("Measuring the ground covered", 0.76);
   results.push({ kind: "coverage", body: measureCoverage(placed, { distances, boundary }) });

@@ -13,6 +13,7 @@ import { answerKind, findAnswer, readAdjustedAnswer } from "@/lib/server/adjustm
 import type { Container } from "@/lib/server/create-container";
 import { getReadLog, type LogChoice } from "@/lib/server/logs/find-placed-log";
 import { rowStatistics } from "@/lib/statistics/row-statistics";
+import { rowStatisticsBody } from "@/lib/statistics/row-statistics-body";
 
 /** An answer that no adjustment changes. */
 async function findPlacedAnswer(scope: Scope, logId: string, kind: string): Promise<unknown> {
@@ -57,8 +58,7 @@ export async function getRowStatistics(
   const stored = await readAdjustedAnswer(container, log, kind);
   if (stored) return RowStatisticsBody.parse(stored);
   const placed = await loadAdjustedLog(container, log, channel);
-  const { items, unit } = rowStatistics(placed, channel);
-  const body = { channel, unit, items };
+  const body = rowStatisticsBody(rowStatistics(placed, channel));
   const key = { logId: log.id, version: log.version, kind: answerKind(log, kind) };
   await withOrganisation(scope, (tx) => saveLogResult(tx, scope, { ...key, body }));
   return body;
