@@ -25,6 +25,8 @@ function asPatch(machine: Machine): Record<string, unknown> {
 const OPTIONAL_SEEDER = [
   "rowOffsetsM",
   "rowForwardM",
+  "sections",
+  "wings",
   "antennaToHitchM",
   "hitchToRowsM",
   "maxDownforceN",

@@ -4,6 +4,7 @@ import { useFormContext, useWatch } from "react-hook-form";
 import { FrameFields } from "@/components/machines/frame-fields";
 import { PLACING_QUESTIONS, ROW_UNIT_QUESTIONS, TRAILED_QUESTIONS } from "@/components/machines/machine-form-fields";
 import { QuestionGrid } from "@/components/machines/question";
+import { RowCountsField } from "@/components/machines/row-counts-field";
 import { RowListField } from "@/components/machines/row-list-field";
 import type { DraftMachine } from "@/components/machines/toolbar-drawing";
 import { WholeNumber } from "@/components/machines/whole-number";
@@ -29,6 +30,18 @@ export function SeederFields() {
         </div>
         <QuestionGrid questions={PLACING_QUESTIONS} />
         {hitch === "trailed" ? <QuestionGrid questions={TRAILED_QUESTIONS} /> : null}
+        <div className="grid gap-5 sm:grid-cols-2">
+          <RowCountsField
+            name="sections"
+            label="Rows in each section"
+            hint="Rows switched together, from the left, such as 6 6 6 6. Empty: not known."
+          />
+          <RowCountsField
+            name="wings"
+            label="Rows on each wing and the centre"
+            hint="Parts of the frame that rise on their own, from the left, such as 8 8 8. Empty: one frame."
+          />
+        </div>
         <details>
           <summary className="inline-flex min-h-11 items-center text-slate underline underline-offset-3">
             Rows that stand unevenly

@@ -18,6 +18,7 @@ export const Frame = z.object({
 });
 export type Frame = z.infer<typeof Frame>;
 
+const rowCounts = z.array(z.number().int().min(1).max(256)).min(1).max(256);
 const name = plainText(120).min(1);
 
 /** A drill or planter. Offsets: `antennaToRowsM` behind the antenna; right of centre positive; row 1 leftmost looking forward. */
@@ -28,6 +29,10 @@ export const SeederInput = z.object({
   rowSpacingM: z.number().positive().max(5),
   rowOffsetsM: z.array(metres).optional(),
   rowForwardM: z.array(metres).optional(),
+  /** Rows switched together, left to right: their numbers. */
+  sections: rowCounts.optional(),
+  /** Rows on each part of the frame that rises on its own, left to right. */
+  wings: rowCounts.optional(),
   antennaToRowsM: metres,
   antennaRightM: metres.default(0),
   hitch: z.enum(["rigid", "trailed"]),
@@ -63,6 +68,12 @@ export const MachineInput = z
           path: [key],
           message: `needs one entry a row: ${machine.rowCount}, got ${list.length}`,
         });
+      }
+    }
+    for (const key of ["sections", "wings"] as const) {
+      const sum = machine[key]?.reduce((rows, count) => rows + count, 0) ?? machine.rowCount;
+      if (sum !== machine.rowCount) {
+        context.addIssue({ code: "custom", path: [key], message: `add up to ${sum} rows, not ${machine.rowCount}` });
       }
     }
     if (machine.hitch === "trailed" && machine.hitchToRowsM === undefined) {

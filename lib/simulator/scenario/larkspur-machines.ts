@@ -6,6 +6,8 @@ export const LARKSPUR_DRILL: Seeder = {
   name: "24-row no-till drill",
   rowCount: 24,
   rowSpacingM: 0.25,
+  sections: [6, 6, 6, 6],
+  wings: [8, 8, 8],
   antennaToRowsM: 4.2,
   antennaRightM: 0,
   hitch: "rigid",

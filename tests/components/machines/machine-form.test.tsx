@@ -63,6 +63,25 @@ describe("describing a drill", () => {
     expect(machine.rowCount).toBe(24);
   });
 
+  it("takes rows of sections and wings, and says where they do not add up", async () => {
+    const { sent, user } = show("metric");
+    await user.type(screen.getByLabelText("Name"), "24-row drill");
+    await user.type(screen.getByLabelText("Rows"), "24");
+    await user.type(screen.getByLabelText("Row spacing"), "250");
+    await user.type(screen.getByLabelText("Antenna to rows"), "4");
+    await user.type(screen.getByLabelText("Mass of one row unit"), "80");
+    await user.type(screen.getByLabelText("Rows in each section"), "6 6 6 6");
+    await user.type(screen.getByLabelText("Rows on each wing and the centre"), "8, 8, 7");
+    await user.click(screen.getByRole("button", { name: "Save the machine" }));
+    expect(await screen.findByText("add up to 23 rows, not 24")).toBeInTheDocument();
+    expect(sent).toEqual([]);
+    await user.clear(screen.getByLabelText("Rows on each wing and the centre"));
+    await user.type(screen.getByLabelText("Rows on each wing and the centre"), "8 8 8");
+    await user.click(screen.getByRole("button", { name: "Save the machine" }));
+    await waitFor(() => expect(sent).toHaveLength(1));
+    expect(sent[0]).toMatchObject({ sections: [6, 6, 6, 6], wings: [8, 8, 8] });
+  });
+
   it("asks again where rows are closer or the machine is wider than any, and takes a decimal comma", async () => {
     const { sent, user } = show("metric");
     await user.type(screen.getByLabelText("Name"), "4-row drill");
