@@ -1,8 +1,13 @@
+export interface StreamOptions {
+  /** The reader is done with a chunk when it asks for the next one: the source may use its memory again. */
+  lends?: boolean;
+}
+
 /** A file that can be read from the start more than once. */
 export interface ByteSource {
   name: string;
   sizeBytes: number;
-  stream(): AsyncIterable<Uint8Array>;
+  stream(options?: StreamOptions): AsyncIterable<Uint8Array>;
 }
 
 /** A source over bytes already in memory, in chunks of `chunkBytes`. */
@@ -15,9 +20,9 @@ export function bytesSource(name: string, bytes: Uint8Array, chunkBytes = 1 << 1
 
 /** The same source, telling how many bytes have been taken so far (for progress), counted afresh on each opening. */
 export function countedSource(source: ByteSource, onBytes: (taken: number) => void): ByteSource {
-  async function* stream(): AsyncIterable<Uint8Array> {
+  async function* stream(options?: StreamOptions): AsyncIterable<Uint8Array> {
     let taken = 0;
-    for await (const chunk of source.stream()) {
+    for await (const chunk of source.stream(options)) {
       taken += chunk.length;
       onBytes(taken);
       yield chunk;

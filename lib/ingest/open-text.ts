@@ -1,4 +1,4 @@
-import { countedSource, type ByteSource } from "@/lib/ingest/byte-source";
+import { countedSource, type ByteSource, type StreamOptions } from "@/lib/ingest/byte-source";
 import { IngestFailure, stopReading } from "@/lib/ingest/ingest-error";
 import { READ_LIMITS, type ReadOptions } from "@/lib/ingest/log-format";
 
@@ -22,12 +22,16 @@ export function openText(source: ByteSource, options: ReadOptions): ByteSource {
   return {
     name: source.name,
     sizeBytes: packed ? source.sizeBytes * 5 : source.sizeBytes,
-    stream: () => unpackIfGzip(counted, source),
+    stream: (options) => unpackIfGzip(counted, source, options),
   };
 }
 
-async function* unpackIfGzip(counted: ByteSource, source: ByteSource): AsyncIterable<Uint8Array> {
-  const iterator = counted.stream()[Symbol.asyncIterator]();
+async function* unpackIfGzip(
+  counted: ByteSource,
+  source: ByteSource,
+  options: StreamOptions | undefined,
+): AsyncIterable<Uint8Array> {
+  const iterator = counted.stream(options)[Symbol.asyncIterator]();
   let first = await iterator.next();
   while (!first.done && first.value.length === 0) first = await iterator.next();
   const rest = { [Symbol.asyncIterator]: () => iterator };
@@ -79,8 +83,9 @@ async function feed(
   rest: AsyncIterable<Uint8Array>,
 ): Promise<void> {
   try {
-    await writer.write(first as Uint8Array<ArrayBuffer>);
-    for await (const chunk of rest) await writer.write(chunk as Uint8Array<ArrayBuffer>);
+    // Copies: what is written may wait, and a lent chunk does not.
+    await writer.write(new Uint8Array(first));
+    for await (const chunk of rest) await writer.write(new Uint8Array(chunk));
     await writer.close();
   } catch (error) {
     await writer.abort(error).catch(() => undefined);

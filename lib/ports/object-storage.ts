@@ -5,6 +5,11 @@ export interface ObjectRange {
   end: number;
 }
 
+export interface GetOptions {
+  /** The reader is done with a chunk when it asks for the next one: its memory may be used again. */
+  lends?: boolean;
+}
+
 /** Where files are kept, addressed by key. Keys use `/` and never start with it. */
 export interface ObjectStorage {
   /**
@@ -17,7 +22,7 @@ export interface ObjectStorage {
     options?: { signal?: AbortSignal; contentType?: string },
   ): Promise<{ bytes: number }>;
   /** @throws AppError `not_found` on the first read when the key does not exist. */
-  get(key: string, range?: ObjectRange): AsyncIterable<Uint8Array>;
+  get(key: string, range?: ObjectRange, options?: GetOptions): AsyncIterable<Uint8Array>;
   /** Null when the key does not exist. */
   head(key: string): Promise<{ bytes: number } | null>;
   /** Gives an object a second key. */

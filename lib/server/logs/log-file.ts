@@ -27,5 +27,9 @@ export function incomingKey(organisationId: string, name: string): string {
 /** The stored file as something the readers of `lib/ingest` take. */
 export function storedSource(storage: Pick<ObjectStorage, "get">, file: LogFile): ByteSource {
   const key = uploadKey(file);
-  return { name: file.fileName, sizeBytes: file.fileBytes, stream: () => storage.get(key) };
+  return {
+    name: file.fileName,
+    sizeBytes: file.fileBytes,
+    stream: (options) => storage.get(key, undefined, options),
+  };
 }

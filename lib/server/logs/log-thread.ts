@@ -30,7 +30,8 @@ export class LogThread {
   constructor(private readonly env: Environment) {
     this.worker = new Worker(resolve(env.BUILD_DIR, "read-log-thread.mjs"), {
       workerData: { storage: storageSettings(env) },
-      resourceLimits: { maxOldGenerationSizeMb: env.WORKER_MEMORY_MIB },
+      // What a log leaves behind young is little; more room for it only keeps memory busy.
+      resourceLimits: { maxOldGenerationSizeMb: env.WORKER_MEMORY_MIB, maxYoungGenerationSizeMb: 16 },
       execArgv: [],
     });
     this.worker.on("error", () => (this.isUsable = false));

@@ -7,6 +7,7 @@ import { LogFailure, LogInterrupted } from "@/lib/server/logs/log-failure";
 import { LogProgress } from "@/lib/server/logs/log-progress";
 import { readAndStore } from "@/lib/server/logs/read-and-store";
 import type { ThreadPool } from "@/lib/server/logs/thread-pool";
+import { collectSoon } from "@/lib/server/worker/collect-soon";
 import { workerScope } from "@/lib/server/logs/worker-scope";
 
 const MAX_ATTEMPTS = 3;
@@ -28,6 +29,7 @@ export async function readLogJob(payload: JobPayloads["read-log"], options: JobO
     if (begun) await work(begun, options);
   } finally {
     await lock.release();
+    collectSoon();
   }
 }
 

@@ -9,6 +9,7 @@ import { openStorage, type StorageSettings } from "@/lib/server/adapters/storage
 import { buildAnswers, placeLog } from "@/lib/server/logs/build-answers";
 import { storedSource } from "@/lib/server/logs/log-file";
 import { LogFailure } from "@/lib/server/logs/log-failure";
+import { collectSoon } from "@/lib/server/worker/collect-soon";
 import type { ThreadMessage, ThreadTask } from "@/lib/server/logs/thread-messages";
 
 const storage = openStorage((workerData as { storage: StorageSettings }).storage);
@@ -68,7 +69,7 @@ async function read(task: Extract<ThreadTask, { task: "read" }>): Promise<void> 
 }
 
 parentPort?.on("message", (task: ThreadTask) => {
-  const work = task.task === "inspect" ? inspect(task) : read(task);
+  const work = task.task === "inspect" ? inspect(task) : read(task).finally(collectSoon);
   work.catch((error: unknown) => {
     say({ kind: "broken", message: error instanceof Error ? (error.stack ?? error.message) : String(error) });
   });

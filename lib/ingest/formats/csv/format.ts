@@ -140,10 +140,13 @@ function cutHeadLines({ head, dialect, encoding }: CsvLayout): Uint8Array[] {
   return lines;
 }
 
+/** Lines may get shorter behind the head; too little room costs a copy of all readings, too much is cut off without one. */
+const MARGIN = 1.06;
+
 /** Lines of the file by the length of the lines in the head, a little over. */
 function expectLines(layout: CsvLayout, sizeBytes: number): number {
   const lines = Math.max(1, countLineFeeds(layout.head));
-  return Math.ceil((sizeBytes / layout.head.length) * lines * 1.02) + 16;
+  return Math.ceil((sizeBytes / layout.head.length) * lines * MARGIN) + 16;
 }
 
 function countLineFeeds(bytes: Uint8Array): number {

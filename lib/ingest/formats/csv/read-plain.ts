@@ -13,7 +13,7 @@ export async function readPlain(source: ByteSource, scan: PlainScan, markBytes: 
   let buffer = new Uint8Array(1 << 19);
   let length = 0;
   let skip = markBytes;
-  for await (const chunk of source.stream()) {
+  for await (const chunk of source.stream({ lends: true })) {
     const bytes = skip > 0 ? chunk.subarray(skip) : chunk;
     skip -= chunk.length - bytes.length;
     buffer = withRoomFor(buffer, length, bytes.length + 1);

@@ -15,7 +15,7 @@ import {
 import { dirname, join, sep } from "node:path";
 import { nanoid } from "nanoid";
 import { AppError } from "@/lib/errors";
-import type { ObjectRange, ObjectStorage } from "@/lib/ports/object-storage";
+import type { GetOptions, ObjectRange, ObjectStorage } from "@/lib/ports/object-storage";
 
 /** Bytes gathered before they are written, and read at a time: large enough that calls cost nothing. */
 const BLOCK_BYTES = 1024 * 1024;
@@ -58,14 +58,15 @@ export class FolderStorage implements ObjectStorage {
     }
   }
 
-  async *get(key: string, range?: ObjectRange): AsyncIterable<Uint8Array> {
+  async *get(key: string, range?: ObjectRange, options: GetOptions = {}): AsyncIterable<Uint8Array> {
     const file = await this.openToRead(key);
     try {
       let at = range?.start ?? 0;
       const end = range ? range.end + 1 : Infinity;
+      const lent = options.lends ? Buffer.allocUnsafe(BLOCK_BYTES) : null;
       while (at < end) {
         const wanted = Math.min(BLOCK_BYTES, end - at);
-        const { bytesRead, buffer } = await file.read(Buffer.allocUnsafe(wanted), 0, wanted, at);
+        const { bytesRead, buffer } = await file.read(lent ?? Buffer.allocUnsafe(wanted), 0, wanted, at);
         if (bytesRead === 0) return;
         at += bytesRead;
         yield buffer.subarray(0, bytesRead);
