@@ -3,10 +3,11 @@
 import { ChevronLeft, ChevronRight } from "lucide-react";
 import { useBook, useBookState } from "@/components/field-book/field-book-context";
 import { useChannelUnits } from "@/components/field-book/use-channel-units";
+import type { ReactNode } from "react";
 import type { PassBody } from "@/lib/schemas/logs";
 
 /** Which pass is unrolled, with steps to the one before and after. */
-export function PassHeading({ passes }: { passes: readonly PassBody[] }) {
+export function PassHeading({ passes, tools }: { passes: readonly PassBody[]; tools?: ReactNode }) {
   const { store } = useBook();
   const pass = useBookState((state) => state.pass);
   const distance = useChannelUnits("m", "distance");
@@ -34,6 +35,7 @@ export function PassHeading({ passes }: { passes: readonly PassBody[] }) {
       >
         <ChevronRight size={18} aria-hidden />
       </Step>
+      {tools}
     </div>
   );
 }

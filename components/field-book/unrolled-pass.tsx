@@ -60,10 +60,12 @@ export function UnrolledPass({ track, classes, passes, flagged, orientation }: U
     return (
       <div>
         <Readout spoken={spoken} />
-        <RowAxis scale={scale} selected={row} flagged={flagged} />
-        <div className="grid h-[36rem] grid-cols-[2.75rem_1fr]">
-          <DistanceAxis scale={scale} />
-          {plotBox}
+        <div data-figure="unrolled-pass">
+          <RowAxis scale={scale} selected={row} flagged={flagged} />
+          <div className="grid h-[36rem] grid-cols-[2.75rem_1fr]">
+            <DistanceAxis scale={scale} />
+            {plotBox}
+          </div>
         </div>
       </div>
     );
@@ -71,7 +73,7 @@ export function UnrolledPass({ track, classes, passes, flagged, orientation }: U
   return (
     <div className="flex h-full min-h-0 flex-col">
       <Readout spoken={spoken} />
-      <div className="grid min-h-0 flex-1 grid-cols-[2.25rem_1fr] grid-rows-[1fr_1.25rem]">
+      <div data-figure="unrolled-pass" className="grid min-h-0 flex-1 grid-cols-[2.25rem_1fr] grid-rows-[1fr_1.25rem]">
         <RowAxis scale={scale} selected={row} flagged={flagged} />
         {plotBox}
         <span aria-hidden="true" className="pt-0.5 text-right text-[11px] leading-4 text-ink-soft" />

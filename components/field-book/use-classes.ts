@@ -3,6 +3,7 @@
 import { useMemo } from "react";
 import { useBookState } from "@/components/field-book/field-book-context";
 import { useChannelUnits } from "@/components/field-book/use-channel-units";
+import { useGreyInk } from "@/components/pictures/grey-ink";
 import { classOf } from "@/lib/legend/class-edges";
 import { presetsFor, proposeEdges, type EdgeContext } from "@/lib/legend/propose-edges";
 import { classColours, isDiverging, rampOf } from "@/lib/legend/ramps";
@@ -20,6 +21,7 @@ export interface Classes {
 export function useClasses(channel: string, overview: LogOverview | undefined): Classes | null {
   const own = useBookState((state) => state.edges[channel]);
   const { factor } = useChannelUnits(overview?.unit ?? "", channel);
+  const isGrey = useGreyInk();
   return useMemo(() => {
     if (!overview || overview.channel !== channel) return null;
     const { histogram, distribution, targetMarginN, marginDeadbandN } = overview;
@@ -32,8 +34,9 @@ export function useClasses(channel: string, overview: LogOverview | undefined): 
       shownFactor: factor,
     };
     const edges = own ?? proposeEdges(presetsFor(context)[0] ?? "round", context);
-    return { edges, colours: coloursFor(context, edges), context };
-  }, [channel, overview, own, factor]);
+    const colours = isGrey ? classColours("Greys", edges.length + 1) : coloursFor(context, edges);
+    return { edges, colours, context };
+  }, [channel, overview, own, factor, isGrey]);
 }
 
 /** A diverging ramp keeps its pale middle at the target, or at 0 for differences. */

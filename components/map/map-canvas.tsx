@@ -26,6 +26,10 @@ export interface MapCanvasProps {
   gentle?: boolean;
   /** For looking and printing: gentle, and what is drawn can be printed. */
   readOnly?: boolean;
+  /** Further buttons beside the map's own. */
+  tools?: ReactNode;
+  /** The name pictures of this map go by. */
+  figure?: string;
   children?: ReactNode;
 }
 
@@ -33,7 +37,7 @@ const FIT_PADDING_PX = 28;
 
 /** A map with our ground, buttons and keys. What lies on it is drawn by whoever gets it through `onMap`. */
 export function MapCanvas(props: MapCanvasProps) {
-  const { bounds, description, label = "Map", children } = props;
+  const { bounds, description, label = "Map", tools, figure, children } = props;
   const wordsId = useId();
   const container = useRef<HTMLDivElement>(null);
   const [map, setMap] = useState<MapLibreMap | null>(null);
@@ -63,7 +67,7 @@ export function MapCanvas(props: MapCanvasProps) {
     };
   }, []);
   return (
-    <div className="relative h-full min-h-0 overflow-hidden bg-sheet">
+    <div data-figure={figure} className="relative h-full min-h-0 overflow-hidden bg-sheet">
       <div className="absolute inset-0">
         <div ref={container} role="region" aria-label={label} aria-describedby={wordsId} className="size-full" />
       </div>
@@ -79,7 +83,7 @@ export function MapCanvas(props: MapCanvasProps) {
       {map ? (
         <>
           <ScaleBar map={map} />
-          <MapButtons map={map} onWhole={() => fitBounds(map, bounds)} />
+          <MapButtons map={map} onWhole={() => fitBounds(map, bounds)} tools={tools} />
         </>
       ) : null}
       {children}
