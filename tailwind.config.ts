@@ -1,20 +1,23 @@
 import type { Config } from "tailwindcss";
 
-/** The notebook: paper ground, ink text, straw and clay as the two accents, slate for links and focus. */
+/**
+ * The notebook: paper ground, ink text, straw and clay as the two accents, slate for links and focus.
+ * The values stand in app/globals.css, once as they are and once for high contrast.
+ */
 export default {
   content: ["./app/**/*.{ts,tsx}", "./components/**/*.{ts,tsx}"],
   theme: {
     extend: {
       colors: {
-        paper: "#FBFAF6",
-        sheet: "#FFFFFF",
-        rule: "#E4E0D5",
+        paper: "var(--paper)",
+        sheet: "var(--sheet)",
+        rule: "var(--rule)",
         /** Outline of something to fill in or press: 3:1 on paper. */
-        edge: "#8C8778",
-        ink: { DEFAULT: "#1E2430", soft: "#4A5261", faint: "#6B7280" },
-        straw: { DEFAULT: "#C29A45", deep: "#7D5A14" },
-        clay: "#9A4A2C",
-        slate: "#2F5D80",
+        edge: "var(--edge)",
+        ink: { DEFAULT: "var(--ink)", soft: "var(--ink-soft)", faint: "var(--ink-faint)" },
+        straw: { DEFAULT: "var(--straw)", deep: "var(--straw-deep)" },
+        clay: "var(--clay)",
+        slate: "var(--slate)",
       },
       fontFamily: { sans: ['"Roboto Flex"', '"Roboto Flex Variable"', "system-ui", "sans-serif"] },
       fontSize: {

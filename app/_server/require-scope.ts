@@ -14,7 +14,7 @@ import { chooseOrganisation } from "@/lib/server/access/choose-organisation";
 export interface PageScope {
   scope: Scope;
   organisation: { id: string; slug: string; name: string; isDemo: boolean };
-  user: Pick<PersonRow, "id" | "name" | "email" | "unitSystem">;
+  user: Pick<PersonRow, "id" | "name" | "email" | "unitSystem" | "unitPreferences" | "contrast">;
 }
 
 /** Who looks at this page; null when nobody is signed in. One look-up a request. */
@@ -27,7 +27,7 @@ export const currentIdentity = cache(async (): Promise<Identity | null> => {
 
 async function pageScope(identity: Identity, organisationSlug: string | null): Promise<PageScope> {
   const { scope, membership } = await chooseOrganisation(identity, { demanded: organisationSlug });
-  const { id, name, email, unitSystem } = identity.person;
+  const { id, name, email, unitSystem, unitPreferences, contrast } = identity.person;
   return {
     scope,
     organisation: {
@@ -36,7 +36,7 @@ async function pageScope(identity: Identity, organisationSlug: string | null): P
       name: membership.organisationName,
       isDemo: membership.isDemo,
     },
-    user: { id, name, email, unitSystem },
+    user: { id, name, email, unitSystem, unitPreferences, contrast },
   };
 }
 

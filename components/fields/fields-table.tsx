@@ -24,7 +24,7 @@ export interface FieldsTableProps {
 
 /** The fields of the organisation. A log file let go on a row goes to that field's upload. */
 export function FieldsTable({ slug, fields, mayUpload, more }: FieldsTableProps) {
-  const { areaUnit, fromSquareMetres } = useUnits();
+  const { areaUnit, exact } = useUnits();
   const columns = useMemo<DataColumn<Field>[]>(
     () => [
       {
@@ -38,7 +38,7 @@ export function FieldsTable({ slug, fields, mayUpload, more }: FieldsTableProps)
         id: "area",
         header: `Area (${areaUnit})`,
         numeric: true,
-        value: (field) => (field.areaM2 === null ? undefined : fromSquareMetres(field.areaM2)),
+        value: (field) => (field.areaM2 === null ? undefined : exact(field.areaM2, "m2")),
         cell: (field) => (field.areaM2 === null ? "–" : <Quantity value={field.areaM2} unit="m2" />),
       },
       { id: "logs", header: "Logs", numeric: true, value: (field) => field.logCount },
@@ -55,7 +55,7 @@ export function FieldsTable({ slug, fields, mayUpload, more }: FieldsTableProps)
         cell: (field) => <FieldVerdictState field={field} mayUpload={mayUpload} />,
       },
     ],
-    [areaUnit, fromSquareMetres, mayUpload, slug],
+    [areaUnit, exact, mayUpload, slug],
   );
   return (
     <DataTable

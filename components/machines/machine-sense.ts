@@ -13,7 +13,7 @@ function doubtRows({ rowCount, rowSpacingM }: Seeder, system: UnitSystem): strin
   if (rowSpacingM < NARROWEST_ROW_M) {
     // 0.75 typed where millimetres are asked for was meant in metres.
     const meant = rowSpacingM / unit.factor;
-    const guess = system === "metric" && meant >= NARROWEST_ROW_M ? ` Did you mean ${Math.round(meant * 1000)}?` : "";
+    const guess = unit.symbol === "mm" && meant >= NARROWEST_ROW_M ? ` Did you mean ${Math.round(meant * 1000)}?` : "";
     return `Rows ${spacing} apart are closer than any seeder’s. This is asked in ${unit.words}.${guess}`;
   }
   const widthM = rowCount * rowSpacingM;

@@ -24,7 +24,7 @@ function widthM(machine: MachineReply): number {
 export function MachinesPage({ slug, mayWrite }: { slug: string; mayWrite: boolean }) {
   const machines = useMachinePages();
   const remove = useDeleteMachine();
-  const { parts } = useUnits();
+  const { parts, exact } = useUnits();
   const columns = useMemo<DataColumn<MachineReply>[]>(() => {
     const lengthUnit = parts(1, "m").unit;
     const rulerUnit = parts(1, "m", "rowSpacing").unit;
@@ -53,8 +53,7 @@ export function MachinesPage({ slug, mayWrite }: { slug: string; mayWrite: boole
         id: "spacing",
         header: `Row spacing (${rulerUnit})`,
         numeric: true,
-        value: (machine) =>
-          machine.kind === "seeder" ? Number(parts(machine.rowSpacingM, "m", "rowSpacing").number) : undefined,
+        value: (machine) => (machine.kind === "seeder" ? exact(machine.rowSpacingM, "m", "rowSpacing") : undefined),
         cell: (machine) =>
           machine.kind === "seeder" ? <Quantity value={machine.rowSpacingM} unit="m" channel="rowSpacing" /> : "–",
       },
@@ -62,12 +61,12 @@ export function MachinesPage({ slug, mayWrite }: { slug: string; mayWrite: boole
         id: "width",
         header: `Width (${lengthUnit})`,
         numeric: true,
-        value: (machine) => Number(parts(widthM(machine), "m").number),
+        value: (machine) => exact(widthM(machine), "m"),
         cell: (machine) => <Quantity value={widthM(machine)} unit="m" />,
       },
       { id: "hitch", header: "Hitch", value: (machine) => (machine.kind === "seeder" ? machine.hitch : undefined) },
     ];
-  }, [parts, slug]);
+  }, [parts, exact, slug]);
   if (machines.isPending) return <Loading what="the machines" />;
   if (!machines.items)
     return (

@@ -14,8 +14,8 @@ export interface Person {
 }
 
 export function PersonMenu({ person, slug }: { person: Person; slug: string }) {
-  const { system, setSystem } = useUnits();
-  const other = system === "metric" ? "imperial" : "metric";
+  const { systemName, setSystem } = useUnits();
+  const other = systemName === "metric" ? "imperial" : "metric";
   return (
     <Menu
       trigger={

@@ -8,6 +8,8 @@ import { z } from "zod";
 import { Button } from "@/components/ui/button";
 import { TextField } from "@/components/ui/form-field";
 import { Notice } from "@/components/ui/notice";
+import { ContrastChoice, type ContrastName } from "@/components/settings/contrast-choice";
+import { OwnUnitChoices } from "@/components/units/own-unit-choices";
 import { UnitSwitch } from "@/components/units/unit-switch";
 import { describeFailure } from "@/lib/api/api-problem";
 import { changeMe, changePassword, signOutEverywhere } from "@/lib/api/client";
@@ -16,8 +18,8 @@ const NameShape = z.object({
   name: z.string().trim().min(1, "Say what you are called.").max(120, "At most 120 characters."),
 });
 
-/** Name and units of the person signed in. */
-export function PersonSettings({ name }: { name: string }) {
+/** Name, units and contrast of the person signed in. */
+export function PersonSettings({ name, contrast }: { name: string; contrast: ContrastName }) {
   const router = useRouter();
   const form = useForm({ resolver: zodResolver(NameShape), defaultValues: { name } });
   const save = useMutation({ mutationFn: changeMe, onSuccess: () => router.refresh() });
@@ -51,8 +53,13 @@ export function PersonSettings({ name }: { name: string }) {
       <div className="space-y-1">
         <p className="font-semibold">Units</p>
         <UnitSwitch />
-        <p className="text-table text-ink-soft">For every number you see. Files and the API stay in metric (SI).</p>
+        <p className="text-table text-ink-soft">
+          For every number you see, and for tables saved as CSV, which name their units. Exports and the API stay in
+          metric (SI).
+        </p>
       </div>
+      <OwnUnitChoices />
+      <ContrastChoice start={contrast} />
     </section>
   );
 }

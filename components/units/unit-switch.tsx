@@ -8,12 +8,12 @@ const ITEM =
 
 /** Metric or US units, for every number on every screen; kept with the person. */
 export function UnitSwitch() {
-  const { system, setSystem } = useUnits();
+  const { systemName, setSystem } = useUnits();
   return (
     <ToggleGroup.Root
       type="single"
       aria-label="Units"
-      value={system}
+      value={systemName}
       onValueChange={(value) => {
         if (value) setSystem(value as UnitSystemName);
       }}

@@ -2,10 +2,17 @@
 
 import { createContext, useCallback, useContext, useMemo, useState, type ReactNode } from "react";
 import { changeMe } from "@/lib/api/client";
-import type { UnitSystem } from "@/lib/units/display-unit";
+import {
+  displayUnit,
+  OWN_UNITS,
+  type OwnUnitKind,
+  type OwnUnits,
+  type SystemName,
+  type UnitSystem,
+} from "@/lib/units/display-unit";
 import { formatQuantity } from "@/lib/units/format-quantity";
 
-export type UnitSystemName = UnitSystem;
+export type UnitSystemName = SystemName;
 
 export interface ShownQuantity {
   number: string;
@@ -14,45 +21,70 @@ export interface ShownQuantity {
 }
 
 export interface Units {
-  system: UnitSystemName;
+  /** What `formatQuantity` and `displayUnit` take. */
+  system: UnitSystem;
+  systemName: UnitSystemName;
   setSystem: (system: UnitSystemName) => void;
+  /** Units chosen one by one over the system's. */
+  own: OwnUnits;
+  setOwn: (own: OwnUnits) => void;
   /** "943 N": number, thin space, unit. */
   format: (valueSi: number, unit: string, channel?: string) => string;
   /** The same in two parts. */
   parts: (valueSi: number, unit: string, channel?: string) => ShownQuantity;
+  /** The number in the shown unit, not rounded to what a screen shows: for sorting and for files. */
+  exact: (valueSi: number, unit: string, channel?: string) => number;
   areaUnit: string;
-  fromSquareMetres: (areaM2: number) => number;
 }
 
-function unitsFor(system: UnitSystemName, setSystem: (system: UnitSystemName) => void): Units {
+interface UnitState {
+  systemName: UnitSystemName;
+  own: OwnUnits;
+  setSystem: (system: UnitSystemName) => void;
+  setOwn: (own: OwnUnits) => void;
+}
+
+function unitsFor({ systemName, own, setSystem, setOwn }: UnitState): Units {
+  const system: UnitSystem = Object.keys(own).length === 0 ? systemName : { system: systemName, own };
   const shown = (valueSi: number, unit: string, channel?: string) =>
     formatQuantity(valueSi, unit, system, channel === undefined ? {} : { channel });
   return {
     system,
+    systemName,
     setSystem,
+    own,
+    setOwn,
     format: (valueSi, unit, channel) => shown(valueSi, unit, channel).text,
     parts: (valueSi, unit, channel) => {
       const { text, unit: symbol } = shown(valueSi, unit, channel);
       return { number: symbol ? text.slice(0, -symbol.length).trimEnd() : text, unit: symbol };
     },
+    // Twelve figures: beyond what any sensor tells, short of the last bit's noise.
+    exact: (valueSi, unit, channel) => Number((valueSi / displayUnit(unit, system, channel).factor).toPrecision(12)),
     areaUnit: shown(1, "m2").unit,
-    fromSquareMetres: (areaM2) => shown(areaM2, "m2").value ?? NaN,
   };
 }
 
+const OWN_KINDS = Object.keys(OWN_UNITS) as OwnUnitKind[];
+
 // Pages without a person (a share, a test) read in metric and have nowhere to keep a choice.
-const UnitsContext = createContext<Units>(unitsFor("metric", () => undefined));
+const UnitsContext = createContext<Units>(
+  unitsFor({ systemName: "metric", own: {}, setSystem: () => undefined, setOwn: () => undefined }),
+);
 
 export interface UnitsProviderProps {
   start: UnitSystemName;
+  /** Units chosen one by one over the system's. */
+  own?: OwnUnits;
   children: ReactNode;
   /** Keep a change with the person; off where nobody is signed in. */
   keep?: boolean;
 }
 
 /** The units every number below is shown in. */
-export function UnitsProvider({ start, children, keep = true }: UnitsProviderProps) {
-  const [system, setShown] = useState(start);
+export function UnitsProvider({ start, own: ownAtStart = {}, children, keep = true }: UnitsProviderProps) {
+  const [systemName, setShown] = useState(start);
+  const [own, setShownOwn] = useState(ownAtStart);
   const setSystem = useCallback(
     (next: UnitSystemName) => {
       setShown(next);
@@ -61,7 +93,15 @@ export function UnitsProvider({ start, children, keep = true }: UnitsProviderPro
     },
     [keep],
   );
-  const units = useMemo(() => unitsFor(system, setSystem), [system, setSystem]);
+  const setOwn = useCallback(
+    (next: OwnUnits) => {
+      setShownOwn(next);
+      const unitPreferences = Object.fromEntries(OWN_KINDS.map((kind) => [kind, next[kind] ?? null]));
+      if (keep) void changeMe({ unitPreferences }).catch(() => undefined);
+    },
+    [keep],
+  );
+  const units = useMemo(() => unitsFor({ systemName, own, setSystem, setOwn }), [systemName, own, setSystem, setOwn]);
   return <UnitsContext.Provider value={units}>{children}</UnitsContext.Provider>;
 }
 

@@ -1,5 +1,6 @@
 import { index, jsonb, pgTable, primaryKey, text, timestamp, uniqueIndex } from "drizzle-orm/pg-core";
 import type { Role } from "@/lib/access/permissions";
+import type { OwnUnits } from "@/lib/units/display-unit";
 
 const createdAt = () => timestamp({ withTimezone: true, mode: "date" }).notNull().defaultNow();
 
@@ -27,6 +28,9 @@ export const users = pgTable(
     name: text().notNull(),
     passwordHash: text().notNull(),
     unitSystem: text().$type<"metric" | "imperial">().notNull().default("imperial"),
+    /** Units chosen one by one over the system's. */
+    unitPreferences: jsonb().$type<OwnUnits>().notNull().default({}),
+    contrast: text().$type<"device" | "more">().notNull().default("device"),
     /** Part of every session's stamp: another salt ends them all. */
     sessionSalt: text().notNull().default(""),
     /** Sessions signed out before their time, kept until they would have run out by themselves. */

@@ -4,6 +4,7 @@ import { requestJson, requestNothing } from "@/lib/api/request-json";
 import { Field, FieldList, type FieldInput, type FieldPatch } from "@/lib/schemas/fields";
 import { CoverageBody, Log, LogColumns, LogList, LogPatch, PassList, VerdictBody } from "@/lib/schemas/logs";
 import { MachineList, MachineReply } from "@/lib/schemas/machines";
+import type { MePatch } from "@/lib/schemas/me";
 import type { Machine } from "@/lib/machines/machine";
 import {
   AuditList,
@@ -95,7 +96,7 @@ export const removeMember = (memberId: string) => requestNothing(`${ROOT}/member
 export const listAudit = () => requestJson(AuditList, `${ROOT}/audit?${PAGE}`);
 
 /** The person's own things. */
-export const changeMe = (body: { name?: string; unitSystem?: "metric" | "imperial" }) =>
+export const changeMe = (body: z.input<typeof MePatch>) =>
   requestNothing(`${ROOT}/me`, { method: "PATCH", body });
 export const changePassword = (body: { currentPassword: string; newPassword: string }) =>
   requestNothing(`${ROOT}/me`, { method: "PATCH", body });

@@ -1,7 +1,6 @@
 import type { Finding } from "@/lib/findings/finding";
+import type { UnitSystem } from "@/lib/units/display-unit";
 import { formatQuantity } from "@/lib/units/format-quantity";
-
-export type UnitSystem = "metric" | "imperial";
 
 /** A share in words: whole percent, one decimal (unless it is 0) under 10 and over 99 %. */
 export function sayShare(share: number): string {

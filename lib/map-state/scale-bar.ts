@@ -1,5 +1,5 @@
 import { formatNumber } from "@/lib/units/format-quantity";
-import type { UnitSystem } from "@/lib/units/display-unit";
+import { systemName, type SystemName, type UnitSystem } from "@/lib/units/display-unit";
 
 export interface ScaleBarLength {
   widthPx: number;
@@ -13,7 +13,7 @@ interface BarUnit {
 }
 
 /** Larger unit from one of it on. International foot and mile (NIST SP 811). */
-const UNITS: Record<UnitSystem, { small: BarUnit; large: BarUnit }> = {
+const UNITS: Record<SystemName, { small: BarUnit; large: BarUnit }> = {
   metric: { small: { symbol: "m", metres: 1 }, large: { symbol: "km", metres: 1000 } },
   imperial: { small: { symbol: "ft", metres: 0.3048 }, large: { symbol: "mi", metres: 1609.344 } },
 };
@@ -21,7 +21,7 @@ const UNITS: Record<UnitSystem, { small: BarUnit; large: BarUnit }> = {
 /** The longest bar of 1, 2 or 5 times a power of ten that fits. Null where a map shows no ground. */
 export function chooseScaleBar(pixelsPerM: number, mostPx: number, system: UnitSystem): ScaleBarLength | null {
   if (!(pixelsPerM > 0) || !Number.isFinite(pixelsPerM)) return null;
-  const { small, large } = UNITS[system];
+  const { small, large } = UNITS[systemName(system)];
   const mostM = mostPx / pixelsPerM;
   const unit = mostM >= large.metres ? large : small;
   const most = mostM / unit.metres;

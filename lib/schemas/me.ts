@@ -1,7 +1,7 @@
 import { z } from "zod";
 import { plainText } from "@/lib/schemas/plain-text";
 import { Id } from "@/lib/schemas/listing";
-import { RoleName, UnitSystem } from "@/lib/schemas/people";
+import { Contrast, RoleName, UnitPreferences, UnitSystem } from "@/lib/schemas/people";
 
 const OrganisationOfPerson = z.object({ id: Id, slug: z.string(), name: z.string(), role: RoleName });
 
@@ -11,6 +11,8 @@ export const Me = z.object({
   email: z.string(),
   name: z.string(),
   unitSystem: UnitSystem,
+  unitPreferences: UnitPreferences.required(),
+  contrast: Contrast,
   organisation: OrganisationOfPerson,
   organisations: z.array(OrganisationOfPerson),
 });
@@ -23,6 +25,9 @@ export const MePatch = z
   .object({
     name: plainText(120).min(1).optional(),
     unitSystem: UnitSystem.optional(),
+    /** Those named change; the others stay. */
+    unitPreferences: UnitPreferences.optional(),
+    contrast: Contrast.optional(),
     currentPassword: z.string().max(200).optional(),
     newPassword: NewPassword.optional(),
   })

@@ -1,10 +1,20 @@
 import { z } from "zod";
 import { plainText } from "@/lib/schemas/plain-text";
 import { ROLES } from "@/lib/access/permissions";
+import { OWN_UNITS } from "@/lib/units/display-unit";
 import { Id, Instant, listOf } from "@/lib/schemas/listing";
 
 export const RoleName = z.enum(ROLES);
 export const UnitSystem = z.enum(["metric", "imperial"]);
+/** Units chosen one by one; what is null or left out is shown as the system has it. */
+export const UnitPreferences = z.object({
+  force: z.enum(OWN_UNITS.force).nullish(),
+  depth: z.enum(OWN_UNITS.depth).nullish(),
+  area: z.enum(OWN_UNITS.area).nullish(),
+  speed: z.enum(OWN_UNITS.speed).nullish(),
+});
+/** "more": stronger lines and darker words on every screen, whatever the device asks for. */
+export const Contrast = z.enum(["device", "more"]);
 
 export const Member = z.object({
   id: Id,

@@ -1,9 +1,28 @@
 import type { SiUnit } from "@/lib/logs/machine-log";
 import { UNITS } from "@/lib/units/unit-table";
 
-export type UnitSystem = "metric" | "imperial";
+export type SystemName = "metric" | "imperial";
+
+/** Units that a person may choose one by one, whatever the rest is shown in. */
+export const OWN_UNITS = {
+  force: ["N", "lbf", "kgf"],
+  depth: ["mm", "cm", "in"],
+  area: ["ha", "ac"],
+  speed: ["km/h", "mph", "m/s"],
+} as const;
+export type OwnUnitKind = keyof typeof OWN_UNITS;
+
+/** What is left out is shown as the system has it. */
+export type OwnUnits = { readonly [Kind in OwnUnitKind]?: (typeof OWN_UNITS)[Kind][number] };
+
+/** Units a person reads in: a system as it stands, or one with units of the person's own. */
+export type UnitSystem = SystemName | { readonly system: SystemName; readonly own: OwnUnits };
+
+export function systemName(units: UnitSystem): SystemName {
+  return typeof units === "string" ? units : units.system;
+}
 /** Units that values are kept in, and areas. */
-export type KeptUnit = SiUnit | "m2";
+export type KeptUnit = SiUnit;
 
 /** A unit that a screen shows. */
 export interface DisplayUnit {
@@ -50,11 +69,36 @@ const IMPERIAL: Record<KeptUnit, DisplayUnit> = {
 };
 
 /** Lengths that people measure with a ruler. */
-const RULER: Record<UnitSystem, DisplayUnit> = {
+const RULER: Record<SystemName, DisplayUnit> = {
   metric: { symbol: "mm", factor: 0.001, decimals: 0, words: "millimetres" },
   imperial: { symbol: "in", factor: UNITS.in.factor, decimals: 2, words: "inches" },
 };
 const RULER_CHANNELS = /^(?:deviation:)?(?:depth|rowSpacing)$/;
+
+type OwnUnit = NonNullable<OwnUnits[OwnUnitKind]>;
+const CENTIMETRES: DisplayUnit = { symbol: "cm", factor: 0.01, decimals: 1, words: "centimetres" };
+
+/** A kilogram-force is ten times a newton and an inch a hundred times a millimetre: decimals follow the unit. */
+const BY_NAME: Record<OwnUnit, DisplayUnit> = {
+  N: METRIC.N,
+  lbf: IMPERIAL.N,
+  kgf: { symbol: "kgf", factor: UNITS.kgf.factor, decimals: 1, words: "kilograms-force" },
+  mm: RULER.metric,
+  cm: CENTIMETRES,
+  in: RULER.imperial,
+  ha: METRIC.m2,
+  ac: IMPERIAL.m2,
+  "km/h": METRIC["m/s"],
+  mph: IMPERIAL["m/s"],
+  "m/s": { symbol: "m/s", factor: 1, decimals: 2, words: "metres per second" },
+};
+
+function ownKindOf(siUnit: KeptUnit, isRuler: boolean): OwnUnitKind | null {
+  if (siUnit === "N") return "force";
+  if (siUnit === "m2") return "area";
+  if (siUnit === "m/s") return "speed";
+  return isRuler ? "depth" : null;
+}
 
 function isKeptUnit(text: string): text is KeptUnit {
   return Object.hasOwn(METRIC, text);
@@ -64,8 +108,12 @@ function isKeptUnit(text: string): text is KeptUnit {
  * The unit a value kept in `siUnit` is shown in; one it does not know is shown as it is.
  * `channel` tells a seeding depth (mm, in) from a distance (m, ft).
  */
-export function displayUnit(siUnit: string, system: UnitSystem, channel?: string): DisplayUnit {
+export function displayUnit(siUnit: string, units: UnitSystem, channel?: string): DisplayUnit {
   if (!isKeptUnit(siUnit)) return { symbol: siUnit, factor: 1, decimals: 2, words: siUnit };
-  if (siUnit === "m" && channel !== undefined && RULER_CHANNELS.test(channel)) return RULER[system];
-  return (system === "metric" ? METRIC : IMPERIAL)[siUnit];
+  const isRuler = siUnit === "m" && channel !== undefined && RULER_CHANNELS.test(channel);
+  const kind = typeof units === "string" ? null : ownKindOf(siUnit, isRuler);
+  const own = typeof units === "string" || kind === null ? undefined : units.own[kind];
+  if (own) return BY_NAME[own];
+  if (isRuler) return RULER[systemName(units)];
+  return (systemName(units) === "metric" ? METRIC : IMPERIAL)[siUnit];
 }

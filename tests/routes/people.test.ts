@@ -197,6 +197,25 @@ describe("me", () => {
     expect(await world.read("operator", { path: "/api/v1/me" })).toMatchObject({ unitSystem: "metric" });
   });
 
+  it("keeps units chosen one by one, and lets go of those set to null", async () => {
+    const change = (body: unknown) => world.read("operator", { method: "PATCH", path: "/api/v1/me", body });
+    const none = { force: null, depth: null, area: null, speed: null };
+    expect(await world.read("operator", { path: "/api/v1/me" })).toMatchObject({ unitPreferences: none });
+    expect(await change({ unitPreferences: { force: "kgf", depth: "cm" } })).toMatchObject({
+      unitPreferences: { ...none, force: "kgf", depth: "cm" },
+    });
+    // The older way of choosing a system changes nothing of it.
+    const after = await change({ unitSystem: "imperial", unitPreferences: { force: null } });
+    expect(after).toMatchObject({ unitSystem: "imperial", unitPreferences: { ...none, depth: "cm" } });
+    const unknown = { unitPreferences: { force: "stone" } };
+    await world.read("operator", { method: "PATCH", path: "/api/v1/me", body: unknown, expect: 422 });
+  });
+
+  it("keeps the wish for high contrast", async () => {
+    const me = await world.read("operator", { method: "PATCH", path: "/api/v1/me", body: { contrast: "more" } });
+    expect(me).toMatchObject({ contrast: "more" });
+  });
+
   it("changes the password with the old one only, and ends the other sessions", async () => {
     const person = await addMember("researcher");
     const patch = (body: Record<string, string>) =>

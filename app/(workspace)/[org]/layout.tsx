@@ -16,8 +16,10 @@ export default async function WorkspaceLayout({ children, params }: WorkspaceLay
   const { scope, organisation, user } = await requireScope(org);
   const person = { name: user.name, email: user.email, role: scope.role };
   return (
-    <UnitsProvider start={user.unitSystem}>
+    <UnitsProvider start={user.unitSystem} own={user.unitPreferences}>
       <ActInOrganisation slug={organisation.slug} />
+      {/* The whole page takes its colours from here, menus and dialogs too (see globals.css). */}
+      {user.contrast === "more" ? <span hidden data-contrast="more" /> : null}
       <a
         href="#content"
         className="sr-only focus:not-sr-only focus:fixed focus:left-2 focus:top-2 focus:z-50 focus:bg-sheet focus:p-2"

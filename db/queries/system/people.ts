@@ -43,7 +43,9 @@ export async function listMembershipsOfPerson(userId: string): Promise<Membershi
 
 export async function updatePerson(
   userId: string,
-  changes: Partial<Pick<PersonRow, "name" | "unitSystem" | "passwordHash" | "sessionSalt">>,
+  changes: Partial<
+    Pick<PersonRow, "name" | "unitSystem" | "unitPreferences" | "contrast" | "passwordHash" | "sessionSalt">
+  >,
 ): Promise<void> {
   await adminDb().update(users).set(changes).where(eq(users.id, userId));
 }

@@ -10,6 +10,8 @@ function describeOrganisation(membership: MembershipRow, role: Role): Me["organi
   return { id: membership.organisationId, slug: membership.slug, name: membership.organisationName, role };
 }
 
+const NO_OWN_UNITS = { force: null, depth: null, area: null, speed: null };
+
 /** The person and the organisations; a token sees only its own organisation, with its own role. */
 export async function readMe(_container: Container, scope: Scope, input: { isToken: boolean }): Promise<Me> {
   const person = await findPersonById(scope.userId);
@@ -18,6 +20,7 @@ export async function readMe(_container: Container, scope: Scope, input: { isTok
   if (!person || !current) throw new AppError("unauthorized", "This account is gone.");
   const organisation = describeOrganisation(current, scope.role);
   const organisations = input.isToken ? [organisation] : all.map((row) => describeOrganisation(row, row.role));
-  const { id, email, name, unitSystem } = person;
-  return { id, email, name, unitSystem, organisation, organisations };
+  const { id, email, name, unitSystem, contrast } = person;
+  const unitPreferences = { ...NO_OWN_UNITS, ...person.unitPreferences };
+  return { id, email, name, unitSystem, unitPreferences, contrast, organisation, organisations };
 }

@@ -10,6 +10,14 @@ import { countAttempt, forgetAttempts } from "@/lib/server/access/limit-attempts
 import { hashPassword, isPasswordRight } from "@/lib/server/access/passwords";
 import { sessionStamp } from "@/lib/server/access/secrets";
 import type { Container } from "@/lib/server/container";
+import type { OwnUnits } from "@/lib/units/display-unit";
+
+/** The person's own units after a patch; those set to null are gone. */
+function mergeOwnUnits(before: OwnUnits, patch: MePatch["unitPreferences"]): OwnUnits | undefined {
+  if (patch === undefined) return undefined;
+  const entries = Object.entries({ ...before, ...patch });
+  return Object.fromEntries(entries.filter(([, unit]) => unit !== null && unit !== undefined));
+}
 
 async function newHash(userId: string, patch: MePatch): Promise<string | undefined> {
   if (patch.newPassword === undefined) return undefined;
@@ -30,15 +38,18 @@ async function newHash(userId: string, patch: MePatch): Promise<string | undefin
  * ends all the others; null when the password stays.
  */
 export async function updateMe(_container: Container, scope: Scope, patch: MePatch): Promise<{ stamp: string | null }> {
-  const { name, unitSystem } = patch;
+  const { name, unitSystem, contrast } = patch;
   const before = await findPersonById(scope.userId);
   const passwordHash = await newHash(scope.userId, patch);
+  const unitPreferences = mergeOwnUnits(before?.unitPreferences ?? {}, patch.unitPreferences);
   const values = Object.fromEntries(
-    Object.entries({ name, unitSystem, passwordHash }).filter(([, value]) => value !== undefined),
+    Object.entries({ name, unitSystem, unitPreferences, contrast, passwordHash }).filter(
+      ([, value]) => value !== undefined,
+    ),
   );
   if (Object.keys(values).length === 0) return { stamp: null };
   await updatePerson(scope.userId, values);
-  const changes = describeChanges(before ?? {}, { name, unitSystem });
+  const changes = describeChanges(before ?? {}, { name, unitSystem, unitPreferences, contrast });
   const changed = passwordHash ? [...changes.changed, "password"] : changes.changed;
   const detail = { name: before?.name ?? null, ...changes, changed };
   await withOrganisation(scope, (tx) =>

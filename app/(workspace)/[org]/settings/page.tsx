@@ -16,7 +16,7 @@ export default async function SettingsRoute({ params }: { params: Promise<{ org:
     <PageBody>
       <PageHeading title="Settings" lead={user.email} />
       <div className="max-w-3xl space-y-10">
-        <PersonSettings name={user.name} />
+        <PersonSettings name={user.name} contrast={user.contrast} />
         <PasswordSettings />
         <SessionSettings />
         <TokenSettings role={scope.role} />
