@@ -75,7 +75,7 @@ export function ShareMap({ token, fieldName, channel, boundary, bbox, places = N
   const { name, meaning } = channelWords(channel);
   return (
     <figure className="sheet break-inside-avoid">
-      <div className="h-80">
+      <div className="h-80 print:h-64">
         <MapCanvas
           basemap={OFFLINE_BASEMAP}
           bounds={bounds}

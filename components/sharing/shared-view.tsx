@@ -81,8 +81,8 @@ function WhatNext({ findings }: { findings: Finding[] }) {
   const asks = findings.filter((finding) => finding.severity !== "ok" && finding.check !== "").slice(0, 2);
   if (asks.length === 0) return null;
   return (
-    <section className="mt-6 print:mt-3">
-      <h2 className="mb-2 text-section">What is to be checked</h2>
+    <section className="mt-6 print:mt-3 print:text-table">
+      <h2 className="mb-2 text-section print:mb-1">What is to be checked</h2>
       <ul className="list-disc space-y-1 pl-5">
         {asks.map((finding) => (
           <li key={finding.id}>

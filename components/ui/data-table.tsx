@@ -248,7 +248,7 @@ function BodyRow<Row>({ row, columns, actions, stickyFirst }: BodyRowProps<Row>)
           )}
         >
           {index === 0 ? null : <span className="text-ink-soft md:hidden">{column.header}</span>}
-          <span className={classNames("min-w-0 break-words", index > 0 && "max-md:text-right")}>
+          <span className={classNames("min-w-0 break-words max-md:wrap-anywhere", index > 0 && "max-md:text-right")}>
             {column.cell ? column.cell(row) : column.value(row)}
           </span>
         </td>
