@@ -10,6 +10,7 @@ import { copyFlat } from "@/tests/bench/baselines";
 import { openBench, type BenchContext } from "@/tests/bench/bench-context";
 import { makeBenchFile, type BenchFileKind } from "@/tests/bench/bench-files";
 import { measureOrganisation } from "@/tests/bench/measure-organisation";
+import { measurePaint } from "@/tests/bench/measure-paint";
 import { measureReader } from "@/tests/bench/measure-reader";
 import { measureRequests } from "@/tests/bench/measure-requests";
 import { measureReadBack, measureStoredBytes } from "@/tests/bench/measure-storage";
@@ -29,6 +30,7 @@ const PARTS = [
   "requests",
   "organisation",
   "tiles",
+  "paint",
 ] as const;
 type Part = (typeof PARTS)[number];
 const chosen = (process.env.BENCH_ONLY ?? "").split(",").filter((name) => name !== "");
@@ -115,6 +117,7 @@ async function measure(): Promise<void> {
     const logIds = { many: (await uploadToReady(context, wide)).logId, one: (await uploadToReady(other, wide)).logId };
     await measureOrganisation({ many: context, one: other, logIds, rounds: ROUNDS });
   }
+  if (wants("paint")) await measurePaint(context, (await uploadToReady(context, wide)).logId, ROUNDS);
   if (wants("tiles")) await measureTiles(ROUNDS);
 }
 

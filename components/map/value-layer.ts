@@ -5,6 +5,9 @@ import type { TileJson } from "@/lib/schemas/logs";
 const SOURCE = "values";
 const LAYER = "values";
 
+/** Mark on the browser's timeline each time a channel stands on the map, its tiles drawn. */
+export const VALUES_PAINTED = "values-painted";
+
 /**
  * Class colours of value tiles. The source is told to decode to the bare code (red x 256 + green), so every stop is a whole
  * number the shader holds exactly; edges are turned into codes here.
@@ -49,6 +52,18 @@ export function showValues(map: MapLibreMap, { tileJson, colour, beforeLayer }: 
     },
     beforeLayer,
   );
+  markWhenPainted(map);
+}
+
+/** Waits until every tile in view has come, then for the frame that draws them. */
+function markWhenPainted(map: MapLibreMap): void {
+  const look = ({ sourceId, tile }: { sourceId?: string; tile?: unknown }) => {
+    if (sourceId !== SOURCE || !tile || !map.isSourceLoaded(SOURCE)) return;
+    map.off("sourcedata", look);
+    map.once("render", () => performance.mark(VALUES_PAINTED));
+    map.triggerRepaint();
+  };
+  map.on("sourcedata", look);
 }
 
 export function hideValues(map: MapLibreMap): void {

@@ -31,3 +31,13 @@ export function printGoal(label: string, pairs: readonly Pair[], goal: { atMost:
   const aim = `goal: at most ${goal.atMost.toFixed(2)}`;
   printRatio(label, `${pairedRatio(pairs)}   ${aim} ${verdict}`, goal.note);
 }
+
+/** One figure beside a goal that it may not pass. */
+export function printLimit(label: string, value: number, goal: { atMost: number; unit: string; note?: string }): void {
+  const verdict = value <= goal.atMost ? "pass" : "MISS";
+  printRatio(
+    label,
+    `${value.toFixed(0)} ${goal.unit}   goal: at most ${goal.atMost} ${goal.unit} ${verdict}`,
+    goal.note,
+  );
+}
