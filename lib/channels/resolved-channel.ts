@@ -16,4 +16,6 @@ export interface ResolvedChannel {
   censoredShare: number | null;
   /** Values are names, not amounts: nothing may be averaged. */
   isCode?: boolean;
+  /** Of names numbered 1 .. so many: where several fall together the one over the longest distance stands for them. */
+  codeCount?: number;
 }

@@ -13,6 +13,13 @@ const KNOWN: Record<string, ChannelWords | undefined> = {
     name: "Opener resistance",
     meaning: "Applied force and row unit weight less margin: what the ground asked for.",
   },
+  underTarget: { name: "Under target", meaning: "Where the margin was under target, less what still counts as on it." },
+  atLimit: { name: "At the limit", meaning: "Where the force stood at the highest that the machine gives." },
+  marginByForce: {
+    name: "Margin by force",
+    meaning:
+      "What margin and applied force say together: where a reading is off target, and on which side the cause lies.",
+  },
   rowSpeed: { name: "Row speed", meaning: "Speed of each row over the ground; in a turn the outer rows run faster." },
   speed: { name: "Speed", meaning: "Speed of the machine over the ground, as logged." },
   population: { name: "Population", meaning: "Seeds put in the ground, by area." },

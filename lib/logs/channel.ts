@@ -42,9 +42,21 @@ export const PLACING_CHANNELS = [
 ] as const satisfies readonly KnownChannel[];
 
 /** Channels worked out from others, usable wherever a logged channel is. */
-export const DERIVED_CHANNELS = ["resistance", "rowSpeed", "flags"] as const;
+export const DERIVED_CHANNELS = [
+  "resistance",
+  "rowSpeed",
+  "flags",
+  "underTarget",
+  "atLimit",
+  "marginByForce",
+] as const;
 export type DerivedChannelId = (typeof DERIVED_CHANNELS)[number] | `deviation:${string}`;
 export type AnyChannelId = ChannelId | DerivedChannelId;
+
+/** Whether a channel is worked out from others rather than logged. */
+export function isDerivedChannel(channel: string): boolean {
+  return channel.startsWith("deviation:") || (DERIVED_CHANNELS as readonly string[]).includes(channel);
+}
 
 const CHANNEL_PATTERN = /^(?:[a-zA-Z]+|other:[^/\\]{1,80}|deviation:(?:[a-zA-Z]+|other:[^/\\]{1,80}))$/;
 

@@ -1,3 +1,4 @@
+import { namedCodes } from "@/lib/legend/categories";
 import { classOf } from "@/lib/legend/class-edges";
 import { parseColour } from "@/lib/legend/parse-colour";
 import type { PassTrack } from "@/lib/map-state/pass-track";
@@ -45,11 +46,12 @@ export function turnUpright({ width, height, data }: Picture): Picture {
 
 /**
  * Lays a pass out in `columns` equal steps of distance. A column wholly inside one record's cell shows that reading; one over
- * several shows their mean, weighted by the length in it, as the map does from afar.
+ * several shows their mean, weighted by the length in it, or of names the one over the longest part, as the map does from afar.
  */
 export function gridOfPass(track: PassTrack, columns: number): Float32Array[] {
   const grid = Array.from({ length: track.rows }, () => new Float32Array(columns).fill(NaN));
   const columnM = track.lengthM / columns;
+  const codes = namedCodes(track.channel);
   if (!(columnM > 0)) return grid;
   let record = 0;
   for (let column = 0; column < columns; column += 1) {
@@ -57,23 +59,48 @@ export function gridOfPass(track: PassTrack, columns: number): Float32Array[] {
     const toM = fromM + columnM;
     while (record < track.records - 1 && track.endsM[record]! <= fromM) record += 1;
     for (let row = 0; row < track.rows; row += 1) {
-      grid[row]![column] = meanWithin(track, { record, row, fromM, toM });
+      const within = { record, row, fromM, toM };
+      grid[row]![column] = codes > 0 ? codeWithin(track, within, codes) : meanWithin(track, within);
     }
   }
   return grid;
 }
 
-function meanWithin(track: PassTrack, at: { record: number; row: number; fromM: number; toM: number }): number {
-  let sum = 0;
-  let weight = 0;
+interface Within {
+  /** The first record that may reach into it. */
+  record: number;
+  row: number;
+  fromM: number;
+  toM: number;
+}
+
+/** What each reading within a stretch covers of it. */
+function forEachWithin(track: PassTrack, at: Within, use: (value: number, overlapM: number) => void): void {
   for (let record = at.record; record < track.records; record += 1) {
     const startM = record > 0 ? track.endsM[record - 1]! : 0;
     if (startM >= at.toM) break;
     const value = track.values[record * track.rows + at.row]!;
     const overlap = Math.min(at.toM, track.endsM[record]!) - Math.max(at.fromM, startM);
-    if (overlap <= 0 || Number.isNaN(value)) continue;
-    sum += value * overlap;
-    weight += overlap;
+    if (overlap > 0 && !Number.isNaN(value)) use(value, overlap);
   }
+}
+
+function meanWithin(track: PassTrack, at: Within): number {
+  let sum = 0;
+  let weight = 0;
+  forEachWithin(track, at, (value, overlapM) => {
+    sum += value * overlapM;
+    weight += overlapM;
+  });
   return weight > 0 ? sum / weight : NaN;
+}
+
+/** The name over the longest part; of two alike the lower. */
+function codeWithin(track: PassTrack, at: Within, codes: number): number {
+  const lengthsM = new Array<number>(codes).fill(0);
+  forEachWithin(track, at, (value, overlapM) => {
+    lengthsM[value - 1]! += overlapM;
+  });
+  const most = Math.max(...lengthsM);
+  return most > 0 ? 1 + lengthsM.indexOf(most) : NaN;
 }

@@ -228,6 +228,8 @@ export const RowStatisticsItem = z.object({
   deviationZ: NullableNumber,
   flagged: z.boolean(),
   reason: z.string().nullable(),
+  /** Of a channel whose readings are names: share of distance under each, by rising code from 1. */
+  classShares: z.array(z.number()).optional(),
 });
 export type RowStatisticsItem = z.infer<typeof RowStatisticsItem>;
 export const RowStatisticsBody = z.object({

@@ -2,6 +2,7 @@ import { resolveChannelOrReason, type ResolvedChannel } from "@/lib/channels/res
 import { AppError } from "@/lib/errors";
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import { rowDistances } from "@/lib/rows/row-distances";
+import { describeNamedRows } from "@/lib/statistics/describe-named-rows";
 import { median } from "@/lib/statistics/median";
 import { middleReadings, type MiddleReadings } from "@/lib/statistics/middle-readings";
 import { scoreRows, Z_LIMIT, type RowScores } from "@/lib/statistics/row-deviation";
@@ -30,6 +31,8 @@ export interface RowStatisticsItem {
   deviationZ: number | null;
   flagged: boolean;
   reason: string | null;
+  /** Of a channel of names: share of distance under each, by rising code from 1. */
+  classShares?: number[];
 }
 
 export interface RowStatistics {
@@ -70,6 +73,8 @@ export function rowStatistics(
  * `scoreRows`; a row is flagged where it exceeds 3.5 either way and the deviation is more than 5 % of the median of all rows.
  */
 export function describeRows(placed: PlacedLog, channel: ResolvedChannel, distances: Float32Array): RowStatistics {
+  const { codeCount } = channel;
+  if (codeCount) return describeNamedRows(placed, channel, { distances, codeCount });
   const middles = channel.perRow ? middleReadings(channel.values, channel.rows) : null;
   const figures = rowFigures(placed, channel, { distances, middles });
   const described = figures.map(describeFigures);

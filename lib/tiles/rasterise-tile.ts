@@ -8,6 +8,8 @@ import type { TileAddress } from "@/lib/tiles/tile-address";
 export type DrawnChannel = Pick<LogChannel, "rows" | "perRow" | "values"> & {
   /** Values are names, not amounts: far out a pixel carries the least of those it covers, never a mean. */
   isCode?: boolean;
+  /** Of names numbered 1 .. so many: far out a pixel carries the one over the longest distance, of two alike the lower. */
+  codeCount?: number;
 };
 
 export interface TileRequest extends TileAddress {
@@ -45,6 +47,7 @@ export function rasteriseTile(index: TileIndex, channel: DrawnChannel, request: 
   const { z, y, size } = request;
   const values = new Float32Array(size * size).fill(NaN);
   const single = drawsSingleCells(index, z, size);
+  if (!single && channel.codeCount) return rasteriseCodes(index, channel, { request, codeCount: channel.codeCount });
   const weights = single ? null : new Float64Array(size * size);
   const sums = single ? null : new Float64Array(size * size);
   for (const x of columnsOf(index, request)) {
@@ -57,6 +60,38 @@ export function rasteriseTile(index: TileIndex, channel: DrawnChannel, request: 
   }
   if (weights && sums) writeMeans(values, sums, weights);
   return values;
+}
+
+/** A tile of names, far out: distance is added up name by name. */
+function rasteriseCodes(
+  index: TileIndex,
+  channel: DrawnChannel,
+  { request, codeCount }: { request: TileRequest; codeCount: number },
+): Float32Array {
+  const { z, y, size } = request;
+  const pixels = size * size;
+  const values = new Float32Array(pixels).fill(NaN);
+  const sums = new Float64Array(pixels);
+  const byCode = Array.from({ length: codeCount }, () => new Float64Array(pixels));
+  for (const x of columnsOf(index, request)) {
+    const canvas: TileCanvas = { size, pixelsPerWorld: 2 ** z * size, left: x * size, top: y * size, values };
+    forEachCell(index, channel, canvas, (corners, value, lengthM) => {
+      const weights = byCode[value - 1];
+      if (weights) accumulateCell({ canvas, corners, value, lengthM, weights, sums, keepsLeast: false });
+    });
+  }
+  for (let pixel = 0; pixel < pixels; pixel += 1) values[pixel] = heaviestCode(byCode, pixel);
+  return values;
+}
+
+/** The name of the greatest weight at a place, the lower of two alike; NaN where there is none. */
+export function heaviestCode(byCode: readonly ArrayLike<number>[], at: number): number {
+  let best = NaN;
+  let most = 0;
+  byCode.forEach((weights, index) => {
+    if (weights[at]! > most) [best, most] = [index + 1, weights[at]!];
+  });
+  return best;
 }
 
 /** The tile's column and, for a log over the antimeridian, the same column one turn of the globe away. */

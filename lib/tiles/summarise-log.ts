@@ -1,6 +1,6 @@
 import { histogramOf, type Histogram } from "@/lib/legend/class-edges";
 import type { Pass, PlacedLog } from "@/lib/logs/placed-log";
-import type { DrawnChannel } from "@/lib/tiles/rasterise-tile";
+import { heaviestCode, type DrawnChannel } from "@/lib/tiles/rasterise-tile";
 import { valueScale } from "@/lib/tiles/value-scale";
 import type { LogChannel } from "@/lib/logs/machine-log";
 
@@ -104,6 +104,10 @@ function fillPass({ placed, channel, pass, strip, values }: PassFill): void {
   const lengthM = ends.at(-1) ?? 0;
   const count = strip.to - strip.from;
   for (const [row, line] of values.entries()) {
+    if (channel.codeCount) {
+      fillCodes({ placed, channel, pass, strip, values }, { row, ends, codeCount: channel.codeCount });
+      continue;
+    }
     const sums = new Float64Array(count);
     const weights = new Float64Array(count);
     for (let step = 0; step < pass.records; step += 1) {
@@ -122,6 +126,23 @@ function fillPass({ placed, channel, pass, strip, values }: PassFill): void {
       if (weights[column]! > 0) line[strip.from + column] = sums[column]! / weights[column]!;
     }
   }
+}
+
+/** A row's columns of names: each carries the one over the longest part of it. */
+function fillCodes(
+  { channel, pass, strip, values }: PassFill,
+  { row, ends, codeCount }: { row: number; ends: Float64Array; codeCount: number },
+): void {
+  const count = strip.to - strip.from;
+  const sums = new Float64Array(count);
+  const byCode = Array.from({ length: codeCount }, () => new Float64Array(count));
+  for (let step = 0; step < pass.records; step += 1) {
+    const value = channel.values[(pass.first + step) * channel.rows + row]!;
+    const weights = byCode[value - 1];
+    const fromM = step > 0 ? ends[step - 1]! : 0;
+    if (weights) spreadOver({ sums, weights, value, fromM, toM: ends[step]!, columnM: (ends.at(-1) ?? 0) / count });
+  }
+  for (let column = 0; column < count; column += 1) values[row]![strip.from + column] = heaviestCode(byCode, column);
 }
 
 interface Spread {

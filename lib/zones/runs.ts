@@ -16,27 +16,35 @@ export interface RunOptions {
   breaks: readonly number[];
   /** 0: the plain runs of consecutive readings in one class. Else runs after smoothing, hysteresis and merging up to this length. */
   minLengthM: number;
+  /** Classes are names: nothing is smoothed between them, and a short run goes to its longer neighbour. */
+  isNamed?: boolean;
 }
 
 /** Missing readings over less than this take the class about them; a longer silence ends a run. */
 const BRIDGE_MISSING_M = 2;
 
 /** Splits a row's track into runs of one class. Missing readings belong to no class. */
-export function classRuns(track: RowTrack, { breaks, minLengthM }: RunOptions): ClassRun[] {
+export function classRuns(track: RowTrack, { breaks, minLengthM, isNamed = false }: RunOptions): ClassRun[] {
   if (minLengthM <= 0)
     return collectRuns(
       track,
       Array.from(track.values, (value) => plainClass(value, breaks)),
     );
-  const smoothed = smoothTrack(track.values, track.lengthsM, minLengthM / 2);
+  const smoothed = isNamed ? bridged(track.values) : smoothTrack(track.values, track.lengthsM, minLengthM / 2);
   const missing = longSilences(track);
-  const hysteresis = hysteresisOf(breaks);
+  const hysteresis = isNamed ? 0 : hysteresisOf(breaks);
   let current: number | null = null;
   const classes = Array.from(smoothed, (value, i) => {
     current = missing[i] === 1 || Number.isNaN(value) ? null : nextClass(current, value, breaks, hysteresis);
     return current;
   });
-  return mergeShortRuns(collectRuns(track, classes), minLengthM);
+  return mergeShortRuns(collectRuns(track, classes), { minLengthM, isNamed });
+}
+
+/** Values with missing ones like the one before. */
+function bridged(values: Float64Array): Float64Array {
+  let last = NaN;
+  return values.map((value) => (last = Number.isNaN(value) ? last : value));
 }
 
 function plainClass(value: number, breaks: readonly number[]): number | null {

@@ -16,7 +16,7 @@ export interface ZoneProperties {
   pass: number;
   /** 0 below the first class edge. */
   class: number;
-  /** From the raw readings: mean weighted by distance; null where the stretch holds none of its own. */
+  /** From the raw readings: mean weighted by distance; null where the stretch holds none of its own, and where readings are names. */
   mean: number | null;
   min: number | null;
   max: number | null;
@@ -57,6 +57,7 @@ export function buildZones(placed: PlacedLog, channelId: string, options: ZoneOp
   const runOptions = {
     breaks: [...options.breaks].sort((a, b) => a - b),
     minLengthM: options.minLengthM ?? DEFAULT_ZONE_LENGTH_M,
+    isNamed: channel.isCode,
     bbox: options.bbox,
   };
   const features = placed.passes.flatMap((pass) => passZones(source, pass, runOptions));
@@ -79,7 +80,7 @@ function passZones(source: TrackSource, pass: Pass, { bbox, ...runOptions }: Run
       .filter((run) => run.last >= near.first && run.first <= near.last)
       .map((run) => ({ run, ring: zoneRing({ placed, outline }, track, run) }))
       .filter(({ ring }) => !bbox || ringMeets(ring, bbox))
-      .map(({ run, ring }) => zoneFeature({ placed, outline }, track, { run, ring })),
+      .map(({ run, ring }) => zoneFeature({ placed, outline }, track, { run, ring, isNamed: runOptions.isNamed })),
   );
 }
 
@@ -104,7 +105,7 @@ function zoneRing({ placed, outline }: DrawnLog, track: RowTrack, run: ClassRun)
 function zoneFeature(
   { placed, outline }: DrawnLog,
   track: RowTrack,
-  { run, ring }: { run: ClassRun; ring: Position[] },
+  { run, ring, isNamed = false }: { run: ClassRun; ring: Position[]; isNamed?: boolean },
 ): Zone {
   return {
     type: "Feature",
@@ -113,7 +114,7 @@ function zoneFeature(
       row: track.row,
       pass: track.pass.pass,
       class: run.class,
-      ...readNumbers(track, run),
+      ...readNumbers(track, run, isNamed),
       areaM2: run.lengthM * placed.geometry.widthM[track.row - 1]!,
       startS: secondsAt(placed, outline.steps[run.first]!.record),
       endS: secondsAt(placed, outline.steps[run.last]!.record),
@@ -124,6 +125,7 @@ function zoneFeature(
 function readNumbers(
   { values, lengthsM }: RowTrack,
   run: ClassRun,
+  isNamed: boolean,
 ): Pick<ZoneProperties, "mean" | "min" | "max" | "n"> {
   let [sum, weight, plain, n] = [0, 0, 0, 0];
   let [min, max] = [Infinity, -Infinity];
@@ -137,7 +139,7 @@ function readNumbers(
     min = Math.min(min, value);
     max = Math.max(max, value);
   }
-  if (n === 0) return { mean: null, min: null, max: null, n };
+  if (n === 0 || isNamed) return { mean: null, min: null, max: null, n };
   return { mean: weight > 0 ? sum / weight : plain / n, min, max, n };
 }
 

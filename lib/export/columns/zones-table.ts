@@ -1,8 +1,10 @@
-import { resolveChannelOrReason } from "@/lib/channels/resolve-channel";
+import { resolveChannelOrReason, type ResolvedChannel } from "@/lib/channels/resolve-channel";
 import { AppError } from "@/lib/errors";
 import { featureBatch, type FeatureColumn, type FeatureTable } from "@/lib/export/columns/feature-column";
 import { unitEnding, unitWords } from "@/lib/export/columns/name-channel-column";
 import { BATCH_ROWS, type ExportBatch, type LogPart } from "@/lib/export/export-table";
+import { categoriesOf } from "@/lib/legend/categories";
+import { classOf } from "@/lib/legend/class-edges";
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import { buildZones, DEFAULT_ZONE_LENGTH_M, type ZoneProperties } from "@/lib/zones/zones";
 
@@ -28,7 +30,7 @@ export function zonesTable(outline: PlacedLog, chosen: ZonesChoice): ZonesTable 
   const choice = { channel: chosen.channel, breaks, minLengthM: chosen.minLengthM ?? DEFAULT_ZONE_LENGTH_M };
   // Asked of no records: only the refusal of a channel without rows matters here.
   buildZones({ ...outline, passes: [] }, choice.channel, choice);
-  return { level: "zones", geometry: "polygon", columns: zoneColumns(resolved.value.unit, breaks), choice };
+  return { level: "zones", geometry: "polygon", columns: zoneColumns(resolved.value, breaks), choice };
 }
 
 /** The zones of one part of the log. */
@@ -57,7 +59,10 @@ function add(seconds: number | null, laterS: number): number | null {
 
 type ZoneColumn = FeatureColumn<ZoneProperties>;
 
-function zoneColumns(siUnit: string, breaks: readonly number[]): ZoneColumn[] {
+function zoneColumns(
+  { id, unit: siUnit, isCode }: Pick<ResolvedChannel, "id" | "unit" | "isCode">,
+  breaks: readonly number[],
+): ZoneColumn[] {
   const ending = unitEnding(siUnit);
   const unit = unitWords(siUnit);
   const short = ending.length <= 3 && ending !== "" ? `_${ending.toUpperCase()}` : "";
@@ -76,11 +81,16 @@ function zoneColumns(siUnit: string, breaks: readonly number[]): ZoneColumn[] {
     whole("pass", "PASS", "Number of the pass, from 1 in time order.", (zone) => zone.pass),
     whole("row", "ROW", "Number of the row, 1 leftmost looking forward.", (zone) => zone.row),
     whole("class", "CLASS", "Class of the stretch; 0 below the first edge.", (zone) => zone.class),
+    ...(categoriesOf(id) ? [nameColumn(id, breaks)] : []),
     value("from", "Lower edge of the class; empty for the lowest.", (zone) => breaks[zone.class - 1] ?? null),
     value("to", "Upper edge of the class; empty for the highest.", (zone) => breaks[zone.class] ?? null),
-    value("mean", "Mean of the raw readings, weighted by distance.", (zone) => zone.mean),
-    value("min", "Smallest raw reading.", (zone) => zone.min),
-    value("max", "Largest raw reading.", (zone) => zone.max),
+    ...(isCode
+      ? []
+      : [
+          value("mean", "Mean of the raw readings, weighted by distance.", (zone) => zone.mean),
+          value("min", "Smallest raw reading.", (zone) => zone.min),
+          value("max", "Largest raw reading.", (zone) => zone.max),
+        ]),
     whole("readings", "READINGS", "Number of raw readings.", (zone) => zone.n),
     {
       ...measure("areaM2", "AREA_M2", "m2", "Distance travelled by the row times its width."),
@@ -89,6 +99,23 @@ function zoneColumns(siUnit: string, breaks: readonly number[]): ZoneColumn[] {
     { ...measure("startS", "START_S", "s", "Start, seconds since the log's first time."), read: (zone) => zone.startS },
     { ...measure("endS", "END_S", "s", "End, seconds since the log's first time."), read: (zone) => zone.endS },
   ];
+}
+
+/** What a class is called, where its edges hold a single name. */
+function nameColumn(channel: string, breaks: readonly number[]): ZoneColumn {
+  const names = categoriesOf(channel) ?? [];
+  return {
+    name: "name",
+    shortName: "NAME",
+    kind: "text",
+    unit: "",
+    width: Math.max(1, ...names.map(({ name }) => name.length)),
+    meaning: "Name of the class; empty where its edges hold several.",
+    read: (zone) => {
+      const within = names.filter(({ code }) => classOf(code, breaks) === zone.class);
+      return within.length === 1 ? within[0]!.name : null;
+    },
+  };
 }
 
 // kernel: a heading, its short form, unit and meaning

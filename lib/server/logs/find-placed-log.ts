@@ -3,6 +3,7 @@ import { withOrganisation } from "@/db/client";
 import { getLogOrThrow, type LogRow } from "@/db/queries/logs";
 import { resolveChannelOrReason, type ResolvedChannel } from "@/lib/channels/resolve-channel";
 import { AppError } from "@/lib/errors";
+import { isDerivedChannel } from "@/lib/logs/channel";
 import type { PlacedLog } from "@/lib/logs/placed-log";
 import type { Scope } from "@/lib/scope";
 import { loadAdjustedLog, stateKey, type LogState } from "@/lib/server/adjustments/load-adjusted-log";
@@ -41,7 +42,6 @@ export async function loadChannel(container: Container, log: LogState, channelId
     if (!resolved.ok) {
       throw new AppError("unprocessable", resolved.error, { detailCode: "channel_not_available" });
     }
-    const isLogged = !/^(resistance|rowSpeed|flags|deviation:.*)$/.test(channelId);
-    return { value: resolved.value, bytes: isLogged ? 1 : resolved.value.values.byteLength };
+    return { value: resolved.value, bytes: isDerivedChannel(channelId) ? resolved.value.values.byteLength : 1 };
   });
 }

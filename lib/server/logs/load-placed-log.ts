@@ -40,7 +40,9 @@ export async function loadPlacedLog(log: LogVersion, channel: string | "all" | n
 /** The logged channels that a channel, logged or derived, is made from. */
 export function loggedChannels(channel: string | null): string[] {
   if (channel === null || channel === "rowSpeed" || channel === "flags") return [];
-  if (channel === "resistance") return ["downforce", "margin"];
+  if (channel === "resistance" || channel === "marginByForce") return ["downforce", "margin"];
+  if (channel === "underTarget") return ["margin"];
+  if (channel === "atLimit") return ["downforce"];
   if (channel.startsWith("deviation:")) return loggedChannels(channel.slice("deviation:".length));
   return [channel];
 }

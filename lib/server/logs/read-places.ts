@@ -1,4 +1,5 @@
 import "server-only";
+import { givenClasses } from "@/lib/channels/given-classes";
 import type { ResolvedChannel } from "@/lib/channels/resolve-channel";
 import { reasonsAt } from "@/lib/cleaning/reasons-at";
 import { flagCodes } from "@/lib/cleaning/flags";
@@ -34,7 +35,8 @@ export async function readAt(
   const found = locateReading(await loadTileIndex(log), input.lon, input.lat);
   if (!found) throw new AppError("not_found", "No row of this log went over that place.", { detailCode: "no_reading" });
   const { record, row } = found;
-  const channels = await Promise.all(log.channels.map(({ id }) => loadChannel(container, log, id)));
+  const ids = [...log.channels.map(({ id }) => id), ...givenClasses(log.channels, placed.machine ?? {})];
+  const channels = await Promise.all(ids.map((id) => loadChannel(container, log, id)));
   const timeMs = placed.log.timeMs[record]!;
   return {
     pass: placed.passOf[record]!,

@@ -1,6 +1,7 @@
 import "server-only";
 import type { LogRow } from "@/db/queries/logs";
 import { AppError } from "@/lib/errors";
+import { categoriesOf } from "@/lib/legend/categories";
 import { areClassEdges } from "@/lib/legend/class-edges";
 import { classColours, isRampName, RAMP_NAMES, rampOf } from "@/lib/legend/ramps";
 import type { Scope } from "@/lib/scope";
@@ -80,6 +81,12 @@ async function drawPng(
   channel: Parameters<typeof valueScale>[0],
 ): Promise<Uint8Array<ArrayBuffer>> {
   if (!classes) return drawValueTile(pixels, valueScale(channel));
-  const ramp = classes.ramp && isRampName(classes.ramp) ? classes.ramp : rampOf(channelId);
-  return drawPaletteTile(pixels, classes.breaks, classColours(ramp, classes.breaks.length + 1));
+  return drawPaletteTile(pixels, classes.breaks, coloursOf(channelId, classes));
+}
+
+/** Of the ramp asked for; else those of the channel's names, or of its own ramp. */
+function coloursOf(channel: string, { breaks, ramp }: NonNullable<Breaks>): string[] {
+  const names = categoriesOf(channel);
+  if (!ramp && names?.length === breaks.length + 1) return names.map(({ colour }) => colour);
+  return classColours(ramp && isRampName(ramp) ? ramp : rampOf(channel), breaks.length + 1);
 }

@@ -1,9 +1,11 @@
+import type { ResolvedChannel } from "@/lib/channels/resolved-channel";
 import type { PlacedLog } from "@/lib/logs/placed-log";
-import type { LogChannel } from "@/lib/logs/machine-log";
 import { createPassTrack, type PassTrack } from "@/lib/map-state/pass-track";
 
+type Channel = Pick<ResolvedChannel, "id" | "unit" | "rows" | "values">;
+
 /** The track of one pass of a placed log, as the readings endpoint gives it. */
-export function trackOfLog(placed: PlacedLog, channel: LogChannel, pass: number): PassTrack {
+export function trackOfLog(placed: PlacedLog, channel: Channel, pass: number): PassTrack {
   const { first, records } = placed.passes[pass - 1]!;
   const within = Array.from({ length: records }, (_, step) => first + step);
   let distance = 0;

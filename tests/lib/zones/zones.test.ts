@@ -52,7 +52,7 @@ describe("mergeShortRuns", () => {
       { class: 1, first: 22, last: 39, lengthM: 9 },
       { class: 3, first: 40, last: 59, lengthM: 10 },
     ];
-    expect(mergeShortRuns(runs, 5)).toEqual([
+    expect(mergeShortRuns(runs, { minLengthM: 5 })).toEqual([
       { class: 1, first: 0, last: 39, lengthM: 20 },
       { class: 3, first: 40, last: 59, lengthM: 10 },
     ]);
