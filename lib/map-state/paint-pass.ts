@@ -75,13 +75,13 @@ interface Within {
 }
 
 /** What each reading within a stretch covers of it. */
-function forEachWithin(track: PassTrack, at: Within, use: (value: number, overlapM: number) => void): void {
+function forEachWithin(track: PassTrack, at: Within, tell: (value: number, overlapM: number) => void): void {
   for (let record = at.record; record < track.records; record += 1) {
     const startM = record > 0 ? track.endsM[record - 1]! : 0;
     if (startM >= at.toM) break;
     const value = track.values[record * track.rows + at.row]!;
     const overlap = Math.min(at.toM, track.endsM[record]!) - Math.max(at.fromM, startM);
-    if (overlap > 0 && !Number.isNaN(value)) use(value, overlap);
+    if (overlap > 0 && !Number.isNaN(value)) tell(value, overlap);
   }
 }
 
