@@ -1,46 +1,42 @@
 "use client";
 
-import { extent, ticks } from "d3-array";
 import { useRef, type KeyboardEvent } from "react";
 import { useBook, useBookState } from "@/components/field-book/field-book-context";
+import {
+  colourOf,
+  PointedRow,
+  RowMark,
+  RowNumbers,
+  TargetLine,
+  ValueAxis,
+} from "@/components/field-book/line-up/line-up-marks";
+import { plotOf } from "@/components/field-book/line-up/line-up-plot";
+import { ScoreStrip, ShareStrips } from "@/components/field-book/line-up/line-up-strips";
+import { ToolbarStrip } from "@/components/field-book/line-up/toolbar-strip";
+import { useShareStrips, useToolbarLayout } from "@/components/field-book/line-up/use-line-up-layout";
 import type { Classes } from "@/components/field-book/use-classes";
-import { useChannelUnits } from "@/components/field-book/use-channel-units";
 import { useSize } from "@/components/field-book/use-size";
-import { classOf } from "@/lib/legend/class-edges";
-import { pickLabels } from "@/lib/legend/pick-labels";
-import type { RowStatisticsBody, RowStatisticsItem } from "@/lib/schemas/logs";
-import { formatNumber } from "@/lib/units/format-quantity";
-
-const LEFT_PX = 44;
-const RIGHT_PX = 6;
-const TOP_PX = 16;
-/** Row numbers and, where there is one, the strip of shares under the plot. */
-const BOTTOM_PX = 24;
-const STRIP_PX = 34;
+import type { RowStatisticsBody } from "@/lib/schemas/logs";
 
 export interface LineUpChartProps {
   statistics: RowStatisticsBody;
   classes: Classes | null;
 }
 
-/** What the strip under the rows shows, where the channel has such a share. */
-export function shareOf(item: RowStatisticsItem): { share: number; words: string } | null {
-  if (item.shareUnderTarget !== null) return { share: item.shareUnderTarget, words: "under target" };
-  if (item.shareAtLimit !== null) return { share: item.shareAtLimit, words: "at the limit" };
-  if (item.shareContactLost !== null) return { share: item.shareContactLost, words: "contact lost" };
-  return null;
-}
-
-/** The rows as they stand on the toolbar, left to right looking forward: median, quartiles, 5th to 95th percentile. */
+/**
+ * The rows as they stand on the toolbar, left to right looking forward: median, quartiles, 5th to 95th percentile, how far each is
+ * from the others, shares of distance, and the toolbar itself.
+ */
 export function LineUpChart({ statistics, classes }: LineUpChartProps) {
   const box = useRef<HTMLDivElement>(null);
   const { width, height } = useSize(box);
   const { store } = useBook();
   const selected = useBookState((state) => state.row);
-  const { items } = statistics;
-  const hasStrip = items.some((item) => shareOf(item) !== null);
+  const { items, wheelTrackRows = [] } = statistics;
+  const layout = useToolbarLayout(items.length);
+  const shares = useShareStrips(statistics);
   const target = statistics.channel === "margin" ? (classes?.context.targetMarginN ?? null) : null;
-  const plot = plotOf(items, { width, height, hasStrip });
+  const plot = plotOf(items, { width, height, layout, shares });
   const onKeyDown = (event: KeyboardEvent) => {
     const by = { ArrowLeft: -1, ArrowRight: 1 }[event.key];
     if (by === undefined) return;
@@ -73,218 +69,12 @@ export function LineUpChart({ statistics, classes }: LineUpChartProps) {
             />
           ))}
           {target !== null ? <TargetLine plot={plot} value={target} /> : null}
+          <ScoreStrip plot={plot} items={items} />
+          <ShareStrips plot={plot} shares={shares} />
+          <ToolbarStrip plot={plot} layout={layout} wheelTrackRows={wheelTrackRows} />
           <RowNumbers plot={plot} items={items} selected={selected} />
         </svg>
       ) : null}
     </div>
-  );
-}
-
-interface Plot {
-  width: number;
-  height: number;
-  /** Pixels of the lower end of the values and of a value. */
-  floor: number;
-  yOf: (value: number) => number;
-  low: number;
-  high: number;
-  rowPx: number;
-  stripTop: number | null;
-  stripWords: string;
-}
-
-function plotOf(
-  items: readonly RowStatisticsItem[],
-  { width, height, hasStrip }: { width: number; height: number; hasStrip: boolean },
-): Plot | null {
-  const [low, high] = extent(items.flatMap((item) => [item.p05, item.p95]).filter((value) => value !== null));
-  if (low === undefined || high === undefined) return null;
-  const margin = (high - low || 1) * 0.06;
-  const floor = height - BOTTOM_PX - (hasStrip ? STRIP_PX : 0);
-  const yOf = (value: number) => TOP_PX + ((high + margin - value) / (high - low + 2 * margin)) * (floor - TOP_PX);
-  const first = items.map(shareOf).find((share) => share !== null);
-  return {
-    width,
-    height,
-    floor,
-    yOf,
-    low: low - margin,
-    high: high + margin,
-    rowPx: (width - LEFT_PX - RIGHT_PX) / (items.length || 1),
-    stripTop: hasStrip ? floor + 6 : null,
-    stripWords: first?.words ?? "",
-  };
-}
-
-function colourOf(item: RowStatisticsItem, classes: Classes | null): string {
-  if (!classes || item.p50 === null) return "#E4E0D5";
-  return classes.colours[classOf(item.p50, classes.edges)] ?? "#E4E0D5";
-}
-
-function ValueAxis({ plot, statistics }: { plot: Plot; statistics: RowStatisticsBody }) {
-  const { factor, symbol } = useChannelUnits(statistics.unit, statistics.channel);
-  const marks = ticks(plot.low / factor, plot.high / factor, Math.max(2, Math.floor((plot.floor - TOP_PX) / 34)));
-  const step = (marks[1] ?? 1) - (marks[0] ?? 0);
-  const decimals = Math.max(0, -Math.floor(Math.log10(step || 1) + 1e-9));
-  return (
-    <g className="tabular" fontSize={11}>
-      <text x={0} y={10} fill="#4A5261">
-        {symbol}
-      </text>
-      {marks.map((mark) => (
-        <g key={mark}>
-          <line
-            x1={LEFT_PX}
-            x2={plot.width}
-            y1={plot.yOf(mark * factor)}
-            y2={plot.yOf(mark * factor)}
-            stroke="#E4E0D5"
-          />
-          <text x={LEFT_PX - 8} y={plot.yOf(mark * factor) + 4} textAnchor="end" fill="#4A5261">
-            {formatNumber(mark, decimals)}
-          </text>
-        </g>
-      ))}
-      {plot.stripTop !== null ? (
-        <g>
-          <text x={LEFT_PX - 8} y={plot.stripTop + 9} textAnchor="end" fill="#4A5261">
-            100{"\u202f"}%
-          </text>
-          <line x1={LEFT_PX} x2={plot.width} y1={plot.stripTop + 22} y2={plot.stripTop + 22} stroke="#8C8778" />
-        </g>
-      ) : null}
-    </g>
-  );
-}
-
-/** What the machine was set to hold; left out where the rows never came near it. */
-function TargetLine({ plot, value }: { plot: Plot; value: number }) {
-  if (value < plot.low || value > plot.high) return null;
-  const y = plot.yOf(value);
-  return (
-    <g className="pointer-events-none" data-testid="target-line">
-      <line x1={LEFT_PX} x2={plot.width} y1={y} y2={y} stroke="#FFFFFF" strokeWidth={3} strokeOpacity={0.8} />
-      <line x1={LEFT_PX} x2={plot.width} y1={y} y2={y} stroke="#7D5A14" strokeWidth={1.5} strokeDasharray="4 3" />
-      <text x={plot.width} y={TOP_PX - 5} textAnchor="end" fontSize={11} fill="#7D5A14">
-        dashed: target
-      </text>
-    </g>
-  );
-}
-
-/** A shade behind the row pointed at; on its own, so that pointing does not draw every row again. */
-function PointedRow({ plot }: { plot: Plot }) {
-  const row = useBookState((state) => state.cursor?.row ?? null);
-  if (row === null) return null;
-  const x = LEFT_PX + (row - 1) * plot.rowPx;
-  return <rect x={x} y={0} width={plot.rowPx} height={plot.height} fill="#1E2430" fillOpacity={0.08} />;
-}
-
-interface RowMarkProps {
-  item: RowStatisticsItem;
-  plot: Plot;
-  colour: string;
-  selected: boolean;
-  onChoose: () => void;
-}
-
-function RowMark({ item, plot, colour, selected, onChoose }: RowMarkProps) {
-  const left = LEFT_PX + (item.row - 1) * plot.rowPx;
-  const middle = left + plot.rowPx / 2;
-  const boxWidth = Math.max(3, Math.min(16, plot.rowPx * 0.62));
-  const share = shareOf(item);
-  const words = `Row ${item.row}${item.flagged ? ", stands out" : ""}`;
-  return (
-    <g
-      id={`line-up-row-${item.row}`}
-      role="option"
-      aria-selected={selected}
-      aria-label={words}
-      data-row={item.row}
-      onClick={onChoose}
-      className="cursor-pointer"
-    >
-      <title>{words}</title>
-      <rect x={left} y={0} width={plot.rowPx} height={plot.height} fill="#1E2430" fillOpacity={0} />
-      {item.p05 !== null && item.p95 !== null && item.p50 !== null ? (
-        <g>
-          <line x1={middle} x2={middle} y1={plot.yOf(item.p95)} y2={plot.yOf(item.p05)} stroke="#6B7280" />
-          <rect
-            x={middle - boxWidth / 2}
-            y={plot.yOf(item.p75 ?? item.p50)}
-            width={boxWidth}
-            height={Math.max(2, plot.yOf(item.p25 ?? item.p50) - plot.yOf(item.p75 ?? item.p50))}
-            fill={colour}
-            stroke="#1E2430"
-            strokeWidth={0.75}
-          />
-          <line
-            x1={middle - boxWidth / 2 - 1}
-            x2={middle + boxWidth / 2 + 1}
-            y1={plot.yOf(item.p50)}
-            y2={plot.yOf(item.p50)}
-            stroke="#1E2430"
-            strokeWidth={2}
-          />
-        </g>
-      ) : null}
-      {share && plot.stripTop !== null ? (
-        <rect
-          x={middle - boxWidth / 2}
-          y={plot.stripTop + 22 - 22 * share.share}
-          width={boxWidth}
-          height={22 * share.share}
-          fill="#1E2430"
-        />
-      ) : null}
-      {item.flagged ? <rect x={middle - 4} y={1} width={8} height={8} fill="#9A4A2C" /> : null}
-      {selected ? (
-        <rect
-          x={left + 0.5}
-          y={1}
-          width={Math.max(4, plot.rowPx - 1)}
-          height={plot.height - 2}
-          fill="none"
-          stroke="#2F5D80"
-          strokeWidth={2}
-        />
-      ) : null}
-    </g>
-  );
-}
-
-function RowNumbers({
-  plot,
-  items,
-  selected,
-}: {
-  plot: Plot;
-  items: readonly RowStatisticsItem[];
-  selected: number | null;
-}) {
-  const every = [1, 2, 4, 6, 8, 12, 24].find((step) => step * plot.rowPx >= 20) ?? 48;
-  const isShown = ({ row, flagged }: RowStatisticsItem) => row === selected || flagged;
-  const weightOf = ({ row, flagged }: RowStatisticsItem) => (row === selected ? 3 : flagged ? 2 : 0);
-  const wanted = items.filter((item) => isShown(item) || item.row === 1 || item.row % every === 0);
-  const kept = pickLabels(
-    wanted.map((item) => ({ row: item.row, weight: weightOf(item) })),
-    { rowPx: plot.rowPx, leastPx: 20 },
-  );
-  return (
-    <g fontSize={11} textAnchor="middle" className="tabular pointer-events-none">
-      {items
-        .filter((item) => kept.includes(item.row))
-        .map((item) => (
-          <text
-            key={item.row}
-            x={LEFT_PX + (item.row - 0.5) * plot.rowPx}
-            y={plot.height - 8}
-            fill={item.row === selected ? "#2F5D80" : item.flagged ? "#9A4A2C" : "#4A5261"}
-            fontWeight={isShown(item) ? 600 : 400}
-          >
-            {item.row}
-          </text>
-        ))}
-    </g>
   );
 }

@@ -1,7 +1,9 @@
 "use client";
 
-import { LineUpChart, shareOf } from "@/components/field-book/line-up-chart";
+import { LineUpChart } from "@/components/field-book/line-up-chart";
+import { FlagRule } from "@/components/field-book/line-up/flag-rule";
 import type { Classes } from "@/components/field-book/use-classes";
+import { LineUpPicture } from "@/components/pictures/book-figures";
 import { channelWords } from "@/lib/legend/channel-words";
 import type { RowStatisticsBody } from "@/lib/schemas/logs";
 
@@ -13,22 +15,25 @@ export interface LineUpProps {
 
 /** The rows compared: chart, what its marks mean, and the way to the table. */
 export function LineUp({ statistics, classes, onTable }: LineUpProps) {
-  const share = statistics?.items.map(shareOf).find((found) => found !== null);
   return (
     <section aria-labelledby="line-up-title" className="flex h-full min-h-0 flex-col gap-1 px-4 pb-2 pt-3">
       <div className="flex items-baseline justify-between gap-2">
         <h2 id="line-up-title" className="text-section">
           Line-up
         </h2>
-        <button type="button" onClick={onTable} className="min-h-11 px-1 text-slate underline md:min-h-0">
-          As a table
-        </button>
+        <span className="flex items-center">
+          <LineUpPicture classes={classes} />
+          <button type="button" onClick={onTable} className="min-h-11 px-1 text-slate underline md:min-h-0">
+            As a table
+          </button>
+        </span>
       </div>
       <p className="text-table text-ink-soft">
         {statistics ? `${channelWords(statistics.channel).name}, ` : ""}left to right looking forward: median, middle
-        half, 5th to 95th percentile{share ? `; below, share of distance ${share.words}` : ""}.
+        half, 5th to 95th percentile; z against the other rows; % of distance.
+        {statistics ? <FlagRule statistics={statistics} /> : null}
       </p>
-      <div className="h-72 lg:h-auto lg:min-h-0 lg:flex-1">
+      <div data-figure="line-up" className="h-96 lg:h-auto lg:min-h-0 lg:flex-1">
         {statistics ? (
           <LineUpChart statistics={statistics} classes={classes} />
         ) : (

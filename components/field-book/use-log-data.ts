@@ -52,8 +52,9 @@ export function useTrack(log: LogVersion, channel: string, pass: number | null) 
   });
 }
 
-export function useRowStatistics(log: LogVersion, channel: string) {
+export function useRowStatistics(log: LogVersion, channel: string, isWanted = true) {
   return useQuery({
+    enabled: isWanted,
     queryKey: logVersionKey(log, "rows", channel),
     queryFn: () => fetchRowStatistics(log, channel),
     placeholderData: keepPreviousData,
