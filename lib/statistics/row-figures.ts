@@ -6,6 +6,7 @@ import {
   atLimitFromN,
   contactLostShare,
   distanceShare,
+  longestBelowM,
   longestStretch,
   underTargetBelowN,
 } from "@/lib/statistics/row-shares";
@@ -58,19 +59,17 @@ function figuresByTally(
   given: { distances: Float32Array; middles: MiddleReadings },
 ): RowFigures[] | null {
   const found = mapRowTallies(placed, channel, given, (tally) => figuresOfTally(placed, channel, tally));
-  const under = underTargetBelowN(placed, channel);
   if (!found) return null;
-  if (under === null && found.every(isComplete)) return found;
+  const under = underTargetBelowN(placed, channel);
+  // The order along the pass is no matter of a tally.
+  const longest = under === null ? null : longestBelowM(placed, channel, given.distances, under);
+  const figures = found.map((one, row) => ({ ...one, longestUnderTargetM: longest && longest[row]! }));
+  if (figures.every(isComplete)) return figures;
   const room = emptySeries(placed.log.records);
-  return mapRowSeries(placed, channel, given.distances, (series, row) => {
-    const figures = found[row - 1]!;
-    return {
-      ...figures,
-      // The order along the pass is no matter of a tally.
-      longestUnderTargetM: under === null ? null : longestUnderM(placed, series, under),
-      typicalDeviation: figures.typicalDeviation ?? medianOf(deviationSeries(series, given.middles, room)),
-    };
-  });
+  return mapRowSeries(placed, channel, given.distances, (series, row) => ({
+    ...figures[row - 1]!,
+    typicalDeviation: medianOf(deviationSeries(series, given.middles, room)),
+  }));
 }
 
 type TalliedFigures = Omit<RowFigures, "typicalDeviation"> & { typicalDeviation: number | null };

@@ -87,3 +87,33 @@ export function longestStretch(
   }
   return longest.lengthM < 0 ? null : longest;
 }
+
+/**
+ * Length of the longest such stretch below `below` of every row, in one walk over a channel with a reading a row of the machine;
+ * 0 for a row without any.
+ */
+// kernel: hot loop over every reading
+export function longestBelowM(
+  { passOf }: Pick<PlacedLog, "passOf">,
+  { values, rows }: Pick<ResolvedChannel, "values" | "rows">,
+  distances: Float32Array,
+  below: number,
+): Float64Array {
+  const longest = new Float64Array(rows);
+  const open = new Float64Array(rows);
+  const last = new Int32Array(rows).fill(-2);
+  for (let record = 0; record < passOf.length; record++) {
+    const pass = passOf[record]!;
+    if (pass === 0) continue;
+    const before = passOf[record - 1] === pass ? record - 1 : -1;
+    const from = record * rows;
+    for (let row = 0; row < rows; row++) {
+      if (!(values[from + row]! < below)) continue;
+      const lengthM = (last[row] === before ? open[row]! : 0) + distances[from + row]!;
+      open[row] = lengthM;
+      last[row] = record;
+      if (lengthM > longest[row]!) longest[row] = lengthM;
+    }
+  }
+  return longest;
+}
