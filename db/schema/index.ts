@@ -1,6 +1,7 @@
 export * from "@/db/schema/adjustments";
 export * from "@/db/schema/fields";
 export * from "@/db/schema/jobs";
+export * from "@/db/schema/legends";
 export * from "@/db/schema/log-files";
 export * from "@/db/schema/logs";
 export * from "@/db/schema/organisations";

@@ -19,6 +19,9 @@ export const PERMISSIONS = {
   "logs.remove": ["owner", "agronomist", "operator"],
   "recipes.read": ["owner", "agronomist", "researcher", "operator"],
   "recipes.write": ["owner", "agronomist", "operator"],
+  "legends.read": ["owner", "agronomist", "researcher", "operator", "viewer"],
+  /** Class edges for everyone. */
+  "legends.write": ["owner", "agronomist", "researcher"],
   "shares.read": ["owner", "agronomist"],
   "shares.write": ["owner", "agronomist"],
   "members.read": ["owner", "agronomist", "researcher"],

@@ -99,10 +99,11 @@ const BODIES: Record<string, unknown> = {
   "POST /api/v1/logs/{logId}/cleaning/undo": {},
   "POST /api/v1/logs/{logId}/delays": {},
   "PUT /api/v1/logs/{logId}/delays": { delaysS: { margin: 1.5 } },
+  "PUT /api/v1/legends": { channel: "margin", unit: "N", edges: [200, 400] },
   "PUT /api/v1/logs/{logId}/mapping": { columns: [{ name: "a", channel: "longitude", unit: "deg" }], shape: "single" },
 };
 const FIXED: Record<string, string> = { pass: "1", channel: "downforce", z: "15", x: "7000", y: "12000" };
-const QUERY: Record<string, string> = { channel: "downforce", breaks: "1", lon: "0", lat: "0" };
+const QUERY: Record<string, string> = { with: "log_other", channel: "downforce", breaks: "1", lon: "0", lat: "0" };
 
 function bodyOf(operation: Operation): unknown {
   const key = `${operation.method} ${operation.path}`;

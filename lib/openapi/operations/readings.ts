@@ -1,3 +1,4 @@
+import { legendOperations } from "@/lib/openapi/operations/legends";
 import { z } from "zod";
 import type { Method, Operation, OperationReply } from "@/lib/openapi/operation";
 import { CleanedQuery } from "@/lib/schemas/cleaning";
@@ -197,4 +198,5 @@ export const readingOperations: Operation[] = [
     replies: [{ status: 200, description: "The file", contentType: "text/csv" }],
     errors: ["conflict", "too_many_requests"],
   },
+  ...legendOperations,
 ];
