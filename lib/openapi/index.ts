@@ -1,5 +1,6 @@
 import { alignmentOperations } from "@/lib/openapi/operations/alignment";
 import { cleaningOperations } from "@/lib/openapi/operations/cleaning";
+import { comparisonOperations } from "@/lib/openapi/operations/comparison";
 import { documentOperations } from "@/lib/openapi/operations/document";
 import { fieldOperations } from "@/lib/openapi/operations/fields";
 import { logOperations } from "@/lib/openapi/operations/logs";
@@ -19,6 +20,7 @@ export const OPERATIONS: readonly Operation[] = [
   ...recipeOperations,
   ...readingOperations,
   ...passFigureOperations,
+  ...comparisonOperations,
   ...cleaningOperations,
   ...alignmentOperations,
   ...shareOperations,
