@@ -46,14 +46,16 @@ export function FieldSettings({ slug, fieldId }: { slug: string; fieldId: string
           trigger={<Button kind="careful">Delete this field</Button>}
           title={`Delete ${name}?`}
           confirmWords="Delete field and logs"
-          onConfirm={() => remove.mutate(fieldId, { onSuccess: () => router.push(`/${slug}/fields`) })}
+          onConfirm={() => {
+            remove({ id: fieldId, name });
+            router.push(`/${slug}/fields`);
+          }}
         >
           <p>
-            The field, its boundary, its shares and its {logCount} {logCount === 1 ? "log" : "logs"} go. This cannot be
-            taken back.
+            The field, its boundary, its shares and its {logCount} {logCount === 1 ? "log" : "logs"} go. You can undo it
+            for half a minute, then not any more.
           </p>
         </ConfirmDialog>
-        {remove.error ? <Notice state="act">{describeFailure(remove.error)}</Notice> : null}
       </aside>
     </div>
   );

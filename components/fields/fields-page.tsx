@@ -5,6 +5,7 @@ import { FieldsTable } from "@/components/fields/fields-table";
 import { useFieldPages } from "@/components/hooks/use-fields";
 import { buttonClass } from "@/components/ui/button";
 import { EmptyState } from "@/components/ui/empty-state";
+import { useWithoutRemoved } from "@/components/removals/use-removals";
 import { Loading } from "@/components/ui/loading";
 import { Notice } from "@/components/ui/notice";
 import { can, type Role } from "@/lib/access/permissions";
@@ -12,15 +13,16 @@ import { describeFailure } from "@/lib/api/api-problem";
 
 export function FieldsPage({ slug, role }: { slug: string; role: Role }) {
   const fields = useFieldPages();
+  const items = useWithoutRemoved(fields.items);
   if (fields.isPending) return <Loading what="the fields" />;
-  if (!fields.items)
+  if (!items)
     return (
       <Notice state="act" urgent>
         {describeFailure(fields.error)}
       </Notice>
     );
-  if (fields.items.length === 0) return <NoFields slug={slug} role={role} />;
-  return <FieldsTable slug={slug} fields={fields.items} mayUpload={can(role, "logs.upload")} more={fields.more} />;
+  if (items.length === 0) return <NoFields slug={slug} role={role} />;
+  return <FieldsTable slug={slug} fields={items} mayUpload={can(role, "logs.upload")} more={fields.more} />;
 }
 
 function NoFields({ slug, role }: { slug: string; role: Role }) {

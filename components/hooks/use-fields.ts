@@ -3,6 +3,7 @@
 import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import { queryKeys } from "@/components/hooks/query-keys";
 import { usePages } from "@/components/hooks/use-pages";
+import { useRemove } from "@/components/removals/use-removals";
 import { changeField, createField, deleteField, getField, putBoundary, putBoundaryFile } from "@/lib/api/client";
 import { fieldPage, listAll } from "@/lib/api/list-pages";
 import type { FieldInput, FieldPatch } from "@/lib/schemas/fields";
@@ -63,15 +64,18 @@ export function useChangeField(fieldId: string) {
   });
 }
 
+/** Takes a field and its logs away after a time for calling it off. */
 export function useDeleteField() {
-  const client = useQueryClient();
-  return useMutation({
-    mutationFn: (fieldId: string) => deleteField(fieldId, true),
-    // Not what is asked under the deleted field itself: that would only be refused.
-    onSuccess: () =>
-      Promise.all([
-        client.invalidateQueries({ queryKey: queryKeys.fields, exact: true }),
-        client.invalidateQueries({ queryKey: [...queryKeys.fields, "pages"], exact: true }),
-      ]),
-  });
+  const remove = useRemove();
+  return ({ id, name }: { id: string; name: string }) =>
+    remove({
+      id,
+      name,
+      remove: () => deleteField(id, true),
+      // Not what is asked under the deleted field itself: that would only be refused.
+      lists: [
+        { queryKey: queryKeys.fields, exact: true },
+        { queryKey: [...queryKeys.fields, "pages"], exact: true },
+      ],
+    });
 }

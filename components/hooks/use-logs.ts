@@ -3,6 +3,7 @@
 import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import { queryKeys } from "@/components/hooks/query-keys";
 import { usePages } from "@/components/hooks/use-pages";
+import { useRemove } from "@/components/removals/use-removals";
 import {
   cancelLog,
   changeLog,
@@ -57,11 +58,14 @@ export function useVerdict(logId: string | undefined, version: number, enabled =
 /** What can be done to a log of a field; each asks for the list again. */
 export function useLogActions(fieldId: string) {
   const client = useQueryClient();
+  const remove = useRemove();
   const onSettled = () => client.invalidateQueries({ queryKey: queryKeys.logs(fieldId) });
   return {
     cancel: useMutation({ mutationFn: cancelLog, onSettled }),
     retry: useMutation({ mutationFn: retryLog, onSettled }),
-    remove: useMutation({ mutationFn: deleteLog, onSettled }),
+    /** After a time for calling it off. */
+    remove: ({ id, name }: Pick<Log, "id" | "name">) =>
+      remove({ id, name, remove: () => deleteLog(id), lists: [{ queryKey: queryKeys.logs(fieldId) }] }),
   };
 }
 

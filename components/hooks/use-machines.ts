@@ -3,6 +3,7 @@
 import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import { queryKeys } from "@/components/hooks/query-keys";
 import { usePages } from "@/components/hooks/use-pages";
+import { useRemove } from "@/components/removals/use-removals";
 import { changeMachine, createMachine, deleteMachine } from "@/lib/api/client";
 import { listAll, machinePage } from "@/lib/api/list-pages";
 import type { Machine } from "@/lib/machines/machine";
@@ -45,10 +46,9 @@ export function useSaveMachine(machineId: string | null) {
   });
 }
 
+/** Takes a machine away after a time for calling it off. */
 export function useDeleteMachine() {
-  const client = useQueryClient();
-  return useMutation({
-    mutationFn: deleteMachine,
-    onSuccess: () => client.invalidateQueries({ queryKey: queryKeys.machines }),
-  });
+  const remove = useRemove();
+  return ({ id, name }: { id: string; name: string }) =>
+    remove({ id, name, remove: () => deleteMachine(id), lists: [{ queryKey: queryKeys.machines }] });
 }

@@ -7,6 +7,7 @@ import { Button, buttonClass } from "@/components/ui/button";
 import { DataTable, type DataColumn } from "@/components/ui/data-table";
 import { ConfirmDialog } from "@/components/ui/dialog";
 import { EmptyState } from "@/components/ui/empty-state";
+import { useWithoutRemoved } from "@/components/removals/use-removals";
 import { Loading } from "@/components/ui/loading";
 import { Notice } from "@/components/ui/notice";
 import { Quantity } from "@/components/units/quantity";
@@ -23,6 +24,7 @@ function widthM(machine: MachineReply): number {
 
 export function MachinesPage({ slug, mayWrite }: { slug: string; mayWrite: boolean }) {
   const machines = useMachinePages();
+  const items = useWithoutRemoved(machines.items);
   const remove = useDeleteMachine();
   const { parts, exact } = useUnits();
   const columns = useMemo<DataColumn<MachineReply>[]>(() => {
@@ -68,23 +70,18 @@ export function MachinesPage({ slug, mayWrite }: { slug: string; mayWrite: boole
     ];
   }, [parts, exact, slug]);
   if (machines.isPending) return <Loading what="the machines" />;
-  if (!machines.items)
+  if (!items)
     return (
       <Notice state="act" urgent>
         {describeFailure(machines.error)}
       </Notice>
     );
-  if (machines.items.length === 0) return <NoMachines slug={slug} mayWrite={mayWrite} />;
+  if (items.length === 0) return <NoMachines slug={slug} mayWrite={mayWrite} />;
   return (
     <div className="space-y-3">
-      {remove.error ? (
-        <Notice state="act" urgent>
-          {describeFailure(remove.error)}
-        </Notice>
-      ) : null}
       <DataTable
         caption="Machines of this organisation"
-        rows={machines.items}
+        rows={items}
         more={machines.more}
         columns={columns}
         rowId={(machine) => machine.id}
@@ -97,10 +94,11 @@ export function MachinesPage({ slug, mayWrite }: { slug: string; mayWrite: boole
                   trigger={<Button kind="quiet">Delete</Button>}
                   title={`Delete ${machine.name}?`}
                   confirmWords="Delete the machine"
-                  onConfirm={() => remove.mutate(machine.id)}
+                  onConfirm={() => remove(machine)}
                 >
                   <p>
-                    Logs already placed with it keep their own copy of it and do not change. This cannot be taken back.
+                    Logs already placed with it keep their own copy of it and do not change. You can undo it for half a
+                    minute, then not any more.
                   </p>
                 </ConfirmDialog>
               )

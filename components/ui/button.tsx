@@ -1,4 +1,4 @@
-import type { ButtonHTMLAttributes } from "react";
+import type { ButtonHTMLAttributes, Ref } from "react";
 import { classNames } from "@/components/ui/class-names";
 
 export type ButtonKind = "primary" | "plain" | "quiet" | "careful";
@@ -22,6 +22,7 @@ export function buttonClass(kind: ButtonKind = "plain", extra?: string): string 
 
 export interface ButtonProps extends ButtonHTMLAttributes<HTMLButtonElement> {
   kind?: ButtonKind;
+  ref?: Ref<HTMLButtonElement>;
 }
 
 export function Button({ kind = "plain", className, type = "button", ...rest }: ButtonProps) {

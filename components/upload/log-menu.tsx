@@ -55,9 +55,11 @@ export function LogMenu({ log, fieldPath, role, actions }: LogMenuProps) {
         onOpenChange={setAsking}
         title={`Remove ${log.name}?`}
         confirmWords="Remove the log"
-        onConfirm={() => actions.remove.mutate(log.id)}
+        onConfirm={() => actions.remove(log)}
       >
-        <p>The original file and everything worked out from it go. This cannot be taken back.</p>
+        <p>
+          The original file and everything worked out from it go. You can undo it for half a minute, then not any more.
+        </p>
         <p>Download the original first if you have no other copy.</p>
       </ConfirmDialog>
     </>

@@ -33,7 +33,7 @@ export interface LogTableProps {
 export function LogTable({ logs, fieldId, fieldPath, role, more }: LogTableProps) {
   const machines = useMachines(can(role, "machines.read"));
   const actions = useLogActions(fieldId);
-  const failure = actions.cancel.error ?? actions.retry.error ?? actions.remove.error;
+  const failure = actions.cancel.error ?? actions.retry.error;
   const columns = useMemo<DataColumn<Log>[]>(() => {
     const nameOf = new Map(machines.data?.items.map((machine) => [machine.id, machine.name]));
     return [

@@ -4,6 +4,7 @@ import { useLogPages } from "@/components/hooks/use-logs";
 import { EmptyState } from "@/components/ui/empty-state";
 import { Loading } from "@/components/ui/loading";
 import { Notice } from "@/components/ui/notice";
+import { useWithoutRemoved } from "@/components/removals/use-removals";
 import { LogTable } from "@/components/upload/log-table";
 import { LogUpload } from "@/components/upload/log-upload";
 import { can, type Role } from "@/lib/access/permissions";
@@ -24,6 +25,7 @@ export function lastSeedingMachine(logs: readonly Log[]): string | null {
 
 export function LogsPage({ fieldId, fieldPath, role, exampleHref }: LogsPageProps) {
   const logs = useLogPages(fieldId);
+  const items = useWithoutRemoved(logs.items);
   return (
     <div className="space-y-8">
       {can(role, "logs.upload") ? (
@@ -31,7 +33,7 @@ export function LogsPage({ fieldId, fieldPath, role, exampleHref }: LogsPageProp
           fieldId={fieldId}
           logsPath={`${fieldPath}/logs`}
           exampleHref={exampleHref}
-          lastMachineId={lastSeedingMachine(logs.items ?? [])}
+          lastMachineId={lastSeedingMachine(items ?? [])}
         />
       ) : null}
       {logs.isPending ? <Loading what="the logs" /> : null}
@@ -40,7 +42,7 @@ export function LogsPage({ fieldId, fieldPath, role, exampleHref }: LogsPageProp
           {describeFailure(logs.error)}
         </Notice>
       ) : null}
-      {logs.items?.length === 0 ? (
+      {items?.length === 0 ? (
         <EmptyState title="No log in this field yet">
           <p>
             A log is the file the drill or the combine wrote while it worked: where it was, several times a second, and
@@ -48,8 +50,8 @@ export function LogsPage({ fieldId, fieldPath, role, exampleHref }: LogsPageProp
           </p>
         </EmptyState>
       ) : null}
-      {logs.items && logs.items.length > 0 ? (
-        <LogTable logs={logs.items} more={logs.more} fieldId={fieldId} fieldPath={fieldPath} role={role} />
+      {items && items.length > 0 ? (
+        <LogTable logs={items} more={logs.more} fieldId={fieldId} fieldPath={fieldPath} role={role} />
       ) : null}
     </div>
   );

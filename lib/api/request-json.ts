@@ -58,6 +58,8 @@ function buildInit(request: JsonRequest): RequestInit {
           : JSON.stringify(request.body),
     signal: request.signal,
     credentials: "same-origin",
+    // A deletion asked for as the page is left still arrives.
+    keepalive: request.method === "DELETE",
   };
 }
 

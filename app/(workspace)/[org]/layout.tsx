@@ -1,6 +1,7 @@
 import type { ReactNode } from "react";
 import { requireScope } from "@/app/_server/require-scope";
 import { ActInOrganisation } from "@/components/hooks/act-in-organisation";
+import { RemovalsProvider } from "@/components/removals/use-removals";
 import { WorkspaceChapters } from "@/components/ui/workspace-chapters";
 import { WorkspaceHeader } from "@/components/ui/workspace-header";
 import { UnitsProvider } from "@/components/units/use-units";
@@ -26,11 +27,13 @@ export default async function WorkspaceLayout({ children, params }: WorkspaceLay
       >
         Skip to the page
       </a>
-      <WorkspaceHeader slug={organisation.slug} organisationName={organisation.name} person={person} />
-      <WorkspaceChapters slug={organisation.slug} role={scope.role} />
-      <main id="content" className="pb-24 md:pb-10 md:pl-[5.5rem] print:p-0">
-        {children}
-      </main>
+      <RemovalsProvider>
+        <WorkspaceHeader slug={organisation.slug} organisationName={organisation.name} person={person} />
+        <WorkspaceChapters slug={organisation.slug} role={scope.role} />
+        <main id="content" className="pb-24 md:pb-10 md:pl-[5.5rem] print:p-0">
+          {children}
+        </main>
+      </RemovalsProvider>
     </UnitsProvider>
   );
 }
