@@ -21,6 +21,9 @@ async function post(server: TestServer, cookie: string, path: string, body: unkn
   return made.id;
 }
 
+/** Sections and wings are of the drill's own number of rows. */
+const NO_SECTIONS = { sections: undefined, wings: undefined };
+
 /** A field and a machine of so many rows on a server that has none. */
 export async function openBench(
   { server, database }: Pick<BenchContext, "server" | "database">,
@@ -30,6 +33,6 @@ export async function openBench(
   const { rowCount, body } = machine;
   const name = `Bench of ${rowCount} rows`;
   const fieldId = await post(server, cookie, "/api/v1/fields", { name });
-  const machineId = await post(server, cookie, "/api/v1/machines", { ...body, name, rowCount });
+  const machineId = await post(server, cookie, "/api/v1/machines", { ...body, ...NO_SECTIONS, name, rowCount });
   return { server, database, cookie, fieldId, machineId };
 }
