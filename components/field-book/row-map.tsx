@@ -4,13 +4,15 @@ import type { Map as MapLibreMap } from "maplibre-gl";
 import { useState } from "react";
 import { useGroundOverlays } from "@/components/coverage/use-ground-overlays";
 import { CellMark } from "@/components/field-book/cell-mark";
-import { useBook, useBookState } from "@/components/field-book/field-book-context";
+import { useBook, useBookState, useLogVersion } from "@/components/field-book/field-book-context";
+import { MapWords } from "@/components/field-book/map-words";
 import type { Classes } from "@/components/field-book/use-classes";
 import { TapSheet } from "@/components/field-book/tap-sheet";
 import { useMapGround } from "@/components/field-book/use-map-ground";
 import { useMapMarks } from "@/components/field-book/use-map-marks";
 import { useMapPointer } from "@/components/field-book/use-map-pointer";
 import { useMapValues } from "@/components/field-book/use-map-values";
+import { useOverview } from "@/components/field-book/use-log-data";
 import type { BasemapConfig } from "@/components/map/basemap-config";
 import { MapCanvas } from "@/components/map/map-canvas";
 import { channelWords } from "@/lib/legend/channel-words";
@@ -33,6 +35,7 @@ export function RowMap({ basemap, bounds, boundary, classes, track, gentle }: Ro
   const { store, log } = useBook();
   const [map, setMap] = useState<MapLibreMap | null>(null);
   const channel = useBookState((state) => state.channel);
+  const { data: overview } = useOverview(useLogVersion(), channel);
   useMapGround(map, { bounds, boundary });
   useMapValues(map, classes);
   useGroundOverlays(map);
@@ -48,6 +51,7 @@ export function RowMap({ basemap, bounds, boundary, classes, track, gentle }: Ro
       gentle={gentle}
     >
       {map ? <CellMark map={map} /> : null}
+      {map ? <MapWords map={map} classes={classes} unit={overview?.unit ?? ""} /> : null}
       {gentle ? <TapSheet /> : null}
     </MapCanvas>
   );
