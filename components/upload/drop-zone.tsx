@@ -103,8 +103,7 @@ export function DropZone({
         accept={accept}
         multiple={multiple}
         aria-label={words}
-        className="sr-only"
-        tabIndex={-1}
+        hidden
         onChange={(event) => {
           const input = event.target;
           handOver(input.files, multiple, onFiles);

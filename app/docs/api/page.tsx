@@ -22,7 +22,7 @@ export default function ApiReference() {
         The same as a file: <a href="/api/v1/openapi.json">OpenAPI 3.1</a>. Make a personal token under Settings and
         send it like this:
       </p>
-      <pre className="sheet mt-3 overflow-x-auto p-3 text-table">
+      <pre tabIndex={0} className="sheet mt-3 overflow-x-auto p-3 text-table">
         {`curl -H "Authorization: Bearer $TOKEN" ${baseUrl}/api/v1/fields`}
       </pre>
       <nav aria-label="Sections" className="mt-6 flex flex-wrap gap-x-4">
