@@ -1,8 +1,8 @@
+import { quantityColumn } from "@/components/field-book/quantity-column";
 import { sayReason } from "@/components/field-book/say-reason";
 import type { DataColumn } from "@/components/ui/data-table";
 import type { RowStatisticsBody, RowStatisticsItem } from "@/lib/schemas/logs";
-import { displayUnit, type UnitSystem } from "@/lib/units/display-unit";
-import { formatQuantity, type FormattedQuantity } from "@/lib/units/format-quantity";
+import type { UnitSystem } from "@/lib/units/display-unit";
 
 type NumberField = {
   [Key in keyof RowStatisticsItem]-?: RowStatisticsItem[Key] extends number | null | undefined ? Key : never;
@@ -44,7 +44,9 @@ export function lineUpColumns(
   system: UnitSystem,
 ): DataColumn<RowStatisticsItem>[] {
   // What no row has, such as a share at the limit of a margin, would be a column of dashes.
-  const filled = FIELDS.filter(({ field }) => items.length === 0 || items.some((item) => (item[field] ?? null) !== null));
+  const filled = FIELDS.filter(
+    ({ field }) => items.length === 0 || items.some((item) => (item[field] ?? null) !== null),
+  );
   const numbers = filled.map(({ field, header, unit: own }) =>
     numberColumn({ field, header, unit: own ?? unit, channel, system }),
   );
@@ -69,42 +71,15 @@ interface NumberColumnOptions {
 }
 
 function numberColumn({ field, header, unit, channel, system }: NumberColumnOptions): DataColumn<RowStatisticsItem> {
-  // "m" of a depth is shown in millimetres, "m" of a distance is not.
-  const shownAs = DISTANCES.includes(field) ? "distance" : channel;
-  const { symbol, factor } = displayUnit(unit, system, shownAs);
-  const options = field === "n" ? { decimals: 0 } : field === "deviationZ" ? { decimals: 2 } : { channel: shownAs };
-  return {
+  return quantityColumn({
     id: field,
-    header: symbol ? `${header}, ${symbol}` : header,
-    numeric: true,
-    wideOnly: !ON_PHONE.includes(field),
-    value: (item) => {
-      const value = item[field] ?? null;
-      return value === null ? undefined : Number((value / factor).toPrecision(7));
-    },
-    cell: (item) => bareNumber(formatQuantity(item[field] ?? null, unit, system, options)),
-  };
-}
-
-/** The number alone: its unit stands in the header. */
-function bareNumber({ text, unit }: FormattedQuantity): string {
-  return unit === "" || !text.endsWith(unit) ? text : text.slice(0, -unit.length).trim();
-}
-
-/** The rows as tab-separated text, for pasting into a sheet. */
-export function lineUpText(
-  columns: readonly DataColumn<RowStatisticsItem>[],
-  items: readonly RowStatisticsItem[],
-): string {
-  const head = columns.map((column) => column.header).join("\t");
-  const lines = items.map((item) => columns.map((column) => guarded(column.value(item))).join("\t"));
-  return [head, ...lines].join("\n");
-}
-
-/** Text that a sheet would run as a formula gets an apostrophe before it. */
-function guarded(value: string | number | undefined): string {
-  if (value === undefined) return "";
-  if (typeof value === "number") return String(value);
-  const plain = value.replaceAll(/[\t\r\n]/g, " ");
-  return /^[=+\-@]/.test(plain) ? `'${plain}` : plain;
+    header,
+    value: (item) => item[field],
+    unit,
+    // "m" of a depth is shown in millimetres, "m" of a distance is not.
+    channel: DISTANCES.includes(field) ? "distance" : channel,
+    system,
+    decimals: field === "n" ? 0 : field === "deviationZ" ? 2 : undefined,
+    onPhone: ON_PHONE.includes(field),
+  });
 }

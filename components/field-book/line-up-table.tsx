@@ -1,54 +1,45 @@
 "use client";
 
-import { useMemo, useState } from "react";
+import { useMemo } from "react";
 import { useBook, useBookState } from "@/components/field-book/field-book-context";
-import { lineUpColumns, lineUpText } from "@/components/field-book/line-up-columns";
+import { groupColumns } from "@/components/field-book/line-up/group-columns";
+import { useToolbarLayout } from "@/components/field-book/line-up/use-line-up-layout";
+import { lineUpColumns } from "@/components/field-book/line-up-columns";
+import { TableSheet } from "@/components/field-book/table-sheet";
 import { Button } from "@/components/ui/button";
 import { DataTable } from "@/components/ui/data-table";
+import { tableText } from "@/components/ui/table-text";
 import { useUnits } from "@/components/units/use-units";
 import { channelWords } from "@/lib/legend/channel-words";
 import type { RowStatisticsBody } from "@/lib/schemas/logs";
+import { groupRows } from "@/lib/statistics/group-rows";
 
 export interface LineUpTableProps {
   statistics: RowStatisticsBody;
   onClose: () => void;
 }
 
-/** Everything the line-up knows, in the person's units: sort, find, copy, save as CSV. */
+/** Everything the line-up knows, row by row and by parts of the machine, in the person's units: sort, find, copy, save as CSV. */
 export function LineUpTable({ statistics, onClose }: LineUpTableProps) {
   const { system } = useUnits();
   const { store, log } = useBook();
   const selected = useBookState((state) => state.row);
-  const [copied, setCopied] = useState(false);
   const columns = useMemo(() => lineUpColumns(statistics, system), [statistics, system]);
   const name = channelWords(statistics.channel).name;
-  const copy = () => {
-    navigator.clipboard.writeText(lineUpText(columns, statistics.items)).then(
-      () => setCopied(true),
-      () => setCopied(false),
-    );
-  };
+  const fileName = `${statistics.channel.replaceAll(/[^a-zA-Z]+/g, "-")}-${log.name.replaceAll(/[^\w]+/g, "-")}`;
   return (
-    <section aria-labelledby="line-up-table-title" className="relative h-full overflow-auto bg-paper px-4 py-3">
-      <div className="mb-2 flex flex-wrap items-center justify-between gap-2">
-        <h2 id="line-up-table-title" className="text-section">
-          Line-up, {name.toLowerCase()}, weighted by distance
-        </h2>
-        <div className="flex items-center gap-2">
-          <span role="status" className="text-table text-ink-soft">
-            {copied ? "Copied." : ""}
-          </span>
-          <Button onClick={copy}>Copy</Button>
-          <Button onClick={onClose}>Close the table</Button>
-        </div>
-      </div>
+    <TableSheet
+      title={`Line-up, ${name.toLowerCase()}, weighted by distance`}
+      text={() => tableText(columns, statistics.items)}
+      onClose={onClose}
+    >
       <DataTable
         stickyFirst
         caption={`The rows compared by ${name.toLowerCase()}`}
         rows={statistics.items}
         columns={columns}
         rowId={(item) => String(item.row)}
-        fileName={`line-up-${statistics.channel.replaceAll(/[^a-zA-Z]+/g, "-")}-${log.name.replaceAll(/[^\w]+/g, "-")}`}
+        fileName={`line-up-${fileName}`}
         actions={(item) => (
           <Button
             kind="quiet"
@@ -59,6 +50,30 @@ export function LineUpTable({ statistics, onClose }: LineUpTableProps) {
             {item.row === selected ? "Shown" : "Show"}
           </Button>
         )}
+      />
+      <GroupTable statistics={statistics} fileName={`parts-${fileName}`} />
+    </TableSheet>
+  );
+}
+
+function GroupTable({ statistics, fileName }: { statistics: RowStatisticsBody; fileName: string }) {
+  const { system } = useUnits();
+  const layout = useToolbarLayout(statistics.items.length);
+  const { unit, channel } = statistics;
+  const groups = useMemo(() => groupRows(statistics, layout), [statistics, layout]);
+  const columns = useMemo(() => groupColumns({ groups, unit, channel, system }), [groups, unit, channel, system]);
+  if (groups.length === 0) return null;
+  return (
+    <section aria-labelledby="line-up-parts" className="mt-6">
+      <h3 id="line-up-parts" className="mb-2 text-section">
+        Wings, sections and wheel tracks
+      </h3>
+      <DataTable
+        caption="Parts of the machine compared"
+        rows={groups}
+        columns={columns}
+        rowId={(group) => group.id}
+        fileName={fileName}
       />
     </section>
   );

@@ -8,11 +8,10 @@ import { ChannelSwitch } from "@/components/field-book/channel-switch";
 import { useBook, useBookState, useLogVersion } from "@/components/field-book/field-book-context";
 import { FieldStrip } from "@/components/field-book/field-strip";
 import { Legend } from "@/components/field-book/legend";
-import { LineUp } from "@/components/field-book/line-up";
-import { LineUpTable } from "@/components/field-book/line-up-table";
 import { openingBounds } from "@/components/field-book/opening-bounds";
 import { PassHeading } from "@/components/field-book/pass-heading";
 import { RowMap } from "@/components/field-book/row-map";
+import { SidePanel, SideTable, type SideTableName } from "@/components/field-book/side-panel";
 import { UnrolledPass } from "@/components/field-book/unrolled-pass";
 import { useClasses } from "@/components/field-book/use-classes";
 import {
@@ -68,7 +67,7 @@ export function RowsLayout({ field, basemap, picker, logsHref }: RowsLayoutProps
         </div>
         {parts.table ? <div className="absolute inset-0 z-20">{parts.table}</div> : null}
       </div>
-      <div className="grid min-h-0 grid-rows-[minmax(0,1fr)_22rem] divide-y divide-rule border-l border-rule bg-sheet">
+      <div className="grid min-h-0 grid-rows-[minmax(0,1fr)_27rem] divide-y divide-rule border-l border-rule bg-sheet">
         <div className="divide-y divide-rule overflow-y-auto">
           {parts.verdict}
           {parts.coverage}
@@ -112,7 +111,7 @@ function useParts({ field, basemap, wide, logsHref }: PartsOptions) {
   const { log } = useBook();
   const logVersion = useLogVersion();
   const channel = useBookState((state) => state.channel);
-  const [asTable, setAsTable] = useState(false);
+  const [openTable, setOpenTable] = useState<SideTableName | null>(null);
   const { data: passes = [] } = usePasses(logVersion);
   const { data: overview } = useOverview(logVersion, channel);
   const { data: statistics } = useRowStatistics(logVersion, channel);
@@ -149,8 +148,8 @@ function useParts({ field, basemap, wide, logsHref }: PartsOptions) {
         <CleaningLink logsHref={logsHref} />
       </>
     ),
-    lineUp: <LineUp statistics={statistics} classes={classes} onTable={() => setAsTable(true)} />,
-    table: asTable && statistics ? <LineUpTable statistics={statistics} onClose={() => setAsTable(false)} /> : null,
+    lineUp: <SidePanel statistics={statistics} classes={classes} onTable={setOpenTable} />,
+    table: openTable ? <SideTable name={openTable} statistics={statistics} onClose={() => setOpenTable(null)} /> : null,
     passHeading: <PassHeading passes={passes} />,
     strip: <FieldStrip overview={overview} classes={classes} />,
     pass: (orientation: "across" | "upright") => (

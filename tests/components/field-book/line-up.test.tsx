@@ -2,8 +2,9 @@ import { act, screen, within } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
 import { beforeAll, describe, expect, it } from "vitest";
 import { LineUpChart } from "@/components/field-book/line-up-chart";
-import { lineUpColumns, lineUpText } from "@/components/field-book/line-up-columns";
+import { lineUpColumns } from "@/components/field-book/line-up-columns";
 import { LineUpTable } from "@/components/field-book/line-up-table";
+import { tableText } from "@/components/ui/table-text";
 import { csvCell } from "@/components/ui/write-csv";
 import { giveElementsSize, renderInBook, STATISTICS } from "./render-in-book";
 
@@ -59,7 +60,7 @@ describe("the line-up's table", () => {
 
   it("keeps missing apart from 0 in what is copied, and guards formulas", () => {
     const columns = lineUpColumns(STATISTICS, "metric");
-    const lines = lineUpText(columns, STATISTICS.items).split("\n");
+    const lines = tableText(columns, STATISTICS.items).split("\n");
     const header = lines[0]!.split("\t");
     const cells = lines[5]!.split("\t");
     // No row of a margin has a share at the limit: no column of dashes.
