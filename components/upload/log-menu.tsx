@@ -34,6 +34,9 @@ export function LogMenu({ log, fieldPath, role, actions }: LogMenuProps) {
         <MenuLink href={path}>How it was read</MenuLink>
         {can(role, "logs.map") ? <MenuLink href={`${path}/columns`}>What the columns mean</MenuLink> : null}
         {log.status === "ready" ? <MenuLink href={`${path}/cleaning`}>Cleaning rules</MenuLink> : null}
+        {log.status === "ready" ? (
+          <MenuLink href={`${fieldPath}/compare?b=${log.id}`}>Compare with another log</MenuLink>
+        ) : null}
         <MenuLink href={logOriginalPath(log.id)} download>
           Download the original file
         </MenuLink>
