@@ -7,6 +7,7 @@ export const ID_PREFIXES = {
   membership: "mem",
   field: "fld",
   machine: "mac",
+  note: "not",
   log: "log",
   recipe: "rec",
   share: "shr",

@@ -1,4 +1,5 @@
 export * from "@/db/schema/adjustments";
+export * from "@/db/schema/field-notes";
 export * from "@/db/schema/fields";
 export * from "@/db/schema/jobs";
 export * from "@/db/schema/legends";

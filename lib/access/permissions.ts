@@ -6,6 +6,8 @@ export type Role = (typeof ROLES)[number];
 export const PERMISSIONS = {
   "fields.read": ["owner", "agronomist", "researcher", "operator", "viewer"],
   "fields.write": ["owner", "agronomist"],
+  "notes.read": ["owner", "agronomist", "researcher", "operator", "viewer"],
+  "notes.write": ["owner", "agronomist", "researcher", "operator"],
   "machines.read": ["owner", "agronomist", "researcher", "operator"],
   "machines.write": ["owner", "agronomist"],
   "logs.read": ["owner", "agronomist", "researcher", "operator", "viewer"],

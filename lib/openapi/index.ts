@@ -5,6 +5,7 @@ import { documentOperations } from "@/lib/openapi/operations/document";
 import { fieldOperations } from "@/lib/openapi/operations/fields";
 import { logOperations } from "@/lib/openapi/operations/logs";
 import { machineOperations } from "@/lib/openapi/operations/machines";
+import { noteOperations } from "@/lib/openapi/operations/notes";
 import { passFigureOperations } from "@/lib/openapi/operations/pass-figures";
 import { peopleOperations } from "@/lib/openapi/operations/people";
 import { readingOperations } from "@/lib/openapi/operations/readings";
@@ -15,6 +16,7 @@ import type { Operation } from "@/lib/openapi/operation";
 /** Every operation of the API, in the order of the reference page. Routes without an entry fail a test. */
 export const OPERATIONS: readonly Operation[] = [
   ...fieldOperations,
+  ...noteOperations,
   ...machineOperations,
   ...logOperations,
   ...recipeOperations,

@@ -1,6 +1,6 @@
 import { z } from "zod";
 
-const Position = z
+export const Position = z
   .array(z.number().finite())
   .min(2)
   .max(4)

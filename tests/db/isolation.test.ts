@@ -29,6 +29,8 @@ async function fillBoth(): Promise<void> {
        values ($1, 'log_x', 0, 'a.csv', 1, 'aa')`,
       `insert into log_adjustments (organisation_id, log_id, revision, delays_s, cleaning, is_as_read)
        values ($1, 'log_x', 1, '{}', '{}', true)`,
+      `insert into field_notes (organisation_id, id, field_id, body, geometry)
+       values ($1, 'not_x', 'fld_x', 'a wet spot', '{"type":"Point","coordinates":[0,0]}')`,
       `insert into legends (organisation_id, channel, unit, edges) values ($1, 'margin', 'N', '{180,490}')`,
       `insert into recipes (organisation_id, id, name) values ($1, 'rec_x', 'r')`,
       `insert into recipe_versions (organisation_id, recipe_id, version, format, column_names, header_signature, mapping)

@@ -46,6 +46,8 @@ const recipeFile = {
 };
 const shareBody = { audience: "landowner", layers: ["boundary"], expiresAt: "2027-06-01T00:00:00Z" };
 
+const noteBody = { text: "A wet spot", geometry: { type: "Point", coordinates: [-98.005, 38.505] } };
+
 /** A thing of the owner's organisation that an address can name; a viewer was given its field. */
 const targets: Record<string, () => Promise<string>> = {
   fieldId: async () => {
@@ -85,6 +87,8 @@ const BODIES: Record<string, unknown> = {
   "PATCH /api/v1/fields/{fieldId}": { name: "Changed" },
   "PUT /api/v1/fields/{fieldId}/boundary": SQUARE,
   "POST /api/v1/fields/{fieldId}/shares": shareBody,
+  "POST /api/v1/fields/{fieldId}/notes": noteBody,
+  "PATCH /api/v1/fields/{fieldId}/notes/{noteId}": { text: "Changed" },
   "POST /api/v1/machines": combine,
   "PATCH /api/v1/machines/{machineId}": { name: "Changed" },
   "PATCH /api/v1/members/{memberId}": { role: "researcher" },
@@ -117,13 +121,18 @@ function bodyOf(operation: Operation): unknown {
 async function callOf(operation: Operation, actor: string): Promise<ApiCall> {
   let path: string = operation.path;
   for (const [, name] of operation.path.matchAll(/\{(\w+)\}/g)) {
-    const own = name === "tokenId" ? await tokenOf(actor) : await targets[name!]?.();
+    const own = name === "tokenId" ? await tokenOf(actor) : await (targets[name!]?.() ?? noteOf(name!, path));
     path = path.replace(`{${name}}`, own ?? FIXED[name!] ?? "unknown");
   }
   const asked = Object.keys(operation.query?.shape ?? {}).filter((name) => name in QUERY);
   if (asked.length > 0) path += `?${asked.map((name) => `${name}=${QUERY[name]}`).join("&")}`;
   const body = bodyOf(operation);
   return { method: operation.method, path, ...(body === undefined ? {} : { body }) };
+}
+
+/** A note is named with its field, which the address names already. */
+async function noteOf(name: string, path: string): Promise<string | undefined> {
+  return name === "noteId" ? make(path.replace(/\/\{noteId\}$/, ""), noteBody) : undefined;
 }
 
 /** A token belongs to one person: theirs, not the owner's. */
