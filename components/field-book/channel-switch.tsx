@@ -1,10 +1,13 @@
 "use client";
 
 import { ToggleGroup } from "radix-ui";
-import { useBook, useBookState } from "@/components/field-book/field-book-context";
-import { Menu, MenuItem } from "@/components/ui/menu";
+import { useBook, useBookState, useLogVersion } from "@/components/field-book/field-book-context";
+import { useOverview } from "@/components/field-book/use-log-data";
+import { Menu, MenuGroup, MenuItem } from "@/components/ui/menu";
+import { givenClasses } from "@/lib/channels/given-classes";
+import { categoriesOf } from "@/lib/legend/categories";
 import { channelWords, deviationOf } from "@/lib/legend/channel-words";
-import { PLACING_CHANNELS } from "@/lib/logs/channel";
+import { isDerivedChannel, PLACING_CHANNELS } from "@/lib/logs/channel";
 import type { Log } from "@/lib/schemas/logs";
 
 /** Shown first, in this order, where the log has them. */
@@ -36,14 +39,47 @@ export function channelsOf(log: Log): string[] {
     ...plain.filter((id) => !ranked.includes(id)),
     ...LAST.filter((id) => plain.includes(id)),
   ];
-  return [...ordered, ...ordered.filter((id) => perRow.includes(id)).map(deviationOf)];
+  const classes = log.machineId === null ? [] : givenClasses(log.channels, ANY_SETTINGS);
+  return [...ordered, ...classes, ...ordered.filter((id) => perRow.includes(id)).map(deviationOf)];
+}
+
+/** Masks and cross classes that a log may give: whether its machine's settings are known is told with its readings. */
+const ANY_SETTINGS = { targetMarginN: 0, marginDeadbandN: 0, maxDownforceN: 0 };
+
+/** The channels to choose from: without those that the machine of this log has no settings for. */
+function useChannels(): string[] {
+  const { log } = useBook();
+  const channel = useBookState((state) => state.channel);
+  const { data: settings } = useOverview(useLogVersion(), channel);
+  const given: readonly string[] = settings ? givenClasses(log.channels, settings) : [];
+  return channelsOf(log).filter((id) => !isClassChannel(id) || id === channel || given.includes(id));
+}
+
+function isClassChannel(id: string): boolean {
+  return categoriesOf(id) !== null;
+}
+
+interface ChannelGroup {
+  title: string;
+  ids: string[];
+}
+
+function groupsOf(ids: readonly string[]): ChannelGroup[] {
+  const compared = ids.filter((id) => id.startsWith("deviation:"));
+  const workedOut = ids.filter((id) => isDerivedChannel(id) && !compared.includes(id));
+  const logged = ids.filter((id) => !isDerivedChannel(id));
+  return [
+    { title: "Logged", ids: logged },
+    { title: "Worked out", ids: workedOut },
+    { title: "Against the other rows", ids: compared },
+  ].filter((group) => group.ids.length > 0);
 }
 
 /** Which reading is shown on the map, the pass and the line-up at once. */
 export function ChannelSwitch() {
-  const { store, log } = useBook();
+  const { store } = useBook();
   const channel = useBookState((state) => state.channel);
-  const channels = channelsOf(log);
+  const channels = useChannels();
   const buttons = channels.slice(0, BUTTONS);
   const rest = channels.slice(BUTTONS);
   return (
@@ -69,10 +105,14 @@ export function ChannelSwitch() {
             </button>
           }
         >
-          {rest.map((id) => (
-            <MenuItem key={id} onSelect={() => store.getState().chooseChannel(id)}>
-              {channelWords(id).name}
-            </MenuItem>
+          {groupsOf(rest).map(({ title, ids }) => (
+            <MenuGroup key={title} title={title}>
+              {ids.map((id) => (
+                <MenuItem key={id} onSelect={() => store.getState().chooseChannel(id)}>
+                  {channelWords(id).name}
+                </MenuItem>
+              ))}
+            </MenuGroup>
           ))}
         </Menu>
       ) : null}

@@ -76,7 +76,7 @@ export function EdgeFields({ edges, colours, shares, units, onChange }: EdgeFiel
 }
 
 /** "12 %"; a share that is not nothing, or not quite all, never reads as 0 or 100. */
-function shareText(share: number): string {
+export function shareText(share: number): string {
   const rounded = Math.round(share * 100);
   if (rounded === 0 && share > 0) return "<1\u202f%";
   return rounded === 100 && share < 1 ? ">99\u202f%" : `${rounded}\u202f%`;
@@ -120,7 +120,7 @@ function EdgeField({ label, value, units, onEdge, onStart }: EdgeFieldProps) {
 }
 
 /** A decimal comma and a true minus sign are read as a keyboard's own; NaN for what is no number. */
-function readEdge(typed: string): number {
+export function readEdge(typed: string): number {
   return Number(typed.trim().replace(",", ".").replace("\u2212", "-"));
 }
 
@@ -144,7 +144,7 @@ function whyNoEdge(typed: string, { index, next, edges, units }: TypedEdge): str
 }
 
 /** The unit's own decimals, one more for an edge between them, more where the edge is small; with a true minus sign. */
-function edgeText(value: number, decimals: number): string {
+export function edgeText(value: number, decimals: number): string {
   const isLarge = Math.abs(value) >= 10 ** (1 - decimals) || value === 0;
   const isBetween = Math.abs(value - Number(value.toFixed(decimals))) > 0.05 * 10 ** -decimals;
   const text = isLarge ? value.toFixed(isBetween ? decimals + 1 : decimals) : value.toPrecision(2);

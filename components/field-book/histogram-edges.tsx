@@ -16,13 +16,15 @@ export interface HistogramEdgesProps {
 /** Keys move an edge by this part of the whole range; with Shift ten times as far. */
 const KEY_STEP = 1 / 200;
 
-/** How often each value was read, in class colours; the edges between classes can be dragged or moved by keys. */
+/** How far rows went at each value, in class colours; the edges between classes can be dragged or moved by keys. */
 export function HistogramEdges({ histogram, edges, colours, units, onChange }: HistogramEdgesProps) {
   const box = useRef<HTMLDivElement>(null);
   const { width, height } = useSize(box);
-  const { minimum, maximum, counts } = histogram;
+  const { minimum, maximum } = histogram;
+  // Metres say more than readings: a machine that stands logs as often as one that runs.
+  const counts = histogram.distancesM ?? histogram.counts;
   const range = maximum - minimum || 1;
-  const most = Math.max(1, ...counts);
+  const most = Math.max(...counts) || 1;
   const binWidth = width / counts.length;
   const xOf = (value: number) => ((value - minimum) / range) * width;
   const moveTo = (index: number, value: number) => {
@@ -39,7 +41,7 @@ export function HistogramEdges({ histogram, edges, colours, units, onChange }: H
         height={height}
         className="absolute inset-0"
         role="img"
-        aria-label="How often each value was read"
+        aria-label={`${histogram.distancesM ? "Share of distance" : "Number of readings"} at each value, from ${units.format(minimum)} to ${units.format(maximum)}`}
       >
         {counts.map((count, bin) => {
           const value = minimum + ((bin + 0.5) / counts.length) * range;
@@ -60,6 +62,11 @@ export function HistogramEdges({ histogram, edges, colours, units, onChange }: H
           );
         })}
       </svg>
+      <div className="pointer-events-none absolute inset-x-0 top-full flex justify-between text-[11px] leading-4 text-ink-soft">
+        <span>{units.format(minimum)}</span>
+        <span>{histogram.distancesM ? "bars: share of distance" : "bars: readings"}</span>
+        <span>{units.format(maximum)}</span>
+      </div>
       {edges.map((edge, index) => (
         <EdgeHandle
           key={index}
@@ -96,6 +103,8 @@ function EdgeHandle({ index, left, value, histogram: { minimum, maximum }, units
     const by = { ArrowLeft: -1, ArrowDown: -1, ArrowRight: 1, ArrowUp: 1 }[event.key];
     if (by === undefined) return;
     event.preventDefault();
+    // Left and right belong to the edge while it has the focus, not to the pass.
+    event.stopPropagation();
     onMove(value + by * range * KEY_STEP * (event.shiftKey ? 10 : 1));
   };
   return (

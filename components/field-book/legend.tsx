@@ -1,36 +1,50 @@
 "use client";
 
-import { ChevronDown } from "lucide-react";
-import { useMemo } from "react";
+import { useMemo, useState } from "react";
+import { CategoryLegend } from "@/components/field-book/category-legend";
+import { ClassMenu } from "@/components/field-book/class-menu";
 import { EdgeFields } from "@/components/field-book/edge-fields";
-import { useBook, useBookState } from "@/components/field-book/field-book-context";
+import { useBook, useBookState, useLogVersion } from "@/components/field-book/field-book-context";
 import { HistogramEdges } from "@/components/field-book/histogram-edges";
+import { OwnNumbers } from "@/components/field-book/own-numbers";
 import { useChannelUnits } from "@/components/field-book/use-channel-units";
 import type { Classes } from "@/components/field-book/use-classes";
-import { Menu, MenuItem, MenuNote } from "@/components/ui/menu";
+import { useOverview } from "@/components/field-book/use-log-data";
 import { channelWords } from "@/lib/legend/channel-words";
-import { type EdgePreset, presetsFor, proposeEdges } from "@/lib/legend/propose-edges";
 import { sharesOfClasses } from "@/lib/legend/value-distribution";
 
-const PRESET_WORDS: Record<EdgePreset, string> = {
-  target: "Around the target",
-  "contact-load": "Published contact loads",
-  round: "Round numbers",
-  equal: "Equal steps",
-  quantile: "As much distance in each",
-};
-
-/** What the colours mean: class edges as numbers, with the readings behind them. */
+/** What the colours mean: class edges as numbers with the readings behind them, or the names that readings carry. */
 export function Legend({ classes, unit }: { classes: Classes | null; unit: string }) {
-  const { store } = useBook();
   const channel = useBookState((state) => state.channel);
-  const units = useChannelUnits(unit, channel);
   const shares = useMemo(() => {
     const distribution = classes?.context.distribution;
     return distribution ? sharesOfClasses(distribution, classes.edges) : [];
   }, [classes]);
-  if (!classes) return <div className="hatch h-20 opacity-60" role="status" aria-label="Counting the readings" />;
-  const onChange = (edges: number[]) => store.getState().setEdges(channel, edges);
+  if (!classes) return <NoLegendYet channel={channel} />;
+  const { name, meaning } = channelWords(channel);
+  if (classes.categories) {
+    return (
+      <section aria-label={`Legend: ${name}`} className="flex min-h-[4.25rem] flex-wrap items-start gap-x-5 gap-y-2">
+        <div className="w-full min-w-0 md:w-auto md:flex-[1_1_9rem]">
+          <h2 className="text-text font-semibold">{name}</h2>
+          <p className="text-table text-ink-soft">{meaning}</p>
+        </div>
+        <div className="w-full min-w-0 md:w-auto md:flex-[5_1_34rem]">
+          <CategoryLegend categories={classes.categories} shares={shares} />
+        </div>
+      </section>
+    );
+  }
+  return <EdgesLegend classes={classes} unit={unit} shares={shares} />;
+}
+
+function EdgesLegend({ classes, unit, shares }: { classes: Classes; unit: string; shares: readonly number[] }) {
+  const { store } = useBook();
+  const { channel } = classes.context;
+  const units = useChannelUnits(unit, channel);
+  const [isWriting, setIsWriting] = useState(false);
+  const onChange = (edges: number[] | null) => store.getState().setEdges(channel, edges);
+  const { edges, colours } = classes;
   return (
     <section aria-label={`Legend: ${channelWords(channel).name}`} className="flex flex-wrap items-end gap-x-5 gap-y-2">
       <div className="w-full min-w-0 md:w-auto md:flex-[1_1_9rem]">
@@ -38,49 +52,37 @@ export function Legend({ classes, unit }: { classes: Classes | null; unit: strin
           {channelWords(channel).name}
           {units.symbol ? <span className="font-normal text-ink-soft">, {units.symbol}</span> : null}
         </h2>
-        <Presets classes={classes} onChoose={(edges) => store.getState().setEdges(channel, edges)} />
+        <ClassMenu classes={classes} unit={unit} onChoose={onChange} onOwnNumbers={() => setIsWriting(true)} />
       </div>
-      <div className="h-[4.25rem] w-full min-w-0 md:w-auto md:flex-[2_1_14rem]">
+      <div className="mb-4 h-[4.25rem] w-full min-w-0 md:w-auto md:flex-[2_1_14rem]">
         <HistogramEdges
           histogram={classes.context.histogram}
-          edges={classes.edges}
-          colours={classes.colours}
+          edges={edges}
+          colours={colours}
           units={units}
           onChange={onChange}
         />
       </div>
       <div className="w-full min-w-0 md:w-auto md:flex-[3_1_20rem]">
-        <EdgeFields edges={classes.edges} colours={classes.colours} shares={shares} units={units} onChange={onChange} />
+        {isWriting ? (
+          <OwnNumbers edges={edges} units={units} onEdges={onChange} onClose={() => setIsWriting(false)} />
+        ) : (
+          <EdgeFields edges={edges} colours={colours} shares={shares} units={units} onChange={onChange} />
+        )}
       </div>
     </section>
   );
 }
 
-function Presets({ classes, onChoose }: { classes: Classes; onChoose: (edges: number[] | null) => void }) {
-  const presets = presetsFor(classes.context);
-  return (
-    <Menu
-      trigger={
-        <button
-          type="button"
-          className="inline-flex min-h-11 items-center gap-1 text-table text-slate underline md:min-h-7"
-        >
-          Classes <ChevronDown size={14} aria-hidden />
-        </button>
-      }
-    >
-      {presets.map((preset, index) => (
-        <MenuItem key={preset} onSelect={() => onChoose(index === 0 ? null : proposeEdges(preset, classes.context))}>
-          {PRESET_WORDS[preset]}
-        </MenuItem>
-      ))}
-      {presets.includes("contact-load") ? (
-        <MenuNote>
-          Contact loads: light, medium and heavy from 180, 490 and 890{"\u202f"}N.
-          <br />
-          Hanna, Steward and Aldinger 2010, Appl. Eng. Agric. 26(4).
-        </MenuNote>
-      ) : null}
-    </Menu>
-  );
+/** While readings are counted; or why this log cannot give the channel. */
+function NoLegendYet({ channel }: { channel: string }) {
+  const { error } = useOverview(useLogVersion(), channel);
+  if (error) {
+    return (
+      <p role="alert" className="min-h-20 text-text text-ink-soft">
+        {channelWords(channel).name} cannot be shown. {error.message}
+      </p>
+    );
+  }
+  return <div className="hatch h-20 opacity-60" role="status" aria-label="Counting the readings" />;
 }

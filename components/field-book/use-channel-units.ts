@@ -2,6 +2,7 @@
 
 import { useMemo } from "react";
 import { useUnits } from "@/components/units/use-units";
+import { categoryAt } from "@/lib/legend/categories";
 import { displayUnit } from "@/lib/units/display-unit";
 import { formatQuantity } from "@/lib/units/format-quantity";
 
@@ -14,6 +15,16 @@ export interface ChannelUnits {
   format: (valueSi: number | null | undefined) => string;
 }
 
+/** What a reading that is a name is called. */
+function nameOf(channel: string, value: number | null | undefined): string | null {
+  return typeof value === "number" ? (categoryAt(channel, value)?.name ?? null) : null;
+}
+
+/** Readings of 0 and 1, whose mean is a share. */
+function isMask(channel: string): boolean {
+  return channel === "underTarget" || channel === "atLimit";
+}
+
 /** How a channel's values are shown to this person. */
 export function useChannelUnits(unit: string, channel: string): ChannelUnits {
   const { system } = useUnits();
@@ -23,7 +34,9 @@ export function useChannelUnits(unit: string, channel: string): ChannelUnits {
       symbol,
       factor,
       decimals,
-      format: (valueSi) => formatQuantity(valueSi ?? null, unit, system, { channel }).text,
+      format: (valueSi) =>
+        nameOf(channel, valueSi) ??
+        formatQuantity(valueSi ?? null, isMask(channel) ? "fraction" : unit, system, { channel }).text,
     };
   }, [unit, channel, system]);
 }

@@ -22,6 +22,8 @@ export interface Histogram {
   minimum: number;
   maximum: number;
   counts: number[];
+  /** Metres of row in each bin, where known. */
+  distancesM?: number[];
 }
 
 /** Bins values; NaN is left out, values at the upper end fall in the last bin. */

@@ -8,9 +8,11 @@ import {
   type Histogram,
   quantileEdges,
 } from "@/lib/legend/class-edges";
+import { categoriesOf } from "@/lib/legend/categories";
+import { naturalEdges } from "@/lib/legend/natural-edges";
 import { equalDistanceEdges, type ValueDistribution } from "@/lib/legend/value-distribution";
 
-export const EDGE_PRESETS = ["target", "contact-load", "round", "equal", "quantile"] as const;
+export const EDGE_PRESETS = ["target", "contact-load", "round", "equal", "quantile", "natural"] as const;
 export type EdgePreset = (typeof EDGE_PRESETS)[number];
 
 export interface EdgeContext {
@@ -30,10 +32,12 @@ const CLASSES = 6;
 /** Tolerance where the machine's own is not known. Common practice, no source. */
 const GUESSED_DEADBAND_N = 100;
 
-/** Presets that make sense for a channel, the default first. */
-export function presetsFor({ channel, targetMarginN }: EdgeContext): EdgePreset[] {
-  if (channel !== "margin") return ["round", "equal", "quantile"];
-  return targetMarginN === null ? ["contact-load", "round", "equal", "quantile"] : [...EDGE_PRESETS];
+/** Presets that make sense for a channel, the default first; none for names, whose classes are fixed. */
+export function presetsFor({ channel, targetMarginN, distribution }: EdgeContext): EdgePreset[] {
+  if (categoriesOf(channel)) return [];
+  const anyChannel: EdgePreset[] = ["round", "equal", "quantile", ...(distribution ? (["natural"] as const) : [])];
+  if (channel !== "margin") return anyChannel;
+  return targetMarginN === null ? ["contact-load", ...anyChannel] : ["target", "contact-load", ...anyChannel];
 }
 
 /** The edges of a preset in SI, always rising and at least one. */
@@ -58,6 +62,8 @@ function edgesOf(preset: EdgePreset, context: EdgeContext): number[] {
       return context.distribution
         ? equalDistanceEdges(context.distribution, CLASSES)
         : quantileEdges(histogram, CLASSES);
+    case "natural":
+      return context.distribution ? naturalEdges(context.distribution, CLASSES) : [];
     case "round":
       return context.channel.startsWith("deviation:") ? roundAroundZero(context) : roundEdges(context);
   }

@@ -304,8 +304,13 @@ export const LogOverview = z.object({
   passes: z.array(z.object({ pass: z.number().int(), from: z.number().int(), to: z.number().int() })),
   /** `[[row 1 ...], ...]`: distance-weighted means of what each column covers. */
   values: z.array(z.array(NullableNumber)),
-  /** Equal bins of all readings. */
-  histogram: z.object({ minimum: z.number(), maximum: z.number(), counts: z.array(z.number().int()) }),
+  /** Equal bins of all readings: how many, and over how many metres of row. */
+  histogram: z.object({
+    minimum: z.number(),
+    maximum: z.number(),
+    counts: z.array(z.number().int()),
+    distancesM: z.array(z.number()).optional(),
+  }),
   /** Metres of row at each value, value = offset + code * step: what shares of distance are worked out from. */
   distribution: z.object({
     offset: z.number(),

@@ -12,14 +12,19 @@ export interface NaturalBreaks {
 /**
  * Fisher's exact grouping of one-dimensional values into `classes` classes with the least sum of squares within (Fisher
  * 1958, JASA 53:789-798), by dynamic programming over the sorted values: O(classes n^2), so give it a sample of at most a
- * few thousand. Fewer classes where there are fewer values; null without any.
+ * few thousand. Fewer classes where there are fewer values; null without any. With `weights`, one a value, above 0, `values` must be
+ * finite and rising, and every square counts by its weight.
  */
-export function naturalBreaks(values: ArrayLike<number>, classes: number): NaturalBreaks | null {
-  const sorted = sortFinite(values);
+export function naturalBreaks(
+  values: ArrayLike<number>,
+  classes: number,
+  weights?: ArrayLike<number>,
+): NaturalBreaks | null {
+  const sorted = weights ? Float64Array.from(values) : sortFinite(values);
   const n = sorted.length;
   const k = Math.min(classes, n);
   if (n === 0 || k < 1) return null;
-  const cost = spanCost(sorted);
+  const cost = spanCost(sorted, weights);
   let best = Float64Array.from({ length: n }, (_, end) => cost(0, end));
   const starts: Int32Array[] = [new Int32Array(n)];
   for (let c = 1; c < k; c++) {
@@ -38,17 +43,20 @@ export function naturalBreaks(values: ArrayLike<number>, classes: number): Natur
 }
 
 /** Sum of squares of sorted values `first .. end` about their mean, in constant time; centred first so that offsets cost no digits. */
-function spanCost(sorted: Float64Array): (first: number, end: number) => number {
+function spanCost(sorted: Float64Array, weights?: ArrayLike<number>): (first: number, end: number) => number {
   const middle = sorted[sorted.length >> 1]!;
   const sums = new Float64Array(sorted.length + 1);
   const squares = new Float64Array(sorted.length + 1);
+  const totals = new Float64Array(sorted.length + 1);
   sorted.forEach((value, i) => {
-    sums[i + 1] = sums[i]! + (value - middle);
-    squares[i + 1] = squares[i]! + (value - middle) ** 2;
+    const weight = weights ? weights[i]! : 1;
+    totals[i + 1] = totals[i]! + weight;
+    sums[i + 1] = sums[i]! + weight * (value - middle);
+    squares[i + 1] = squares[i]! + weight * (value - middle) ** 2;
   });
   return (first, end) => {
     const sum = sums[end + 1]! - sums[first]!;
-    return Math.max(0, squares[end + 1]! - squares[first]! - (sum * sum) / (end - first + 1));
+    return Math.max(0, squares[end + 1]! - squares[first]! - (sum * sum) / (totals[end + 1]! - totals[first]!));
   };
 }
 

@@ -1,4 +1,5 @@
 import "server-only";
+import { distanceHistogram } from "@/lib/legend/distance-histogram";
 import type { LogOverview } from "@/lib/schemas/logs";
 import type { Scope } from "@/lib/scope";
 import { stateKey } from "@/lib/server/adjustments/load-adjusted-log";
@@ -21,12 +22,15 @@ export async function readOverview(
   return cachedForLog(`${stateKey(log)}:overview:${input.channel}`, async () => {
     const channel = await loadChannel(container, log, input.channel);
     const { values, ...summary } = summariseLog(placed, channel, COLUMNS);
+    const distribution = weighValues(placed, channel);
+    const metres = distanceHistogram(distribution, summary.histogram, channel.resolution);
     const value: LogOverview = {
       ...summary,
       channel: channel.id,
       unit: channel.unit,
       values: values.map((line) => Array.from(line, writeNumber)),
-      distribution: weighValues(placed, channel),
+      histogram: { ...summary.histogram, distancesM: metres.map((binM) => Number(binM.toPrecision(5))) },
+      distribution,
       targetMarginN: placed.machine?.targetMarginN ?? null,
       marginDeadbandN: placed.machine?.marginDeadbandN ?? null,
       maxDownforceN: placed.machine?.maxDownforceN ?? null,
