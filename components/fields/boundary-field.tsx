@@ -1,6 +1,7 @@
 "use client";
 
 import { useState } from "react";
+import { BoundaryDrawing, type BoundaryDrawingProps } from "@/components/drawing/boundary-drawing";
 import { BoundarySketch } from "@/components/fields/boundary-sketch";
 import { readBoundaryBytes, readBoundaryText, type ReadBoundary } from "@/components/fields/read-boundary-text";
 import type { BoundaryChange } from "@/components/hooks/use-fields";
@@ -9,6 +10,7 @@ import { TextArea } from "@/components/ui/form-field";
 import { Notice } from "@/components/ui/notice";
 import { Quantity } from "@/components/units/quantity";
 import { DropZone } from "@/components/upload/drop-zone";
+import type { Boundary } from "@/lib/schemas/geometry";
 
 const KINDS = ".geojson,.json,.kml,.gpx,.zip";
 
@@ -25,13 +27,16 @@ export interface BoundaryFieldProps {
   /** `isWrong`: something was given that is no boundary. */
   onChange: (change: BoundaryChange, isWrong: boolean) => void;
   error?: string;
+  /** Where it can be drawn: the boundary there is and the ground to draw it on. */
+  drawing?: Omit<BoundaryDrawingProps, "onBoundary">;
 }
 
-/** A boundary from a file or from pasted GeoJSON, with its outline and area before anything is saved. */
-export function BoundaryField({ onChange, error }: BoundaryFieldProps) {
+/** A boundary from a file, drawn on a map or from pasted GeoJSON, with its outline and area before anything is saved. */
+export function BoundaryField({ onChange, error, drawing }: BoundaryFieldProps) {
   const [chosen, setChosen] = useState<Chosen>(NOTHING);
   const [problem, setProblem] = useState<string | null>(null);
   const [pasting, setPasting] = useState(false);
+  const [isDrawing, setDrawing] = useState(false);
 
   const choose = (next: Chosen, trouble: string | null) => {
     setChosen(next);
@@ -44,6 +49,10 @@ export function BoundaryField({ onChange, error }: BoundaryFieldProps) {
     if (!result.ok) return choose(NOTHING, result.error);
     const { geometry } = result.value;
     choose({ change: { kind: "geometry", geometry }, read: result.value, fileName: null }, null);
+  };
+  const takeDrawn = (geometry: Boundary | null) => {
+    if (geometry === null) return choose(NOTHING, null);
+    takeText(JSON.stringify(geometry));
   };
   const takeFile = async (file: File) => {
     const result = await readBoundaryBytes(new Uint8Array(await file.arrayBuffer()));
@@ -64,6 +73,12 @@ export function BoundaryField({ onChange, error }: BoundaryFieldProps) {
         accept={KINDS}
         onFiles={([file]) => void (file && takeFile(file))}
       />
+      {drawing && isDrawing ? <BoundaryDrawing {...drawing} onBoundary={takeDrawn} /> : null}
+      {drawing && !isDrawing ? (
+        <Button kind="quiet" className="-ml-3" onClick={() => setDrawing(true)}>
+          {drawing.start ? "Change it on a map" : "Draw it on a map"}
+        </Button>
+      ) : null}
       {pasting ? (
         <TextArea
           label="GeoJSON"

@@ -4,7 +4,7 @@ import { zodResolver } from "@hookform/resolvers/zod";
 import { useState, type ReactNode } from "react";
 import { useForm } from "react-hook-form";
 import { z } from "zod";
-import { BoundaryField } from "@/components/fields/boundary-field";
+import { BoundaryField, type BoundaryFieldProps } from "@/components/fields/boundary-field";
 import type { BoundaryChange } from "@/components/hooks/use-fields";
 import { Button } from "@/components/ui/button";
 import { TextField } from "@/components/ui/form-field";
@@ -30,12 +30,14 @@ export interface FieldFormProps {
   pending: boolean;
   failure: unknown;
   onSave: (values: FieldFormValues, boundary: BoundaryChange) => void;
+  /** Where the boundary can be drawn. */
+  drawing?: BoundaryFieldProps["drawing"];
   /** Further buttons beside the save button. */
   children?: ReactNode;
 }
 
 /** Name, farm, landowner and boundary of a field, new or known. */
-export function FieldForm({ start, saveWords, pending, failure, onSave, children }: FieldFormProps) {
+export function FieldForm({ start, saveWords, pending, failure, onSave, children, drawing }: FieldFormProps) {
   const [boundary, setBoundary] = useState<BoundaryChange>({ kind: "none" });
   const [isBoundaryWrong, setBoundaryWrong] = useState(false);
   // Words about an answer that has been given anew since are gone.
@@ -78,6 +80,7 @@ export function FieldForm({ start, saveWords, pending, failure, onSave, children
           setSettled(failure);
         }}
         error={refused?.messageFor("boundary")}
+        drawing={drawing}
       />
       {standing ? (
         <Notice state="act" urgent title="Not saved">

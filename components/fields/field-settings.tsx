@@ -4,6 +4,7 @@ import { useRouter } from "next/navigation";
 import { BoundarySketch } from "@/components/fields/boundary-sketch";
 import { FieldForm } from "@/components/fields/field-form";
 import { useChangeField, useDeleteField, useField } from "@/components/hooks/use-fields";
+import type { BasemapConfig } from "@/components/map/basemap-config";
 import { Button } from "@/components/ui/button";
 import { ConfirmDialog } from "@/components/ui/dialog";
 import { Loading } from "@/components/ui/loading";
@@ -11,8 +12,14 @@ import { Notice } from "@/components/ui/notice";
 import { Quantity } from "@/components/units/quantity";
 import { describeFailure } from "@/lib/api/api-problem";
 
+export interface FieldSettingsProps {
+  slug: string;
+  fieldId: string;
+  basemap: BasemapConfig;
+}
+
 /** Name, farm, landowner and boundary of the open field; and taking it away. */
-export function FieldSettings({ slug, fieldId }: { slug: string; fieldId: string }) {
+export function FieldSettings({ slug, fieldId, basemap }: FieldSettingsProps) {
   const router = useRouter();
   const field = useField(fieldId);
   const change = useChangeField(fieldId);
@@ -26,6 +33,7 @@ export function FieldSettings({ slug, fieldId }: { slug: string; fieldId: string
         <FieldForm
           key={field.data.updatedAt}
           start={{ name, farm, landowner }}
+          drawing={{ basemap, start: boundary, fieldId }}
           saveWords="Save changes"
           pending={change.isPending}
           failure={change.error}

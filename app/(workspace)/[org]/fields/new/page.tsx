@@ -1,4 +1,5 @@
 import type { Metadata } from "next";
+import { readBasemap } from "@/app/_server/basemap";
 import { requireScope } from "@/app/_server/require-scope";
 import { NewField } from "@/components/fields/new-field";
 import { PageBody } from "@/components/ui/page-body";
@@ -12,7 +13,7 @@ export default async function NewFieldRoute({ params }: { params: Promise<{ org:
   return (
     <PageBody>
       <PageHeading title="New field" />
-      <NewField slug={organisation.slug} />
+      <NewField slug={organisation.slug} basemap={readBasemap()} />
     </PageBody>
   );
 }

@@ -1,4 +1,5 @@
 import type { Metadata } from "next";
+import { readBasemap } from "@/app/_server/basemap";
 import { container } from "@/app/_server/container";
 import { orNotFound, requireScope } from "@/app/_server/require-scope";
 import { FieldBook } from "@/components/field-book/field-book";
@@ -26,11 +27,7 @@ async function findUnreadLog(scope: Scope, logId: string | string[] | undefined)
 export default async function RowsPage({ params, searchParams }: RowsPageProps) {
   const { org, fieldId } = await params;
   const { scope } = await requireScope(org);
-  const basemap = {
-    styleUrl: process.env.BASEMAP_STYLE_URL || null,
-    tilesUrl: process.env.BASEMAP_TILES_URL || null,
-    attribution: process.env.BASEMAP_ATTRIBUTION || null,
-  };
+  const basemap = readBasemap();
   const logsHref = `/${org}/fields/${fieldId}/logs`;
   const unread = await findUnreadLog(scope, (await searchParams).log);
   if (unread) {

@@ -1,4 +1,5 @@
 import type { Metadata } from "next";
+import { readBasemap } from "@/app/_server/basemap";
 import { requireScope } from "@/app/_server/require-scope";
 import { FieldSettings } from "@/components/fields/field-settings";
 import { PageBody } from "@/components/ui/page-body";
@@ -12,7 +13,7 @@ export default async function FieldSettingsRoute({ params }: { params: Promise<{
   return (
     <PageBody>
       <PageHeading title="About this field" />
-      <FieldSettings slug={organisation.slug} fieldId={fieldId} />
+      <FieldSettings slug={organisation.slug} fieldId={fieldId} basemap={readBasemap()} />
     </PageBody>
   );
 }

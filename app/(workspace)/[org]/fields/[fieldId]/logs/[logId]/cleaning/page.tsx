@@ -1,5 +1,6 @@
 import type { Metadata } from "next";
 import Link from "next/link";
+import { readBasemap } from "@/app/_server/basemap";
 import { requireScope } from "@/app/_server/require-scope";
 import { CleaningScreen } from "@/components/cleaning/cleaning-screen";
 import { buttonClass } from "@/components/ui/button";
@@ -15,11 +16,7 @@ interface CleaningRouteProps {
 export default async function CleaningRoute({ params }: CleaningRouteProps) {
   const { org, fieldId, logId } = await params;
   const { scope, organisation } = await requireScope(org);
-  const basemap = {
-    styleUrl: process.env.BASEMAP_STYLE_URL || null,
-    tilesUrl: process.env.BASEMAP_TILES_URL || null,
-    attribution: process.env.BASEMAP_ATTRIBUTION || null,
-  };
+  const basemap = readBasemap();
   return (
     <PageBody>
       <PageHeading

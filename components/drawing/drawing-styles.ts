@@ -1,0 +1,66 @@
+import { MAP_COLOURS } from "@/components/map/base-style";
+
+const CORNER = {
+  pointWidth: 5,
+  outlineWidth: 2,
+} as const;
+
+/** Shapes as drawn in a notebook: ink lines, straw ground, corners large enough for a thumb. */
+export const DRAWING_STYLES = {
+  polygon: {
+    fillColor: MAP_COLOURS.straw,
+    fillOpacity: 0.15,
+    outlineColor: MAP_COLOURS.ink,
+    outlineWidth: 2,
+    closingPointColor: MAP_COLOURS.straw,
+    closingPointWidth: 7,
+    closingPointOutlineColor: MAP_COLOURS.ink,
+    closingPointOutlineWidth: CORNER.outlineWidth,
+    snappingPointColor: MAP_COLOURS.slate,
+    snappingPointWidth: 6,
+    coordinatePointColor: MAP_COLOURS.sheet,
+    coordinatePointWidth: CORNER.pointWidth,
+    coordinatePointOutlineColor: MAP_COLOURS.ink,
+    coordinatePointOutlineWidth: CORNER.outlineWidth,
+  },
+  line: {
+    lineStringColor: MAP_COLOURS.clay,
+    lineStringWidth: 3,
+    closingPointColor: MAP_COLOURS.straw,
+    closingPointWidth: 7,
+    closingPointOutlineColor: MAP_COLOURS.ink,
+    closingPointOutlineWidth: CORNER.outlineWidth,
+    snappingPointColor: MAP_COLOURS.slate,
+    snappingPointWidth: 6,
+    coordinatePointColor: MAP_COLOURS.sheet,
+    coordinatePointWidth: CORNER.pointWidth,
+    coordinatePointOutlineColor: MAP_COLOURS.clay,
+    coordinatePointOutlineWidth: CORNER.outlineWidth,
+  },
+  point: {
+    pointColor: MAP_COLOURS.sheet,
+    pointWidth: 7,
+    pointOutlineColor: MAP_COLOURS.clay,
+    pointOutlineWidth: 3,
+  },
+  select: {
+    selectedPolygonColor: MAP_COLOURS.straw,
+    selectedPolygonFillOpacity: 0.15,
+    selectedPolygonOutlineColor: MAP_COLOURS.slate,
+    selectedPolygonOutlineWidth: 2,
+    selectedLineStringColor: MAP_COLOURS.slate,
+    selectedLineStringWidth: 3,
+    selectedPointColor: MAP_COLOURS.sheet,
+    selectedPointOutlineColor: MAP_COLOURS.slate,
+    selectedPointOutlineWidth: 3,
+    selectedPointWidth: 7,
+    selectionPointColor: MAP_COLOURS.sheet,
+    selectionPointWidth: 7,
+    selectionPointOutlineColor: MAP_COLOURS.slate,
+    selectionPointOutlineWidth: 2,
+    midPointColor: MAP_COLOURS.slate,
+    midPointWidth: 4,
+    midPointOutlineColor: MAP_COLOURS.sheet,
+    midPointOutlineWidth: 1,
+  },
+} as const;
