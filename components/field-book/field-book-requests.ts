@@ -2,13 +2,13 @@ import { requestJson } from "@/lib/api/request-json";
 import {
   LogOverview,
   PassList,
-  PassReadings,
   ReadingAt,
   RowStatisticsBody,
   TileJson,
   VerdictBody,
   type PassBody,
 } from "@/lib/schemas/logs";
+import { PackablePassReadings } from "@/lib/schemas/packed-readings";
 
 const ROOT = "/api/v1/logs";
 
@@ -39,8 +39,8 @@ function channelPath({ logId, cleaned = true }: ReadLog, answer: string, channel
   return `${ROOT}/${logId}/${answer}?channel=${encodeURIComponent(channel)}${cleaned ? "" : "&cleaned=false"}`;
 }
 
-export function fetchReadings(log: ReadLog, channel: string, pass: number): Promise<PassReadings> {
-  return requestJson(PassReadings, channelPath(log, `passes/${pass}/readings`, channel));
+export function fetchReadings(log: ReadLog, channel: string, pass: number): Promise<PackablePassReadings> {
+  return requestJson(PackablePassReadings, `${channelPath(log, `passes/${pass}/readings`, channel)}&values=packed`);
 }
 
 export function fetchRowStatistics(log: ReadLog, channel: string): Promise<RowStatisticsBody> {

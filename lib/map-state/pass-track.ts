@@ -1,5 +1,5 @@
 import { unwrapPositions } from "@/lib/geo/cut-at-antimeridian";
-import type { PassReadings } from "@/lib/schemas/logs";
+import type { PackablePassReadings } from "@/lib/schemas/packed-readings";
 
 /** The readings of one pass laid out for drawing and hit tests. Per record unless named per row; NaN is missing. */
 export interface PassTrack {
@@ -27,16 +27,28 @@ export interface PassTrack {
 
 const NUMBER_OR_NAN = (value: number | null | undefined) => value ?? NaN;
 
+function layOutLists({ records, rows, values: lists }: PackablePassReadings): Float32Array {
+  const values = new Float32Array(records * rows);
+  lists.forEach((row, index) => {
+    for (let record = 0; record < records; record += 1) values[record * rows + index] = NUMBER_OR_NAN(row[record]);
+  });
+  return values;
+}
+
+/** Base64 of little-endian Float32, as every machine that shows a page lays numbers out. */
+function unpackValues(text: string): Float32Array {
+  const letters = atob(text);
+  const bytes = new Uint8Array(letters.length);
+  for (let at = 0; at < letters.length; at += 1) bytes[at] = letters.charCodeAt(at);
+  return new Float32Array(bytes.buffer);
+}
+
 /**
  * Lays out what the readings endpoint answers. The first record's cell reaches back as far as the next one reaches on
  * (the weight rule of the statistics), so the unrolled pass begins there.
  */
-export function createPassTrack(readings: PassReadings): PassTrack {
-  const { records, rows } = readings;
-  const values = new Float32Array(records * rows);
-  readings.values.forEach((row, index) => {
-    for (let record = 0; record < records; record += 1) values[record * rows + index] = NUMBER_OR_NAN(row[record]);
-  });
+export function createPassTrack(readings: PackablePassReadings): PassTrack {
+  const { records } = readings;
   const leadM = (readings.distancesM[1] ?? 0) - (readings.distancesM[0] ?? 0);
   const startM = (readings.distancesM[0] ?? 0) - leadM;
   const endsM = Float64Array.from(readings.distancesM, (distance) => distance - startM);
@@ -45,9 +57,9 @@ export function createPassTrack(readings: PassReadings): PassTrack {
     firstRecord: readings.firstRecord ?? 0,
     channel: readings.channel,
     unit: readings.unit,
-    rows,
+    rows: readings.rows,
     records,
-    values,
+    values: readings.packedValues === undefined ? layOutLists(readings) : unpackValues(readings.packedValues),
     timesS: Float64Array.from(readings.timesS, NUMBER_OR_NAN),
     endsM,
     lengthM: endsM[records - 1] ?? 0,

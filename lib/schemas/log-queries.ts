@@ -7,6 +7,9 @@ export const ChannelQuery = z.object({ channel: z.string().min(1).max(120) });
 /** The same, and whether with the log's adjustments. */
 export const CleanedChannelQuery = ChannelQuery.extend(CleanedQuery.shape);
 
+/** How the readings of a pass come: a list a row, or packed into one text, a fifth of the work at both ends. */
+export const ReadingsQuery = CleanedChannelQuery.extend({ values: z.enum(["lists", "packed"]).default("lists") });
+
 const numberList = (text: string) => text.split(",").map((part) => (part.trim() === "" ? NaN : Number(part)));
 
 /** `west,south,east,north` in degrees. */

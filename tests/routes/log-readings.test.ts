@@ -11,6 +11,8 @@ import type {
   RowStatisticsBody,
   TileJson,
 } from "@/lib/schemas/logs";
+import { createPassTrack } from "@/lib/map-state/pass-track";
+import type { PackablePassReadings } from "@/lib/schemas/packed-readings";
 import { tileAt, pixelAt } from "@/lib/tiles/tile-address";
 import { confirmedMapping } from "@/tests/support/log-mapping";
 import { fixtureBytes, makeLogWorld, type LogWorld } from "@/tests/support/make-log-world";
@@ -80,6 +82,18 @@ describe("readings of a pass", () => {
         expect(Number.isNaN(value) ? null : value).toBe(json.values[row]![record]);
       }
     }
+  });
+
+  it("come packed within the JSON, the very same numbers", async () => {
+    const [lists, packed] = await Promise.all(
+      ["lists", "packed"].map((values) =>
+        ask<PackablePassReadings>(`passes/1/readings?channel=margin&values=${values}`),
+      ),
+    );
+    expect(packed!.values).toEqual([]);
+    const [fromLists, fromPacked] = [createPassTrack(lists!), createPassTrack(packed!)];
+    expect(fromPacked.values.some(Number.isNaN)).toBe(true);
+    expect(fromPacked).toEqual(fromLists);
   });
 
   it("of an absent pass or channel are refused in words", async () => {

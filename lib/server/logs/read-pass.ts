@@ -2,7 +2,7 @@ import "server-only";
 import { AppError } from "@/lib/errors";
 import type { Pass, PlacedLog } from "@/lib/logs/placed-log";
 import type { ResolvedChannel } from "@/lib/channels/resolve-channel";
-import type { PassReadings } from "@/lib/schemas/logs";
+import type { PackablePassReadings } from "@/lib/schemas/packed-readings";
 import type { Scope } from "@/lib/scope";
 import type { Container } from "@/lib/server/create-container";
 import { findPlacedLog, loadChannel } from "@/lib/server/logs/find-placed-log";
@@ -12,6 +12,8 @@ interface PassInput {
   cleaned?: boolean;
   pass: number;
   channel: string;
+  /** Readings as one packed text instead of lists. */
+  values?: "lists" | "packed";
 }
 
 interface FoundPass {
@@ -60,7 +62,7 @@ function positions(placed: PlacedLog, { first, records }: Pass): [number, number
 }
 
 /** All readings of a pass in one channel, with where and how the implement stood at each record. */
-export async function readPass(container: Container, scope: Scope, input: PassInput): Promise<PassReadings> {
+export async function readPass(container: Container, scope: Scope, input: PassInput): Promise<PackablePassReadings> {
   const { placed, pass, channel } = await findPass(container, scope, input);
   const { geometry, log } = placed;
   const started = log.timeMs.find((time) => Number.isFinite(time)) ?? NaN;
@@ -72,9 +74,7 @@ export async function readPass(container: Container, scope: Scope, input: PassIn
     timesS: part(log.timeMs, pass).map((time) => (time === null ? null : (time - started) / 1000)),
     distancesM: distancesM(placed, pass),
     positions: positions(placed, pass),
-    values: Array.from({ length: channel.rows }, (_, row) =>
-      Array.from({ length: pass.records }, (_, i) => orNull(channel.values[(pass.first + i) * channel.rows + row]!)),
-    ),
+    ...(input.values === "packed" ? packValues(channel, pass) : { values: listValues(channel, pass) }),
     pass: pass.pass,
     firstRecord: pass.first,
     headingsDeg: part(placed.headingDeg, pass),
@@ -86,6 +86,21 @@ export async function readPass(container: Container, scope: Scope, input: PassIn
   };
 }
 
+function listValues({ values, rows }: ResolvedChannel, { first, records }: Pass): (number | null)[][] {
+  return Array.from({ length: rows }, (_, row) =>
+    Array.from({ length: records }, (_, i) => orNull(values[(first + i) * rows + row]!)),
+  );
+}
+
+/** The readings of a pass as bytes of their own. */
+function copyRun({ values, rows }: ResolvedChannel, { first, records }: Pass): Uint8Array<ArrayBuffer> {
+  return new Uint8Array(Float32Array.from(values.subarray(first * rows, (first + records) * rows)).buffer);
+}
+
+function packValues(channel: ResolvedChannel, pass: Pass): { values: []; packedValues: string } {
+  return { values: [], packedValues: Buffer.from(copyRun(channel, pass).buffer).toString("base64") };
+}
+
 /** The same readings packed: little-endian Float32, record by record, row 1 first; NaN where nothing was logged. */
 export async function readPassPacked(
   container: Container,
@@ -93,6 +108,5 @@ export async function readPassPacked(
   input: PassInput,
 ): Promise<{ bytes: Uint8Array<ArrayBuffer>; records: number; rows: number; unit: string }> {
   const { pass, channel } = await findPass(container, scope, input);
-  const run = channel.values.slice(pass.first * channel.rows, (pass.first + pass.records) * channel.rows);
-  return { bytes: new Uint8Array(run.buffer), records: pass.records, rows: channel.rows, unit: channel.unit };
+  return { bytes: copyRun(channel, pass), records: pass.records, rows: channel.rows, unit: channel.unit };
 }

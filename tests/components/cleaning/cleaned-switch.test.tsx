@@ -55,7 +55,7 @@ describe("the line that says whether rules apply", () => {
         "tiles/margin/tiles.json?cleaned=false",
         "rows?channel=margin&cleaned=false",
         "overview?channel=margin&cleaned=false",
-        "passes/3/readings?channel=margin&cleaned=false",
+        "passes/3/readings?channel=margin&cleaned=false&values=packed",
         "verdict?cleaned=false",
       ]),
     );
