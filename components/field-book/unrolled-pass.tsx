@@ -11,6 +11,7 @@ import type { Classes } from "@/components/field-book/use-classes";
 import { usePassKeys } from "@/components/field-book/use-pass-keys";
 import { usePassPointer } from "@/components/field-book/use-pass-pointer";
 import { useSize } from "@/components/field-book/use-size";
+import { useTracksAtHand } from "@/components/field-book/use-tracks-at-hand";
 import { channelWords } from "@/lib/legend/channel-words";
 import { gridOfPass, paintGrid, turnUpright } from "@/lib/map-state/paint-pass";
 import type { PassTrack } from "@/lib/map-state/pass-track";
@@ -33,6 +34,7 @@ export function UnrolledPass({ track, classes, passes, flagged, orientation }: U
   const rows = track?.rows ?? 1;
   const scale: PassScale = { orientation, width, height, lengthM: track?.lengthM ?? 0, rows };
   const across = orientation === "across";
+  useTracksAtHand(across);
   const picture = usePassPicture({ track, classes, alongPx: across ? width : height, across });
   const pointer = usePassPointer(track, scale);
   const onKeyDown = usePassKeys(track, passes, () => setSpoken(true));
