@@ -1,7 +1,7 @@
 "use client";
 
-import Link from "next/link";
 import { useBook } from "@/components/field-book/field-book-context";
+import { QuietLink } from "@/components/ui/quiet-link";
 
 /** From the rows of a log to its rules, with whether they change anything. */
 export function CleaningLink({ logsHref }: { logsHref: string }) {
@@ -10,12 +10,12 @@ export function CleaningLink({ logsHref }: { logsHref: string }) {
   return (
     <p className="px-4 pb-3 text-table text-ink-soft">
       {isCleaned ? "This log’s rules leave readings out or move them. " : "No reading in a pass is left out. "}
-      <Link
+      <QuietLink
         href={`${logsHref}/${log.id}/cleaning`}
         className="inline-flex min-h-11 items-center text-slate underline md:min-h-6"
       >
         Cleaning rules
-      </Link>
+      </QuietLink>
     </p>
   );
 }

@@ -6,6 +6,8 @@ let loading: Promise<MapLibre> | null = null;
 export function loadMapLibre(): Promise<MapLibre> {
   loading ??= import("maplibre-gl").then((maplibre) => {
     maplibre.setWorkerUrl("/maplibre-gl-worker.mjs");
+    // The workers start while the page still asks what to show.
+    maplibre.prewarm();
     return maplibre;
   });
   return loading;

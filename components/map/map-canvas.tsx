@@ -142,7 +142,8 @@ async function openMap(
   map.touchZoomRotate.disableRotation();
   map.keyboard.disableRotation();
   map.getCanvas().setAttribute("aria-label", "Map. Arrow keys move it, plus and minus zoom.");
-  await new Promise<void>((resolve) => map.once("load", () => resolve()));
+  // Sources can be added from here on; waiting for the first picture would only put off the fetching of tiles.
+  await new Promise<void>((resolve) => map.once("style.load", () => resolve()));
   addOverlays(map);
   return map;
 }

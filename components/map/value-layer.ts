@@ -1,4 +1,5 @@
 import type { ExpressionSpecification, Map as MapLibreMap } from "maplibre-gl";
+import { afterPaint } from "@/components/map/after-paint";
 import { colourStops } from "@/lib/legend/colour-stops";
 import type { TileJson } from "@/lib/schemas/logs";
 
@@ -28,9 +29,29 @@ export interface ShownValues {
   beforeLayer: string;
 }
 
-/** Shows a channel's tiles in class colours, in place of the ones shown before. */
-export function showValues(map: MapLibreMap, { tileJson, colour, beforeLayer }: ShownValues): void {
-  hideValues(map);
+/** What is to be shown in place of what is, on maps where that is put off. */
+const awaited = new WeakMap<MapLibreMap, ShownValues>();
+const callOff = new WeakMap<MapLibreMap, () => void>();
+
+/** Work on the values waits until the frame being made is seen; the latest takes the place of what waited before. */
+function putOff(map: MapLibreMap, work: () => void): void {
+  if (!callOff.has(map)) map.once("remove", () => callOff.get(map)?.());
+  callOff.get(map)?.();
+  callOff.set(map, afterPaint(work));
+}
+
+/** Shows a channel's tiles in class colours, in place of the ones shown before: those stay until the page has answered. */
+export function showValues(map: MapLibreMap, shown: ShownValues): void {
+  if (!map.getLayer(LAYER)) return addValues(map, shown);
+  awaited.set(map, shown);
+  putOff(map, () => {
+    const latest = awaited.get(map) ?? shown;
+    hideValues(map);
+    addValues(map, latest);
+  });
+}
+
+function addValues(map: MapLibreMap, { tileJson, colour, beforeLayer }: ShownValues): void {
   map.addSource(SOURCE, {
     type: "raster-dem",
     encoding: "custom",
@@ -67,16 +88,20 @@ function markWhenPainted(map: MapLibreMap): void {
 }
 
 export function hideValues(map: MapLibreMap): void {
+  callOff.get(map)?.();
+  awaited.delete(map);
   if (map.getLayer(LAYER)) map.removeLayer(LAYER);
   if (map.getSource(SOURCE)) map.removeSource(SOURCE);
 }
 
-/** New colours for the tiles already here: no request. */
+/** New colours for the tiles already here, or for those awaited: no request. */
 export function recolourValues(map: MapLibreMap, colour: ExpressionSpecification): void {
-  if (map.getLayer(LAYER)) map.setPaintProperty(LAYER, "color-relief-color", colour);
+  const next = awaited.get(map);
+  if (next) awaited.set(map, { ...next, colour });
+  else if (map.getLayer(LAYER)) putOff(map, () => map.setPaintProperty(LAYER, "color-relief-color", colour));
 }
 
 /** The worker that fetches tiles has no page to be relative to, and a page may be open under another name of the same server. */
-function absoluteAddress(address: string): string {
+export function absoluteAddress(address: string): string {
   return address.replace(/^(?:https?:\/\/[^/]+)?(?=\/)/, window.location.origin);
 }

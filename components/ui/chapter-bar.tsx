@@ -1,9 +1,9 @@
 "use client";
 
-import Link from "next/link";
 import { usePathname } from "next/navigation";
 import type { ComponentType } from "react";
 import { classNames } from "@/components/ui/class-names";
+import { QuietLink } from "@/components/ui/quiet-link";
 
 export interface Chapter {
   href: string;
@@ -51,7 +51,7 @@ function ChapterLink({ chapter, current }: { chapter: Chapter; current: boolean 
   const Icon = chapter.icon;
   return (
     <li className="flex-1 md:flex-none">
-      <Link
+      <QuietLink
         href={chapter.href}
         aria-current={current ? "page" : undefined}
         className={classNames(
@@ -61,7 +61,7 @@ function ChapterLink({ chapter, current }: { chapter: Chapter; current: boolean 
       >
         <Icon size={20} strokeWidth={1.5} aria-hidden />
         {chapter.word}
-      </Link>
+      </QuietLink>
     </li>
   );
 }

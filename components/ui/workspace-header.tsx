@@ -1,11 +1,11 @@
 "use client";
 
-import Link from "next/link";
 import { useParams } from "next/navigation";
 import { Wordmark } from "@/components/ui/wordmark";
 import { PersonMenu, type Person } from "@/components/settings/person-menu";
 import { useField } from "@/components/hooks/use-fields";
 import { UnitSwitch } from "@/components/units/unit-switch";
+import { QuietLink } from "@/components/ui/quiet-link";
 
 export interface WorkspaceHeaderProps {
   slug: string;
@@ -23,9 +23,9 @@ export function WorkspaceHeader({ slug, organisationName, person }: WorkspaceHea
       <p className="min-w-0 flex-1 truncate text-text">
         {fieldId ? (
           <>
-            <Link href={`/${slug}/fields`} className="md:sr-only">
+            <QuietLink href={`/${slug}/fields`} className="md:sr-only">
               Fields
-            </Link>
+            </QuietLink>
             <span className="px-2 text-ink-faint md:hidden">/</span>
             <span className="font-semibold">{field.data?.name ?? ""}</span>
             {field.data?.farm ? <span className="text-ink-soft max-md:hidden"> · {field.data.farm}</span> : null}
