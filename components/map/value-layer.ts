@@ -1,5 +1,6 @@
 import type { ExpressionSpecification, Map as MapLibreMap } from "maplibre-gl";
 import { afterPaint } from "@/components/map/after-paint";
+import { FIRST_LAYER_OVER_VALUES } from "@/components/map/overlay-layers";
 import { colourStops } from "@/lib/legend/colour-stops";
 import type { TileJson } from "@/lib/schemas/logs";
 
@@ -71,7 +72,8 @@ function addValues(map: MapLibreMap, { tileJson, colour, beforeLayer }: ShownVal
       source: SOURCE,
       paint: { "color-relief-color": colour, resampling: "nearest" },
     },
-    beforeLayer,
+    // The layer named may have gone since it was asked for.
+    map.getLayer(beforeLayer) ? beforeLayer : FIRST_LAYER_OVER_VALUES,
   );
   markWhenPainted(map);
 }
