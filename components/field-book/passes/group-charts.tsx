@@ -31,9 +31,7 @@ function Comparison({ comparison, statistics }: ComparisonProps) {
   const speed = useChannelUnits("m/s", "speed");
   const distance = useChannelUnits("m", "distance");
   const shown = groups.map((group) => ({ group, ...shownValue(by, group) }));
-  const [low = 0, high = 1] = extent(
-    shown.flatMap(({ value, interval }) => [value, ...(interval ?? [])]).filter((value) => value !== null),
-  );
+  const [low, high] = scaleOf(statistics, by);
   return (
     <section aria-label={COMPARISON_WORDS[by]}>
       <h3 className="text-table font-semibold">
@@ -55,10 +53,35 @@ function Comparison({ comparison, statistics }: ComparisonProps) {
             <span className="tabular text-right">{signed(by, units.format(value), value)}</span>
           </li>
         ))}
+        {shown.length > 0 ? (
+          <li
+            aria-hidden
+            className="tabular grid grid-cols-[9rem_1fr_4.5rem] gap-2 text-[11px] leading-4 text-ink-soft"
+          >
+            <span className="text-right">scale</span>
+            <span className="flex justify-between whitespace-nowrap border-t border-edge">
+              <span>{units.format(low)}</span>
+              <span>{units.format(high)}</span>
+            </span>
+          </li>
+        ) : null}
       </ul>
       <p className="text-table text-ink-soft">{differenceWords(comparison, { units, speed }) ?? reason}</p>
     </section>
   );
+}
+
+/** One scale for all means, so that lengths can be held against each other; turns, which show differences, have their own. */
+function scaleOf({ comparisons }: PassStatisticsBody, by: PassComparison["by"]): [number, number] {
+  const alike = comparisons.filter((comparison) => (comparison.by === "turn") === (by === "turn"));
+  const values = alike.flatMap((comparison) =>
+    comparison.groups.flatMap((group) => {
+      const { value, interval } = shownValue(comparison.by, group);
+      return [value, ...(interval ?? [])];
+    }),
+  );
+  const [low = 0, high = 1] = extent(values.filter((value) => value !== null));
+  return [low, high];
 }
 
 function signed(by: PassComparison["by"], text: string, value: number | null): string {
@@ -98,7 +121,7 @@ interface DotAndLineProps {
 }
 
 function DotAndLine({ low, high, value, interval }: DotAndLineProps) {
-  const place = (at: number) => `${high > low ? 4 + (92 * (at - low)) / (high - low) : 50}%`;
+  const place = (at: number) => `${high > low ? (100 * (at - low)) / (high - low) : 50}%`;
   return (
     <svg className="h-6 w-full overflow-visible" aria-hidden="true">
       <line x1="0" x2="100%" y1="50%" y2="50%" stroke="#E4E0D5" />
