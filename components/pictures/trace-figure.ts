@@ -12,7 +12,7 @@ export function traceFigure({ element, map }: Figure): PictureBody | null {
   map?.redraw();
   const body = traceElement(root);
   if (body.widthPx === 0 || body.heightPx === 0) return null;
-  return map ? { ...body, svg: body.svg + drawNorth(body) } : body;
+  return map ? { ...body, svg: body.svg + drawNorth() } : body;
 }
 
 /** Dots of a picture for each of the page's: what paper needs to look sharp. */

@@ -2,9 +2,9 @@ import { svgNumber, textLine } from "@/lib/pictures/svg-text";
 
 const BOX_PX = { width: 22, height: 34 } as const;
 
-/** An arrow to the north in the lower left corner of a map's picture, on white so that it reads on any ground. */
-export function drawNorth({ heightPx }: { heightPx: number }): string {
-  const [left, top] = [8, heightPx - BOX_PX.height - 8];
+/** An arrow to the north in the upper left corner of a map's picture, on white so that it reads on any ground. */
+export function drawNorth(): string {
+  const [left, top] = [8, 8];
   const middle = left + BOX_PX.width / 2;
   const box = `x="${left}" y="${svgNumber(top)}" width="${BOX_PX.width}" height="${BOX_PX.height}"`;
   const arrow = `M${middle} ${svgNumber(top + 30)}v-15m-4 5l4 -5l4 5`;
