@@ -6,7 +6,7 @@ import type { LogVersion } from "@/components/field-book/use-log-data";
 import type { FieldBook, FieldBookStore } from "@/lib/map-state/field-book-store";
 import type { Log } from "@/lib/schemas/logs";
 
-interface Book {
+export interface Book {
   store: FieldBookStore;
   log: Log;
   logVersion: LogVersion;

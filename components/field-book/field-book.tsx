@@ -3,7 +3,11 @@
 import { useSearchParams } from "next/navigation";
 import { useState } from "react";
 import { BookExport } from "@/components/export/book-export";
+import { CompareButton } from "@/components/field-book/compare/compare-button";
+import { SecondBookProvider } from "@/components/field-book/compare/second-book";
+import { CopyLink } from "@/components/field-book/copy-link";
 import { FieldBookProvider } from "@/components/field-book/field-book-context";
+import { BookKeys } from "@/components/field-book/keys/book-keys";
 import { LogPicker } from "@/components/field-book/log-picker";
 import { NoLogYet } from "@/components/field-book/no-log-yet";
 import { RowsLayout, RowsSkeleton } from "@/components/field-book/rows-layout";
@@ -43,11 +47,15 @@ export function FieldBook({ fieldId, logsHref, basemap, role }: FieldBookProps) 
       key={`${log.id} ${log.version} ${log.revision ?? 0}`}
       field={field.data}
       log={log}
+      logs={ready}
       logsHref={logsHref}
       basemap={basemap}
       picker={
         <div className="flex min-w-0 items-center gap-2">
           <LogPicker logs={ready} chosen={log} onChoose={setChosenId} />
+          <CompareButton />
+          <CopyLink />
+          <BookKeys />
           {can(role, "logs.export") ? <BookExport /> : null}
         </div>
       }
@@ -58,12 +66,14 @@ export function FieldBook({ fieldId, logsHref, basemap, role }: FieldBookProps) 
 interface OpenLogProps {
   field: Field;
   log: Log;
+  /** Logs of the field that can be looked at. */
+  logs: readonly Log[];
   logsHref: string;
   basemap: BasemapConfig;
   picker: React.ReactNode;
 }
 
-function OpenLog({ field, log, logsHref, basemap, picker }: OpenLogProps) {
+function OpenLog({ field, log, logs, logsHref, basemap, picker }: OpenLogProps) {
   const search = useSearchParams();
   const [book] = useState(() => {
     const { log: addressLog, ...address } = readAddress(new URLSearchParams(search.toString()));
@@ -86,7 +96,9 @@ function OpenLog({ field, log, logsHref, basemap, picker }: OpenLogProps) {
   useAddress(book.store, log.id);
   return (
     <FieldBookProvider book={book}>
-      <RowsLayout field={field} basemap={basemap} picker={picker} logsHref={logsHref} />
+      <SecondBookProvider logs={logs}>
+        <RowsLayout field={field} basemap={basemap} picker={picker} logsHref={logsHref} />
+      </SecondBookProvider>
     </FieldBookProvider>
   );
 }

@@ -25,7 +25,7 @@ export function LogPicker({ logs, chosen, onChoose }: LogPickerProps) {
       <select
         value={chosen.id}
         onChange={(event) => onChoose(event.target.value)}
-        className="min-h-11 min-w-0 max-w-full truncate rounded border border-edge bg-sheet px-2 text-ink md:min-h-8 md:max-w-80"
+        className="min-h-11 min-w-0 max-w-full truncate rounded border border-edge bg-sheet px-2 text-ink md:min-h-8 md:max-w-52"
       >
         {logs.map((log) => (
           <option key={log.id} value={log.id}>

@@ -3,16 +3,22 @@
 import { useBookState } from "@/components/field-book/field-book-context";
 import { boxOf, type Box, type PassScale } from "@/components/field-book/pass-scale";
 import { recordSpanM, type PassTrack } from "@/lib/map-state/pass-track";
+import { recordAtMoment } from "@/lib/map-state/work-clock";
 
 /** What lies over the picture of a pass: brushed stretch, selected row, crosshair and the cell pointed at. */
 export function PassMarks({ track, scale }: { track: PassTrack; scale: PassScale }) {
   const row = useBookState((state) => state.row);
   const stretch = useBookState((state) => (state.stretch?.pass === track.pass ? state.stretch : null));
   const cursor = useBookState((state) => (state.cursor?.pass === track.pass ? state.cursor : null));
+  const timeS = useBookState((state) => state.timeS);
+  const workedM = timeS === null ? track.lengthM : workedLengthM(track, timeS);
   const whole: [number, number] = [0, track.lengthM];
   const allRows: [number, number] = [1, track.rows];
   return (
     <svg className="pointer-events-none absolute inset-0 size-full overflow-visible" aria-hidden="true">
+      {workedM < track.lengthM ? (
+        <rect {...boxOf(scale, allRows, [workedM, track.lengthM])} fill="#FFFFFF" data-testid="pass-veil" />
+      ) : null}
       {stretch ? (
         <Outline box={boxOf(scale, allRows, [stretch.fromM, stretch.toM])} fill="#2F5D80" fillOpacity={0.18} />
       ) : null}
@@ -29,6 +35,12 @@ export function PassMarks({ track, scale }: { track: PassTrack; scale: PassScale
       ) : null}
     </svg>
   );
+}
+
+/** How far along the pass the machine was at a moment. */
+function workedLengthM(track: PassTrack, timeS: number): number {
+  const record = recordAtMoment(track.timesS, timeS);
+  return record < 0 ? 0 : recordSpanM(track, record)[1];
 }
 
 interface OutlineProps {

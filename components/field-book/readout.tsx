@@ -1,5 +1,7 @@
 "use client";
 
+import { saySide } from "@/components/field-book/compare/say-side";
+import { useLogsCompared } from "@/components/field-book/compare/second-book";
 import { useChannelUnits } from "@/components/field-book/use-channel-units";
 import { useBook, useBookState, useLogVersion } from "@/components/field-book/field-book-context";
 import { trackQuery } from "@/components/field-book/use-log-data";
@@ -26,6 +28,7 @@ const FLAG_WORDS: Record<FlagCode, string> = {
 /** One line that always stands in the same place and names the reading pointed at. */
 export function Readout({ spoken }: { spoken: boolean }) {
   const cursor = useBookState((state) => state.cursor);
+  const side = useSideName();
   return (
     <p
       data-testid="readout"
@@ -34,6 +37,8 @@ export function Readout({ spoken }: { spoken: boolean }) {
     >
       {cursor ? (
         <ReadingWords cursor={cursor} />
+      ) : side !== null ? (
+        <span className="font-semibold text-ink">{side}</span>
       ) : (
         <>
           <span className="lg:hidden">Touch the map or the pass to read a value.</span>
@@ -44,6 +49,14 @@ export function Readout({ spoken }: { spoken: boolean }) {
       )}
     </p>
   );
+}
+
+/** What this side of a comparison is called; null where nothing is compared. */
+function useSideName(): string | null {
+  const { log } = useBook();
+  const channel = useBookState((state) => state.channel);
+  const others = useLogsCompared();
+  return others ? saySide(channel, log, others.find(({ id }) => id !== log.id) ?? log) : null;
 }
 
 /** Row, value, speed, time and place of a reading, as parts of a line. */
@@ -83,7 +96,7 @@ function TrackWords({ cursor, track }: { cursor: Cursor; track: PassTrack }) {
 }
 
 /** Clock time of the reader's own zone, which it names; where the log has no date, seconds since it began. */
-function clockOf(secondsIntoLog: number, startedAt: string | null): string {
+export function clockOf(secondsIntoLog: number, startedAt: string | null): string {
   if (Number.isNaN(secondsIntoLog)) return "no time";
   if (startedAt === null) return `${secondsIntoLog.toFixed(1)}\u202fs`;
   return new Date(Date.parse(startedAt) + secondsIntoLog * 1000).toLocaleTimeString("en-GB", { timeZoneName: "short" });

@@ -13,6 +13,7 @@ import { useMapMarks } from "@/components/field-book/use-map-marks";
 import { useMapPointer } from "@/components/field-book/use-map-pointer";
 import { useMapValues } from "@/components/field-book/use-map-values";
 import { useOverview } from "@/components/field-book/use-log-data";
+import { useMapTime } from "@/components/field-book/scrubber/use-map-time";
 import type { BasemapConfig } from "@/components/map/basemap-config";
 import { MapCanvas } from "@/components/map/map-canvas";
 import { channelWords } from "@/lib/legend/channel-words";
@@ -28,16 +29,24 @@ export interface RowMapProps {
   track: PassTrack | undefined;
   /** On a page that scrolls. */
   gentle: boolean;
+  /** What it is called where there are several. */
+  label?: string;
+  /** Called with the map once it can be drawn on, and with null when it is gone. */
+  onMap?: (map: MapLibreMap | null) => void;
+  /** Whether a tapped reading is named in a sheet; on a page that scrolls by default. */
+  hasTapSheet?: boolean;
 }
 
 /** The field from above: every row's readings in class colours, linked with the unrolled pass. */
-export function RowMap({ basemap, bounds, boundary, classes, track, gentle }: RowMapProps) {
+export function RowMap(props: RowMapProps) {
+  const { basemap, bounds, boundary, classes, track, gentle, label, onMap, hasTapSheet = gentle } = props;
   const { store, log } = useBook();
   const [map, setMap] = useState<MapLibreMap | null>(null);
   const channel = useBookState((state) => state.channel);
   const { data: overview } = useOverview(useLogVersion(), channel);
   useMapGround(map, { bounds, boundary });
   useMapValues(map, classes);
+  useMapTime(map);
   useGroundOverlays(map);
   useMapMarks(map, track);
   useMapPointer(map);
@@ -47,12 +56,16 @@ export function RowMap({ basemap, bounds, boundary, classes, track, gentle }: Ro
       bounds={bounds}
       view={store.getState().view}
       description={`${channelWords(channel).name} of ${log.counts.rows} rows in ${log.counts.passes} passes, north up. The unrolled pass, the line-up and its table give the same readings in numbers.`}
-      onMap={setMap}
+      label={label}
+      onMap={(ready) => {
+        setMap(ready);
+        onMap?.(ready);
+      }}
       gentle={gentle}
     >
       {map ? <CellMark map={map} /> : null}
       {map ? <MapWords map={map} classes={classes} unit={overview?.unit ?? ""} /> : null}
-      {gentle ? <TapSheet /> : null}
+      {hasTapSheet ? <TapSheet /> : null}
     </MapCanvas>
   );
 }

@@ -6,11 +6,14 @@ import { CleaningLink } from "@/components/cleaning/cleaning-link";
 import { CoveragePanel } from "@/components/coverage/coverage-panel";
 import { ChannelSwitch } from "@/components/field-book/channel-switch";
 import { useBook, useBookState, useLogVersion } from "@/components/field-book/field-book-context";
+import { ComparedLegends, ComparedPasses, ComparisonLine } from "@/components/field-book/compare/compared";
+import { MapArea } from "@/components/field-book/compare/map-area";
 import { FieldStrip } from "@/components/field-book/field-strip";
+import { ShowOnMap } from "@/components/field-book/keys/show-on-map";
 import { Legend } from "@/components/field-book/legend";
 import { openingBounds } from "@/components/field-book/opening-bounds";
 import { PassHeading } from "@/components/field-book/pass-heading";
-import { RowMap } from "@/components/field-book/row-map";
+import { SeedingTime } from "@/components/field-book/scrubber/seeding-time";
 import { SidePanel, SideTable, type SideTableName } from "@/components/field-book/side-panel";
 import { UnrolledPass } from "@/components/field-book/unrolled-pass";
 import { useClasses } from "@/components/field-book/use-classes";
@@ -54,6 +57,7 @@ export function RowsLayout({ field, basemap, picker, logsHref }: RowsLayoutProps
             {picker}
           </div>
           <CleanedSwitch />
+          <ComparisonLine />
         </div>
         <div className="min-h-0 border-b border-rule">{parts.map}</div>
         <div className="border-b border-rule px-4 py-2">{parts.legend}</div>
@@ -86,6 +90,7 @@ function NarrowRows({ parts, picker }: { parts: Parts; picker: ReactNode }) {
         {picker}
         <ChannelSwitch />
         <CleanedSwitch />
+        <ComparisonLine />
       </div>
       <div className="h-[26rem]">{parts.map}</div>
       <div className="px-4 py-3">{parts.legend}</div>
@@ -123,7 +128,7 @@ function useParts({ field, basemap, wide, logsHref }: PartsOptions) {
   const [bounds] = useState<Bounds>(() => openingBounds(field, log));
   return {
     map: (
-      <RowMap
+      <MapArea
         basemap={basemap}
         bounds={bounds}
         boundary={field.boundary}
@@ -132,7 +137,11 @@ function useParts({ field, basemap, wide, logsHref }: PartsOptions) {
         gentle={!wide}
       />
     ),
-    legend: <Legend classes={classes} unit={overview?.unit ?? ""} />,
+    legend: (
+      <ComparedLegends classes={classes}>
+        <Legend classes={classes} unit={overview?.unit ?? ""} />
+      </ComparedLegends>
+    ),
     verdict: (
       <VerdictPanel
         verdict={verdict.data}
@@ -150,16 +159,22 @@ function useParts({ field, basemap, wide, logsHref }: PartsOptions) {
     ),
     lineUp: <SidePanel statistics={statistics} classes={classes} onTable={setOpenTable} />,
     table: openTable ? <SideTable name={openTable} statistics={statistics} onClose={() => setOpenTable(null)} /> : null,
-    passHeading: <PassHeading passes={passes} />,
-    strip: <FieldStrip overview={overview} classes={classes} />,
+    passHeading: <PassHeading passes={passes} tools={<ShowOnMap />} />,
+    strip: (
+      <SeedingTime overview={overview}>
+        <FieldStrip overview={overview} classes={classes} />
+      </SeedingTime>
+    ),
     pass: (orientation: "across" | "upright") => (
-      <UnrolledPass
-        track={track}
-        classes={classes}
-        passes={passes.map(({ pass }) => pass)}
-        flagged={flagged}
-        orientation={orientation}
-      />
+      <ComparedPasses firstClasses={classes} orientation={orientation}>
+        <UnrolledPass
+          track={track}
+          classes={classes}
+          passes={passes.map(({ pass }) => pass)}
+          flagged={flagged}
+          orientation={orientation}
+        />
+      </ComparedPasses>
     ),
   };
 }

@@ -1,50 +1,14 @@
 "use client";
 
-import { useQueryClient, type QueryClient } from "@tanstack/react-query";
+import { useQueryClient } from "@tanstack/react-query";
 import type { LngLat, Map as MapLibreMap, MapMouseEvent } from "maplibre-gl";
 import { useEffect } from "react";
 import { useBook, useLogVersion } from "@/components/field-book/field-book-context";
-import { fetchReadingAt } from "@/components/field-book/field-book-requests";
-import { logVersionKey, trackQuery, type LogVersion } from "@/components/field-book/use-log-data";
-import type { Cursor, FieldBookStore } from "@/lib/map-state/field-book-store";
-import { locateInPass } from "@/lib/map-state/pass-cells";
-import type { PassTrack } from "@/lib/map-state/pass-track";
+import { findAtHand, findFarAway } from "@/components/field-book/find-reading";
+import type { Cursor } from "@/lib/map-state/field-book-store";
 
 /** How long the pointer must rest on a pass that is not here yet before it is asked for. */
 const REST_MS = 120;
-
-interface Finder {
-  client: QueryClient;
-  log: LogVersion;
-  store: FieldBookStore;
-}
-
-/** Passes of the shown channel that are in memory; the chosen one first. */
-function tracksAtHand({ client, log, store }: Finder): PassTrack[] {
-  const { channel, pass } = store.getState();
-  const queries = client.getQueriesData<PassTrack>({
-    queryKey: logVersionKey(log, "track", channel),
-  });
-  return queries
-    .flatMap(([, track]) => (track ? [track] : []))
-    .sort((a, b) => Number(b.pass === pass) - Number(a.pass === pass));
-}
-
-function findAtHand(finder: Finder, { lng, lat }: LngLat): Cursor | null {
-  for (const track of tracksAtHand(finder)) {
-    const found = locateInPass(track, lng, lat);
-    if (found) return { pass: track.pass, ...found };
-  }
-  return null;
-}
-
-/** Asks the server which pass lies under a place and fetches that pass, so that the next look finds it at hand. */
-async function findFarAway(finder: Finder, place: LngLat): Promise<Cursor | null> {
-  const { pass } = await fetchReadingAt(finder.log.logId, place.lng, place.lat);
-  const track = await finder.client.ensureQueryData(trackQuery(finder.log, finder.store.getState().channel, pass));
-  const found = locateInPass(track, place.lng, place.lat);
-  return found ? { pass, ...found } : null;
-}
 
 /** Pointing names a reading, from memory where its pass is loaded; a click unrolls the pass there. */
 export function useMapPointer(map: MapLibreMap | null): void {

@@ -7,8 +7,10 @@ const OVERLAYS = ["boundary", "pass", "stretch", "row", "places"] as const;
 export type OverlayName = (typeof OVERLAYS)[number] | (typeof GRID_SOURCES)[number];
 export type OverlayData = Geometry | FeatureCollection | null;
 
-/** The layer the values go under; everything after it lies on top of them. */
-export const FIRST_LAYER_OVER_VALUES = "boundary-line";
+/** Shows nothing: the values go under it, and everything after it lies on top of them. */
+export const FIRST_LAYER_OVER_VALUES = "over-values";
+/** What covers values, but no line drawn over them, goes under this one. */
+export const FIRST_LINE_OVER_VALUES = "boundary-line";
 
 const BELOW: LayerSpecification[] = [
   { id: "boundary-fill", type: "fill", source: "boundary", paint: { "fill-pattern": "hatch" } },
@@ -26,7 +28,8 @@ function outline(source: OverlayName, name: string, look: { colour: string; widt
 }
 
 const ABOVE: LayerSpecification[] = [
-  outline("boundary", FIRST_LAYER_OVER_VALUES, { colour: MAP_COLOURS.ink, width: 1.5 }),
+  { id: FIRST_LAYER_OVER_VALUES, type: "background", layout: { visibility: "none" } },
+  outline("boundary", FIRST_LINE_OVER_VALUES, { colour: MAP_COLOURS.ink, width: 1.5 }),
   outline("pass", "pass-halo", { colour: MAP_COLOURS.sheet, width: 4 }),
   outline("pass", "pass-line", { colour: MAP_COLOURS.slate, width: 2 }),
   {

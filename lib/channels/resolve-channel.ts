@@ -3,6 +3,7 @@ import { marginByForce } from "@/lib/channels/margin-by-force";
 import { openerResistance } from "@/lib/channels/opener-resistance";
 import type { ResolvedChannel } from "@/lib/channels/resolved-channel";
 import { rowSpeed } from "@/lib/channels/row-speed";
+import { workedTime } from "@/lib/channels/worked-time";
 import { leftOutNumbers } from "@/lib/cleaning/left-out";
 import { isChannelId, type AnyChannelId } from "@/lib/logs/channel";
 import type { PlacedLog } from "@/lib/logs/placed-log";
@@ -19,6 +20,7 @@ export function resolveChannelOrReason(placed: PlacedLog, channelId: string): Re
   if (!isChannelId(channelId)) return fail(`"${channelId}" is not the name of a channel.`);
   if (channelId === "resistance") return openerResistance(placed);
   if (channelId === "rowSpeed") return succeed(rowSpeed(placed));
+  if (channelId === "time") return workedTime(placed);
   if (channelId === "flags") return succeed(flagsChannel(placed));
   if (channelId === "underTarget") return underTarget(placed);
   if (channelId === "atLimit") return atLimit(placed);

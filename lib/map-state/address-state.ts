@@ -1,10 +1,14 @@
 import { areClassEdges } from "@/lib/legend/class-edges";
 import { isChannelId } from "@/lib/logs/channel";
-import type { FieldBookState, MapView } from "@/lib/map-state/field-book-store";
+import { isCompareMode, type Comparison } from "@/lib/map-state/comparison";
+import type { FieldBookState, MapView, Stretch } from "@/lib/map-state/field-book-store";
 import { isGroundLayer } from "@/lib/map-state/ground-layers";
 
 /** The part of the state that an address carries, so that a link shows the same thing. */
-export type AddressState = Pick<FieldBookState, "channel" | "pass" | "row" | "view" | "cleaned" | "ground"> & {
+export type AddressState = Pick<
+  FieldBookState,
+  "channel" | "pass" | "row" | "stretch" | "view" | "cleaned" | "ground" | "comparison" | "timeS"
+> & {
   log: string | null;
   /** The person's own class edges of the channel, SI; null for the channel's default. */
   edges: number[] | null;
@@ -33,17 +37,50 @@ function readEdges(text: string | null): number[] | null {
   return edges.length <= MOST_EDGES && areClassEdges(edges) ? edges : null;
 }
 
-/** Reads `log, channel, pass, row, view, edges, cleaned, ground`; whatever does not make sense is left out. */
+/** A number written plainly, within limits; null otherwise. Neither "" nor "1e3" nor " 5" is one. */
+function readNumber(text: string | null | undefined, most: number): number | null {
+  if (typeof text !== "string" || !/^\d{1,9}(\.\d{1,6})?$/.test(text)) return null;
+  const number = Number(text);
+  return number <= most ? number : null;
+}
+
+/** Longer passes are not driven. */
+const LONGEST_PASS_M = 1_000_000;
+/** Three years of seconds. */
+const LONGEST_LOG_S = 100_000_000;
+
+/** Reads `from,to`, metres along the pass that the address names. */
+function readStretch(text: string | null, pass: number | null): Stretch | null {
+  const parts = (text ?? "").split(",");
+  const [fromM, toM] = parts.map((part) => readNumber(part, LONGEST_PASS_M));
+  if (parts.length !== 2 || pass === null || fromM == null || toM == null || !(fromM < toM)) return null;
+  return { pass, fromM, toM };
+}
+
+/** Reads `compare` (how), `with` (channel) and `withLog`. */
+function readComparison(search: URLSearchParams): Comparison | null {
+  const mode = search.get("compare");
+  const channel = search.get("with");
+  const logId = search.get("withLog");
+  if (!isCompareMode(mode) || channel === null || !isChannelId(channel)) return null;
+  return { mode, channel, logId: logId !== null && /^[\w-]{1,64}$/.test(logId) ? logId : null };
+}
+
+/** Reads what `writeAddress` writes; whatever does not make sense is left out. */
 export function readAddress(search: URLSearchParams): Partial<AddressState> {
   const channel = search.get("channel");
+  const pass = readPositiveInteger(search.get("pass"));
   const state: Partial<AddressState> = {
     log: search.get("log"),
-    pass: readPositiveInteger(search.get("pass")),
+    pass,
     row: readPositiveInteger(search.get("row")),
     view: readView(search.get("view")),
     edges: readEdges(search.get("edges")),
     cleaned: search.get("cleaned") !== "0",
     ground: (search.get("ground") ?? "").split(",").filter(isGroundLayer),
+    stretch: readStretch(search.get("brush"), pass),
+    comparison: readComparison(search),
+    timeS: readNumber(search.get("time"), LONGEST_LOG_S),
   };
   if (channel !== null && isChannelId(channel)) state.channel = channel;
   return state;
@@ -63,5 +100,18 @@ export function writeAddress(state: AddressState): URLSearchParams {
   if (state.edges) search.set("edges", state.edges.map((edge) => String(Number(edge.toPrecision(9)))).join(","));
   if (!state.cleaned) search.set("cleaned", "0");
   if (state.ground.length > 0) search.set("ground", state.ground.join(","));
+  // A stretch is one of the pass unrolled.
+  if (state.stretch && state.stretch.pass === state.pass)
+    search.set("brush", `${roundTo(state.stretch.fromM, 2)},${roundTo(state.stretch.toM, 2)}`);
+  if (state.comparison) {
+    search.set("compare", state.comparison.mode);
+    search.set("with", state.comparison.channel);
+    if (state.comparison.logId !== null) search.set("withLog", state.comparison.logId);
+  }
+  if (state.timeS !== null) search.set("time", roundTo(state.timeS, 1));
   return search;
+}
+
+function roundTo(value: number, decimals: number): string {
+  return String(Number(value.toFixed(decimals)));
 }

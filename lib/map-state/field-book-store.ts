@@ -1,4 +1,5 @@
 import { createStore } from "zustand/vanilla";
+import type { Comparison } from "@/lib/map-state/comparison";
 import { toggleGroundLayer, type GroundLayer } from "@/lib/map-state/ground-layers";
 
 /** A reading pointed at: pass, record within the pass (from 0) and row (from 1). */
@@ -43,6 +44,10 @@ export interface FieldBookState {
   cleaned: boolean;
   /** What of the ground lies over the readings. */
   ground: readonly GroundLayer[];
+  /** What it is compared with; null for nothing. */
+  comparison: Comparison | null;
+  /** Only what was worked until then is shown, seconds since the log began; null for all of it. */
+  timeS: number | null;
 }
 
 export interface FieldBookActions {
@@ -60,6 +65,8 @@ export interface FieldBookActions {
   askToFrame(bounds: Bounds): void;
   setCleaned(cleaned: boolean): void;
   toggleGround(layer: GroundLayer): void;
+  compareWith(comparison: Comparison | null): void;
+  setTime(timeS: number | null): void;
 }
 
 export type FieldBookStore = ReturnType<typeof createFieldBookStore>;
@@ -77,6 +84,8 @@ const EMPTY: FieldBookState = {
   frame: null,
   cleaned: true,
   ground: [],
+  comparison: null,
+  timeS: null,
 };
 
 /** What a person looks at in one field's book. Knows nothing of React or of the server. */
@@ -111,6 +120,8 @@ export function createFieldBookStore(initial: Partial<FieldBookState> = {}) {
     askToFrame: (bounds) => set((state) => ({ frame: { bounds, wish: (state.frame?.wish ?? 0) + 1 } })),
     setCleaned: (cleaned) => set({ cleaned }),
     toggleGround: (layer) => set((state) => ({ ground: toggleGroundLayer(state.ground, layer) })),
+    compareWith: (comparison) => set({ comparison }),
+    setTime: (timeS) => set({ timeS }),
   }));
 }
 

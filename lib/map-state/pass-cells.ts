@@ -72,6 +72,13 @@ export function cellRing(track: PassTrack, record: number, row: number | null): 
   return [...ring, ring[0]!];
 }
 
+/** The middle of one reading's cell (row from 1). */
+export function middleOfCell(track: PassTrack, record: number, row: number): [longitude: number, latitude: number] {
+  const corners = cellRing(track, record, row).slice(0, 4);
+  const mean = (values: number[]) => values.reduce((sum, value) => sum + value, 0) / values.length;
+  return [mean(corners.map(([x]) => x ?? NaN)), mean(corners.map(([, y]) => y ?? NaN))];
+}
+
 /** Ring round a stretch of records of one row, or of the whole implement (row null). */
 export function stretchRing(track: PassTrack, row: number | null, from = 0, to = track.records - 1): Position[] {
   const { left, right, ahead } = sidesOf(track, row);

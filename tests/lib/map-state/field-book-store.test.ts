@@ -1,6 +1,4 @@
 import { describe, expect, it } from "vitest";
-import { readAddress, writeAddress } from "@/lib/map-state/address-state";
-import type { GroundLayer } from "@/lib/map-state/ground-layers";
 import { createFieldBookStore } from "@/lib/map-state/field-book-store";
 
 describe("the state of a field's book", () => {
@@ -69,35 +67,5 @@ describe("stepping from pass to pass", () => {
     store.getState().stepPass(-1, [1, 2, 3]);
     expect(store.getState().pass).toBe(1);
     expect(store.getState().cursor?.row).toBe(7);
-  });
-});
-
-describe("the address", () => {
-  it("comes back as it was written", () => {
-    const state = {
-      log: "log_abc",
-      channel: "deviation:margin",
-      pass: 12,
-      row: 17,
-      view: { longitude: -98.612, latitude: 38.417, zoom: 17.25 },
-      // 40 and 110 lbf below and above 0 (NIST SP 811, pound-force).
-      edges: [-177.928865, 0, 489.304378],
-      cleaned: false,
-      ground: ["swaths", "skips"] as GroundLayer[],
-    };
-    expect(readAddress(writeAddress(state))).toEqual(state);
-  });
-
-  it("leaves out what makes no sense", () => {
-    const read = readAddress(new URLSearchParams("channel=../x&pass=-3&row=0&view=1,2&edges=5,4&ground=moon,overlap"));
-    expect(read).toEqual({
-      log: null,
-      pass: null,
-      row: null,
-      view: null,
-      edges: null,
-      cleaned: true,
-      ground: ["overlap"],
-    });
   });
 });
