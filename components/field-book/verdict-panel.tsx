@@ -80,7 +80,8 @@ function VerdictWaiting({ trouble }: { trouble: boolean }) {
           The verdict could not be fetched. Reload the page; if it stays away, read the log again from the list of logs.
         </p>
       ) : (
-        <div className="hatch mt-2 h-32 opacity-60" role="status" aria-label="Fetching the verdict" />
+        // As tall as the number and three findings, so that what stands beneath stays where it is.
+        <div className="hatch mt-2 h-[29rem] opacity-60" role="status" aria-label="Fetching the verdict" />
       )}
     </section>
   );
