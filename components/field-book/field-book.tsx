@@ -16,6 +16,8 @@ import { useAddress } from "@/components/field-book/use-address";
 import { useField } from "@/components/hooks/use-fields";
 import { useLogs } from "@/components/hooks/use-logs";
 import type { BasemapConfig } from "@/components/map/basemap-config";
+import { NotesAccessProvider } from "@/components/notes/notes-access";
+import { BookPictures } from "@/components/pictures/book-pictures";
 import { can, type Role } from "@/lib/access/permissions";
 import { readAddress } from "@/lib/map-state/address-state";
 import { createFieldBookStore } from "@/lib/map-state/field-book-store";
@@ -43,23 +45,25 @@ export function FieldBook({ fieldId, logsHref, basemap, role }: FieldBookProps) 
     ready.find((candidate) => candidate.id === chosenId) ?? ready.find(({ kind }) => kind === "seeding") ?? ready[0];
   if (!log) return <NoLogYet logs={logs.data.items} logsHref={logsHref} />;
   return (
-    <OpenLog
-      key={`${log.id} ${log.version} ${log.revision ?? 0}`}
-      field={field.data}
-      log={log}
-      logs={ready}
-      logsHref={logsHref}
-      basemap={basemap}
-      picker={
-        <div className="flex min-w-0 items-center gap-2">
-          <LogPicker logs={ready} chosen={log} onChoose={setChosenId} />
-          <CompareButton />
-          <CopyLink />
-          <BookKeys />
-          {can(role, "logs.export") ? <BookExport /> : null}
-        </div>
-      }
-    />
+    <NotesAccessProvider fieldId={fieldId} mayWrite={can(role, "notes.write")}>
+      <OpenLog
+        key={`${log.id} ${log.version} ${log.revision ?? 0}`}
+        field={field.data}
+        log={log}
+        logs={ready}
+        logsHref={logsHref}
+        basemap={basemap}
+        picker={
+          <div className="flex min-w-0 items-center gap-2">
+            <LogPicker logs={ready} chosen={log} onChoose={setChosenId} />
+            <CompareButton />
+            <CopyLink />
+            <BookKeys />
+            {can(role, "logs.export") ? <BookExport /> : null}
+          </div>
+        }
+      />
+    </NotesAccessProvider>
   );
 }
 
@@ -96,9 +100,11 @@ function OpenLog({ field, log, logs, logsHref, basemap, picker }: OpenLogProps) 
   useAddress(book.store, log.id);
   return (
     <FieldBookProvider book={book}>
-      <SecondBookProvider logs={logs}>
-        <RowsLayout field={field} basemap={basemap} picker={picker} logsHref={logsHref} />
-      </SecondBookProvider>
+      <BookPictures field={field}>
+        <SecondBookProvider logs={logs}>
+          <RowsLayout field={field} basemap={basemap} picker={picker} logsHref={logsHref} />
+        </SecondBookProvider>
+      </BookPictures>
     </FieldBookProvider>
   );
 }

@@ -15,6 +15,8 @@ import { useMapValues } from "@/components/field-book/use-map-values";
 import { useOverview } from "@/components/field-book/use-log-data";
 import { useMapTime } from "@/components/field-book/scrubber/use-map-time";
 import type { BasemapConfig } from "@/components/map/basemap-config";
+import { MapNotes } from "@/components/notes/map-notes";
+import { MapPicture } from "@/components/pictures/book-figures";
 import { MapCanvas } from "@/components/map/map-canvas";
 import { channelWords } from "@/lib/legend/channel-words";
 import type { Bounds } from "@/lib/map-state/field-book-store";
@@ -62,6 +64,15 @@ export function RowMap(props: RowMapProps) {
         onMap?.(ready);
       }}
       gentle={gentle}
+      figure="map"
+      tools={
+        map ? (
+          <>
+            <MapPicture map={map} classes={classes} label={label} />
+            <MapNotes map={map} boundary={boundary} />
+          </>
+        ) : null
+      }
     >
       {map ? <CellMark map={map} /> : null}
       {map ? <MapWords map={map} classes={classes} unit={overview?.unit ?? ""} /> : null}

@@ -11,6 +11,7 @@ import { MapArea } from "@/components/field-book/compare/map-area";
 import { FieldStrip } from "@/components/field-book/field-strip";
 import { ShowOnMap } from "@/components/field-book/keys/show-on-map";
 import { Legend } from "@/components/field-book/legend";
+import { PassPicture } from "@/components/pictures/book-figures";
 import { openingBounds } from "@/components/field-book/opening-bounds";
 import { PassHeading } from "@/components/field-book/pass-heading";
 import { SeedingTime } from "@/components/field-book/scrubber/seeding-time";
@@ -159,7 +160,17 @@ function useParts({ field, basemap, wide, logsHref }: PartsOptions) {
     ),
     lineUp: <SidePanel statistics={statistics} classes={classes} onTable={setOpenTable} />,
     table: openTable ? <SideTable name={openTable} statistics={statistics} onClose={() => setOpenTable(null)} /> : null,
-    passHeading: <PassHeading passes={passes} tools={<ShowOnMap />} />,
+    passHeading: (
+      <PassHeading
+        passes={passes}
+        tools={
+          <>
+            <ShowOnMap />
+            <PassPicture classes={classes} />
+          </>
+        }
+      />
+    ),
     strip: (
       <SeedingTime overview={overview}>
         <FieldStrip overview={overview} classes={classes} />
