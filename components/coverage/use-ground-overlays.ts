@@ -6,7 +6,9 @@ import { useEffect, useMemo } from "react";
 import { areasOfKind } from "@/components/coverage/coverage-lines";
 import { setGroundOverlay } from "@/components/coverage/ground-overlay";
 import { useCoverageAreas, useSwaths } from "@/components/coverage/use-coverage";
-import { useBook, useBookState } from "@/components/field-book/field-book-context";
+import { useBook, useBookState, useLogVersion } from "@/components/field-book/field-book-context";
+import { useLimitZones } from "@/components/zones/use-limit-zones";
+import type { LimitZoneKind } from "@/lib/schemas/limit-zones";
 import type { GroundLayer } from "@/lib/map-state/ground-layers";
 
 /** What of the ground the person wants to see, on the map of the field's book. */
@@ -20,6 +22,17 @@ export function useGroundOverlays(map: MapLibreMap | null): void {
   useOverlay(map, "swaths", ground.includes("swaths") ? (swaths as FeatureCollection | undefined) : undefined);
   useOverlay(map, "overlap", ground.includes("overlap") ? overlap : undefined);
   useOverlay(map, "skips", ground.includes("skips") ? skips : undefined);
+  useZoneOverlay(map, "under-target");
+  useZoneOverlay(map, "at-limit");
+  useZoneOverlay(map, "over-target");
+  useZoneOverlay(map, "too-shallow");
+}
+
+/** One kind of zones: asked for once it is shown. */
+function useZoneOverlay(map: MapLibreMap | null, kind: LimitZoneKind): void {
+  const isShown = useBookState((state) => state.ground.includes(kind));
+  const zones = useLimitZones(useLogVersion(), kind, isShown).data;
+  useOverlay(map, kind, isShown ? (zones as FeatureCollection | undefined) : undefined);
 }
 
 function useOverlay(map: MapLibreMap | null, layer: GroundLayer, areas: FeatureCollection | undefined): void {

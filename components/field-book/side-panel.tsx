@@ -4,6 +4,7 @@ import { LineUp } from "@/components/field-book/line-up";
 import { LineUpTable } from "@/components/field-book/line-up-table";
 import { PassesPanel, PassesTable } from "@/components/field-book/passes/load-passes";
 import { SideTabs } from "@/components/field-book/side-tabs";
+import { ZonesPanel } from "@/components/zones/load-zones";
 import type { Classes } from "@/components/field-book/use-classes";
 import type { RowStatisticsBody } from "@/lib/schemas/logs";
 
@@ -16,7 +17,7 @@ export interface SidePanelProps {
   onTable: (name: SideTableName) => void;
 }
 
-/** What the log holds, compared by rows or by passes. */
+/** What the log holds, compared by rows or by passes, and where rows were past a limit. */
 export function SidePanel({ statistics, classes, onTable }: SidePanelProps) {
   const lineUp = <LineUp statistics={statistics} classes={classes} onTable={() => onTable("rows")} />;
   return (
@@ -24,6 +25,7 @@ export function SidePanel({ statistics, classes, onTable }: SidePanelProps) {
       tabs={[
         { id: "rows", label: "Rows", content: lineUp },
         { id: "passes", label: "Passes", content: <PassesPanel onTable={() => onTable("passes")} /> },
+        { id: "zones", label: "Zones", content: <ZonesPanel /> },
       ]}
     />
   );

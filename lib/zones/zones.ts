@@ -65,7 +65,7 @@ export function buildZones(placed: PlacedLog, channelId: string, options: ZoneOp
 }
 
 /** Corners closer than this to the line between their neighbours are left out: below what a receiver can tell. */
-const OUTLINE_TOLERANCE_M = 0.03;
+export const OUTLINE_TOLERANCE_M = 0.03;
 
 function passZones(source: TrackSource, pass: Pass, { bbox, ...runOptions }: RunOptions & { bbox?: Bbox }): Zone[] {
   const { placed } = source;
@@ -94,7 +94,8 @@ interface DrawnLog {
   outline: PassOutline;
 }
 
-function zoneRing({ placed, outline }: DrawnLog, track: RowTrack, run: ClassRun): Position[] {
+/** Ground of a row over a run of steps, as a ring. */
+export function zoneRing({ placed, outline }: DrawnLog, track: RowTrack, run: ClassRun): Position[] {
   const { offsetM, forwardM, widthM } = placed.geometry;
   const row = track.row - 1;
   const half = widthM[row]! / 2;
@@ -122,7 +123,8 @@ function zoneFeature(
   };
 }
 
-function readNumbers(
+/** Numbers of a run from the raw readings. */
+export function readNumbers(
   { values, lengthsM }: RowTrack,
   run: ClassRun,
   isNamed: boolean,
@@ -143,7 +145,8 @@ function readNumbers(
   return { mean: weight > 0 ? sum / weight : plain / n, min, max, n };
 }
 
-function secondsAt(placed: PlacedLog, record: number): number | null {
+/** Seconds since the log's first time. */
+export function secondsAt(placed: PlacedLog, record: number): number | null {
   const started = placed.log.timeMs.find((time) => Number.isFinite(time)) ?? NaN;
   const seconds = (placed.log.timeMs[record]! - started) / 1000;
   return Number.isFinite(seconds) ? seconds : null;

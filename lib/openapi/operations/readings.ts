@@ -4,6 +4,7 @@ import type { Method, Operation, OperationReply } from "@/lib/openapi/operation"
 import { CleanedQuery } from "@/lib/schemas/cleaning";
 import { CoverageAreas } from "@/lib/schemas/coverage";
 import { ExportQuery } from "@/lib/schemas/export";
+import { LimitZonesBody, LimitZonesQuery } from "@/lib/schemas/limit-zones";
 import { ListQuery } from "@/lib/schemas/listing";
 import { CleanedChannelQuery, PlaceQuery, ReadingsQuery, SwathsQuery, ZonesQuery } from "@/lib/schemas/log-queries";
 import { SwathCollectionBody, ZoneCollectionBody } from "@/lib/schemas/log-shapes";
@@ -132,9 +133,18 @@ export const readingOperations: Operation[] = [
     path: "/api/v1/logs/{logId}/zones",
     tag,
     permission: "logs.read",
-    summary: "Stretches of rows in one class, as polygons",
-    query: ZonesQuery,
-    replies: [{ status: 200, description: "GeoJSON", schema: ZoneCollectionBody, contentType: "application/geo+json" }],
+    summary: "Stretches of rows in one class, or past a limit, as polygons",
+    description:
+      "Either `channel` and `breaks`, for zones of a channel's classes, or `kind`, for stretches under target, at the limit, over target or too shallow: these come with `totals`, and with `patches` of neighbouring rows that touch in one pass, the largest first. A stretch shorter than `minLengthM` goes to what is about it; areas and lengths are those of the row.",
+    query: ZonesQuery.partial().extend(LimitZonesQuery.partial().shape),
+    replies: [
+      {
+        status: 200,
+        description: "GeoJSON; with `kind`, totals and patches as foreign members",
+        schema: z.union([LimitZonesBody, ZoneCollectionBody]),
+        contentType: "application/geo+json",
+      },
+    ],
     errors: ["conflict"],
   },
   {

@@ -4,6 +4,7 @@ import type { ResolvedChannel } from "@/lib/channels/resolve-channel";
 import { reasonsAt } from "@/lib/cleaning/reasons-at";
 import { flagCodes } from "@/lib/cleaning/flags";
 import { AppError } from "@/lib/errors";
+import type { LimitZoneKind, LimitZonesBody } from "@/lib/schemas/limit-zones";
 import type { ReadingAt } from "@/lib/schemas/logs";
 import type { Scope } from "@/lib/scope";
 import { loadLeftOut } from "@/lib/server/adjustments/load-adjusted-log";
@@ -11,6 +12,7 @@ import type { Container } from "@/lib/server/create-container";
 import { findPlacedLog, loadChannel, type LogChoice } from "@/lib/server/logs/find-placed-log";
 import { loadTileIndex } from "@/lib/server/tiles/load-tile-index";
 import { locateReading } from "@/lib/tiles/locate-reading";
+import { buildLimitZones } from "@/lib/zones/limit-zones";
 import { buildSwaths, type SwathCollection } from "@/lib/zones/swaths";
 import { buildZones, type ZoneCollection } from "@/lib/zones/zones";
 
@@ -61,6 +63,18 @@ export async function readZones(
   const { placed } = await findPlacedLog(container, scope, input);
   const { breaks, bbox, minLengthM } = input;
   return buildZones(placed, input.channel, { breaks, bbox, minLengthM });
+}
+
+/** Stretches past a limit. @throws AppError `unprocessable` where the log or its machine cannot tell */
+export async function readLimitZones(
+  container: Container,
+  scope: Scope,
+  input: LogChoice & { kind: LimitZoneKind; depthM?: number; bbox?: Bbox; minLengthM?: number },
+): Promise<LimitZonesBody> {
+  const { kind, depthM, bbox, minLengthM, ...choice } = input;
+  const channel = kind === "at-limit" ? "downforce" : kind === "too-shallow" ? "depth" : "margin";
+  const { placed } = await findPlacedLog(container, scope, { ...choice, channel });
+  return buildLimitZones(placed, { kind, depthM, bbox, minLengthM });
 }
 
 export async function readSwaths(
