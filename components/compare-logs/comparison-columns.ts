@@ -37,75 +37,54 @@ function numberColumn<Row>({ of, header, ...column }: NumberColumn<Row>, shown: 
 }
 
 /** Columns of the rows of a comparison in a person's units. */
-export function comparedRowColumns(
-  { channel, unit, rows }: ComparisonBody,
-  system: UnitSystem,
-): DataColumn<ComparedRow>[] {
-  const own = { unit, channel, system };
-  const share = { unit: "fraction", channel: "", system };
+export function comparedRowColumns(body: ComparisonBody, system: UnitSystem): DataColumn<ComparedRow>[] {
+  const own = { unit: body.unit, channel: body.channel, system };
   const number = (column: NumberColumn<ComparedRow>) => numberColumn(column, own);
-  const shareOf = (column: NumberColumn<ComparedRow>) =>
-    rows.some((row) => column.of(row) != null) ? [numberColumn(column, share)] : [];
+  const wide = { wideOnly: true };
   return [
     { id: "row", header: "Row", value: ({ row }) => row, numeric: true },
-    number({ id: "before", header: "Mean before", of: ({ before }) => before.mean, wideOnly: true }),
-    number({ id: "after", header: "Mean after", of: ({ after }) => after.mean, wideOnly: true }),
+    number({ id: "before", header: "Mean before", of: ({ before }) => before.mean, ...wide }),
+    number({ id: "after", header: "Mean after", of: ({ after }) => after.mean, ...wide }),
     number({ id: "difference", header: "Difference", of: ({ difference }) => difference }),
-    number({ id: "low", header: "95 % from", of: ({ interval }) => interval?.[0], wideOnly: true }),
-    number({ id: "high", header: "95 % to", of: ({ interval }) => interval?.[1], wideOnly: true }),
-    number({ id: "beyond", header: "Beyond the other rows", of: ({ beyondOthers }) => beyondOthers }),
-    number({
-      id: "beyond-low",
-      header: "95 % of all rows from",
-      of: ({ beyondInterval }) => beyondInterval?.[0],
-      wideOnly: true,
-    }),
-    number({
-      id: "beyond-high",
-      header: "95 % of all rows to",
-      of: ({ beyondInterval }) => beyondInterval?.[1],
-      wideOnly: true,
-    }),
+    number({ id: "low", header: "95 % from", of: ({ interval }) => interval?.[0], ...wide }),
+    number({ id: "high", header: "95 % to", of: ({ interval }) => interval?.[1], ...wide }),
+    number({ id: "beyond", header: "Beyond the other rows", of: (row) => row.beyondOthers }),
+    number({ id: "beyond-low", header: "95 % of all rows from", of: (row) => row.beyondInterval?.[0], ...wide }),
+    number({ id: "beyond-high", header: "95 % of all rows to", of: (row) => row.beyondInterval?.[1], ...wide }),
     { id: "told", header: "Beyond the others", value: ({ told }) => TOLD_WORDS[told] },
-    ...shareOf({
-      id: "under-before",
-      header: "Under target before",
-      of: ({ before }) => before.shareUnderTarget,
-      wideOnly: true,
-    }),
-    ...shareOf({
-      id: "under-after",
-      header: "Under target after",
-      of: ({ after }) => after.shareUnderTarget,
-      wideOnly: true,
-    }),
-    ...shareOf({
-      id: "limit-before",
-      header: "At the limit before",
-      of: ({ before }) => before.shareAtLimit,
-      wideOnly: true,
-    }),
-    ...shareOf({
-      id: "limit-after",
-      header: "At the limit after",
-      of: ({ after }) => after.shareAtLimit,
-      wideOnly: true,
-    }),
-    ...(["p05", "p25", "p50", "p75", "p95"] as const).flatMap((level) => [
-      number({
-        id: `${level}-before`,
-        header: `${PERCENTILES[level]} before`,
-        of: ({ before }) => before[level],
-        fileOnly: true,
-      }),
-      number({
-        id: `${level}-after`,
-        header: `${PERCENTILES[level]} after`,
-        of: ({ after }) => after[level],
-        fileOnly: true,
-      }),
-    ]),
+    ...shareColumns(body.rows, system),
+    ...percentileColumns(own),
   ];
+}
+
+/** Shares of the distance, of those that the channel has. */
+function shareColumns(rows: readonly ComparedRow[], system: UnitSystem): DataColumn<ComparedRow>[] {
+  const shares: NumberColumn<ComparedRow>[] = [
+    { id: "under-before", header: "Under target before", of: ({ before }) => before.shareUnderTarget },
+    { id: "under-after", header: "Under target after", of: ({ after }) => after.shareUnderTarget },
+    { id: "limit-before", header: "At the limit before", of: ({ before }) => before.shareAtLimit },
+    { id: "limit-after", header: "At the limit after", of: ({ after }) => after.shareAtLimit },
+  ];
+  return shares
+    .filter(({ of }) => rows.some((row) => of(row) != null))
+    .map((column) => numberColumn({ ...column, wideOnly: true }, { unit: "fraction", channel: "", system }));
+}
+
+/** For the file: the screen shows them as boxes. */
+function percentileColumns(own: Shown): DataColumn<ComparedRow>[] {
+  return (["p05", "p25", "p50", "p75", "p95"] as const).flatMap((level) =>
+    (["before", "after"] as const).map((side) =>
+      numberColumn<ComparedRow>(
+        {
+          id: `${level}-${side}`,
+          header: `${PERCENTILES[level]} ${side}`,
+          of: (row) => row[side][level],
+          fileOnly: true,
+        },
+        own,
+      ),
+    ),
+  );
 }
 
 const PERCENTILES = {
