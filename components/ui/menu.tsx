@@ -3,10 +3,10 @@
 import { DropdownMenu } from "radix-ui";
 import type { ReactNode } from "react";
 
-/** A short list of things to do; the only surface with a shadow. */
+/** A short list of things to do; the only surface with a shadow. The page behind stays readable to everyone. */
 export function Menu({ trigger, children }: { trigger: ReactNode; children: ReactNode }) {
   return (
-    <DropdownMenu.Root>
+    <DropdownMenu.Root modal={false}>
       <DropdownMenu.Trigger asChild>{trigger}</DropdownMenu.Trigger>
       <DropdownMenu.Portal>
         <DropdownMenu.Content
