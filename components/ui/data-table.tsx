@@ -247,7 +247,7 @@ function BodyRow<Row>({ row, columns, actions, stickyFirst }: BodyRowProps<Row>)
             index === 0 && stickyFirst && "md:sticky md:left-0 md:z-10 md:bg-sheet",
           )}
         >
-          {index === 0 ? null : <span className="text-ink-soft md:hidden">{column.header}</span>}
+          {index === 0 ? null : <span className="max-w-1/2 shrink-0 text-ink-soft md:hidden">{column.header}</span>}
           <span className={classNames("min-w-0 break-words max-md:wrap-anywhere", index > 0 && "max-md:text-right")}>
             {column.cell ? column.cell(row) : column.value(row)}
           </span>
