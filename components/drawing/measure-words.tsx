@@ -12,7 +12,8 @@ export function MeasureWords({ geometry, isOpen = false }: { geometry: ShapeGeom
   const parts = [
     areaM2 === null ? null : `area ${format(areaM2, "m2")}`,
     `${areaM2 === null ? "length" : "outline"} ${format(lengthM, "m", "distance")}`,
-    isOpen && lastSideM !== null ? `last side ${format(lastSideM, "m", "distance")}` : null,
+    // After a tap there is no pointer to lead a side to.
+    isOpen && lastSideM !== null && lastSideM > 0 ? `last side ${format(lastSideM, "m", "distance")}` : null,
   ];
   return <span className="tabular">{parts.filter((part) => part !== null).join(" · ")}</span>;
 }

@@ -61,22 +61,27 @@ export function NoteEditor({ map, fieldId, note, mode, guides, onDone }: NoteEdi
           Redo
         </ToolButton>
       </div>
-      <TextArea
-        label="What is there"
-        rows={3}
-        maxLength={2000}
-        value={text}
-        onChange={(event) => setText(event.target.value)}
-      />
+      {/* First the place: on a phone the words would lie over the ground that is drawn on. */}
+      {geometry ? (
+        <TextArea
+          label="What is there"
+          rows={3}
+          maxLength={2000}
+          value={text}
+          onChange={(event) => setText(event.target.value)}
+        />
+      ) : null}
       {save.error ? (
         <p role="alert" className="text-table text-clay">
           {describeFailure(save.error)}
         </p>
       ) : null}
       <div className="flex gap-2">
-        <Button type="submit" kind="primary" disabled={!canSave}>
-          {save.isPending ? "Saving…" : "Save note"}
-        </Button>
+        {geometry ? (
+          <Button type="submit" kind="primary" disabled={!canSave}>
+            {save.isPending ? "Saving…" : "Save note"}
+          </Button>
+        ) : null}
         <Button kind="quiet" onClick={onDone}>
           Leave it
         </Button>

@@ -73,9 +73,11 @@ describe("the notes of a field", () => {
     show({ notes: [] });
     await userEvent.click(screen.getByRole("button", { name: "Note on a place" }));
     await waitFor(() => expect(drawing?.mode).toBe("point"));
-    await userEvent.type(screen.getByLabelText("What is there"), "Stone");
-    expect(screen.getByRole("button", { name: "Save note" })).toBeDisabled();
+    expect(screen.queryByLabelText("What is there")).toBeNull();
     drawing!.onChange({ ...NOTHING_DRAWN, shapes: [{ id: "1", geometry: NOTE.geometry }] });
+    const words = await screen.findByLabelText("What is there");
+    expect(screen.getByRole("button", { name: "Save note" })).toBeDisabled();
+    await userEvent.type(words, "Stone");
     await waitFor(() => expect(screen.getByRole("button", { name: "Save note" })).toBeEnabled());
     await userEvent.click(screen.getByRole("button", { name: "Save note" }));
     await waitFor(() => expect(screen.queryByLabelText("What is there")).toBeNull());
@@ -92,7 +94,7 @@ describe("the notes of a field", () => {
     await waitFor(() => expect(drawing?.start).toEqual([NOTE.geometry]));
     const geometry = { type: "Point" as const, coordinates: [-98.61, 38.42] };
     drawing!.onChange({ ...NOTHING_DRAWN, shapes: [{ id: "1", geometry }] });
-    await userEvent.click(screen.getByRole("button", { name: "Save note" }));
+    await userEvent.click(await screen.findByRole("button", { name: "Save note" }));
     await waitFor(() => expect(sent[0]).toMatchObject({ method: "PATCH", body: { text: "Wet spot", geometry } }));
     await userEvent.click(await screen.findByRole("button", { name: "Delete note 1" }));
     await waitFor(() =>
