@@ -1,7 +1,8 @@
 "use client";
 
 import { ChevronRight } from "lucide-react";
-import { coverageLines, type CoverageLine } from "@/components/coverage/coverage-lines";
+import { useState } from "react";
+import { areasOfKind, coverageLines, type CoverageLine } from "@/components/coverage/coverage-lines";
 import { useCoverage, useCoverageAreas, useSwaths } from "@/components/coverage/use-coverage";
 import { useBook, useBookState } from "@/components/field-book/field-book-context";
 import { Button } from "@/components/ui/button";
@@ -11,6 +12,8 @@ import { Quantity } from "@/components/units/quantity";
 import { useUnits } from "@/components/units/use-units";
 import { describeFailure } from "@/lib/api/api-problem";
 import type { GroundLayer } from "@/lib/map-state/ground-layers";
+import type { CoverageAreas } from "@/lib/schemas/coverage";
+import type { CoverageBody } from "@/lib/schemas/logs";
 import { formatQuantity } from "@/lib/units/format-quantity";
 
 /** How much ground a log went over, how much of it twice, what it left out; folded until somebody asks. */
@@ -18,9 +21,12 @@ export function CoveragePanel() {
   const { logVersion } = useBook();
   const coverage = useCoverage(logVersion);
   const { format } = useUnits();
+  const [isOpen, setOpen] = useState(false);
+  const areas = useCoverageAreas(logVersion, isOpen && coverage.data?.overlapByCause !== undefined);
   const lines = coverage.data ? coverageLines(coverage.data) : [];
+  const isDrawn = (layer: GroundLayer) => hasPieces(layer, coverage.data, areas.data);
   return (
-    <details className="group px-4 py-2" data-testid="coverage">
+    <details className="group px-4 py-2" data-testid="coverage" onToggle={(event) => setOpen(event.currentTarget.open)}>
       <summary className="flex min-h-11 items-center gap-1 md:min-h-8">
         <ChevronRight size={16} aria-hidden className="shrink-0 text-slate [details[open]_&]:rotate-90" />
         <h2 className="text-section">Ground</h2>
@@ -40,8 +46,8 @@ export function CoveragePanel() {
       ) : null}
       {coverage.data ? (
         <>
-          <CoverageTable lines={lines} />
-          <LayerSwitches />
+          <CoverageTable lines={lines} isDrawn={isDrawn} />
+          <LayerSwitches isDrawn={isDrawn} />
           <p className="pb-2 text-table text-ink-soft">
             Measured on a grid of {format(coverage.data.resolutionM, "m", "rowSpacing")}.
           </p>
@@ -51,7 +57,19 @@ export function CoveragePanel() {
   );
 }
 
-function CoverageTable({ lines }: { lines: CoverageLine[] }) {
+/** Whether a layer has a piece large enough to be drawn; true as long as nobody knows. */
+function hasPieces(layer: GroundLayer, coverage: CoverageBody | undefined, areas: CoverageAreas | undefined): boolean {
+  if (layer === "swaths") return true;
+  if (layer === "skips") return coverage?.skips?.count !== 0;
+  return areas === undefined || areasOfKind(areas, "overlap").features.length > 0;
+}
+
+interface DrawnProps {
+  /** False: there is ground of this kind, but no piece of it is large enough to be drawn. */
+  isDrawn: (layer: GroundLayer) => boolean;
+}
+
+function CoverageTable({ lines, isDrawn }: DrawnProps & { lines: CoverageLine[] }) {
   return (
     <table className="tabular w-full border-collapse text-table">
       <caption className="sr-only">Areas of this log</caption>
@@ -68,13 +86,18 @@ function CoverageTable({ lines }: { lines: CoverageLine[] }) {
             <th scope="row" className={classNames("py-1.5 text-left font-normal", line.isPart && "pl-4")}>
               <span className={classNames(!line.isPart && "font-semibold")}>{line.words}</span>
               {line.meaning ? <span className="block text-ink-soft">{line.meaning}</span> : null}
+              {line.layer && line.areaM2 > 0 && !isDrawn(line.layer) ? (
+                <span className="block text-ink-soft">Only slivers, too thin to draw.</span>
+              ) : null}
             </th>
             <td className="px-2 py-1.5 text-right align-top">
               <Quantity value={line.areaM2} unit="m2" />
               <span className="block whitespace-nowrap text-ink-soft">{shareWords(line)}</span>
             </td>
             <td className="py-0.5 pl-2 text-right align-top">
-              {line.layer && line.areaM2 > 0 ? <LayerButton layer={line.layer} name={line.words} /> : null}
+              {line.layer && line.areaM2 > 0 && isDrawn(line.layer) ? (
+                <LayerButton layer={line.layer} name={line.words} />
+              ) : null}
             </td>
           </tr>
         ))}
@@ -105,7 +128,7 @@ function LayerButton({ layer, name }: { layer: GroundLayer; name: string }) {
 }
 
 /** What is shown on the map, and word of what is on its way to it. */
-function LayerSwitches() {
+function LayerSwitches({ isDrawn }: DrawnProps) {
   const { store, logVersion } = useBook();
   const ground = useBookState((state) => state.ground);
   const swaths = useSwaths(logVersion, ground.includes("swaths"));
@@ -119,7 +142,7 @@ function LayerSwitches() {
         onChange={() => store.getState().toggleGround("swaths")}
       />
       <p role="status" className="text-table text-ink-soft">
-        {isWaiting ? "Drawing the ground…" : groundWords(ground)}
+        {isWaiting ? "Drawing the ground…" : groundWords(ground.filter(isDrawn))}
       </p>
       {swaths.isError || areas.isError ? (
         <p role="alert" className="text-table text-clay">

@@ -28,7 +28,7 @@ export function useSwaths({ logId, version }: LogVersion, isWanted: boolean) {
   });
 }
 
-/** Where ground was gone over twice or left out; worked out on the first asking. */
+/** Where ground was gone over twice or left out; worked out on the first asking, which is when the panel is opened. */
 export function useCoverageAreas({ logId, version }: LogVersion, isWanted: boolean) {
   return useQuery({
     queryKey: ["log-version", logId, version, "coverage-areas"],

@@ -3,6 +3,7 @@ import userEvent from "@testing-library/user-event";
 import { afterEach, describe, expect, it, vi } from "vitest";
 import { CoveragePanel } from "@/components/coverage/coverage-panel";
 import { coverageLines } from "@/components/coverage/coverage-lines";
+import type { CoverageAreas } from "@/lib/schemas/coverage";
 import type { CoverageBody } from "@/lib/schemas/logs";
 import { renderInBook } from "@/tests/components/field-book/render-in-book";
 
@@ -23,13 +24,33 @@ const COVERAGE: CoverageBody = {
   skips: { count: 3, areaM2: 600, largestM2: 400 },
 };
 
-const AREAS = { type: "FeatureCollection", features: [] };
+const NONE: CoverageAreas = { type: "FeatureCollection", features: [] };
+const AREAS: CoverageAreas = {
+  type: "FeatureCollection",
+  features: [
+    {
+      type: "Feature",
+      geometry: {
+        type: "Polygon",
+        coordinates: [
+          [
+            [-98.61, 38.41],
+            [-98.6, 38.41],
+            [-98.6, 38.42],
+            [-98.61, 38.41],
+          ],
+        ],
+      },
+      properties: { kind: "overlap", cause: "headland", passes: [1, 2], areaM2: 4_000, lengthM: 600 },
+    },
+  ],
+};
 
-function answer(coverage: CoverageBody) {
+function answer(coverage: CoverageBody, areas: CoverageAreas = AREAS) {
   const asked: string[] = [];
   vi.stubGlobal("fetch", async (path: string) => {
     asked.push(path);
-    return Response.json(path.endsWith("/coverage") ? coverage : AREAS);
+    return Response.json(path.endsWith("/coverage") ? coverage : areas);
   });
   return asked;
 }
@@ -76,16 +97,26 @@ describe("the panel of the ground", () => {
   it("asks for places only when somebody wants to see them", async () => {
     const asked = answer(COVERAGE);
     const { store } = renderInBook(<CoveragePanel />);
-    const panel = await openPanel();
+    await screen.findByText(/ha covered$/);
     expect(asked).toEqual(["/api/v1/logs/log_east/coverage"]);
+    const panel = await openPanel();
     await userEvent.click(panel.getByRole("button", { name: "Show on the map: Overlapped" }));
     expect(store.getState().ground).toEqual(["overlap"]);
     await panel.findByText("Overlapped ground is hatched.");
-    expect(asked).toContain("/api/v1/logs/log_east/coverage/areas");
+    expect(asked).toEqual(["/api/v1/logs/log_east/coverage", "/api/v1/logs/log_east/coverage/areas"]);
     await userEvent.click(panel.getByRole("checkbox", { name: "Outline each pass on the map" }));
     expect(store.getState().ground).toEqual(["swaths", "overlap"]);
     await userEvent.click(panel.getByRole("button", { name: "Hide on the map: Overlapped" }));
     expect(store.getState().ground).toEqual(["swaths"]);
+  });
+
+  it("says that there are only slivers where no piece is large enough to be drawn, and promises nothing", async () => {
+    answer({ ...COVERAGE, skippedM2: 72.56, skips: { count: 0, areaM2: 0, largestM2: 0 } }, NONE);
+    renderInBook(<CoveragePanel />, { state: { ground: ["overlap", "skips"] } });
+    const panel = await openPanel();
+    expect(await panel.findAllByText("Only slivers, too thin to draw.")).toHaveLength(2);
+    expect(panel.queryByRole("button", { name: /on the map/ })).toBeNull();
+    expect(panel.queryByText(/hatched|thick outline/)).toBeNull();
   });
 
   it("offers no place where the log was measured without any", async () => {
