@@ -25,8 +25,7 @@ export function OwnUnitChoices() {
             label={label}
             value={own[kind] ?? ""}
             onChange={(event) => {
-              const { [kind]: _before, ...others } = own;
-              setOwn(event.target.value === "" ? others : { ...others, [kind]: event.target.value });
+              setOwn({ ...own, [kind]: event.target.value || undefined });
             }}
           >
             <option value="">As above ({displayUnit(siUnit, systemName, channel).symbol})</option>

@@ -45,7 +45,9 @@ interface UnitState {
 }
 
 function unitsFor({ systemName, own, setSystem, setOwn }: UnitState): Units {
-  const system: UnitSystem = Object.keys(own).length === 0 ? systemName : { system: systemName, own };
+  const system: UnitSystem = Object.values(own).every((unit) => unit === undefined)
+    ? systemName
+    : { system: systemName, own };
   const shown = (valueSi: number, unit: string, channel?: string) =>
     formatQuantity(valueSi, unit, system, channel === undefined ? {} : { channel });
   return {
