@@ -44,12 +44,23 @@ export async function measureInteractions(visit: RowsVisit): Promise<void> {
 /** Places over the map that the pointer rests at. */
 const PLACES = 12;
 
+/** Nothing is asked for so long once the passes of the channel are all at hand. */
+const QUIET_MS = 4_000;
+
+async function untilQuiet(page: Page): Promise<void> {
+  let latest = Date.now();
+  const note = () => (latest = Date.now());
+  page.on("request", note);
+  while (Date.now() - latest < QUIET_MS) await page.waitForTimeout(200);
+  page.off("request", note);
+}
+
 async function measurePointing(page: Page): Promise<void> {
   const asked: string[] = [];
   const box = (await page.locator("canvas.maplibregl-canvas").boundingBox())!;
   const note = (request: { url: () => string }) => asked.push(new URL(request.url()).pathname);
   await page.mouse.move(box.x + 5, box.y + 5);
-  await page.waitForLoadState("networkidle");
+  await untilQuiet(page);
   page.on("request", note);
   let named = 0;
   for (let place = 0; place < PLACES; place++) {
