@@ -69,6 +69,8 @@ const METHODS: Record<ExportLevel, string[]> = {
   readings: [
     PLACE_METHOD,
     "Readings are those of the file in SI units; nothing is smoothed, averaged or deleted. Flags tell of doubts.",
+    "Records in no pass (pass = 0: not working, without a usable position, or between passes) keep their readings in this " +
+      "file and count in no statistic. To count as the statistics do, take only records with pass > 0.",
     "resistanceN is force applied + mass of the row unit times 9.80665 m/s2 - margin; missing where the margin is not above 0.",
   ],
   zones: [
@@ -85,7 +87,8 @@ const METHODS: Record<ExportLevel, string[]> = {
 
 const ADJUSTED_METHOD =
   "Readings are given with the adjustments below: a channel with a delay is read that many seconds later (the nearest record " +
-  "of the same pass), then each cleaning rule that is on leaves out readings, which are missing here and stay in the log.";
+  "of the same pass), then each cleaning rule that was switched on leaves out readings, which are missing here and stay in the " +
+  "log. Rules that are always on take out no reading; they keep records out of passes.";
 
 /** Puts together what is known about an export. */
 export function describeExport(input: AboutInput): ExportAbout {

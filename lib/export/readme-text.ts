@@ -60,14 +60,22 @@ function recipeLines({ recipe }: ExportAbout): string[] {
 function adjustmentLines({ adjustments }: ExportAbout): string[] {
   if (!adjustments) return [];
   const { revision, delaysS, cleaning } = adjustments;
-  const delays = Object.entries(delaysS).map(([id, delay]) => `Delay of ${oneLine(id)}: ${delay} s.`);
+  const delays = Object.entries(delaysS).map(([id, delay]) => `Delay of ${oneLine(id)}: ${shortNumber(delay)} s.`);
   const rules = CLEANING_CODES.filter((code) => cleaning[code].on).map((code) => {
     const numbers = Object.entries(cleaning[code]).filter(([name]) => name !== "on");
-    const said = numbers.map(([name, value]) => `${name} ${value}`).join(", ");
-    const { label, words } = ruleFacts(code);
+    const said = numbers.map(([name, value]) => `${name} ${shortNumber(value)}`).join(", ");
+    const { label, words, fixed } = ruleFacts(code);
+    if (fixed !== null) {
+      return `${code}: ${label}. Always on: keeps records that ${words} out of every pass (pass = 0). Their readings count in no statistic.`;
+    }
     return `${code}${said ? ` (${said})` : ""}: ${label}. Leaves out readings that ${words}.`;
   });
   return [`Revision ${revision}.`, ...delays, ...rules];
+}
+
+/** What a person typed in another unit has a tail of digits in SI: six that count are said. */
+function shortNumber(value: unknown): string {
+  return typeof value === "number" ? String(Number(value.toPrecision(6))) : String(value);
 }
 
 function choiceLines({ choice }: ExportAbout): string[] {

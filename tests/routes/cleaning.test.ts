@@ -96,6 +96,9 @@ describe("changing rules", () => {
     const ramp = item(kept, "start-ramp");
     expect(ramp).toMatchObject({ on: true, number: 5 });
     expect(kept.total.after).toBe(kept.total.before - ramp.takenOutFirst);
+    const { before, after } = kept.total;
+    expect(await ask("verdict")).toMatchObject({ leftOutShare: (before - after) / before });
+    expect(await ask("verdict?cleaned=false")).toMatchObject({ leftOutShare: 0 });
     expect(ramp.after.readings).toBe(ramp.before.readings - ramp.takenOutFirst);
 
     const cleaned = await everything();
@@ -141,9 +144,12 @@ describe("changing rules", () => {
     const column = header.indexOf("leftOut");
     expect(column).toBeGreaterThan(0);
     const lines = csv.slice(1).map((line) => line.split(","));
-    const taken = lines.filter((line) => line[column] !== "");
+    const taken = lines.filter((line) => line[column] !== "" && line[header.indexOf("pass")] !== "0");
     expect(new Set(taken.map((line) => line[column]))).toEqual(new Set(["start-ramp"]));
     for (const line of taken) expect(line[header.indexOf("marginN")]).toBe("");
+    const outside = lines.filter((line) => line[header.indexOf("flags")]!.includes("not-working"));
+    expect(outside.length).toBeGreaterThan(2);
+    for (const line of outside) expect(line[column]).toBe("not-working");
     expect((await text("export?format=csv&cleaned=false")).split("\r\n")[0]).not.toContain("leftOut");
     const about = JSON.parse(await text("export?format=geojson&level=readings")) as { about: Record<string, unknown> };
     expect(about.about.adjustments).toMatchObject({ cleaning: { "start-ramp": { on: true, distanceM: 12 } } });
