@@ -48,7 +48,9 @@ export function ExportMenu({ log, zones, cleaned = true }: ExportMenuProps) {
         </button>
       }
     >
-      <MenuGroup title="Every reading, with units and notes">
+      <MenuGroup
+        title={`Readings ${cleaned ? "as shown: with the cleaning rules" : "as logged"}; units and notes inside`}
+      >
         {linesOf(log).map((line) => (
           <MenuLink
             key={line.format + line.shape}

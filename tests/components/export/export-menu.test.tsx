@@ -29,6 +29,17 @@ describe("the export menu", () => {
     expect(hrefOf(items[1]!).searchParams.get("shape")).toBe("wide");
   });
 
+  it("says whether the rules leave readings out of the files", async () => {
+    const { unmount } = renderInBook(<ExportMenu log={LOG} />);
+    await openMenu();
+    expect(screen.getByText(/^Readings as shown: with the cleaning rules/)).toBeTruthy();
+    unmount();
+    renderInBook(<ExportMenu log={LOG} cleaned={false} />);
+    await openMenu();
+    expect(screen.getByText(/^Readings as logged/)).toBeTruthy();
+    expect(screen.queryByText(/with the cleaning rules/)).toBeNull();
+  });
+
   it("adds zones where a channel is coloured, with its edges", async () => {
     renderInBook(<ExportMenu log={LOG} zones={{ channel: "margin", edges: [200, 450] }} />);
     const zones = (await openMenu()).map(hrefOf).filter(({ searchParams }) => searchParams.get("level") === "zones");
