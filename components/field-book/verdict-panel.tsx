@@ -2,10 +2,12 @@
 
 import { ChevronRight } from "lucide-react";
 import Link from "next/link";
+import { shareWords } from "@/components/cleaning/count-words";
 import { useBook } from "@/components/field-book/field-book-context";
 import { useSeeFinding } from "@/components/field-book/use-see-finding";
 import { verdictKnown } from "@/components/field-book/verdict-known";
 import { rankFindings, sentenceOf } from "@/components/sharing/shared-finding";
+import { QuietLink } from "@/components/ui/quiet-link";
 import { StateMark, type MarkState } from "@/components/ui/state-mark";
 import { useUnits } from "@/components/units/use-units";
 import { boundsOfGeometry } from "@/lib/map-state/geometry-bounds";
@@ -43,6 +45,7 @@ export function VerdictPanel({ verdict, rows, trouble, logsHref, openFirst }: Ve
           {SEVERITY[worst].word}
         </span>
       </h2>
+      <LeftOutWords share={verdict.leftOutShare ?? 0} logsHref={logsHref} />
       <Headline verdict={verdict} rows={rows} logsHref={logsHref} />
       {findings.length === 0 ? <p className="text-ink-soft">Nothing in this log needs your attention.</p> : null}
       <ul className="mt-2 divide-y divide-rule">
@@ -51,6 +54,23 @@ export function VerdictPanel({ verdict, rows, trouble, logsHref, openFirst }: Ve
         ))}
       </ul>
     </section>
+  );
+}
+
+/** How much the verdict does not know of: what rules leave out may be the very thing it looks for. */
+function LeftOutWords({ share, logsHref }: { share: number; logsHref: string }) {
+  const { log } = useBook();
+  if (share === 0) return null;
+  return (
+    <p className="text-table text-ink-soft" data-testid="left-out">
+      After cleaning:{" "}
+      <QuietLink
+        href={`${logsHref}/${log.id}/cleaning`}
+        className="inline-flex min-h-11 items-center text-slate underline md:min-h-6"
+      >
+        {shareWords(share)} of readings left out
+      </QuietLink>
+    </p>
   );
 }
 

@@ -247,12 +247,17 @@ export const CoverageBody = z.object({
   sweptM2: z.number(),
   coveredM2: z.number(),
   overlapM2: z.number(),
-  skippedM2: z.number(),
+  skippedM2: z
+    .number()
+    .describe("All bare ground closed in by worked ground, slivers too: at least skips.areaM2, square metres"),
   resolutionM: z.number(),
   /** Why ground was worked twice; the areas add up to `overlapM2`. Versions of earlier builds do not say. */
   overlapByCause: z.array(OverlapByCause).optional(),
   /** Pieces of ground left out between worked ground. */
-  skips: z.object({ count: z.number().int(), areaM2: z.number(), largestM2: z.number() }).optional(),
+  skips: z
+    .object({ count: z.number().int(), areaM2: z.number(), largestM2: z.number() })
+    .optional()
+    .describe("Pieces of at least 1 m2 among skippedM2; smaller ones are slivers and are not counted here"),
 });
 export type CoverageBody = z.infer<typeof CoverageBody>;
 
@@ -290,6 +295,12 @@ export const VerdictBody = z
       missing: z.array(z.string()).optional(),
     }),
     findings: z.array(Finding),
+    leftOutShare: z
+      .number()
+      .min(0)
+      .max(1)
+      .optional()
+      .describe("Share of the readings in passes that the cleaning rules leave out of this verdict; 0 as logged"),
   })
   .loose();
 export type VerdictBody = z.infer<typeof VerdictBody>;

@@ -2,7 +2,6 @@ import "server-only";
 import { withOrganisation } from "@/db/client";
 import { findLogResult, saveLogResult } from "@/db/queries/log-results";
 import { listAdjustments } from "@/db/queries/adjustments";
-import type { LogRow } from "@/db/queries/logs";
 import type { Adjustments } from "@/lib/adjustments/adjustments";
 import { changeRules, type RuleFault } from "@/lib/cleaning/change-rules";
 import { ruleFacts, type CleaningRules } from "@/lib/cleaning/rule-catalogue";
@@ -11,10 +10,11 @@ import { packPlacedLog } from "@/lib/logs/packed-placed-log";
 import { CleaningPreview, type Cleaning, type CleaningItem, type CleaningRulesChange } from "@/lib/schemas/cleaning";
 import type { Scope } from "@/lib/scope";
 import { askCleaningThread } from "@/lib/server/adjustments/ask-cleaning-thread";
+import { loadAdjustments, type LogState } from "@/lib/server/adjustments/load-adjusted-log";
 import { findRevision, reviseAdjustments, revertAdjustments } from "@/lib/server/adjustments/revise-adjustments";
 import type { Container } from "@/lib/server/create-container";
 import { getReadLog } from "@/lib/server/logs/find-placed-log";
-import { loadPlacedLog } from "@/lib/server/logs/load-placed-log";
+import { loadPlacedLog, type LogVersion } from "@/lib/server/logs/load-placed-log";
 
 /** Rules in force with what each takes out or would, what that makes of every channel, and earlier revisions. */
 export async function readCleaning(container: Container, scope: Scope, logId: string): Promise<Cleaning> {
@@ -75,10 +75,18 @@ function faultyRules(faults: RuleFault[]): AppError {
   return new AppError("unprocessable", said, { places: faults });
 }
 
+/** Share of the readings in passes that the rules of a state leave out, as its cleaning tells it; 0 for a log as read. */
+export async function readLeftOutShare(container: Container, log: LogState): Promise<number> {
+  if (log.adjustmentRevision === 0) return 0;
+  const adjustments = await loadAdjustments(log);
+  const { total } = await countKept(container, log, { ...adjustments, revision: log.adjustmentRevision });
+  return total.before > 0 ? (total.before - total.after) / total.before : 0;
+}
+
 /** Counts of the revision in force, worked out once for a version of the log and kept with it. */
 async function countKept(
   container: Container,
-  log: LogRow,
+  log: LogVersion,
   { revision, ...adjustments }: Adjustments & { revision: number },
 ): Promise<CleaningPreview> {
   const key = { logId: log.id, version: log.version, kind: `cleaning#${revision}` };
@@ -97,7 +105,7 @@ function wordAnew(item: CleaningItem): CleaningItem {
 
 async function countAdjusted(
   container: Container,
-  log: LogRow,
+  log: LogVersion,
   { delaysS, cleaning }: Adjustments,
 ): Promise<CleaningPreview> {
   const packed = packPlacedLog(await loadPlacedLog(log, "all"));

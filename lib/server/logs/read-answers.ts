@@ -9,6 +9,7 @@ import type { ListQuery } from "@/lib/schemas/listing";
 import { CoverageBody, PassBody, RowStatisticsBody, VerdictBody } from "@/lib/schemas/logs";
 import type { Scope } from "@/lib/scope";
 import { loadAdjustedLog } from "@/lib/server/adjustments/load-adjusted-log";
+import { readLeftOutShare } from "@/lib/server/adjustments/read-cleaning";
 import { answerKind, findAnswer, readAdjustedAnswer } from "@/lib/server/adjustments/read-adjusted-answer";
 import type { Container } from "@/lib/server/create-container";
 import { getReadLog, type LogChoice } from "@/lib/server/logs/find-placed-log";
@@ -39,7 +40,9 @@ export async function getCoverage(_container: Container, scope: Scope, logId: st
 }
 
 export async function getVerdict(container: Container, scope: Scope, input: LogChoice): Promise<VerdictBody> {
-  return VerdictBody.parse(await readAdjustedAnswer(container, await getReadLog(scope, input), "verdict"));
+  const log = await getReadLog(scope, input);
+  const verdict = VerdictBody.parse(await readAdjustedAnswer(container, log, "verdict"));
+  return { ...verdict, leftOutShare: await readLeftOutShare(container, log) };
 }
 
 /** Statistics of every row in a channel; those of a derived channel are worked out once and kept with the version. */

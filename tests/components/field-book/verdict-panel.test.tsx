@@ -94,6 +94,19 @@ describe("the verdict", () => {
     region.remove();
   });
 
+  it("says after cleaning how much is left out of it, and the way to the rules", () => {
+    const cleaned = { ...VERDICT, leftOutShare: 0.2884 };
+    renderInBook(<VerdictPanel verdict={cleaned} rows={8} trouble={false} {...PLACE} />);
+    expect(screen.getByTestId("left-out")).toHaveTextContent(/^After cleaning: 28\.8\s?% of readings left out$/);
+    const link = screen.getByRole("link", { name: /28\.8\s?% of readings left out/ });
+    expect(link).toHaveAttribute("href", `${PLACE.logsHref}/log_east/cleaning`);
+  });
+
+  it.each([0, undefined])("says nothing of cleaning where %s of it is left out", (leftOutShare) => {
+    renderInBook(<VerdictPanel verdict={{ ...VERDICT, leftOutShare }} rows={8} trouble={false} {...PLACE} />);
+    expect(screen.queryByText(/After cleaning/)).toBeNull();
+  });
+
   it("says that it is not known which rows were under target, and the way to the machine", () => {
     const unjudged = { ...VERDICT, rowsUnderTarget: [], findings: [], known: { underTarget: false, atLimit: false } };
     renderInBook(<VerdictPanel verdict={unjudged} rows={8} trouble={false} {...PLACE} />);
