@@ -4,6 +4,7 @@ import { logVersionKey, trackQuery, type LogVersion } from "@/components/field-b
 import type { Cursor, FieldBookStore } from "@/lib/map-state/field-book-store";
 import { locateInPass } from "@/lib/map-state/pass-cells";
 import type { PassTrack } from "@/lib/map-state/pass-track";
+import type { PassBody } from "@/lib/schemas/logs";
 
 /** Where readings of a log are looked for. */
 export interface Finder {
@@ -38,8 +39,15 @@ export function findAtHand(finder: Finder, { lng, lat }: LngLatPlace): Cursor | 
   return null;
 }
 
+/** Whether every pass of the log is in memory: a place on none of them is bare ground, and nobody need be asked. */
+function areAllAtHand(finder: Finder): boolean {
+  const passes = finder.client.getQueryData<PassBody[]>(logVersionKey(finder.log, "passes"));
+  return passes !== undefined && tracksAtHand(finder).length >= passes.length;
+}
+
 /** Asks the server which pass lies under a place and fetches that pass, so that the next look finds it at hand. */
 export async function findFarAway(finder: Finder, place: LngLatPlace): Promise<Cursor | null> {
+  if (areAllAtHand(finder)) return null;
   const { pass } = await fetchReadingAt(finder.log.logId, place.lng, place.lat);
   const track = await finder.client.ensureQueryData(trackQuery(finder.log, finder.store.getState().channel, pass));
   const found = locateInPass(track, place.lng, place.lat);
