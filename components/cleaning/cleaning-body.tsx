@@ -23,6 +23,12 @@ import type { Cleaning } from "@/lib/schemas/cleaning";
 import type { Field } from "@/lib/schemas/fields";
 import type { Log } from "@/lib/schemas/logs";
 
+/** The newest change undid the one before it, so that undoing it does that one again; undoing such a redo is an undo. */
+function isUndo(history: Cleaning["history"], revision: number): boolean {
+  const entry = history.find((one) => one.revision === revision);
+  return entry?.revertedTo === revision - 2 && !isUndo(history, revision - 1);
+}
+
 export interface CleaningBodyProps {
   field: Field;
   log: Log;
@@ -71,7 +77,7 @@ export function CleaningBody({ field, log, cleaning, role, basemap }: CleaningBo
           </h2>
           {mayChange && cleaning.revision > 0 && !isDraft ? (
             <Button disabled={pending} onClick={() => revise.undo.mutate({})}>
-              Undo the last change
+              {isUndo(cleaning.history, cleaning.revision) ? "Redo the last change" : "Undo the last change"}
             </Button>
           ) : null}
         </div>

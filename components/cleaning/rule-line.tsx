@@ -27,6 +27,11 @@ const EXPLAINED: Partial<Record<CleaningItem["code"], string>> = {
     "A usual spread is taken from the middle of the readings, so strays do not widen it: half of all readings lie within two thirds of a spread from their middle.",
 };
 
+/** Readings that tell of lost contact lie at margins of 0 and below, those near it just above. */
+function leavesOutLowMargins({ code }: CleaningItem, rule: RuleDraft): boolean {
+  return code === "physical-range" && Number(rule.marginMinN) > 0;
+}
+
 /** One rule: switch, what it does in words, its numbers, and what it takes out. */
 export function RuleLine({ item, channels, rule, problems, locked, isCounting, onChange }: RuleLineProps) {
   const id = useId();
@@ -61,8 +66,8 @@ export function RuleLine({ item, channels, rule, problems, locked, isCounting, o
               role="group"
               aria-label={`Numbers of “${item.label}”`}
               className={classNames(
-                "flex flex-wrap gap-x-6 gap-y-1 pt-1",
-                parameters.length > 4 && "md:grid md:grid-cols-2 md:justify-items-start",
+                "gap-x-6 gap-y-1 pt-1",
+                parameters.length > 4 ? "grid md:grid-cols-2" : "flex flex-wrap",
               )}
             >
               {parameters.map((parameter) => (
@@ -72,10 +77,17 @@ export function RuleLine({ item, channels, rule, problems, locked, isCounting, o
                   value={Number(rule[parameter.name])}
                   error={problems?.[parameter.name]}
                   disabled={locked}
+                  inColumn={parameters.length > 4}
                   onChange={(value) => onChange({ [parameter.name]: value })}
                 />
               ))}
             </div>
+          ) : null}
+          {leavesOutLowMargins(item, rule) && channels.includes("margin") ? (
+            <p className="max-w-prose border-l-2 border-straw pl-2 text-table">
+              <b className="font-semibold text-straw-deep">Caution.</b> Leaving out low margins improves the verdict:
+              lost contact is what it looks for.
+            </p>
           ) : null}
         </div>
       </div>

@@ -13,6 +13,8 @@ export interface RuleNumberFieldProps {
   value: number;
   error: string | undefined;
   disabled: boolean;
+  /** One of many, one under the other: the boxes stand in one line. */
+  inColumn?: boolean;
   onChange: (value: number) => void;
 }
 
@@ -21,8 +23,8 @@ function write(value: number, factor: number): string {
   return Number.isFinite(value) ? String(Number((value / factor).toPrecision(4))) : "";
 }
 
-/** "first metres [5] m": a rule's number in the person's units, one line. */
-export function RuleNumberField({ parameter, value, error, disabled, onChange }: RuleNumberFieldProps) {
+/** "first [5] m": a rule's number in the person's units, one line. */
+export function RuleNumberField({ parameter, value, error, disabled, inColumn, onChange }: RuleNumberFieldProps) {
   const id = useId();
   const { system } = useUnits();
   const { factor, symbol } = ruleUnit(parameter.unit, system, parameter.channel);
@@ -41,7 +43,14 @@ export function RuleNumberField({ parameter, value, error, disabled, onChange }:
   };
   return (
     <div className="min-w-0">
-      <div className="flex flex-wrap items-center gap-x-2">
+      <div
+        className={classNames(
+          "gap-x-2",
+          inColumn
+            ? "grid grid-cols-[minmax(0,1fr)_10.5rem] items-center md:grid-cols-[8rem_minmax(0,1fr)]"
+            : "flex flex-wrap items-center",
+        )}
+      >
         <label htmlFor={id} className="text-table text-ink-soft">
           {parameter.label}
         </label>

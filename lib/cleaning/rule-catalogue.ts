@@ -101,7 +101,7 @@ export const CLEANING_RULES = {
     words: "lie at the start of a pass, where the machine is still settling: within either of the two numbers",
     on: false,
     fixed: null,
-    numbers: { distanceM: metres("first metres", 5), timeS: seconds("first seconds", 2) },
+    numbers: { distanceM: metres("first", 5), timeS: seconds("or first", 2) },
   },
   "end-ramp": {
     level: "record",
@@ -109,7 +109,7 @@ export const CLEANING_RULES = {
     words: "lie at the end of a pass, where the machine is being lifted: within either of the two numbers",
     on: false,
     fixed: null,
-    numbers: { distanceM: metres("last metres", 5), timeS: seconds("last seconds", 2) },
+    numbers: { distanceM: metres("last", 5), timeS: seconds("or last", 2) },
   },
   turning: {
     level: "record",

@@ -64,7 +64,8 @@ function serve(start: Cleaning = makeCleaning()) {
     }
     if (path.includes("/delays")) return Response.json({ state: "none", progress: 0, channels: [], items: [] });
     if (path.includes("/fields/")) return Response.json(FIELD);
-    return Response.json(makeLogReply({ fieldId: FIELD.id }));
+    const channels = [{ id: "margin", unit: "N", min: -50, max: 900, perRow: true }];
+    return Response.json(makeLogReply({ fieldId: FIELD.id, channels }));
   });
   return asked;
 }
@@ -139,6 +140,12 @@ describe("the rules of a log", () => {
     await userEvent.click(screen.getByRole("button", { name: "Undo the last change" }));
     await waitFor(() => expect(screen.getByRole("switch", { name: "Turning" })).not.toBeChecked());
     expect(screen.getByText("Change 2").closest("li")).toHaveTextContent("back to the log as read");
+    // What undoing an undo does is what its button says.
+    expect(screen.queryByRole("button", { name: "Undo the last change" })).toBeNull();
+    await userEvent.click(screen.getByRole("button", { name: "Redo the last change" }));
+    await waitFor(() => expect(screen.getByRole("switch", { name: "Turning" })).toBeChecked());
+    await userEvent.click(await screen.findByRole("button", { name: "Undo the last change" }));
+    await waitFor(() => expect(screen.getByRole("switch", { name: "Turning" })).not.toBeChecked());
     await userEvent.click(screen.getByRole("button", { name: "Go back to change 1" }));
     await waitFor(() => expect(screen.getByRole("switch", { name: "Turning" })).toBeChecked());
   });
@@ -153,6 +160,33 @@ describe("the rules of a log", () => {
     await waitFor(() => expect(asked.some(({ path }) => path.endsWith("/preview"))).toBe(true));
     const tried = asked.filter(({ path }) => path.endsWith("/preview")).map(({ body }) => body?.rules?.turning.turnDeg);
     expect(tried).toEqual([60]);
+  });
+
+  it("name a number by what it bounds, and leave its unit to the unit", async () => {
+    serve();
+    open({ system: "imperial" });
+    await findSwitch("Start of a pass");
+    // 5 m = 16.40 ft (NIST SP 811).
+    const first = within(ruleLine("start-ramp")).getByRole("textbox", { name: "first" });
+    expect(first).toHaveValue("16.4");
+    expect(first).toHaveAccessibleDescription("ft");
+    expect(within(ruleLine("end-ramp")).getByRole("textbox", { name: "last" })).toHaveValue("16.4");
+    for (const code of ["start-ramp", "end-ramp"]) expect(ruleLine(code)).not.toHaveTextContent(/metre/);
+  });
+
+  it("warn of leaving out the low margins that the verdict looks for", async () => {
+    serve();
+    open();
+    await findSwitch("Beyond what can be");
+    const line = within(ruleLine("physical-range"));
+    const limit = line.getByRole("textbox", { name: "margin under" });
+    expect(line.queryByText(/improves the verdict/)).toBeNull();
+    await userEvent.clear(limit);
+    await userEvent.type(limit, "100");
+    expect(line.getByText(/lost contact is what it looks for/)).toBeVisible();
+    await userEvent.clear(limit);
+    await userEvent.type(limit, "0");
+    expect(line.queryByText(/improves the verdict/)).toBeNull();
   });
 
   it("take numbers in the person's units, and refuse what makes no sense", async () => {
