@@ -5,6 +5,8 @@ import { ContactDefinition, type LogShape } from "@/lib/ingest/mapping";
 export interface ChoiceCheck {
   /** Columns nobody has decided or looked at yet. */
   waiting: string[];
+  /** Questions they make: columns shown as one card are one. */
+  questions: number;
   /** What is wrong with a column, by its name. */
   problems: Record<string, string>;
   /** What is wrong with the whole. */
@@ -18,6 +20,8 @@ export interface ChoiceCheck {
 }
 
 export interface ChoiceExtras {
+  /** Names of the columns of each card; a card each where left out. */
+  cards?: readonly (readonly string[])[];
   /** Columns whose times name no offset from UTC. */
   zoneless?: readonly string[];
   contact?: ContactDefinition | null;
@@ -84,6 +88,12 @@ function findGeneral(choices: Choices, shape: LogShape, extras: ChoiceExtras): s
   return general;
 }
 
+/** Cards with a column that waits, and columns on no card. */
+function countQuestions(waiting: readonly string[], cards: readonly (readonly string[])[]): number {
+  const cardOf = new Map(cards.flatMap((names, card) => names.map((name) => [name, card] as const)));
+  return new Set(waiting.map((name) => cardOf.get(name) ?? name)).size;
+}
+
 /** Everything between the choices and a mapping that can be read. */
 export function checkChoices(choices: Choices, shape: LogShape, extras: ChoiceExtras): ChoiceCheck {
   const entries = Object.entries(choices);
@@ -103,8 +113,10 @@ export function checkChoices(choices: Choices, shape: LogShape, extras: ChoiceEx
   if (asksContact && extras.contact && !ContactDefinition.safeParse(extras.contact).success) {
     general.push("Ground contact: write the load and the time as numbers, or leave them empty.");
   }
+  const waiting = entries.filter(([, choice]) => !choice.seen || choice.use === "undecided").map(([name]) => name);
   return {
-    waiting: entries.filter(([, choice]) => !choice.seen || choice.use === "undecided").map(([name]) => name),
+    waiting,
+    questions: countQuestions(waiting, extras.cards ?? []),
     problems,
     general,
     needsCrs: readsAs(choices, "easting") || readsAs(choices, "northing"),

@@ -101,9 +101,11 @@ function LayerForm({
   const { shape, choices } = layout;
   const [extras, setExtras] = useState(() => startExtras(found, machineId));
   const isConfirmed = found.mapping !== null;
-  const sections = useMemo(() => columnSections(groupColumns(found.columns), isConfirmed), [found, isConfirmed]);
+  const groups = useMemo(() => groupColumns(found.columns), [found]);
+  const sections = useMemo(() => columnSections(groups, isConfirmed), [groups, isConfirmed]);
+  const cards = useMemo(() => groups.map(({ columns }) => columns.map(({ name }) => name)), [groups]);
   const zoneless = useMemo(() => found.columns.filter(hasZonelessTimes).map(({ name }) => name), [found]);
-  const check = checkChoices(choices, shape, { ...extras, zoneless });
+  const check = checkChoices(choices, shape, { ...extras, zoneless, cards });
   const timeZone = check.needsTimeZone ? extras.timeZone : "";
   const problems = { ...refusedColumns(failure), ...check.problems };
   const change: ChangeChoices = (names, patch) => setLayout((before) => changeColumns(before, names, patch));

@@ -39,9 +39,7 @@ export function ConfirmBar({ check, pending, failure }: ConfirmBarProps) {
           {check.waiting.length > 0 ? (
             <p>
               <StateWord state="look">
-                {check.waiting.length === 1
-                  ? "1 column still needs you."
-                  : `${check.waiting.length} columns still need you.`}
+                {check.questions === 1 ? "1 question still needs you." : `${check.questions} questions still need you.`}
               </StateWord>{" "}
               <button
                 type="button"

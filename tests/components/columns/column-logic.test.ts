@@ -60,6 +60,18 @@ describe("what must be decided", () => {
     expect(columnSections(groupColumns(found.columns), false)[0]?.id).toBe("asks");
   });
 
+  it("makes one question of columns on one card", () => {
+    const downforce = { channel: "downforce", unit: "lbf", confidence: 0.5 } as const;
+    const found = makeFound([
+      makeColumn("AUX", null),
+      ...[1, 2, 3].map((row) => makeColumn(`DF_${row}`, { ...downforce, row })),
+    ]);
+    const cards = groupColumns(found.columns).map(({ columns }) => columns.map(({ name }) => name));
+    const check = checkChoices(startChoices(found), "wide", { ...NO_EXTRAS, cards });
+    expect(check.waiting).toEqual(["AUX", "DF_1", "DF_2", "DF_3"]);
+    expect(check.questions).toBe(2);
+  });
+
   it("draws its lines at 0.7 and 0.9", () => {
     expect([0.69, 0.7, 0.89, 0.9].map(confidenceWord)).toEqual(["please check", "likely", "likely", "sure"]);
   });

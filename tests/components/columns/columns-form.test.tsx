@@ -23,7 +23,7 @@ describe("the columns screen", () => {
   it("cannot be confirmed while a column is undecided, and can once it is left out", async () => {
     const { onSave, user } = show();
     expect(screen.getByRole("button", { name: "Read the log" })).toBeDisabled();
-    expect(screen.getByText("1 column still needs you.")).toBeInTheDocument();
+    expect(screen.getByText("1 question still needs you.")).toBeInTheDocument();
     await user.click(screen.getByRole("button", { name: "Leave out" }));
     expect(screen.getByText(/'AUX_3'/).closest("p")).toHaveTextContent("Column 'AUX_3' is not used.");
     await user.click(screen.getByRole("button", { name: "Read the log" }));
