@@ -19,6 +19,18 @@ async function readJson(file: File): Promise<unknown> {
   }
 }
 
+type Places = NonNullable<ApiProblem["problem"]["errors"]>;
+
+/** Not even the outline of a recipe is there: a file of something else. */
+function isForeign(places: Places): boolean {
+  return places.some(({ path, column }) => !column && (!path || path === "mapping" || path === "(root)"));
+}
+
+function refusalWords(failure: unknown, places: Places): string {
+  if (places.length === 0) return describeFailure(failure);
+  return isForeign(places) ? "This is not a recipe file of this program." : "This recipe cannot be used as it stands.";
+}
+
 /** Takes in a recipe that was exported here or elsewhere. What is wrong with it is said place by place. */
 export function RecipeImport({ actions }: { actions: RecipeActions }) {
   const input = useRef<HTMLInputElement>(null);
@@ -50,7 +62,14 @@ export function RecipeImport({ actions }: { actions: RecipeActions }) {
           event.target.value = "";
         }}
       />
-      <Button disabled={takeIn.isPending} onClick={() => input.current?.click()}>
+      <Button
+        disabled={takeIn.isPending}
+        onClick={() => {
+          setUnread(null);
+          takeIn.reset();
+          input.current?.click();
+        }}
+      >
         {takeIn.isPending ? "Taking it in…" : "Take in a recipe file"}
       </Button>
       {unread ? (
@@ -60,15 +79,18 @@ export function RecipeImport({ actions }: { actions: RecipeActions }) {
       ) : null}
       {takeIn.error ? (
         <Notice state="act" urgent title="Not taken in">
-          <p>{describeFailure(takeIn.error)}</p>
+          <p>{refusalWords(takeIn.error, places)}</p>
           {places.length > 0 ? (
-            <ul className="list-disc pl-5">
-              {places.map((place) => (
-                <li key={`${place.path ?? place.column ?? ""} ${place.message}`}>
-                  {place.column ? `Column “${place.column}”` : <code>{place.path}</code>}: {place.message}
-                </li>
-              ))}
-            </ul>
+            <details open={!isForeign(places)}>
+              <summary className="min-h-11 text-slate underline md:min-h-6">Where it is not as it should be</summary>
+              <ul className="list-disc break-words pl-5 text-table">
+                {places.map((place) => (
+                  <li key={`${place.path ?? place.column ?? ""} ${place.message}`}>
+                    {place.column ? `Column “${place.column}”` : <code>{place.path}</code>}: {place.message}
+                  </li>
+                ))}
+              </ul>
+            </details>
           ) : null}
         </Notice>
       ) : null}

@@ -33,25 +33,31 @@ export function useRecipe(recipeId: string | null) {
 export function useRecipeActions() {
   const client = useQueryClient();
   const onSettled = () => client.invalidateQueries({ queryKey: KEY });
+  const takeIn = useMutation({
+    mutationFn: (body: unknown) =>
+      requestJson(Recipe, `${ROOT}/import`, { method: "POST", body, idempotencyKey: crypto.randomUUID() }),
+    onSettled,
+  });
+  /** What was said of a file that was taken in, or not, goes with the next action. */
+  const onMutate = () => takeIn.reset();
   return {
     change: useMutation({
+      onMutate,
       mutationFn: ({ id, patch }: { id: string; patch: z.input<typeof RecipePatch> }) =>
         requestJson(Recipe, `${ROOT}/${id}`, { method: "PATCH", body: patch }),
       onSettled,
     }),
     remove: useMutation({
+      onMutate,
       mutationFn: (recipe: Recipe) => requestNothing(`${ROOT}/${recipe.id}`, { method: "DELETE" }),
       onSettled,
     }),
     restore: useMutation({
+      onMutate,
       mutationFn: (recipe: Recipe) => requestJson(Recipe, `${ROOT}/${recipe.id}/restore`, { method: "POST" }),
       onSettled,
     }),
-    takeIn: useMutation({
-      mutationFn: (body: unknown) =>
-        requestJson(Recipe, `${ROOT}/import`, { method: "POST", body, idempotencyKey: crypto.randomUUID() }),
-      onSettled,
-    }),
+    takeIn,
   };
 }
 

@@ -136,8 +136,31 @@ describe("the recipes of an organisation", () => {
     await userEvent.upload(screen.getByLabelText("Recipe file"), new File(["{]"], "drill.recipe.json"));
     expect(await screen.findByRole("alert")).toHaveTextContent("“drill.recipe.json” is no recipe");
     await userEvent.upload(screen.getByLabelText("Recipe file"), new File(["{}"], "drill.recipe.json"));
-    const alert = await screen.findByText("The recipe is not complete.");
+    const alert = await screen.findByText("This recipe cannot be used as it stands.");
     expect(alert.closest('[role="alert"]')).toHaveTextContent('mapping.columns.3.unit: unknown unit "stone"');
+    expect(screen.getByText(/unknown unit/)).toBeVisible();
+  });
+
+  it("are not to be had from a file of something else, which is said in plain words until the next action", async () => {
+    const problem = {
+      type: "about:blank",
+      title: "Not valid",
+      status: 422,
+      detail: "mapping: Invalid input: expected object, received undefined.",
+      code: "unprocessable",
+      errors: [{ path: "mapping", message: "Invalid input: expected object, received undefined" }],
+    };
+    serve(makeRecipe(), { method: "POST", path: "/api/v1/recipes/import", body: problem });
+    open();
+    await screen.findByRole("table", { name: "Recipes of this organisation" });
+    await userEvent.upload(screen.getByLabelText("Recipe file"), new File(["{}"], "other.json"));
+    expect(await screen.findByText("This is not a recipe file of this program.")).toBeVisible();
+    expect(screen.getByText(/Invalid input/)).not.toBeVisible();
+    await userEvent.click(screen.getByText("Where it is not as it should be"));
+    expect(screen.getByText(/Invalid input/)).toBeVisible();
+    await userEvent.click(screen.getByRole("button", { name: "Delete Drill, pounds" }));
+    await screen.findByText(/was deleted/);
+    expect(screen.queryByText("This is not a recipe file of this program.")).toBeNull();
   });
 
   it("can be looked at only, where the role is to look", async () => {
