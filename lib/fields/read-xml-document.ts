@@ -1,5 +1,6 @@
 import { DOMParser, type Document } from "@xmldom/xmldom";
 import { BoundaryFileFailure } from "@/lib/fields/boundary-file-error";
+import { checkXmlShape } from "@/lib/fields/check-xml-shape";
 
 /** A document type can define entities that grow without end; no place file needs one. */
 const DOCUMENT_TYPE = /<!\s*(DOCTYPE|ENTITY)/i;
@@ -9,6 +10,7 @@ export function readXmlDocument(text: string): Document {
   if (DOCUMENT_TYPE.test(text)) {
     throw new BoundaryFileFailure("file-unsafe", "The file declares a document type or entities; those are not taken.");
   }
+  checkXmlShape(text);
   try {
     return new DOMParser({ onError: () => undefined }).parseFromString(text, "text/xml");
   } catch (cause) {

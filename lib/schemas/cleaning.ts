@@ -60,7 +60,7 @@ export const CleaningChange = z.object({ rules: CleaningRulesChange, note: plain
 export const CleaningPreviewBody = z.object({ rules: CleaningRulesChange });
 /** Without `revert`: the revision before the one in force. */
 export const CleaningUndo = z.object({
-  revert: z.number().int().min(0).optional(),
+  revert: z.number().int().min(0).max(2_147_483_647).optional(),
   note: plainText(200).optional(),
 });
 

@@ -9,7 +9,9 @@ const RecipeName = plainText(120).min(1);
 const RecipeNote = plainText(500);
 const FileFormat = z.enum(LOG_FORMAT_IDS);
 const ColumnNames = z.array(z.string().min(1).max(500)).min(1).max(20_000);
-const VersionNumber = z.number().int().min(1);
+/** As the database counts. */
+const MOST = 2_147_483_647;
+const VersionNumber = z.number().int().min(1).max(MOST);
 
 /** A person of the organisation; the name is null once they left it. */
 const Author = z.object({ id: Id, name: z.string().nullable() });
@@ -58,7 +60,7 @@ export const RecipeListQuery = z.object({
 });
 export type RecipeListQuery = z.infer<typeof RecipeListQuery>;
 
-export const RecipeVersionQuery = z.object({ version: z.coerce.number().int().min(1).optional() });
+export const RecipeVersionQuery = z.object({ version: z.coerce.number().int().min(1).max(MOST).optional() });
 
 /** Body of `POST /recipes`; a name that is there already gains a version. */
 export const RecipeInput = z.object({

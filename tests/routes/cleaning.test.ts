@@ -196,6 +196,8 @@ describe("changing rules", () => {
     expect(await refuse({ "start-ramp": { lengthM: 1 } })).toMatchObject({ status: 422 });
     expect(await refuse({ "no-such-rule": { on: true } })).toMatchObject({ status: 422 });
     const undo = await world.as("owner", { method: "POST", path: path("cleaning/undo"), body: { revert: 999 } });
+    const beyond = { method: "POST", path: path("cleaning/undo"), body: { revert: 2_147_483_648 } };
+    expect((await world.as("owner", beyond)).status).toBe(422);
     expect(undo.status).toBe(422);
   });
 });

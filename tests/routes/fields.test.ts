@@ -156,6 +156,13 @@ describe("deleting a field that holds logs", () => {
 });
 
 describe("boundary files", () => {
+  it("are not read for a field that is not here", async () => {
+    const { id } = await addField("Not theirs");
+    const body = boundaryForm("<kml>".repeat(1000), "field.kml");
+    const path = `/api/v1/fields/${String(id)}/boundary`;
+    expect((await world.as("other-owner", { method: "PUT", path, body })).status).toBe(404);
+  });
+
   const kml = (inside: string) => `<?xml version="1.0"?>${inside}`;
   const polygon =
     '<kml xmlns="http://www.opengis.net/kml/2.2"><Placemark><Polygon><outerBoundaryIs><LinearRing><coordinates>' +

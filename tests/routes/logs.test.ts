@@ -110,6 +110,14 @@ describe("an upload", () => {
     const mapping = await world.upload({ bytes, name: "a.csv", mapping: { shape: "wide", columns } });
     expect(mapping.status).toBe(422);
     expect(await mapping.json()).toMatchObject({ code: "unknown-unit", errors: [{ column: "x" }] });
+    const unstorable = await world.upload({ bytes, name: "a.csv", machineId: "mac_\u0000" });
+    expect(unstorable.status).toBe(422);
+    const system = await world.upload({
+      bytes,
+      name: "a.csv",
+      mapping: { shape: "wide", crs: "x\u0000", columns: [] },
+    });
+    expect(system.status).toBe(422);
     const empty = await world.as("operator", {
       method: "POST",
       path: `/api/v1/fields/${world.fieldId}/logs`,

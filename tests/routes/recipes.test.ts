@@ -47,6 +47,8 @@ describe("versions of a recipe", () => {
     expect((await list()).filter(({ name }) => name === "Drill card")).toHaveLength(1);
     const absent = await world.as("owner", { path: `/api/v1/recipes/${first.id}?version=3` });
     expect(absent.status).toBe(404);
+    const beyond = await world.as("owner", { path: `/api/v1/recipes/${first.id}?version=2147483648` });
+    expect(beyond.status).toBe(422);
   });
 
   it("two savings at once make two versions, never one twice", async () => {

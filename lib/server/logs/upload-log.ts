@@ -15,6 +15,7 @@ import { nameFiles, uploadKey } from "@/lib/server/logs/log-file";
 import { readMapping } from "@/lib/server/logs/map-columns";
 import { noteReadLog, sendReadLog } from "@/lib/server/logs/queue-log";
 import { receiveUpload, type ReceivedFile } from "@/lib/server/logs/receive-upload";
+import { refuseUnstorable } from "@/lib/storable-text";
 
 interface UploadInput {
   fieldId: string;
@@ -42,7 +43,9 @@ export async function uploadLog(container: Container, scope: Scope, input: Uploa
   const { organisationId } = scope;
   const { files, fields } = await receiveUpload(container, { organisationId, request, together });
   try {
+    refuseUnstorable(fields);
     const mapping = parseMappingField(fields.mapping);
+    refuseUnstorable({ mapping });
     const machineId = fields.machineId || null;
     const id = await keepUpload(container, scope, { fieldId, again, files, machineId, mapping });
     await sendReadLog(container, scope, id);
