@@ -9,6 +9,15 @@ import type { Seeder } from "@/lib/machines/machine";
 /** A mapping, and the recipe that it is. */
 export type ExportRecipe = LogMapping & { name: string | null; version: number | null };
 
+/** The original: one file, or a set of them, whose `sha256` is then a hash over the sorted hashes of all. */
+export interface ExportSource {
+  fileName: string;
+  bytes: number;
+  sha256: string;
+  /** Each file as it was sent, in that order. */
+  files: { name: string; bytes: number; sha256: string; records: number | null }[];
+}
+
 /** What travels beside exported data: where it came from, what it means and how it was made. */
 export interface ExportAbout {
   title: string;
@@ -17,7 +26,7 @@ export interface ExportAbout {
   madeAt: string;
   program: "Coulterbook";
   log: { id: string; name: string; kind: string; version: number; startedAt: string | null; endedAt: string | null };
-  source: { fileName: string; bytes: number; sha256: string };
+  source: ExportSource;
   /** The machine as it was when this version was made; null when nobody said. */
   machine: Seeder | null;
   /** Metres: right of the centre line, ahead of the line of rows, width answered for. */

@@ -1,5 +1,5 @@
 import { CLEANING_CODES, ruleFacts } from "@/lib/cleaning/rule-catalogue";
-import type { ExportAbout } from "@/lib/export/about";
+import type { ExportAbout, ExportSource } from "@/lib/export/about";
 import { sayContact } from "@/lib/ingest/columns/say-contact";
 
 const WIDTH = 100;
@@ -14,8 +14,7 @@ export function readmeText(
     `${oneLine(about.title)}\n\nMade by Coulterbook on ${about.madeAt}. ${metadataName} holds the same as JSON.`,
     section("Where it came from", [
       `Log ${log.id}, version ${log.version}, ${log.kind}, ${log.startedAt ?? "start unknown"} to ${log.endedAt ?? "end unknown"}.`,
-      `Original file: ${oneLine(source.fileName)}, ${source.bytes} bytes.`,
-      `SHA-256 ${source.sha256}`,
+      ...sourceLines(source),
       machine
         ? `Machine: ${oneLine(machine.name)}, ${machine.rowCount} rows ${machine.rowSpacingM} m apart.`
         : "Machine: nobody said which; the rows are spread evenly by a guess.",
@@ -40,6 +39,19 @@ export function readmeText(
     section("Meaning given to the original's columns", recipeLines(about)),
   ];
   return sections.filter((text) => text !== "").join("\n\n") + "\n";
+}
+
+/** One file, or every file of a set with a hash of its own. */
+function sourceLines({ fileName, bytes, sha256, files }: ExportSource): string[] {
+  if (files.length < 2) return [`Original file: ${oneLine(fileName)}, ${bytes} bytes.`, `SHA-256 ${sha256}`];
+  return [
+    `Original files: ${files.length}, ${bytes} bytes together, in the order they were sent.`,
+    ...files.flatMap((file, index) => {
+      const records = file.records === null ? "" : `, ${file.records} records`;
+      return [`File ${index + 1}: ${oneLine(file.name)}, ${file.bytes} bytes${records}.`, `SHA-256 ${file.sha256}`];
+    }),
+    `SHA-256 of the set (over the sorted hashes of its files, one a line): ${sha256}`,
+  ];
 }
 
 function recipeLines({ recipe }: ExportAbout): string[] {

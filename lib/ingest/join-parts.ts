@@ -131,6 +131,7 @@ export async function readPartsBy(
     log: joined.value.log,
     notes: [...noteParts({ parts, repeated }, empty), ...joined.value.notes, ...notes],
     fileRecords: sources.map((source) => recordsOf.get(source) ?? 0),
+    fileParts: joined.value.parts.map((one) => ({ ...one, file: sources.indexOf(read[one.file]!.part) })),
     ...(device ? { device } : {}),
   });
 }

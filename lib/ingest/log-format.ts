@@ -2,6 +2,7 @@ import type { ByteSource } from "@/lib/ingest/byte-source";
 import type { ZipArchive } from "@/lib/ingest/formats/zip/open-zip";
 import type { LogMapping, LogShape } from "@/lib/ingest/mapping";
 import type { ChannelId } from "@/lib/logs/channel";
+import type { FilePart } from "@/lib/logs/file-parts";
 import type { LogNote, MachineLog } from "@/lib/logs/machine-log";
 import type { UnitId } from "@/lib/units/unit-table";
 
@@ -117,6 +118,8 @@ export interface ReadLog {
   device?: LoggedDevice;
   /** Of a log in several files: how many records came from each, in the order the files were given. */
   fileRecords?: number[];
+  /** Of a log in several files: which stretch of its records came from which, in the order of the records. */
+  fileParts?: FilePart[];
 }
 
 /** One kind of file. `inspect` and `read` may throw IngestFailure; `lib/ingest/index.ts` turns that into a Result. */

@@ -1,5 +1,6 @@
 import type { LeftOut } from "@/lib/cleaning/left-out";
 import type { LocalPlane } from "@/lib/geo/local-plane";
+import type { LogFileParts } from "@/lib/logs/file-parts";
 import type { MachineLog } from "@/lib/logs/machine-log";
 import type { Seeder } from "@/lib/machines/machine";
 
@@ -53,4 +54,6 @@ export interface PlacedLog {
   passes: Pass[];
   /** What cleaning rules took out of the channels; absent for a log as it was read. */
   leftOut?: LeftOut;
+  /** Of a log in several files, where it is asked from which of them records came. */
+  fileParts?: LogFileParts;
 }

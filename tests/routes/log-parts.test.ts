@@ -1,6 +1,7 @@
 import { createHash } from "node:crypto";
 import { unzipSync, zipSync } from "fflate";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import type { ExportAbout } from "@/lib/export/about";
 import type { Log, LogColumns, RowStatisticsBody } from "@/lib/schemas/logs";
 import { confirmedMapping } from "@/tests/support/log-mapping";
 import { fixtureBytes, makeLogWorld, type LogWorld } from "@/tests/support/make-log-world";
@@ -71,6 +72,26 @@ async function findKeptHashes(): Promise<string[]> {
   return keys.map((key) => key.split("/").at(-1)!);
 }
 
+/** An export names the file and the line in it of every record, and lists the files with their hashes. */
+async function expectOwnLines({ id }: Log) {
+  const path = `/api/v1/logs/${id}/export?format=csv&shape=wide&bundle=zip`;
+  const zipped = unzipSync(new Uint8Array(await (await world.as("researcher", { path })).arrayBuffer()));
+  const [name = ""] = Object.keys(zipped).filter((one) => one.endsWith(".csv"));
+  const [head = "", ...records] = Buffer.from(zipped[name]!).toString().trimEnd().split("\r\n");
+  const [file, line] = ["sourceFile", "sourceLine"].map((column) => head.split(",").indexOf(column));
+  const found = records.map((record) => record.split(",")).map((cells) => [Number(cells[file!]), Number(cells[line!])]);
+  // Sent as card-2 (30 lines), card-1 (100), card-3: in time card-1, card-2, card-3, each from line 2 on.
+  const wanted = lines.map((_, k) => (k < 100 ? [2, k + 2] : k < 130 ? [1, k - 98] : [3, k - 128]));
+  expect(found).toEqual(wanted);
+  const readme = Buffer.from(zipped["README.txt"]!).toString();
+  for (const [index, [fileName, content]] of PARTS.entries()) {
+    expect(readme).toContain(`File ${index + 1}: ${fileName}, ${Buffer.byteLength(content)} bytes`);
+    expect(readme).toContain(`SHA-256 ${sha256(content)}`);
+  }
+  const about = JSON.parse(Buffer.from(zipped["metadata.json"]!).toString()) as ExportAbout;
+  expect(about.source.files.map((one) => one.sha256)).toEqual(PARTS.map(([, content]) => sha256(content)));
+}
+
 describe("several files sent together", () => {
   it("are one log, the same as the uncut file, whatever order they came in", async () => {
     const { log: whole, mapping } = await wholeLog();
@@ -95,6 +116,7 @@ describe("several files sent together", () => {
       })),
     );
     expect(log.notes.map((note) => note.code)).toContain("parts-joined");
+    await expectOwnLines(log);
   });
 
   it("are each kept as they came: one by one, or all in a zip", async () => {

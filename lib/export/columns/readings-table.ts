@@ -2,6 +2,7 @@ import { resolveChannel } from "@/lib/channels/resolve-channel";
 import { FLAGS, flagCodes } from "@/lib/cleaning/flags";
 import { channelColumn } from "@/lib/export/columns/name-channel-column";
 import { leftOutColumn } from "@/lib/export/columns/left-out-column";
+import { sourceColumns } from "@/lib/export/columns/source-columns";
 import { makeNamesUnique } from "@/lib/export/columns/make-names-unique";
 import {
   BATCH_ROWS,
@@ -43,7 +44,7 @@ const LONGEST_FLAGS = Object.keys(FLAGS).join(";").length;
 export function readingsTable(outline: PlacedLog): ReadingsTable {
   const rowsARecord = machineRows(outline);
   const columns = [
-    ...recordColumns(),
+    ...recordColumns(outline),
     rowNumberColumn(),
     timeColumn(outline.log.timeIsRelative),
     ...rowPlaceColumns(),
@@ -89,7 +90,7 @@ export function* readingsBatches(table: ReadingsTable, part: LogPart): Generator
   }
 }
 
-export function recordColumns(): ReadingColumn[] {
+export function recordColumns({ fileParts }: Pick<PlacedLog, "fileParts">): ReadingColumn[] {
   return [
     {
       name: "record",
@@ -99,17 +100,7 @@ export function recordColumns(): ReadingColumn[] {
       meaning: "Number of the record in the log, from 0.",
       prepare: (part) => (record) => part.firstRecord + record,
     },
-    {
-      name: "sourceLine",
-      shortName: "LINE",
-      kind: "integer",
-      unit: "",
-      meaning: "Line (or feature) of the original file that the record came from.",
-      prepare:
-        ({ placed }) =>
-        (record) =>
-          placed.log.sourceLine[record]!,
-    },
+    ...sourceColumns(fileParts),
     {
       name: "pass",
       shortName: "PASS",

@@ -22,7 +22,7 @@ import type { PlacedLog } from "@/lib/logs/placed-log";
  */
 export function wideReadingsTable(outline: PlacedLog): ReadingsTable {
   const columns = [
-    ...recordColumns(),
+    ...recordColumns(outline),
     timeColumn(outline.log.timeIsRelative),
     ...middlePlaceColumns(),
     ...motionColumns(),

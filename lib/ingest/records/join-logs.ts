@@ -1,14 +1,22 @@
 import { ingestError, type IngestError } from "@/lib/ingest/ingest-error";
 import { READ_LIMITS } from "@/lib/ingest/log-format";
 import { readingRoom } from "@/lib/ingest/records/growing-columns";
+import type { FilePart } from "@/lib/logs/file-parts";
 import type { LogChannel, LogNote, MachineLog } from "@/lib/logs/machine-log";
 import { fail, succeed, type Result } from "@/lib/result";
+
+export interface JoinedLogs {
+  log: MachineLog;
+  notes: LogNote[];
+  /** The stretches of the whole in order: `file` is a log's place among those given. */
+  parts: FilePart[];
+}
 
 /**
  * Several logs read by one mapping as one: in the order of their first time where all have one, else as given. A channel that
  * a part lacks is missing there; a part with fewer rows lacks the rows to the right. Relative times of later parts follow on.
  */
-export function joinLogs(logs: readonly MachineLog[]): Result<{ log: MachineLog; notes: LogNote[] }, IngestError> {
+export function joinLogs(logs: readonly MachineLog[]): Result<JoinedLogs, IngestError> {
   const records = logs.reduce((sum, log) => sum + log.records, 0);
   const rows = Math.max(...logs.map((log) => log.rows));
   const channelIds = [...new Set(logs.flatMap((log) => log.channels.map((channel) => channel.id)))];
@@ -38,7 +46,7 @@ export function joinLogs(logs: readonly MachineLog[]): Result<{ log: MachineLog;
     sourceLine: joinSourceLines(ordered, records),
     channels: channelIds.flatMap((id) => joinChannel(ordered, id, rows)),
   };
-  return succeed({ log, notes });
+  return succeed({ log, notes, parts: partsOf(logs, ordered) });
 }
 
 function firstTimeMs({ timeMs }: MachineLog): number {
@@ -100,6 +108,16 @@ function joinSourceLines(logs: readonly MachineLog[], records: number): Uint32Ar
     at += count;
   }
   return joined;
+}
+
+/** Where the records of each log came to lie, and how far its lines were moved by `joinSourceLines`. */
+function partsOf(given: readonly MachineLog[], ordered: readonly MachineLog[]): FilePart[] {
+  let before = 0;
+  return ordered.map((log) => {
+    const part = { file: given.indexOf(log), records: log.records, linesBefore: before };
+    before += log.sourceLine[log.records - 1] ?? 0;
+    return part;
+  });
 }
 
 function joinChannel(logs: readonly MachineLog[], id: LogChannel["id"], rows: number): LogChannel[] {

@@ -27,6 +27,7 @@ import { csvChunks, geojsonChunks } from "@/lib/server/export/text-chunks";
 import { writeGeopackage } from "@/lib/server/export/write-geopackage";
 import { writeShapefile } from "@/lib/server/export/write-shapefile";
 import { zipChunks, type ZipEntry } from "@/lib/server/export/zip-chunks";
+import { describeLogFiles, findFileParts } from "@/lib/server/logs/describe-log-files";
 import { getReadLog } from "@/lib/server/logs/find-placed-log";
 import { findRecipeOfLog } from "@/lib/server/logs/recipe-of-log";
 
@@ -65,15 +66,23 @@ export async function exportLog(
   const log = await getReadLog(scope, { logId, cleaned: query.cleaned });
   const frame = await loadLogFrame(scope, log, channelsOfExport(query));
   const adjustments = query.level === "swaths" ? null : await loadKnownAdjustments(container, log);
-  const outline = { ...outlineOfFrame(frame), ...(adjustments?.leftOut ? { leftOut: adjustments.leftOut } : {}) };
+  const { recipe, files, fileParts } = await withOrganisation(scope, async (tx) => ({
+    recipe: await findRecipeOfLog(tx, scope, log),
+    files: await describeLogFiles(tx, scope, log),
+    fileParts: await findFileParts(tx, scope, log),
+  }));
+  const outline = {
+    ...outlineOfFrame(frame),
+    ...(adjustments?.leftOut ? { leftOut: adjustments.leftOut } : {}),
+    ...(fileParts ? { fileParts } : {}),
+  };
   const source = chooseTable(outline, query);
   const madeOn = container.clock.now();
-  const recipe = await withOrganisation(scope, (tx) => findRecipeOfLog(tx, scope, log));
   const job: Job = {
     query,
     table: source.table,
     batches: batchesOf(source, readLogParts(scope, log, frame), adjustments),
-    about: aboutLog({ log, outline, adjustments, source, query, madeOn, recipe }),
+    about: aboutLog({ log, outline, adjustments, source, query, madeOn, recipe, files }),
     madeOn,
     dataDir: container.env.DATA_DIR,
     name: nameExport(log.name, query.level),
@@ -120,8 +129,9 @@ function aboutLog(input: {
   query: ExportQuery;
   madeOn: Date;
   recipe: LogColumns["recipe"];
+  files: Awaited<ReturnType<typeof describeLogFiles>>;
 }): ExportAbout {
-  const { log, outline, source, query, madeOn, recipe, adjustments } = input;
+  const { log, outline, source, query, madeOn, recipe, adjustments, files } = input;
   const { level, shape, channel, breaks, minLengthM } = query;
   const { readings } = source;
   const names = query.format === "shapefile" ? "shortName" : "name";
@@ -138,7 +148,12 @@ function aboutLog(input: {
       startedAt: log.startedAt?.toISOString() ?? null,
       endedAt: log.endedAt?.toISOString() ?? null,
     },
-    source: { fileName: log.fileName, bytes: log.fileBytes, sha256: log.sha256 },
+    source: {
+      fileName: log.fileName,
+      bytes: log.fileBytes,
+      sha256: log.sha256,
+      files: files.map(({ name, bytes, sha256, records }) => ({ name, bytes, sha256, records })),
+    },
     recipe: log.mapping && { ...log.mapping, name: recipe?.name ?? null, version: recipe?.version ?? null },
     notes: log.notes,
     adjustments: adjustments && {

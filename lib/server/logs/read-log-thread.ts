@@ -60,7 +60,7 @@ async function read(task: Extract<ThreadTask, { task: "read" }>): Promise<void> 
     say({ kind: "placed", placed: packPlacedLog(built.placed) });
     const answers = buildAnswers(built, { boundary: task.boundary, tell });
     const records = outcome.value.fileRecords ?? [outcome.value.log.records];
-    answers.results.push({ kind: "files", body: { records } });
+    answers.results.push({ kind: "files", body: { records, parts: outcome.value.fileParts ?? null } });
     say({ kind: "built", outcome: succeed(answers) });
   } catch (error) {
     if (!(error instanceof LogFailure)) throw error;

@@ -5,7 +5,7 @@ import { exportPath } from "@/lib/export/export-path";
 import { nameExport } from "@/lib/export/name-export";
 import { readmeText } from "@/lib/export/readme-text";
 import { dbfNumber, dbfRows } from "@/lib/export/shapefile/dbf";
-import { exportReadings, mustBuild } from "@/tests/lib/export/make-export";
+import { cellsOf, exportReadings, mustBuild } from "@/tests/lib/export/make-export";
 import { createFixtureLog } from "@/tests/support/fixture-logs";
 
 const hex = (bytes: Uint8Array) => Buffer.from(bytes).toString("hex");
@@ -72,5 +72,48 @@ describe("names and notes", () => {
     expect(text).toContain("MARGIN_N (marginN) [N]: Weight left on the gauge wheels");
     expect(text).toContain("8-row plot drill, 8 rows 0.25 m apart");
     expect(text.split("\n").filter((line) => line === "Method")).toHaveLength(1);
+  });
+
+  it("list every file of a log in several with its own hash, and say that the other is the set's", () => {
+    const { log, truth } = createFixtureLog();
+    const { about } = exportReadings(mustBuild(log, truth.options.machine));
+    const files = ["cd", "ef"].map((pair, index) => ({
+      name: `card-${index + 1}.csv`,
+      bytes: 400 + index,
+      sha256: pair.repeat(32),
+      records: index === 0 ? 40 : null,
+    }));
+    const text = readmeText(
+      { ...about, source: { ...about.source, files } },
+      { names: "long", metadataName: "metadata.json" },
+    );
+    expect(text).toContain(`File 1: card-1.csv, 400 bytes, 40 records.\nSHA-256 ${"cd".repeat(32)}`);
+    expect(text).toContain(`File 2: card-2.csv, 401 bytes.\nSHA-256 ${"ef".repeat(32)}`);
+    expect(text.replaceAll(/\s+/g, " ")).toContain(
+      `SHA-256 of the set (over the sorted hashes of its files, one a line): ${"ab".repeat(32)}`,
+    );
+  });
+
+  it("say of a log in several files which file and line each record came from", () => {
+    const { log, truth } = createFixtureLog();
+    const placed = mustBuild(log, truth.options.machine);
+    const [first, second] = [100, log.records - 100];
+    const parts = [
+      { file: 1, records: first, linesBefore: 0 },
+      { file: 0, records: second, linesBefore: 101 },
+    ];
+    for (const shape of ["long", "wide"] as const) {
+      const { table, batches } = exportReadings({ ...placed, fileParts: { files: 2, parts } }, shape);
+      const rows = shape === "long" ? 8 : 1;
+      const [file, line] = [cellsOf(table, batches, "sourceFile"), cellsOf(table, batches, "sourceLine")];
+      expect(file).toHaveLength(log.records * rows);
+      expect([file[0], file[100 * rows - 1], file[100 * rows], file.at(-1)]).toEqual([2, 2, 1, 1]);
+      expect(line[0]).toBe(log.sourceLine[0]);
+      expect(line[100 * rows]).toBe(log.sourceLine[100]! - 101);
+      expect(line.at(-1)).toBe(log.sourceLine.at(-1)! - 101);
+    }
+    const older = exportReadings({ ...placed, fileParts: { files: 2, parts: null } }).table.columns;
+    expect(older.map(({ name }) => name)).not.toContain("sourceFile");
+    expect(older.find(({ name }) => name === "sourceLine")?.meaning).toContain("counted on from file to file");
   });
 });

@@ -45,7 +45,7 @@ export function aboutOf(described: Described): ExportAbout {
     ...described,
     madeAt: "2026-12-01T12:00:00.000Z",
     log: { id: "log_one", name: "East quarter", kind: "seeding", version: 1, startedAt: null, endedAt: null },
-    source: { fileName: "east.csv", bytes: 1000, sha256: "ab".repeat(32) },
+    source: { fileName: "east.csv", bytes: 1000, sha256: "ab".repeat(32), files: [] },
     recipe: null,
     adjustments: null,
     notes: [],

@@ -29,10 +29,18 @@ async function mustReadParts(...[sources, mapping]: Parameters<typeof readParts>
 
 describe("several files as one log", () => {
   it("stand in the order of their times, whatever order they were given in", async () => {
-    const { log, notes } = await mustReadParts([part("c.csv", 20), part("a.csv", 0), part("b.csv", 10)], CLOCK);
+    const { log, notes, fileParts } = await mustReadParts(
+      [part("c.csv", 20), part("a.csv", 0), part("b.csv", 10)],
+      CLOCK,
+    );
     expect(log.records).toBe(9);
     expect([...log.timeMs].map((ms) => ms / 1000 - 1_790_000_000)).toEqual([0, 1, 2, 10, 11, 12, 20, 21, 22]);
     expect([...log.sourceLine]).toEqual([2, 3, 4, 6, 7, 8, 10, 11, 12]);
+    expect(fileParts).toEqual([
+      { file: 1, records: 3, linesBefore: 0 },
+      { file: 2, records: 3, linesBefore: 4 },
+      { file: 0, records: 3, linesBefore: 8 },
+    ]);
     expect(notes.map(({ code, count }) => [code, count])).toEqual([["parts-joined", 3]]);
   });
 
