@@ -43,7 +43,13 @@ export function LogFacts({ log }: { log: Log }) {
       {log.notes.filter(isSaidHere).map((note) => (
         <Notice key={`${note.code} ${note.file ?? ""} ${note.message}`} state="look">
           {note.message}
-          {note.firstLine === undefined ? null : <span className="tabular"> First at line {note.firstLine}.</span>}
+          {note.firstLine === undefined ? null : (
+            <span className="tabular">
+              {" "}
+              First at line {note.firstLine}
+              {note.file === undefined ? null : ` of ${note.file}`}.
+            </span>
+          )}
         </Notice>
       ))}
     </div>

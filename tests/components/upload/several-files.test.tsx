@@ -117,4 +117,13 @@ describe("the facts of a log in several files", () => {
     );
     expect(screen.getByText(/40 records, sent 2 times/)).toBeInTheDocument();
   });
+
+  it("name the file whose line a note speaks of", () => {
+    const note = { code: "ragged-rows", count: 2, firstLine: 185, message: "2 lines were left out." };
+    const { unmount } = render(<LogFacts log={makeLogReply({ notes: [{ ...note, file: "part-2.csv" }] })} />);
+    expect(screen.getByText("First at line 185 of part-2.csv.")).toBeInTheDocument();
+    unmount();
+    render(<LogFacts log={makeLogReply({ notes: [note] })} />);
+    expect(screen.getByText("First at line 185.")).toBeInTheDocument();
+  });
 });
