@@ -1,16 +1,17 @@
 import { formatBytes, formatMoment } from "@/components/ui/format-date";
 import { Notice } from "@/components/ui/notice";
+import { RowOrderWords } from "@/components/upload/row-order-words";
 import { formatNumber } from "@/lib/units/format-quantity";
-import { OUTSIDE_FIELD } from "@/lib/logs/note-codes";
+import { OUTSIDE_FIELD, ROW_ORDER_UNCHECKED } from "@/lib/logs/note-codes";
 import type { Log } from "@/lib/schemas/logs";
 
 function formatCount(value: number): string {
   return formatNumber(value, 0);
 }
 
-/** A log that lies outside its field is told above, with what to do about it. */
+/** A log that lies outside its field is told above, with what to do about it; that nothing is known is no warning. */
 function isSaidHere(note: Log["notes"][number]): boolean {
-  return note.code !== OUTSIDE_FIELD;
+  return note.code !== OUTSIDE_FIELD && note.code !== ROW_ORDER_UNCHECKED;
 }
 
 /** What was found in the file, and what was noticed while reading it. */
@@ -52,6 +53,7 @@ export function LogFacts({ log }: { log: Log }) {
           )}
         </Notice>
       ))}
+      <RowOrderWords log={log} />
     </div>
   );
 }

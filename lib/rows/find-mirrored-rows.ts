@@ -19,7 +19,8 @@ export interface MirroredRows {
   reason: string;
 }
 
-const FEWEST_ROWS = 4;
+/** With fewer rows left and right cannot be told apart. */
+export const FEWEST_ROWS = 4;
 const FEWEST_RUNS = 6;
 /** So large a share of the runs must agree on one side. Six of six fall that way by chance once in 32. */
 const AGREED_SHARE = 0.85;

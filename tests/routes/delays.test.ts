@@ -91,13 +91,21 @@ describe("the second look at a log that is ready", () => {
     const notesAfterLook = async () => {
       await setLook(logId, { state: "waiting", attempts: 0 });
       await lookCloser({ organisationId: LARKSPUR, logId }, options());
-      return (await world.getLog(logId)).notes.filter(({ code }) => code === "rows-mirrored");
+      const { notes } = await world.getLog(logId);
+      return notes.filter(({ code }) => code === "rows-mirrored" || code === "row-order-unchecked");
     };
     await found("mirrored");
     expect(await notesAfterLook()).toMatchObject([{ message: "Rows seem mirrored left to right." }]);
     expect(await notesAfterLook()).toHaveLength(1);
-    await found("cannot-tell");
+    await found("as-logged");
     expect(await notesAfterLook()).toEqual([]);
+    await found("cannot-tell");
+    expect(await notesAfterLook()).toMatchObject([
+      {
+        code: "row-order-unchecked",
+        message: expect.stringMatching(/^Row order \(row 1 left\) could not be checked: /),
+      },
+    ]);
   });
 
   it("refuses channels that cannot be late, and delays beyond reason", async () => {

@@ -4,12 +4,15 @@ import { findLogResult } from "@/db/queries/log-results";
 import { changeLog, findLogForChange, type LogRow } from "@/db/queries/logs";
 import { LATE_CHANNEL, ROWS_DISPLACED, sayLateChannels } from "@/lib/alignment/say-late-channels";
 import { channelWords } from "@/lib/legend/channel-words";
+import { ROW_ORDER_UNCHECKED } from "@/lib/logs/note-codes";
+import { FEWEST_ROWS } from "@/lib/rows/find-mirrored-rows";
+import { sayUncheckedRowOrder } from "@/lib/rows/say-row-order";
 import type { Scope } from "@/lib/scope";
 import { delayKind, LOOK, Look, MIRRORED, StoredDelay, StoredMirror } from "@/lib/server/alignment/stored-look";
 
 /** Code of the note on rows that are mirrored left to right. */
 export const ROWS_MIRRORED = "rows-mirrored";
-const CODES: readonly string[] = [LATE_CHANNEL, ROWS_DISPLACED, ROWS_MIRRORED];
+const CODES: readonly string[] = [LATE_CHANNEL, ROWS_DISPLACED, ROWS_MIRRORED, ROW_ORDER_UNCHECKED];
 
 /**
  * Puts the notes of the second look right: what it found of the log's version, less what the adjustments in force mend.
@@ -23,7 +26,8 @@ export async function settleLookNotes(tx: Transaction, scope: Scope, logId: stri
   if (JSON.stringify(notes) !== JSON.stringify(log.notes)) await changeLog(tx, scope, logId, { notes });
 }
 
-async function findNotes(tx: Transaction, scope: Scope, { id: logId, version }: LogRow): Promise<LogRow["notes"]> {
+async function findNotes(tx: Transaction, scope: Scope, log: LogRow): Promise<LogRow["notes"]> {
+  const { id: logId, version } = log;
   const result = (kind: string) => findLogResult(tx, scope, { logId, version, kind });
   const look = Look.safeParse(await result(LOOK));
   if (!look.success) return [];
@@ -38,9 +42,16 @@ async function findNotes(tx: Transaction, scope: Scope, { id: logId, version }: 
     });
   }
   const mirror = StoredMirror.safeParse(await result(MIRRORED));
-  const isMirrored = mirror.success && mirror.data.state === "mirrored";
   return [
     ...sayLateChannels(delays, (channel) => channelWords(channel).name),
-    ...(isMirrored ? [{ code: ROWS_MIRRORED, count: mirror.data.evidence.runs, message: mirror.data.reason }] : []),
+    ...(mirror.success ? rowOrderNotes(log, mirror.data) : []),
   ];
+}
+
+/** Of a log whose rows have an order at all: that it is the wrong one, or that nobody could check it. */
+function rowOrderNotes({ counts, channels }: LogRow, { state, evidence, reason }: StoredMirror): LogRow["notes"] {
+  if (state === "mirrored") return [{ code: ROWS_MIRRORED, count: evidence.runs, message: reason }];
+  const hasRows = counts.rows >= FEWEST_ROWS && channels.some(({ perRow }) => perRow);
+  if (state !== "cannot-tell" || !hasRows) return [];
+  return [{ code: ROW_ORDER_UNCHECKED, count: 1, message: sayUncheckedRowOrder({ evidence, reason }) }];
 }
