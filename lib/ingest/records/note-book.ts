@@ -22,6 +22,12 @@ export class NoteBook {
     this.entries.delete(code);
   }
 
+  /** Takes one back of what was counted: it is told by another note. */
+  takeBack(code: string): void {
+    const entry = this.entries.get(code);
+    if (entry && --entry.count === 0) this.entries.delete(code);
+  }
+
   countOf(code: string): number {
     return this.entries.get(code)?.count ?? 0;
   }

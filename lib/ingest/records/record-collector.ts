@@ -60,6 +60,7 @@ export class RecordCollector {
   private capacity: number;
   private readonly expectedLines: number;
   private linesTaken = 0;
+  private lastLineTaken = 0;
   private linesRejected = 0;
   private lastTimeMs = NaN;
   private latestTimeMs = -Infinity;
@@ -141,9 +142,17 @@ export class RecordCollector {
     this.notes.add(code, lineNumber);
   }
 
+  /** The line just left out as ragged is the last, has too few fields and no line end: the file was cut in it. */
+  noteCutLine(lineNumber: number): void {
+    if (this.linesTaken === 0) return;
+    this.notes.takeBack("ragged-rows");
+    this.notes.add("cut-short", lineNumber, String(this.lastLineTaken));
+  }
+
   /** Takes the filled line. Stops with `latitude-out-of-range`, `too-many-records` and the like. */
   commit(lineNumber: number): void {
     this.linesTaken++;
+    this.lastLineTaken = lineNumber;
     if (this.plan.missing.length > 0) this.dropMissing(lineNumber);
     if (this.plan.row) this.commitRow(lineNumber, this.plan.row);
     else this.commitRecord(lineNumber);

@@ -5,6 +5,8 @@ interface Say {
   n(one: string, many: string): string;
   records: string;
   column: string | undefined;
+  place: string;
+  firstLine: number | undefined;
   /** " The first is line 12.", or nothing. */
   first: string;
 }
@@ -49,7 +51,10 @@ const SENTENCES: Record<string, (say: Say) => string> = {
     `The .shp and .dbf parts disagree by ${say.records}; only the records found in both were read.`,
   "unknown-code-page": () =>
     "The .cpg names a code page that is not known here; names and texts were read as Windows-1252. Where letters look wrong, export the log with UTF-8.",
-  "cut-short": () => "The .shp ends before the length it states: it was cut short on the way.",
+  "cut-short": (say) =>
+    say.place === "line"
+      ? `The file ends in the middle of line ${say.firstLine ?? 0}: it may be cut off; the last whole record is line ${say.column ?? ""}.`
+      : "The .shp ends before the length it states: it was cut short on the way.",
   "shapes-without-table": (say) =>
     `${say.n(".shp file has", ".shp files have")} no .dbf beside ${say.count === 1 ? "it" : "them"} and ${say.count === 1 ? "was" : "were"} left out.`,
   "old-datum": () =>
@@ -134,6 +139,6 @@ export const NOTE_CODES = Object.keys(SENTENCES);
 export function sayNote(code: string, count: number, { place, firstLine, column }: NotePlace): string {
   const n = (one: string, many: string) => `${count.toLocaleString("en-US")} ${count === 1 ? one : many}`;
   const first = firstLine === undefined ? "" : ` The first is ${place} ${firstLine}.`;
-  const say: Say = { count, n, records: n("record", "records"), column, first };
+  const say: Say = { count, n, records: n("record", "records"), column, place, firstLine, first };
   return SENTENCES[code]?.(say) ?? `${code}: ${count}.${first}`;
 }

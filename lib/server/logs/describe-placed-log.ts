@@ -54,7 +54,7 @@ function timeSpan(placed: PlacedLog): { startedAt: Date | null; endedAt: Date | 
 }
 
 /** Notes of the reader about records it left out; their count is the log's `rejected`. */
-const REJECTED_NOTES = /reject|ragged|skipped|duplicate-record/;
+const REJECTED_NOTES = /reject|ragged|skipped|duplicate-record|cut-short/;
 
 /** What the log's row in the database tells about it; `resistance` where the log can give it. */
 export function describePlacedLog(

@@ -113,6 +113,7 @@ async function readCsv(source: ByteSource, mapping: LogMapping, options: ReadOpt
       delimiter: dialect.delimiter.charCodeAt(0),
       decoder: new TextDecoder(encoding.encoding),
       lineNumber: 0,
+      raggedFields: 0,
       linesBefore: dialect.linesBefore,
       headLines: cutHeadLines(layout),
     };

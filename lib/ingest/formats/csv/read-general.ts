@@ -41,6 +41,13 @@ export async function readGeneral(
   const { rows, isOpen } = parseCsvText(rest, { ...dialect, isLast: true });
   if (isOpen) stopUnclosedQuote(state.lineNumber + 1);
   takeRows(rows, collector, { state, dialect });
+  const last = rows.at(-1);
+  if (!last || /[\r\n]$/.test(rest) || isBlank(last)) return;
+  if (last.length < collector.plan.columnCount) collector.noteCutLine(state.lineNumber + 1 - countLines(last));
+}
+
+function isBlank(row: readonly string[]): boolean {
+  return row.length === 1 && row[0] === "";
 }
 
 function takeRows(
@@ -56,7 +63,7 @@ function takeRows(
       state.rowsBefore--;
       continue;
     }
-    if (row.length === 1 && row[0] === "") continue;
+    if (isBlank(row)) continue;
     if (row.length !== columnCount) {
       collector.rejectLine("ragged-rows", lineNumber);
       continue;

@@ -30,8 +30,13 @@ export async function readPlain(source: ByteSource, scan: PlainScan, markBytes: 
     length -= end;
   }
   if (length === 0) return true;
+  // What is left has no line end of its own: where it lacks fields too, the file was cut in it.
   buffer[length] = LINE_FEED;
-  return scanPlainLines(scan, buffer, length + 1);
+  scan.raggedFields = 0;
+  if (!scanPlainLines(scan, buffer, length + 1)) return false;
+  const { collector, raggedFields, lineNumber } = scan;
+  if (raggedFields > 0 && raggedFields < collector.plan.columnCount) collector.noteCutLine(lineNumber);
+  return true;
 }
 
 function withRoomFor(buffer: Uint8Array<ArrayBuffer>, length: number, more: number): Uint8Array<ArrayBuffer> {

@@ -18,6 +18,8 @@ export interface PlainScan {
   decoder: TextDecoder;
   /** Lines of the file seen so far. */
   lineNumber: number;
+  /** Fields of the last line that was left out for their number; 0 before there is one. */
+  raggedFields: number;
   /** Lines at the top that are no data. */
   linesBefore: number;
   /** The header line, and the line of units under it: a file put together from parts repeats them. */
@@ -113,7 +115,10 @@ export function scanPlainLines(scan: PlainScan, bytes: Uint8Array, end: number):
       if (byte === LINE_FEED) break;
     }
     if (field === columnCount) collector.commit(scan.lineNumber);
-    else collector.rejectLine("ragged-rows", scan.lineNumber);
+    else {
+      scan.raggedFields = field;
+      collector.rejectLine("ragged-rows", scan.lineNumber);
+    }
   }
   return true;
 }

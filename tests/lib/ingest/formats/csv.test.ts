@@ -162,6 +162,31 @@ describe("notes on what was left out or looks odd", () => {
     expect(notes.find((note) => note.code === "ragged-rows")).toMatchObject({ count: 2, firstLine: 5 });
   });
 
+  it.each([
+    ["LF", (text: string) => text],
+    ["CRLF", (text: string) => text.replaceAll("\n", "\r\n")],
+    ["CR, which the general reader takes", (text: string) => text.replaceAll("\n", "\r")],
+  ])("says once that a file ends in the middle of its last line (%s)", async (_lineEnd, change) => {
+    const cut = await mustRead(textSource(change(`${TEXT}3,-98.6,38.4`)), SIMPLE_MAPPING);
+    expect(cut.log.records).toBe(3);
+    expect(cut.notes.filter(({ code }) => /cut-short|ragged/.test(code))).toEqual([
+      {
+        code: "cut-short",
+        count: 1,
+        firstLine: 5,
+        message: "The file ends in the middle of line 5: it may be cut off; the last whole record is line 4.",
+      },
+    ]);
+    // A ragged line before it keeps its own note; with a line end, or with all fields, nothing was cut.
+    const both = await mustRead(textSource(change(`${TEXT}9,8,7\n3,-98.6,38.4`)), SIMPLE_MAPPING);
+    expect(both.notes.find(({ code }) => code === "ragged-rows")).toMatchObject({ count: 1, firstLine: 5 });
+    expect(both.notes.find(({ code }) => code === "cut-short")?.message).toContain("last whole record is line 4.");
+    for (const end of ["3,-98.6,38.4\n", "3,-98.6,38.4,1,2", "3,-98.6,38.4,1,2,3"]) {
+      const { notes } = await mustRead(textSource(change(TEXT + end)), SIMPLE_MAPPING);
+      expect(notes.map(({ code }) => code)).not.toContain("cut-short");
+    }
+  });
+
   it("marks positions at 0,0, missing positions, doubled and backward times", async () => {
     const text = `${SIMPLE_HEADER}\n0,0,0,1,2\n1,-98.6,,1,2\n1,-98.6,38.4,1,2\n0.5,-98.6,38.4,1,2\n0.7,-98.6,38.4,1,2\n`;
     const { log, notes } = await mustRead(textSource(text), SIMPLE_MAPPING);
