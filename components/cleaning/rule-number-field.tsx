@@ -47,7 +47,7 @@ export function RuleNumberField({ parameter, value, error, disabled, inColumn, o
         className={classNames(
           "gap-x-2",
           inColumn
-            ? "grid grid-cols-[minmax(0,1fr)_10.5rem] items-center md:grid-cols-[8rem_minmax(0,1fr)]"
+            ? "grid grid-cols-[minmax(0,1fr)_8rem] items-center md:grid-cols-[8rem_minmax(0,1fr)]"
             : "flex flex-wrap items-center",
         )}
       >

@@ -64,7 +64,13 @@ function serve(start: Cleaning = makeCleaning()) {
     }
     if (path.includes("/delays")) return Response.json({ state: "none", progress: 0, channels: [], items: [] });
     if (path.includes("/fields/")) return Response.json(FIELD);
-    const channels = [{ id: "margin", unit: "N", min: -50, max: 900, perRow: true }];
+    const channels = ["margin", "downforce", "contact"].map((id) => ({
+      id,
+      unit: "N",
+      min: 0,
+      max: 900,
+      perRow: true,
+    }));
     return Response.json(makeLogReply({ fieldId: FIELD.id, channels }));
   });
   return asked;
@@ -172,6 +178,20 @@ describe("the rules of a log", () => {
     expect(first).toHaveAccessibleDescription("ft");
     expect(within(ruleLine("end-ramp")).getByRole("textbox", { name: "last" })).toHaveValue("16.4");
     for (const code of ["start-ramp", "end-ramp"]) expect(ruleLine(code)).not.toHaveTextContent(/metre/);
+  });
+
+  it("stand in columns where a rule has many numbers, and in a line where it has few", async () => {
+    serve();
+    open();
+    await findSwitch("Beyond what can be");
+    const linesOf = (code: string) =>
+      within(ruleLine(code))
+        .getAllByRole("textbox")
+        .map((box) => box.parentElement!.parentElement!.className);
+    const many = linesOf("physical-range");
+    expect(many).toHaveLength(6);
+    for (const line of many) expect(line).toMatch(/(^| )grid grid-cols-/);
+    for (const line of linesOf("speed")) expect(line).not.toMatch(/grid/);
   });
 
   it("warn of leaving out the low margins that the verdict looks for", async () => {
