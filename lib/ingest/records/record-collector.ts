@@ -8,6 +8,7 @@ import {
   withReadingRoom,
   withRoom,
 } from "@/lib/ingest/records/growing-columns";
+import { normaliseHeading } from "@/lib/ingest/records/normalise-heading";
 import { NoteBook } from "@/lib/ingest/records/note-book";
 import { isMissing, parseNumber } from "@/lib/ingest/records/parse-number";
 import { parseBoolean } from "@/lib/ingest/records/parse-boolean";
@@ -389,10 +390,6 @@ export class RecordCollector {
 
 function same(a: number, b: number): boolean {
   return a === b || (a !== a && b !== b);
-}
-
-function normaliseHeading(headingDeg: number): number {
-  return headingDeg >= 0 && headingDeg < 360 ? headingDeg : ((headingDeg % 360) + 360) % 360;
 }
 
 function shorten(value: number): string {
