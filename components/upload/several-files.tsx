@@ -31,13 +31,18 @@ export function SeveralFiles({ files, onFiles, ...shared }: SeveralFilesProps) {
       {isUnderWay ? null : <GroupingChoice proposal={proposal} together={together} onChange={setSaid} />}
     </>
   );
-  if (together) return <OneLog files={files} {...shared} choices={choices} />;
+  // The log takes its name and the sample of its columns from the file sent first.
+  if (together) return <OneLog files={inOrder(files, proposal?.order)} {...shared} choices={choices} />;
   return (
     <>
       {choices}
       {together === false ? <SeparateLogs files={files} uploads={uploads} {...shared} /> : null}
     </>
   );
+}
+
+function inOrder(files: readonly File[], order: readonly number[] | undefined): readonly File[] {
+  return order ? order.flatMap((index) => files[index] ?? []) : files;
 }
 
 interface SeparateLogsProps extends OneLogProps {

@@ -16,6 +16,8 @@ export interface Grouping {
   together: boolean;
   /** Why, in one plain sentence. */
   reason: string;
+  /** Places of the files in the order they were logged; absent where that cannot be seen. */
+  order?: number[];
 }
 
 /** Bytes of a head and of a tail that `proposeGrouping` wants. */
@@ -31,7 +33,7 @@ interface Peek {
   lastMs: number;
 }
 
-const apart = (reason: string): Grouping => ({ together: false, reason });
+const apart = (reason: string, order?: number[]): Grouping => ({ together: false, reason, ...(order && { order }) });
 
 /**
  * Whether files chosen at once look like parts of one log: the same columns, and each begins soon after another ends.
@@ -45,18 +47,26 @@ export async function proposeGrouping(files: readonly FileEnds[]): Promise<Group
     peeks.push(peek);
   }
   if (new Set(peeks.map(({ signature }) => signature)).size > 1) return apart("They have different columns.");
-  const ordered = [...peeks].sort((a, b) => a.firstMs - b.firstMs);
+  if (peeks.some(({ firstMs }) => Number.isNaN(firstMs))) {
+    return apart("They have the same columns, but not when each was logged.");
+  }
+  const order = peeks.map((_, index) => index).sort((a, b) => peeks[a]!.firstMs - peeks[b]!.firstMs);
+  const ordered = order.map((index) => peeks[index]!);
   let longestS = 0;
   for (let i = 1; i < ordered.length; i++) {
     const breakS = ((ordered[i]?.firstMs ?? NaN) - (ordered[i - 1]?.lastMs ?? NaN)) / 1000;
-    if (Number.isNaN(breakS)) return apart("They have the same columns, but not when each was logged.");
-    if (breakS < 0) return apart("They have the same columns, but were logged at the same time, as by two machines.");
+    if (breakS < 0) {
+      return apart("They have the same columns, but were logged at the same time, as by two machines.", order);
+    }
     longestS = Math.max(longestS, breakS);
   }
-  if (longestS > LONGEST_BREAK_S) return apart(`They have the same columns, but lie up to ${sayTime(longestS)} apart.`);
+  if (longestS > LONGEST_BREAK_S) {
+    return apart(`They have the same columns, but lie up to ${sayTime(longestS)} apart.`, order);
+  }
   return {
     together: true,
     reason: `They have the same columns and follow each other, ${sayTime(longestS)} apart at most.`,
+    order,
   };
 }
 

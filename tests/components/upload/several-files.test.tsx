@@ -71,6 +71,16 @@ describe("several files chosen at once", () => {
     await vi.waitFor(() => expect(push).toHaveBeenCalledWith("/larkspur/fields/fld_1/logs/log_joined"));
   });
 
+  it("leave in the order they were logged, so that the first of them names the log", async () => {
+    sending.answer.mockResolvedValue({ id: "log_joined" });
+    const third = fileOf("part-3.csv", text(30, 40));
+    await choose([third, ...PARTS]);
+    expect(await screen.findByText(/same columns and follow each other/)).toBeInTheDocument();
+    await userEvent.click(screen.getByRole("button", { name: "Take it in" }));
+    const names = sending.answer.mock.calls[0]?.[0].files.map((file) => file.name);
+    expect(names).toEqual(["part-1.csv", "part-2.csv", "part-3.csv"]);
+  });
+
   it("that were logged at once are proposed as separate logs; one that is refused does not stop the others", async () => {
     const refusal = { type: "about:blank", title: "Refused", status: 415, detail: "No log.", code: "x" };
     sending.answer.mockRejectedValueOnce(new ApiProblem(refusal)).mockResolvedValueOnce({ id: "log_west" });

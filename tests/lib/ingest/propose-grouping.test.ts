@@ -25,7 +25,7 @@ const later = (hours: number) => {
 describe("files chosen at once", () => {
   it("are one log where they have the same columns and follow each other, in any order", async () => {
     const found = await propose(["c.csv", part(130)], ["a.csv", part(0, 100)], ["b.csv", part(100, 130)]);
-    expect(found).toMatchObject({ together: true });
+    expect(found).toMatchObject({ together: true, order: [1, 2, 0] });
     expect(found.reason).toMatch(/same columns and follow each other, \d+ s apart at most/);
   });
 
@@ -46,6 +46,7 @@ describe("files chosen at once", () => {
     });
     expect(await propose(["a.csv", whole], ["b.csv", later(20)])).toMatchObject({
       together: false,
+      order: [0, 1],
       reason: expect.stringMatching(/up to (19|20) h apart/),
     });
     const other = part(130).replace(header, header.replace("Margin", "Rest"));
