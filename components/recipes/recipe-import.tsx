@@ -21,9 +21,9 @@ async function readJson(file: File): Promise<unknown> {
 
 type Places = NonNullable<ApiProblem["problem"]["errors"]>;
 
-/** Not even the outline of a recipe is there: a file of something else. */
+/** What says that a file is a recipe is not in it: a file of something else. */
 function isForeign(places: Places): boolean {
-  return places.some(({ path, column }) => !column && (!path || path === "mapping" || path === "(root)"));
+  return places.some(({ path, column }) => !column && (!path || path === "kind"));
 }
 
 function refusalWords(failure: unknown, places: Places): string {
