@@ -1,23 +1,11 @@
 "use client";
 
-import { useRef, useState } from "react";
+import { useRef } from "react";
+import { NoRecipeFile } from "@/components/recipes/read-recipe-file";
 import type { RecipeActions } from "@/components/recipes/use-recipes";
 import { Button } from "@/components/ui/button";
 import { Notice } from "@/components/ui/notice";
 import { ApiProblem, describeFailure } from "@/lib/api/api-problem";
-
-/** Longest file worth reading: a recipe of 20,000 columns is about 3 MB. */
-const MOST_BYTES = 10_000_000;
-
-/** The JSON in a file. @throws Error with words for the person */
-async function readJson(file: File): Promise<unknown> {
-  if (file.size > MOST_BYTES) throw new Error(`“${file.name}” is too large to be a recipe.`);
-  try {
-    return JSON.parse(await file.text());
-  } catch {
-    throw new Error(`“${file.name}” is no recipe: it cannot be read as JSON.`);
-  }
-}
 
 type Places = NonNullable<ApiProblem["problem"]["errors"]>;
 
@@ -27,6 +15,7 @@ function isForeign(places: Places): boolean {
 }
 
 function refusalWords(failure: unknown, places: Places): string {
+  if (failure instanceof NoRecipeFile) return failure.message;
   if (places.length === 0) return describeFailure(failure);
   return isForeign(places) ? "This is not a recipe file of this program." : "This recipe cannot be used as it stands.";
 }
@@ -34,17 +23,7 @@ function refusalWords(failure: unknown, places: Places): string {
 /** Takes in a recipe that was exported here or elsewhere. What is wrong with it is said place by place. */
 export function RecipeImport({ actions }: { actions: RecipeActions }) {
   const input = useRef<HTMLInputElement>(null);
-  const [unread, setUnread] = useState<string | null>(null);
   const { takeIn } = actions;
-  const take = async (file: File) => {
-    setUnread(null);
-    takeIn.reset();
-    try {
-      takeIn.mutate(await readJson(file));
-    } catch (error) {
-      setUnread(error instanceof Error ? error.message : describeFailure(error));
-    }
-  };
   const places = takeIn.error instanceof ApiProblem ? (takeIn.error.problem.errors ?? []) : [];
   return (
     <div className="space-y-3">
@@ -57,7 +36,7 @@ export function RecipeImport({ actions }: { actions: RecipeActions }) {
         tabIndex={-1}
         onChange={(event) => {
           const file = event.target.files?.[0];
-          if (file) void take(file);
+          if (file) takeIn.mutate(file);
           // The same file may be chosen again once it is mended.
           event.target.value = "";
         }}
@@ -65,18 +44,12 @@ export function RecipeImport({ actions }: { actions: RecipeActions }) {
       <Button
         disabled={takeIn.isPending}
         onClick={() => {
-          setUnread(null);
           takeIn.reset();
           input.current?.click();
         }}
       >
         {takeIn.isPending ? "Taking it in…" : "Take in a recipe file"}
       </Button>
-      {unread ? (
-        <Notice state="act" urgent title="Not taken in">
-          {unread}
-        </Notice>
-      ) : null}
       {takeIn.error ? (
         <Notice state="act" urgent title="Not taken in">
           <p>{refusalWords(takeIn.error, places)}</p>

@@ -2,6 +2,7 @@
 
 import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import type { z } from "zod";
+import { readRecipeFile } from "@/components/recipes/read-recipe-file";
 import { requestJson, requestNothing } from "@/lib/api/request-json";
 import { Recipe, RecipeDetail, RecipeList, type RecipePatch } from "@/lib/schemas/recipes";
 
@@ -34,8 +35,10 @@ export function useRecipeActions() {
   const client = useQueryClient();
   const onSettled = () => client.invalidateQueries({ queryKey: KEY });
   const takeIn = useMutation({
-    mutationFn: (body: unknown) =>
-      requestJson(Recipe, `${ROOT}/import`, { method: "POST", body, idempotencyKey: crypto.randomUUID() }),
+    mutationFn: async (file: File) => {
+      const body = await readRecipeFile(file);
+      return requestJson(Recipe, `${ROOT}/import`, { method: "POST", body, idempotencyKey: crypto.randomUUID() });
+    },
     onSettled,
   });
   /** What was said of a file that was taken in, or not, goes with the next action. */

@@ -134,7 +134,7 @@ describe("the recipes of an organisation", () => {
     open();
     await screen.findByRole("table", { name: "Recipes of this organisation" });
     await userEvent.upload(screen.getByLabelText("Recipe file"), new File(["{]"], "drill.recipe.json"));
-    expect(await screen.findByRole("alert")).toHaveTextContent("“drill.recipe.json” is no recipe");
+    expect(await screen.findByText("“drill.recipe.json” is no recipe: it cannot be read as JSON.")).toBeVisible();
     await userEvent.upload(screen.getByLabelText("Recipe file"), new File(["{}"], "drill.recipe.json"));
     const alert = await screen.findByText("This recipe cannot be used as it stands.");
     expect(alert.closest('[role="alert"]')).toHaveTextContent('mapping.columns.3.unit: unknown unit "stone"');
