@@ -48,6 +48,7 @@ describe("server-sent events", () => {
     const { items } = (await world.read("operator", { path: `/api/v1/fields/${world.fieldId}/logs` })) as {
       items: Log[];
     };
-    expect(await readEvents(items[0]!.id)).toEqual([items[0]]);
+    const { id } = items[0]!;
+    expect(await readEvents(id)).toEqual([await world.read("operator", { path: `/api/v1/logs/${id}` })]);
   });
 });

@@ -6,7 +6,6 @@ import { findingsForReader } from "@/lib/findings/findings-for-reader";
 import { CoverageBody, VerdictBody } from "@/lib/schemas/logs";
 import type { SharedView } from "@/lib/schemas/shared";
 import { ShareLayer } from "@/lib/schemas/shares";
-import type { Scope } from "@/lib/scope";
 import { moveToOrigin, type MoveGeometry } from "@/lib/sharing/move-to-origin";
 import { isChannelShared } from "@/lib/sharing/shared-channels";
 import { findAnswer, readAdjustedAnswer } from "@/lib/server/adjustments/read-adjusted-answer";
