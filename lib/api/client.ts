@@ -96,8 +96,7 @@ export const removeMember = (memberId: string) => requestNothing(`${ROOT}/member
 export const listAudit = () => requestJson(AuditList, `${ROOT}/audit?${PAGE}`);
 
 /** The person's own things. */
-export const changeMe = (body: z.input<typeof MePatch>) =>
-  requestNothing(`${ROOT}/me`, { method: "PATCH", body });
+export const changeMe = (body: z.input<typeof MePatch>) => requestNothing(`${ROOT}/me`, { method: "PATCH", body });
 export const changePassword = (body: { currentPassword: string; newPassword: string }) =>
   requestNothing(`${ROOT}/me`, { method: "PATCH", body });
 export const signOutEverywhere = () => requestNothing(`${ROOT}/me/sessions`, { method: "DELETE" });

@@ -42,14 +42,7 @@ export const PLACING_CHANNELS = [
 ] as const satisfies readonly KnownChannel[];
 
 /** Channels worked out from others, usable wherever a logged channel is. */
-export const DERIVED_CHANNELS = [
-  "resistance",
-  "rowSpeed",
-  "flags",
-  "underTarget",
-  "atLimit",
-  "marginByForce",
-] as const;
+export const DERIVED_CHANNELS = ["resistance", "rowSpeed", "flags", "underTarget", "atLimit", "marginByForce"] as const;
 export type DerivedChannelId = (typeof DERIVED_CHANNELS)[number] | `deviation:${string}`;
 export type AnyChannelId = ChannelId | DerivedChannelId;
 

@@ -38,7 +38,9 @@ describe("sayPlainly", () => {
 
   it("leaves no word of the trade in any sentence or check that a verdict can say", () => {
     const texts = textsOfFindings().filter(
-      (text) => /^[A-Z{$].* /.test(text) && !/moments of frame|machine's description|robust z|Share of distance|Statics/i.test(text),
+      (text) =>
+        /^[A-Z{$].* /.test(text) &&
+        !/moments of frame|machine's description|robust z|Share of distance|Statics/i.test(text),
     );
     expect(texts.length).toBeGreaterThan(20);
     const left = texts.map((text) => sayPlainly(text).replaceAll(ALLOWED, "")).filter((text) => TRADE.test(text));

@@ -82,9 +82,7 @@ describe("the rule", () => {
     const statistics = { ...STATISTICS, medianOfRows: 444.822, wheelTrackRows: [3, 6] };
     renderInBook(<LineUp statistics={statistics} classes={null} onTable={() => undefined} />, { system: "imperial" });
     // 5 % of 444.822 N are 22.24 N, 5.0 lbf (NIST SP 811).
-    expect(
-      screen.getByText(/Stands out: z beyond 3.5 either way, and more than 5.% \(5.0.lbf\)/),
-    ).toBeInTheDocument();
+    expect(screen.getByText(/Stands out: z beyond 3.5 either way, and more than 5.% \(5.0.lbf\)/)).toBeInTheDocument();
     expect(screen.getByText(/Rows 3, 6 run in wheel tracks/)).toBeInTheDocument();
   });
 
