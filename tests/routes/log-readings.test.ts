@@ -294,7 +294,12 @@ describe("who may see a log", () => {
     expect(await status("operator", "DELETE", "")).toBe(409);
     expect(await status("researcher", "DELETE", "")).toBe(403);
     expect(await status("researcher", "PUT", "/mapping", {})).toBe(403);
-    expect(await world.getLog(log.id)).toEqual(log);
+    // The second look at a log may add its notes at any time.
+    const plain = ({ notes, ...rest }: Log) => ({
+      ...rest,
+      notes: notes.filter(({ code }) => code !== "row-order-unchecked"),
+    });
+    expect(plain(await world.getLog(log.id))).toEqual(plain(log));
     const upload = await world.upload({
       bytes: "a,b\n1,2\n",
       name: "theirs.csv",

@@ -1,5 +1,6 @@
 import { readFileSync } from "node:fs";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { readSteadily } from "@/lib/server/logs/find-placed-log";
 import type { Log, LogColumns, RowStatisticsBody } from "@/lib/schemas/logs";
 import { confirmedMapping } from "@/tests/support/log-mapping";
 import { fixtureBytes, FIXTURES, makeLogWorld, type LogWorld } from "@/tests/support/make-log-world";
@@ -204,6 +205,25 @@ describe("a mapping", () => {
     expect(after / before).toBeCloseTo(10, 5);
     expect([...seen].every((value) => value === before || value === after)).toBe(true);
     expect(await world.getLog(log.id)).toMatchObject({ version: 2, status: "ready" });
+  });
+
+  it("put again while an answer is being read: the answer is read anew, once", async () => {
+    const log = await mapAndSettle(
+      await world.uploadAndSettle({ bytes: fixtureBytes(WIDE), name: "gap.csv", query: "?again=1" }),
+    );
+    const body = confirmedMapping(await getColumns(log.id));
+    const scope = { organisationId: "org_larkspurflats", userId: "usr_larkspurowner", role: "owner" as const };
+    const versions: number[] = [];
+    const read = async ({ version }: { version: number }) => {
+      versions.push(version);
+      if (version > 1) return version;
+      await world.read("operator", { method: "PUT", path: `/api/v1/logs/${log.id}/mapping`, body, expect: 202 });
+      await world.settle(log.id);
+      throw new Error("gone");
+    };
+    expect(await readSteadily(scope, { logId: log.id }, read)).toBe(2);
+    expect(versions).toEqual([1, 2]);
+    await expect(readSteadily(scope, { logId: log.id }, () => Promise.reject(new Error("own")))).rejects.toThrow("own");
   });
 
   it("that fails leaves the version before in place", async () => {

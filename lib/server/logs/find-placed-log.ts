@@ -25,14 +25,35 @@ export async function getReadLog(scope: Scope, { logId, cleaned = true }: LogCho
   throw new AppError("conflict", `This log has not been read yet.${reason}`, { detailCode: "log_not_ready" });
 }
 
+/**
+ * What `read` makes of a log that has been read. Where a new version took the place of the one it was at, which is then
+ * gone, it reads anew: a reader sees one version or the other, never the gap between them.
+ */
+export async function readSteadily<Answer>(
+  scope: Scope,
+  choice: LogChoice,
+  read: (log: LogRow) => Promise<Answer>,
+): Promise<Answer> {
+  const log = await getReadLog(scope, choice);
+  try {
+    return await read(log);
+  } catch (error) {
+    const now = await getReadLog(scope, choice);
+    if (now.version === log.version && now.adjustmentRevision === log.adjustmentRevision) throw error;
+    return read(now);
+  }
+}
+
 /** The same, on the ground, with the readings that the channel needs. */
 export async function findPlacedLog(
   container: Container,
   scope: Scope,
   input: LogChoice & { channel: string | "all" | null },
 ): Promise<{ log: LogRow; placed: PlacedLog }> {
-  const log = await getReadLog(scope, input);
-  return { log, placed: await loadAdjustedLog(container, log, input.channel) };
+  return readSteadily(scope, input, async (log) => ({
+    log,
+    placed: await loadAdjustedLog(container, log, input.channel),
+  }));
 }
 
 /** A channel, logged or derived, of a log that was found. @throws AppError `unprocessable` where the log cannot give it */

@@ -12,13 +12,16 @@ import { loadAdjustedLog } from "@/lib/server/adjustments/load-adjusted-log";
 import { readLeftOutShare } from "@/lib/server/adjustments/read-cleaning";
 import { answerKind, findAnswer, readAdjustedAnswer } from "@/lib/server/adjustments/read-adjusted-answer";
 import type { Container } from "@/lib/server/create-container";
-import { getReadLog, type LogChoice } from "@/lib/server/logs/find-placed-log";
+import { readSteadily, type LogChoice } from "@/lib/server/logs/find-placed-log";
 import { rowStatistics } from "@/lib/statistics/row-statistics";
 import { rowStatisticsBody } from "@/lib/statistics/row-statistics-body";
 
 /** An answer that no adjustment changes. */
-async function findPlacedAnswer(scope: Scope, logId: string, kind: string): Promise<unknown> {
-  return findAnswer(await getReadLog(scope, { logId, cleaned: false }), kind);
+async function findPlacedAnswer<Body>(
+  scope: Scope,
+  { logId, kind, schema }: { logId: string; kind: string; schema: z.ZodType<Body> },
+): Promise<Body> {
+  return readSteadily(scope, { logId, cleaned: false }, async (log) => schema.parse(await findAnswer(log, kind)));
 }
 
 /** Passes in order of their numbers, a page at a time. */
@@ -28,7 +31,7 @@ export async function listPasses(
   input: { logId: string; query: ListQuery },
 ): Promise<{ items: PassBody[]; nextCursor: string | null }> {
   const { limit, cursor } = input.query;
-  const all = z.array(PassBody).parse(await findPlacedAnswer(scope, input.logId, "passes"));
+  const all = await findPlacedAnswer(scope, { logId: input.logId, kind: "passes", schema: z.array(PassBody) });
   const after = Number(decodeCursor(cursor)?.[0] ?? 0);
   const later = all.filter((pass) => pass.pass > after).slice(0, limit + 1);
   const { rows, nextCursor } = pageOf(later, limit, (pass) => [String(pass.pass), String(pass.pass)]);
@@ -36,13 +39,14 @@ export async function listPasses(
 }
 
 export async function getCoverage(_container: Container, scope: Scope, logId: string): Promise<CoverageBody> {
-  return CoverageBody.parse(await findPlacedAnswer(scope, logId, "coverage"));
+  return findPlacedAnswer(scope, { logId, kind: "coverage", schema: CoverageBody });
 }
 
 export async function getVerdict(container: Container, scope: Scope, input: LogChoice): Promise<VerdictBody> {
-  const log = await getReadLog(scope, input);
-  const verdict = VerdictBody.parse(await readAdjustedAnswer(container, log, "verdict"));
-  return { ...verdict, leftOutShare: await readLeftOutShare(container, log) };
+  return readSteadily(scope, input, async (log) => {
+    const verdict = VerdictBody.parse(await readAdjustedAnswer(container, log, "verdict"));
+    return { ...verdict, leftOutShare: await readLeftOutShare(container, log) };
+  });
 }
 
 /** Statistics of every row in a channel; those of a derived channel are worked out once and kept with the version. */
@@ -57,12 +61,13 @@ export async function getRowStatistics(
     throw new AppError("unprocessable", `${message}.`, { places: [{ path: "channel", message }] });
   }
   const kind = `rows:${channel}`;
-  const log = await getReadLog(scope, input);
-  const stored = await readAdjustedAnswer(container, log, kind);
-  if (stored) return RowStatisticsBody.parse(stored);
-  const placed = await loadAdjustedLog(container, log, channel);
-  const body = rowStatisticsBody(rowStatistics(placed, channel));
-  const key = { logId: log.id, version: log.version, kind: answerKind(log, kind) };
-  await withOrganisation(scope, (tx) => saveLogResult(tx, scope, { ...key, body }));
-  return body;
+  return readSteadily(scope, input, async (log) => {
+    const stored = await readAdjustedAnswer(container, log, kind);
+    if (stored) return RowStatisticsBody.parse(stored);
+    const placed = await loadAdjustedLog(container, log, channel);
+    const body = rowStatisticsBody(rowStatistics(placed, channel));
+    const key = { logId: log.id, version: log.version, kind: answerKind(log, kind) };
+    await withOrganisation(scope, (tx) => saveLogResult(tx, scope, { ...key, body }));
+    return body;
+  });
 }
