@@ -8,8 +8,8 @@ import type { Classes } from "@/components/field-book/use-classes";
 import { useTileJson } from "@/components/field-book/use-log-data";
 import { useMapGround } from "@/components/field-book/use-map-ground";
 import type { BasemapConfig } from "@/components/map/basemap-config";
-import { MapCanvas } from "@/components/map/map-canvas";
 import { FIRST_LAYER_OVER_VALUES } from "@/components/map/overlay-layers";
+import { TitledMap } from "@/components/map/titled-map";
 import { colourExpression, showValues } from "@/components/map/value-layer";
 import { channelWords } from "@/lib/legend/channel-words";
 import type { Bounds } from "@/lib/map-state/field-book-store";
@@ -52,30 +52,18 @@ export function CompareMap({ title, cleaned, basemap, bounds, boundary, classes,
       if (map.getCanvas().isConnected) hideReasons(map);
     };
   }, [map, reasonTiles, cleaned]);
-  const trouble = values.isError || reasons.isError;
   return (
-    <figure className="sheet min-w-0">
-      <figcaption className="flex flex-wrap items-baseline justify-between gap-2 px-3 py-2">
-        <span className="font-semibold">{title}</span>
-        {trouble ? (
-          <span role="alert" className="text-table text-clay">
-            The readings could not be fetched; reload the page.
-          </span>
-        ) : null}
-      </figcaption>
-      <div className="h-80 border-t border-rule md:h-96">
-        <MapCanvas
-          basemap={basemap}
-          bounds={bounds}
-          label={`Map, ${title.toLowerCase()}`}
-          description={`${channelWords(channel).name}, ${title.toLowerCase()}, north up. The table above gives the difference in numbers.`}
-          onMap={(ready) => {
-            setMap(ready);
-            onMap(ready);
-          }}
-          gentle
-        />
-      </div>
-    </figure>
+    <TitledMap
+      title={title}
+      isTrouble={values.isError || reasons.isError}
+      basemap={basemap}
+      bounds={bounds}
+      label={`Map, ${title.toLowerCase()}`}
+      description={`${channelWords(channel).name}, ${title.toLowerCase()}, north up. The table above gives the difference in numbers.`}
+      onMap={(ready) => {
+        setMap(ready);
+        onMap(ready);
+      }}
+    />
   );
 }

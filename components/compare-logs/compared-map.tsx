@@ -6,9 +6,9 @@ import { useMapGround } from "@/components/field-book/use-map-ground";
 import type { Classes } from "@/components/field-book/use-classes";
 import { useTileJson } from "@/components/field-book/use-log-data";
 import { openingBounds } from "@/components/field-book/opening-bounds";
-import { MapCanvas } from "@/components/map/map-canvas";
 import type { BasemapConfig } from "@/components/map/basemap-config";
 import { FIRST_LAYER_OVER_VALUES } from "@/components/map/overlay-layers";
+import { TitledMap } from "@/components/map/titled-map";
 import { colourExpression, showValues } from "@/components/map/value-layer";
 import { channelWords } from "@/lib/legend/channel-words";
 import type { Field } from "@/lib/schemas/fields";
@@ -37,29 +37,22 @@ export function ComparedMap({ title, field, log, channel, classes, basemap, onMa
     showValues(map, { tileJson, colour, beforeLayer: FIRST_LAYER_OVER_VALUES });
   }, [map, tileJson, classes]);
   return (
-    <figure className="sheet min-w-0">
-      <figcaption className="truncate px-3 py-2 font-semibold">
-        {title}: {log.name}
-        <span className="font-normal text-ink-soft"> · {field.name}</span>
-      </figcaption>
-      {tiles.isError ? (
-        <p role="alert" className="px-3 pb-2 text-table text-clay">
-          The readings could not be fetched; reload the page.
-        </p>
-      ) : null}
-      <div className="h-80 border-t border-rule md:h-96">
-        <MapCanvas
-          basemap={basemap}
-          bounds={bounds}
-          label={`Map, ${title.toLowerCase()}`}
-          description={`${channelWords(channel).name}, ${title.toLowerCase()}, north up. The tables above give the difference in numbers.`}
-          onMap={(ready) => {
-            setMap(ready);
-            onMap(ready);
-          }}
-          gentle
-        />
-      </div>
-    </figure>
+    <TitledMap
+      title={
+        <>
+          {title}: {log.name}
+          <span className="font-normal text-ink-soft"> · {field.name}</span>
+        </>
+      }
+      isTrouble={tiles.isError}
+      basemap={basemap}
+      bounds={bounds}
+      label={`Map, ${title.toLowerCase()}`}
+      description={`${channelWords(channel).name}, ${title.toLowerCase()}, north up. The tables above give the difference in numbers.`}
+      onMap={(ready) => {
+        setMap(ready);
+        onMap(ready);
+      }}
+    />
   );
 }

@@ -1,7 +1,7 @@
 import type { Map as MapLibreMap } from "maplibre-gl";
 import { MAP_COLOURS } from "@/components/map/base-style";
 import { FIRST_LINE_OVER_VALUES } from "@/components/map/overlay-layers";
-import { absoluteAddress, colourExpression } from "@/components/map/value-layer";
+import { colourExpression, valueSource } from "@/components/map/value-layer";
 import type { TileJson } from "@/lib/schemas/logs";
 
 /** Source and layer of the times at which ground was worked. */
@@ -14,18 +14,7 @@ export function showUntil(map: MapLibreMap, tileJson: TileJson, timeS: number): 
     map.setPaintProperty(TIME_MASK, "color-relief-color", colour);
     return;
   }
-  map.addSource(TIME_MASK, {
-    type: "raster-dem",
-    encoding: "custom",
-    redFactor: 256,
-    greenFactor: 1,
-    blueFactor: 0,
-    baseShift: 0,
-    tiles: tileJson.tiles.map(absoluteAddress),
-    tileSize: 512,
-    minzoom: tileJson.minzoom,
-    maxzoom: tileJson.maxzoom,
-  });
+  map.addSource(TIME_MASK, valueSource(tileJson));
   map.addLayer(
     {
       id: TIME_MASK,

@@ -1,4 +1,4 @@
-import type { ExpressionSpecification, Map as MapLibreMap } from "maplibre-gl";
+import type { ExpressionSpecification, Map as MapLibreMap, RasterDEMSourceSpecification } from "maplibre-gl";
 import { afterPaint } from "@/components/map/after-paint";
 import { FIRST_LAYER_OVER_VALUES } from "@/components/map/overlay-layers";
 import { colourStops } from "@/lib/legend/colour-stops";
@@ -21,6 +21,12 @@ export function colourExpression(
 ): ExpressionSpecification {
   const stops = colourStops(edges, colours, encoding).flat();
   return ["interpolate", ["linear"], ["elevation"], ...stops] as ExpressionSpecification;
+}
+
+/** Source of value tiles that decodes to the bare code. */
+export function valueSource({ tiles, minzoom, maxzoom }: TileJson): RasterDEMSourceSpecification {
+  const decoding = { encoding: "custom", redFactor: 256, greenFactor: 1, blueFactor: 0, baseShift: 0 } as const;
+  return { type: "raster-dem", ...decoding, tiles: tiles.map(absoluteAddress), tileSize: 512, minzoom, maxzoom };
 }
 
 export interface ShownValues {
@@ -53,18 +59,7 @@ export function showValues(map: MapLibreMap, shown: ShownValues): void {
 }
 
 function addValues(map: MapLibreMap, { tileJson, colour, beforeLayer }: ShownValues): void {
-  map.addSource(SOURCE, {
-    type: "raster-dem",
-    encoding: "custom",
-    redFactor: 256,
-    greenFactor: 1,
-    blueFactor: 0,
-    baseShift: 0,
-    tiles: tileJson.tiles.map(absoluteAddress),
-    tileSize: 512,
-    minzoom: tileJson.minzoom,
-    maxzoom: tileJson.maxzoom,
-  });
+  map.addSource(SOURCE, valueSource(tileJson));
   map.addLayer(
     {
       id: LAYER,

@@ -32,9 +32,8 @@ export interface DelayEstimate {
   leftOut: number;
 }
 
-const NOTHING: DelayEstimate = {
-  state: "refused",
-  refusal: null,
+/** The figures of a delay that is not known, or not known yet. */
+export const UNKNOWN_DELAY = {
   delayS: null,
   delayIntervalS: null,
   distanceM: null,
@@ -46,6 +45,12 @@ const NOTHING: DelayEstimate = {
   pairs: 0,
   sharpness: null,
   curve: [],
+} satisfies Partial<DelayEstimate>;
+
+const NOTHING: DelayEstimate = {
+  ...UNKNOWN_DELAY,
+  state: "refused",
+  refusal: null,
   share: null,
   usedPasses: 0,
   leftOut: 0,

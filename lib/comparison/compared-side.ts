@@ -1,11 +1,13 @@
 import { comparedPasses } from "@/lib/comparison/compared-passes";
-import { DRAWS, drawBlocks, planBlocks, type Blocks, type DrawnMeans } from "@/lib/comparison/draw-blocks";
 import type { DrawnFigure } from "@/lib/comparison/difference-interval";
 import { passMeans, passTotals, wholePart, type WholePart } from "@/lib/comparison/pass-totals";
+import { planBlocks, type Blocks } from "@/lib/comparison/plan-blocks";
+import { DRAWS, drawPasses, type DrawnMeans } from "@/lib/pass-figures/draw-passes";
 import type { ChannelOnGround } from "@/lib/pass-figures/pass-readings";
 import { median } from "@/lib/statistics/median";
 import { partMeans, type PassSums } from "@/lib/pass-figures/resample-passes";
 
+const SEED = 20_311_015;
 /** Fewer blocks than this give no interval. */
 export const LEAST_BLOCKS = 8;
 
@@ -38,8 +40,9 @@ export function comparedSide(
   const sums = passTotals(from, centre);
   const draw = (series: Float64Array[]): Drawing => {
     const blocks = planBlocks(series);
-    const drawn = blocks.blocks >= LEAST_BLOCKS ? drawBlocks(sums, blocks.passesPerBlock, label) : null;
-    return { blocks, drawn };
+    const { passesPerBlock } = blocks;
+    const isEnough = blocks.blocks >= LEAST_BLOCKS;
+    return { blocks, drawn: isEnough ? drawPasses(sums, { passesPerBlock, seed: SEED, label }) : null };
   };
   const whole = draw([passMeans(sums, wholePart(from.channel.rows, "mean"))]);
   const rows = draw(rowDeviations(sums, from.channel.rows));

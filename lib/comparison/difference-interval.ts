@@ -1,4 +1,4 @@
-import { DRAWS } from "@/lib/comparison/draw-blocks";
+import { DRAWS } from "@/lib/pass-figures/draw-passes";
 import { median } from "@/lib/statistics/median";
 import { quantileType7 } from "@/lib/statistics/quantile";
 

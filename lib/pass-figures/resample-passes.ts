@@ -1,9 +1,8 @@
-import { createSeededRandom } from "@/lib/simulator/seeded-random";
+import { DRAWS, drawPasses, type DrawnMeans } from "@/lib/pass-figures/draw-passes";
 import { quantileType7 } from "@/lib/statistics/quantile";
 
 /** Fewer passes than this give no interval: they are the units that repeat, not the readings. */
 export const LEAST_PASSES = 8;
-const RESAMPLES = 1999;
 const SEED = 20_311_014;
 
 /** Weighted sums of parts of a log, pass by pass: `sums[pass * parts + part]` over `weights[...]` is the pass's own mean. */
@@ -44,55 +43,30 @@ export function passesIn({ passes, parts, weights }: PassSums, part: number): nu
   return n;
 }
 
-/** Means of each part in passes drawn anew with replacement, one draw after the other. */
-export interface ResampledMeans {
-  parts: number;
-  means: Float64Array;
-}
-
-/** Draws passes with replacement 1999 times, always the same way (block bootstrap with a pass as the block, Künsch 1989). */
-export function resamplePasses(given: PassSums): ResampledMeans {
-  const { passes, parts, sums, weights } = given;
-  const { uniform } = createSeededRandom(SEED, "passes");
-  const means = new Float64Array(RESAMPLES * parts);
-  const sum = new Float64Array(parts);
-  const weight = new Float64Array(parts);
-  for (let draw = 0; draw < RESAMPLES; draw++) {
-    sum.fill(0);
-    weight.fill(0);
-    for (let k = 0; k < passes; k++) {
-      const from = Math.floor(uniform() * passes) * parts;
-      for (let part = 0; part < parts; part++) {
-        sum[part]! += sums[from + part]!;
-        weight[part]! += weights[from + part]!;
-      }
-    }
-    for (let part = 0; part < parts; part++) {
-      means[draw * parts + part] = weight[part]! > 0 ? sum[part]! / weight[part]! : NaN;
-    }
-  }
-  return { parts, means };
+/** Draws single passes with replacement, always the same way. */
+export function resamplePasses(given: PassSums): DrawnMeans {
+  return drawPasses(given, { passesPerBlock: 1, seed: SEED, label: "passes" });
 }
 
 /** The middle 95 % of one part's means. */
-export function partInterval({ parts, means }: ResampledMeans, part: number): [number, number] | null {
-  return middle(Float64Array.from({ length: RESAMPLES }, (_, draw) => means[draw * parts + part]!));
+export function partInterval({ parts, means }: DrawnMeans, part: number): [number, number] | null {
+  return middle(Float64Array.from({ length: DRAWS }, (_, draw) => means[draw * parts + part]!));
 }
 
 /** The same of one part's mean less another's in the same draw. */
 export function differenceInterval(
-  { parts, means }: ResampledMeans,
+  { parts, means }: DrawnMeans,
   first: number,
   second: number,
 ): [number, number] | null {
   return middle(
-    Float64Array.from({ length: RESAMPLES }, (_, draw) => means[draw * parts + first]! - means[draw * parts + second]!),
+    Float64Array.from({ length: DRAWS }, (_, draw) => means[draw * parts + first]! - means[draw * parts + second]!),
   );
 }
 
 /** Null where a part was missing from more than one draw in twenty: too few passes have it. */
 function middle(drawn: Float64Array): [number, number] | null {
   const known = drawn.filter((value) => Number.isFinite(value)).sort();
-  if (known.length < 0.95 * RESAMPLES) return null;
+  if (known.length < 0.95 * DRAWS) return null;
   return [quantileType7(known, 0.025), quantileType7(known, 0.975)];
 }

@@ -3,6 +3,7 @@ import { withOrganisation, type Transaction } from "@/db/client";
 import { findLogResult, saveLogResult } from "@/db/queries/log-results";
 import { getLogOrThrow, type LogRow } from "@/db/queries/logs";
 import { delayChannels, mainDelayChannels } from "@/lib/alignment/delay-channels";
+import { UNKNOWN_DELAY } from "@/lib/alignment/estimate-delay";
 import { AppError } from "@/lib/errors";
 import type { ChannelDelay, DelaysBody, DelaysChange } from "@/lib/schemas/alignment";
 import type { Scope } from "@/lib/scope";
@@ -111,18 +112,4 @@ async function describeDelays(tx: Transaction, scope: Scope, log: LogRow): Promi
   return { state, progress: look?.progress ?? 0, channels, items };
 }
 
-const NOT_YET: Omit<ChannelDelay, "channel" | "unit" | "applied"> = {
-  state: "working",
-  delayS: null,
-  delayIntervalS: null,
-  distanceM: null,
-  distanceIntervalM: null,
-  shiftM: null,
-  shiftIntervalM: null,
-  separable: false,
-  usualSpeedMps: null,
-  pairs: 0,
-  sharpness: null,
-  curve: [],
-  method: "",
-};
+const NOT_YET: Omit<ChannelDelay, "channel" | "unit" | "applied"> = { ...UNKNOWN_DELAY, state: "working", method: "" };

@@ -1,7 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { comparedSide, figureOf, wholeFigure } from "@/lib/comparison/compared-side";
 import { beyondOthers, differenceInterval, studentT975 } from "@/lib/comparison/difference-interval";
-import { planBlocks } from "@/lib/comparison/draw-blocks";
+import { planBlocks } from "@/lib/comparison/plan-blocks";
 import { niceStep } from "@/lib/comparison/nice-step";
 import { createSeededRandom } from "@/lib/simulator/seeded-random";
 import { madeSide, ROWS } from "./made-comparison";
