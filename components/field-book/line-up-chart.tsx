@@ -1,6 +1,6 @@
 "use client";
 
-import { useRef, type KeyboardEvent } from "react";
+import { useRef } from "react";
 import { useBook, useBookState } from "@/components/field-book/field-book-context";
 import {
   colourOf,
@@ -14,6 +14,7 @@ import { plotOf } from "@/components/field-book/line-up/line-up-plot";
 import { ScoreStrip, ShareStrips } from "@/components/field-book/line-up/line-up-strips";
 import { ToolbarStrip } from "@/components/field-book/line-up/toolbar-strip";
 import { useShareStrips, useToolbarLayout } from "@/components/field-book/line-up/use-line-up-layout";
+import { useRowKeys } from "@/components/field-book/line-up/use-row-keys";
 import type { Classes } from "@/components/field-book/use-classes";
 import { useSize } from "@/components/field-book/use-size";
 import type { RowStatisticsBody } from "@/lib/schemas/logs";
@@ -37,13 +38,7 @@ export function LineUpChart({ statistics, classes }: LineUpChartProps) {
   const shares = useShareStrips(statistics);
   const target = statistics.channel === "margin" ? (classes?.context.targetMarginN ?? null) : null;
   const plot = plotOf(items, { width, height, layout, shares });
-  const onKeyDown = (event: KeyboardEvent) => {
-    const by = { ArrowLeft: -1, ArrowRight: 1 }[event.key];
-    if (by === undefined) return;
-    event.preventDefault();
-    const next = Math.min(items.length, Math.max(1, (selected ?? (by > 0 ? 0 : items.length + 1)) + by));
-    if (next !== selected) store.getState().chooseRow(next);
-  };
+  const onKeyDown = useRowKeys(items.length);
   return (
     <div
       ref={box}

@@ -1,9 +1,11 @@
 "use client";
 
 import { LineUpChart } from "@/components/field-book/line-up-chart";
+import { ClassSharesChart } from "@/components/field-book/line-up/class-shares-chart";
 import { FlagRule } from "@/components/field-book/line-up/flag-rule";
 import type { Classes } from "@/components/field-book/use-classes";
 import { LineUpPicture } from "@/components/pictures/book-figures";
+import { namedCodes } from "@/lib/legend/categories";
 import { channelWords } from "@/lib/legend/channel-words";
 import type { RowStatisticsBody } from "@/lib/schemas/logs";
 
@@ -13,8 +15,11 @@ export interface LineUpProps {
   onTable: () => void;
 }
 
+const AMOUNTS = "median, middle half, 5th to 95th percentile; z against the other rows; % of distance.";
+
 /** The rows compared: chart, what its marks mean, and the way to the table. */
 export function LineUp({ statistics, classes, onTable }: LineUpProps) {
+  const isNamed = statistics !== undefined && namedCodes(statistics.channel) > 0;
   return (
     <section aria-labelledby="line-up-title" className="flex h-full min-h-0 flex-col gap-1 px-4 pb-2 pt-3">
       <div className="flex items-baseline justify-between gap-2">
@@ -29,12 +34,14 @@ export function LineUp({ statistics, classes, onTable }: LineUpProps) {
         </span>
       </div>
       <p className="text-table text-ink-soft">
-        {statistics ? `${channelWords(statistics.channel).name}, ` : ""}left to right looking forward: median, middle
-        half, 5th to 95th percentile; z against the other rows; % of distance.
+        {statistics ? `${channelWords(statistics.channel).name}, ` : ""}left to right looking forward:{" "}
+        {isNamed ? "% of the distance of each row under each name." : AMOUNTS}
         {statistics ? <FlagRule statistics={statistics} /> : null}
       </p>
       <div data-figure="line-up" className="h-96 lg:h-auto lg:min-h-0 lg:flex-1">
-        {statistics ? (
+        {statistics && isNamed ? (
+          <ClassSharesChart statistics={statistics} />
+        ) : statistics ? (
           <LineUpChart statistics={statistics} classes={classes} />
         ) : (
           <div className="hatch h-full opacity-60" role="status" aria-label="Comparing the rows" />

@@ -69,7 +69,7 @@ function ZonesOfKind({ kind }: { kind: LimitZoneKind }) {
       <ZoneTotals body={zones.data} />
       <div className="flex flex-wrap items-center justify-between gap-2">
         <CheckField
-          label={`On the map, ${HATCH_WORDS[kind]}`}
+          label={`Show on the map (${HATCH_WORDS[kind]})`}
           checked={isShown}
           onChange={() => store.getState().toggleGround(kind)}
         />
@@ -122,9 +122,9 @@ function ZoneFiles({ kind }: { kind: LimitZoneKind }) {
   return (
     <Menu
       trigger={
-        <button type="button" className={buttonClass("quiet", "px-2")} aria-label="Polygons of these zones as a file">
+        <button type="button" className={buttonClass("quiet", "px-2")} aria-label="Save polygons of these zones">
           <Download size={16} strokeWidth={1.5} aria-hidden />
-          Polygons
+          Save polygons
         </button>
       }
     >

@@ -131,7 +131,7 @@ function PassMark({ item, index, plot, chosen, onChoose }: PassMarkProps) {
       {item.headingDeg !== null && passPx >= 5 ? (
         <path
           d="M0 -5V5M-3 -2L0 -5L3 -2"
-          transform={`translate(${x} ${floor + 10}) rotate(${item.headingDeg})`}
+          transform={`translate(${x} ${floor + 10}) scale(${Math.min(1, passPx / 12)}) rotate(${item.headingDeg})`}
           fill="none"
           stroke="#4A5261"
         />

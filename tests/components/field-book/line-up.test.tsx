@@ -1,6 +1,7 @@
 import { act, screen, within } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
 import { beforeAll, describe, expect, it } from "vitest";
+import { LineUp } from "@/components/field-book/line-up";
 import { LineUpChart } from "@/components/field-book/line-up-chart";
 import { lineUpColumns } from "@/components/field-book/line-up-columns";
 import { LineUpTable } from "@/components/field-book/line-up-table";
@@ -32,6 +33,32 @@ describe("the line-up's chart", () => {
     const { container } = renderInBook(<LineUpChart statistics={STATISTICS} classes={null} />);
     const marks = [...container.querySelectorAll("[data-row] rect[fill='#9A4A2C']")];
     expect(marks.map((mark) => mark.closest("[data-row]")?.getAttribute("data-row"))).toEqual(["5"]);
+  });
+});
+
+describe("the line-up of a reading of names", () => {
+  const named = (row: number, classShares?: number[]) => ({ ...STATISTICS.items[0]!, row, p50: null, classShares });
+  const statistics = {
+    ...STATISTICS,
+    channel: "marginByForce",
+    items: [named(1, [0, 0.25, 0, 0.75, 0, 0]), named(2, [0, 0, 0, 1, 0, 0]), named(3)],
+  };
+
+  it("shows each row's share of distance under each name, and says it", async () => {
+    const { container, store } = renderInBook(
+      <LineUp statistics={statistics} classes={null} onTable={() => undefined} />,
+    );
+    const options = screen.getAllByRole("option");
+    expect(options.map((option) => option.getAttribute("aria-label"))).toEqual([
+      expect.stringMatching(/^Row 1: .+ 25\u202f?%; .+ 75\u202f?% of distance$/),
+      expect.stringMatching(/^Row 2: [^;]+ 100\u202f?% of distance$/),
+      "Row 3: no readings",
+    ]);
+    const heights = [...options[0]!.querySelectorAll<HTMLElement>("[data-code]")].map(({ style }) => style.height);
+    expect(heights.filter((height) => height !== "0%")).toEqual(["25%", "75%"]);
+    await userEvent.click(options[1]!);
+    expect(store.getState().row).toBe(2);
+    expect(container.textContent).not.toContain("median");
   });
 });
 

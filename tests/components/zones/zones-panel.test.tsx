@@ -63,7 +63,7 @@ describe("the zones of a log", () => {
   it("go onto the map by a switch that an address keeps", async () => {
     serve();
     const { store } = renderInBook(<ZonesPanel />);
-    await userEvent.click(await screen.findByRole("checkbox", { name: /^On the map/ }));
+    await userEvent.click(await screen.findByRole("checkbox", { name: /^Show on the map/ }));
     expect(store.getState().ground).toEqual(["under-target"]);
   });
 
